@@ -1,0 +1,213 @@
+"""The loading basis of one aircraft as frozen values: exact rationals in the basis's own units.
+
+Signs: arms aft of the datum are positive; lateral arms right of the centreline, looking forward, are positive.
+`fleet.basis_reading` makes these from the document `tarebook.loading-basis/1`; nothing here reads or writes.
+"""
+
+from dataclasses import dataclass
+from fractions import Fraction
+from typing import Literal
+
+from fleet.quantities import Unit
+
+Axis = Literal["longitudinal", "lateral"]
+Plane = Literal["arm", "moment"]
+Phase = Literal["ramp", "take-off", "zero fuel", "landing", "minimum at landing"]
+PHASES: tuple[Phase, ...] = ("ramp", "take-off", "zero fuel", "landing", "minimum at landing")
+
+
+@dataclass(frozen=True, slots=True)
+class Source:
+    """Where a figure stands: document, its revision and the page."""
+
+    document: str
+    revision: str
+    page: str
+
+    def __str__(self) -> str:
+        revision = f" rev {self.revision}" if self.revision else ""
+        return f"{self.document}{revision} p. {self.page}"
+
+
+@dataclass(frozen=True, slots=True)
+class Limit:
+    """A limit that was entered: a value in the basis's units, or `None` when the source shows there is none.
+
+    A limit that was not entered is the absence of a `Limit`, and makes a verdict `unresolved`.
+    """
+
+    value: Fraction | None
+    source: Source
+
+
+@dataclass(frozen=True, slots=True)
+class Seat:
+    """Where a person sits. Arms in the length unit of the basis."""
+
+    id: str
+    name: str
+    serves: Literal["crew", "passenger", "either"]
+    arm: Fraction
+    lateral_arm: Fraction
+    maximum: Limit | None
+    source: Source
+
+
+@dataclass(frozen=True, slots=True)
+class Place:
+    """Where an item lies (a compartment). Arms in the length unit of the basis."""
+
+    id: str
+    name: str
+    arm: Fraction
+    lateral_arm: Fraction
+    maximum: Limit | None
+    source: Source
+
+
+@dataclass(frozen=True, slots=True)
+class Zone:
+    """A set of seats and places whose sum is limited."""
+
+    id: str
+    name: str
+    members: tuple[str, ...]
+    maximum: Limit | None
+
+
+@dataclass(frozen=True, slots=True)
+class TankTable:
+    """The manual's own points: quantity against arm or moment.
+
+    `points` are (quantity, arm or moment) with quantities rising strictly. Quantities are in the volume unit of the
+    basis when `against` is volume, in its weight unit when it is weight; arms in its length unit, moments in its
+    weight unit times its length unit. `density` (weight unit per volume unit) is the density a table by weight, or a table
+    that gives moments against volume, was printed for; the arm belongs to the volume.
+    """
+
+    against: Literal["volume", "weight"]
+    gives: Literal["arm", "moment"]
+    straight_in: Literal["arm", "moment"]
+    density: Fraction | None
+    points: tuple[tuple[Fraction, Fraction], ...]
+
+
+@dataclass(frozen=True, slots=True)
+class Tank:
+    """A fuel tank; `capacity` is usable fuel in the volume unit of the basis."""
+
+    id: str
+    name: str
+    capacity: Fraction
+    lateral_arm: Fraction
+    table: TankTable
+    source: Source
+
+
+@dataclass(frozen=True, slots=True)
+class BurnStage:
+    """Tanks that feed at the same time, equally by volume; one that runs dry leaves the rest feeding equally."""
+
+    tanks: tuple[str, ...]
+
+
+@dataclass(frozen=True, slots=True)
+class Envelope:
+    """A closed polygon in (arm or moment, weight); vertices in order, the first not repeated, notches kept.
+
+    `plane` says in which plane the edges are straight.
+    """
+
+    id: str
+    axis: Axis
+    phases: tuple[Phase, ...]
+    plane: Plane
+    points: tuple[tuple[Fraction, Fraction], ...]  # (arm or moment, weight)
+    source: Source
+
+
+@dataclass(frozen=True, slots=True)
+class FixedItem:
+    """An equipment or operating item a configuration adds (or, with negative weight, removes)."""
+
+    what: str
+    weight: Fraction
+    arm: Fraction
+    lateral_arm: Fraction
+
+
+@dataclass(frozen=True, slots=True)
+class Limits:
+    """The weight limits, in the weight unit of the basis; None means not entered."""
+
+    ramp: Limit | None
+    take_off: Limit | None
+    zero_fuel: Limit | None
+    landing: Limit | None
+    minimum_flying: Limit | None
+
+
+@dataclass(frozen=True, slots=True)
+class Configuration:
+    """A named fit: which seats and places exist, what it adds, how many crew it needs (never their weight)."""
+
+    id: str
+    name: str
+    seats: tuple[str, ...]
+    places: tuple[str, ...]
+    minimum_crew: int
+    fit: str  # the base fit it is flown on: which empty weight it needs
+    equipment: tuple[FixedItem, ...]
+    operating_items: tuple[FixedItem, ...]
+    limits: Limits  # already the tighter of the basis's and the configuration's own
+
+
+@dataclass(frozen=True, slots=True)
+class Chord:
+    """The mean aerodynamic chord: arm of its leading edge and its length, in the length unit of the basis."""
+
+    leading_edge: Fraction
+    length: Fraction
+    source: Source
+
+
+@dataclass(frozen=True, slots=True)
+class SampleLoad:
+    """A sample load of the manual; it must come out as printed before the basis can be approved."""
+
+    name: str
+    weights: tuple[FixedItem, ...]
+    moments: tuple[Fraction | None, ...]  # a printed moment beats weight times arm, item by item
+    phase: Phase
+    total_weight: Fraction
+    total_moment: Fraction
+    tolerance_moment: Fraction
+    within: bool
+    source: Source
+
+
+@dataclass(frozen=True, slots=True)
+class Basis:
+    """One revision of the approved loading data of one aircraft."""
+
+    aircraft_type: str
+    category: Literal["aeroplane", "helicopter"]
+    engines: int
+    passenger_seats_installed: int
+    weight_unit: Unit
+    length_unit: Unit
+    volume_unit: Unit
+    datum: str
+    chord: Chord | None  # None: the source shows there is none
+    fits: tuple[str, ...]
+    seats: tuple[Seat, ...]
+    places: tuple[Place, ...]
+    zones: tuple[Zone, ...]
+    tanks: tuple[Tank, ...]
+    burn_order: tuple[BurnStage, ...]
+    taxi_order: tuple[BurnStage, ...]
+    limits: Limits
+    envelopes: tuple[Envelope, ...]
+    lateral_limits_entered: bool  # False: neither a lateral envelope nor a page that shows there is none
+    configurations: tuple[Configuration, ...]
+    sample_loads: tuple[SampleLoad, ...]

@@ -1,0 +1,15 @@
+"""The rows of the fleet room."""
+
+from fleet.models.aircraft import Aircraft
+from fleet.models.approval import Approval
+from fleet.models.duty import Duty
+from fleet.models.empty_weight import EmptyWeight
+from fleet.models.loading_basis import LoadingBasis
+from fleet.models.operator import Operator
+from fleet.models.person import Person
+from fleet.models.standing import Standing
+from fleet.models.token import Token
+
+__all__ = [
+    "Aircraft", "Approval", "Duty", "EmptyWeight", "LoadingBasis", "Operator", "Person", "Standing", "Token",
+]

@@ -1,0 +1,35 @@
+"""The manifest: numbered when the load is accepted, filed when it is printed."""
+
+from django.db import models
+
+from fleet.models import Operator
+from loads.models.load import Load
+
+
+class Paper(models.Model):
+    """A manifest number, taken in the act of acceptance. Without gaps per operator: `previous` is number - 1."""
+
+    load = models.OneToOneField(Load, primary_key=True, on_delete=models.PROTECT, related_name="paper")
+    operator = models.ForeignKey(Operator, on_delete=models.PROTECT)
+    number = models.PositiveIntegerField()
+    previous = models.PositiveIntegerField(null=True)
+    act = models.UUIDField()  # the act of acceptance; its seal is what the paper prints
+
+    class Meta:
+        constraints = [
+            models.UniqueConstraint(fields=["operator", "number"], name="paper_number_is_taken_once"),
+            models.CheckConstraint(
+                condition=models.Q(number=1, previous__isnull=True)
+                | models.Q(number__gt=1, previous=models.F("number") - 1),
+                name="paper_numbers_have_no_gaps",
+            ),
+        ]
+
+
+class FiledPaper(models.Model):
+    """The one filed document of a manifest: the archive knows it by its digest."""
+
+    paper = models.OneToOneField(Paper, primary_key=True, on_delete=models.PROTECT, related_name="filed")
+    operator = models.ForeignKey(Operator, on_delete=models.PROTECT)
+    document = models.ForeignKey("records.Document", on_delete=models.PROTECT)
+    filed_at = models.DateTimeField()

@@ -1,0 +1,23 @@
+"""Answers kept for repeated requests (Idempotency-Key)."""
+
+from django.db import models
+
+
+class Receipt(models.Model):
+    """The stored answer to one request; written in the act's own transaction, kept seven days.
+
+    Exempt from the trail: it repeats an answer, it changes nothing.
+    """
+
+    id = models.BigAutoField(primary_key=True)
+    actor = models.CharField(max_length=60)
+    key = models.CharField(max_length=120)
+    request_digest = models.CharField(max_length=64)  # SHA-256 over method, path and body
+    status = models.PositiveSmallIntegerField()
+    headers = models.JSONField()
+    body = models.BinaryField()
+    answered_at = models.DateTimeField()
+
+    class Meta:
+        constraints = [models.UniqueConstraint(fields=["actor", "key"], name="receipt_key_is_used_once_per_actor")]
+        indexes = [models.Index(fields=["answered_at"], name="receipt_by_age")]

@@ -1,0 +1,165 @@
+"""All settings, in one file. DEVELOPERS.md has the table of variables.
+
+ATOMIC_REQUESTS stays off: the door (records.act) opens the one durable transaction of a change itself.
+"""
+
+from pathlib import Path
+from typing import Any
+
+from service import env
+
+BASE_DIR = Path(__file__).resolve().parent.parent
+
+SECRET_KEY = env.text("SECRET_KEY")
+DEBUG = False
+ALLOWED_HOSTS = env.words("ALLOWED_HOSTS", "127.0.0.1,localhost,[::1]")
+CSRF_TRUSTED_ORIGINS = env.words("CSRF_TRUSTED_ORIGINS", "")
+# True behind TLS. The local start serves plain HTTP on the loopback address only and sets it to false.
+HTTPS = env.flag("HTTPS", True)
+
+INSTALLED_APPS = [
+    "django.contrib.contenttypes",
+    "django.contrib.auth",
+    "django.contrib.sessions",
+    "django.contrib.staticfiles",
+    "axes",
+    "rest_framework",
+    "drf_spectacular",
+    "drf_spectacular_sidecar",
+    "records",
+    "fleet",
+    "loads",
+    "service",
+]
+MIDDLEWARE = [
+    "django.middleware.security.SecurityMiddleware",
+    "whitenoise.middleware.WhiteNoiseMiddleware",
+    "service.headers.HeadersMiddleware",
+    "django.contrib.sessions.middleware.SessionMiddleware",
+    "django.middleware.common.CommonMiddleware",
+    "django.middleware.csrf.CsrfViewMiddleware",
+    "django.contrib.auth.middleware.AuthenticationMiddleware",
+    "service.actors.ActorMiddleware",
+    "axes.middleware.AxesMiddleware",
+]
+ROOT_URLCONF = "service.urls"
+WSGI_APPLICATION = "service.wsgi.application"
+DEFAULT_AUTO_FIELD = "django.db.models.BigAutoField"
+APPEND_SLASH = False
+TEMPLATES = [
+    {
+        "BACKEND": "django.template.backends.django.DjangoTemplates",
+        "DIRS": [BASE_DIR / "templates"],
+        "OPTIONS": {
+            "context_processors": ["django.template.context_processors.request", "service.pages.page_context"],
+        },
+    }
+]
+
+# Two roles: `default` is the service role, with no right to alter the trail; `owner` migrates and is absent
+# from the environment of web and workers.
+DATABASES: dict[str, Any] = {"default": env.database("DATABASE_URL")}
+if owner_url := env.text("OWNER_DATABASE_URL", ""):
+    DATABASES["owner"] = env.database("OWNER_DATABASE_URL", owner_url)
+
+BROKER_URL = env.text("BROKER_URL")
+CELERY_BROKER_URL = BROKER_URL
+CELERY_TASK_IGNORE_RESULT = True
+CELERY_TASK_ACKS_LATE = True
+CELERY_TASK_REJECT_ON_WORKER_LOST = True
+CELERY_WORKER_PREFETCH_MULTIPLIER = 1
+# WeasyPrint grows a little with each document; a fresh child every 200 keeps memory flat.
+CELERY_WORKER_MAX_TASKS_PER_CHILD = 200
+CELERY_TASK_SERIALIZER = "json"
+CELERY_ACCEPT_CONTENT = ["json"]
+CELERY_BROKER_CONNECTION_RETRY_ON_STARTUP = True
+# A request must not wait for a broker that is down: one short try, then the sweeper finds the work in the outbox.
+CELERY_TASK_PUBLISH_RETRY = False
+CELERY_BROKER_TRANSPORT_OPTIONS = {"socket_connect_timeout": 1, "socket_timeout": 5, "visibility_timeout": 300}
+CELERY_BEAT_SCHEDULE = {
+    "sweep-the-outbox": {"task": "records.tasks.sweep_outbox", "schedule": 20.0},
+}
+
+AUTH_USER_MODEL = "fleet.Person"
+AUTHENTICATION_BACKENDS = [
+    "axes.backends.AxesStandaloneBackend",
+    "django.contrib.auth.backends.ModelBackend",
+]
+AUTH_PASSWORD_VALIDATORS = [
+    {"NAME": "django.contrib.auth.password_validation.MinimumLengthValidator", "OPTIONS": {"min_length": 12}},
+    {"NAME": "django.contrib.auth.password_validation.CommonPasswordValidator"},
+    {"NAME": "django.contrib.auth.password_validation.NumericPasswordValidator"},
+]
+LOGIN_URL = "sign-in"
+AXES_FAILURE_LIMIT = env.whole("SIGN_IN_FAILURES", 5, low=1, high=100)
+AXES_COOLOFF_TIME = 0.25  # hours
+AXES_LOCKOUT_PARAMETERS = ["username"]
+AXES_RESET_ON_SUCCESS = True
+AXES_ENABLE_ADMIN = False
+AXES_DISABLE_ACCESS_LOG = True
+AXES_VERBOSE = False
+AXES_IPWARE_PROXY_COUNT = 0
+
+SESSION_COOKIE_HTTPONLY = True
+SESSION_COOKIE_SAMESITE = "Lax"
+SESSION_COOKIE_AGE = 12 * 3600
+SESSION_COOKIE_SECURE = HTTPS
+CSRF_COOKIE_SECURE = HTTPS
+CSRF_COOKIE_HTTPONLY = True
+SECURE_SSL_REDIRECT = HTTPS
+SECURE_HSTS_SECONDS = 31536000 if HTTPS else 0
+SECURE_HSTS_INCLUDE_SUBDOMAINS = HTTPS
+SECURE_HSTS_PRELOAD = HTTPS
+SECURE_CONTENT_TYPE_NOSNIFF = True
+SECURE_REFERRER_POLICY = "same-origin"
+X_FRAME_OPTIONS = "DENY"
+if env.flag("BEHIND_PROXY", False):
+    SECURE_PROXY_SSL_HEADER = ("HTTP_X_FORWARDED_PROTO", "https")
+
+STATIC_URL = "static/"
+STATICFILES_DIRS = [BASE_DIR / "static"]
+STATIC_ROOT = Path(env.text("STATIC_ROOT", str(BASE_DIR / ".tarebook" / "static")))
+# Served straight from static/ and the packages, no collect step, no third-party host.
+WHITENOISE_USE_FINDERS = True
+WHITENOISE_AUTOREFRESH = False
+
+LANGUAGE_CODE = "en"
+USE_I18N = False
+USE_TZ = True
+TIME_ZONE = "UTC"
+
+DATA_UPLOAD_MAX_MEMORY_SIZE = 1024 * 1024
+REST_FRAMEWORK = {
+    "DEFAULT_AUTHENTICATION_CLASSES": [
+        "service.actors.TokenAuthentication",
+        "service.actors.SessionAuthentication",
+    ],
+    "DEFAULT_PERMISSION_CLASSES": ["service.actors.Known"],
+    "DEFAULT_PARSER_CLASSES": ["records.api.parser.StrictJSONParser"],
+    "DEFAULT_RENDERER_CLASSES": ["records.api.render.ExactJSONRenderer"],
+    "EXCEPTION_HANDLER": "service.problems.handler",
+    "DEFAULT_SCHEMA_CLASS": "drf_spectacular.openapi.AutoSchema",
+    "UNAUTHENTICATED_USER": None,
+    "COERCE_DECIMAL_TO_STRING": True,
+}
+SPECTACULAR_SETTINGS = {
+    "TITLE": "Tarebook",
+    "VERSION": "1",
+    "OAS_VERSION": "3.1.0",
+    "DESCRIPTION": "Load records for small air operators. The approved flight manual, the operator's approved "
+    "procedures, local rules and licensed people decide; a figure from this service does not.",
+    "SERVE_INCLUDE_SCHEMA": False,
+    "SCHEMA_PATH_PREFIX": "/api/v1",
+    "SWAGGER_UI_DIST": "SIDECAR",
+    "SWAGGER_UI_FAVICON_HREF": "SIDECAR",
+    "COMPONENT_SPLIT_REQUEST": True,
+}
+
+LOGGING = {
+    "version": 1,
+    "disable_existing_loggers": False,
+    "formatters": {"plain": {"format": "%(levelname)s %(name)s %(message)s"}},
+    "handlers": {"console": {"class": "logging.StreamHandler", "formatter": "plain"}},
+    "root": {"handlers": ["console"], "level": env.text("LOG_LEVEL", "INFO")},
+    "loggers": {"axes": {"level": "ERROR"}, "fontTools": {"level": "WARNING"}, "weasyprint": {"level": "ERROR"}},
+}
