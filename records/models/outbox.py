@@ -24,5 +24,7 @@ class Outbox(models.Model):
         constraints = [models.UniqueConstraint(fields=["task", "key"], name="outbox_task_is_promised_once")]
         # The sweeper looks only at what is not done; a partial index keeps that small for ever.
         indexes = [
-            models.Index(fields=["try_after"], condition=models.Q(done_at__isnull=True), name="outbox_not_done")
+            models.Index(
+                fields=["try_after"], condition=models.Q(done_at__isnull=True), name="outbox_not_done"
+            )
         ]
