@@ -1,14 +1,17 @@
 """The loading basis of one aircraft as frozen values: exact rationals in the basis's own units.
 
-Signs: arms aft of the datum are positive; lateral arms right of the centreline, looking forward, are positive.
-`fleet.basis_reading` makes these from the document `tarebook.loading-basis/1`; nothing here reads or writes.
+Signs: arms aft of the datum are positive; lateral arms right of the centreline, looking forward, are
+positive. `fleet.basis_reading` makes these from the document `tarebook.loading-basis/1`; nothing here reads
+or writes.
 """
 
-from dataclasses import dataclass
+from dataclasses import dataclass, field
 from fractions import Fraction
 from typing import Literal
 
+from fleet.envelope import Shape
 from fleet.quantities import Unit
+from fleet.tanks import TankCurve
 
 Axis = Literal["longitudinal", "lateral"]
 Plane = Literal["arm", "moment"]
@@ -79,10 +82,11 @@ class Zone:
 class TankTable:
     """The manual's own points: quantity against arm or moment.
 
-    `points` are (quantity, arm or moment) with quantities rising strictly. Quantities are in the volume unit of the
-    basis when `against` is volume, in its weight unit when it is weight; arms in its length unit, moments in its
-    weight unit times its length unit. `density` (weight unit per volume unit) is the density a table by weight, or a table
-    that gives moments against volume, was printed for; the arm belongs to the volume.
+    `points` are (quantity, arm or moment) with quantities rising strictly. Quantities are in the volume
+    unit of the basis when `against` is volume, in its weight unit when it is weight; arms in its length
+    unit, moments in its weight unit times its length unit. `density` (weight unit per volume unit) is the
+    density a table by weight, or a table that gives moments against volume, was printed for; the arm
+    belongs to the volume.
     """
 
     against: Literal["volume", "weight"]
@@ -90,6 +94,17 @@ class TankTable:
     straight_in: Literal["arm", "moment"]
     density: Fraction | None
     points: tuple[tuple[Fraction, Fraction], ...]
+    curve: TankCurve = field(init=False, compare=False, repr=False)
+
+    def __post_init__(self) -> None:
+        curve = TankCurve(
+            against=self.against,
+            gives=self.gives,
+            straight_in=self.straight_in,
+            density=self.density,
+            points=self.points,
+        )
+        object.__setattr__(self, "curve", curve)
 
 
 @dataclass(frozen=True, slots=True)
@@ -103,10 +118,25 @@ class Tank:
     table: TankTable
     source: Source
 
+    def moment(self, volume: Fraction, density: Fraction) -> Fraction:
+        """Return the moment of a volume of fuel at the delivered density (weight unit per volume unit of
+        the basis).
+
+        Raises `fleet.tanks.OutsideTable` where the table says nothing.
+        """
+        return self.table.curve.moment(volume, density)
+
+    def lateral_moment(self, volume: Fraction, density: Fraction) -> Fraction:
+        """Return the lateral moment of a volume of fuel; right positive."""
+        return volume * density * self.lateral_arm
+
 
 @dataclass(frozen=True, slots=True)
 class BurnStage:
-    """Tanks that feed at the same time, equally by volume; one that runs dry leaves the rest feeding equally."""
+    """Tanks that feed at the same time, equally by volume.
+
+    One that runs dry leaves the rest feeding equally.
+    """
 
     tanks: tuple[str, ...]
 
@@ -115,7 +145,9 @@ class BurnStage:
 class Envelope:
     """A closed polygon in (arm or moment, weight); vertices in order, the first not repeated, notches kept.
 
-    `plane` says in which plane the edges are straight.
+    `plane` says in which plane the edges are straight. `shape` decides: `shape.holds(weight, moment)`,
+    exactly, and `shape.arm_section`, `shape.weight_section` for the two margins. Making one raises
+    `fleet.envelope.NotAnEnvelope`.
     """
 
     id: str
@@ -124,6 +156,10 @@ class Envelope:
     plane: Plane
     points: tuple[tuple[Fraction, Fraction], ...]  # (arm or moment, weight)
     source: Source
+    shape: Shape = field(init=False, compare=False, repr=False)
+
+    def __post_init__(self) -> None:
+        object.__setattr__(self, "shape", Shape(self.plane, self.points))
 
 
 @dataclass(frozen=True, slots=True)
@@ -149,7 +185,7 @@ class Limits:
 
 @dataclass(frozen=True, slots=True)
 class Configuration:
-    """A named fit: which seats and places exist, what it adds, how many crew it needs (never their weight)."""
+    """A named fit: which seats and places exist, what it adds, how many crew it needs, never their weight."""
 
     id: str
     name: str

@@ -7,7 +7,10 @@ from typing import Literal
 
 @dataclass(frozen=True, slots=True)
 class EmptyFigures:
-    """Weight, moment and lateral moment of the empty aircraft; a recorded moment beats weight times printed arm."""
+    """Weight, moment and lateral moment of the empty aircraft.
+
+    A recorded moment beats weight times printed arm.
+    """
 
     weight: Fraction
     moment: Fraction
