@@ -1,7 +1,8 @@
 """Work that a commit promised. The list stands in the database; the broker only wakes a worker.
 
-A row is written in the act's own transaction, so work is promised exactly when its cause is committed. Whatever
-happens to the broker (down, flushed) or a worker (killed), the row stays undone and the sweeper sends it again.
+A row is written in the act's own transaction, so work is promised exactly when its cause is committed.
+Whatever happens to the broker (down, flushed) or a worker (killed), the row stays undone and the sweeper
+sends it again.
 """
 
 from __future__ import annotations
@@ -30,8 +31,9 @@ LONGEST_WAIT = timedelta(hours=1)
 def put(entry: Entry, task: str, key: str) -> None:
     """This function will promise the work `task` (a Celery task's full name) for `key` (its only argument).
 
-    Call it inside the act that causes the work. After commit a worker is woken; a broker that is down costs one
-    short try and a line in the log. A task is promised once per key: a second time is refused by the database.
+    Call it inside the act that causes the work. After commit a worker is woken; a broker that is down costs
+    one short try and a line in the log. A task is promised once per key: a second time is refused by the
+    database.
     """
     Outbox.objects.create(
         task=task,
@@ -48,7 +50,8 @@ def wake(task: str, key: str) -> bool:
     """This function will ask the broker to wake a worker, and say whether that was taken; it never raises."""
     try:
         current_app.send_task(task, args=[key], retry=False)
-    except Exception as problem:  # noqa: BLE001  # any failure of the broker means the same: the sweeper does it
+    except Exception as problem:  # noqa: BLE001  # any failure of the broker means the same: the sweeper
+    does it
         log.warning(
             "broker not reached, %s(%s) is left to the sweeper: %s", task, key, type(problem).__name__
         )
@@ -57,7 +60,9 @@ def wake(task: str, key: str) -> bool:
 
 
 def done(task: str, key: str) -> None:
-    """This function will mark work as done; call it in the transaction that does the work. Twice does no harm."""
+    """This function will mark work as done; call it in the transaction that does the work. Twice does
+    no harm.
+    """
     Outbox.objects.filter(task=task, key=key, done_at__isnull=True).update(done_at=Now(), last_problem="")
 
 
@@ -69,7 +74,8 @@ def failed(task: str, key: str, problem: BaseException) -> None:
 
 
 def take_due(most: int) -> list[tuple[str, str]]:
-    """This function will return up to `most` due (task, key), oldest first, and set the time of their next try.
+    """This function will return up to `most` due (task, key), oldest first, and set the time of their next
+    try.
 
     The wait doubles with each try from 30 s to an hour. Rows another sweeper holds are left to it.
     """

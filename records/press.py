@@ -1,8 +1,8 @@
 """HTML to PDF, so that the same input gives the same bytes: bundled fonts, fixed dates, nothing fetched.
 
-WeasyPrint is imported at the first page, not at start: the import costs up to some seconds, and most processes
-never print. Bytes still depend on the versions of the libraries, so they are named with each filed document
-(`renderer_versions`), and the filed bytes, not the recipe, are the record.
+WeasyPrint is imported at the first page, not at start: the import costs up to some seconds, and most
+processes never print. Bytes still depend on the versions of the libraries, so they are named with each filed
+document (`renderer_versions`), and the filed bytes, not the recipe, are the record.
 """
 
 import os
@@ -20,11 +20,12 @@ from typing import Any
 
 FONTS = Path(__file__).resolve().parent.parent / "static" / "fonts"
 VARIANT = "pdf/a-3u"
-# Written into fonts that WeasyPrint subsets by itself where libharfbuzz-subset is missing; they would hold the time.
+# Written into fonts that WeasyPrint subsets by itself where libharfbuzz-subset is missing; they would hold
+# the time.
 FONT_DATE = "1767225600"
 
-# One press a process: Pango's font map is shared by all pages (a fresh one for each takes five times the memory)
-# and is not made for several threads at once.
+# One press a process: Pango's font map is shared by all pages (a fresh one for each takes five times the
+# memory) and is not made for several threads at once.
 _press = threading.Lock()
 
 
@@ -42,8 +43,8 @@ def press(html: str, *, title: str, created: datetime, attachments: tuple[Enclos
     """This function will return `html` as PDF bytes; the same arguments give the same bytes, in any process.
 
     `created` is aware and is the only date in the file. Nothing is fetched: a page that names an image, a
-    stylesheet or a font elsewhere is printed without it. A character no bundled font carries is printed as its code
-    point, `[U+4E2D]`, so that nothing disappears unseen.
+    stylesheet or a font elsewhere is printed without it. A character no bundled font carries is printed as
+    its code point, `[U+4E2D]`, so that nothing disappears unseen.
     """
     moment = created.astimezone(UTC)
     stamp = moment.strftime("%Y-%m-%dT%H:%M:%SZ")
@@ -73,7 +74,9 @@ def press(html: str, *, title: str, created: datetime, attachments: tuple[Enclos
 
 
 def printable(text: str) -> str:
-    """This function will return the text composed (NFC), with each character the fonts lack as its code point."""
+    """This function will return the text composed (NFC), with each character the fonts lack as its code
+    point.
+    """
     text = unicodedata.normalize("NFC", text)
     if text.isascii() and not _CONTROL.search(text):
         return text
