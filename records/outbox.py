@@ -50,8 +50,7 @@ def wake(task: str, key: str) -> bool:
     """This function will ask the broker to wake a worker, and say whether that was taken; it never raises."""
     try:
         current_app.send_task(task, args=[key], retry=False)
-    except Exception as problem:  # noqa: BLE001  # any failure of the broker means the same: the sweeper
-    does it
+    except Exception as problem:  # noqa: BLE001  # whatever the broker fails with, the sweeper does it
         log.warning(
             "broker not reached, %s(%s) is left to the sweeper: %s", task, key, type(problem).__name__
         )
