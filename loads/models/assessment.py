@@ -8,7 +8,11 @@ from loads.models.load import Load
 
 
 class Assessment(models.Model):
-    """The result document (canonical JSON text, no names in it) and the digest of the whole statement."""
+    """The result document (canonical JSON text, no names in it) and the digest of the whole statement.
+
+    In the database besides what stands here: it is of its load's operator, and the versions it used are of
+    its load's aircraft. An assessment comes into use by the step to "open" that names it.
+    """
 
     id = models.UUIDField(primary_key=True, db_default=Uuid7(), editable=False)
     operator = models.ForeignKey(Operator, on_delete=models.PROTECT)
@@ -25,8 +29,24 @@ class Assessment(models.Model):
     class Meta:
         constraints = [
             models.UniqueConstraint(fields=["load", "number"], name="assessment_number_is_taken_once"),
-            models.UniqueConstraint(fields=["id", "load"], name="assessment_is_of_one_load"),
+            models.UniqueConstraint(fields=["id", "load", "operator"], name="assessment_is_of_one_load"),
+            # What a signature names, so that a foreign key can hold it to this very document and verdict.
+            models.UniqueConstraint(
+                fields=["id", "load", "digest", "verdict"], name="assessment_can_be_signed"
+            ),
             models.CheckConstraint(
-                condition=models.Q(verdict__in=["within", "outside", "unresolved"]), name="assessment_verdict_is_known"
+                condition=models.Q(verdict__in=["within", "outside", "unresolved"]),
+                name="assessment_verdict_is_known",
+            ),
+            models.CheckConstraint(
+                condition=~models.Q(verdict__in=["within", "outside"])
+                | models.Q(loading_basis__isnull=False, empty_weight__isnull=False),
+                name="assessment_without_its_versions_is_unresolved",
+            ),
+            models.CheckConstraint(
+                condition=models.Q(digest__regex=r"^[0-9a-f]{64}$"), name="assessment_digest_is_a_digest"
             ),
         ]
+
+    def __str__(self) -> str:
+        return f"assessment {self.number} of load {self.load_id}"

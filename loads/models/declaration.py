@@ -13,3 +13,6 @@ class Declaration(models.Model):
     operator = models.ForeignKey(Operator, on_delete=models.PROTECT)
     body = models.BinaryField()
     salt = models.BinaryField()
+
+    def __str__(self) -> str:
+        return f"declaration of load {self.load_id}"
