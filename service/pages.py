@@ -1,0 +1,61 @@
+"""Signing in and out, and the values every page carries."""
+
+from typing import Any
+from urllib.parse import urlsplit
+
+from django.contrib.auth import authenticate, login, logout
+from django.http import HttpRequest, HttpResponse, HttpResponseRedirect
+from django.shortcuts import render, resolve_url
+from django.utils.http import url_has_allowed_host_and_scheme
+from django.views.decorators.debug import sensitive_post_parameters
+from django.views.decorators.http import require_http_methods, require_POST
+
+from fleet.models import Person
+from loads.cautions import CAUTIONS, INVENTED
+
+
+def page_context(request: HttpRequest) -> dict[str, Any]:
+    """This function will give every page the signed-in person, their operator and the cautions."""
+    person = getattr(request, "user", None)
+    known = isinstance(person, Person)
+    return {
+        "operator": person.operator if known else None,
+        "person_name": person.name if known else "",
+        "cautions": CAUTIONS,
+        "invented_words": INVENTED,
+    }
+
+
+def _where_next(request: HttpRequest) -> str:
+    """This function will return the page asked for before signing in, if it is one of ours."""
+    wanted = request.POST.get("next") or request.GET.get("next") or ""
+    allowed = url_has_allowed_host_and_scheme(
+        wanted, allowed_hosts={request.get_host()}, require_https=request.is_secure()
+    )
+    return wanted if allowed and urlsplit(wanted).path else resolve_url("day")
+
+
+@sensitive_post_parameters("password")
+@require_http_methods(["GET", "HEAD", "POST"])
+def sign_in(request: HttpRequest) -> HttpResponse:
+    """This function will show the sign-in page, and sign a person in who gives the right login and password."""
+    if request.method != "POST":
+        return render(request, "service/sign_in.html", {"next": _where_next(request)})
+    person = authenticate(
+        request,
+        username=request.POST.get("login", "").strip().lower(),
+        password=request.POST.get("password", ""),
+    )
+    if person is not None:
+        login(request, person)
+        return HttpResponseRedirect(_where_next(request))
+    locked = bool(getattr(request, "axes_locked_out", False))
+    context = {"next": _where_next(request), "login": request.POST.get("login", ""), "locked": locked}
+    return render(request, "service/sign_in.html", context | {"failed": True}, status=429 if locked else 422)
+
+
+@require_POST
+def sign_out(request: HttpRequest) -> HttpResponse:
+    """This function will end the session."""
+    logout(request)
+    return HttpResponseRedirect(resolve_url("sign-in"))
