@@ -1,0 +1,111 @@
+"""The one door for writing: every change of every business table happens inside `with act(...)`.
+
+    with act(LOAD_ACCEPTED, by=actor, about=f"load:{load.id}", reason=text) as entry:
+        ...
+
+PostgreSQL refuses any other write. At its end the act is sealed into the chain of its operator; nothing is
+written after that.
+"""
+
+from collections.abc import Iterator
+from contextlib import contextmanager
+from contextvars import ContextVar
+from dataclasses import dataclass
+from datetime import datetime
+from uuid import UUID
+
+from django.db import connection, transaction
+
+from records.actor import Actor
+from records.guard_refusals import ActMisplaced, refusals_named
+from records.kind import Kind
+from records.refusal import NotAllowed
+
+# The request an act is done in, as the switchboard names it; it is sealed with the act.
+request_id: ContextVar[str] = ContextVar("request_id", default="")
+# The transaction that transaction_for_acts() holds open, and which acts may join.
+_joinable: ContextVar[transaction.Atomic | None] = ContextVar("joinable", default=None)
+
+_OPEN = "SELECT act_id, opened FROM act_open(%s, %s, %s, %s, %s, %s, %s, %s, %s, %s)"
+# First every deferred check, which also moves the act to the closing table; then the seal, last; then back
+# to deferred, for the acts that may follow in the same transaction. One message, so one round trip.
+_SEAL = (
+    "SET CONSTRAINTS ALL IMMEDIATE; "
+    "SET CONSTRAINTS records_closing_seals IMMEDIATE; "
+    "SET CONSTRAINTS ALL DEFERRED"
+)
+
+
+@dataclass(frozen=True, slots=True)
+class Entry:
+    """An open act: its number, the database's time of opening (UTC), its chain and the name of its kind."""
+
+    id: UUID
+    at: datetime
+    chain: str
+    kind: str
+
+
+@contextmanager
+def act(kind: Kind, *, by: Actor, about: str, reason: str = "") -> Iterator[Entry]:
+    """This function will open an act, let the caller write, and seal the act; an exception undoes all of it.
+
+    `about` names what it is about ("load:<uuid>", "aircraft:<id>", "person:7"). Raises NotAllowed when the
+    actor may not do an act of this kind, ActMisplaced inside another act or a plain transaction, and the
+    other GuardRefused for what the guards refuse.
+    """
+    if kind.name not in by.may:
+        raise NotAllowed(
+            "act-not-allowed",
+            f"{by.key} ({by.capacity}) may not do this: {kind.name}.",
+            next_step="Ask somebody who holds the duty, or have it granted.",
+        )
+    with refusals_named(), _transaction_of_an_act(kind):
+        entry = _open(kind, by, about, reason)
+        yield entry
+        with connection.cursor() as cursor:
+            cursor.execute(_SEAL)
+
+
+@contextmanager
+def transaction_for_acts() -> Iterator[None]:
+    """This function will open the durable transaction that acts done directly inside it join, one after the
+    other.
+
+    It serves what must be stored together with an act (the answer to a request). An act that fails takes it
+    all back.
+    """
+    with refusals_named(), transaction.atomic(durable=True):
+        token = _joinable.set(connection.atomic_blocks[-1])
+        try:
+            yield
+        finally:
+            _joinable.reset(token)
+
+
+def _transaction_of_an_act(kind: Kind) -> transaction.Atomic:
+    innermost = connection.atomic_blocks[-1] if connection.atomic_blocks else None
+    if innermost is None or innermost._from_testcase:  # noqa: SLF001 - the mark Django itself asks for a durable block
+        return transaction.atomic(durable=True)
+    if innermost is _joinable.get():
+        return transaction.atomic(savepoint=False)
+    raise ActMisplaced(f"the act {kind.name} was begun inside another act or a plain transaction")
+
+
+def _open(kind: Kind, by: Actor, about: str, reason: str) -> Entry:
+    values = (
+        by.chain,
+        kind.name,
+        by.kind,
+        by.key,
+        by.name,
+        by.capacity,
+        about,
+        reason,
+        by.caused_by,
+        request_id.get(),
+    )
+    with connection.cursor() as cursor:
+        cursor.execute(_OPEN, values)
+        number, opened = cursor.fetchone()
+    return Entry(id=number, at=opened, chain=by.chain, kind=kind.name)
