@@ -22,7 +22,9 @@ class Refused(Exception):
     status: ClassVar[int] = 400
     title: ClassVar[str] = "refused"
 
-    def __init__(self, code: str, detail: str, *, faults: tuple[Fault, ...] = (), next_step: str = "") -> None:
+    def __init__(
+        self, code: str, detail: str, *, faults: tuple[Fault, ...] = (), next_step: str = ""
+    ) -> None:
         super().__init__(detail)
         self.code = code
         self.detail = detail

@@ -19,5 +19,7 @@ class Receipt(models.Model):
     answered_at = models.DateTimeField()
 
     class Meta:
-        constraints = [models.UniqueConstraint(fields=["actor", "key"], name="receipt_key_is_used_once_per_actor")]
+        constraints = [
+            models.UniqueConstraint(fields=["actor", "key"], name="receipt_key_is_used_once_per_actor")
+        ]
         indexes = [models.Index(fields=["answered_at"], name="receipt_by_age")]
