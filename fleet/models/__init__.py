@@ -11,5 +11,13 @@ from fleet.models.standing import Standing
 from fleet.models.token import Token
 
 __all__ = [
-    "Aircraft", "Approval", "Duty", "EmptyWeight", "LoadingBasis", "Operator", "Person", "Standing", "Token",
+    "Aircraft",
+    "Approval",
+    "Duty",
+    "EmptyWeight",
+    "LoadingBasis",
+    "Operator",
+    "Person",
+    "Standing",
+    "Token",
 ]

@@ -20,9 +20,22 @@ class Aircraft(models.Model):
 
     class Meta:
         constraints = [
-            models.UniqueConstraint(fields=["operator", "registration"], name="aircraft_registration_is_taken_once"),
-            models.UniqueConstraint(fields=["operator", "type", "serial_number"], name="aircraft_serial_is_taken_once"),
+            models.UniqueConstraint(
+                fields=["operator", "registration"], name="aircraft_registration_is_taken_once"
+            ),
+            models.UniqueConstraint(
+                fields=["operator", "type", "serial_number"], name="aircraft_serial_is_taken_once"
+            ),
             models.UniqueConstraint(fields=["id", "operator"], name="aircraft_is_of_one_operator"),
-            models.CheckConstraint(condition=models.Q(registration__regex=r"^[A-Z0-9][A-Z0-9-]{1,11}$"), name="aircraft_registration_is_plain"),
-            models.CheckConstraint(condition=models.Q(category__in=["aeroplane", "helicopter"]), name="aircraft_category_is_known"),
+            models.CheckConstraint(
+                condition=models.Q(registration__regex=r"^[A-Z0-9][A-Z0-9-]{1,11}$"),
+                name="aircraft_registration_is_plain",
+            ),
+            models.CheckConstraint(
+                condition=models.Q(category__in=["aeroplane", "helicopter"]),
+                name="aircraft_category_is_known",
+            ),
         ]
+
+    def __str__(self) -> str:
+        return self.registration

@@ -11,7 +11,7 @@ from fleet.models.rows import Uuid7
 
 
 class Approval(models.Model):
-    """One approval. The approver is never the person who entered the version (checked by the database as well).
+    """One approval. The approver is never who entered the version; the database checks it as well.
 
     `entered_by` repeats the version's author so that a foreign key and a check can hold the two apart.
     """
@@ -19,8 +19,12 @@ class Approval(models.Model):
     id = models.UUIDField(primary_key=True, db_default=Uuid7(), editable=False)
     operator = models.ForeignKey(Operator, on_delete=models.PROTECT)
     aircraft = models.ForeignKey(Aircraft, on_delete=models.PROTECT)
-    loading_basis = models.OneToOneField(LoadingBasis, on_delete=models.PROTECT, null=True, related_name="approval")
-    empty_weight = models.OneToOneField(EmptyWeight, on_delete=models.PROTECT, null=True, related_name="approval")
+    loading_basis = models.OneToOneField(
+        LoadingBasis, on_delete=models.PROTECT, null=True, related_name="approval"
+    )
+    empty_weight = models.OneToOneField(
+        EmptyWeight, on_delete=models.PROTECT, null=True, related_name="approval"
+    )
     entered_by = models.ForeignKey(Person, on_delete=models.PROTECT, related_name="+")
     approved_by = models.ForeignKey(Person, on_delete=models.PROTECT, related_name="+")
     true_from = models.DateTimeField()
@@ -37,3 +41,6 @@ class Approval(models.Model):
                 name="approval_is_of_one_version",
             ),
         ]
+
+    def __str__(self) -> str:
+        return f"approval {self.id}"

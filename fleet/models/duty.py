@@ -2,6 +2,7 @@
 
 from django.db import models
 
+from fleet.duties import ROLES
 from fleet.models.operator import Operator
 from fleet.models.person import Person
 
@@ -17,4 +18,10 @@ class Duty(models.Model):
     since = models.DateTimeField()
 
     class Meta:
+        constraints = [
+            models.CheckConstraint(condition=models.Q(role__in=ROLES), name="duty_role_is_known"),
+        ]
         indexes = [models.Index(fields=["person", "role", "-since"], name="duty_newest_per_role")]
+
+    def __str__(self) -> str:
+        return f"{self.role}, {'granted' if self.granted else 'ended'}"

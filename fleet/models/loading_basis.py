@@ -22,6 +22,16 @@ class LoadingBasis(models.Model):
 
     class Meta:
         constraints = [
-            models.UniqueConstraint(fields=["aircraft", "revision"], name="loading_basis_revision_is_taken_once"),
+            models.UniqueConstraint(
+                fields=["aircraft", "revision"], name="loading_basis_revision_is_taken_once"
+            ),
             models.UniqueConstraint(fields=["id", "entered_by"], name="loading_basis_has_one_author"),
+            models.UniqueConstraint(fields=["id", "aircraft"], name="loading_basis_is_of_one_aircraft"),
+            models.CheckConstraint(
+                condition=models.Q(digest__regex=r"^[0-9a-f]{64}$"), name="loading_basis_digest_is_sha256"
+            ),
+            models.CheckConstraint(condition=models.Q(revision__gte=1), name="loading_basis_counts_from_one"),
         ]
+
+    def __str__(self) -> str:
+        return f"loading basis {self.id}, revision {self.revision}"

@@ -22,7 +22,16 @@ class Operator(models.Model):
 
     class Meta:
         constraints = [
-            models.CheckConstraint(condition=models.Q(code__regex=r"^[a-z0-9][a-z0-9-]{1,39}$"), name="operator_code_is_plain"),
-            models.CheckConstraint(condition=~models.Q(code="house"), name="operator_code_is_not_the_house_chain"),
-            models.CheckConstraint(condition=models.Q(rule_set__in=["US", "EU-UK"]), name="operator_rule_set_is_known"),
+            models.CheckConstraint(
+                condition=models.Q(code__regex=r"^[a-z0-9][a-z0-9-]{1,39}$"), name="operator_code_is_plain"
+            ),
+            models.CheckConstraint(
+                condition=~models.Q(code="house"), name="operator_code_is_not_the_house_chain"
+            ),
+            models.CheckConstraint(
+                condition=models.Q(rule_set__in=["US", "EU-UK"]), name="operator_rule_set_is_known"
+            ),
         ]
+
+    def __str__(self) -> str:
+        return self.code

@@ -3,22 +3,22 @@
 from typing import ClassVar
 
 from django.contrib.auth.base_user import AbstractBaseUser, BaseUserManager
+from django.contrib.auth.hashers import check_password
 from django.db import models
-from django.db.models.functions import Lower
 
 from fleet.models.operator import Operator
 
 
 class People(BaseUserManager["Person"]):
-    """Finds people by their login, whatever its case."""
+    """Finds people by their login, which is kept in lower case."""
 
     def get_by_natural_key(self, username: str | None) -> "Person":
-        """This function will return the person with that login, ignoring case, or raise Person.DoesNotExist."""
-        return self.get(login__iexact=username)
+        """This function will return the person with that login in any case, or raise Person.DoesNotExist."""
+        return self.get(login=(username or "").lower())
 
 
 class Person(AbstractBaseUser):
-    """A person. `login` and `name` are personal: the trail holds salted digests of them only."""
+    """A person. `login` (lower case) and `name` are personal: the trail holds salted digests of them only."""
 
     # A sign-in is not a change of a business row, so there is nothing to keep here.
     last_login = None  # type: ignore[assignment]  # Django's own way to drop the inherited column
@@ -36,7 +36,21 @@ class Person(AbstractBaseUser):
 
     class Meta:
         constraints = [
-            models.UniqueConstraint(Lower("login"), name="person_login_is_taken_once"),
+            models.UniqueConstraint(fields=["login"], name="person_login_is_taken_once"),
             models.UniqueConstraint(fields=["id", "operator"], name="person_is_of_one_operator"),
-            models.CheckConstraint(condition=models.Q(login__regex=r"^[A-Za-z0-9][A-Za-z0-9._-]{1,59}$"), name="person_login_is_plain"),
+            models.CheckConstraint(
+                condition=models.Q(login__regex=r"^[a-z0-9][a-z0-9._-]{1,59}$"),
+                name="person_login_is_plain",
+            ),
         ]
+
+    def __str__(self) -> str:
+        return f"person:{self.pk}"  # never the name: this lands in logs
+
+    def check_password(self, raw_password: str) -> bool:
+        """This function will say whether this is the person's password, and change nothing.
+
+        Django's own would save a stronger hash in passing, which the database refuses outside an act;
+        `fleet.actions.change_password.renew_hash` does that openly.
+        """
+        return check_password(raw_password, self.password)

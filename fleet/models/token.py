@@ -24,6 +24,10 @@ class Token(models.Model):
     class Meta:
         constraints = [
             models.CheckConstraint(
-                condition=models.Q(expires_at__gt=models.F("issued_at")), name="token_expires_after_it_is_issued"
+                condition=models.Q(expires_at__gt=models.F("issued_at")),
+                name="token_expires_after_it_is_issued",
             ),
         ]
+
+    def __str__(self) -> str:
+        return f"token {self.pk}"

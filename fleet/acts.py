@@ -1,0 +1,31 @@
+"""The acts of the fleet room: the permission, the word in the trail and the label in logs, at once."""
+
+from records.kind import Kind
+
+ENTER_OPERATOR = Kind("enter-operator", "entered an operator")
+ENTER_PERSON = Kind("enter-person", "entered a person")
+GRANT_DUTY = Kind("grant-duty", "granted a duty")
+END_DUTY = Kind("end-duty", "ended a duty")
+CHANGE_PASSWORD = Kind("change-password", "changed a password")
+ISSUE_TOKEN = Kind("issue-token", "issued a token")
+REVOKE_TOKEN = Kind("revoke-token", "revoked a token")
+ENTER_AIRCRAFT = Kind("enter-aircraft", "entered an aircraft")
+ENTER_LOADING_BASIS = Kind("enter-loading-basis", "entered a loading basis")
+APPROVE_LOADING_BASIS = Kind("approve-loading-basis", "approved a loading basis")
+ENTER_EMPTY_WEIGHT = Kind("enter-empty-weight", "entered an empty weight")
+APPROVE_EMPTY_WEIGHT = Kind("approve-empty-weight", "approved an empty weight")
+
+KINDS = (
+    ENTER_OPERATOR,
+    ENTER_PERSON,
+    GRANT_DUTY,
+    END_DUTY,
+    CHANGE_PASSWORD,
+    ISSUE_TOKEN,
+    REVOKE_TOKEN,
+    ENTER_AIRCRAFT,
+    ENTER_LOADING_BASIS,
+    APPROVE_LOADING_BASIS,
+    ENTER_EMPTY_WEIGHT,
+    APPROVE_EMPTY_WEIGHT,
+)

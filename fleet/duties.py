@@ -1,0 +1,47 @@
+"""The duties a person may hold, grouped as roles, and the acts of this room that each allows.
+
+Rooms above name their own acts per role the same way; `service.actors` joins them. A person may hold duties
+that enter and that approve; the database still refuses the same person twice on one version.
+"""
+
+from collections.abc import Mapping
+from types import MappingProxyType
+from typing import Literal, get_args
+
+from fleet import acts
+
+Role = Literal[
+    "pilot",
+    "load preparer",
+    "loading supervisor",
+    "maintenance",
+    "records approver",
+    "operations manager",
+    "auditor",
+    "integration",
+]
+ROLES: tuple[Role, ...] = get_args(Role)
+
+# What anybody with a login may do for themselves.
+_OWN = frozenset({acts.CHANGE_PASSWORD.name, acts.ISSUE_TOKEN.name, acts.REVOKE_TOKEN.name})
+_ENTERS = frozenset({acts.ENTER_AIRCRAFT.name, acts.ENTER_LOADING_BASIS.name, acts.ENTER_EMPTY_WEIGHT.name})
+_APPROVES = frozenset({acts.APPROVE_LOADING_BASIS.name, acts.APPROVE_EMPTY_WEIGHT.name})
+_PEOPLE = frozenset({acts.ENTER_PERSON.name, acts.GRANT_DUTY.name, acts.END_DUTY.name})
+
+ACTS_OF: Mapping[Role, frozenset[str]] = MappingProxyType(
+    {
+        "pilot": _OWN,
+        "load preparer": _OWN,
+        "loading supervisor": _OWN,
+        "maintenance": _OWN | _ENTERS,
+        "records approver": _OWN | _APPROVES,
+        "operations manager": _OWN | _ENTERS | _APPROVES | _PEOPLE,
+        "auditor": _OWN,
+        "integration": frozenset(),
+    }
+)
+
+
+def is_role(word: str) -> bool:
+    """This function will say whether the word names a role."""
+    return word in ACTS_OF
