@@ -1,12 +1,14 @@
 """The two database roles and the database: made by set-up, never by a migration.
 
-`tarebook_owner` owns the database and migrates. `tarebook_service` is what web and workers are: it may connect, and has what
-migrations grant it table by table; it may create nothing, not even a temporary table, and owns nothing.
+`tarebook_owner` owns the database and migrates. `tarebook_service` is what web and workers are: it may
+connect, and has what migrations grant it table by table; it may create nothing, not even a temporary table,
+and owns nothing.
 """
 
 import os
 import sys
 from dataclasses import dataclass
+from pathlib import Path
 
 import psycopg
 from psycopg import sql
@@ -65,7 +67,9 @@ def make_database(superuser: str, database: str) -> None:
 
 
 def _main() -> int:
-    """Make roles and database from SUPERUSER_URL, with passwords from the files OWNER_PASSWORD_FILE and SERVICE_PASSWORD_FILE."""
+    """Make roles and database from SUPERUSER_URL, with passwords from the files OWNER_PASSWORD_FILE and
+    SERVICE_PASSWORD_FILE.
+    """
     try:
         superuser = _read("SUPERUSER_URL")
         make(superuser, passwords=Passwords(_read("OWNER_PASSWORD"), _read("SERVICE_PASSWORD")))
@@ -80,8 +84,7 @@ def _read(name: str) -> str:
     path = os.environ.get(f"{name}_FILE")
     if path is None:
         return os.environ[name]
-    with open(path, encoding="utf-8") as file:
-        return file.read().strip()
+    return Path(path).read_text(encoding="utf-8").strip()
 
 
 if __name__ == "__main__":

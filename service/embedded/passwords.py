@@ -1,4 +1,6 @@
-"""The generated passwords of the roles of an embedded cluster, beside its data, readable by this account only."""
+"""The generated passwords of the roles of an embedded cluster, beside its data, readable by this account
+only.
+"""
 
 import json
 import os

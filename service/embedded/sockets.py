@@ -8,7 +8,8 @@ from pathlib import Path
 from service.embedded.stopped import Stopped
 from service.embedded.unprivileged import Account, hand_over
 
-# The kernel's sun_path holds 108 bytes with the closing zero (unix(7)), 104 on macOS; the longest name we put in a folder.
+# The kernel's sun_path holds 108 bytes with the closing zero (unix(7)), 104 on macOS; the longest name we put
+# in a folder.
 _ROOM = 103
 _LONGEST_NAME = ".s.PGSQL.5432"
 
@@ -23,7 +24,7 @@ def socket_folder(wanted: Path, to: Account) -> Path:
         name = hashlib.sha256(os.fsencode(wanted)).hexdigest()[:16]
         folder = Path(tempfile.gettempdir()) / f"tarebook-{os.geteuid()}-{name}"
         if len(os.fsencode(folder / _LONGEST_NAME)) > _ROOM:
-            folder = Path("/tmp") / folder.name
+            folder = Path("/tmp") / folder.name  # noqa: S108 - owner and kind are checked below
         _refuse_a_strangers(folder, to)
     hand_over(folder, to)
     return folder

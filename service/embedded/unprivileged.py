@@ -1,8 +1,9 @@
 """Running a server that refuses to run as root, when we are root.
 
-Nobody is made and no mode of a folder above ours is changed. The server runs as the system's `nobody`, and keeps one single
-capability, to read and pass folders it does not own, because a home of root has mode 700. Where that capability cannot be had
-(many containers), programs and data go to a state folder of the system instead, which `nobody` can reach.
+Nobody is made and no mode of a folder above ours is changed. The server runs as the system's `nobody`, and
+keeps one single capability, to read and pass folders it does not own, because a home of root has mode 700.
+Where that capability cannot be had (many containers), programs and data go to a state folder of the system
+instead, which `nobody` can reach.
 """
 
 import functools
@@ -20,7 +21,9 @@ _READING = ("--inh-caps=+dac_read_search", "--ambient-caps=+dac_read_search", "-
 
 @dataclass(frozen=True)
 class Account:
-    """How to run a server: the words before its command, who owns its files, and whether it can pass closed folders."""
+    """How to run a server: the words before its command, who owns its files, and whether it can pass closed
+    folders.
+    """
 
     prefix: tuple[str, ...] = ()
     uid: int | None = None

@@ -1,4 +1,6 @@
-"""The embedded Valkey: the queue that wakes the workers. Nothing is lost with it: the list of work is in the database."""
+"""The embedded Valkey: the queue that wakes the workers. Nothing is lost with it: the list of work is in the
+database.
+"""
 
 import importlib.util
 import os
@@ -27,8 +29,10 @@ class Broker:
     process: processes.Identity
 
 
-def start(folder: Path) -> Broker:
-    """Start the broker of this folder on a socket, or adopt the one that already runs. Raises `Stopped` when it cannot."""
+def start(folder: Path, *, log: Path | None = None) -> Broker:
+    """Start the broker of this folder on a socket, or adopt the one that already runs. Raises `Stopped` when
+    it cannot.
+    """
     folder = folder.absolute()
     folder.mkdir(parents=True, exist_ok=True)
     to = account()
@@ -38,7 +42,7 @@ def start(folder: Path) -> Broker:
     if one is None or not _answers(place):
         if one is not None:
             _end(one)
-        one = _launch(folder, place)
+        one = _launch(folder, place, log or folder / "valkey.log")
         processes.write_pid_file(noted, one)
     return Broker(f"redis+socket://{place}", place, one)
 
@@ -48,9 +52,8 @@ def stop(broker: Broker) -> None:
     _end(broker.process)
 
 
-def _launch(folder: Path, place: Path) -> processes.Identity:
+def _launch(folder: Path, place: Path, log: Path) -> processes.Identity:
     place.unlink(missing_ok=True)
-    log = folder / "valkey.log"
     given = (
         "--port",
         "0",
@@ -65,7 +68,7 @@ def _launch(folder: Path, place: Path) -> processes.Identity:
     )
     with log.open("ab") as out:
         child = subprocess.Popen(
-            (str(_program()), *given, "--daemonize", "no", "--dir", str(folder)),
+            (str(_program()), *given, "--daemonize", "no", "--loglevel", "warning", "--dir", str(folder)),
             stdin=subprocess.DEVNULL, stdout=out, stderr=out, start_new_session=True,
             env={"PATH": os.environ.get("PATH", "/usr/bin:/bin"), "LC_ALL": "C"},
         )  # fmt: skip
