@@ -8,58 +8,11 @@ from django.db import migrations, models
 
 class Migration(migrations.Migration):
     dependencies = [
-        ("fleet", "0001_people"),
+        ("fleet", "0001_people_and_aircraft"),
     ]
 
     operations = [
         django.contrib.postgres.operations.BtreeGistExtension(),
-        migrations.CreateModel(
-            name="Aircraft",
-            fields=[
-                (
-                    "id",
-                    models.UUIDField(
-                        db_default=models.Func(function="uuidv7", output_field=models.UUIDField()),
-                        editable=False,
-                        primary_key=True,
-                        serialize=False,
-                    ),
-                ),
-                (
-                    "operator",
-                    models.ForeignKey(
-                        on_delete=django.db.models.deletion.PROTECT,
-                        related_name="aircraft",
-                        to="fleet.operator",
-                    ),
-                ),
-                ("registration", models.CharField(max_length=12)),
-                ("serial_number", models.CharField(max_length=40)),
-                ("type", models.CharField(max_length=80)),
-                ("category", models.CharField(max_length=20)),
-                ("engines", models.PositiveSmallIntegerField()),
-                ("passenger_seats", models.PositiveSmallIntegerField()),
-            ],
-            options={
-                "constraints": [
-                    models.UniqueConstraint(
-                        fields=("operator", "registration"), name="aircraft_registration_is_taken_once"
-                    ),
-                    models.UniqueConstraint(
-                        fields=("operator", "type", "serial_number"), name="aircraft_serial_is_taken_once"
-                    ),
-                    models.UniqueConstraint(fields=("id", "operator"), name="aircraft_is_of_one_operator"),
-                    models.CheckConstraint(
-                        condition=models.Q(("registration__regex", "^[A-Z0-9][A-Z0-9-]{1,11}$")),
-                        name="aircraft_registration_is_plain",
-                    ),
-                    models.CheckConstraint(
-                        condition=models.Q(("category__in", ["aeroplane", "helicopter"])),
-                        name="aircraft_category_is_known",
-                    ),
-                ],
-            },
-        ),
         migrations.CreateModel(
             name="LoadingBasis",
             fields=[
@@ -153,7 +106,23 @@ class Migration(migrations.Migration):
             ],
             options={
                 "constraints": [
-                    models.UniqueConstraint(fields=("id", "entered_by"), name="empty_weight_has_one_author")
+                    models.UniqueConstraint(fields=("id", "entered_by"), name="empty_weight_has_one_author"),
+                    models.UniqueConstraint(
+                        fields=("id", "true_from"), name="empty_weight_has_one_beginning"
+                    ),
+                    models.UniqueConstraint(
+                        fields=("id", "aircraft", "fit"), name="empty_weight_is_of_one_fit"
+                    ),
+                    models.UniqueConstraint(
+                        fields=("id", "aircraft"), name="empty_weight_is_of_one_aircraft"
+                    ),
+                    models.CheckConstraint(
+                        condition=models.Q(("digest__regex", "^[0-9a-f]{64}$")),
+                        name="empty_weight_digest_is_sha256",
+                    ),
+                    models.CheckConstraint(
+                        condition=models.Q(("fit", ""), _negated=True), name="empty_weight_names_its_fit"
+                    ),
                 ],
             },
         ),

@@ -27,7 +27,14 @@ class EmptyWeight(models.Model):
 
     class Meta:
         constraints = [
-            models.UniqueConstraint(fields=["id", "entered_by"], name="empty_weight_has_one_author")
+            models.UniqueConstraint(fields=["id", "entered_by"], name="empty_weight_has_one_author"),
+            models.UniqueConstraint(fields=["id", "true_from"], name="empty_weight_has_one_beginning"),
+            models.UniqueConstraint(fields=["id", "aircraft", "fit"], name="empty_weight_is_of_one_fit"),
+            models.UniqueConstraint(fields=["id", "aircraft"], name="empty_weight_is_of_one_aircraft"),
+            models.CheckConstraint(
+                condition=models.Q(digest__regex=r"^[0-9a-f]{64}$"), name="empty_weight_digest_is_sha256"
+            ),
+            models.CheckConstraint(condition=~models.Q(fit=""), name="empty_weight_names_its_fit"),
         ]
 
     def __str__(self) -> str:

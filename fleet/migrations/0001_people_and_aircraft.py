@@ -153,4 +153,51 @@ class Migration(migrations.Migration):
                 ],
             },
         ),
+        migrations.CreateModel(
+            name="Aircraft",
+            fields=[
+                (
+                    "id",
+                    models.UUIDField(
+                        db_default=models.Func(function="uuidv7", output_field=models.UUIDField()),
+                        editable=False,
+                        primary_key=True,
+                        serialize=False,
+                    ),
+                ),
+                (
+                    "operator",
+                    models.ForeignKey(
+                        on_delete=django.db.models.deletion.PROTECT,
+                        related_name="aircraft",
+                        to="fleet.operator",
+                    ),
+                ),
+                ("registration", models.CharField(max_length=12)),
+                ("serial_number", models.CharField(max_length=40)),
+                ("type", models.CharField(max_length=80)),
+                ("category", models.CharField(max_length=20)),
+                ("engines", models.PositiveSmallIntegerField()),
+                ("passenger_seats", models.PositiveSmallIntegerField()),
+            ],
+            options={
+                "constraints": [
+                    models.UniqueConstraint(
+                        fields=("operator", "registration"), name="aircraft_registration_is_taken_once"
+                    ),
+                    models.UniqueConstraint(
+                        fields=("operator", "type", "serial_number"), name="aircraft_serial_is_taken_once"
+                    ),
+                    models.UniqueConstraint(fields=("id", "operator"), name="aircraft_is_of_one_operator"),
+                    models.CheckConstraint(
+                        condition=models.Q(("registration__regex", "^[A-Z0-9][A-Z0-9-]{1,11}$")),
+                        name="aircraft_registration_is_plain",
+                    ),
+                    models.CheckConstraint(
+                        condition=models.Q(("category__in", ["aeroplane", "helicopter"])),
+                        name="aircraft_category_is_known",
+                    ),
+                ],
+            },
+        ),
     ]
