@@ -4,7 +4,7 @@ from django.db import migrations, models
 
 
 class Migration(migrations.Migration):
-    dependencies = [("records", "0002_the_door")]
+    dependencies = [("records", "0003_documents_and_outbox")]
 
     operations = [
         migrations.CreateModel(
