@@ -28,3 +28,6 @@ class Outbox(models.Model):
                 fields=["try_after"], condition=models.Q(done_at__isnull=True), name="outbox_not_done"
             )
         ]
+
+    def __str__(self) -> str:
+        return f"{self.task}({self.key})"

@@ -1,0 +1,198 @@
+r"""The plot of a load: envelopes, weight limits and the phases, as one SVG text.
+
+    weight ^        .--------------  take-off limit    limits: broken lines, named at the right
+           |   ____/ R T     \       8750 lb           envelopes: closed lines, named at the right
+           |  /      M L   Z  |----  normal envelope   phases: a shape and a letter each
+           +------------------------> arm, or moment where the envelope's edges are straight in it
+
+Black on white; nothing depends on colour. It draws and decides nothing: binary floats are used here and
+nowhere near a verdict.
+"""
+
+from collections.abc import Iterable, Mapping, Sequence
+from dataclasses import dataclass
+from fractions import Fraction
+from typing import Any
+
+from fleet.basis import Axis, Envelope
+from loads.plot_marks import MARKS, Mark, drawn_marks
+from loads.plot_scale import Scale, ticks
+from loads.svg import corners, element, label, line, short
+
+DASHES = ("none", "7 3", "2 2", "9 3 2 3")
+ROW = 10.0  # from one line of a label to the next
+NAMES = {
+    ("longitudinal", "arm"): "centre of gravity, arm",
+    ("longitudinal", "moment"): "moment",
+    ("lateral", "arm"): "lateral centre of gravity, right is positive",
+    ("lateral", "moment"): "lateral moment, right is positive",
+}
+
+
+@dataclass(frozen=True, slots=True)
+class Frame:
+    """The drawing and the rectangle of the curves in it, in SVG units; names stand to the right of that."""
+
+    width: float = 470.0
+    height: float = 300.0
+    left: float = 50.0
+    right: float = 342.0
+    top: float = 10.0
+    bottom: float = 266.0
+
+
+STANDARD = Frame()
+
+
+def plot(
+    result: Mapping[str, Any],
+    envelopes: Sequence[Envelope],
+    *,
+    axis: Axis = "longitudinal",
+    weight_word: str = "weight",
+    frame: Frame = STANDARD,
+) -> str:
+    """This function will return an SVG text of the result document against the envelopes of one axis.
+
+    `envelopes` are in the units of the result (`result["units"]`); those of the other axis are left out.
+    Returns "" when there is nothing to draw: no phases, or no envelope of that axis. Aft and right are positive.
+    """
+    shown = [envelope for envelope in envelopes if envelope.axis == axis]
+    if not shown or not result["phases"]:
+        return ""
+    plane = shown[0].plane
+    shown = [envelope for envelope in shown if envelope.plane == plane]
+    marks = [
+        Mark(
+            MARKS[phase["phase"]],
+            phase["phase"],
+            _across(phase, axis, plane),
+            float(Fraction(phase["weight"])),
+        )
+        for phase in result["phases"]
+    ]
+    units = result["units"]
+    limits = _weight_limits(result["checks"], units["weight"])
+    corner_points = [point for envelope in shown for point in envelope.points]
+    across = [float(point[0]) for point in corner_points] + [mark.x for mark in marks]
+    up = [float(point[1]) for point in corner_points] + [mark.y for mark in marks] + list(limits)
+    x, y = Scale.around(across, frame.left, frame.right), Scale.around(up, frame.bottom, frame.top)
+    unit = units["moment" if plane == "moment" else "length"]
+    parts = [
+        *_grid(x, y, frame),
+        *_titles(frame, f"{NAMES[axis, plane]}, {unit}", f"{weight_word}, {units['weight']}"),
+        *(_curve(envelope, number, x, y) for number, envelope in enumerate(shown)),
+        *(line((frame.left, y.at(v)), (frame.right, y.at(v)), stroke_dasharray="4 2") for v in limits),
+        *_names(_wanted(shown, limits, x, y, frame.right), frame),
+        *drawn_marks(marks, x, y, frame.right),
+    ]
+    told = "; ".join(
+        f"{mark.phase}: {short(mark.y)} {units['weight']} at {short(mark.x)} {unit}" for mark in marks
+    )
+    return element(
+        "svg",
+        *parts,
+        xmlns="http://www.w3.org/2000/svg",
+        viewBox=f"0 0 {short(frame.width)} {short(frame.height)}",
+        role="img",
+        aria_label=told,
+        font_family="IBM Plex Sans, sans-serif",
+        font_size=9,
+        fill="#000",
+    )
+
+
+def _across(phase: Mapping[str, Any], axis: Axis, plane: str) -> float:
+    if axis == "longitudinal":
+        return float(Fraction(phase["moment"] if plane == "moment" else phase["arm"]))
+    arm = Fraction(phase["lateral_arm"])
+    return float(arm * Fraction(phase["weight"]) if plane == "moment" else arm)
+
+
+def _weight_limits(checks: Iterable[Mapping[str, Any]], unit: str) -> dict[float, tuple[str, ...]]:
+    """The upper limit of each weight check, with the lines of its label."""
+    named: dict[float, list[str]] = {}
+    for check in checks:
+        family, _, phase = check["code"].partition(".")
+        if family == "weight" and check["limit"]:
+            named.setdefault(float(Fraction(check["limit"])), []).append(check.get("phase") or phase)
+    return {v: (*broken(f"{', '.join(phases)} limit"), f"{short(v)} {unit}") for v, phases in named.items()}
+
+
+def _grid(x: Scale, y: Scale, frame: Frame) -> list[str]:
+    parts = []
+    for value in ticks(x):
+        at = x.at(value)
+        parts += [
+            line((at, frame.top), (at, frame.bottom), stroke="#ccc"),
+            label(short(value), (at, frame.bottom + 11), text_anchor="middle"),
+        ]
+    for value in ticks(y):
+        at = y.at(value)
+        parts += [
+            line((frame.left, at), (frame.right, at), stroke="#ccc"),
+            label(short(value), (frame.left - 4, at + 3), text_anchor="end"),
+        ]
+    size = {"width": frame.right - frame.left, "height": frame.bottom - frame.top}
+    edge = element("rect", x=frame.left, y=frame.top, fill="none", stroke="#000", stroke_width=0.6, **size)
+    return [*parts, edge]
+
+
+def _titles(frame: Frame, across: str, up: str) -> list[str]:
+    middle, height = (frame.left + frame.right) / 2, (frame.top + frame.bottom) / 2
+    turned = f"translate(10 {short(height)}) rotate(-90)"
+    return [
+        label(across, (middle, frame.height - 9), text_anchor="middle"),
+        element("text", words=up, transform=turned, text_anchor="middle"),
+    ]
+
+
+def _curve(envelope: Envelope, number: int, x: Scale, y: Scale) -> str:
+    points = corners([(x.at(float(across)), y.at(float(weight))) for across, weight in envelope.points])
+    dash = DASHES[number % len(DASHES)]
+    return element(
+        "polygon", points=points, fill="none", stroke="#000", stroke_width=1.5, stroke_dasharray=dash
+    )
+
+
+@dataclass(frozen=True, slots=True)
+class Name:
+    """A label at the right of the curves: what it names begins at `start`, its lines of words follow."""
+
+    start: tuple[float, float]
+    lines: tuple[str, ...]
+
+
+def _wanted(
+    envelopes: Sequence[Envelope], limits: Mapping[float, tuple[str, ...]], x: Scale, y: Scale, right: float
+) -> list[Name]:
+    names = [Name((right, y.at(value)), words) for value, words in limits.items()]
+    for envelope in envelopes:
+        far = max(envelope.points, key=lambda point: (point[0], -point[1]))
+        words = f"{envelope.id} envelope: {', '.join(envelope.phases)}"
+        names.append(Name((x.at(float(far[0])), y.at(float(far[1]))), broken(words)))
+    return sorted(names, key=lambda name: name.start[1])
+
+
+def _names(names: Sequence[Name], frame: Frame) -> list[str]:
+    """Write the labels below each other, each as near to its own height as the ones above leave room."""
+    parts = []
+    free = frame.top + 3
+    for name in names:
+        top = max(name.start[1], free)
+        way = [name.start, (frame.right, name.start[1]), (frame.right + 8, top)]
+        parts.append(element("polyline", points=corners(way), fill="none", stroke="#000", stroke_width=0.5))
+        for row, words in enumerate(name.lines):
+            parts.append(label(words, (frame.right + 11, top + 3 + row * ROW), font_size=8.5))
+        free = top + ROW * len(name.lines) + 1
+    return parts
+
+
+def broken(text: str, width: int = 25) -> tuple[str, ...]:
+    """This function will break a label into lines of at most `width` characters; a longer word is cut."""
+    lines = [""]
+    for word in text.split():
+        if lines[-1] and len(lines[-1]) + len(word) >= width:
+            lines.append("")
+        lines[-1] = f"{lines[-1]} {word[:width]}".strip()
+    return tuple(lines)

@@ -1,0 +1,38 @@
+"""SVG elements as text, escaped in one place. Presentation attributes only, never `style`."""
+
+from xml.sax.saxutils import escape, quoteattr
+
+
+def element(name: str, *inside: str, words: str = "", **attributes: str | float) -> str:
+    """This function will write one element: children as they are, `words` escaped, numbers with two decimals.
+
+    An underscore in an attribute's name stands for a hyphen: `stroke_width=1`.
+    """
+    written = "".join(
+        f" {key.replace('_', '-')}={quoteattr(value if isinstance(value, str) else short(value))}"
+        for key, value in attributes.items()
+    )
+    held = escape(words) + "".join(inside)
+    return f"<{name}{written}>{held}</{name}>" if held else f"<{name}{written}/>"
+
+
+def line(start: tuple[float, float], end: tuple[float, float], **attributes: str | float) -> str:
+    """This function will write a straight black line, 0.5 wide unless said otherwise."""
+    look: dict[str, str | float] = {"stroke": "#000", "stroke_width": 0.5, **attributes}
+    return element("line", x1=start[0], y1=start[1], x2=end[0], y2=end[1], **look)
+
+
+def label(words: str, at: tuple[float, float], **attributes: str | float) -> str:
+    """This function will write words with the left end of their base line at `at`, unless said otherwise."""
+    return element("text", words=words, x=at[0], y=at[1], **attributes)
+
+
+def corners(points: list[tuple[float, float]]) -> str:
+    """This function will write points as the `points` attribute of a polygon or polyline."""
+    return " ".join(f"{short(x)},{short(y)}" for x, y in points)
+
+
+def short(value: float) -> str:
+    """This function will write a number with at most two decimals, no exponent, no minus zero."""
+    text = f"{value:.2f}".rstrip("0").rstrip(".")
+    return "0" if text in {"-0", ""} else text

@@ -1,0 +1,28 @@
+"""Work the scheduler starts: looking for promised work that is not done."""
+
+import logging
+
+from celery import shared_task
+
+from records import outbox
+
+log = logging.getLogger(__name__)
+
+MOST_AT_ONCE = 200
+
+
+@shared_task(name="records.tasks.sweep_outbox", ignore_result=True)
+def sweep_outbox() -> int:
+    """This function will send again what is promised and due, and return how many that was.
+
+    A broker that fails is not asked again in this sweep; each row has its next time already.
+    """
+    due = outbox.take_due(MOST_AT_ONCE)
+    sent = 0
+    for task, key in due:
+        if not outbox.wake(task, key):
+            break
+        sent += 1
+    if due:
+        log.info("promised work: %d due, %d sent", len(due), sent)
+    return sent
