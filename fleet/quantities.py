@@ -13,6 +13,7 @@ from decimal import Decimal
 from enum import Enum
 
 from records.refusal import Fault, Invalid
+from records.strict_json import pointer_step
 
 MOST_DIGITS = 15
 _PLAIN_DECIMAL = re.compile(r"-?(?:0|[1-9][0-9]*)(?:\.[0-9]+)?", re.ASCII)
@@ -120,8 +121,8 @@ def quantity_or_fault(
         )
     strange = value.keys() - _FIELDS - also
     if strange:
-        field = escaped(str(min(strange)))
-        return Fault(f"{pointer}/{field}", "unknown-field", "not a field of a quantity; remove it")
+        field = pointer_step(str(min(strange)))
+        return Fault(f"{pointer}{field}", "unknown-field", "not a field of a quantity; remove it")
     if "value" not in value:
         return Fault(f"{pointer}/value", "missing", "the number is missing; give it, or omit the quantity")
     unit = _unit_or_fault(value.get("unit"), f"{pointer}/unit", dimension)
@@ -167,8 +168,3 @@ def _unit_or_fault(sign: object, pointer: str, dimension: Dimension | tuple[Dime
 
 def _choice(wanted: tuple[Dimension, ...]) -> str:
     return "use one of " + ", ".join(unit.value for each in wanted for unit in UNITS_OF[each])
-
-
-def escaped(field: str) -> str:
-    """Return a field name as it stands in a JSON pointer (RFC 6901, section 3)."""
-    return field.replace("~", "~0").replace("/", "~1")

@@ -1,0 +1,140 @@
+"""Reads envelopes and checks them against the weight limits they serve."""
+
+from fractions import Fraction
+from typing import Any
+
+from fleet.basis import Envelope, Limits, Phase
+from fleet.basis_reading.findings import Findings, number
+from fleet.conversion import converted
+from fleet.envelope import NotAnEnvelope
+from fleet.quantities import DIMENSION_OF, Dimension, Unit
+
+# An envelope that holds at landing holds on down to the minimum at landing, which is flown through to reach.
+_PHASES: dict[str, tuple[Phase, ...]] = {
+    "ramp": ("ramp",),
+    "take-off": ("take-off",),
+    "landing": ("landing", "minimum at landing"),
+    "zero-fuel": ("zero fuel",),
+}
+_LIMIT_OF: dict[str, str] = {
+    "ramp": "ramp",
+    "take-off": "take_off",
+    "landing": "landing",
+    "zero-fuel": "zero_fuel",
+}
+# Above the greatest weight limit by more than this an envelope is taken for one in another unit, or of
+# another type.
+_MOST_ABOVE = Fraction(5, 4)
+
+
+def phases_of(words: list[str]) -> tuple[Phase, ...]:
+    """Return the phases that the words of a document name."""
+    return tuple(phase for word in words for phase in _PHASES[word])
+
+
+def read_envelopes(findings: Findings, limits: Limits) -> tuple[Envelope, ...]:
+    """Return the envelopes.
+
+    One that is no polygon, or contradicts a limit or another envelope, is a fault.
+    """
+    findings.once(("envelopes",))
+    envelopes = []
+    seen: set[tuple[str, str]] = set()
+    for at, entry in findings.entries("envelopes"):
+        for row, word in enumerate(entry["phases"]):
+            if (entry["axis"], word) in seen:
+                findings.fault(
+                    f"{at}/phases/{row}",
+                    "envelope-twice",
+                    f"another {entry['axis']} envelope already serves {word}; keep the one that holds",
+                )
+            seen.add((entry["axis"], word))
+        envelope = _envelope(findings, at, entry)
+        if envelope is not None:
+            _demand_reach(findings, at, entry["phases"], envelope, limits)
+            envelopes.append(envelope)
+    if findings.sound("/envelopes"):
+        for word in ("take-off", "landing"):
+            if ("longitudinal", word) not in seen:
+                findings.fault(
+                    "/envelopes",
+                    "envelope-missing",
+                    f"no longitudinal envelope serves {word}; enter the manual's",
+                )
+    return tuple(envelopes)
+
+
+def lateral_limits_entered(findings: Findings, envelopes: tuple[Envelope, ...]) -> bool:
+    """Return whether lateral limits are known: by an envelope, or by a page that shows there are none."""
+    lateral = any(envelope.axis == "lateral" for envelope in envelopes)
+    stated_none = "lateral_limits" in findings.document
+    if lateral and stated_none:
+        findings.fault(
+            "/lateral_limits",
+            "limits-contradict",
+            "there is a lateral envelope, so there are limits; remove one",
+        )
+    return lateral or stated_none
+
+
+def _envelope(findings: Findings, at: str, entry: dict[str, Any]) -> Envelope | None:
+    unit, weight_unit = Unit(entry["unit"]), Unit(entry["weight_unit"])
+    moments = entry["plane"] == "moment"
+    if DIMENSION_OF[unit] is not (Dimension.MOMENT if moments else Dimension.LENGTH):
+        findings.fault(
+            f"{at}/unit",
+            "unit-dimension",
+            f"{unit.value} is no unit of {entry['plane']}; correct plane or unit",
+        )
+        return None
+    across = findings.moment if moments else findings.length
+    try:
+        return Envelope(
+            id=entry["id"],
+            axis=entry["axis"],
+            phases=phases_of(entry["phases"]),
+            plane=entry["plane"],
+            points=tuple(
+                (
+                    converted(number(value), unit, across),
+                    converted(number(weight), weight_unit, findings.weight),
+                )
+                for weight, value in entry["points"]
+            ),
+            source=findings.source(entry["source"]),
+        )
+    except NotAnEnvelope as refused:
+        findings.fault(f"{at}/points", refused.code, str(refused))
+        return None
+
+
+def _demand_reach(findings: Findings, at: str, words: list[str], envelope: Envelope, limits: Limits) -> None:
+    """Add a fault when an envelope ends below the limit of a phase it serves, or lies above one."""
+    lowest, highest = envelope.shape.lowest, envelope.shape.highest
+    greatest = Fraction(0)
+    for row, word in enumerate(words):
+        limit = getattr(limits, _LIMIT_OF[word])
+        if limit is None or limit.value is None:
+            continue
+        greatest = max(greatest, limit.value)
+        if lowest >= limit.value:
+            findings.fault(
+                f"{at}/phases/{row}",
+                "envelope-outside-limits",
+                f"the envelope begins at or above the {word} limit; check its weights and their unit",
+            )
+        elif highest < limit.value:
+            findings.fault(
+                f"{at}/phases/{row}",
+                "envelope-below-limit",
+                f"the envelope ends below the {word} limit; enter its upper points, or the lower limit",
+            )
+    structural = [
+        limit.value for limit in (limits.ramp, limits.take_off) if limit and limit.value is not None
+    ]
+    if structural and highest > max(*structural, greatest) * _MOST_ABOVE:
+        findings.fault(
+            f"{at}/points",
+            "envelope-above-limits",
+            "reaches far above every weight limit; check weights and unit",
+        )

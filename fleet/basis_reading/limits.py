@@ -1,0 +1,96 @@
+"""Reads the weight limits and refuses those that contradict each other."""
+
+from typing import Any
+
+from fleet.basis import Limit, Limits
+from fleet.basis_reading.findings import Findings
+
+FIELDS = ("ramp", "take_off", "zero_fuel", "landing", "minimum_flying")
+# The first may not lie above the second: nothing loaded to the first could ever be within the second.
+_NOT_ABOVE = (
+    ("zero_fuel", "take_off"),
+    ("zero_fuel", "ramp"),
+    ("landing", "take_off"),
+    ("landing", "ramp"),
+    ("take_off", "ramp"),
+)
+
+
+def read_limits(findings: Findings) -> Limits:
+    """Return the limits of the basis; what was not entered is None."""
+    limits = _limits(findings, findings.document.get("limits"), "/limits")
+    demand_consistent(findings, limits, "/limits")
+    return limits
+
+
+def tightened(findings: Findings, own: dict[str, Any] | None, at: str, of_basis: Limits) -> Limits:
+    """Return the limits of a configuration: its own where it gives one, which may not be looser than the
+    basis's.
+    """
+    if own is None:
+        return of_basis
+    given = _limits(findings, own, at)
+    tighter = {}
+    for field in FIELDS:
+        mine: Limit | None = getattr(given, field)
+        theirs: Limit | None = getattr(of_basis, field)
+        if mine and theirs and _looser(mine, theirs, least=field == "minimum_flying"):
+            findings.fault(
+                f"{at}/{field}",
+                "limit-looser",
+                "looser than the limit of the basis; a configuration may only tighten it",
+            )
+        tighter[field] = mine or theirs
+    limits = Limits(**tighter)
+    demand_consistent(findings, limits, at)
+    return limits
+
+
+def demand_consistent(findings: Findings, limits: Limits, at: str) -> None:
+    """Add a fault for every pair of limits that cannot both hold."""
+    values = {field: limit.value for field in FIELDS if (limit := getattr(limits, field)) is not None}
+    for lower, upper in _NOT_ABOVE:
+        low, high = values.get(lower), values.get(upper)
+        if low is not None and high is not None and low > high:
+            findings.fault(
+                f"{at}/{lower}",
+                "limits-contradict",
+                f"the {_words(lower)} limit lies above the {_words(upper)} limit; check both figures",
+            )
+    least = values.get("minimum_flying")
+    for field in ("take_off", "landing"):
+        most = values.get(field)
+        if least is not None and most is not None and least >= most:
+            findings.fault(
+                f"{at}/minimum_flying",
+                "limits-contradict",
+                f"the minimum flying weight leaves nothing below the {_words(field)} limit; check both",
+            )
+
+
+def _limits(findings: Findings, given: Any, at: str) -> Limits:
+    """Return the limits that are sound.
+
+    One with a fault of form counts as not entered while the rest is read.
+    """
+    entries = given if isinstance(given, dict) else {}
+    return Limits(
+        **{
+            field: findings.limit(entries.get(field), f"{at}/{field}")
+            if findings.sound(f"{at}/{field}")
+            else None
+            for field in FIELDS
+        }
+    )
+
+
+def _looser(mine: Limit, theirs: Limit, *, least: bool) -> bool:
+    if theirs.value is None:
+        return False
+    if mine.value is None:
+        return True
+    return mine.value < theirs.value if least else mine.value > theirs.value
+
+
+def _words(field: str) -> str:
+    return field.replace("_", " ")
