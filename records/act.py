@@ -85,7 +85,7 @@ def transaction_for_acts() -> Iterator[None]:
 
 def _transaction_of_an_act(kind: Kind) -> transaction.Atomic:
     innermost = connection.atomic_blocks[-1] if connection.atomic_blocks else None
-    if innermost is None or innermost._from_testcase:  # noqa: SLF001 - the mark Django itself asks for a durable block
+    if innermost is None or getattr(innermost, "_from_testcase", False):
         return transaction.atomic(durable=True)
     if innermost is _joinable.get():
         return transaction.atomic(savepoint=False)

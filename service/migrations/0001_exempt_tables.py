@@ -1,48 +1,35 @@
-"""The tables of the libraries, none of which holds a business row: exempt from guard, each with its reason.
-
-What the service role has no use for it may only read.
-"""
+"""Tables of the framework that no act writes, each with the reason, and the rights the service role has on them."""
 
 from django.db import migrations
 
-EXEMPT = [
-    ("django_migrations", "which migrations have run; only the owner writes it", "SELECT"),
-    ("django_content_type", "the names of the models; only migrations write it", "SELECT"),
-    (
-        "auth_permission",
-        "Django's own permissions, which nothing here asks; only migrations write it",
-        "SELECT",
-    ),
-    ("auth_group", "Django's own groups, which nothing here uses", "SELECT"),
-    ("auth_group_permissions", "Django's own groups, which nothing here uses", "SELECT"),
-    (
-        "django_session",
-        "who is signed in at a browser right now; no record",
-        "SELECT, INSERT, UPDATE, DELETE",
-    ),
+_ALL = "SELECT, INSERT, UPDATE, DELETE"
+_EXEMPT = (
+    ("django_migrations", "what was migrated; written by the owner only", "SELECT"),
+    ("django_content_type", "a list of models; written by migrations only", "SELECT"),
+    ("auth_permission", "not used: what an actor may do comes from duties", "SELECT"),
+    ("auth_group", "not used: what an actor may do comes from duties", "SELECT"),
+    ("auth_group_permissions", "not used: what an actor may do comes from duties", "SELECT"),
+    ("django_session", "who is signed in at this moment; changes no business row", _ALL),
     (
         "axes_accessattempt",
-        "failed sign-ins, counted and forgotten: a stranger must not be able to fill an undeletable chain",
-        "SELECT, INSERT, UPDATE, DELETE",
+        "failures to sign in, counted to lock out; a stranger could fill the trail with them",
+        _ALL,
     ),
-    ("axes_accessattemptexpiration", "deleted with the failed sign-ins; not in use", "SELECT, DELETE"),
-    ("axes_accessfailurelog", "a second list of failed sign-ins; switched off", "SELECT"),
-    ("axes_accesslog", "a list of sign-ins; switched off", "SELECT"),
-]
-
-
-def _call(name: str, reason: str, rights: str) -> str:
-    quoted = ", ".join("'" + text.replace("'", "''") + "'" for text in (name, reason, rights))
-    return f"SELECT exempt_table({quoted})"
+    ("axes_accessattemptexpiration", "when a lock-out ends", _ALL),
+    ("axes_accessfailurelog", "failures to sign in; a stranger could fill the trail with them", _ALL),
+    ("axes_accesslog", "not used: sign-ins are not logged here", _ALL),
+)
 
 
 class Migration(migrations.Migration):
-    dependencies = [
+    dependencies = (
         ("records", "0002_the_door"),
-        ("auth", "0012_alter_user_first_name_max_length"),
         ("contenttypes", "0002_remove_content_type_name"),
+        ("auth", "0012_alter_user_first_name_max_length"),
         ("sessions", "0001_initial"),
         ("axes", "0010_accessattemptexpiration"),
-    ]
-
-    operations = [migrations.RunSQL(_call(*exempt), migrations.RunSQL.noop) for exempt in EXEMPT]
+    )
+    operations = tuple(
+        migrations.RunSQL(f"SELECT exempt_table('{table}', '{reason}', '{rights}')", migrations.RunSQL.noop)
+        for table, reason, rights in _EXEMPT
+    )
