@@ -9,6 +9,7 @@ import fcntl
 import hashlib
 import json
 import os
+import platform
 import shutil
 import subprocess
 import sys
@@ -26,6 +27,8 @@ _MISLEADING = (
     "PYTHONUSERBASE", "PYTHONSTARTUP", "UV_TARGET", "UV_PREFIX", "UV_SYSTEM_PYTHON", "UV_PYTHON",
     "VIRTUAL_ENV", "__PYVENV_LAUNCHER__", "DJANGO_SETTINGS_MODULE",
 )  # fmt: skip
+
+_STRICT = ("--require-hashes", "--no-deps", "--only-binary", ":all:", "--requirement")
 
 
 def folder() -> Path:
@@ -99,44 +102,41 @@ def _make(wanted: str) -> None:
     place, packages = folder(), _count(ROOT / LOCKS[wanted])
     if place.exists() and not (_stamp().exists() or _mark().exists()) and any(place.iterdir()):
         raise Stopped(f"{place} was not made by this program; move it away, then run the same command again.")
-    larger = wanted == "tests" and _fits("run")
-    if not larger:
+    if not (wanted == "tests" and _fits("run")):
         if place.exists():
             say(f"Removing {place}: it is half-made, or made for other packages or another Python")
             shutil.rmtree(place)
         place.mkdir(parents=True)
-        _mark().touch()
-        _make_folder(place)
-    _stamp().unlink(missing_ok=True)
     _mark().touch()
-    say(f"Installing {packages} packages of {LOCKS[wanted]} into {place}; with pip this takes about a minute")
-    _install(ROOT / LOCKS[wanted])
+    _stamp().unlink(missing_ok=True)
+    say(f"Making {place} with {packages} packages of {LOCKS[wanted]} and Python {platform.python_version()}")
+    if not (_uv() and _with_uv(place, LOCKS[wanted])):
+        _with_pip(place, LOCKS[wanted])
     write_stamp(wanted)
     _mark().unlink(missing_ok=True)
 
 
-def _make_folder(place: Path) -> None:
-    if _uv() and _run(
-        "uv", "venv", "--quiet", "--allow-existing", "--seed", "--python", sys.executable, str(place)
+def _with_uv(place: Path, lock: str) -> bool:
+    if not (place / "pyvenv.cfg").exists() and not _run(
+        "uv", "venv", "--quiet", "--allow-existing", "--python", sys.executable, str(place)
     ):
-        say(f"Made {place} with uv and Python {sys.version.split()[0]}")
-        return
-    say(f"Making {place} with venv and Python {sys.version.split()[0]}")
+        say("uv could not make it; trying with venv and pip")
+        return False
+    if _run("uv", "pip", "install", "--quiet", "--python", str(python()), *_STRICT, lock):
+        return True
+    say("uv could not install the packages; trying with venv and pip")
+    return False
+
+
+def _with_pip(place: Path, lock: str) -> None:
+    say("Installing with pip, which takes about a minute")
     if not _run(sys.executable, "-m", "venv", str(place)):
         raise Stopped(
             f"Python's venv could not make {place} (see above); on Debian and Ubuntu the package "
             "python3-venv brings it."
         )
-
-
-def _install(lock: Path) -> None:
-    strict = ("--require-hashes", "--no-deps", "--only-binary", ":all:", "--requirement", str(lock))
-    if _uv():
-        if _run("uv", "pip", "install", "--quiet", "--python", str(python()), *strict):
-            return
-        say("uv could not install them; trying with pip")
-    pip = (str(python()), "-m", "pip", "install", "--quiet", "--disable-pip-version-check", "--no-input")
-    if not _run(*pip, *strict):
+    quiet = ("--quiet", "--disable-pip-version-check", "--no-input")
+    if not _run(str(python()), "-m", "pip", "install", *quiet, *_STRICT, lock):
         raise Stopped(
             "The packages could not be installed (pip says why above). This needs a way to the Python "
             "package index: connect this machine, or name a mirror in PIP_INDEX_URL, then run the same "

@@ -35,8 +35,7 @@ def start(folder: Path, *, log: Path | None = None) -> Broker:
     """
     folder = folder.absolute()
     folder.mkdir(parents=True, exist_ok=True)
-    to = account()
-    place = socket_folder(folder.parent / "run", to) / "valkey.sock"
+    place = _socket(folder)
     noted = folder / "valkey.pid"
     one = processes.read_pid_file(noted)
     if one is None or not _answers(place):
@@ -44,12 +43,21 @@ def start(folder: Path, *, log: Path | None = None) -> Broker:
             _end(one)
         one = _launch(folder, place, log or folder / "valkey.log")
         processes.write_pid_file(noted, one)
-    return Broker(f"redis+socket://{place}", place, one)
+    return Broker(address(folder), place, one)
+
+
+def address(folder: Path) -> str:
+    """Return the address of the broker of this folder for Celery, running or not."""
+    return f"redis+socket://{_socket(folder.absolute())}"
 
 
 def stop(broker: Broker) -> None:
     """Stop the broker. What it held is forgotten; the sweeper finds unfinished work in the database."""
     _end(broker.process)
+
+
+def _socket(folder: Path) -> Path:
+    return socket_folder(folder.parent / "run", account()) / "valkey.sock"
 
 
 def _launch(folder: Path, place: Path, log: Path) -> processes.Identity:

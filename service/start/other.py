@@ -4,7 +4,7 @@ import os
 from pathlib import Path
 
 from service.bootstrap.speech import complain, say
-from service.embedded import postgres
+from service.embedded import postgres, valkey
 from service.embedded.stopped import Stopped
 from service.roles import DATABASE, SERVICE
 from service.start.data_folder import DataFolder, default_path
@@ -38,8 +38,7 @@ def run_django(arguments: list[str]) -> int:
 
 
 def _with(folder: DataFolder, cluster: postgres.Cluster, arguments: list[str]) -> int:
-    broker = f"redis+socket://{cluster.socket_dir / 'valkey.sock'}"
-    os.environ.update(folder.environment(cluster, broker, owner=True))
+    os.environ.update(folder.environment(cluster, valkey.address(folder.valkey), owner=True))
     if arguments[0] in _OWNERS_WORK and not any(word.startswith("--database") for word in arguments):
         arguments = [*arguments, "--database", "owner"]
     return _execute(arguments)
