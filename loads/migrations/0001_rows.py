@@ -1,9 +1,8 @@
 """The tables of the loads room."""
 
-import django.db.models.deletion
-import django.db.models.expressions
 from django.conf import settings
 from django.db import migrations, models
+from django.db.models import PROTECT
 
 
 class Migration(migrations.Migration):
@@ -11,7 +10,7 @@ class Migration(migrations.Migration):
 
     dependencies = [
         ("fleet", "0004_guards"),
-        ("records", "0002_the_door"),
+        ("records", "0003_documents_and_outbox"),
         migrations.swappable_dependency(settings.AUTH_USER_MODEL),
     ]
 
@@ -37,32 +36,18 @@ class Migration(migrations.Migration):
                 ("destination", models.CharField(max_length=80)),
                 ("operation", models.CharField(max_length=80)),
                 ("submitted_at", models.DateTimeField()),
-                (
-                    "aircraft",
-                    models.ForeignKey(
-                        on_delete=django.db.models.deletion.PROTECT, related_name="loads", to="fleet.aircraft"
-                    ),
-                ),
-                (
-                    "operator",
-                    models.ForeignKey(on_delete=django.db.models.deletion.PROTECT, to="fleet.operator"),
-                ),
+                ("aircraft", models.ForeignKey(on_delete=PROTECT, related_name="loads", to="fleet.aircraft")),
+                ("operator", models.ForeignKey(on_delete=PROTECT, to="fleet.operator")),
                 (
                     "pilot",
                     models.ForeignKey(
-                        null=True,
-                        on_delete=django.db.models.deletion.PROTECT,
-                        related_name="+",
-                        to=settings.AUTH_USER_MODEL,
+                        null=True, on_delete=PROTECT, related_name="+", to=settings.AUTH_USER_MODEL
                     ),
                 ),
                 (
                     "replaces",
                     models.OneToOneField(
-                        null=True,
-                        on_delete=django.db.models.deletion.PROTECT,
-                        related_name="replaced_by",
-                        to="loads.load",
+                        null=True, on_delete=PROTECT, related_name="replaced_by", to="loads.load"
                     ),
                 ),
             ],
@@ -77,7 +62,7 @@ class Migration(migrations.Migration):
             options={
                 "constraints": [
                     models.UniqueConstraint(fields=("before", "after"), name="allowed_step_is_listed_once")
-                ],
+                ]
             },
         ),
         migrations.CreateModel(
@@ -86,7 +71,7 @@ class Migration(migrations.Migration):
                 (
                     "load",
                     models.OneToOneField(
-                        on_delete=django.db.models.deletion.PROTECT,
+                        on_delete=PROTECT,
                         primary_key=True,
                         related_name="paper",
                         serialize=False,
@@ -96,10 +81,7 @@ class Migration(migrations.Migration):
                 ("number", models.PositiveIntegerField()),
                 ("previous", models.PositiveIntegerField(null=True)),
                 ("act", models.UUIDField()),
-                (
-                    "operator",
-                    models.ForeignKey(on_delete=django.db.models.deletion.PROTECT, to="fleet.operator"),
-                ),
+                ("operator", models.ForeignKey(on_delete=PROTECT, to="fleet.operator")),
             ],
         ),
         migrations.CreateModel(
@@ -120,30 +102,10 @@ class Migration(migrations.Migration):
                 ("digest", models.CharField(max_length=64)),
                 ("engine", models.CharField(max_length=20)),
                 ("assessed_at", models.DateTimeField()),
-                (
-                    "empty_weight",
-                    models.ForeignKey(
-                        null=True, on_delete=django.db.models.deletion.PROTECT, to="fleet.emptyweight"
-                    ),
-                ),
-                (
-                    "loading_basis",
-                    models.ForeignKey(
-                        null=True, on_delete=django.db.models.deletion.PROTECT, to="fleet.loadingbasis"
-                    ),
-                ),
-                (
-                    "operator",
-                    models.ForeignKey(on_delete=django.db.models.deletion.PROTECT, to="fleet.operator"),
-                ),
-                (
-                    "load",
-                    models.ForeignKey(
-                        on_delete=django.db.models.deletion.PROTECT,
-                        related_name="assessments",
-                        to="loads.load",
-                    ),
-                ),
+                ("empty_weight", models.ForeignKey(null=True, on_delete=PROTECT, to="fleet.emptyweight")),
+                ("loading_basis", models.ForeignKey(null=True, on_delete=PROTECT, to="fleet.loadingbasis")),
+                ("operator", models.ForeignKey(on_delete=PROTECT, to="fleet.operator")),
+                ("load", models.ForeignKey(on_delete=PROTECT, related_name="assessments", to="loads.load")),
             ],
         ),
         migrations.CreateModel(
@@ -178,26 +140,10 @@ class Migration(migrations.Migration):
                         output_field=models.BigIntegerField(null=True),
                     ),
                 ),
-                (
-                    "assessment",
-                    models.ForeignKey(on_delete=django.db.models.deletion.PROTECT, to="loads.assessment"),
-                ),
-                (
-                    "load",
-                    models.ForeignKey(
-                        on_delete=django.db.models.deletion.PROTECT, related_name="steps", to="loads.load"
-                    ),
-                ),
-                (
-                    "operator",
-                    models.ForeignKey(on_delete=django.db.models.deletion.PROTECT, to="fleet.operator"),
-                ),
-                (
-                    "person",
-                    models.ForeignKey(
-                        null=True, on_delete=django.db.models.deletion.PROTECT, to=settings.AUTH_USER_MODEL
-                    ),
-                ),
+                ("assessment", models.ForeignKey(on_delete=PROTECT, to="loads.assessment")),
+                ("load", models.ForeignKey(on_delete=PROTECT, related_name="steps", to="loads.load")),
+                ("operator", models.ForeignKey(on_delete=PROTECT, to="fleet.operator")),
+                ("person", models.ForeignKey(null=True, on_delete=PROTECT, to=settings.AUTH_USER_MODEL)),
             ],
         ),
         migrations.CreateModel(
@@ -229,29 +175,11 @@ class Migration(migrations.Migration):
                         output_field=models.CharField(max_length=12),
                     ),
                 ),
-                (
-                    "assessment",
-                    models.ForeignKey(on_delete=django.db.models.deletion.PROTECT, to="loads.assessment"),
-                ),
-                (
-                    "load",
-                    models.ForeignKey(
-                        on_delete=django.db.models.deletion.PROTECT,
-                        related_name="signatures",
-                        to="loads.load",
-                    ),
-                ),
-                (
-                    "operator",
-                    models.ForeignKey(on_delete=django.db.models.deletion.PROTECT, to="fleet.operator"),
-                ),
-                (
-                    "person",
-                    models.ForeignKey(
-                        on_delete=django.db.models.deletion.PROTECT, to=settings.AUTH_USER_MODEL
-                    ),
-                ),
-                ("step", models.OneToOneField(on_delete=django.db.models.deletion.PROTECT, to="loads.step")),
+                ("assessment", models.ForeignKey(on_delete=PROTECT, to="loads.assessment")),
+                ("load", models.ForeignKey(on_delete=PROTECT, related_name="signatures", to="loads.load")),
+                ("operator", models.ForeignKey(on_delete=PROTECT, to="fleet.operator")),
+                ("person", models.ForeignKey(on_delete=PROTECT, to=settings.AUTH_USER_MODEL)),
+                ("step", models.OneToOneField(on_delete=PROTECT, to="loads.step")),
             ],
         ),
         migrations.CreateModel(
@@ -260,7 +188,7 @@ class Migration(migrations.Migration):
                 (
                     "load",
                     models.OneToOneField(
-                        on_delete=django.db.models.deletion.PROTECT,
+                        on_delete=PROTECT,
                         primary_key=True,
                         related_name="declaration",
                         serialize=False,
@@ -269,10 +197,7 @@ class Migration(migrations.Migration):
                 ),
                 ("body", models.BinaryField()),
                 ("salt", models.BinaryField()),
-                (
-                    "operator",
-                    models.ForeignKey(on_delete=django.db.models.deletion.PROTECT, to="fleet.operator"),
-                ),
+                ("operator", models.ForeignKey(on_delete=PROTECT, to="fleet.operator")),
             ],
         ),
         migrations.CreateModel(
@@ -281,215 +206,16 @@ class Migration(migrations.Migration):
                 (
                     "paper",
                     models.OneToOneField(
-                        on_delete=django.db.models.deletion.PROTECT,
+                        on_delete=PROTECT,
                         primary_key=True,
                         related_name="filed",
                         serialize=False,
                         to="loads.paper",
                     ),
                 ),
+                ("operator", models.ForeignKey(on_delete=PROTECT, to="fleet.operator")),
+                ("document", models.ForeignKey(on_delete=PROTECT, to="records.document")),
                 ("filed_at", models.DateTimeField()),
             ],
-        ),
-        migrations.AddIndex(
-            model_name="load",
-            index=models.Index(fields=["operator", "departure", "id"], name="load_by_departure"),
-        ),
-        migrations.AddConstraint(
-            model_name="load",
-            constraint=models.UniqueConstraint(fields=("id", "operator"), name="load_is_of_one_operator"),
-        ),
-        migrations.AddConstraint(
-            model_name="load",
-            constraint=models.UniqueConstraint(fields=("id", "pilot"), name="load_has_one_pilot"),
-        ),
-        migrations.AddConstraint(
-            model_name="load",
-            constraint=models.CheckConstraint(
-                condition=models.Q(("replaces", models.F("id")), _negated=True),
-                name="load_does_not_replace_itself",
-            ),
-        ),
-        migrations.AddConstraint(
-            model_name="assessment",
-            constraint=models.UniqueConstraint(
-                fields=("load", "number"), name="assessment_number_is_taken_once"
-            ),
-        ),
-        migrations.AddConstraint(
-            model_name="assessment",
-            constraint=models.UniqueConstraint(
-                fields=("id", "load", "operator"), name="assessment_is_of_one_load"
-            ),
-        ),
-        migrations.AddConstraint(
-            model_name="assessment",
-            constraint=models.UniqueConstraint(
-                fields=("id", "load", "digest", "verdict"), name="assessment_can_be_signed"
-            ),
-        ),
-        migrations.AddConstraint(
-            model_name="assessment",
-            constraint=models.CheckConstraint(
-                condition=models.Q(("verdict__in", ["within", "outside", "unresolved"])),
-                name="assessment_verdict_is_known",
-            ),
-        ),
-        migrations.AddConstraint(
-            model_name="assessment",
-            constraint=models.CheckConstraint(
-                condition=models.Q(
-                    models.Q(("verdict__in", ["within", "outside"]), _negated=True),
-                    models.Q(("empty_weight__isnull", False), ("loading_basis__isnull", False)),
-                    _connector="OR",
-                ),
-                name="assessment_without_its_versions_is_unresolved",
-            ),
-        ),
-        migrations.AddConstraint(
-            model_name="assessment",
-            constraint=models.CheckConstraint(
-                condition=models.Q(("digest__regex", "^[0-9a-f]{64}$")), name="assessment_digest_is_a_digest"
-            ),
-        ),
-        migrations.AddConstraint(
-            model_name="step",
-            constraint=models.UniqueConstraint(fields=("load", "number"), name="step_number_is_taken_once"),
-        ),
-        migrations.AddConstraint(
-            model_name="step",
-            constraint=models.UniqueConstraint(
-                fields=("load", "number", "after"), name="step_can_be_followed"
-            ),
-        ),
-        migrations.AddConstraint(
-            model_name="step",
-            constraint=models.UniqueConstraint(
-                fields=("load", "number", "assessment"), name="step_has_one_assessment"
-            ),
-        ),
-        migrations.AddConstraint(
-            model_name="step",
-            constraint=models.UniqueConstraint(
-                fields=("id", "load", "assessment", "person", "operator", "after"), name="step_can_be_signed"
-            ),
-        ),
-        migrations.AddConstraint(
-            model_name="step",
-            constraint=models.UniqueConstraint(
-                condition=models.Q(("after", "open")),
-                fields=("assessment",),
-                name="step_brings_an_assessment_once",
-            ),
-        ),
-        migrations.AddConstraint(
-            model_name="step",
-            constraint=models.CheckConstraint(
-                condition=models.Q(
-                    models.Q(("after", "open"), ("before", ""), ("number", 1), ("previous__isnull", True)),
-                    models.Q(
-                        ("number__gt", 1),
-                        (
-                            "previous",
-                            django.db.models.expressions.CombinedExpression(
-                                models.F("number"), "-", models.Value(1)
-                            ),
-                        ),
-                    ),
-                    _connector="OR",
-                ),
-                name="step_follows_the_one_before",
-            ),
-        ),
-        migrations.AddConstraint(
-            model_name="step",
-            constraint=models.CheckConstraint(
-                condition=models.Q(
-                    models.Q(("after__in", ["prepared", "loaded", "accepted"]), _negated=True),
-                    ("person__isnull", False),
-                    _connector="OR",
-                ),
-                name="step_that_is_signed_has_a_person",
-            ),
-        ),
-        migrations.AddConstraint(
-            model_name="step",
-            constraint=models.CheckConstraint(
-                condition=models.Q(
-                    models.Q(("after", "withdrawn"), _negated=True),
-                    models.Q(("reason", ""), _negated=True),
-                    _connector="OR",
-                ),
-                name="step_of_withdrawal_has_a_reason",
-            ),
-        ),
-        migrations.AddConstraint(
-            model_name="step",
-            constraint=models.CheckConstraint(
-                condition=models.Q(
-                    models.Q(("after", "departed"), ("departed_at__isnull", False)),
-                    models.Q(models.Q(("after", "departed"), _negated=True), ("departed_at__isnull", True)),
-                    _connector="OR",
-                ),
-                name="step_of_departure_has_a_time",
-            ),
-        ),
-        migrations.AddConstraint(
-            model_name="signature",
-            constraint=models.CheckConstraint(
-                condition=models.Q(("meaning__in", ["prepared", "loaded", "accepted"])),
-                name="signature_meaning_is_known",
-            ),
-        ),
-        migrations.AddConstraint(
-            model_name="signature",
-            constraint=models.CheckConstraint(
-                condition=models.Q(("means__in", ["session", "token"])), name="signature_means_is_known"
-            ),
-        ),
-        migrations.AddConstraint(
-            model_name="signature",
-            constraint=models.CheckConstraint(
-                condition=models.Q(("statement", ""), _negated=True), name="signature_says_what_was_signed"
-            ),
-        ),
-        migrations.AddField(
-            model_name="filedpaper",
-            name="document",
-            field=models.ForeignKey(on_delete=django.db.models.deletion.PROTECT, to="records.document"),
-        ),
-        migrations.AddField(
-            model_name="filedpaper",
-            name="operator",
-            field=models.ForeignKey(on_delete=django.db.models.deletion.PROTECT, to="fleet.operator"),
-        ),
-        migrations.AddConstraint(
-            model_name="paper",
-            constraint=models.UniqueConstraint(
-                fields=("operator", "number"), name="paper_number_is_taken_once"
-            ),
-        ),
-        migrations.AddConstraint(
-            model_name="paper",
-            constraint=models.UniqueConstraint(fields=("load", "operator"), name="paper_is_of_one_operator"),
-        ),
-        migrations.AddConstraint(
-            model_name="paper",
-            constraint=models.CheckConstraint(
-                condition=models.Q(
-                    models.Q(("number", 1), ("previous__isnull", True)),
-                    models.Q(
-                        ("number__gt", 1),
-                        (
-                            "previous",
-                            django.db.models.expressions.CombinedExpression(
-                                models.F("number"), "-", models.Value(1)
-                            ),
-                        ),
-                    ),
-                    _connector="OR",
-                ),
-                name="paper_numbers_have_no_gaps",
-            ),
         ),
     ]

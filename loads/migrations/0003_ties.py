@@ -8,7 +8,7 @@ _HERE = Path(__file__).resolve().parent
 
 
 class Migration(migrations.Migration):
-    dependencies = [("loads", "0001_rows")]
+    dependencies = [("loads", "0002_what_holds")]
 
     operations = [
         migrations.RunSQL(

@@ -16,7 +16,7 @@ _EXEMPT = "'loads_allowedstep', 'a fixed list of pairs of states, written by mig
 
 
 class Migration(migrations.Migration):
-    dependencies = [("loads", "0002_ties"), ("records", "0002_the_door")]
+    dependencies = [("loads", "0003_ties"), ("records", "0002_the_door")]
 
     operations = [
         *(migrations.RunSQL(f"SELECT guard_table({guard})", migrations.RunSQL.noop) for guard in GUARDS),

@@ -1,0 +1,161 @@
+"""Signing: what preparing and accepting share. Every refusal here leaves no row."""
+
+import secrets
+from dataclasses import dataclass
+from typing import Literal
+from uuid import UUID
+
+from loads import lifecycle
+from loads.actions.keeping import SALT_BYTES
+from loads.actions.stepping import load_as_seen, take_step
+from loads.models import Signature, Step
+from loads.queries.computation import versions_of
+from loads.queries.current import Current, declared_in
+from loads.queries.stale import stale_parts
+from loads.statement import signing_text, statement
+from records.act import Entry
+from records.actor import Actor
+from records.canonical import digest
+from records.kind import Kind
+from records.refusal import NotAllowed, StepRefused
+from records.strict_json import JSON
+
+Meaning = Literal["prepared", "accepted"]
+LONGEST_ADDRESS = 60
+
+
+@dataclass(frozen=True, slots=True)
+class Signing:
+    """What a signer sends: the digest that was shown, and where it was sent from.
+
+    Make one only after `fleet.actions.confirm_password` found the password right, which must happen before
+    the act.
+    """
+
+    digest: str
+    signed_from: str
+
+
+def refuse_unless_signer(kind: Kind, by: Actor) -> None:
+    """This function will do nothing when the actor is a person who may sign so; raises NotAllowed.
+
+    Ask it before the password, so that nobody without the duty can try passwords here.
+    """
+    if by.person is None or kind.name not in by.may:
+        raise NotAllowed(
+            "signature-not-allowed",
+            f"{by.key} ({by.capacity}) may not sign here.",
+            next_step="A person who holds the duty signs; a token needs the scope sign.",
+        )
+
+
+def sign(
+    entry: Entry, load: UUID, meaning: Meaning, signing: Signing, *, seen: str, by: Actor
+) -> tuple[Current, Step]:
+    """This function will write the step and the signature under it; returns where the load stood, and the
+    step.
+
+    Raises NotKnown, PreconditionFailed, StepRefused.
+    """
+    current = load_as_seen(entry, load, seen, meaning)
+    declared = declared_in(current.load)
+    _refuse_other_hands(current, meaning, by)
+    _refuse_what_cannot_be_signed(entry, current, signing, declared)
+    step = take_step(entry, current, meaning, by=by)
+    Signature.objects.create(
+        operator_id=entry.chain,
+        load=current.load,
+        assessment=current.assessment,
+        step=step,
+        person_id=by.person,
+        meaning=meaning,
+        capacity=lifecycle.step(current.state, meaning).signed_by or by.capacity,
+        statement=signing_text(meaning, current.assessment.digest),
+        digest=signing.digest,
+        name=by.name.encode(),
+        salt=secrets.token_bytes(SALT_BYTES),
+        signed_at=entry.at,
+        signed_from=signing.signed_from[:LONGEST_ADDRESS],
+        means="token" if by.kind == "token" else "session",
+    )
+    return current, step
+
+
+def _refuse_other_hands(current: Current, meaning: Meaning, by: Actor) -> None:
+    load = current.load
+    if meaning != "accepted":
+        return
+    if load.pilot_id is None:
+        raise StepRefused(
+            "no-pilot-in-command",
+            "The load names no login for its pilot in command, so nobody can accept it.",
+            next_step="Revise the load and name the pilot's login in crew.",
+        )
+    if load.pilot_id != by.person:
+        raise StepRefused(
+            "not-pilot-in-command",
+            "Only the pilot in command of this load accepts it.",
+            next_step="Let that pilot sign, or revise the load if another pilot flies.",
+        )
+    prepared = load.steps.filter(after="prepared", assessment=current.assessment, person_id=by.person)
+    if not load.operator.prepare_and_accept_by_one and prepared.exists():
+        raise StepRefused(
+            "second-person-needed",
+            "This operator asks that somebody else prepares the load.",
+            next_step="Let somebody else prepare it.",
+        )
+
+
+def _refuse_what_cannot_be_signed(
+    entry: Entry, current: Current, signing: Signing, declared: dict[str, JSON]
+) -> None:
+    used = current.assessment
+    if signing.digest != used.digest:
+        raise StepRefused(
+            "digest-differs",
+            "What was shown is not what would be signed.",
+            next_step="Read the load again and sign the digest it shows now.",
+        )
+    if used.verdict != "within":
+        raise StepRefused(
+            "not-within",
+            f"The verdict is {used.verdict}; only a load that is within every limit can be signed.",
+            next_step="See the checks, and revise the load.",
+        )
+    if changed := stale_parts(current, entry.at):
+        raise StepRefused(
+            "stale",
+            f"Changed since it was assessed: {', '.join(changed)}.",
+            next_step="Have it assessed again, look at the result, and sign that.",
+        )
+    if not current.load.operator.estimates_may_be_signed and _estimated(declared):
+        raise StepRefused(
+            "estimated-weights",
+            "The weight of a person is estimated, and this operator's procedure has no estimates of people.",
+            next_step="Weigh or ask, and revise the load.",
+        )
+    if digest_of_stored(current, declared) != used.digest:
+        raise StepRefused(
+            "record-altered",
+            "What is stored no longer gives the digest it was kept under.",
+            next_step="Do not fly on it. Tell whoever keeps the records, and verify the trail.",
+        )
+
+
+def digest_of_stored(current: Current, declared: dict[str, JSON]) -> str:
+    """This function will return the digest of the statement made again from what is stored now."""
+    used = current.assessment
+    versions = versions_of(used.loading_basis, used.empty_weight)
+    return digest(statement(declared, versions, used.engine, current.result()))
+
+
+def _estimated(declared: dict[str, JSON]) -> bool:
+    for group in ("crew", "passengers"):
+        lines = declared.get(group)
+        for line in lines if isinstance(lines, list) else []:
+            infant = line.get("lap_infant") if isinstance(line, dict) else None
+            if isinstance(line, dict) and line.get("how") == "estimated":
+                return True
+            if isinstance(infant, dict) and infant.get("how") == "estimated":
+                return True
+    return False

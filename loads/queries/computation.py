@@ -1,0 +1,77 @@
+"""Computing a load against what is in force: nothing is stored here, so the same sum serves every way in."""
+
+from dataclasses import dataclass
+from datetime import datetime
+
+from fleet.models import Aircraft, EmptyWeight, LoadingBasis
+from fleet.queries.aircraft import aircraft_of
+from fleet.queries.figures import basis_of, figures_of
+from fleet.queries.in_force import in_force_for
+from loads.balance.aboard import Outline
+from loads.balance.assess import assess
+from loads.balance.declared import read_load, read_outline
+from loads.balance.engine import ENGINE_VERSION
+from loads.balance.shape import check_shape
+from loads.queries.crew import pilot_in
+from loads.statement import statement
+from records.canonical import digest
+from records.refusal import Fault, Invalid, NotKnown
+from records.strict_json import JSON
+
+
+@dataclass(frozen=True, slots=True)
+class Computation:
+    """A load document, what it was computed with, and what came out.
+
+    `digest` is that of the statement: schema, inputs as typed, versions, engine and result.
+    """
+
+    document: dict[str, JSON]
+    outline: Outline
+    aircraft: Aircraft
+    pilot: int | None
+    basis: LoadingBasis | None
+    empty_weight: EmptyWeight | None
+    result: dict[str, object]
+    digest: str
+
+    @property
+    def verdict(self) -> str:
+        """Within, outside or unresolved."""
+        return str(self.result["verdict"])
+
+
+def compute(operator: str, document: dict[str, JSON], known: datetime) -> Computation:
+    """This function will compute a load document with the versions in force at its departure, as known at
+    `known`.
+
+    Raises Invalid with every fault found; an aircraft the operator has not entered is one.
+    """
+    outline = read_outline(document)
+    try:
+        aircraft = aircraft_of(operator, outline.aircraft)
+    except NotKnown as unknown:
+        raise Invalid(Fault("/aircraft", "unknown-aircraft", unknown.detail)) from unknown
+    used = in_force_for(aircraft, outline.flight.departure, known, outline.configuration)
+    basis = basis_of(used.basis) if used.basis else None
+    if basis is None:
+        check_shape(document)
+    declared = read_load(document, basis) if basis else outline
+    pilot = pilot_in(operator, document)
+    empty = figures_of(used.empty_weight, basis) if used.empty_weight and basis else None
+    result = assess(declared, basis, empty).as_document()
+    versions = versions_of(used.basis, used.empty_weight)
+    signed = statement(document, versions, ENGINE_VERSION, result)
+    return Computation(
+        document, outline, aircraft, pilot, used.basis, used.empty_weight, result, digest(signed)
+    )
+
+
+def versions_of(basis: LoadingBasis | None, empty_weight: EmptyWeight | None) -> dict[str, object]:
+    """This function will return ids and digests of the versions used, as the statement holds them; None if
+    none was.
+    """
+    return {
+        "loading_basis": {"id": str(basis.id), "digest": basis.digest} if basis else None,
+        "empty_weight": {"id": str(empty_weight.id), "digest": empty_weight.digest} if empty_weight else None,
+    }

@@ -1,0 +1,25 @@
+"""Whether what an assessment rests on still is what is in force."""
+
+from datetime import datetime
+
+from fleet.queries.in_force import in_force_for
+from loads.balance.engine import ENGINE_VERSION
+from loads.queries.current import Current
+
+
+def stale_parts(current: Current, known: datetime) -> tuple[str, ...]:
+    """This function will name what changed since the assessment: "loading basis", "empty weight", "engine".
+
+    Compared are the versions in force at the planned departure, as known at `known`, with those it used;
+    empty when nothing changed.
+    """
+    load, used = current.load, current.assessment
+    now = in_force_for(load.aircraft, load.departure, known, load.configuration)
+    changed = []
+    if (now.basis.id if now.basis else None) != used.loading_basis_id:
+        changed.append("loading basis")
+    if (now.empty_weight.id if now.empty_weight else None) != used.empty_weight_id:
+        changed.append("empty weight")
+    if used.engine != ENGINE_VERSION:
+        changed.append("engine")
+    return tuple(changed)
