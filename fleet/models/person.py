@@ -21,7 +21,7 @@ class Person(AbstractBaseUser):
     """A person. `login` (lower case) and `name` are personal: the trail holds salted digests of them only."""
 
     # A sign-in is not a change of a business row, so there is nothing to keep here.
-    last_login = None  # type: ignore[assignment]  # Django's own way to drop the inherited column
+    last_login = None  # Django's own way to drop the inherited column
 
     id = models.BigAutoField(primary_key=True)
     operator = models.ForeignKey(Operator, on_delete=models.PROTECT, related_name="people")
@@ -47,7 +47,7 @@ class Person(AbstractBaseUser):
     def __str__(self) -> str:
         return f"person:{self.pk}"  # never the name: this lands in logs
 
-    def check_password(self, raw_password: str) -> bool:
+    def check_password(self, raw_password: str | None) -> bool:
         """This function will say whether this is the person's password, and change nothing.
 
         Django's own would save a stronger hash in passing, which the database refuses outside an act;

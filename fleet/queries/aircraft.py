@@ -1,0 +1,47 @@
+"""Aircraft of one operator. Another operator's aircraft does not exist here."""
+
+from uuid import UUID
+
+from fleet.models import Aircraft, EmptyWeight, LoadingBasis
+from records.refusal import NotKnown
+
+
+def aircraft_of(operator: str, registration: str) -> Aircraft:
+    """This function will return the operator's aircraft with that registration; raises NotKnown."""
+    found = Aircraft.objects.filter(operator_id=operator, registration=registration.upper()).first()
+    if found is None:
+        raise NotKnown("aircraft-not-known", f"No aircraft {registration[:20]} is entered.")
+    return found
+
+
+def all_aircraft(operator: str) -> tuple[Aircraft, ...]:
+    """This function will return the operator's aircraft by registration."""
+    return tuple(Aircraft.objects.filter(operator_id=operator).order_by("registration"))
+
+
+def loading_basis_of(aircraft: Aircraft, version: UUID) -> LoadingBasis:
+    """This function will return one loading basis of the aircraft, approved or not; raises NotKnown."""
+    found = (
+        LoadingBasis.objects.filter(aircraft=aircraft, id=version)
+        .select_related("entered_by", "approval__approved_by")
+        .first()
+    )
+    if found is None:
+        raise NotKnown(
+            "loading-basis-not-known", f"{aircraft.registration} has no loading basis of this number."
+        )
+    return found
+
+
+def empty_weight_of(aircraft: Aircraft, version: UUID) -> EmptyWeight:
+    """This function will return one empty weight of the aircraft, approved or not; raises NotKnown."""
+    found = (
+        EmptyWeight.objects.filter(aircraft=aircraft, id=version)
+        .select_related("entered_by", "approval__approved_by")
+        .first()
+    )
+    if found is None:
+        raise NotKnown(
+            "empty-weight-not-known", f"{aircraft.registration} has no empty weight of this number."
+        )
+    return found
