@@ -52,7 +52,7 @@ def _failures(basis: Basis, sample: SampleLoad) -> list[SampleFailure]:
             SampleFailure(
                 sample.name,
                 "sample-weight",
-                f"weights add up to {float(weight):g} {unit}; it prints {float(sample.total_weight):g}",
+                f"weights add up to {float(weight):g} {unit}; printed is {float(sample.total_weight):g}",
             )
         )
     if abs(moment - sample.total_moment) > sample.tolerance_moment:
