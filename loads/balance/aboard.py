@@ -1,0 +1,131 @@
+"""What was declared for one flight, as frozen values: exact rationals in the units of the loading basis.
+
+Weights in the basis's weight unit, volumes in its volume unit, density in weight unit per volume unit.
+`pointer` is the JSON pointer of the line in the document `tarebook.load/1`.
+"""
+
+from dataclasses import dataclass
+from datetime import datetime
+from fractions import Fraction
+from typing import Literal
+
+from fleet.basis import Configuration, Place, Seat, Tank
+
+How = Literal["weighed", "declared", "standard", "estimated"]
+HOWS: tuple[How, ...] = ("weighed", "declared", "standard", "estimated")
+Kind = Literal["baggage", "cargo", "ballast", "equipment", "consumable"]
+KINDS: tuple[Kind, ...] = ("baggage", "cargo", "ballast", "equipment", "consumable")
+LimitedPhase = Literal["take-off", "landing"]
+PILOT_IN_COMMAND = "pilot in command"
+
+
+@dataclass(frozen=True, slots=True)
+class Flight:
+    """Which flight it is; `departure` carries its offset from UTC."""
+
+    reference: str
+    leg: int
+    departure: datetime
+    origin: str
+    destination: str
+    operation: str
+
+
+@dataclass(frozen=True, slots=True)
+class Outline:
+    """What is needed of a load before a basis is known: registration, configuration id, flight."""
+
+    aircraft: str
+    configuration: str
+    flight: Flight
+
+
+@dataclass(frozen=True, slots=True)
+class LapInfant:
+    """An infant on the lap of the person in a seat; a weight of None adds nothing (the adult's is a standard
+    one).
+    """
+
+    name: str
+    weight: Fraction | None
+    how: How | None
+    pointer: str
+
+
+@dataclass(frozen=True, slots=True)
+class Person:
+    """Somebody in a seat. A weight of None is not known: `how` is then `standard`, and no table was
+    applied.
+    """
+
+    name: str
+    role: Literal["crew", "passenger"]
+    position: str | None
+    login: str | None
+    category: str | None
+    seat: Seat
+    weight: Fraction | None
+    how: How
+    lap_infant: LapInfant | None
+    pointer: str
+
+
+@dataclass(frozen=True, slots=True)
+class Item:
+    """A thing in a place. `removed`: equipment of the empty weight that is not aboard; its weight is then
+    negative.
+    """
+
+    kind: Kind
+    what: str
+    place: Place
+    weight: Fraction | None
+    how: How
+    removed: bool
+    pointer: str
+
+
+@dataclass(frozen=True, slots=True)
+class TankFuel:
+    """Fuel in one tank at engine start, by volume: usable, and trapped (weight with no use, at its arm)."""
+
+    tank: Tank
+    usable: Fraction
+    trapped: Fraction
+
+
+@dataclass(frozen=True, slots=True)
+class FuelPlan:
+    """Fuel in the tanks, and what of it is meant to burn; `taxi`, `trip`, `minimum_at_landing` are
+    weights.
+    """
+
+    density: Fraction
+    density_source: str
+    tanks: tuple[TankFuel, ...]
+    taxi: Fraction
+    trip: Fraction
+    minimum_at_landing: Fraction
+
+
+@dataclass(frozen=True, slots=True)
+class StatedLimit:
+    """A limit of this flight with its source, such as one line of a performance sheet; a weight above 0."""
+
+    at: LimitedPhase
+    weight: Fraction
+    source: str
+
+
+@dataclass(frozen=True, slots=True)
+class Declared:
+    """One load as declared, read against one loading basis."""
+
+    outline: Outline
+    configuration: Configuration
+    persons_on_board: int
+    crew: tuple[Person, ...]
+    passengers: tuple[Person, ...]
+    items: tuple[Item, ...]
+    fuel: FuelPlan
+    limits: tuple[StatedLimit, ...]

@@ -1,0 +1,119 @@
+"""Checks of what must be known before a sum means anything: the standing records, every weight, the count of
+people.
+"""
+
+from fleet.basis import Basis
+from fleet.weighing import EmptyFigures
+from loads.balance.aboard import Declared
+from loads.balance.fuel import FuelOffTable
+from loads.balance.prepared import Prepared
+from loads.balance.result import Check
+from loads.balance.rounding import VOLUME_PLACES, printed
+
+PATH_SENTENCE = "the path between the phases was not checked"
+
+
+def no_basis() -> Check:
+    """Return the check of an aircraft without a loading basis in force."""
+    return Check(
+        "standing.loading-basis",
+        "loading basis in force",
+        "unresolved",
+        margin_text="no loading basis in force",
+        what_next="Enter and approve a loading basis that holds at the departure, then assess again.",
+    )
+
+
+def empty_weight_check(empty: EmptyFigures | None, basis: Basis, fit: str) -> Check:
+    """Return whether an empty weight is in force that fits: measured from the basis's datum, on this fit."""
+    code, title = "standing.empty-weight", "empty weight in force"
+    if empty is None:
+        why, fix = "no empty weight in force", "Enter and approve an empty weight that holds at the departure"
+    elif empty.datum != basis.datum:
+        why = f"the empty weight is measured from '{empty.datum}', the loading basis from '{basis.datum}'"
+        fix = "Enter the empty weight from the datum of the loading basis"
+    elif empty.fit != fit:
+        why = f"the empty weight is on {empty.fit}, the configuration is flown on {fit}"
+        fix = "Enter the empty weight on the fit of this configuration"
+    else:
+        return Check(code, title, "pass", margin_text=f"{empty.how}, on {empty.fit}")
+    return Check(code, title, "unresolved", margin_text=why, what_next=f"{fix}, then assess again.")
+
+
+def weight_knowledge(declared: Declared) -> list[Check]:
+    """Return the checks that every weight is known, and that no person's is only an estimate.
+
+    Standard weights need an approved table, and none can be entered yet, so each one leaves a load
+    unresolved.
+    """
+    people = (*declared.crew, *declared.passengers)
+    unknown = [person.seat.name for person in people if person.weight is None]
+    unknown += [item.place.name for item in declared.items if item.weight is None]
+    estimated = [person.seat.name for person in people if person.how == "estimated"]
+    estimated += [
+        f"{person.seat.name} (lap infant)"
+        for person in people
+        if person.lap_infant is not None and person.lap_infant.how == "estimated"
+    ]
+    found = [Check("weights.unknown", "every weight is known", "pass", margin_text="all weights are known")]
+    if unknown:
+        where = ", ".join(unknown)
+        found[0] = Check(
+            "weights.unknown",
+            "every weight is known",
+            "unresolved",
+            actual=str(len(unknown)),
+            margin_text=f"standard weights without an approved table: {where}",
+            what_next=f"Weigh or declare: {where}.",
+        )
+    if estimated:
+        where = ", ".join(estimated)
+        found.append(
+            Check(
+                "weights.estimated",
+                "no person's weight is an estimate",
+                "unresolved",
+                actual=str(len(estimated)),
+                margin_text=f"estimated: {where}",
+                what_next=f"Weigh or declare: {where}.",
+            )
+        )
+    return found
+
+
+def persons_check(declared: Declared) -> Check:
+    """Return whether as many people are aboard as the load says: crew, passengers and lap infants."""
+    infants = sum(person.lap_infant is not None for person in declared.passengers)
+    listed = len(declared.crew) + len(declared.passengers) + infants
+    code, title, said = "persons.count", "persons on board", str(declared.persons_on_board)
+    if listed == declared.persons_on_board:
+        return Check(code, title, "pass", None, str(listed), said, said, "persons", "0", "as declared")
+    text = f"{listed} listed, {said} declared"
+    fix = "Count again, and correct the list or the number."
+    return Check(code, title, "fail", None, str(listed), said, said, "persons", None, text, what_next=fix)
+
+
+def off_table_check(off: FuelOffTable, ready: Prepared) -> Check:
+    """Return the check of a tank whose table does not cover what it holds at some phase."""
+    tank = next(one for one in ready.basis.tanks if one.id == off.tank)
+    first, last, volume = (printed(figure, VOLUME_PLACES) for figure in (off.first, off.last, off.volume))
+    text = f"{volume} {ready.volume} at {off.phase} is off the table, which runs from {first} to {last}"
+    fix = f"Change the fuel of {tank.name}, or enter the rest of its table in the loading basis."
+    return Check(
+        f"tank-table.{tank.id}",
+        f"{tank.name}, table of arms",
+        "unresolved",
+        off.phase,
+        volume,
+        last,
+        first,
+        ready.volume,
+        margin_text=text,
+        source=str(tank.source),
+        what_next=fix,
+    )
+
+
+def path_check() -> Check:
+    """Return the line that says openly what is not looked at: the flight between its phases."""
+    return Check("path.between-phases", "the path between the phases", "advisory", margin_text=PATH_SENTENCE)

@@ -1,0 +1,100 @@
+"""Checks of what one seat, place, zone or tank holds. A limit of an empty seat, place or zone has nothing to
+test.
+"""
+
+from collections.abc import Iterable
+from fractions import Fraction
+
+from fleet.basis import Limit
+from loads.balance.aboard import Declared
+from loads.balance.exact import added
+from loads.balance.margins import Figure, Fix, at_most, below, not_entered
+from loads.balance.prepared import Prepared
+from loads.balance.result import Check
+from loads.balance.rounding import VOLUME_PLACES, WEIGHT_PLACES, printed
+
+Held = dict[str, Fraction | None]  # weight by seat or place id; None: not known
+
+
+def held_by(declared: Declared) -> Held:
+    """Return the weight in each seat and place that holds something.
+
+    Equipment that was taken out counts in no place: it was never part of what the place may carry.
+    """
+    known: dict[str, list[Fraction]] = {}
+    unknown: set[str] = set()
+    for person in (*declared.crew, *declared.passengers):
+        infant = person.lap_infant
+        weights = [person.weight, *([infant.weight] if infant and infant.weight is not None else [])]
+        _put(person.seat.id, weights, known, unknown)
+    for item in declared.items:
+        if not item.removed:
+            _put(item.place.id, [item.weight], known, unknown)
+    return {where: None if where in unknown else added(weights) for where, weights in known.items()}
+
+
+def place_checks(held: Held, ready: Prepared) -> list[Check]:
+    """Return the checks of every seat, place and zone that holds something."""
+    found = []
+    for kind, spots in (("seat", ready.basis.seats), ("place", ready.basis.places)):
+        for spot in spots:
+            if spot.id in held:
+                weight = held[spot.id]
+                found.append(_spot(f"{kind}.{spot.id}", spot.name, weight, spot.maximum, ready))
+    for zone in ready.basis.zones:
+        parts = [held[member] for member in zone.members if member in held]
+        if parts:
+            known = [part for part in parts if part is not None]
+            weight = added(known) if len(known) == len(parts) else None
+            found.append(_spot(f"zone.{zone.id}", zone.name, weight, zone.maximum, ready))
+    return found
+
+
+def tank_checks(declared: Declared, ready: Prepared) -> list[Check]:
+    """Return the check of each tank: usable and trapped fuel against its usable capacity."""
+    found = []
+    for fuel in declared.fuel.tanks:
+        tank = fuel.tank
+        volume = fuel.usable + fuel.trapped if fuel.trapped else fuel.usable
+        figure = Figure(f"tank.{tank.id}", tank.name, volume, ready.volume, VOLUME_PLACES, "ramp")
+        found.append(below(figure, tank.capacity, str(tank.source), _drain(ready.volume)))
+    return found
+
+
+def _drain(unit: str) -> Fix:
+    return lambda over: f"Take out at least {printed(over, VOLUME_PLACES, 'up')} {unit}."
+
+
+def _put(
+    where: str, weights: Iterable[Fraction | None], known: dict[str, list[Fraction]], unknown: set[str]
+) -> None:
+    here = known.setdefault(where, [])
+    for weight in weights:
+        if weight is None:
+            unknown.add(where)
+        else:
+            here.append(weight)
+
+
+def _spot(code: str, name: str, weight: Fraction | None, maximum: Limit | None, ready: Prepared) -> Check:
+    unit = ready.weight
+    if weight is not None:
+
+        def fix(over: Fraction) -> str:
+            return f"Move or take off at least {printed(over, WEIGHT_PLACES, 'up')} {unit} from {name}."
+
+        return at_most(Figure(code, name, weight, unit, WEIGHT_PLACES), maximum, fix)
+    if maximum is None:
+        return not_entered(code, name, None, unit, None)
+    source = str(maximum.source)
+    if maximum.value is None:
+        return Check(code, name, "pass", unit=unit, margin_text="no limit", source=source)
+    return Check(
+        code,
+        name,
+        "unresolved",
+        unit=unit,
+        margin_text="a weight here is not known",
+        source=source,
+        what_next=f"Enter the weight of what is in {name}.",
+    )

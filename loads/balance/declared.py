@@ -1,0 +1,156 @@
+"""Reading a load document `tarebook.load/1` against the loading basis it will be assessed with.
+
+Nothing is assumed: what is missing, doubled, out of place or beyond belief is a fault, and all faults of a
+document are returned at once. What may be left out: `limits`, `fuel/not_usable`, a crew member's `person` and
+`category`, and of a passenger `category` and `lap_infant`. Equipment of the empty weight that is not aboard
+is an item of kind `equipment` with `removed: true`; its weight is typed positive and counts as negative.
+"""
+
+from fractions import Fraction
+from typing import cast
+
+from fleet.basis import Basis, Configuration, Place
+from fleet.conversion import in_unit
+from fleet.quantities import Dimension
+from loads.balance.aboard import HOWS, KINDS, Declared, How, Item, Kind, LimitedPhase, StatedLimit
+from loads.balance.fields import Faults, Fields
+from loads.balance.fuelling import read_fuel
+from loads.balance.outline import OPTIONAL, REQUIRED, outline_in, read_outline
+from loads.balance.people import Seating, read_crew, read_passengers
+from records.refusal import Invalid
+
+__all__ = ["read_load", "read_outline"]
+
+ITEM_FIELDS = ("kind", "what", "place", "how")
+ITEM_OPTIONAL = ("weight", "removed")
+LIMIT_FIELDS = ("at", "weight", "source")
+LONGEST_WHAT = 120
+LONGEST_ID = 64
+LONGEST_SOURCE = 200
+MOST_ITEMS = 400
+MOST_LIMITS = 20
+MOST_PERSONS = 1000
+
+
+def read_load(document: object, basis: Basis) -> Declared:
+    """Return the load a document declares, converted once and exactly into the units of the basis.
+
+    Raises `Invalid` with every fault (at most 100), each naming its field by JSON pointer.
+    """
+    faults = Faults()
+    fields = Fields(document, "", faults, REQUIRED, OPTIONAL)
+    outline = outline_in(fields)
+    configuration = _configuration(fields, basis)
+    # Without a configuration seats are still read, against the whole basis: no fault waits for another.
+    seating = Seating(basis, configuration or _everything(basis))
+    crew = read_crew(fields, seating)
+    passengers = read_passengers(fields, seating)
+    items = _items(fields, basis, seating.configuration)
+    fuel = read_fuel(fields, basis)
+    limits = _limits(fields, basis)
+    persons = _persons_on_board(fields)
+    if faults.all():
+        raise Invalid(*faults.all())
+    if outline is None or configuration is None or fuel is None or persons is None:
+        raise AssertionError("a part of the load is missing and no fault was noted")
+    return Declared(outline, configuration, persons, crew, passengers, items, fuel, limits)
+
+
+def _configuration(fields: Fields, basis: Basis) -> Configuration | None:
+    wanted = fields.raw("configuration")
+    found = next((one for one in basis.configurations if one.id == wanted), None)
+    if found is None and isinstance(wanted, str) and wanted:
+        known = ", ".join(one.id for one in basis.configurations)
+        fields.note("configuration", "unknown-configuration", f"no such configuration; the basis has {known}")
+    return found
+
+
+def _everything(basis: Basis) -> Configuration:
+    seats = tuple(seat.id for seat in basis.seats)
+    places = tuple(place.id for place in basis.places)
+    return Configuration("unknown", "unknown", seats, places, 0, basis.fits[0], (), (), basis.limits)
+
+
+def _items(fields: Fields, basis: Basis, configuration: Configuration) -> tuple[Item, ...]:
+    known = {place.id: place for place in basis.places}
+    lines = fields.objects("items", MOST_ITEMS, ITEM_FIELDS, ITEM_OPTIONAL)
+    items = (_item(line, known, configuration, basis) for line in lines)
+    return tuple(item for item in items if item is not None)
+
+
+def _item(line: Fields, known: dict[str, Place], configuration: Configuration, basis: Basis) -> Item | None:
+    kind = cast("Kind | None", line.choice("kind", KINDS))
+    what = line.text("what", LONGEST_WHAT)
+    place = _place(line, known, configuration)
+    how = cast("How | None", line.choice("how", HOWS))
+    removed = line.flag("removed") or False
+    if removed and kind is not None and kind != "equipment":
+        line.note(
+            "removed", "removed-not-equipment", "only equipment of the empty weight can be removed; drop it"
+        )
+    weight = _item_weight(line, how, basis)
+    if kind is None or what is None or place is None or how is None:
+        return None
+    signed = -weight if removed and weight is not None else weight
+    return Item(kind, what, place, signed, how, removed, line.pointer)
+
+
+def _place(line: Fields, known: dict[str, Place], configuration: Configuration) -> Place | None:
+    wanted = line.text("place", LONGEST_ID)
+    if wanted is None:
+        return None
+    has = ", ".join(configuration.places) or "no places"
+    place = known.get(wanted)
+    if place is None:
+        line.note("place", "unknown-place", f"no such place; configuration {configuration.id} has {has}")
+        return None
+    if wanted not in configuration.places:
+        detail = f"not in configuration {configuration.id}, which has {has}; choose one of these"
+        line.note("place", "place-not-in-configuration", detail)
+        return None
+    return place
+
+
+def _item_weight(line: Fields, how: How | None, basis: Basis) -> Fraction | None:
+    if how == "standard":
+        if "weight" in line:
+            detail = "a standard weight comes from a table; leave the weight out, or say how it is known"
+            line.note("weight", "weight-with-standard", detail)
+        return None
+    if "weight" not in line:
+        if how is not None:
+            line.note("weight", "missing", "the weight is missing and none is assumed; state it")
+        return None
+    quantity = line.quantity("weight", Dimension.WEIGHT, zero=False)
+    return None if quantity is None else in_unit(quantity, basis.weight_unit)
+
+
+def _limits(fields: Fields, basis: Basis) -> tuple[StatedLimit, ...]:
+    found = []
+    for line in fields.objects("limits", MOST_LIMITS, LIMIT_FIELDS):
+        at = line.choice("at", ("take-off", "landing"))
+        weight = line.quantity("weight", Dimension.WEIGHT, zero=False)
+        source = line.text("source", LONGEST_SOURCE)
+        if at is not None and weight is not None and source is not None:
+            phase: LimitedPhase = "take-off" if at == "take-off" else "landing"
+            found.append(StatedLimit(phase, in_unit(weight, basis.weight_unit), source))
+    return tuple(found)
+
+
+def _persons_on_board(fields: Fields) -> int | None:
+    """Return the declared count; it must equal the lines: crew, passengers and lap infants, counted as
+    sent.
+    """
+    declared = fields.whole("persons_on_board", 1, MOST_PERSONS)
+    crew, passengers = fields.raw("crew"), fields.raw("passengers")
+    if declared is None or not isinstance(crew, list | tuple) or not isinstance(passengers, list | tuple):
+        return declared
+    infants = sum(isinstance(line, dict) and "lap_infant" in line for line in passengers)
+    listed = len(crew) + len(passengers) + infants
+    if declared != listed:
+        detail = (
+            f"{declared} declared, {listed} listed ({len(crew)} crew, {len(passengers)} passengers, "
+            f"{infants} lap infants); count again and correct the one that is wrong"
+        )
+        fields.note("persons_on_board", "persons-mismatch", detail)
+    return declared

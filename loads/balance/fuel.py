@@ -1,0 +1,131 @@
+"""Fuel along the flight: which tank feeds when, what is left in each tank at each phase, and its moment.
+
+Burned moment is moment before less moment after, so a table that is not straight is used as the manual prints
+it. Tanks of one stage feed equally by volume; one that runs dry leaves the rest feeding equally. Volumes in
+the volume unit of the basis, weights in its weight unit.
+"""
+
+from collections.abc import Mapping
+from dataclasses import dataclass
+from fractions import Fraction
+
+from fleet.basis import BurnStage, Phase
+from fleet.tanks import OutsideTable
+from loads.balance.aboard import FuelPlan
+from loads.balance.exact import added, product, total
+from loads.balance.prepared import Prepared
+
+Contents = Mapping[str, Fraction]  # usable volume by tank id
+NOTHING = Fraction(0)
+
+
+@dataclass(frozen=True, slots=True)
+class FuelState:
+    """Fuel in the tanks at one phase. `usable` and `moments` are by tank; weight and moments count trapped
+    fuel, too.
+    """
+
+    phase: Phase
+    usable: Contents
+    moments: Mapping[str, Fraction]
+    usable_weight: Fraction
+    weight: Fraction
+    moment: Fraction
+    lateral_moment: Fraction
+
+
+class FuelOffTable(Exception):
+    """A tank holds, at some phase, a volume its table does not cover; nothing is extrapolated."""
+
+    def __init__(self, tank: str, phase: Phase, volume: Fraction, first: Fraction, last: Fraction) -> None:
+        super().__init__(f"{tank} at {phase}")
+        self.tank = tank
+        self.phase = phase
+        self.volume = volume
+        self.first = first
+        self.last = last
+
+
+def burn(contents: Contents, order: tuple[BurnStage, ...], volume: Fraction) -> tuple[Contents, Fraction]:
+    """Return what each tank holds after a volume was taken out in the given order, and the volume that was
+    not there.
+    """
+    left = dict(contents)
+    for stage in order:
+        if volume <= 0:
+            break
+        feeding = [tank for tank in stage.tanks if left.get(tank)]
+        while feeding and volume > 0:
+            share = volume / len(feeding) if len(feeding) > 1 else volume
+            least = min(left[tank] for tank in feeding)
+            if share < least:
+                for tank in feeding:
+                    left[tank] -= share
+                volume = NOTHING
+            else:
+                for tank in feeding:
+                    left[tank] -= least
+                volume -= least * len(feeding)
+                feeding = [tank for tank in feeding if left[tank]]
+    return left, volume if volume > 0 else NOTHING
+
+
+def fuel_states(plan: FuelPlan, ready: Prepared) -> dict[Phase, FuelState]:
+    """Return the fuel at each phase. Landing fuel below the minimum leaves that phase as it was at landing.
+
+    At zero fuel what the burn order can feed is gone; trapped fuel, and fuel no stage feeds, stay aboard.
+    Raises `FuelOffTable`.
+    """
+    basis, density = ready.basis, plan.density
+    ramp: Contents = {fuel.tank.id: fuel.usable for fuel in plan.tanks}
+    take_off, _ = burn(ramp, basis.taxi_order, plan.taxi / density)
+    landing, _ = burn(take_off, basis.burn_order, plan.trip / density)
+    spare = added(list(landing.values())) - plan.minimum_at_landing / density
+    least, _ = burn(landing, basis.burn_order, spare)
+    fed = {tank for stage in basis.burn_order for tank in stage.tanks}
+    empty = {tank: NOTHING if tank in fed else held for tank, held in take_off.items()}
+    contents: tuple[tuple[Phase, Contents], ...] = (
+        ("ramp", ramp),
+        ("take-off", take_off),
+        ("zero fuel", empty),
+        ("landing", landing),
+        ("minimum at landing", least),
+    )
+    known: dict[tuple[str, Fraction], Fraction] = {}
+    return {phase: _state(phase, plan, held, ready, known) for phase, held in contents}
+
+
+def _state(
+    phase: Phase,
+    plan: FuelPlan,
+    usable: Contents,
+    ready: Prepared,
+    known: dict[tuple[str, Fraction], Fraction],
+) -> FuelState:
+    density = plan.density
+    moments: dict[str, Fraction] = {}
+    volumes, across = [], []
+    for fuel in plan.tanks:
+        tank = fuel.tank
+        volume = usable[tank.id] + fuel.trapped if fuel.trapped else usable[tank.id]
+        key = (tank.id, volume)
+        moment = known.get(key)
+        if moment is None:
+            curve = ready.curves[tank.id]
+            try:
+                moment = known[key] = curve.moment(volume, density)
+            except OutsideTable as outside:
+                raise FuelOffTable(tank.id, phase, volume, outside.first, outside.last) from None
+        moments[tank.id] = moment
+        volumes.append(volume)
+        if tank.lateral_arm:
+            across.append(product(volume, tank.lateral_arm))
+    return FuelState(
+        phase,
+        usable,
+        moments,
+        added(list(usable.values())) * density,
+        added(volumes) * density,
+        added(list(moments.values())),
+        total(across) * density if across else NOTHING,
+    )

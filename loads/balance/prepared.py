@@ -1,0 +1,92 @@
+"""A loading basis made ready for exact decisions: shapes of envelopes, curves of tanks, words and digits of
+its units.
+"""
+
+from collections import OrderedDict
+from fractions import Fraction
+
+from fleet.basis import PHASES, Axis, Basis, Envelope, Phase
+from fleet.conversion import density_unit
+from fleet.envelope import Shape
+from fleet.tanks import TankCurve
+from loads.balance.rounding import LENGTH_PLACES, MOMENT_PLACES
+
+MOST_KEPT = 64
+
+Bound = tuple[Envelope, Shape]
+
+
+class Prepared:
+    """What is derived from a basis once and used for every load of it. Unchanging once made."""
+
+    __slots__ = (
+        "_bounds",
+        "basis",
+        "curves",
+        "density",
+        "length",
+        "length_places",
+        "moment",
+        "moment_places",
+        "volume",
+        "weight",
+    )
+
+    def __init__(self, basis: Basis) -> None:
+        self.basis = basis
+        self.weight = basis.weight_unit.value
+        self.length = basis.length_unit.value
+        self.volume = basis.volume_unit.value
+        self.moment = f"{self.weight} {self.length}"
+        self.density = density_unit(basis.weight_unit, basis.volume_unit).value
+        self.length_places = LENGTH_PLACES[basis.length_unit]
+        self.moment_places = MOMENT_PLACES[basis.length_unit]
+        self.curves = {
+            tank.id: TankCurve(
+                against=tank.table.against,
+                gives=tank.table.gives,
+                straight_in=tank.table.straight_in,
+                density=tank.table.density,
+                points=tank.table.points,
+            )
+            for tank in basis.tanks
+        }
+        shapes = [(envelope, Shape(envelope.plane, envelope.points)) for envelope in basis.envelopes]
+        axes: tuple[Axis, ...] = ("longitudinal", "lateral")
+        self._bounds = {(axis, phase): _covering(shapes, axis, phase) for axis in axes for phase in PHASES}
+
+    def bounds(self, axis: Axis, phase: Phase) -> tuple[Bound, ...]:
+        """Return the envelopes that hold at a phase; all of them must hold the load. () when there is
+        none.
+        """
+        return self._bounds[axis, phase]
+
+    def chord_percent(self, arm: Fraction) -> Fraction | None:
+        """Return an arm in percent of the mean aerodynamic chord, or None without a chord."""
+        chord = self.basis.chord
+        return None if chord is None else (arm - chord.leading_edge) * 100 / chord.length
+
+
+def _covering(shapes: list[Bound], axis: Axis, phase: Phase) -> tuple[Bound, ...]:
+    """Return the bounds of a phase; what holds at landing holds with the least fuel at landing, too."""
+    here = [bound for bound in shapes if bound[0].axis == axis]
+    found = [bound for bound in here if phase in bound[0].phases]
+    if not found and phase == "minimum at landing":
+        found = [bound for bound in here if "landing" in bound[0].phases]
+    return tuple(found)
+
+
+_KEPT: "OrderedDict[int, Prepared]" = OrderedDict()
+
+
+def prepared(basis: Basis) -> Prepared:
+    """Return the basis made ready; the latest ones are kept, each together with the very basis it was made
+    from.
+    """
+    found = _KEPT.get(id(basis))
+    if found is None or found.basis is not basis:
+        found = Prepared(basis)
+        _KEPT[id(basis)] = found
+        while len(_KEPT) > MOST_KEPT:
+            _KEPT.popitem(last=False)
+    return found

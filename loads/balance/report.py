@@ -1,0 +1,181 @@
+"""The printed parts of a result, as the API answers them, the pages show them and the paper prints them.
+
+Beyond the checks and the verdict: `units`, `phases`, `allowable_take_off`, `governing`, `fuel`, `sumsheet`,
+`operating_weight`, `persons`, `advisories`, `not_assessed`. Figures are decimal texts; what is not known is
+null, and the phases of a load that could not be computed are an empty list.
+"""
+
+from collections.abc import Mapping
+from fractions import Fraction
+from typing import NamedTuple
+
+from fleet.basis import Phase
+from loads.balance.aboard import Declared
+from loads.balance.allowable import Allowable, allowable_take_off
+from loads.balance.checks_known import PATH_SENTENCE
+from loads.balance.fuel import FuelState
+from loads.balance.governing import NOT_KNOWN, cg_line, return_advisory, weight_line
+from loads.balance.prepared import Prepared
+from loads.balance.result import Check, Json, Line, State
+from loads.balance.rounding import CHORD_PLACES, VOLUME_PLACES, WEIGHT_PLACES, printed
+from loads.balance.sumsheet import Aboard, Sums, as_rows
+
+DENSITY_PLACES = 4
+
+
+class Assessed(NamedTuple):
+    """What an assessment found, exact; `states` is empty and `fuel` None where it could not be known."""
+
+    declared: Declared
+    aboard: Aboard
+    lines: tuple[Line, ...]
+    states: Mapping[Phase, State]
+    fuel: Mapping[Phase, FuelState] | None
+    checks: tuple[Check, ...]
+
+
+def report(assessed: Assessed, ready: Prepared) -> Json:
+    """Return the printed parts of an assessment with a basis."""
+    declared, aboard, lines, states, fuel, checks = assessed
+    allowable = allowable_take_off(declared, states) if states else None
+    return {
+        "units": {"weight": ready.weight, "length": ready.length, "moment": ready.moment},
+        "phases": [_phase(state, ready) for state in states.values()],
+        "allowable_take_off": None if allowable is None else allowable.as_document(),
+        "governing": _governing(allowable, states, checks, ready),
+        "fuel": None if fuel is None else _fuel(declared, fuel, ready),
+        "sumsheet": as_rows(lines, ready),
+        "operating_weight": _operating(aboard.operating_weight, ready),
+        "persons": _persons(declared),
+        "advisories": _advisories(declared, states, ready),
+        "not_assessed": _not_assessed(checks, bool(states)),
+    }
+
+
+def report_without_basis() -> Json:
+    """Return the same parts where no loading basis is in force: nothing is known."""
+    return {
+        "units": {"weight": None, "length": None, "moment": None},
+        "phases": [],
+        "allowable_take_off": None,
+        "governing": {"weight": NOT_KNOWN, "cg": NOT_KNOWN},
+        "fuel": None,
+        "sumsheet": [],
+        "operating_weight": None,
+        "persons": None,
+        "advisories": [],
+        "not_assessed": ["everything: no loading basis is in force"],
+    }
+
+
+def _phase(state: State, ready: Prepared) -> Json:
+    percent = ready.chord_percent(state.arm)
+    lateral = printed(state.lateral_arm, ready.length_places)
+    return {
+        "phase": state.phase,
+        "weight": printed(state.weight, WEIGHT_PLACES),
+        "moment": printed(state.moment, ready.moment_places),
+        "arm": printed(state.arm, ready.length_places),
+        "percent_chord": None if percent is None else printed(percent, CHORD_PLACES),
+        "lateral_arm": lateral,
+        "lateral_text": _side(lateral, ready.length),
+        "fuel": printed(state.fuel, WEIGHT_PLACES),
+    }
+
+
+def _side(lateral: str, unit: str) -> str:
+    """Return a lateral figure as people read it: `R 0.3 in`, `L 2.4 in`, never with a bare sign."""
+    if lateral == "0":
+        return f"0 {unit}"
+    return f"L {lateral[1:]} {unit}" if lateral.startswith("-") else f"R {lateral} {unit}"
+
+
+def _governing(
+    allowable: Allowable | None, states: Mapping[Phase, State], checks: tuple[Check, ...], ready: Prepared
+) -> Json:
+    if allowable is None:
+        return {"weight": NOT_KNOWN, "cg": NOT_KNOWN}
+    return {"weight": weight_line(allowable, states["take-off"], ready), "cg": cg_line(checks)}
+
+
+def _fuel(declared: Declared, fuel: Mapping[Phase, FuelState], ready: Prepared) -> Json:
+    plan = declared.fuel
+    ramp, take_off, landing = fuel["ramp"], fuel["take-off"], fuel["landing"]
+    density = f"{printed(plan.density, DENSITY_PLACES)} {ready.density}"
+    return {
+        "unit": ready.weight,
+        "volume_unit": ready.volume,
+        "density": density,
+        "density_source": plan.density_source,
+        "tanks": [
+            {
+                "tank": held.tank.id,
+                "name": held.tank.name,
+                "at_engine_start": _volume(ramp.usable[held.tank.id]),
+                "at_take_off": _volume(take_off.usable[held.tank.id]),
+                "at_landing": _volume(landing.usable[held.tank.id]),
+                "unit": ready.volume,
+                "weight_at_engine_start": _weight(ramp.usable[held.tank.id] * plan.density),
+                "not_usable": _volume(held.trapped),
+            }
+            for held in plan.tanks
+        ],
+        "engine_start": _weight(ramp.usable_weight),
+        "taxi": _weight(plan.taxi),
+        "take_off": _weight(take_off.usable_weight),
+        "trip": _weight(plan.trip),
+        "landing": _weight(landing.usable_weight),
+        "minimum_at_landing": _weight(plan.minimum_at_landing),
+    }
+
+
+def _operating(sums: Sums | None, ready: Prepared) -> Json | None:
+    if sums is None:
+        return None
+    arm = sums.moment / sums.weight
+    percent = ready.chord_percent(arm)
+    return {
+        "weight": _weight(sums.weight),
+        "arm": printed(arm, ready.length_places),
+        "moment": printed(sums.moment, ready.moment_places),
+        "percent_chord": None if percent is None else printed(percent, CHORD_PLACES),
+    }
+
+
+def _persons(declared: Declared) -> Json:
+    crew, passengers = len(declared.crew), len(declared.passengers)
+    infants = sum(person.lap_infant is not None for person in declared.passengers)
+    return {
+        "crew": crew,
+        "passengers": passengers,
+        "lap_infants": infants,
+        "total": crew + passengers + infants,
+    }
+
+
+def _advisories(declared: Declared, states: Mapping[Phase, State], ready: Prepared) -> list[str]:
+    """Return the few lines that are told without a verdict, each with a figure."""
+    found = return_advisory(declared, states, ready) if states else []
+    estimated = sum(item.how == "estimated" for item in declared.items)
+    if estimated:
+        found.append(f"{estimated} of {len(declared.items)} item weights are estimates")
+    for held in declared.fuel.tanks:
+        if held.trapped:
+            found.append(f"{_volume(held.trapped)} {ready.volume} in {held.tank.name} cannot be used")
+    return found
+
+
+def _not_assessed(checks: tuple[Check, ...], computed: bool) -> list[str]:
+    found = [PATH_SENTENCE]
+    if not computed:
+        found.append("weights and centres of gravity: a figure they need is not known")
+    told = [check for check in checks if check.outcome == "advisory" and check.phase]
+    return found + [f"{check.title}: {check.margin_text}" for check in told]
+
+
+def _weight(weight: Fraction) -> str:
+    return printed(weight, WEIGHT_PLACES)
+
+
+def _volume(volume: Fraction) -> str:
+    return printed(volume, VOLUME_PLACES)

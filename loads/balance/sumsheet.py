@@ -1,0 +1,191 @@
+"""The loading computation, line by line, so that a person can do it again by hand. Moments are added, never
+arms.
+"""
+
+from fractions import Fraction
+from typing import NamedTuple
+
+from fleet.basis import FixedItem, Phase
+from fleet.weighing import EmptyFigures
+from loads.balance.aboard import Declared, FuelPlan, Item, Person
+from loads.balance.exact import added
+from loads.balance.fuel import FuelState
+from loads.balance.prepared import Prepared
+from loads.balance.result import Json, Line
+from loads.balance.rounding import VOLUME_PLACES, WEIGHT_PLACES, printed
+
+FROM_RECORD = "from the record"
+
+
+class Sums(NamedTuple):
+    """Weight and moments of a set of lines, exact."""
+
+    weight: Fraction
+    moment: Fraction
+    lateral_moment: Fraction
+
+
+class Aboard(NamedTuple):
+    """The lines of everything but fuel, and their sums; a sum of None is not known."""
+
+    operating: tuple[Line, ...]
+    payload: tuple[Line, ...]
+    operating_weight: Sums | None
+    without_fuel: Sums | None
+
+
+def lines_without_fuel(declared: Declared, empty: EmptyFigures | None) -> Aboard:
+    """Return the lines of the empty aircraft, its fit, the people and the items, with their sums."""
+    operating = [_empty(empty)]
+    operating += [_fixed("equipment", item) for item in declared.configuration.equipment]
+    operating += [_fixed("operating items", item) for item in declared.configuration.operating_items]
+    for person in declared.crew:
+        operating += _people("crew", person)
+    payload: list[Line] = []
+    for person in declared.passengers:
+        payload += _people("passengers", person)
+    payload += [_item(item) for item in declared.items]
+    operating_weight = _sums(operating)
+    aboard = _sums(payload)
+    whole = None if operating_weight is None or aboard is None else _together(operating_weight, aboard)
+    return Aboard(tuple(operating), tuple(payload), operating_weight, whole)
+
+
+def all_lines(
+    aboard: Aboard, plan: FuelPlan, states: dict[Phase, FuelState] | None, ready: Prepared
+) -> tuple[Line, ...]:
+    """Return every line in order: operating weight, zero fuel, ramp, take-off and landing are totals."""
+    lines = [*aboard.operating, _total("operating weight", aboard.operating_weight), *aboard.payload]
+    if states is None:
+        return tuple(lines)
+    dry = aboard.without_fuel
+    zero = states["zero fuel"]
+    for fuel in plan.tanks:
+        stays = zero.usable[fuel.tank.id] + fuel.trapped
+        if stays:
+            weight = stays * plan.density
+            what = f"{fuel.tank.name}, {_volume(stays, ready)} that cannot be used"
+            lines.append(
+                _plain("fuel not usable", what, weight, zero.moments[fuel.tank.id], fuel.tank.lateral_arm)
+            )
+    lines.append(_total("zero fuel", _with_fuel(dry, zero)))
+    ramp = states["ramp"]
+    for fuel in plan.tanks:
+        burnable = ramp.usable[fuel.tank.id] - zero.usable[fuel.tank.id]
+        if burnable:
+            moment = ramp.moments[fuel.tank.id] - zero.moments[fuel.tank.id]
+            what = f"{fuel.tank.name}, {_volume(burnable, ready)}"
+            lines.append(_plain("fuel", what, burnable * plan.density, moment, fuel.tank.lateral_arm))
+    lines.append(_total("ramp", _with_fuel(dry, ramp)))
+    take_off, landing = states["take-off"], states["landing"]
+    lines += [_burned("taxi", "taxi fuel", ramp, take_off), _total("take-off", _with_fuel(dry, take_off))]
+    lines += [_burned("trip", "trip fuel", take_off, landing), _total("landing", _with_fuel(dry, landing))]
+    return tuple(lines)
+
+
+def as_rows(lines: tuple[Line, ...], ready: Prepared) -> list[Json]:
+    """Return the lines as they stand in the result document, numbered from 1."""
+    arms, moments = ready.length_places, ready.moment_places
+    return [
+        {
+            "line": number,
+            "group": line.group,
+            "what": line.what,
+            "how": line.how,
+            "weight": None if line.weight is None else printed(line.weight, WEIGHT_PLACES),
+            "arm": None if line.arm is None else printed(line.arm, arms),
+            "moment": None if line.moment is None else printed(line.moment, moments),
+            "lateral_moment": None if line.lateral_moment is None else printed(line.lateral_moment, moments),
+            "total": line.total,
+            "pointer": line.pointer,
+        }
+        for number, line in enumerate(lines, 1)
+    ]
+
+
+def _empty(empty: EmptyFigures | None) -> Line:
+    if empty is None:
+        return Line("empty weight", "empty weight, none in force", None, None, None, None, None)
+    arm = empty.moment / empty.weight  # the recorded moment stands, whatever arm was printed beside it
+    what = f"empty weight ({empty.how})"
+    return Line("empty weight", what, FROM_RECORD, empty.weight, arm, empty.moment, empty.lateral_moment)
+
+
+def _fixed(group: str, item: FixedItem) -> Line:
+    return _placed(Line(group, item.what, FROM_RECORD, item.weight, item.arm, None, None), item.lateral_arm)
+
+
+def _people(group: str, person: Person) -> list[Line]:
+    seat = person.seat
+    what = f"{seat.name}, {person.position or person.category or 'passenger'}"
+    line = Line(group, what, person.how, person.weight, seat.arm, None, None, False, person.pointer)
+    lines = [_placed(line, seat.lateral_arm)]
+    infant = person.lap_infant
+    if infant is not None and infant.weight is not None:
+        what = f"{seat.name}, lap infant"
+        line = Line(group, what, infant.how, infant.weight, seat.arm, None, None, False, infant.pointer)
+        lines.append(_placed(line, seat.lateral_arm))
+    return lines
+
+
+def _item(item: Item) -> Line:
+    place = item.place
+    what = f"{place.name}, {item.kind}: {item.what}{', removed' if item.removed else ''}"
+    line = Line("items", what, item.how, item.weight, place.arm, None, None, False, item.pointer)
+    return _placed(line, place.lateral_arm)
+
+
+def _placed(line: Line, lateral_arm: Fraction) -> Line:
+    """Return the line with its moments; a weight that is not known has none."""
+    group, what, how, weight, arm, _, _, total, pointer = line
+    if weight is None or arm is None:
+        return line
+    lateral = weight * lateral_arm if lateral_arm else lateral_arm
+    return Line(group, what, how, weight, arm, weight * arm, lateral, total, pointer)
+
+
+def _plain(group: str, what: str, weight: Fraction, moment: Fraction, lateral_arm: Fraction) -> Line:
+    return Line(group, what, "declared", weight, moment / weight, moment, weight * lateral_arm)
+
+
+def _burned(group: str, what: str, before: FuelState, after: FuelState) -> Line:
+    weight = after.weight - before.weight
+    moment = after.moment - before.moment
+    arm = moment / weight if weight else None
+    return Line(group, what, "declared", weight, arm, moment, after.lateral_moment - before.lateral_moment)
+
+
+def _total(group: str, sums: Sums | None) -> Line:
+    if sums is None:
+        return Line(group, group, None, None, None, None, None, True)
+    return Line(
+        group, group, None, sums.weight, sums.moment / sums.weight, sums.moment, sums.lateral_moment, True
+    )
+
+
+def _sums(lines: list[Line]) -> Sums | None:
+    """Return the sums of lines, or None when a weight among them is not known."""
+    weights, moments, laterals = [], [], []
+    for line in lines:
+        if line.weight is None or line.moment is None or line.lateral_moment is None:
+            return None
+        weights.append(line.weight)
+        moments.append(line.moment)
+        laterals.append(line.lateral_moment)
+    return Sums(added(weights), added(moments), added(laterals))
+
+
+def _together(one: Sums, other: Sums) -> Sums:
+    return Sums(
+        one.weight + other.weight, one.moment + other.moment, one.lateral_moment + other.lateral_moment
+    )
+
+
+def _with_fuel(dry: Sums | None, fuel: FuelState) -> Sums | None:
+    if dry is None:
+        return None
+    return _together(dry, Sums(fuel.weight, fuel.moment, fuel.lateral_moment))
+
+
+def _volume(volume: Fraction, ready: Prepared) -> str:
+    return f"{printed(volume, VOLUME_PLACES)} {ready.volume}"
