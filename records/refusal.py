@@ -103,4 +103,8 @@ class LockedOut(Refused):
     """Too many failures; wait as stated."""
 
     status = 429
-    title = "locked out"
+    title = "too many requests"
+
+    def __init__(self, code: str, detail: str, *, wait_seconds: int, next_step: str = "") -> None:
+        super().__init__(code, detail, next_step=next_step)
+        self.wait_seconds = wait_seconds

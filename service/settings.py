@@ -51,7 +51,10 @@ TEMPLATES = [
         "BACKEND": "django.template.backends.django.DjangoTemplates",
         "DIRS": [BASE_DIR / "templates"],
         "OPTIONS": {
-            "context_processors": ["django.template.context_processors.request", "service.pages.page_context"],
+            "context_processors": [
+                "django.template.context_processors.request",
+                "service.pages.page_context",
+            ],
         },
     }
 ]
@@ -73,9 +76,14 @@ CELERY_WORKER_MAX_TASKS_PER_CHILD = 200
 CELERY_TASK_SERIALIZER = "json"
 CELERY_ACCEPT_CONTENT = ["json"]
 CELERY_BROKER_CONNECTION_RETRY_ON_STARTUP = True
-# A request must not wait for a broker that is down: one short try, then the sweeper finds the work in the outbox.
+# A request must not wait for a broker that is down: one short try, then the sweeper finds the work in the
+# outbox.
 CELERY_TASK_PUBLISH_RETRY = False
-CELERY_BROKER_TRANSPORT_OPTIONS = {"socket_connect_timeout": 1, "socket_timeout": 5, "visibility_timeout": 300}
+CELERY_BROKER_TRANSPORT_OPTIONS = {
+    "socket_connect_timeout": 1,
+    "socket_timeout": 5,
+    "visibility_timeout": 300,
+}
 CELERY_BEAT_SCHEDULE = {
     "sweep-the-outbox": {"task": "records.tasks.sweep_outbox", "schedule": 20.0},
 }
@@ -98,6 +106,8 @@ AXES_RESET_ON_SUCCESS = True
 AXES_ENABLE_ADMIN = False
 AXES_DISABLE_ACCESS_LOG = True
 AXES_VERBOSE = False
+# The page and the API answer a lock-out themselves, with the wait stated.
+AXES_LOCKOUT_CALLABLE = "service.problems.keep_answer"
 AXES_IPWARE_PROXY_COUNT = 0
 
 SESSION_COOKIE_HTTPONLY = True
@@ -106,6 +116,7 @@ SESSION_COOKIE_AGE = 12 * 3600
 SESSION_COOKIE_SECURE = HTTPS
 CSRF_COOKIE_SECURE = HTTPS
 CSRF_COOKIE_HTTPONLY = True
+CSRF_FAILURE_VIEW = "service.problems.forged"
 SECURE_SSL_REDIRECT = HTTPS
 SECURE_HSTS_SECONDS = 31536000 if HTTPS else 0
 SECURE_HSTS_INCLUDE_SUBDOMAINS = HTTPS
@@ -146,13 +157,14 @@ SPECTACULAR_SETTINGS = {
     "TITLE": "Tarebook",
     "VERSION": "1",
     "OAS_VERSION": "3.1.0",
-    "DESCRIPTION": "Load records for small air operators. The approved flight manual, the operator's approved "
-    "procedures, local rules and licensed people decide; a figure from this service does not.",
+    "DESCRIPTION": "Load records for small air operators. The approved flight manual, the operator's "
+    "approved procedures, local rules and licensed people decide; a figure from this service does not.",
     "SERVE_INCLUDE_SCHEMA": False,
     "SCHEMA_PATH_PREFIX": "/api/v1",
     "SWAGGER_UI_DIST": "SIDECAR",
     "SWAGGER_UI_FAVICON_HREF": "SIDECAR",
     "COMPONENT_SPLIT_REQUEST": True,
+    "POSTPROCESSING_HOOKS": ["drf_spectacular.hooks.postprocess_schema_enums", "service.openapi.finish"],
 }
 
 LOGGING = {
@@ -161,5 +173,9 @@ LOGGING = {
     "formatters": {"plain": {"format": "%(levelname)s %(name)s %(message)s"}},
     "handlers": {"console": {"class": "logging.StreamHandler", "formatter": "plain"}},
     "root": {"handlers": ["console"], "level": env.text("LOG_LEVEL", "INFO")},
-    "loggers": {"axes": {"level": "ERROR"}, "fontTools": {"level": "WARNING"}, "weasyprint": {"level": "ERROR"}},
+    "loggers": {
+        "axes": {"level": "ERROR"},
+        "fontTools": {"level": "WARNING"},
+        "weasyprint": {"level": "ERROR"},
+    },
 }

@@ -1,0 +1,60 @@
+"""Which acts a person or a token may do: the duties of all rooms joined, and what a token never may."""
+
+from collections.abc import Collection
+from typing import Final
+
+import fleet.acts
+import fleet.duties
+import loads.acts
+import loads.duties
+
+# Reading is no act and leaves nothing in the trail, but a token needs leave for it all the same.
+READ: Final = "read"
+# The scope a person's token needs, besides the password, to sign. It is no act either.
+SIGN: Final = "sign"
+SIGNATURES: Final = frozenset({loads.acts.PREPARE_LOAD.name, loads.acts.ACCEPT_LOAD.name})
+# Whatever moves a limit or says who may do what needs a person: an integration never does it, whoever owns
+# it.
+_NEEDS_A_PERSON: Final = SIGNATURES | {
+    fleet.acts.APPROVE_LOADING_BASIS.name,
+    fleet.acts.APPROVE_EMPTY_WEIGHT.name,
+    fleet.acts.ENTER_PERSON.name,
+    fleet.acts.GRANT_DUTY.name,
+    fleet.acts.END_DUTY.name,
+    fleet.acts.CHANGE_PASSWORD.name,
+    fleet.acts.ISSUE_TOKEN.name,
+    fleet.acts.REVOKE_TOKEN.name,
+}
+
+
+def to_person(roles: Collection[str]) -> frozenset[str]:
+    """This function will return the acts the roles allow, and `read` when there is at least one role.
+
+    A person without any duty can sign in and sees nothing.
+    """
+    acts: frozenset[str] = frozenset()
+    for role in roles:
+        if not fleet.duties.is_role(role):
+            continue
+        acts |= fleet.duties.ACTS_OF[role] | loads.duties.ACTS_OF[role] | {READ}
+    return acts
+
+
+def to_token(roles: Collection[str], scopes: Collection[str], *, integration: bool) -> frozenset[str]:
+    """This function will return what the token's scopes and its person's roles both allow.
+
+    Signatures need the scope `sign` besides the act's own name. An integration does nothing that needs a
+    person.
+    """
+    acts = to_person(roles) & frozenset(scopes)
+    if SIGN not in scopes:
+        acts -= SIGNATURES
+    return acts - _NEEDS_A_PERSON if integration else acts
+
+
+def grantable(roles: Collection[str], *, integration: bool) -> frozenset[str]:
+    """This function will return the scopes a token of somebody with these roles may be given."""
+    acts = to_person(roles)
+    if integration:
+        return acts - _NEEDS_A_PERSON
+    return acts | {SIGN} if acts & SIGNATURES else acts

@@ -1,0 +1,104 @@
+"""Whether the service is alive, and whether it can do its job: GET /health, without login.
+
+It says which part is not well and nothing about its inside. A broker that is down is told but does not make
+the service unready: loads are signed without it, and manifests are made on demand.
+"""
+
+import logging
+from collections.abc import Callable
+from contextlib import suppress
+from typing import Final
+
+from celery import current_app
+from django.db import DatabaseError, connection
+from django.db.migrations.executor import MigrationExecutor
+from django.http import HttpResponse
+from drf_spectacular.utils import extend_schema
+from rest_framework.request import Request
+from rest_framework.views import APIView
+
+from records.api.render import rendered
+from records.guard import missing_guards
+from service.roles import SERVICE
+
+log = logging.getLogger(__name__)
+
+OLDEST_POSTGRESQL: Final = 180000
+_SHAPE: Final = {
+    "type": "object",
+    "required": ["status", "parts"],
+    "properties": {
+        "status": {"type": "string", "enum": ["ready", "not ready"]},
+        "parts": {"type": "object", "additionalProperties": {"type": "string"}},
+    },
+}
+
+
+class Health(APIView):
+    """GET /health, without login."""
+
+    authentication_classes = ()
+    permission_classes = ()
+
+    @extend_schema(
+        operation_id="health",
+        summary="Whether the service can do its job",
+        responses={200: _SHAPE, 503: _SHAPE},
+    )
+    def get(self, _request: Request) -> HttpResponse:
+        """This function will answer 200 when ready and 503 when not, with every part by name."""
+        parts = {
+            "database": _asked(_database),
+            "roles": _asked(_roles),
+            "guards": _asked(_guards),
+            "migrations": _asked(_migrations),
+        }
+        ready = all(found == "ok" for found in parts.values())
+        parts["broker"] = _asked(_broker)
+        body = {"status": "ready" if ready else "not ready", "parts": parts}
+        return HttpResponse(rendered(body), status=200 if ready else 503, content_type="application/json")
+
+
+def _asked(part: Callable[[], str]) -> str:
+    try:
+        return part()
+    except DatabaseError as error:
+        log.warning("health: %s: %s", part.__name__, type(error).__name__)
+        return "not reached"
+
+
+def _database() -> str:
+    connection.ensure_connection()
+    with connection.cursor() as cursor:
+        cursor.execute("SELECT current_setting('server_version_num')::int")
+        (version,) = cursor.fetchone()
+    return "ok" if version >= OLDEST_POSTGRESQL else "needs PostgreSQL 18"
+
+
+def _roles() -> str:
+    # What the role may do is asked with the guards; here, whether it is the one that serves.
+    with connection.cursor() as cursor:
+        cursor.execute("SELECT current_user")
+        (role,) = cursor.fetchone()
+    return "ok" if role == SERVICE else "not the service role"
+
+
+def _guards() -> str:
+    missing = missing_guards()
+    if missing:
+        log.error("guards missing or changed: %s", "; ".join(missing))
+        return f"{len(missing)} missing or changed"
+    return "ok"
+
+
+def _migrations() -> str:
+    executor = MigrationExecutor(connection)
+    return "ok" if not executor.migration_plan(executor.loader.graph.leaf_nodes()) else "not all have run"
+
+
+def _broker() -> str:
+    # Any failure means the same here: nobody is woken, and the sweeper does the work later.
+    with suppress(Exception), current_app.connection(connect_timeout=1) as broker:
+        broker.ensure_connection(max_retries=1, interval_start=0, interval_step=0, timeout=1)
+        return "ok"
+    return "not reached"

@@ -1,0 +1,29 @@
+"""All addresses: the API of the rooms under /api/v1/, the pages, health."""
+
+from django.urls import include, path
+
+from service import pages
+from service.docs import docs, openapi
+from service.health import Health
+
+api = [
+    path("", include("records.api.urls")),
+    path("", include("fleet.api.urls")),
+    path("", include("loads.api.urls")),
+    path("health", Health.as_view(), name="api-health"),
+    path("openapi.json", openapi, name="openapi"),
+]
+urlpatterns = [
+    path("api/v1/", include(api)),
+    path("health", Health.as_view(), name="health"),
+    path("docs", docs, name="docs"),
+    path("sign-in", pages.sign_in, name="sign-in"),
+    path("sign-out", pages.sign_out, name="sign-out"),
+    path("", include("fleet.web.urls")),
+    path("", include("loads.web.urls")),
+]
+
+handler400 = "service.problems.unreadable"
+handler403 = "service.problems.not_allowed"
+handler404 = "service.problems.not_found"
+handler500 = "service.problems.failed"
