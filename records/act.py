@@ -17,7 +17,7 @@ from uuid import UUID
 from django.db import connection, transaction
 
 from records.actor import Actor
-from records.guard_refusals import ActMisplaced, refusals_named
+from records.guard.refusals import ActMisplaced, refusals_named
 from records.kind import Kind
 from records.refusal import NotAllowed
 
