@@ -55,7 +55,7 @@ def plot(
     """This function will return an SVG text of the result document against the envelopes of one axis.
 
     `envelopes` are in the units of the result (`result["units"]`); those of the other axis are left out.
-    Returns "" when there is nothing to draw: no phases, or no envelope of that axis. Aft and right are positive.
+    Returns "" when there is nothing to draw: no phases, or no envelope of that axis. Aft and right: positive.
     """
     shown = [envelope for envelope in envelopes if envelope.axis == axis]
     if not shown or not result["phases"]:
@@ -113,9 +113,10 @@ def _weight_limits(checks: Iterable[Mapping[str, Any]], unit: str) -> dict[float
     """The upper limit of each weight check, with the lines of its label."""
     named: dict[float, list[str]] = {}
     for check in checks:
-        family, _, phase = check["code"].partition(".")
-        if family == "weight" and check["limit"]:
-            named.setdefault(float(Fraction(check["limit"])), []).append(check.get("phase") or phase)
+        family = check["code"].partition(".")[0]
+        if family in {"weight", "performance"} and check["limit"]:
+            name = check["phase"] if family == "weight" else check["source"]
+            named.setdefault(float(Fraction(check["limit"])), []).append(name)
     return {v: (*broken(f"{', '.join(phases)} limit"), f"{short(v)} {unit}") for v, phases in named.items()}
 
 

@@ -1,4 +1,4 @@
-"""The archive: documents are kept under the SHA-256 of their bytes and handed out only while that still fits."""
+"""The archive: documents are kept under their SHA-256 and handed out only while that still fits."""
 
 import hashlib
 import secrets
@@ -43,7 +43,7 @@ def file_document(
 
 
 def document_of(operator: str, digest: str) -> Document:
-    """This function will return the operator's document of that digest; raises NotKnown, also for another's."""
+    """This function will return the operator's document of a digest; raises NotKnown, also for another's."""
     found = Document.objects.filter(operator_id=operator, digest=digest).first()
     if found is None:
         raise NotKnown("document-not-known", "No document of that digest is filed.")
@@ -65,6 +65,6 @@ def hand_out(document: Document) -> bytes:
         )
     raise DocumentAltered(
         "document-altered",
-        f"The stored bytes do not fit the digest {document.digest} they were filed under, so they are withheld.",
+        f"The stored bytes do not fit the digest they were filed under: {document.digest}. Withheld.",
         next_step="Run the verification of the trail and tell whoever keeps the records.",
     )

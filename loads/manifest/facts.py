@@ -1,0 +1,107 @@
+"""Everything a manifest says, as plain values. What stands here decides the paper's bytes, and nothing else
+does.
+"""
+
+from collections.abc import Mapping
+from dataclasses import dataclass
+from datetime import datetime
+from typing import Any, Literal
+
+from fleet.basis import Chord, Envelope
+
+RuleSet = Literal["US", "EU-UK"]
+
+
+@dataclass(frozen=True, slots=True)
+class OperatorFacts:
+    """The certificate holder as entered; `time_zone` is a name of the IANA database."""
+
+    code: str
+    name: str
+    certificate: str
+    base: str
+    time_zone: str
+    rule_set: RuleSet
+    procedure: str
+    weight_method: str
+    invented: bool
+
+
+@dataclass(frozen=True, slots=True)
+class AircraftFacts:
+    """The airframe and the registration it carries."""
+
+    registration: str
+    serial_number: str
+    type: str
+    category: str
+    engines: int
+
+
+@dataclass(frozen=True, slots=True)
+class BasisFacts:
+    """The revision of the loading basis that was used; envelopes and chord in the units of the result.
+
+    `document` is the document `tarebook.loading-basis/1` as entered.
+    """
+
+    revision: int
+    digest: str
+    known_from: datetime | None
+    document: Mapping[str, Any]
+    envelopes: tuple[Envelope, ...]
+    chord: Chord | None
+
+
+@dataclass(frozen=True, slots=True)
+class EmptyWeightFacts:
+    """The empty-weight version that was used; `document` is `tarebook.empty-weight/1` as entered."""
+
+    digest: str
+    true_from: datetime
+    known_from: datetime | None
+    document: Mapping[str, Any]
+
+
+@dataclass(frozen=True, slots=True)
+class SignatureFacts:
+    """One signature: who, in which capacity, meaning what, in which words, when, by which means."""
+
+    name: str
+    capacity: str
+    meaning: str
+    statement: str
+    signed_at: datetime
+    means: str
+
+
+@dataclass(frozen=True, slots=True)
+class SealFacts:
+    """The seal of the act of acceptance: its number on the operator's chain, its digest, the act's time."""
+
+    position: int
+    digest: str
+    at: datetime
+
+
+@dataclass(frozen=True, slots=True)
+class Facts:
+    """One accepted load. `inputs` is the document `tarebook.load/1` as typed, `result` the result document.
+
+    `statement` is what was signed, as canonical bytes; `digest` is its SHA-256. `number` is the manifest's.
+    """
+
+    operator: OperatorFacts
+    aircraft: AircraftFacts
+    load: str
+    replaces: str
+    number: int
+    inputs: Mapping[str, Any]
+    result: Mapping[str, Any]
+    basis: BasisFacts
+    empty_weight: EmptyWeightFacts
+    engine: str
+    signatures: tuple[SignatureFacts, ...]
+    seal: SealFacts
+    statement: bytes
+    digest: str

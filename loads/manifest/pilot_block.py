@@ -1,0 +1,153 @@
+"""The block a pilot reads first, in the order in which a pilot asks."""
+
+from collections.abc import Iterator, Mapping
+from datetime import datetime
+from typing import Any
+
+from loads.balance.aboard import PILOT_IN_COMMAND
+from loads.manifest.facts import Facts
+from loads.manifest.figures import SPACE, column, figure, offset, percent_chord, utc
+from loads.manifest.words import Words
+
+Block = dict[str, Any]
+VERDICTS = {
+    "within": ("Within limits", "Every limit that was checked is kept."),
+    "outside": ("Outside limits", "At least one limit is broken. Do not depart on this load."),
+    "unresolved": (
+        "Unresolved",
+        "Something that is needed could not be checked. Do not depart on this load.",
+    ),
+}
+
+
+def flight_block(facts: Facts) -> Block:
+    """This function will return what identifies the flight: reference, date, both clocks, route, crew."""
+    flight = facts.inputs["flight"]
+    departure = datetime.fromisoformat(flight["departure"])
+    return {
+        "reference": flight["reference"],
+        "leg": str(flight["leg"]),
+        "date": f"{departure:%Y-%m-%d}",
+        "local": f"{departure:%H:%M} {offset(departure)}",
+        "utc": utc(departure),
+        "origin": flight["origin"],
+        "destination": flight["destination"],
+        "operation": flight["operation"],
+        "pilot": _pilot(facts.inputs),
+        "configuration": facts.inputs["configuration"],
+    }
+
+
+def verdict_block(facts: Facts, words: Words) -> Block:
+    """This function will return the verdict in words, with the nearest limit of weight and of balance."""
+    head, sentence = VERDICTS[facts.result["verdict"]]
+    governing = facts.result["governing"]
+    return {
+        "head": head,
+        "sentence": sentence,
+        "weight": words.said(governing["weight"]),
+        "cg": words.said(governing["cg"]),
+    }
+
+
+def figures_block(facts: Facts, words: Words) -> Block:
+    """This function will return take-off weight, CG and their limits, trim, other weights, persons."""
+    result = facts.result
+    units, at = result["units"], {phase["phase"]: phase for phase in result["phases"]}
+    checks = {check["code"]: check for check in result["checks"]}
+    allowable = result["allowable_take_off"]
+    cg = checks["cg.take-off"]
+    return {
+        "take_off": figure(at["take-off"]["weight"]),
+        "unit": units["weight"],
+        "allowable": figure(allowable["weight"]) if allowable["weight"] else "no limit",
+        "governed_by": words.said(allowable["governed_by"]),
+        "cg_arm": figure(at["take-off"]["arm"]),
+        "cg_unit": units["length"],
+        "cg_chord": figure(at["take-off"]["percent_chord"]) if at["take-off"]["percent_chord"] else "",
+        "cg_low": figure(cg["low"]) if cg["low"] else "none",
+        "cg_high": figure(cg["limit"]) if cg["limit"] else "none",
+        "cg_chord_limits": _chord_limits(facts, cg),
+        "cg_margin": words.said(cg["margin_text"]),
+        "lateral": figure_sided(at["take-off"]["lateral_text"]),
+        "trim": _trim(facts),
+        "zero_fuel": _beside(at["zero fuel"]["weight"], checks["weight.zero-fuel"]),
+        "landing": _beside(at["landing"]["weight"], checks["weight.landing"]),
+        "persons": {name: str(count) for name, count in result["persons"].items()},
+    }
+
+
+def fuel_block(facts: Facts) -> Block:
+    """This function will return the fuel by tank and in total, in volume and in weight."""
+    fuel = facts.result["fuel"]
+    columns = {
+        key: column([tank[key] for tank in fuel["tanks"]])
+        for key in ("at_engine_start", "at_take_off", "at_landing", "weight_at_engine_start")
+    }
+    tanks = [
+        {"name": tank["name"], **{key: values[place] for key, values in columns.items()}}
+        for place, tank in enumerate(fuel["tanks"])
+    ]
+    totals = {key: figure(fuel[key]) for key in _FUEL_TOTALS}
+    return {
+        **totals,
+        "tanks": tanks,
+        "unit": fuel["unit"],
+        "volume_unit": fuel["volume_unit"],
+        "density": fuel["density"],
+        "density_source": fuel["density_source"],
+    }
+
+
+_FUEL_TOTALS = ("engine_start", "taxi", "take_off", "trip", "landing", "minimum_at_landing")
+
+
+def open_points(facts: Facts, words: Words) -> Block:
+    """This function will return what was not assessed, what is standard or estimated, and what is advised."""
+    return {
+        "not_assessed": [words.said(text) for text in facts.result["not_assessed"]],
+        "by_how": list(_by_how(facts)),
+        "advisories": [words.said(text) for text in facts.result["advisories"]],
+    }
+
+
+def figure_sided(text: str) -> str:
+    """This function will keep a sided text such as `R 0.3 in` on one line."""
+    return text.replace(" ", SPACE)
+
+
+def _by_how(facts: Facts) -> Iterator[str]:
+    """Name the lines whose weight is standard or estimated; nothing means all were weighed or declared."""
+    for how in ("standard", "estimated"):
+        lines = [str(line["line"]) for line in facts.result["sumsheet"] if line["how"] == how]
+        if lines:
+            yield f"{how}: line{'s' if len(lines) > 1 else ''} {', '.join(lines)} of the loading computation"
+
+
+def _pilot(inputs: Mapping[str, Any]) -> str:
+    named = (line["name"] for line in inputs["crew"] if line["position"] == PILOT_IN_COMMAND)
+    return next(named, "not named")
+
+
+def _chord_limits(facts: Facts, cg: Mapping[str, Any]) -> str:
+    """Both limits as per cent of the chord, rounded towards each other."""
+    if facts.basis.chord is None or cg["low"] is None or cg["limit"] is None:
+        return ""
+    low = percent_chord(cg["low"], facts.basis.chord, "up")
+    high = percent_chord(cg["limit"], facts.basis.chord, "down")
+    return f"{figure(low)} to {figure(high)} %"
+
+
+def _trim(facts: Facts) -> str:
+    trim = facts.basis.document.get("trim")
+    if isinstance(trim, Mapping) and trim.get("none"):
+        page = trim.get("source", {}).get("page", "")
+        return f"none in the approved data{f' (p. {page})' if page else ''}"
+    return "not in the loading basis"
+
+
+def _beside(weight: str, check: Mapping[str, Any]) -> Block:
+    return {
+        "weight": figure(weight),
+        "limit": figure(check["limit"]) if check["limit"] else check["margin_text"],
+    }

@@ -1,0 +1,92 @@
+"""The whole paper as plain values for the template: texts, lists, and drawings as SVG text."""
+
+import segno
+
+from loads.cautions import CAUTIONS, INVENTED
+from loads.manifest import pilot_block, tables
+from loads.manifest.facts import Facts
+from loads.manifest.figures import both_clocks
+from loads.manifest.words import SINGLE_ENGINE_US, WORDS, Words
+from loads.plot import Frame, plot
+
+STATEMENT_NAME = "statement.json"
+ENCLOSED = (
+    f"Enclosed in this file as {STATEMENT_NAME}: what was signed (inputs as typed, digests of the versions "
+    "used, engine, result; RFC 8785). Its SHA-256 is the document digest."
+)
+
+
+def sheet(facts: Facts) -> dict[str, object]:
+    """This function will return everything the template prints; the same facts give the same values."""
+    words = WORDS[facts.operator.rule_set]
+    return {
+        "title": title_of(facts),
+        "paper": words.paper,
+        "word": words.weight,
+        "Word": words.weight.capitalize(),
+        "operating": words.operating,
+        "rules": words.rules,
+        "rules_note": _rules_note(facts, words),
+        "invented": INVENTED if facts.operator.invented else "",
+        "operator": facts.operator,
+        "aircraft": facts.aircraft,
+        "number": str(facts.number),
+        "load": facts.load,
+        "replaces": facts.replaces,
+        "units": facts.result["units"],
+        "flight": pilot_block.flight_block(facts),
+        "verdict": pilot_block.verdict_block(facts, words),
+        "figures": pilot_block.figures_block(facts, words),
+        "fuel": pilot_block.fuel_block(facts),
+        "open": pilot_block.open_points(facts, words),
+        "phases": tables.phases(facts),
+        "plots": _plots(facts, words),
+        "computation": tables.computation(facts, words),
+        "limits": tables.limits(facts, words),
+        "allowable": tables.allowable(facts, words),
+        "crew": tables.crew(facts),
+        "versions": tables.versions(facts, words),
+        "signatures": tables.signatures(facts),
+        "seal": {
+            "position": str(facts.seal.position),
+            "digest": facts.seal.digest,
+            "time": both_clocks(facts.seal.at, facts.operator.time_zone),
+        },
+        "digest": facts.digest,
+        "enclosed": ENCLOSED,
+        "engine": facts.engine,
+        "cautions": CAUTIONS,
+        "code": _code(facts),
+    }
+
+
+def title_of(facts: Facts) -> str:
+    """This function will return the title of the paper; it names no person."""
+    flight = facts.inputs["flight"]
+    named = f"{flight['reference']} leg {flight['leg']}"
+    return f"Load manifest {facts.number}, {facts.aircraft.registration}, {named}"
+
+
+def _plots(facts: Facts, words: Words) -> list[str]:
+    """The longitudinal plot, and a lateral one beside it where the basis has a lateral envelope."""
+    lateral = any(envelope.axis == "lateral" for envelope in facts.basis.envelopes)
+    frame = Frame(height=250.0, bottom=216.0) if lateral else Frame()
+    axes = ("longitudinal", "lateral") if lateral else ("longitudinal",)
+    drawn = [
+        plot(facts.result, facts.basis.envelopes, axis=axis, weight_word=words.weight, frame=frame)
+        for axis in axes
+    ]
+    return [one for one in drawn if one]
+
+
+def _rules_note(facts: Facts, words: Words) -> str:
+    if facts.operator.rule_set == "US" and facts.aircraft.engines == 1:
+        return f"{words.rules_are} {SINGLE_ENGINE_US}"
+    return words.rules_are
+
+
+def _code(facts: Facts) -> str:
+    """A QR code with the number and the digest, for comparing a paper with the record by machine."""
+    text = f"{facts.operator.code} manifest {facts.number} sha256:{facts.digest}"
+    drawn: str = segno.make(text, error="m", micro=False).svg_inline(border=0, svgclass=None, lineclass=None)
+    return drawn

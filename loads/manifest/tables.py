@@ -1,0 +1,147 @@
+"""The tables of the paper: the computation line by line, the phases, the limits, and what was used."""
+
+from collections.abc import Iterable, Mapping
+from typing import Any
+
+from loads.manifest.facts import Facts
+from loads.manifest.figures import both_clocks, column, figure, sided, utc
+from loads.manifest.ruler import ruler
+from loads.manifest.words import Words
+from loads.plot_marks import MARKS, shape
+from loads.svg import element
+
+Row = dict[str, Any]
+# How the checks are laid out: those of the whole aircraft first, then the small ones, two beside each other.
+WHOLE = ("weight", "performance", "cg", "lateral", "fuel", "persons", "standing", "weights", "path")
+OUTCOMES = {"pass": "kept", "fail": "BROKEN", "unresolved": "NOT CHECKED", "advisory": "told, not judged"}
+
+
+def computation(facts: Facts, words: Words) -> list[Row]:
+    """This function will return the loading computation with the names of the people beside their lines."""
+    lines = facts.result["sumsheet"]
+    columns = {key: column([line[key] for line in lines]) for key in ("weight", "arm", "moment")}
+    columns["lateral_moment"] = sided([line["lateral_moment"] for line in lines])
+    return [
+        {
+            "line": str(line["line"]),
+            "what": line["what"] if line["pointer"] else words.said(line["what"]),
+            "name": _name_at(facts.inputs, line["pointer"]),
+            "how": line["how"] or "",
+            "total": line["total"],
+            **{key: values[place] for key, values in columns.items()},
+        }
+        for place, line in enumerate(lines)
+    ]
+
+
+def phases(facts: Facts) -> list[Row]:
+    """This function will return the phases with the letter and the shape they have on the plot."""
+    rows = facts.result["phases"]
+    columns = {
+        key: column([row[key] for row in rows])
+        for key in ("weight", "moment", "arm", "percent_chord", "fuel")
+    }
+    return [
+        {
+            "letter": MARKS[row["phase"]],
+            "shape": element("svg", shape(MARKS[row["phase"]], (6, 6)), viewBox="0 0 12 12"),
+            "phase": row["phase"],
+            "lateral": row["lateral_text"],
+            **{key: values[place] for key, values in columns.items()},
+        }
+        for place, row in enumerate(rows)
+    ]
+
+
+def limits(facts: Facts, words: Words) -> dict[str, list[Row]]:
+    """This function will return every check with its ruler: those of the aircraft, and those of its parts."""
+    checks = facts.result["checks"]
+    whole = [check for check in checks if check["code"].partition(".")[0] in WHOLE]
+    parts = [check for check in checks if check["code"].partition(".")[0] not in WHOLE]
+    return {
+        "whole": [_limit(check, words) for check in whole],
+        "parts": [_limit(check, words) for check in parts],
+    }
+
+
+def _limit(check: Mapping[str, Any], words: Words) -> Row:
+    family = check["code"].partition(".")[0]
+    typed = family in {"seat", "place", "zone", "tank", "tank-table", "performance"}
+    return {
+        "title": check["title"] if typed else words.said(check["title"]),
+        "actual": figure(check["actual"]) if check["actual"] else "",
+        "low": figure(check["low"]) if check["low"] else "",
+        "high": figure(check["limit"]) if check["limit"] else "",
+        "unit": check["unit"] or "",
+        "ruler": "" if family == "persons" else ruler(check),
+        "margin": words.said(check["margin_text"]),
+        "outcome": OUTCOMES[check["result"]],
+        "kept": check["result"] == "pass",
+        "source": check["source"],
+    }
+
+
+def allowable(facts: Facts, words: Words) -> list[Row]:
+    """This function will return what bears on the take-off weight, the least marked."""
+    block = facts.result["allowable_take_off"]
+    weights = column([one["weight"] for one in block["candidates"]])
+    return [
+        {"name": words.said(one["name"]), "weight": weight, "least": one["name"] == block["governed_by"]}
+        for one, weight in zip(block["candidates"], weights, strict=True)
+    ]
+
+
+def versions(facts: Facts, words: Words) -> list[tuple[str, str, str]]:
+    """This function will return the versions used, each as (what, in words, digest)."""
+    basis, empty = facts.basis, facts.empty_weight
+    title = basis.document["document"]
+    manual = f"{title['title']}, {title['number']} revision {title['revision']}"
+    weight = empty.document["weight"]
+    how = empty.document.get("how", "")
+    report = f", report {empty.document['report']}" if empty.document.get("report") else ""
+    dated = f" of {empty.document['date']}" if empty.document.get("date") else ""
+    stated = f"{weight['value']} {weight['unit']} by {how}{dated}{report}, true from {utc(empty.true_from)}"
+    return [
+        ("Loading basis", f"revision {basis.revision} ({manual}){_since(basis.known_from)}", basis.digest),
+        (words.said("Empty weight"), f"{stated}{_since(empty.known_from)}", empty.digest),
+    ]
+
+
+def _since(moment: Any) -> str:
+    return f", approved {utc(moment)}" if moment else ""
+
+
+def signatures(facts: Facts) -> list[Row]:
+    """This function will return the signatures in the order they were given, with both clocks."""
+    return [
+        {
+            "name": one.name,
+            "capacity": one.capacity,
+            "meaning": one.meaning,
+            "statement": one.statement,
+            "time": both_clocks(one.signed_at, facts.operator.time_zone),
+            "means": f"password at a {one.means}"
+            if one.means == "session"
+            else f"password with a personal {one.means}",
+        }
+        for one in facts.signatures
+    ]
+
+
+def _name_at(inputs: Mapping[str, Any], pointer: str | None) -> str:
+    """Look up the name behind a line; a lap infant without a line of its own stands beside its adult."""
+    if not pointer:
+        return ""
+    found: Any = inputs
+    for step in pointer.strip("/").split("/"):
+        found = found[int(step)] if isinstance(found, list | tuple) else found[step]
+    if not isinstance(found, Mapping):
+        return ""
+    infant = found.get("lap_infant")
+    beside = f", with infant {infant['name']}" if infant else ""
+    return f"{found.get('name', '')}{beside}"
+
+
+def crew(facts: Facts) -> Iterable[str]:
+    """This function will return each crew member with name, position and seat."""
+    return [f"{line['name']}, {line['position']} ({line['seat']})" for line in facts.inputs["crew"]]
