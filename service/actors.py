@@ -1,14 +1,13 @@
 """Finds out who asks: from a bearer token, or from a signed-in browser; fills the Actor of the request."""
 
 from collections.abc import Callable
-from typing import Final
+from typing import Any, Final
 
 from django.http import HttpRequest
 from django.http.response import HttpResponseBase
 from django.utils import timezone
 from rest_framework import authentication, permissions
 from rest_framework.request import Request
-from rest_framework.views import APIView
 
 from fleet.models import Person, Token
 from fleet.queries.duties import roles_of
@@ -100,7 +99,7 @@ class SessionAuthentication(authentication.SessionAuthentication):
     """A browser that is signed in; what is not safe needs the CSRF token besides."""
 
     def authenticate(self, request: Request) -> tuple[Person, None] | None:
-        """This function will return the signed-in person, None when there is none; raises PermissionDenied."""
+        """This function will return the signed-in person or None; raises PermissionDenied on a forgery."""
         found = super().authenticate(request)
         if found is None or not isinstance(found[0], Person):
             return None
@@ -111,7 +110,7 @@ class SessionAuthentication(authentication.SessionAuthentication):
 class Known(permissions.BasePermission):
     """Lets in who is signed in; reading needs `read` besides. Each act asks for itself."""
 
-    def has_permission(self, request: Request, view: APIView) -> bool:  # noqa: ARG002  # the framework's form
+    def has_permission(self, request: Request, view: Any) -> bool:  # noqa: ARG002  # the framework's form
         """This function will say yes, or raise NotSignedIn or NotAllowed."""
         actor = getattr(request, "actor", STRANGER)
         if actor.kind == "stranger":
