@@ -1,14 +1,20 @@
 """Aircraft of one operator. Another operator's aircraft does not exist here."""
 
+import re
 from uuid import UUID
 
 from fleet.models import Aircraft, EmptyWeight, LoadingBasis
 from records.refusal import NotKnown
 
+REGISTRATION = re.compile(r"[A-Z0-9][A-Z0-9-]{1,11}")
+
 
 def aircraft_of(operator: str, registration: str) -> Aircraft:
     """This function will return the operator's aircraft with that registration; raises NotKnown."""
-    found = Aircraft.objects.filter(operator_id=operator, registration=registration.upper()).first()
+    painted = registration.upper()
+    # Whatever is in no registration (a NUL among it, which PostgreSQL's texts cannot hold) names nothing.
+    known = REGISTRATION.fullmatch(painted) is not None
+    found = Aircraft.objects.filter(operator_id=operator, registration=painted).first() if known else None
     if found is None:
         raise NotKnown("aircraft-not-known", f"No aircraft {registration[:20]} is entered.")
     return found

@@ -1,0 +1,24 @@
+"""Addresses of the fleet's part of the API."""
+
+from django.urls import path
+
+from fleet.api import aircraft, empty_weights, loading_bases
+
+_ONE = "aircraft/<str:registration>"
+
+urlpatterns = [
+    path("aircraft", aircraft.AircraftEndpoint.as_view()),
+    path(_ONE, aircraft.OneAircraftEndpoint.as_view()),
+    path(f"{_ONE}/configurations", aircraft.ConfigurationsEndpoint.as_view()),
+    path(f"{_ONE}/loading-bases", loading_bases.LoadingBasesEndpoint.as_view()),
+    path(f"{_ONE}/loading-bases/<uuid:version>", loading_bases.OneLoadingBasisEndpoint.as_view()),
+    path(
+        f"{_ONE}/loading-bases/<uuid:version>/approval", loading_bases.LoadingBasisApprovalEndpoint.as_view()
+    ),
+    path(f"{_ONE}/empty-weights", empty_weights.EmptyWeightsEndpoint.as_view()),
+    path(f"{_ONE}/empty-weights/<uuid:version>", empty_weights.OneEmptyWeightEndpoint.as_view()),
+    path(
+        f"{_ONE}/empty-weights/<uuid:version>/approval", empty_weights.EmptyWeightApprovalEndpoint.as_view()
+    ),
+    path(f"{_ONE}/weighings", empty_weights.WeighingsEndpoint.as_view()),
+]
