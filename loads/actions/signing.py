@@ -5,17 +5,15 @@ from dataclasses import dataclass
 from typing import Literal
 from uuid import UUID
 
-from loads import lifecycle
 from loads.actions.keeping import SALT_BYTES
 from loads.actions.stepping import load_as_seen, take_step
 from loads.models import Signature, Step
-from loads.queries.computation import versions_of
 from loads.queries.current import Current, declared_in
+from loads.queries.signable import capacity_of, statement_of, words_to_sign
 from loads.queries.stale import stale_parts
-from loads.statement import signing_text, statement
+from loads.statement import digest_of
 from records.act import Entry
 from records.actor import Actor
-from records.canonical import digest
 from records.kind import Kind
 from records.refusal import NotAllowed, StepRefused
 from records.strict_json import JSON
@@ -41,12 +39,24 @@ def refuse_unless_signer(kind: Kind, by: Actor) -> None:
 
     Ask it before the password, so that nobody without the duty can try passwords here.
     """
-    if by.person is None or kind.name not in by.may:
-        raise NotAllowed(
-            "signature-not-allowed",
-            f"{by.key} ({by.capacity}) may not sign here.",
-            next_step="A person who holds the duty signs; a token needs the scope sign.",
-        )
+    if kind.name not in by.may:
+        raise _not_a_signer(by)
+    person_signing(by)
+
+
+def person_signing(by: Actor) -> int:
+    """This function will return the number of the person who signs; raises NotAllowed without one."""
+    if by.person is None:
+        raise _not_a_signer(by)
+    return by.person
+
+
+def _not_a_signer(by: Actor) -> NotAllowed:
+    return NotAllowed(
+        "signature-not-allowed",
+        f"{by.key} ({by.capacity}) may not sign here.",
+        next_step="A person who holds the duty signs; a token needs the scope sign.",
+    )
 
 
 def sign(
@@ -57,6 +67,7 @@ def sign(
 
     Raises NotKnown, PreconditionFailed, StepRefused.
     """
+    signer = person_signing(by)
     current = load_as_seen(entry, load, seen, meaning)
     declared = declared_in(current.load)
     _refuse_other_hands(current, meaning, by)
@@ -67,10 +78,10 @@ def sign(
         load=current.load,
         assessment=current.assessment,
         step=step,
-        person_id=by.person,
+        person_id=signer,
         meaning=meaning,
-        capacity=lifecycle.step(current.state, meaning).signed_by or by.capacity,
-        statement=signing_text(meaning, current.assessment.digest),
+        capacity=capacity_of(current.state, meaning),
+        statement=words_to_sign(current, declared, meaning),
         digest=signing.digest,
         name=by.name.encode(),
         salt=secrets.token_bytes(SALT_BYTES),
@@ -134,19 +145,12 @@ def _refuse_what_cannot_be_signed(
             "The weight of a person is estimated, and this operator's procedure has no estimates of people.",
             next_step="Weigh or ask, and revise the load.",
         )
-    if digest_of_stored(current, declared) != used.digest:
+    if digest_of(statement_of(current, declared)) != used.digest:
         raise StepRefused(
             "record-altered",
             "What is stored no longer gives the digest it was kept under.",
             next_step="Do not fly on it. Tell whoever keeps the records, and verify the trail.",
         )
-
-
-def digest_of_stored(current: Current, declared: dict[str, JSON]) -> str:
-    """This function will return the digest of the statement made again from what is stored now."""
-    used = current.assessment
-    versions = versions_of(used.loading_basis, used.empty_weight)
-    return digest(statement(declared, versions, used.engine, current.result()))
 
 
 def _estimated(declared: dict[str, JSON]) -> bool:

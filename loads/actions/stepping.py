@@ -1,6 +1,6 @@
 """What every step of a load's life asks first, and the row it leaves."""
 
-from collections.abc import Iterator
+from collections.abc import Iterator, Mapping
 from contextlib import contextmanager
 from datetime import datetime
 from uuid import UUID
@@ -74,16 +74,19 @@ def one_of_two_racers() -> Iterator[None]:
 
     It goes around the act. The database decides: a step's number is taken once.
     """
-    taken = StepRefused(
+    with refused_as({"step_number_is_taken_once": _taken, "loads_load_replaces_id_key": _taken}):
+        yield
+
+
+def _taken() -> StepRefused:
+    return StepRefused(
         "step-taken",
         "Somebody else moved this load at the same moment.",
         next_step="Read it again and look at what changed.",
     )
-    with refused_as({"step_number_is_taken_once": taken, "loads_load_replaces_id_key": taken}):
-        yield
 
 
-def reason_in(document: dict[str, object], pointer: str = "/reason") -> str:
+def reason_in(document: Mapping[str, object], pointer: str = "/reason") -> str:
     """This function will return the reason in a document, 1 to 500 characters; raises Invalid."""
     given = document.get("reason")
     if given is None:

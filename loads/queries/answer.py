@@ -1,5 +1,6 @@
 """One load as the API answers it: plain values, in the order they are read."""
 
+from collections.abc import Mapping
 from datetime import datetime
 
 from loads.balance.engine import ENGINE_VERSION
@@ -8,6 +9,7 @@ from loads.lifecycle import ways_out
 from loads.models import Load, Paper, Signature
 from loads.queries.computation import Computation, versions_of
 from loads.queries.current import Current, declared_in
+from loads.queries.signable import signatures_due
 from loads.queries.stale import stale_parts
 
 MANIFEST_PATH = "/api/v1/loads/{}/manifest"
@@ -42,7 +44,7 @@ def full_answer_of(current: Current, *, known: datetime) -> Answer:
     """This function will return all there is to read about a load: also what was declared, the names of the
     signers, every step, and whether the assessment still rests on what is in force as known at `known`.
     """
-    load = current.load
+    load, declared = current.load, declared_in(current.load)
     signatures = [
         {**_signature(one), "name": bytes(one.name).decode(), "statement": one.statement}
         for one in signatures_of(load)
@@ -56,7 +58,8 @@ def full_answer_of(current: Current, *, known: datetime) -> Answer:
             {"number": one.number, "state": one.after, "at": one.at, "reason": one.reason}
             for one in load.steps.order_by("number")
         ],
-        "declared": declared_in(load),
+        "to_sign": signatures_due(current, declared),
+        "declared": declared,
     }
 
 
@@ -106,7 +109,7 @@ def cautions(*, invented: bool) -> list[str]:
     return [INVENTED, *CAUTIONS] if invented else list(CAUTIONS)
 
 
-def departure_text(document: dict[str, object]) -> str:
+def departure_text(document: Mapping[str, object]) -> str:
     """This function will return the planned departure as it was typed, with its offset."""
     flight = document["flight"]
     return str(flight["departure"]) if isinstance(flight, dict) else ""

@@ -5,7 +5,7 @@ from datetime import datetime
 
 from fleet.models import Aircraft, EmptyWeight, LoadingBasis
 from fleet.queries.aircraft import aircraft_of
-from fleet.queries.figures import basis_of, figures_of
+from fleet.queries.figures import basis_of
 from fleet.queries.in_force import in_force_for
 from loads.balance.aboard import Outline
 from loads.balance.assess import assess
@@ -13,6 +13,7 @@ from loads.balance.declared import read_load, read_outline
 from loads.balance.engine import ENGINE_VERSION
 from loads.balance.shape import check_shape
 from loads.queries.crew import pilot_in
+from loads.queries.figures import empty_figures
 from loads.statement import statement
 from records.canonical import digest
 from records.refusal import Fault, Invalid, NotKnown
@@ -58,7 +59,11 @@ def compute(operator: str, document: dict[str, JSON], known: datetime) -> Comput
         check_shape(document)
     declared = read_load(document, basis) if basis else outline
     pilot = pilot_in(operator, document)
-    empty = figures_of(used.empty_weight, basis) if used.empty_weight and basis else None
+    empty = (
+        empty_figures(used.empty_weight.document, used.basis.document)
+        if used.empty_weight and used.basis
+        else None
+    )
     result = assess(declared, basis, empty).as_document()
     versions = versions_of(used.basis, used.empty_weight)
     signed = statement(document, versions, ENGINE_VERSION, result)

@@ -1,0 +1,45 @@
+"""Turning what an action returns into an answer with its entity tag."""
+
+from http import HTTPStatus
+
+from loads.queries.answer import answer_of
+from loads.queries.current import Current
+from records.api.asking import etag
+from records.api.once import Answer
+from records.refusal import Fault, Invalid
+from records.strict_json import JSON
+
+
+def moved(current: Current, status: HTTPStatus = HTTPStatus.OK) -> Answer:
+    """This function will return the answer about a load that was just moved."""
+    return status, {"ETag": etag(current.step.number)}, answer_of(current)
+
+
+def created(current: Current) -> Answer:
+    """This function will return the answer about a load that was just submitted, with its address."""
+    status, headers, body = moved(current, HTTPStatus.CREATED)
+    return status, {**headers, "Location": f"/api/v1/loads/{current.load.id}"}, body
+
+
+def refuse_other_fields(document: dict[str, JSON], *known: str) -> None:
+    """This function will raise Invalid for fields that are not known here."""
+    faults = tuple(
+        Fault(
+            f"/{name.replace('~', '~0').replace('/', '~1')}",
+            "unknown-field",
+            f"the fields here are {', '.join(known)}",
+        )
+        for name in document
+        if name not in known
+    )
+    if faults:
+        raise Invalid(*faults[:20])
+
+
+def text_in(document: dict[str, JSON], name: str) -> str:
+    """This function will return a text of the document; raises Invalid when it is missing or no text."""
+    value = document.get(name)
+    if not isinstance(value, str):
+        code = "text-form" if name in document else "missing"
+        raise Invalid(Fault(f"/{name}", code, "a text is needed here"))
+    return value

@@ -1,0 +1,141 @@
+"""What the API reads, for its published description. The reading itself is exact and stands in
+`loads.balance`.
+"""
+
+from drf_spectacular.utils import extend_schema_field
+from rest_framework import serializers
+
+NUMBER = {"oneOf": [{"type": "number"}, {"type": "string", "pattern": r"^-?\d+(\.\d+)?$"}]}
+
+
+@extend_schema_field(NUMBER)
+class ExactNumber(serializers.Field[object, object, object, object]):
+    """A JSON number or a decimal string; at most 15 digits, no exponent. Kept as typed."""
+
+
+class Quantity(serializers.Serializer[object]):
+    """A number and its unit; a unit is never inferred."""
+
+    value = ExactNumber()
+    unit = serializers.CharField()
+
+
+class Density(Quantity):
+    """The delivered density of the fuel and the document that states it."""
+
+    source = serializers.CharField()  # type: ignore[assignment]  # DRF takes fields out of the class
+
+
+class Flight(serializers.Serializer[object]):
+    """Which flight; `departure` carries its offset from UTC."""
+
+    reference = serializers.CharField()
+    leg = serializers.IntegerField(min_value=1, max_value=99)
+    departure = serializers.CharField(help_text="RFC 3339 with an offset: 2026-12-01T08:30:00-06:00")
+    origin = serializers.CharField()
+    destination = serializers.CharField()
+    operation = serializers.CharField()
+
+
+class LapInfant(serializers.Serializer[object]):
+    """An infant on a lap; weight and how only where the adult's weight is not a standard one."""
+
+    name = serializers.CharField()
+    weight = Quantity(required=False)
+    how = serializers.ChoiceField(("weighed", "declared", "estimated"), required=False)
+
+
+class CrewMember(serializers.Serializer[object]):
+    """One of the crew; `person` is a login, which the pilot in command needs before anyone can accept the
+    load.
+    """
+
+    name = serializers.CharField()
+    position = serializers.CharField()
+    seat = serializers.CharField()
+    how = serializers.ChoiceField(("weighed", "declared", "standard", "estimated"))
+    person = serializers.CharField(required=False)
+    category = serializers.CharField(required=False)
+    weight = Quantity(required=False)
+
+
+class Passenger(serializers.Serializer[object]):
+    """One passenger in a seat."""
+
+    name = serializers.CharField()
+    seat = serializers.CharField()
+    how = serializers.ChoiceField(("weighed", "declared", "standard", "estimated"))
+    category = serializers.CharField(required=False)
+    weight = Quantity(required=False)
+    lap_infant = LapInfant(required=False)
+
+
+class Item(serializers.Serializer[object]):
+    """What is aboard besides people and fuel; `removed`: equipment of the empty weight that is not aboard."""
+
+    kind = serializers.ChoiceField(("baggage", "cargo", "ballast", "equipment", "consumable"))
+    what = serializers.CharField()
+    place = serializers.CharField()
+    how = serializers.ChoiceField(("weighed", "declared", "standard", "estimated"))
+    weight = Quantity(required=False)
+    removed = serializers.BooleanField(required=False)
+
+
+class Fuel(serializers.Serializer[object]):
+    """Usable fuel per tank at engine start, and what of it is meant to burn."""
+
+    density = Density()
+    at_engine_start = serializers.DictField(child=Quantity())
+    not_usable = serializers.DictField(child=Quantity(), required=False)
+    taxi = Quantity()
+    trip = Quantity()
+    minimum_at_landing = Quantity()
+
+
+class StatedLimit(serializers.Serializer[object]):
+    """A limit of this flight and its source."""
+
+    at = serializers.ChoiceField(("take-off", "landing"))
+    weight = Quantity()
+    source = serializers.CharField()  # type: ignore[assignment]  # DRF takes fields out of the class
+
+
+class LoadDocument(serializers.Serializer[object]):
+    """A load as submitted: `tarebook.load/1`."""
+
+    schema = serializers.ChoiceField(("tarebook.load/1",))
+    aircraft = serializers.CharField(help_text="the registration")
+    configuration = serializers.CharField()
+    flight = Flight()
+    persons_on_board = serializers.IntegerField(min_value=1)
+    crew = CrewMember(many=True)
+    passengers = Passenger(many=True)
+    items = Item(many=True)
+    fuel = Fuel()
+    limits = StatedLimit(many=True, required=False)
+
+
+class RevisionDocument(LoadDocument):
+    """A load that replaces another, and why."""
+
+    reason = serializers.CharField(max_length=500)
+
+
+class SignatureRequest(serializers.Serializer[object]):
+    """A signature: what it means, the digest that was shown, and the signer's password."""
+
+    meaning = serializers.ChoiceField(("prepared", "accepted"))
+    digest = serializers.RegexField(r"^[0-9a-f]{64}$")
+    password = serializers.CharField(write_only=True)
+
+
+class WithdrawalRequest(serializers.Serializer[object]):
+    """Why the load will not fly."""
+
+    reason = serializers.CharField(max_length=500)
+
+
+class DepartureRequest(serializers.Serializer[object]):
+    """When the aircraft left, with its offset."""
+
+    at = serializers.CharField(help_text="RFC 3339 with an offset: 2026-12-01T08:41:00-06:00")

@@ -1,0 +1,142 @@
+"""What the API answers, for its published description. Figures are decimal strings in the units stated."""
+
+from rest_framework import serializers
+
+from loads.api.shapes_in import Flight, LoadDocument
+from loads.lifecycle import STATES
+
+VERDICTS = ("within", "outside", "unresolved")
+
+
+class Version(serializers.Serializer[object]):
+    """One version that was used."""
+
+    id = serializers.UUIDField()
+    digest = serializers.CharField()
+
+
+class BasisUsed(serializers.Serializer[object]):
+    """What the computation rests on; null where nothing was in force."""
+
+    loading_basis = Version(allow_null=True)
+    empty_weight = Version(allow_null=True)
+    configuration = serializers.CharField()
+    engine = serializers.CharField()
+
+
+class Check(serializers.Serializer[object]):
+    """One limit tested at one phase."""
+
+    code = serializers.CharField()
+    title = serializers.CharField()
+    phase = serializers.CharField(allow_null=True)
+    actual = serializers.CharField(allow_null=True)
+    limit = serializers.CharField(allow_null=True)
+    low = serializers.CharField(allow_null=True)
+    unit = serializers.CharField(allow_null=True)
+    margin = serializers.CharField(allow_null=True)
+    margin_text = serializers.CharField(allow_blank=True)
+    source = serializers.CharField(allow_blank=True)  # type: ignore[assignment]  # DRF takes fields out of the class
+    result = serializers.ChoiceField(("pass", "fail", "unresolved", "advisory"))
+    what_next = serializers.CharField(allow_blank=True)
+    margin_weight = serializers.CharField(allow_null=True, required=False)
+    edge = serializers.CharField(allow_null=True, required=False)
+
+
+class ComputedAnswer(serializers.Serializer[object]):
+    """A load computed: every phase, every limit with its margin, and the sum line by line."""
+
+    aircraft = serializers.CharField()
+    configuration = serializers.CharField()
+    flight = Flight()
+    verdict = serializers.ChoiceField(VERDICTS)
+    units = serializers.DictField(child=serializers.CharField(), allow_null=True)
+    phases = serializers.ListField(child=serializers.DictField())
+    checks = Check(many=True)
+    allowable_take_off = serializers.DictField(allow_null=True)
+    governing = serializers.DictField(child=serializers.CharField())
+    fuel = serializers.DictField(allow_null=True)
+    sumsheet = serializers.ListField(child=serializers.DictField())
+    operating_weight = serializers.DictField(allow_null=True)
+    persons = serializers.DictField(allow_null=True)
+    advisories = serializers.ListField(child=serializers.CharField())
+    not_assessed = serializers.ListField(child=serializers.CharField())
+    basis = BasisUsed()
+    digest = serializers.CharField()
+    cautions = serializers.ListField(child=serializers.CharField())
+
+
+class SignatureGiven(serializers.Serializer[object]):
+    """One signature; the name and the words signed are shown where the load is read."""
+
+    meaning = serializers.CharField()
+    capacity = serializers.CharField()
+    person = serializers.IntegerField()
+    signed_at = serializers.DateTimeField()
+    digest = serializers.CharField()
+    name = serializers.CharField(required=False)
+    statement = serializers.CharField(required=False)
+
+
+class ManifestNumber(serializers.Serializer[object]):
+    """The manifest of an accepted load: its number, and where its PDF is."""
+
+    number = serializers.IntegerField()
+    href = serializers.CharField()
+
+
+class LoadAnswer(ComputedAnswer):
+    """A stored load as it stands. `step` is its entity tag."""
+
+    id = serializers.UUIDField()
+    state = serializers.ChoiceField(STATES)
+    step = serializers.IntegerField()
+    replaces = serializers.UUIDField(allow_null=True)
+    submitted_at = serializers.DateTimeField()
+    assessed_at = serializers.DateTimeField()
+    signatures = SignatureGiven(many=True)
+    manifest = ManifestNumber(allow_null=True)
+
+
+class StepTaken(serializers.Serializer[object]):
+    """One step of a load's life."""
+
+    number = serializers.IntegerField()
+    state = serializers.ChoiceField(STATES)
+    at = serializers.DateTimeField()
+    reason = serializers.CharField(allow_blank=True)
+
+
+class FullLoadAnswer(LoadAnswer):
+    """All there is to read about a load. `stale` names what changed since it was assessed."""
+
+    stale = serializers.ListField(child=serializers.CharField())
+    replaced_by = serializers.UUIDField(allow_null=True)
+    steps = StepTaken(many=True)
+    to_sign = serializers.DictField(
+        child=serializers.CharField(),
+        help_text="what may be signed next, by meaning: exactly the words signed",
+    )
+    declared = LoadDocument()
+
+
+class LoadSummary(serializers.Serializer[object]):
+    """One line of the list of loads."""
+
+    id = serializers.UUIDField()
+    state = serializers.ChoiceField(STATES)
+    step = serializers.IntegerField()
+    replaces = serializers.UUIDField(allow_null=True)
+    aircraft = serializers.CharField()
+    configuration = serializers.CharField()
+    flight = Flight()
+    verdict = serializers.ChoiceField(VERDICTS)
+    governing = serializers.DictField(child=serializers.CharField(), allow_null=True)
+    digest = serializers.CharField()
+
+
+class LoadList(serializers.Serializer[object]):
+    """Loads by departure, one page; the header Link (rel="next") and `next` lead to the next one."""
+
+    loads = LoadSummary(many=True)
+    next = serializers.CharField(allow_null=True)

@@ -1,0 +1,19 @@
+"""Addresses of the loads room's part of the API."""
+
+from django.urls import path
+
+from loads.api.assessments import AssessmentsView
+from loads.api.loads import LoadsView, LoadView
+from loads.api.signatures import SignaturesView
+from loads.api.steps import AssessmentView, DepartureView, RevisionsView, WithdrawalView
+
+urlpatterns = [
+    path("assessments", AssessmentsView.as_view(), name="api-assessments"),
+    path("loads", LoadsView.as_view(), name="api-loads"),
+    path("loads/<uuid:load>", LoadView.as_view(), name="api-load"),
+    path("loads/<uuid:load>/revisions", RevisionsView.as_view(), name="api-load-revisions"),
+    path("loads/<uuid:load>/assessment", AssessmentView.as_view(), name="api-load-assessment"),
+    path("loads/<uuid:load>/signatures", SignaturesView.as_view(), name="api-load-signatures"),
+    path("loads/<uuid:load>/withdrawal", WithdrawalView.as_view(), name="api-load-withdrawal"),
+    path("loads/<uuid:load>/departure", DepartureView.as_view(), name="api-load-departure"),
+]

@@ -1,0 +1,46 @@
+"""What a signer is shown and signs: made from what is stored, in the words of `loads.statement`."""
+
+from collections.abc import Mapping
+
+from loads import lifecycle
+from loads.queries.computation import versions_of
+from loads.queries.current import Current
+from loads.statement import signing_text, statement
+
+# Stands for the signer in the words that are kept; the name is kept apart, where it can be destroyed.
+SIGNER = "The undersigned"
+MEANINGS = ("prepared", "accepted")
+
+
+def statement_of(current: Current, declared: Mapping[str, object]) -> dict[str, object]:
+    """This function will return the statement made again from what is stored: its digest must be the kept
+    one.
+    """
+    used = current.assessment
+    versions = versions_of(used.loading_basis, used.empty_weight)
+    return statement(declared, versions, used.engine, current.result())
+
+
+def words_to_sign(current: Current, declared: Mapping[str, object], meaning: str) -> str:
+    """This function will return exactly what is signed with that meaning, without the name of the signer."""
+    return signing_text(
+        statement_of(current, declared),
+        name=SIGNER,
+        capacity=capacity_of(current.state, meaning),
+        meaning=meaning,
+    )
+
+
+def signatures_due(current: Current, declared: Mapping[str, object]) -> dict[str, str]:
+    """This function will return what may be signed next, by meaning: the words; empty unless the verdict is
+    within.
+    """
+    if current.assessment.verdict != "within":
+        return {}
+    due = (meaning for meaning in MEANINGS if meaning in lifecycle.ways_out(current.state))
+    return {meaning: words_to_sign(current, declared, meaning) for meaning in due}
+
+
+def capacity_of(state: str, meaning: str) -> str:
+    """This function will return in what capacity a load of that state is signed with that meaning."""
+    return lifecycle.step(state, meaning).signed_by or ""
