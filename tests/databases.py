@@ -180,3 +180,16 @@ BEGIN
     END LOOP;
 END $$;
 """
+
+
+def connect(alias: str = "owner") -> psycopg.Connection[tuple[object, ...]]:
+    """This function will connect to the database of now past Django, as the service role, the owner or the superuser."""
+    place = connections.settings[alias]
+    return psycopg.connect(
+        dbname=place["NAME"],
+        user=place["USER"],
+        password=place["PASSWORD"],
+        host=place["HOST"],
+        port=place["PORT"],
+        autocommit=True,
+    )

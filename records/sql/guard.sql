@@ -75,8 +75,10 @@ BEGIN
         WHEN cardinality(personal) > 0 AND column_type(name, 'salt') IS DISTINCT FROM 'bytea'
             THEN 'personal columns need a column salt of type bytea'
     END INTO wrong;
-    SELECT coalesce(wrong, format('it has no column %I', c)) INTO wrong
-    FROM unnest(key || personal || hidden || closes || operator) AS u (c) WHERE column_type(name, c) IS NULL;
+    IF wrong IS NULL THEN
+        SELECT format('it has no column %I', c) INTO wrong
+        FROM unnest(key || personal || hidden || closes || operator) AS u (c) WHERE column_type(name, c) IS NULL;
+    END IF;
     IF wrong IS NOT NULL THEN
         RAISE EXCEPTION USING ERRCODE = 'TB006', MESSAGE = format('the table %L cannot be guarded: %s', name, wrong);
     END IF;

@@ -35,9 +35,9 @@ $$;
 -- without an upper end to one with an end and the same beginning.
 CREATE OR REPLACE FUNCTION closed_once(was text, became text)
 RETURNS boolean LANGUAGE sql IMMUTABLE AS $$
-    SELECT CASE
+    SELECT coalesce(CASE
         WHEN was IS NULL OR was = 'infinity' THEN became IS NOT NULL AND became <> 'infinity'
         WHEN was ~ ',(infinity)?[)\]]$'
             THEN became !~ ',(infinity)?[)\]]$' AND split_part(was, ',', 1) = split_part(became, ',', 1)
-        ELSE false END
+        END, false)
 $$;

@@ -78,8 +78,8 @@ BEGIN
         seen := seen + 1;
         PERFORM check_operator(TG_TABLE_NAME, act.chain, pair.was ->> TG_ARGV[5]),
                 check_operator(TG_TABLE_NAME, act.chain, pair.became ->> TG_ARGV[5]);
-        IF closing <> '{}' AND (pair.was - closing <> pair.became - closing OR EXISTS (
-            SELECT FROM unnest(closing) AS u (c) WHERE NOT closed_once(pair.was ->> c, pair.became ->> c))) THEN
+        IF closing <> '{}' AND (pair.was - closing IS DISTINCT FROM pair.became - closing OR EXISTS (
+            SELECT FROM unnest(closing) AS u (c) WHERE closed_once(pair.was ->> c, pair.became ->> c) IS NOT TRUE)) THEN
             RAISE EXCEPTION USING ERRCODE = 'TB005', TABLE = TG_TABLE_NAME,
                 MESSAGE = format('row %s of %I may be closed once, and nothing else of it may change', pair.key, TG_TABLE_NAME);
         END IF;
