@@ -88,7 +88,10 @@ class Invalid(Refused):
     title = "invalid"
 
     def __init__(self, *faults: Fault, code: str = "invalid", detail: str = "", next_step: str = "") -> None:
-        detail = detail or "; ".join(f"{fault.pointer or 'document'}: {fault.detail}" for fault in faults[:3])
+        named = "; ".join(
+            f"{fault.pointer or 'document'}: {fault.detail.rstrip('.')}" for fault in faults[:3]
+        )
+        detail = detail or f"{named}{', and more' if len(faults) > 3 else ''}."  # noqa: PLR2004  # as named
         super().__init__(code, detail, faults=faults, next_step=next_step)
 
 

@@ -33,10 +33,9 @@ def to_person(roles: Collection[str]) -> frozenset[str]:
     A person without any duty can sign in and sees nothing.
     """
     acts: frozenset[str] = frozenset()
-    for role in roles:
-        if not fleet.duties.is_role(role):
-            continue
-        acts |= fleet.duties.ACTS_OF[role] | loads.duties.ACTS_OF[role] | {READ}
+    for role in fleet.duties.ROLES:
+        if role in roles:
+            acts |= fleet.duties.ACTS_OF[role] | loads.duties.ACTS_OF[role] | {READ}
     return acts
 
 

@@ -1,8 +1,10 @@
-"""What the OpenAPI document says besides the endpoints themselves: who may ask, how refusals look, the key
-of a POST.
+"""What the OpenAPI document says besides the endpoints themselves: who may ask, and how any refusal looks.
+
+Each endpoint describes its own shapes, and what is special in its refusals (`records.api.describing`).
 """
 
 import json
+from collections.abc import Iterator
 from pathlib import Path
 from typing import Any, Final
 
@@ -11,63 +13,32 @@ from drf_spectacular.drainage import GENERATOR_STATS
 from drf_spectacular.extensions import OpenApiAuthenticationExtension
 from drf_spectacular.generators import SchemaGenerator
 
+from records.api.describing import IDEMPOTENCY_KEY
 from service.problems import MEDIA_TYPE
 
 COMMITTED: Final = Path(__file__).with_name("openapi.json")
 # The same sum with nothing stored: repeating it needs no key.
 STORES_NOTHING: Final = frozenset({"/api/v1/assessments"})
-
-_TEXT: Final = {"type": "string"}
-_PROBLEM: Final = {
-    "type": "object",
-    "description": "A problem (RFC 9457). `code` is stable; `errors` name fields by JSON pointer, query "
-    "parameters as `?name`.",
-    "required": ["type", "title", "status", "code", "detail", "next_step", "errors", "request"],
-    "properties": {
-        "type": {"type": "string", "format": "uri-reference"},
-        "title": _TEXT,
-        "status": {"type": "integer", "minimum": 400, "maximum": 599},
-        "code": {"type": "string", "pattern": "^[a-z0-9-]+$"},
-        "detail": _TEXT,
-        "next_step": _TEXT,
-        "errors": {
-            "type": "array",
-            "items": {
-                "type": "object",
-                "required": ["pointer", "code", "detail"],
-                "properties": {"pointer": _TEXT, "code": _TEXT, "detail": _TEXT},
-            },
-        },
-        "request": {"type": "string", "description": "The number of the request, as in X-Request-ID."},
-    },
-}
 _KEY: Final = {
-    "name": "Idempotency-Key",
+    "name": IDEMPOTENCY_KEY.name,
     "in": "header",
     "required": True,
-    "description": "A fresh random key for each new request; the same key and the same bytes to repeat "
-    "one. The effect happens once, and the answer is the same, byte for byte, for seven days.",
+    "description": IDEMPOTENCY_KEY.description,
     "schema": {"type": "string", "pattern": "^[\\x21-\\x7e]{1,120}$"},
 }
-_WORDS: Final = {
-    "400": "unreadable",
-    "401": "not signed in",
-    "403": "not allowed",
-    "404": "not known, or another operator's",
-    "406": "not acceptable",
-    "409": "the step is refused, or the key is in flight",
-    "412": "the state has moved on",
-    "413": "too large",
-    "415": "media type not read",
-    "422": "fields are wrong",
-    "428": "If-Match is missing",
-    "429": "locked out",
-    "503": "the database was not reached",
-    "default": "any other refusal or failure",
+_REFUSALS: Final = {
+    "400": "The request cannot be read, or its Idempotency-Key is missing.",
+    "401": "Nobody is signed in, or the token does not serve.",
+    "403": "The actor may not do this.",
+    "404": "The address names nothing, or something of another operator.",
+    "409": "The state does not allow this step, or a request with this key is being answered.",
+    "413": "The body is larger than is read.",
+    "422": "Fields are wrong, each named by its pointer; or the key came with another request before.",
+    "default": "Any other refusal or failure.",
 }
 
 
-class TokenScheme(OpenApiAuthenticationExtension):  # type: ignore[misc]  # the library is untyped
+class TokenScheme(OpenApiAuthenticationExtension):  # type: ignore[no-untyped-call]  # the library is untyped
     """How a bearer token is shown in the document."""
 
     target_class = "service.actors.TokenAuthentication"
@@ -78,7 +49,7 @@ class TokenScheme(OpenApiAuthenticationExtension):  # type: ignore[misc]  # the 
         return {"type": "http", "scheme": "bearer", "bearerFormat": "tb_ and 43 characters"}
 
 
-class SessionScheme(OpenApiAuthenticationExtension):  # type: ignore[misc]  # the library is untyped
+class SessionScheme(OpenApiAuthenticationExtension):  # type: ignore[no-untyped-call]  # the library is untyped
     """How a signed-in browser is shown in the document."""
 
     target_class = "service.actors.SessionAuthentication"
@@ -90,50 +61,48 @@ class SessionScheme(OpenApiAuthenticationExtension):  # type: ignore[misc]  # th
 
 
 def finish(result: dict[str, Any], **_: Any) -> dict[str, Any]:
-    """This function will add problems, keys and headers to every operation (a POSTPROCESSING_HOOK)."""
+    """This function will complete every operation (a POSTPROCESSING_HOOK): its key, and how it refuses.
+
+    What an endpoint says of itself stands. `default` is a method, an answer or a body of another kind (405,
+    406, 415) or a failure (500).
+    """
     components = result.setdefault("components", {})
-    components.setdefault("schemas", {})["Problem"] = _PROBLEM
-    components["responses"] = {
-        f"Problem{status.title()}": {
-            "description": words,
-            "content": {MEDIA_TYPE: {"schema": {"$ref": "#/components/schemas/Problem"}}},
-        }
-        for status, words in _WORDS.items()
-    }
-    components["parameters"] = {"IdempotencyKey": _KEY}
-    for path, operations in result["paths"].items():
-        for method, operation in operations.items():
-            _finish_operation(path, method, operation)
+    components["responses"] = {f"Problem{status}": _problem(words) for status, words in _REFUSALS.items()}
+    for path, method, operation in _operations(result):
+        stores = method == "post" and path not in STORES_NOTHING
+        named = {parameter.get("name") for parameter in operation.get("parameters", ())}
+        if stores and "Idempotency-Key" not in named:
+            operation.setdefault("parameters", []).append(_KEY)
+        statuses = {"default"}
+        statuses |= {"401", "403"} if operation.get("security") else set()
+        statuses |= {"404"} if "{" in path else set()
+        statuses |= {"400", "413", "422"} if method == "post" else set()
+        statuses |= {"409"} if stores else set()
+        for status in sorted(statuses - set(operation["responses"])):
+            operation["responses"][status] = {"$ref": f"#/components/responses/Problem{status}"}
     return result
 
 
-def _finish_operation(path: str, method: str, operation: dict[str, Any]) -> None:
-    statuses = {"406", "503", "default"}
-    if operation.get("security"):
-        statuses |= {"401", "403"}
-    if "{" in path:
-        statuses |= {"404"}
-    if method == "get":
-        statuses |= {"422"} if any(p["in"] == "query" for p in operation.get("parameters", ())) else set()
-    else:
-        statuses |= {"400", "409", "413", "415", "422"}
-        if path not in STORES_NOTHING:
-            operation.setdefault("parameters", []).append({"$ref": "#/components/parameters/IdempotencyKey"})
-    if any(p.get("name") == "If-Match" for p in operation.get("parameters", ())):
-        statuses |= {"412", "428"}
-    if path.endswith("/signatures"):
-        statuses |= {"429"}
-    responses = operation.setdefault("responses", {})
-    for status in sorted(statuses):
-        responses.setdefault(status, {"$ref": f"#/components/responses/Problem{status.title()}"})
+def _problem(words: str) -> dict[str, Any]:
+    return {
+        "description": words,
+        "content": {MEDIA_TYPE: {"schema": {"$ref": "#/components/schemas/Problem"}}},
+    }
 
 
 def document() -> tuple[str, list[str]]:
-    """This function will return the document as it follows from the endpoints, as text, and what is wrong
-    with it.
-    """
+    """This function will return the document as it follows from the endpoints, and what is wrong with it."""
     GENERATOR_STATS.reset()
+    generator = SchemaGenerator()  # type: ignore[no-untyped-call]  # the library is untyped
     with GENERATOR_STATS.silence():
-        schema = SchemaGenerator().get_schema(request=None, public=True)
-    complaints = sorted({*GENERATOR_STATS._error_cache, *GENERATOR_STATS._warn_cache})  # noqa: SLF001  # no public way
-    return json.dumps(schema, indent=1, ensure_ascii=False, default=str) + "\n", complaints
+        schema = generator.get_schema(request=None, public=True)  # type: ignore[no-untyped-call]  # as above
+    complaints = {*GENERATOR_STATS._error_cache, *GENERATOR_STATS._warn_cache}  # noqa: SLF001  # no public way
+    if "Problem" not in schema["components"]["schemas"]:
+        complaints.add("no endpoint describes the problem body")
+    return json.dumps(schema, indent=1, ensure_ascii=False, default=str) + "\n", sorted(complaints)
+
+
+def _operations(schema: dict[str, Any]) -> Iterator[tuple[str, str, dict[str, Any]]]:
+    for path, operations in schema["paths"].items():
+        for method, operation in operations.items():
+            yield path, method, operation

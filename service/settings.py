@@ -102,6 +102,8 @@ LOGIN_URL = "sign-in"
 AXES_FAILURE_LIMIT = env.whole("SIGN_IN_FAILURES", 5, low=1, high=100)
 AXES_COOLOFF_TIME = 0.25  # hours
 AXES_LOCKOUT_PARAMETERS = ["username"]
+# By login alone, wherever the tries come from: counted by address, guesses from many places would go on.
+SILENCED_SYSTEM_CHECKS = ["axes.W006"]
 AXES_RESET_ON_SUCCESS = True
 AXES_ENABLE_ADMIN = False
 AXES_DISABLE_ACCESS_LOG = True
@@ -129,7 +131,7 @@ if env.flag("BEHIND_PROXY", False):
 
 STATIC_URL = "static/"
 STATICFILES_DIRS = [BASE_DIR / "static"]
-STATIC_ROOT = Path(env.text("STATIC_ROOT", str(BASE_DIR / ".tarebook" / "static")))
+STATIC_ROOT = env.text("STATIC_ROOT", "") or None
 # Served straight from static/ and the packages, no collect step, no third-party host.
 WHITENOISE_USE_FINDERS = True
 WHITENOISE_AUTOREFRESH = False
@@ -164,7 +166,7 @@ SPECTACULAR_SETTINGS = {
     "SWAGGER_UI_DIST": "SIDECAR",
     "SWAGGER_UI_FAVICON_HREF": "SIDECAR",
     "COMPONENT_SPLIT_REQUEST": True,
-    "POSTPROCESSING_HOOKS": ["drf_spectacular.hooks.postprocess_schema_enums", "service.openapi.finish"],
+    "POSTPROCESSING_HOOKS": ["service.openapi.finish"],
 }
 
 LOGGING = {

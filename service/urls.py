@@ -2,7 +2,7 @@
 
 from importlib.util import find_spec
 
-from django.urls import URLResolver, include, path
+from django.urls import URLPattern, URLResolver, include, path
 
 from service import pages
 from service.docs import docs, openapi
@@ -14,7 +14,7 @@ def _room(addresses: str) -> list[URLResolver]:
     return [path("", include(addresses))] if find_spec(addresses) else []
 
 
-api = [
+api: list[URLPattern | URLResolver] = [
     *_room("records.api.urls"),
     *_room("fleet.api.urls"),
     *_room("loads.api.urls"),
@@ -23,7 +23,7 @@ api = [
 ]
 urlpatterns = [
     path("api/v1/", include(api)),
-    path("health", Health.as_view(), name="health"),
+    path("health", Health.as_view(schema=None), name="health"),
     path("docs", docs, name="docs"),
     path("sign-in", pages.sign_in, name="sign-in"),
     path("sign-out", pages.sign_out, name="sign-out"),

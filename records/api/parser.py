@@ -1,13 +1,13 @@
 """The one parser of the API: JSON as `records.strict_json` reads it."""
 
-from typing import IO, Any
+from typing import Any
 
 from django.core.exceptions import RequestDataTooBig
 from django.http import HttpRequest
 from rest_framework.parsers import BaseParser
 
 from records.refusal import TooLarge
-from records.strict_json import JSON, MOST_BYTES, read
+from records.strict_json import MOST_BYTES, read
 
 
 class StrictJSONParser(BaseParser):
@@ -17,7 +17,7 @@ class StrictJSONParser(BaseParser):
 
     media_type = "application/json"
 
-    def parse(self, stream: IO[Any], *_positional: Any, **_named: Any) -> JSON:
+    def parse(self, stream: Any, *_positional: Any, **_named: Any) -> Any:
         """This function will return the document; raises Unreadable (400) and TooLarge (413)."""
         return read(body_of(stream) if isinstance(stream, HttpRequest) else stream.read(MOST_BYTES + 1))
 
