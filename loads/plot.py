@@ -20,12 +20,13 @@ from loads.plot_scale import Scale, ticks
 from loads.svg import corners, element, label, line, short
 
 DASHES = ("none", "7 3", "2 2", "9 3 2 3")
+LONGEST_WHOLE = 4  # figures before the point that are not set apart
 ROW = 10.0  # from one line of a label to the next
 NAMES = {
     ("longitudinal", "arm"): "centre of gravity, arm",
     ("longitudinal", "moment"): "moment",
-    ("lateral", "arm"): "lateral centre of gravity, right is positive",
-    ("lateral", "moment"): "lateral moment, right is positive",
+    ("lateral", "arm"): "lateral centre of gravity, arm",
+    ("lateral", "moment"): "lateral moment",
 }
 
 
@@ -79,7 +80,7 @@ def plot(
     x, y = Scale.around(across, frame.left, frame.right), Scale.around(up, frame.bottom, frame.top)
     unit = units["moment" if plane == "moment" else "length"]
     parts = [
-        *_grid(x, y, frame),
+        *_grid(x, y, frame, sided=axis == "lateral"),
         *_titles(frame, f"{NAMES[axis, plane]}, {unit}", f"{weight_word}, {units['weight']}"),
         *(_curve(envelope, number, x, y) for number, envelope in enumerate(shown)),
         *(line((frame.left, y.at(v)), (frame.right, y.at(v)), stroke_dasharray="4 2") for v in limits),
@@ -117,26 +118,35 @@ def _weight_limits(checks: Iterable[Mapping[str, Any]], unit: str) -> dict[float
         if family in {"weight", "performance"} and check["limit"]:
             name = check["phase"] if family == "weight" else check["source"]
             named.setdefault(float(Fraction(check["limit"])), []).append(name)
-    return {v: (*broken(f"{', '.join(phases)} limit"), f"{short(v)} {unit}") for v, phases in named.items()}
+    return {v: broken(f"{', '.join(phases)} limit {short(v)} {unit}") for v, phases in named.items()}
 
 
-def _grid(x: Scale, y: Scale, frame: Frame) -> list[str]:
+def _grid(x: Scale, y: Scale, frame: Frame, *, sided: bool) -> list[str]:
     parts = []
     for value in ticks(x):
         at = x.at(value)
         parts += [
             line((at, frame.top), (at, frame.bottom), stroke="#ccc"),
-            label(short(value), (at, frame.bottom + 11), text_anchor="middle"),
+            label(_tick(value, sided=sided), (at, frame.bottom + 11), text_anchor="middle"),
         ]
     for value in ticks(y):
         at = y.at(value)
         parts += [
             line((frame.left, at), (frame.right, at), stroke="#ccc"),
-            label(short(value), (frame.left - 4, at + 3), text_anchor="end"),
+            label(_tick(value), (frame.left - 4, at + 3), text_anchor="end"),
         ]
     size = {"width": frame.right - frame.left, "height": frame.bottom - frame.top}
     edge = element("rect", x=frame.left, y=frame.top, fill="none", stroke="#000", stroke_width=0.6, **size)
     return [*parts, edge]
+
+
+def _tick(value: float, *, sided: bool = False) -> str:
+    """A figure on an axis: thousands of long ones set apart, sides as letters, never as a bare sign."""
+    whole, _, part = short(abs(value)).partition(".")
+    if len(whole) > LONGEST_WHOLE:
+        whole = f"{int(whole):,}".replace(",", "\u00a0")
+    side = ("L " if sided else "\u2212") if value < 0 else "R " if sided and value > 0 else ""
+    return f"{side}{whole}.{part}" if part else f"{side}{whole}"
 
 
 def _titles(frame: Frame, across: str, up: str) -> list[str]:

@@ -1,12 +1,13 @@
 """The block a pilot reads first, in the order in which a pilot asks."""
 
 from collections.abc import Iterator, Mapping
-from datetime import datetime
+from datetime import UTC, datetime
 from typing import Any
 
 from loads.balance.aboard import PILOT_IN_COMMAND
+from loads.balance.rounding import CHORD_PLACES
 from loads.manifest.facts import Facts
-from loads.manifest.figures import SPACE, column, figure, offset, percent_chord, utc
+from loads.manifest.figures import SPACE, column, figure, offset, percent_chord
 from loads.manifest.words import Words
 
 Block = dict[str, Any]
@@ -29,7 +30,7 @@ def flight_block(facts: Facts) -> Block:
         "leg": str(flight["leg"]),
         "date": f"{departure:%Y-%m-%d}",
         "local": f"{departure:%H:%M} {offset(departure)}",
-        "utc": utc(departure),
+        "utc": f"{departure.astimezone(UTC):%Y-%m-%d %H:%M} UTC",
         "origin": flight["origin"],
         "destination": flight["destination"],
         "operation": flight["operation"],
@@ -64,7 +65,9 @@ def figures_block(facts: Facts, words: Words) -> Block:
         "governed_by": words.said(allowable["governed_by"]),
         "cg_arm": figure(at["take-off"]["arm"]),
         "cg_unit": units["length"],
-        "cg_chord": figure(at["take-off"]["percent_chord"]) if at["take-off"]["percent_chord"] else "",
+        "cg_chord": figure(at["take-off"]["percent_chord"], CHORD_PLACES)
+        if at["take-off"]["percent_chord"]
+        else "",
         "cg_low": figure(cg["low"]) if cg["low"] else "none",
         "cg_high": figure(cg["limit"]) if cg["limit"] else "none",
         "cg_chord_limits": _chord_limits(facts, cg),
@@ -73,17 +76,16 @@ def figures_block(facts: Facts, words: Words) -> Block:
         "trim": _trim(facts),
         "zero_fuel": _beside(at["zero fuel"]["weight"], checks["weight.zero-fuel"]),
         "landing": _beside(at["landing"]["weight"], checks["weight.landing"]),
-        "persons": {name: str(count) for name, count in result["persons"].items()},
+        "persons": _persons(result["persons"]),
     }
 
 
 def fuel_block(facts: Facts) -> Block:
     """This function will return the fuel by tank and in total, in volume and in weight."""
     fuel = facts.result["fuel"]
-    columns = {
-        key: column([tank[key] for tank in fuel["tanks"]])
-        for key in ("at_engine_start", "at_take_off", "at_landing", "weight_at_engine_start")
-    }
+    keys = ("at_engine_start", "at_take_off", "at_landing")
+    figures = iter(column([tank[key] for key in keys for tank in fuel["tanks"]]))
+    columns = {key: [next(figures) for _ in fuel["tanks"]] for key in keys}
     tanks = [
         {"name": tank["name"], **{key: values[place] for key, values in columns.items()}}
         for place, tank in enumerate(fuel["tanks"])
@@ -135,7 +137,7 @@ def _chord_limits(facts: Facts, cg: Mapping[str, Any]) -> str:
         return ""
     low = percent_chord(cg["low"], facts.basis.chord, "up")
     high = percent_chord(cg["limit"], facts.basis.chord, "down")
-    return f"{figure(low)} to {figure(high)} %"
+    return f"{figure(low, CHORD_PLACES)} to {figure(high, CHORD_PLACES)} %"
 
 
 def _trim(facts: Facts) -> str:
@@ -147,7 +149,16 @@ def _trim(facts: Facts) -> str:
 
 
 def _beside(weight: str, check: Mapping[str, Any]) -> Block:
-    return {
-        "weight": figure(weight),
-        "limit": figure(check["limit"]) if check["limit"] else check["margin_text"],
-    }
+    limit = f"limit {figure(check['limit'])} {check['unit']}" if check["limit"] else check["margin_text"]
+    return {"weight": figure(weight), "limit": limit}
+
+
+def _persons(counts: Mapping[str, int]) -> Block:
+    parts = [f"{counts['crew']} crew", _counted(counts["passengers"], "passenger")]
+    if counts["lap_infants"]:
+        parts.append(_counted(counts["lap_infants"], "lap infant"))
+    return {"total": str(counts["total"]), "words": ", ".join(parts)}
+
+
+def _counted(count: int, what: str) -> str:
+    return f"{count} {what}{'' if count == 1 else 's'}"

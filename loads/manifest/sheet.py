@@ -9,6 +9,8 @@ from loads.manifest.figures import both_clocks
 from loads.manifest.words import SINGLE_ENGINE_US, WORDS, Words
 from loads.plot import Frame, plot
 
+# Height of one plot, by paper and by whether there are two of them, so that the first page holds them.
+HEIGHTS = {("Letter", False): 315.0, ("A4", False): 355.0, ("Letter", True): 200.0, ("A4", True): 232.0}
 STATEMENT_NAME = "statement.json"
 ENCLOSED = (
     f"Enclosed in this file as {STATEMENT_NAME}: what was signed (inputs as typed, digests of the versions "
@@ -70,7 +72,8 @@ def title_of(facts: Facts) -> str:
 def _plots(facts: Facts, words: Words) -> list[str]:
     """The longitudinal plot, and a lateral one beside it where the basis has a lateral envelope."""
     lateral = any(envelope.axis == "lateral" for envelope in facts.basis.envelopes)
-    frame = Frame(height=250.0, bottom=216.0) if lateral else Frame()
+    height = HEIGHTS[words.paper, lateral]
+    frame = Frame(height=height, bottom=height - 34.0)
     axes = ("longitudinal", "lateral") if lateral else ("longitudinal",)
     drawn = [
         plot(facts.result, facts.basis.envelopes, axis=axis, weight_word=words.weight, frame=frame)

@@ -4,7 +4,7 @@ from collections.abc import Iterable, Mapping
 from typing import Any
 
 from loads.manifest.facts import Facts
-from loads.manifest.figures import both_clocks, column, figure, sided, utc
+from loads.manifest.figures import both_clocks, column, sided, utc
 from loads.manifest.ruler import ruler
 from loads.manifest.words import Words
 from loads.plot_marks import MARKS, shape
@@ -41,42 +41,49 @@ def phases(facts: Facts) -> list[Row]:
         key: column([row[key] for row in rows])
         for key in ("weight", "moment", "arm", "percent_chord", "fuel")
     }
+    columns["lateral_arm"] = sided([row["lateral_arm"] for row in rows])
     return [
         {
             "letter": MARKS[row["phase"]],
             "shape": element("svg", shape(MARKS[row["phase"]], (6, 6)), viewBox="0 0 12 12"),
             "phase": row["phase"],
-            "lateral": row["lateral_text"],
             **{key: values[place] for key, values in columns.items()},
         }
         for place, row in enumerate(rows)
     ]
 
 
-def limits(facts: Facts, words: Words) -> dict[str, list[Row]]:
-    """This function will return every check with its ruler: those of the aircraft, and those of its parts."""
+def limits(facts: Facts, words: Words) -> dict[str, Any]:
+    """This function will return every check with its ruler: the aircraft's, and in pairs its parts'."""
     checks = facts.result["checks"]
     whole = [check for check in checks if check["code"].partition(".")[0] in WHOLE]
     parts = [check for check in checks if check["code"].partition(".")[0] not in WHOLE]
-    return {
-        "whole": [_limit(check, words) for check in whole],
-        "parts": [_limit(check, words) for check in parts],
-    }
+    rows = [_limit(check, words) for check in parts]
+    half = (len(rows) + 1) // 2
+    pairs = [rows[place::half] for place in range(half)]
+    return {"whole": [_limit(check, words) for check in whole], "parts": pairs}
 
 
 def _limit(check: Mapping[str, Any], words: Words) -> Row:
     family = check["code"].partition(".")[0]
     typed = family in {"seat", "place", "zone", "tank", "tank-table", "performance"}
+    kept = check["result"] == "pass"
+    low, actual, high = check["low"], check["actual"], check["limit"]
+    low, actual, high = sided([low, actual, high]) if family == "lateral" else column([low, actual, high])
     return {
         "title": check["title"] if typed else words.said(check["title"]),
-        "actual": figure(check["actual"]) if check["actual"] else "",
-        "low": figure(check["low"]) if check["low"] else "",
-        "high": figure(check["limit"]) if check["limit"] else "",
-        "unit": check["unit"] or "",
+        "actual": actual,
+        "low": low,
+        "high": high,
+        "unit": "" if family == "persons" else check["unit"] or "",
         "ruler": "" if family == "persons" else ruler(check),
         "margin": words.said(check["margin_text"]),
+        # In the narrow list of parts a limit that is kept shows its room alone.
+        "short": f"{check['margin']} {check['unit']}"
+        if kept and check["margin"]
+        else words.said(check["margin_text"]),
         "outcome": OUTCOMES[check["result"]],
-        "kept": check["result"] == "pass",
+        "kept": kept,
         "source": check["source"],
     }
 
@@ -122,7 +129,7 @@ def signatures(facts: Facts) -> list[Row]:
             "time": both_clocks(one.signed_at, facts.operator.time_zone),
             "means": f"password at a {one.means}"
             if one.means == "session"
-            else f"password with a personal {one.means}",
+            else f"password and a personal {one.means}",
         }
         for one in facts.signatures
     ]
