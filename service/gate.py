@@ -42,7 +42,8 @@ def gate(words: list[str]) -> int:
     failed = [step.name for step in _steps() if not _timed(step)]
     if failed:
         say(f"\nRED before the tests: {', '.join(failed)}. The tests run all the same.")
-    code = _pytest(["-n", "2"])
+    # By file, so that what a file of tests sets up once is set up once.
+    code = _pytest(["-n", "2", "--dist", "loadfile"])
     # Exit code 5, no test was run, is as red as a test that failed: only 0 is green.
     return code or (1 if failed else 0)
 

@@ -18,6 +18,11 @@ SERVICE = "tarebook_service"
 DATABASE = "tarebook"
 _POWERLESS = sql.SQL("LOGIN NOSUPERUSER NOCREATEDB NOCREATEROLE NOREPLICATION NOBYPASSRLS NOINHERIT")
 
+_MEMBERSHIPS = """
+SELECT held.rolname FROM pg_auth_members m JOIN pg_roles held ON held.oid = m.roleid
+JOIN pg_roles holder ON holder.oid = m.member WHERE holder.rolname = %s
+"""
+
 
 @dataclass(frozen=True)
 class Passwords:
@@ -46,6 +51,10 @@ def make_roles(superuser: str, passwords: Passwords) -> None:
             if password is not None:
                 words += sql.SQL(" PASSWORD {}").format(sql.Literal(password))
             connection.execute(words)
+            for (group,) in connection.execute(_MEMBERSHIPS, [role]).fetchall():
+                connection.execute(
+                    sql.SQL("REVOKE {} FROM {}").format(sql.Identifier(group), sql.Identifier(role))
+                )
 
 
 def make_database(superuser: str, database: str) -> None:
