@@ -1,8 +1,11 @@
 """The people of the tests, the same everywhere: one operator with its duties, and strangers of another."""
 
 import dataclasses
+import json
+import uuid
 from dataclasses import dataclass
 
+from django.http import HttpResponse
 from django.test import Client
 from rest_framework.test import APIClient
 
@@ -111,3 +114,19 @@ def _person(manager: Person, login: str, name: str, *roles: str) -> Person:
     for role in roles:
         grant_duty(actor(manager), person, role)
     return person
+
+
+def post(client: APIClient, path: str, document: object, *, key: str | None = None) -> HttpResponse:
+    """This function will send a document to a path after /api/v1, under a fresh key unless one is given."""
+    body = document if isinstance(document, bytes) else json.dumps(document).encode()
+    return client.post(
+        f"/api/v1{path}",
+        data=body,
+        content_type="application/json",
+        headers={"Idempotency-Key": key or str(uuid.uuid4())},
+    )
+
+
+def get(client: APIClient, path: str) -> HttpResponse:
+    """This function will read a path after /api/v1."""
+    return client.get(f"/api/v1{path}")
