@@ -102,6 +102,9 @@ LOGIN_URL = "sign-in"
 AXES_FAILURE_LIMIT = env.whole("SIGN_IN_FAILURES", 5, low=1, high=100)
 AXES_COOLOFF_TIME = 0.25  # hours
 AXES_LOCKOUT_PARAMETERS = ["username"]
+# The name under which `authenticate` is given the login. Unset, it would be the model's field, and nothing
+# be counted.
+AXES_USERNAME_FORM_FIELD = "username"
 # By login alone, wherever the tries come from: counted by address, guesses from many places would go on.
 SILENCED_SYSTEM_CHECKS = ["axes.W006"]
 AXES_RESET_ON_SUCCESS = True
