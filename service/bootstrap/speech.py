@@ -1,14 +1,18 @@
 """What is said while a machine is being made ready."""
 
+import contextlib
 import sys
 
 
 def say(text: str) -> None:
     """Print one line of progress at once, also into a pipe."""
-    print(text, flush=True)
+    # Nobody listens any more (a closed terminal, a pipe to `head`): what is being done goes on all the same.
+    with contextlib.suppress(OSError):
+        print(text, flush=True)
 
 
 def complain(text: str) -> None:
     """Print the sentence that ends a run, on the error stream, after everything said before it."""
-    sys.stdout.flush()
-    print(text, file=sys.stderr, flush=True)
+    with contextlib.suppress(OSError):
+        sys.stdout.flush()
+        print(text, file=sys.stderr, flush=True)

@@ -20,7 +20,7 @@ def run_django(arguments: list[str]) -> int:
     used, and started for the length of the command if it does not run.
     """
     os.environ.setdefault("DJANGO_SETTINGS_MODULE", "service.settings")
-    if "DATABASE_URL" in os.environ:
+    if "DATABASE_URL" in os.environ or "DATABASE_URL_FILE" in os.environ:
         return _execute(arguments)
     folder = DataFolder(default_path())
     if arguments[:1] == ["makemigrations"] or not (folder.path / "secret-key").exists():
