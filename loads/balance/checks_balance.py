@@ -27,6 +27,13 @@ NEEDED: tuple[Phase, ...] = ("take-off", "landing", "minimum at landing")
 SIDES: dict[Axis, tuple[str, str]] = {"longitudinal": ("forward", "aft"), "lateral": ("left", "right")}
 CODES: dict[Axis, str] = {"longitudinal": "cg", "lateral": "lateral"}
 TITLES: dict[Axis, str] = {"longitudinal": "CG", "lateral": "lateral CG"}
+AT: dict[Phase, str] = {
+    "ramp": " at the ramp",
+    "take-off": " at take-off",
+    "zero fuel": " at zero fuel",
+    "landing": " at landing",
+    "minimum at landing": " with the least fuel at landing",
+}
 
 CgFix = Callable[[], str]
 
@@ -68,7 +75,7 @@ def _within(state: State, axis: Axis, bound: Bound, ready: Prepared, fix: CgFix)
     edge = None if along is None else SIDES[axis][along.edge == "high"]
     return Check(
         f"{CODES[axis]}.{state.phase.replace(' ', '-')}",
-        f"{TITLES[axis]} at {state.phase}",
+        _title(axis, state.phase),
         "pass" if inside else "fail",
         state.phase,
         actual,
@@ -94,15 +101,15 @@ def _words(
     parts = []
     if along is None:
         parts.append("no part of the envelope lies at this weight")
-    elif along.margin < 0:
+    elif along.margin.numerator < 0:
         parts.append(f"{room(along.margin, digits)} {ready.length} beyond the {edge} limit")
-    elif along.margin == 0:
+    elif along.margin.numerator == 0:
         parts.append(f"on the {edge} limit")
     else:
         parts.append(f"{room(along.margin, digits)} {ready.length} from the {edge} limit")
     if upward is not None:
         figure = f"{room(upward.margin, WEIGHT_PLACES)} {ready.weight}"
-        if upward.margin < 0:
+        if upward.margin.numerator < 0:
             side = "above" if upward.edge == "high" else "below"
             parts.append(f"{figure} {side} the envelope at the same arm")
         else:
@@ -113,7 +120,7 @@ def _words(
 def _without_envelope(state: State, axis: Axis, ready: Prepared) -> Check:
     arm = state.arm if axis == "longitudinal" else state.lateral_arm
     code = f"{CODES[axis]}.{state.phase.replace(' ', '-')}"
-    title = f"{TITLES[axis]} at {state.phase}"
+    title = _title(axis, state.phase)
     shown = printed(arm, ready.length_places)
     text = f"no envelope is entered for {state.phase}"
     if state.phase not in NEEDED:
@@ -123,6 +130,10 @@ def _without_envelope(state: State, axis: Axis, ready: Prepared) -> Check:
     return Check(
         code, title, "unresolved", state.phase, shown, unit=ready.length, margin_text=text, what_next=fix
     )
+
+
+def _title(axis: Axis, phase: Phase) -> str:
+    return f"{TITLES[axis]}{AT[phase]}"
 
 
 def _no_lateral(states: Mapping[Phase, State], ready: Prepared) -> Check:

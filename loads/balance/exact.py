@@ -9,16 +9,17 @@ Ratio = tuple[int, int]  # numerator, denominator > 0; not necessarily reduced
 
 def product(one: Fraction, other: Fraction) -> Ratio:
     """Multiply two rationals and leave the result unreduced, ready for `total`."""
-    return one.numerator * other.numerator, one.denominator * other.denominator
+    above, below = one.as_integer_ratio()
+    over, under = other.as_integer_ratio()
+    return above * over, below * under
 
 
-def total(ratios: Iterable[Ratio]) -> Fraction:
+def total(ratios: Sequence[Ratio]) -> Fraction:
     """Add unreduced rationals exactly; the sum of nothing is 0."""
-    terms = list(ratios)
-    shared = lcm(*(below for _, below in terms))
-    return Fraction(sum(above * (shared // below) for above, below in terms), shared)
+    shared = lcm(*[below for _, below in ratios])
+    return Fraction(sum([above * (shared // below) for above, below in ratios]), shared)
 
 
-def added(values: Sequence[Fraction]) -> Fraction:
+def added(values: Iterable[Fraction]) -> Fraction:
     """Add rationals exactly; the sum of nothing is 0."""
-    return total([(one.numerator, one.denominator) for one in values])
+    return total([value.as_integer_ratio() for value in values])

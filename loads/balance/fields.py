@@ -13,6 +13,7 @@ from fleet.quantities import Dimension, Quantity, quantity_or_fault
 from records.refusal import Fault
 from records.strict_json import pointer_step
 
+LONGEST_KEY = 100  # of a field name nobody knows, this much is sent back
 MOST_FAULTS = 100  # further faults of one document are not listed
 # Characters that change how a line reads or prints: controls, line and paragraph separators, surrogates, and
 # the marks that override or isolate the direction of writing (Unicode Standard Annex 9, section 2).
@@ -66,7 +67,7 @@ class Fields:
         for name in document:
             if name not in required and name not in optional:
                 known = ", ".join((*required, *optional))
-                where = f"{pointer}{pointer_step(str(name))}"
+                where = f"{pointer}{pointer_step(str(name)[:LONGEST_KEY])}"
                 faults.note(where, "unknown-field", f"no such field here; the fields are {known}")
         for name in required:
             if name not in document:
@@ -183,7 +184,7 @@ class Fields:
         if isinstance(value, Mapping):
             for key in value:
                 if key not in known:
-                    where = f"{self.at(name)}{pointer_step(str(key))}"
+                    where = f"{self.at(name)}{pointer_step(str(key)[:LONGEST_KEY])}"
                     self._faults.note(
                         where, code, f"no such {what}; the basis has {', '.join(known) or 'none'}"
                     )

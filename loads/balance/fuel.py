@@ -80,7 +80,7 @@ def fuel_states(plan: FuelPlan, ready: Prepared) -> dict[Phase, FuelState]:
     ramp: Contents = {fuel.tank.id: fuel.usable for fuel in plan.tanks}
     take_off, _ = burn(ramp, basis.taxi_order, plan.taxi / density)
     landing, _ = burn(take_off, basis.burn_order, plan.trip / density)
-    spare = added(list(landing.values())) - plan.minimum_at_landing / density
+    spare = added(landing.values()) - plan.minimum_at_landing / density
     least, _ = burn(landing, basis.burn_order, spare)
     fed = {tank for stage in basis.burn_order for tank in stage.tanks}
     empty = {tank: NOTHING if tank in fed else held for tank, held in take_off.items()}
@@ -91,7 +91,7 @@ def fuel_states(plan: FuelPlan, ready: Prepared) -> dict[Phase, FuelState]:
         ("landing", landing),
         ("minimum at landing", least),
     )
-    known: dict[tuple[str, Fraction], Fraction] = {}
+    known: dict[tuple[str, int, int], Fraction] = {}
     return {phase: _state(phase, plan, held, ready, known) for phase, held in contents}
 
 
@@ -100,32 +100,37 @@ def _state(
     plan: FuelPlan,
     usable: Contents,
     ready: Prepared,
-    known: dict[tuple[str, Fraction], Fraction],
+    known: dict[tuple[str, int, int], Fraction],
 ) -> FuelState:
     density = plan.density
     moments: dict[str, Fraction] = {}
-    volumes, across = [], []
+    across = []
+    trapped = NOTHING
     for fuel in plan.tanks:
-        tank = fuel.tank
-        volume = usable[tank.id] + fuel.trapped if fuel.trapped else usable[tank.id]
-        key = (tank.id, volume)
-        moment = known.get(key)
-        if moment is None:
-            curve = ready.curves[tank.id]
-            try:
-                moment = known[key] = curve.moment(volume, density)
-            except OutsideTable as outside:
-                raise FuelOffTable(tank.id, phase, volume, outside.first, outside.last) from None
-        moments[tank.id] = moment
-        volumes.append(volume)
+        tank, volume = fuel.tank, usable[fuel.tank.id]
+        if fuel.trapped:
+            volume += fuel.trapped
+            trapped += fuel.trapped
+        key = (tank.id, *volume.as_integer_ratio())
+        if key not in known:
+            known[key] = _moment(tank.id, volume, phase, density, ready)
+        moments[tank.id] = known[key]
         if tank.lateral_arm:
             across.append(product(volume, tank.lateral_arm))
+    usable_weight = added(usable.values()) * density
     return FuelState(
         phase,
         usable,
         moments,
-        added(list(usable.values())) * density,
-        added(volumes) * density,
-        added(list(moments.values())),
+        usable_weight,
+        usable_weight + trapped * density if trapped else usable_weight,
+        added(moments.values()),
         total(across) * density if across else NOTHING,
     )
+
+
+def _moment(tank: str, volume: Fraction, phase: Phase, density: Fraction, ready: Prepared) -> Fraction:
+    try:
+        return ready.curves[tank].moment(volume, density)
+    except OutsideTable as outside:
+        raise FuelOffTable(tank, phase, volume, outside.first, outside.last) from None

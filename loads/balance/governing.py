@@ -38,7 +38,7 @@ def cg_line(checks: tuple[Check, ...]) -> str:
     if not judged:
         return NOT_KNOWN
     nearest = min(judged, key=lambda check: (check.room is not None, check.room or Fraction(0)))
-    return f"at {nearest.phase}: {nearest.margin_text}"
+    return f"{nearest.title.removeprefix('CG ')}: {nearest.margin_text}"
 
 
 def return_advisory(declared: Declared, states: Mapping[Phase, State], ready: Prepared) -> list[str]:

@@ -42,7 +42,7 @@ def below(figure: Figure, limit: Fraction, source: str, fix: Fix) -> Check:
     shown, bound, digits = against_maximum(actual, limit, places)
     left = limit - actual
     margin = printed(left, digits, "down")
-    if left < 0:
+    if left.numerator < 0:
         text = f"{room(left, digits)} {unit} above the limit"
         advice = fix(-left)
         return Check(code, title, "fail", phase, shown, bound, None, unit, margin, text, source, advice, left)
@@ -56,7 +56,7 @@ def above(figure: Figure, limit: Fraction, source: str, fix: Fix) -> Check:
     shown, bound, digits = against_minimum(actual, limit, places)
     left = actual - limit
     margin = printed(left, digits, "down")
-    if left < 0:
+    if left.numerator < 0:
         text = f"{room(left, digits)} {unit} below the minimum"
         advice = fix(-left)
         return Check(code, title, "fail", phase, shown, None, bound, unit, margin, text, source, advice, left)
@@ -91,4 +91,4 @@ def _room_in_words(left: Fraction, margin: str, unit: str, where: str) -> str:
     """Return a margin of 0 or more in words: on the limit, less than the last digit, or a figure."""
     if margin != "0":
         return f"{margin} {unit} {where}"
-    return f"just {where}" if left else "on the limit"
+    return f"just {where}" if left.numerator else "on the limit"

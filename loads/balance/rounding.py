@@ -28,9 +28,10 @@ def printed(value: Fraction, places: int, direction: Direction = "nearest") -> s
 
     `down` is towards minus infinity, `up` towards plus infinity, `nearest` sends halves away from zero.
     """
-    if value.denominator == 1:
-        return str(value.numerator)
-    return _text(_units(value, places, direction), places)
+    above, below = value.as_integer_ratio()
+    if below == 1:
+        return str(above)
+    return _text(_units(above, below, places, direction), places)
 
 
 def against_maximum(actual: Fraction, limit: Fraction, places: int) -> tuple[str, str, int]:
@@ -38,13 +39,16 @@ def against_maximum(actual: Fraction, limit: Fraction, places: int) -> tuple[str
 
     Returns the two texts and the number of decimals they needed. The limit is never printed above its value.
     """
-    bound = _units(limit, places, "down")
-    if actual <= limit:
-        return _text(min(_units(actual, places, "nearest"), bound), places), _text(bound, places), places
+    above, below = actual.as_integer_ratio()
+    most, per = limit.as_integer_ratio()
+    bound = _units(most, per, places, "down")
+    if above * per <= most * below:
+        shown = min(_units(above, below, places, "nearest"), bound)
+        return _text(shown, places), _text(bound, places), places
     for digits in range(places, MOST_PLACES + 1):
-        shown = _units(actual, digits, "nearest")
-        if shown * limit.denominator > limit.numerator * _TENS[digits]:
-            return _text(shown, digits), _text(_units(limit, digits, "down"), digits), digits
+        shown = _units(above, below, digits, "nearest")
+        if shown * per > most * _TENS[digits]:
+            return _text(shown, digits), _text(_units(most, per, digits, "down"), digits), digits
     return printed(actual, MOST_PLACES, "up"), printed(limit, MOST_PLACES, "down"), MOST_PLACES
 
 
@@ -62,12 +66,11 @@ def between(actual: Fraction, low: Fraction, high: Fraction, places: int) -> tup
     it is.
     """
     inside = low <= actual <= high
+    above, below = actual.as_integer_ratio()
     for digits in range(places, MOST_PLACES + 1):
-        shown, least, most = (
-            _units(actual, digits, "nearest"),
-            _units(low, digits, "up"),
-            _units(high, digits, "down"),
-        )
+        shown = _units(above, below, digits, "nearest")
+        least = _units(*low.as_integer_ratio(), digits, "up")
+        most = _units(*high.as_integer_ratio(), digits, "down")
         if least > most:
             continue
         if inside:
@@ -82,27 +85,27 @@ def between(actual: Fraction, low: Fraction, high: Fraction, places: int) -> tup
 
 def room(margin: Fraction, places: int) -> str:
     """Print a margin of 0 or more rounded down, and one below 0 as an excess, rounded up, unsigned."""
-    if margin >= 0:
+    if margin.numerator >= 0:
         return printed(margin, places, "down")
     return printed(-margin, places, "up")
 
 
-def _units(value: Fraction, places: int, direction: Direction) -> int:
-    """Count the units of the last decimal."""
-    above, below = value.numerator * _TENS[places], value.denominator
+def _units(above: int, below: int, places: int, direction: Direction) -> int:
+    """Count the units of the last decimal in above / below."""
+    above *= _TENS[places]
     if below == 1:
         return above
     if direction == "down":
         return above // below
     if direction == "up":
         return -(-above // below)
-    return (2 * above + below) // (2 * below) if above >= 0 else -((-2 * above + below) // (2 * below))
+    return (2 * above + below) // (2 * below) if above >= 0 else -((below - 2 * above) // (2 * below))
 
 
 def _text(units: int, places: int) -> str:
     if not places:
         return str(units)
-    whole, part = divmod(abs(units), _TENS[places])
+    whole, part = divmod(units if units >= 0 else -units, _TENS[places])
     sign = "-" if units < 0 else ""
     return f"{sign}{whole}.{part:0{places}d}".rstrip("0") if part else f"{sign}{whole}"
 

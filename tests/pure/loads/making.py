@@ -1,4 +1,6 @@
-"""Invented bases, empty weights and load documents for the tests of the balance. No real aircraft is meant."""
+"""Invented bases, empty weights and load documents for the tests of the balance. No real aircraft is
+meant.
+"""
 
 from copy import deepcopy
 from dataclasses import replace
@@ -69,7 +71,9 @@ def envelope(
 
 
 def twin() -> Basis:
-    """A light twin in lb and in: six seats, two holds, four tanks, auxiliaries burn first, a sloping front edge."""
+    """A light twin in lb and in: six seats, two holds, four tanks, auxiliaries burn first, a sloping front
+    edge.
+    """
     seats = (
         seat("COCKPIT-L", 92, -14, "crew"),
         seat("COCKPIT-R", 92, 14),
@@ -176,9 +180,7 @@ LOAD: dict[str, Any] = {
         "trip": {"value": 420, "unit": "lb"},
         "minimum_at_landing": {"value": 240, "unit": "lb"},
     },
-    "limits": [
-        {"at": "take-off", "weight": {"value": 6700, "unit": "lb"}, "source": "performance sheet 12"}
-    ],
+    "limits": [{"at": "take-off", "weight": {"value": 6700, "unit": "lb"}, "source": "performance sheet 12"}],
 }
 
 

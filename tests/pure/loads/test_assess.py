@@ -1,0 +1,416 @@
+"""One load, every check: what passes, what fails and how it is said, and what is not known."""
+
+from copy import deepcopy
+from dataclasses import replace
+from fractions import Fraction
+
+import pytest
+
+from fleet.basis import FixedItem
+from loads.balance.assess import assess
+from loads.balance.declared import read_load, read_outline
+from records.canonical import canonical
+from tests.pure.loads.making import envelope, limit, limits, load, twin, twin_empty
+
+F = Fraction
+
+
+def result_of(document=None, basis=None, empty="twin"):
+    basis = basis or twin()
+    declared = read_load(document or load(), basis)
+    return assess(declared, basis, twin_empty() if empty == "twin" else empty)
+
+
+def with_limits(**values):
+    basis = twin()
+    weights = limits(**values)
+    return replace(
+        basis,
+        limits=weights,
+        configurations=tuple(replace(one, limits=weights) for one in basis.configurations),
+    )
+
+
+ROOMY = {"ramp": 9000, "take_off": 9000, "zero_fuel": 9000, "landing": 9000, "minimum_flying": 1000}
+
+
+def test_the_sum_is_what_a_hand_makes_of_the_lines():
+    """Computed by hand from the load of `making`: 4350 + 181 + 176 + 71.5 kg + 9 kg + 120 + 780 of fuel."""
+    result = result_of()
+    kg = 1 / F("0.45359237")
+    weight = 4350 + 181 + 176 + F("80.5") * kg + 120
+    moment = F("507240.5") + 181 * 92 + 176 * 124 + F("80.5") * kg * 124 + 120 * 190
+
+    assert result.verdict == "within"
+    assert result.state("zero fuel").weight == weight
+    assert result.state("zero fuel").moment == moment
+    assert result.state("ramp").weight == weight + 780
+    assert result.state("ramp").moment == moment + 600 * 121 + 180 * 133
+    assert result.state("take-off").weight == weight + 756
+    assert result.state("landing").weight == weight + 336
+    assert result.state("minimum at landing").weight == weight + 240
+
+
+def test_every_total_of_the_sheet_is_the_sum_of_the_lines_above_it_and_the_phase_it_names():
+    result = result_of()
+    weight = moment = lateral = F(0)
+    totals = {}
+    for line in result.lines:
+        if line.total:
+            assert (line.weight, line.moment, line.lateral_moment) == (weight, moment, lateral)
+            totals[line.group] = line.weight
+        else:
+            weight, moment = weight + line.weight, moment + line.moment
+            lateral += line.lateral_moment
+
+    assert totals["operating weight"] == 4350 + 181
+    for phase in ("zero fuel", "ramp", "take-off", "landing"):
+        assert totals[phase] == result.state(phase).weight
+
+
+def test_the_operating_weight_is_empty_weight_equipment_operating_items_and_crew():
+    basis = twin()
+    kit = basis.configurations[0]
+    divider = fixed_item("cabin divider", -30, 140)
+    oxygen = fixed_item("oxygen bottles", 14, 60)
+    basis = replace(
+        basis, configurations=(replace(kit, equipment=(divider,), operating_items=(oxygen,)), kit)
+    )
+
+    result = result_of(basis=basis)
+    document = result.as_document()
+
+    assert document["operating_weight"]["weight"] == "4515"
+    assert [row["group"] for row in document["sumsheet"][:5]] == [
+        "empty weight",
+        "equipment",
+        "operating items",
+        "crew",
+        "operating weight",
+    ]
+
+
+def fixed_item(what, weight, arm):
+    return FixedItem(what, F(weight), F(arm), F(0))
+
+
+def test_the_recorded_moment_beats_weight_times_arm():
+    line = result_of().lines[0]
+
+    assert line.moment == F("507240.5")
+    assert line.arm == F("507240.5") / 4350
+
+
+@pytest.mark.parametrize(
+    ("which", "phase"),
+    [
+        ("ramp", "ramp"),
+        ("take_off", "take-off"),
+        ("zero_fuel", "zero fuel"),
+        ("landing", "landing"),
+    ],
+)
+def test_a_limit_of_weight_fails_its_own_phase_and_says_what_to_take_off(which, phase):
+    actual = result_of().state(phase).weight
+    basis = with_limits(**ROOMY)
+    exact = replace(basis.limits, **{which: replace(limit(0), value=actual)})
+    basis = replace(basis, configurations=(replace(basis.configurations[0], limits=exact),))
+    just_under = replace(exact, **{which: replace(limit(0), value=actual - F(1, 1000))})
+    over = replace(basis, configurations=(replace(basis.configurations[0], limits=just_under),))
+    code = f"weight.{phase.replace(' ', '-')}"
+
+    assert result_of(basis=basis).check(code).margin_text == "on the limit"
+    assert result_of(basis=basis).verdict == "within"
+    failed = result_of(basis=over)
+    assert failed.verdict == "outside"
+    assert failed.check(code).outcome == "fail"
+    assert "0.1 lb" in failed.check(code).what_next
+    assert F(failed.check(code).actual) > F(failed.check(code).limit)
+
+
+def test_the_least_of_all_bounds_is_allowed_and_the_first_named_of_equals_governs():
+    result = result_of().as_document()
+    allowed = result["allowable_take_off"]
+
+    # performance 6700; structural 6800; landing 6500 + 420; zero fuel 6200 + 756; ramp 6840 - 24
+    assert [one["weight"] for one in allowed["candidates"]] == ["6800", "6920", "6956", "6816", "6700"]
+    assert (allowed["weight"], allowed["governed_by"]) == ("6700", "performance sheet 12")
+    assert result["governing"]["weight"] == (
+        "take-off weight 5760.5 of 6700 lb allowed, governed by performance sheet 12: 939.5 lb left"
+    )
+
+
+@pytest.mark.parametrize(
+    ("values", "governs", "weight"),
+    [
+        ({"take_off": 6000}, "structural take-off", "6000"),
+        ({"landing": 5500}, "landing limit + trip fuel", "5920"),
+        ({"zero_fuel": 5100}, "zero-fuel limit + take-off fuel", "5856"),
+        ({"ramp": 5900}, "ramp limit - taxi fuel", "5876"),
+    ],
+)
+def test_each_bound_can_govern(values, governs, weight):
+    document = load(limits=[])
+    allowed = result_of(document, with_limits(**{**ROOMY, **values})).as_document()["allowable_take_off"]
+
+    assert (allowed["governed_by"], allowed["weight"]) == (governs, weight)
+
+
+def test_a_landing_limit_stated_with_the_load_bounds_take_off_and_landing():
+    stated = {"at": "landing", "weight": {"value": 5300, "unit": "lb"}, "source": "wet runway sheet"}
+    result = result_of(load(limits=[stated]))
+
+    assert result.check("performance.landing.1").outcome == "fail"
+    allowed = result.as_document()["allowable_take_off"]
+    assert (allowed["governed_by"], allowed["weight"]) == ("wet runway sheet + trip fuel", "5720")
+
+
+def test_a_limit_that_was_not_entered_is_unresolved_and_one_shown_to_be_none_passes():
+    values = {name: value for name, value in ROOMY.items() if name != "landing"}
+    unresolved = result_of(basis=with_limits(**values))
+    none = result_of(basis=with_limits(**{**values, "landing": None}))
+
+    assert unresolved.check("weight.landing").outcome == "unresolved"
+    assert unresolved.verdict == "unresolved"
+    assert unresolved.as_document()["allowable_take_off"]["not_entered"] == ["landing limit + trip fuel"]
+    assert none.check("weight.landing").margin_text == "no limit"
+    assert none.check("weight.landing").source == "VP2-FM rev B p. 6-4"
+    assert none.verdict == "within"
+
+
+def test_the_lightest_moment_of_the_flight_must_reach_the_minimum_flying_weight():
+    result = result_of(basis=with_limits(**{**ROOMY, "minimum_flying": 5250}))
+    check = result.check("weight.minimum-flying")
+
+    assert (check.outcome, check.phase) == ("fail", "minimum at landing")
+    assert check.what_next.startswith("Add at least 5.6 lb")
+
+
+def test_landing_fuel_below_the_stated_minimum_fails_and_is_not_hidden_by_refuelling():
+    document = load()
+    document["fuel"]["minimum_at_landing"] = {"value": 340, "unit": "lb"}
+    result = result_of(document)
+
+    check = result.check("fuel.minimum-at-landing")
+    assert (check.outcome, check.margin) == ("fail", "-4")
+    assert "4 lb (0.7 US gal)" in check.what_next
+    assert result.state("minimum at landing") == result.state("landing")._replace(phase="minimum at landing")
+
+
+def test_less_fuel_is_only_advised_where_the_minimum_at_landing_allows_it():
+    stated = {"at": "take-off", "weight": {"value": 5700, "unit": "lb"}, "source": "sheet"}
+    plenty = result_of(load(limits=[stated])).check("performance.take-off.1").what_next
+    document = load(limits=[stated])
+    document["fuel"]["minimum_at_landing"] = {"value": 300, "unit": "lb"}
+    short = result_of(document).check("performance.take-off.1").what_next
+
+    assert plenty == "Take off at least 60.5 lb of people or items, or carry 10.1 US gal less fuel."
+    assert "only 36 lb is above the minimum at landing" in short
+
+
+def test_no_empty_weight_in_force_is_unresolved_and_computes_no_phase():
+    result = result_of(empty=None)
+    document = result.as_document()
+
+    assert result.verdict == "unresolved"
+    assert result.check("standing.empty-weight").margin_text == "no empty weight in force"
+    assert document["phases"] == []
+    assert document["allowable_take_off"] is None
+    assert document["operating_weight"] is None
+    assert document["sumsheet"][0]["weight"] is None
+    assert result.check("seat.ROW1-L").outcome == "pass"
+
+
+def test_no_loading_basis_in_force_is_unresolved():
+    result = assess(read_outline(load()), None, None)
+
+    assert result.verdict == "unresolved"
+    assert [check.code for check in result.checks] == ["standing.loading-basis"]
+    assert result.as_document()["phases"] == []
+
+
+@pytest.mark.parametrize("changed", [{"datum": "firewall"}, {"fit": "floats"}])
+def test_an_empty_weight_of_another_datum_or_fit_is_never_mixed_in(changed):
+    result = result_of(empty=replace(twin_empty(), **changed))
+
+    assert result.verdict == "unresolved"
+    assert result.states == ()
+
+
+def test_a_standard_weight_without_a_table_is_unresolved_and_counts_as_nothing_known():
+    document = load()
+    adult = document["passengers"][0]
+    del adult["weight"]
+    adult |= {"how": "standard", "category": "adult"}
+
+    result = result_of(document)
+
+    assert result.verdict == "unresolved"
+    assert result.check("weights.unknown").outcome == "unresolved"
+    assert result.check("seat.ROW1-L").outcome == "unresolved"
+    assert result.states == ()
+
+
+def test_an_estimated_person_is_computed_but_unresolved_and_an_estimated_bag_is_told():
+    document = load()
+    document["passengers"][0]["how"] = "estimated"
+    document["items"][0]["how"] = "estimated"
+
+    result = result_of(document)
+
+    assert result.verdict == "unresolved"
+    assert result.check("weights.estimated").outcome == "unresolved"
+    assert len(result.states) == 5
+    assert "1 of 1 item weights are estimates" in result.as_document()["advisories"]
+
+
+def test_a_broken_limit_weighs_more_than_an_open_question():
+    document = load()
+    document["items"][0]["weight"]["value"] = 301
+
+    assert result_of(document, empty=None).verdict == "outside"
+
+
+def test_a_lap_infant_adds_its_weight_at_that_seat_and_counts_as_a_person():
+    result = result_of()
+    with_infant = F(result.check("seat.ROW1-R").actual)
+
+    assert with_infant == F("177.5")
+    assert result.as_document()["persons"] == {"crew": 1, "passengers": 2, "lap_infants": 1, "total": 4}
+
+
+def test_a_place_a_seat_a_zone_and_a_tank_each_have_their_limit():
+    document = load()
+    bag = document["items"][0]
+    document["items"] = [
+        {**bag, "what": f"bag {number}", "weight": {"value": 101, "unit": "lb"}} for number in range(3)
+    ]
+    document["passengers"][0] |= {"seat": "ROW2-L", "weight": {"value": 301, "unit": "lb"}}
+
+    result = result_of(document)
+
+    assert result.check("place.AFT-HOLD").margin == "-3"
+    assert result.check("place.AFT-HOLD").what_next == "Move or take off at least 3 lb from aft hold."
+    assert result.check("seat.ROW2-L").outcome == "fail"
+    assert result.check("zone.REAR").margin == "-4"
+    assert result.check("tank.LEFT-AUX").margin == "15"
+
+
+def test_a_removed_equipment_lightens_the_aircraft_but_not_the_place_it_came_from():
+    document = load()
+    document["items"].append(
+        {
+            "kind": "equipment",
+            "what": "cabinet",
+            "place": "AFT-HOLD",
+            "weight": {"value": 22, "unit": "lb"},
+            "how": "weighed",
+            "removed": True,
+        }
+    )
+    result = result_of(document)
+
+    assert result.state("ramp").weight == result_of().state("ramp").weight - 22
+    assert result.state("ramp").moment == result_of().state("ramp").moment - 22 * 190
+    assert result.check("place.AFT-HOLD").actual == "120"
+
+
+def test_a_seat_or_place_without_an_entered_limit_is_unresolved_only_when_it_is_used():
+    basis = twin()
+    bare = tuple(replace(one, maximum=None) for one in basis.places)
+    result = result_of(basis=replace(basis, places=bare))
+
+    assert result.check("place.AFT-HOLD").outcome == "unresolved"
+    with pytest.raises(KeyError):
+        result.check("place.NOSE-HOLD")
+
+
+def test_without_a_zero_fuel_envelope_the_zero_fuel_cg_is_told_and_not_judged():
+    basis = twin()
+    basis = replace(basis, envelopes=(replace(basis.envelopes[0], phases=("take-off", "landing")),))
+    result = result_of(basis=basis)
+
+    assert result.check("cg.zero-fuel").outcome == "advisory"
+    assert result.check("cg.ramp").outcome == "advisory"
+    assert result.check("cg.minimum-at-landing").outcome == "pass"
+    assert result.verdict == "within"
+    assert any("zero fuel" in line for line in result.as_document()["not_assessed"])
+
+
+def test_without_a_landing_envelope_a_load_is_unresolved():
+    basis = twin()
+    basis = replace(basis, envelopes=(replace(basis.envelopes[0], phases=("take-off",)),))
+
+    assert result_of(basis=basis).check("cg.landing").outcome == "unresolved"
+
+
+def test_of_two_envelopes_at_one_phase_both_must_hold_the_load():
+    basis = twin()
+    narrow = envelope((117, 4000), (117, 7000), ("118.5", 7000), ("118.5", 4000), phases=("take-off",))
+    result = result_of(basis=replace(basis, envelopes=(*basis.envelopes, narrow)))
+
+    assert result.check("cg.take-off").outcome == "fail"
+    assert result.check("cg.take-off").limit == "118.5"
+    assert result.check("cg.landing").outcome == "pass"
+
+
+def test_lateral_limits_are_judged_at_every_phase_and_read_as_left_and_right():
+    basis = twin()
+    across = envelope((-2, 4000), (-2, 7000), ("-0.1", 7000), ("-0.1", 4000), axis="lateral")
+    result = result_of(basis=replace(basis, envelopes=(*basis.envelopes, across)))
+    tight = envelope(("-0.1", 4000), ("-0.1", 7000), (2, 7000), (2, 4000), axis="lateral")
+    failed = result_of(basis=replace(basis, envelopes=(*basis.envelopes, tight)))
+
+    assert result.check("lateral.take-off").outcome == "pass"
+    assert result.check("lateral.take-off").edge == "right"
+    assert failed.check("lateral.landing").outcome == "fail"
+    assert failed.check("lateral.landing").edge == "left"
+    assert result.as_document()["phases"][1]["lateral_text"] == "L 0.23 in"
+
+
+def test_lateral_limits_nobody_entered_are_unresolved():
+    result = result_of(basis=replace(twin(), lateral_limits_entered=False))
+
+    assert result.check("lateral.take-off").outcome == "unresolved"
+    assert result.verdict == "unresolved"
+
+
+def test_a_cg_line_names_the_nearest_edge_its_phase_and_both_margins():
+    line = result_of().as_document()["governing"]["cg"]
+
+    assert line == "at the ramp: 6.58 in from the forward limit, 1015.5 lb at the same arm"
+
+
+def test_a_return_above_landing_weight_is_an_advisory_and_never_a_verdict():
+    result = result_of(basis=with_limits(**{**ROOMY, "landing": 5400}))
+
+    assert result.verdict == "within"
+    assert (
+        "overweight for landing until 60.1 US gal (360.5 lb) are burned" in result.as_document()["advisories"]
+    )
+
+
+def test_the_open_path_between_the_phases_is_always_said():
+    document = result_of().as_document()
+
+    assert document["not_assessed"][0] == "the path between the phases was not checked"
+    assert document["checks"][-1]["code"] == "path.between-phases"
+
+
+def test_the_same_inputs_give_the_same_bytes():
+    first = canonical(result_of().as_document())
+    again = canonical(result_of(deepcopy(load())).as_document())
+
+    assert first == again
+    assert b"Osei" not in first
+
+
+def test_a_percentage_of_the_chord_is_only_told_where_there_is_a_chord():
+    assert result_of().as_document()["phases"][0]["percent_chord"] == "14.1"
+    bare = result_of(basis=replace(twin(), chord=None))
+    assert bare.as_document()["phases"][0]["percent_chord"] is None
+
+
+def test_with_a_basis_an_outline_alone_is_not_assessed():
+    with pytest.raises(TypeError):
+        assess(read_outline(load()), twin(), twin_empty())
