@@ -51,7 +51,7 @@ def shape_faults(schema: str, document: object) -> list[Fault]:
     `MOST_FAULTS`.
     """
     faults: dict[Fault, None] = {}
-    for error in _validator(schema).iter_errors(document):  # type: ignore[no-untyped-call, unused-ignore]
+    for error in _validator(schema).iter_errors(document):
         for fault in _faults(error):
             faults[fault] = None
         if len(faults) >= MOST_FAULTS:
