@@ -142,8 +142,10 @@ def _nothing_fetched() -> Any:
 def _carried() -> frozenset[int]:
     """The characters every weight of the text font carries, with tab and line ends."""
     files = sorted(FONTS.glob("ibm-plex-sans-???.ttf"))
-    open_font = import_module("fontTools.ttLib").TTFont
-    covered = [set(open_font(file, lazy=True).getBestCmap()) for file in files]
+    covered = []
+    for file in files:
+        with import_module("fontTools.ttLib").TTFont(file, lazy=True) as font:
+            covered.append(set(font.getBestCmap()))
     return frozenset(set.intersection(*covered) | {9, 10, 13})
 
 

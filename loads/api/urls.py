@@ -4,6 +4,7 @@ from django.urls import path
 
 from loads.api.assessments import AssessmentsView
 from loads.api.loads import LoadsView, LoadView
+from loads.api.manifests import ManifestView
 from loads.api.signatures import SignaturesView
 from loads.api.steps import AssessmentView, DepartureView, RevisionsView, WithdrawalView
 
@@ -14,6 +15,7 @@ urlpatterns = [
     path("loads/<uuid:load>/revisions", RevisionsView.as_view(), name="api-load-revisions"),
     path("loads/<uuid:load>/assessment", AssessmentView.as_view(), name="api-load-assessment"),
     path("loads/<uuid:load>/signatures", SignaturesView.as_view(), name="api-load-signatures"),
+    path("loads/<uuid:load>/manifest", ManifestView.as_view(), name="api-load-manifest"),
     path("loads/<uuid:load>/withdrawal", WithdrawalView.as_view(), name="api-load-withdrawal"),
     path("loads/<uuid:load>/departure", DepartureView.as_view(), name="api-load-departure"),
 ]

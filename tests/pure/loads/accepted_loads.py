@@ -33,11 +33,15 @@ def q(value: float | str, unit: str) -> dict[str, str]:
     return {"value": str(value), "unit": unit}
 
 
-def person(name: str, seat: str, weight: str, unit: str, how: str = "declared", **more: Any) -> dict[str, Any]:
+def person(
+    name: str, seat: str, weight: str, unit: str, how: str = "declared", **more: Any
+) -> dict[str, Any]:
     return {"name": name, "seat": seat, "weight": q(weight, unit), "how": how, **more}
 
 
-def item(what: str, place: str, weight: str, unit: str, kind: str = "baggage", how: str = "weighed") -> dict[str, Any]:
+def item(
+    what: str, place: str, weight: str, unit: str, kind: str = "baggage", how: str = "weighed"
+) -> dict[str, Any]:
     return {"kind": kind, "what": what, "place": place, "weight": q(weight, unit), "how": how}
 
 
@@ -51,7 +55,9 @@ def _flight(reference: str, departure: str, origin: str, destination: str) -> di
 def twin_load(**changes: Any) -> dict[str, Any]:
     """A light twin in lb and in, six seats, four tanks; with a lap infant and a stated limit."""
     unit = "lb"
-    pilot = person("R. Amani", "COCKPIT-L", "181", unit, "weighed", position="pilot in command", person="r.amani")
+    pilot = person(
+        "R. Amani", "COCKPIT-L", "181", unit, "weighed", position="pilot in command", person="r.amani"
+    )
     return {
         "schema": "tarebook.load/1", "aircraft": "Q9-KTB", "configuration": "six-seat",
         "flight": _flight("KT-214", "2026-12-01T08:30:00-06:00", "XNAL", "XKOR"),
@@ -141,7 +147,10 @@ def accepted(load: dict[str, Any], kind: str, *, rule_set: str = "US", invented:
     result = assess(read_load(inputs, basis), basis, read_empty_weight(empty_document, basis)).as_document()
     basis_document = json.loads(text)
     digests = {"loading_basis": digest(read(text.encode())), "empty_weight": digest(empty_document)}
-    versions = {name: {"id": f"0190{n}000-0000-7000-8000-000000000000", "digest": d} for n, (name, d) in enumerate(digests.items())}
+    versions = {
+        name: {"id": f"0190{n}000-0000-7000-8000-000000000000", "digest": d}
+        for n, (name, d) in enumerate(digests.items())
+    }
     signed = canonical(statement(inputs, versions, ENGINE_VERSION, result))
     name = next(line["name"] for line in inputs["crew"])
     return Facts(

@@ -1,0 +1,136 @@
+"""Gathers what a manifest says from the rows of an accepted load. Nothing that can still change is read."""
+
+import json
+from datetime import datetime
+from uuid import UUID
+
+from fleet.models import Aircraft, EmptyWeight, LoadingBasis, Operator
+from fleet.queries.figures import basis_of
+from loads.manifest.facts import (
+    AircraftFacts,
+    BasisFacts,
+    EmptyWeightFacts,
+    Facts,
+    OperatorFacts,
+    SealFacts,
+    SignatureFacts,
+)
+from loads.models import Assessment, Load, Paper, Signature, Step
+from loads.queries.current import Current, declared_in
+from loads.queries.signable import statement_of
+from loads.statement import MEANINGS
+from records.canonical import canonical
+from records.models.act import Act
+from records.queries import seal_of
+from records.refusal import NotKnown, StepRefused
+
+
+def facts_of(paper: Paper) -> Facts:
+    """This function will return the facts of the load a manifest number was taken for.
+
+    They are those of its acceptance: the assessment that was signed and the versions it used, whatever is in
+    force now. Raises StepRefused while the act of acceptance is not sealed, which another transaction never
+    sees.
+    """
+    step = Step.objects.select_related(
+        "load__operator",
+        "load__aircraft",
+        "assessment__loading_basis__approval",
+        "assessment__empty_weight__approval",
+    ).get(load_id=paper.load_id, act=paper.act)
+    load, used = step.load, step.assessment
+    if used is None or used.loading_basis is None or used.empty_weight is None:
+        raise StepRefused(
+            "not-computed", "The load was accepted on no computation, so there is nothing to print."
+        )
+    current = Current(load, step, used)
+    declared = declared_in(load)
+    signed = canonical(statement_of(current, declared))
+    return Facts(
+        operator=_operator(load.operator),
+        aircraft=_aircraft(load.aircraft),
+        load=str(load.id),
+        replaces=str(load.replaces_id or ""),
+        number=paper.number,
+        inputs=json.loads(canonical(declared)),
+        result=current.result(),
+        basis=_basis(used.loading_basis),
+        empty_weight=_empty_weight(used.empty_weight),
+        engine=used.engine,
+        signatures=_signatures(load, used),
+        seal=_seal(paper.act),
+        statement=signed,
+        digest=used.digest,
+    )
+
+
+def paper_of(operator: str, load: UUID) -> Paper:
+    """This function will return the manifest number of an operator's load; raises NotKnown, for another's
+    too.
+    """
+    found = Paper.objects.filter(load_id=load, operator_id=operator).first()
+    if found is None:
+        raise NotKnown(
+            "manifest-not-known",
+            "There is no manifest: no load of this number has been accepted.",
+            next_step="Prepare and accept the load; its manifest is numbered by the acceptance.",
+        )
+    return found
+
+
+def _operator(row: Operator) -> OperatorFacts:
+    return OperatorFacts(
+        code=row.code,
+        name=row.name,
+        certificate=row.certificate,
+        base=row.base,
+        time_zone=row.time_zone,
+        rule_set="US" if row.rule_set == "US" else "EU-UK",
+        procedure=row.procedure,
+        weight_method=row.weight_method,
+        invented=row.invented,
+    )
+
+
+def _aircraft(row: Aircraft) -> AircraftFacts:
+    return AircraftFacts(row.registration, row.serial_number, row.type, row.category, row.engines)
+
+
+def _basis(row: LoadingBasis) -> BasisFacts:
+    figures = basis_of(row)
+    document = json.loads(row.document)
+    return BasisFacts(row.revision, row.digest, _known_from(row), document, figures.envelopes, figures.chord)
+
+
+def _empty_weight(row: EmptyWeight) -> EmptyWeightFacts:
+    return EmptyWeightFacts(row.digest, row.true_from, _known_from(row), json.loads(row.document))
+
+
+def _known_from(row: LoadingBasis | EmptyWeight) -> datetime | None:
+    approval = getattr(row, "approval", None)
+    return approval.known_from if approval else None
+
+
+def _signatures(load: Load, used: Assessment) -> tuple[SignatureFacts, ...]:
+    rows = Signature.objects.filter(load=load, assessment=used).order_by("step__number")
+    return tuple(
+        SignatureFacts(
+            name=bytes(row.name).decode(),
+            capacity=row.capacity,
+            meaning=row.meaning,
+            statement=MEANINGS.get(row.meaning, ""),
+            signed_at=row.signed_at,
+            means=row.means,
+        )
+        for row in rows
+    )
+
+
+def _seal(act: UUID) -> SealFacts:
+    seal = seal_of(act)
+    if seal is None:
+        raise StepRefused(
+            "not-sealed", "The acceptance is not sealed yet.", next_step="Ask again in a moment."
+        )
+    opened = Act.objects.values_list("at", flat=True).get(pk=act)
+    return SealFacts(seal.position, seal.digest, opened)
