@@ -18,7 +18,7 @@ DEPARTURE_AT = datetime.fromisoformat(DEPARTURE)
 
 
 def load_document(people: Cast, **changes: Any) -> dict[str, Any]:
-    """This function will write a load of the twin of `tests.makers` that is within every limit, with fields changed."""
+    """This function will write a load of the ready twin that is within every limit, with fields changed."""
     document = {
         "schema": "tarebook.load/1",
         "aircraft": "Q9-KTB",

@@ -20,7 +20,12 @@ def test_a_load_within_every_limit_is_kept_open_under_one_act() -> None:
     current = submitted(people)
 
     failed = [c for c in current.result()["checks"] if c["result"] not in {"pass", "advisory"}]
-    assert (current.state, current.step.number, current.assessment.verdict, failed) == ("open", 1, "within", [])
+    assert (current.state, current.step.number, current.assessment.verdict, failed) == (
+        "open",
+        1,
+        "within",
+        [],
+    )
     entry = Act.objects.get(kind="submit-load")
     assert entry.about == f"load:{current.load.id}"
     tables = sorted(Change.objects.filter(act_id=entry.id).values_list("table_name", flat=True))
