@@ -30,6 +30,8 @@ _MISLEADING = (
 
 _STRICT = ("--require-hashes", "--no-deps", "--only-binary", ":all:", "--requirement")
 
+_held: list[int] = []  # the open lock, while this process makes the folder
+
 
 def folder() -> Path:
     """Return where the packages stand: `.venv` beside `manage.py`, or where TAREBOOK_VENV says."""
@@ -152,7 +154,10 @@ def _uv() -> bool:
 
 
 def _run(*command: str) -> bool:
-    return subprocess.run(command, env=clean_environment(), check=False, cwd=ROOT).returncode == 0
+    # The installer keeps our lock: should this process be killed, the next one waits until pip has ended too,
+    # instead of removing the folder under its hands.
+    done = subprocess.run(command, env=clean_environment(), check=False, cwd=ROOT, pass_fds=tuple(_held))
+    return done.returncode == 0
 
 
 def _count(lock: Path) -> int:
@@ -173,6 +178,8 @@ def _alone() -> Iterator[None]:
         except BlockingIOError:
             say(f"Another process is making {folder()}; waiting for it")
             fcntl.flock(handle, fcntl.LOCK_EX)
+        _held.append(handle)
         yield
     finally:
+        _held.clear()
         os.close(handle)

@@ -159,17 +159,11 @@ def _command(name: str, supervisor: Supervisor) -> tuple[str, ...]:
             "--respawn-failed-workers", "--workers-kill-timeout", "10s", "service.wsgi:application",
         )  # fmt: skip
     if name == "worker":
-        hands = str(min(2, os.cpu_count() or 1))
-        return (
-            *celery,
-            "worker",
-            "--concurrency",
-            hands,
-            "--without-gossip",
-            "--without-mingle",
-            "--loglevel",
-            "INFO",
-        )
+        hands = ("--concurrency", str(min(2, os.cpu_count() or 1)))
+        if sys.platform == "linux" and not os.access("/dev/shm", os.W_OK):  # noqa: S108 - only looked at
+            say("worker    | /dev/shm cannot be written here, so one worker process does without children")
+            hands = ("--pool", "solo")
+        return (*celery, "worker", *hands, "--without-gossip", "--without-mingle", "--loglevel", "INFO")
     schedule = supervisor.folder.path / "scheduler"
     return (*celery, "beat", "--schedule", str(schedule), "--pidfile=", "--loglevel", "INFO")
 

@@ -3,6 +3,7 @@
 import json
 import subprocess
 import sys
+import time
 from pathlib import Path
 
 import pytest
@@ -146,6 +147,33 @@ def test_two_at_once_make_it_once(tmp_path):
     assert [one.returncode for one in both] == [0, 0]
     assert said.splitlines().count("made") == 1
     assert "waiting for it" in said
+
+
+def test_an_installer_that_outlives_a_killed_run_is_waited_for(tmp_path):
+    begin = "from service.bootstrap import environment as e\nimport sys\n"
+    works = "print(1, flush=True); import time; time.sleep(2)"
+    slow = f"with e._alone():\n    e._run(sys.executable, '-c', {works!r})\n"
+    wait = "with e._alone():\n    print('mine')\n"
+    first = subprocess.Popen(
+        [sys.executable, "-c", begin + slow], cwd=environment.ROOT, stdout=subprocess.PIPE, text=True
+    )
+    first.stdout.readline()
+    first.kill()
+    first.wait()
+    begun = time.monotonic()
+
+    second = subprocess.run(
+        [sys.executable, "-c", begin + wait],
+        cwd=environment.ROOT,
+        capture_output=True,
+        text=True,
+        check=True,
+    )
+
+    assert second.stdout.splitlines()[-1] == "mine"
+    assert "waiting for it" in second.stdout
+    assert time.monotonic() - begun > 1
+    first.stdout.close()
 
 
 def test_what_would_mislead_pip_or_python_is_taken_out(monkeypatch):
