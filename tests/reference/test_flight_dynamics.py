@@ -1,0 +1,128 @@
+"""Weight and centre of gravity against an independent flight-dynamics library (JSBSim), as shipped and loaded
+at random.
+
+Its aircraft are read from where it is installed and none of its data is kept here; they are no real
+aircraft's figures. Some of its models overwrite what is set, so what the library holds is read back before
+both are compared. Compared are weight and the CG along and across; the CG's height is not computed here.
+"""
+
+import os
+import random
+from dataclasses import dataclass
+from fractions import Fraction
+from pathlib import Path
+from typing import Any
+from xml.etree import ElementTree
+
+import pytest
+
+from tests.reference.plain_aircraft import FuelTank, PlainAircraft
+
+os.environ["JSBSIM_DEBUG"] = "0"  # read when the library is imported
+jsbsim: Any = pytest.importorskip("jsbsim", reason="the flight-dynamics library is a test dependency")
+
+MODELS = ("c172x", "c310", "DHC6", "787-8", "ah1s", "Concorde")
+RANDOM_LOADS = 20
+RELATIVE = 1e-6  # the library computes in doubles, through slugs
+NOTHING = 1e-9  # inches, where both lie on the centreline
+INCHES = {"IN": Fraction(1), "FT": Fraction(12), "M": 1 / Fraction("0.0254")}
+POUNDS = {"LBS": Fraction(1), "KG": 1 / Fraction("0.45359237")}
+DENSITY = 6  # both sides are given weights; the volume is made from the weight, so any density serves
+
+
+@dataclass
+class Model:
+    """One model of the library and what its installed file says about arms and tanks."""
+
+    name: str
+    library: Any
+    empty: tuple[Fraction, Fraction, Fraction]  # weight in lb, CG along and across in inches
+    points: list[tuple[Fraction, Fraction]]
+    tanks: list[tuple[Fraction, Fraction, Fraction]]  # along, across, capacity in lb
+
+    def held(self, name: str, number: int) -> Fraction:
+        return Fraction(self.library[f"{name.replace('[i]', f'[{number}]')}"])
+
+    def same_in_our_engine(self) -> PlainAircraft:
+        """The aircraft as the library now holds it."""
+        weight, along, across = self.empty
+        lines = [
+            (self.held("inertia/pointmass-weight-lbs[i]", number), *arms)
+            for number, arms in enumerate(self.points)
+        ]
+        tanks = []
+        for number, (arm, lateral, capacity) in enumerate(self.tanks):
+            volume = self.held("propulsion/tank[i]/contents-lbs", number) / DENSITY
+            most = max(volume, capacity / DENSITY, Fraction(1))
+            tanks.append(FuelTank(volume, [(0, arm), (most, arm)], lateral))
+        return PlainAircraft(weight, weight * along, weight * across, lines, tanks, DENSITY)
+
+
+def length(element: ElementTree.Element, axis: str) -> Fraction:
+    return Fraction(element.findtext(axis, "0").strip()) * INCHES[element.get("unit", "IN")]
+
+
+def weight(element: ElementTree.Element, name: str) -> Fraction:
+    found = element.find(name)
+    assert found is not None
+    return Fraction((found.text or "").strip()) * POUNDS[found.get("unit", "LBS")]
+
+
+def model(name: str) -> Model:
+    library = jsbsim.FGFDMExec(None)
+    library.set_debug_level(0)
+    assert library.load_model(name)
+    assert library.run_ic()
+    file = Path(jsbsim.get_default_root_dir()) / "aircraft" / name / f"{name}.xml"
+    root = ElementTree.parse(file).getroot()  # noqa: S314  a file of an installed package
+    balance = root.find("mass_balance")
+    assert balance is not None
+    centre = next(spot for spot in balance.findall("location") if spot.get("name") == "CG")
+    points = [point.find("location") for point in balance.findall("pointmass")]
+    tanks = [(tank.find("location"), weight(tank, "capacity")) for tank in root.findall("propulsion/tank")]
+    return Model(
+        name,
+        library,
+        (weight(balance, "emptywt"), length(centre, "x"), length(centre, "y")),
+        [(length(spot, "x"), length(spot, "y")) for spot in points if spot is not None],
+        [(length(spot, "x"), length(spot, "y"), most) for spot, most in tanks if spot is not None],
+    )
+
+
+def assert_same(flown: Model) -> None:
+    state = flown.same_in_our_engine().result().state("ramp")
+    for ours, name in (
+        (state.weight, "inertia/weight-lbs"),
+        (state.arm, "inertia/cg-x-in"),
+        (state.lateral_arm, "inertia/cg-y-in"),
+    ):
+        assert float(ours) == pytest.approx(flown.library[name], rel=RELATIVE, abs=NOTHING), (
+            flown.name,
+            name,
+        )
+
+
+@pytest.mark.parametrize("name", MODELS)
+def test_as_shipped_both_give_the_same_weight_and_cg(name):
+    flown = model(name)
+
+    assert flown.tanks
+    assert_same(flown)
+
+
+@pytest.mark.parametrize("name", MODELS)
+def test_loaded_at_random_both_give_the_same_weight_and_cg(name):
+    flown = model(name)
+    chance = random.Random(name)
+    weights = set()
+
+    for _ in range(RANDOM_LOADS):
+        for number in range(len(flown.points)):
+            flown.library[f"inertia/pointmass-weight-lbs[{number}]"] = chance.uniform(0, 400)
+        for number, (_, _, capacity) in enumerate(flown.tanks):
+            flown.library[f"propulsion/tank[{number}]/contents-lbs"] = chance.uniform(0, float(capacity))
+        assert flown.library.run_ic()
+        assert_same(flown)
+        weights.add(flown.library["inertia/weight-lbs"])
+
+    assert len(weights) == RANDOM_LOADS
