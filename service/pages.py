@@ -16,11 +16,11 @@ from loads.cautions import CAUTIONS, INVENTED
 
 def page_context(request: HttpRequest) -> dict[str, Any]:
     """This function will give every page the signed-in person, their operator and the cautions."""
-    person = getattr(request, "user", None)
-    known = isinstance(person, Person)
+    user = getattr(request, "user", None)
+    person = user if isinstance(user, Person) else None
     return {
-        "operator": person.operator if known else None,
-        "person_name": person.name if known else "",
+        "operator": person.operator if person else None,
+        "person_name": person.name if person else "",
         "cautions": CAUTIONS,
         "invented_words": INVENTED,
     }
@@ -38,7 +38,9 @@ def _where_next(request: HttpRequest) -> str:
 @sensitive_post_parameters("password")
 @require_http_methods(["GET", "HEAD", "POST"])
 def sign_in(request: HttpRequest) -> HttpResponse:
-    """This function will show the sign-in page, and sign a person in who gives the right login and password."""
+    """This function will show the sign-in page, and sign a person in who gives the right login and
+    password.
+    """
     if request.method != "POST":
         return render(request, "service/sign_in.html", {"next": _where_next(request)})
     person = authenticate(

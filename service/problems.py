@@ -111,19 +111,19 @@ def is_api(request: HttpRequest) -> bool:
     return request.path_info.startswith("/api/") or request.path_info == "/health"
 
 
-def not_found(request: HttpRequest, **_: Any) -> HttpResponse:
+def not_found(request: HttpRequest, exception: Exception | None = None) -> HttpResponse:  # noqa: ARG001  # the form Django calls
     """This function will answer for an address that names nothing (handler404)."""
     words = "There is nothing at this address."
     return _framework(404, words) if is_api(request) else _page(request, 404, words)
 
 
-def unreadable(request: HttpRequest, **_: Any) -> HttpResponse:
+def unreadable(request: HttpRequest, exception: Exception | None = None) -> HttpResponse:  # noqa: ARG001  # the form Django calls
     """This function will answer for a request that Django itself refuses to read (handler400)."""
     words = "The request cannot be read."
     return _framework(400, words) if is_api(request) else _page(request, 400, words)
 
 
-def not_allowed(request: HttpRequest, **_: Any) -> HttpResponse:
+def not_allowed(request: HttpRequest, exception: Exception | None = None) -> HttpResponse:  # noqa: ARG001  # the form Django calls
     """This function will answer for what Django refuses before a view is asked (handler403)."""
     words = "This is not allowed."
     return _framework(403, words) if is_api(request) else _page(request, 403, words)

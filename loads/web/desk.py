@@ -18,6 +18,7 @@ HOW: Choices = (
     ("standard", "standard"),
     ("estimated", "estimated"),
 )
+INFANT_HOW: Choices = tuple(choice for choice in HOW if choice[0] != "standard")
 POSITIONS: Choices = (
     ("", "passenger"),
     ("pilot in command", "pilot in command"),
@@ -71,16 +72,36 @@ class Maker:
     typed: Mapping[str, str]
     faults: Mapping[str, str]
 
-    def text(self, name: str, label: str, *, maximum: int = 80, title: str = "", hint: str = "", kind: str = "text") -> Field:
+    def text(
+        self, name: str, label: str, *, maximum: int = 80, title: str = "", hint: str = "", kind: str = "text"
+    ) -> Field:
         """This function will return an input for words."""
         return Field(
-            name, label, self.typed.get(name, ""), self.faults.get(name, ""), (), title or label, hint, kind, False, maximum
+            name,
+            label,
+            self.typed.get(name, ""),
+            self.faults.get(name, ""),
+            (),
+            title or label,
+            hint,
+            kind,
+            False,
+            maximum,
         )
 
     def figure(self, name: str, label: str, *, title: str = "", hint: str = "") -> Field:
         """This function will return an input for one figure."""
         return Field(
-            name, label, self.typed.get(name, ""), self.faults.get(name, ""), (), title or label, hint, "text", True, 20
+            name,
+            label,
+            self.typed.get(name, ""),
+            self.faults.get(name, ""),
+            (),
+            title or label,
+            hint,
+            "text",
+            True,
+            20,
         )
 
     def choice(self, name: str, label: str, choices: Choices, *, first: str = "", title: str = "") -> Field:
@@ -120,6 +141,7 @@ def _seat(make: Maker, seat_id: str, serves: str, weights: Choices) -> list[Fiel
         make.choice(f"{prefix}:category", f"Category in {seat_id}", CATEGORIES),
         make.text(f"{prefix}:infant", f"Infant on the lap in {seat_id}", maximum=80),
         make.figure(f"{prefix}:infant_weight", f"Weight of the infant in {seat_id}"),
+        make.choice(f"{prefix}:infant_how", f"How the weight of the infant in {seat_id} was got", INFANT_HOW),
     ]
 
 
@@ -147,7 +169,10 @@ def _fuel(make: Maker, weights: Choices, volumes: Choices, densities: Choices) -
         ("trip", "Trip fuel"),
         ("minimum_at_landing", "Minimum at landing"),
     ):
-        fields = [make.figure(name, title), make.choice(f"{name}:unit", f"Unit of {title.lower()}", weights + volumes)]
+        fields = [
+            make.figure(name, title),
+            make.choice(f"{name}:unit", f"Unit of {title.lower()}", weights + volumes),
+        ]
         rows.append({"name": title, "fields": fields})
     return rows
 
@@ -163,7 +188,9 @@ def _limit(make: Maker, row: int, weights: Choices) -> list[Field]:
 
 
 def _rows_typed(typed: Mapping[str, str], prefix: str) -> int:
-    rows = [int(name.split(":")[1]) for name in typed if name.startswith(prefix) and name.split(":")[1].isdigit()]
+    rows = [
+        int(name.split(":")[1]) for name in typed if name.startswith(prefix) and name.split(":")[1].isdigit()
+    ]
     return max(rows, default=-1) + 1
 
 
@@ -196,9 +223,12 @@ def lay_desk(
         "configuration_name": configuration.name,
         "flight": _flight(make, zone),
         "seats": [
-            {"id": seat.id, "name": seat.name, "fields": _seat(make, seat.id, seat.serves, weights)} for seat in seats
+            {"id": seat.id, "name": seat.name, "fields": _seat(make, seat.id, seat.serves, weights)}
+            for seat in seats
         ],
-        "persons": make.figure("persons_on_board", "Persons on board", hint="counted at the aircraft, infants too"),
+        "persons": make.figure(
+            "persons_on_board", "Persons on board", hint="counted at the aircraft, infants too"
+        ),
         "items": [_item(make, row, places, weights) for row in range(item_rows)],
         "tanks": [_tank(make, basis, number, volumes + weights) for number in range(len(basis.tanks))],
         "fuel": _fuel(make, weights, volumes, densities),

@@ -1,6 +1,7 @@
 """Between the page that declares a load and the document `tarebook.load/1`, both ways; no Django here.
 
-Inputs are named after what they hold: `seat:ROW1-L:weight`, `item:0:place`, `tank:LEFT-MAIN:quantity`. Nothing is filled in
+Inputs are named after what they hold: `seat:ROW1-L:weight`, `item:0:place`, `tank:LEFT-MAIN:quantity`.
+Nothing is filled in
 that was not typed: an empty weight stays absent and is refused by the reader of the document, with its field.
 """
 
@@ -63,8 +64,11 @@ class _Builder:
                 person["lap_infant"]["weight"] = _quantity(
                     self.typed, f"seat:{seat}:infant_weight", f"seat:{seat}:unit"
                 )
+            if how := _clean(self.typed, f"seat:{seat}:infant_how"):
+                person["lap_infant"]["how"] = how
         self.field_of |= {
             f"{at}/category": f"seat:{seat}:category",
+            f"{at}/lap_infant/how": f"seat:{seat}:infant_how",
             f"{at}/lap_infant": f"seat:{seat}:infant",
             f"{at}/lap_infant/weight": f"seat:{seat}:infant_weight",
         }
@@ -152,15 +156,21 @@ class _Builder:
 def document_of(
     typed: Typed, *, departure: str, seats: Sequence[str], tanks: Sequence[str]
 ) -> tuple[dict[str, Any], dict[str, str]]:
-    """This function will return the document `tarebook.load/1` of what was typed, and the input behind each pointer.
+    """This function will return the document `tarebook.load/1` of what was typed, and the input behind each
+    pointer.
 
-    `departure` is the instant with its offset, already made of the typed date, time and the operator's time zone.
+    `departure` is the instant with its offset, already made of the typed date, time and the operator's time
+    zone.
     """
     builder = _Builder(typed)
     crew, passengers = builder.people(seats)
     flight_parts = ("reference", "origin", "destination", "operation")
     builder.field_of |= {f"/flight/{part}": part for part in flight_parts}
-    builder.field_of |= {"/flight/departure": "time", "/flight/leg": "leg", "/persons_on_board": "persons_on_board"}
+    builder.field_of |= {
+        "/flight/departure": "time",
+        "/flight/leg": "leg",
+        "/persons_on_board": "persons_on_board",
+    }
     leg = _clean(typed, "leg") or "1"
     persons = _clean(typed, "persons_on_board")
     document: dict[str, Any] = {
@@ -180,7 +190,9 @@ def document_of(
 
 
 def field_of(pointer: str, fields: Mapping[str, str]) -> str:
-    """This function will return the input that a fault's pointer belongs to: its own, or that of its nearest parent."""
+    """This function will return the input that a fault's pointer belongs to: its own, or that of its
+    nearest parent.
+    """
     while pointer:
         if pointer in fields:
             return fields[pointer]
@@ -188,7 +200,9 @@ def field_of(pointer: str, fields: Mapping[str, str]) -> str:
     return ""
 
 
-def _typed_quantity(typed: dict[str, str], name: str, unit_name: str, quantity: Mapping[str, Any] | None) -> None:
+def _typed_quantity(
+    typed: dict[str, str], name: str, unit_name: str, quantity: Mapping[str, Any] | None
+) -> None:
     if quantity:
         typed[name] = str(quantity["value"])
         typed[unit_name] = str(quantity["unit"])
@@ -203,6 +217,7 @@ def _typed_people(typed: dict[str, str], document: Mapping[str, Any]) -> None:
         _typed_quantity(typed, f"{prefix}:weight", f"{prefix}:unit", person.get("weight"))
         if infant := person.get("lap_infant"):
             typed[f"{prefix}:infant"] = str(infant["name"])
+            typed[f"{prefix}:infant_how"] = str(infant.get("how", ""))
             _typed_quantity(typed, f"{prefix}:infant_weight", f"{prefix}:unit", infant.get("weight"))
 
 
@@ -237,7 +252,9 @@ def typed_of(document: Mapping[str, Any]) -> dict[str, str]:
 
 
 def can_carry(document: Mapping[str, Any], *, seats: Sequence[str], tanks: Sequence[str]) -> bool:
-    """This function will say whether the page can carry every part of `document`, so that a revision loses nothing."""
+    """This function will say whether the page can carry every part of `document`, so that a revision loses
+    nothing.
+    """
     again, _ = document_of(
         typed_of(document), departure=str(document["flight"]["departure"]), seats=seats, tanks=tanks
     )
@@ -245,17 +262,24 @@ def can_carry(document: Mapping[str, Any], *, seats: Sequence[str], tanks: Seque
 
 
 def _comparable(document: Mapping[str, Any]) -> dict[str, Any]:
-    """This function will return the document with its people and items in a fixed order and empty parts left out."""
+    """This function will return the document with its people and items in a fixed order and empty parts
+    left out.
+    """
     parts = dict(document)
     fuel = {name: part for name, part in parts.pop("fuel", {}).items() if part != {}}
     flight = {"leg": 1} | parts.pop("flight")
     people = {
-        kind: sorted(map(repr, map(_sorted, parts.pop(kind, ())))) for kind in ("crew", "passengers", "items", "limits")
+        kind: sorted(map(repr, map(_sorted, parts.pop(kind, ()))))
+        for kind in ("crew", "passengers", "items", "limits")
     }
-    return {name: part for name, part in parts.items() if part} | people | {
-        "fuel": _sorted(fuel),
-        "flight": _sorted(flight),
-    }
+    return (
+        {name: part for name, part in parts.items() if part}
+        | people
+        | {
+            "fuel": _sorted(fuel),
+            "flight": _sorted(flight),
+        }
+    )
 
 
 def _sorted(part: Any) -> Any:

@@ -26,7 +26,9 @@ def test_no_source_file_is_longer_than_a_sitting() -> None:
 
 def test_no_sql_file_is_longer_than_a_sitting() -> None:
     counted = {
-        shown(path): len(path.read_text(encoding="utf-8").splitlines()) for path in files() if path.suffix == ".sql"
+        shown(path): len(path.read_text(encoding="utf-8").splitlines())
+        for path in files()
+        if path.suffix == ".sql"
     }
 
     assert counted
@@ -34,7 +36,9 @@ def test_no_sql_file_is_longer_than_a_sitting() -> None:
 
 
 def test_no_test_file_is_too_long() -> None:
-    counted = {shown(path): len(path.read_text(encoding="utf-8").splitlines()) for path in sources(tests=True)}
+    counted = {
+        shown(path): len(path.read_text(encoding="utf-8").splitlines()) for path in sources(tests=True)
+    }
 
     assert counted
     assert {name: lines for name, lines in counted.items() if lines > MOST_TEST_LINES} == {}
@@ -65,7 +69,9 @@ def test_no_module_has_a_name_that_says_nothing() -> None:
 
 
 def test_the_rooms_begin_empty_so_that_pure_modules_import_without_settings() -> None:
-    assert {room: (ROOT / room / "__init__.py").read_text(encoding="utf-8") for room in ROOMS} == dict.fromkeys(ROOMS, "")
+    assert {
+        room: (ROOT / room / "__init__.py").read_text(encoding="utf-8") for room in ROOMS
+    } == dict.fromkeys(ROOMS, "")
 
 
 def test_nothing_but_the_agreed_entries_stands_at_the_top() -> None:

@@ -68,7 +68,7 @@ def test_every_switched_off_check_has_its_reason_beside_it() -> None:
 
 
 def test_pages_ask_no_third_party_host() -> None:
-    """Nothing that a page or a paper loads comes from elsewhere; names in XML and JSON Schema load nothing."""
+    """Nothing that a page or a paper loads comes from elsewhere."""
     loads = re.compile(r"""(?:src|href|url|action)\s*[=(]\s*["']?\s*(?:https?:)?//[^"'\s)]+""", re.IGNORECASE)
     found = {
         f"{shown(path)}:{match.group(0)}"

@@ -1,0 +1,84 @@
+"""The page of one day's loads, by departure."""
+
+from datetime import UTC, date, datetime, time, timedelta
+from typing import Any
+from zoneinfo import ZoneInfo
+
+from django.http import HttpRequest, HttpResponse
+from django.shortcuts import render
+from django.utils import timezone
+from django.views.decorators.http import require_safe
+
+from loads.lifecycle import ways_out
+from loads.queries.current import Current
+from loads.queries.listing import MOST_ROWS, Filters, list_loads
+from loads.queries.stale import stale_parts
+from loads.web.asking import zone_of
+from records.web.asking import operator_of, signed_in
+
+GONE = ("superseded", "withdrawn")
+ONE_DAY = timedelta(days=1)
+
+
+@require_safe
+@signed_in
+def day(request: HttpRequest) -> HttpResponse:
+    """This function will show the loads that depart on one day of the operator's own clock, today's if none
+    is named.
+    """
+    zone, now = zone_of(request), timezone.now()
+    wanted = _day_asked(request, now.astimezone(zone).date())
+    since = datetime.combine(wanted, time(), tzinfo=zone)
+    until = datetime.combine(wanted + ONE_DAY, time(), tzinfo=zone)
+    page = list_loads(operator_of(request), Filters(since=since, until=until), most=MOST_ROWS)
+    lines = [_line(current, zone, now) for current in page.loads]
+    context = {
+        "day": wanted,
+        "before": wanted - ONE_DAY,
+        "after": wanted + ONE_DAY,
+        "loads": lines,
+        "count_line": _counted(lines, more=page.after is not None),
+    }
+    return render(request, "loads/day.html", context)
+
+
+def _day_asked(request: HttpRequest, today: date) -> date:
+    try:
+        wanted = date.fromisoformat(request.GET.get("day", ""))
+    except ValueError:
+        return today
+    # The neighbours of the first and the last day of the calendar could not be named.
+    return wanted if date(1950, 1, 1) <= wanted <= date(2150, 1, 1) else today
+
+
+def _line(current: Current, zone: ZoneInfo, now: datetime) -> dict[str, Any]:
+    load, governing = current.load, current.result().get("governing")
+    lines = governing if isinstance(governing, dict) else {}
+    paper = getattr(load, "paper", None)
+    return {
+        "id": load.id,
+        "local_time": load.departure.astimezone(zone).strftime("%H:%M"),
+        "utc_time": load.departure.astimezone(UTC).strftime("%H:%M"),
+        "registration": load.aircraft.registration,
+        "reference": load.reference,
+        "leg": load.leg,
+        "origin": load.origin,
+        "destination": load.destination,
+        "verdict": current.assessment.verdict,
+        "weight_line": lines.get("weight", ""),
+        "cg_line": lines.get("cg", ""),
+        "state": current.state,
+        "gone": current.state in GONE,
+        "stale": "open" in ways_out(current.state) and bool(stale_parts(current, now)),
+        "number": paper.number if paper else None,
+    }
+
+
+def _counted(lines: list[dict[str, Any]], *, more: bool) -> str:
+    standing = [line for line in lines if not line["gone"]]
+    rejects = sum(line["verdict"] != "within" for line in standing)
+    counted = f"{len(standing)} load{'' if len(standing) == 1 else 's'} standing"
+    words = f"{counted}, {rejects} not within limits." if rejects else f"{counted}, all within limits."
+    if not standing:
+        words = "No load stands."
+    return f"{words} Only the first {MOST_ROWS} are shown." if more else words

@@ -1,0 +1,57 @@
+"""The page of one load, and its manifest."""
+
+from uuid import UUID
+
+from django.http import HttpRequest, HttpResponse
+from django.shortcuts import render
+from django.utils import timezone
+from django.views.decorators.http import require_safe
+
+from loads.actions.file_manifest import manifest_bytes
+from loads.queries.current import load_of
+from loads.web.asking import zone_of
+from loads.web.shown import load_page
+from records.refusal import Refused
+from records.web.asking import actor_of, operator_of, signed_in
+
+
+@require_safe
+@signed_in
+def one_load(request: HttpRequest, load: UUID) -> HttpResponse:
+    """This function will show one load: verdict, limits, computation, plot, record, and what can be done
+    now.
+    """
+    return load_answer(request, load)
+
+
+def load_answer(
+    request: HttpRequest, load: UUID, refusal: Refused | None = None, about: str = ""
+) -> HttpResponse:
+    """This function will render the page, with what was refused on top if something was; `about` names the
+    form.
+    """
+    current = load_of(operator_of(request), load)
+    context = load_page(current, zone_of(request), timezone.now(), actor_of(request))
+    if refusal is not None:
+        context["refusal"] = {
+            "title": refusal.title,
+            "detail": refusal.detail,
+            "next_step": refusal.next_step,
+            "about": about,
+        }
+    return render(request, "loads/load.html", context, status=refusal.status if refusal else 200)
+
+
+@require_safe
+@signed_in
+def manifest(request: HttpRequest, load: UUID) -> HttpResponse:
+    """This function will hand out the filed manifest, and file it first if no worker has yet."""
+    current = load_of(operator_of(request), load)
+    body = manifest_bytes(operator_of(request), load)
+    name = f"manifest-{current.load.aircraft.registration}-{current.load.reference}.pdf"
+    headers = {"Content-Disposition": f'inline; filename="{_plain(name)}"'}
+    return HttpResponse(body, content_type="application/pdf", headers=headers)
+
+
+def _plain(name: str) -> str:
+    return "".join(character if character.isalnum() or character in "-._" else "-" for character in name)
