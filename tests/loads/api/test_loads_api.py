@@ -1,6 +1,7 @@
 """Loads over the API: the whole way of one load, and what bad requests get."""
 
 import copy
+import hashlib
 import json
 from uuid import uuid4
 
@@ -325,6 +326,25 @@ def test_a_body_that_cannot_be_read_is_a_400_and_nothing_is_stored(people, body:
     refused = send(people.preparer, "/loads", body)
 
     assert (refused.status_code, rows()) == (400, before), refused.content
+
+
+def test_the_manifest_is_handed_out_as_filed(people) -> None:
+    current = accepted(people)
+    path = f"/api/v1/loads/{current.load.id}/manifest"
+
+    first, second = (api(people.auditor).get(path, headers={"Accept": "application/pdf"}) for _ in range(2))
+
+    assert (first.status_code, first["Content-Type"], first.content[:5]) == (200, "application/pdf", b"%PDF-")
+    assert first.content == second.content
+    assert first["ETag"] == f'"{hashlib.sha256(first.content).hexdigest()}"'
+
+
+def test_a_load_that_was_never_accepted_has_no_manifest(people) -> None:
+    current = submitted(people)
+
+    refused = api(people.auditor).get(f"/api/v1/loads/{current.load.id}/manifest")
+
+    assert (refused.status_code, answer(refused)["code"]) == (404, "manifest-not-known")
 
 
 def test_a_submission_needs_a_key(people) -> None:
