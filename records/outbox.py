@@ -16,6 +16,7 @@ from django.db import transaction
 from django.db.models import F
 from django.db.models.functions import Now
 
+from records import broker
 from records.models.outbox import Outbox
 
 if TYPE_CHECKING:
@@ -49,6 +50,8 @@ def put(entry: Entry, task: str, key: str) -> None:
 def wake(task: str, key: str) -> bool:
     """This function will ask the broker to wake a worker, and say whether that was taken; it never raises."""
     try:
+        if not broker.answers():
+            raise ConnectionError("the broker does not answer")
         current_app.send_task(task, args=[key], retry=False)
     except Exception as problem:  # noqa: BLE001  # whatever the broker fails with, the sweeper does it
         log.warning(

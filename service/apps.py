@@ -11,6 +11,8 @@ class ServiceConfig(AppConfig):
     name = "service"
 
     def ready(self) -> None:
-        """This function will load what registers itself by being loaded: the checks and the API's schemes."""
+        """This function will load what registers itself by being loaded: checks, API schemes, the queue."""
         import_module("service.checks")
         import_module("service.openapi")
+        # For every thread of the web server, not only the one that loads it: requests send work.
+        import_module("service.worker").app.set_default()

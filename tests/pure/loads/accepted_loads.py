@@ -21,11 +21,22 @@ from loads.manifest.facts import (
     SealFacts,
     SignatureFacts,
 )
-from loads.statement import statement
+from loads.statement import MEANINGS, statement
 from records.canonical import canonical, digest
 from records.strict_json import read
 
 DATA = Path(__file__).parents[3] / "service" / "demo" / "data"
+OPERATOR = OperatorFacts(
+    code="kestrel-ridge",
+    name="Kestrel Ridge Air",
+    certificate="KRA-0417",
+    base="Nallow Field",
+    time_zone="America/Chicago",
+    rule_set="US",
+    procedure="Operations manual part B, section 6, revision 4",
+    weight_method="actual weights, each person and item weighed or declared",
+    invented=True,
+)
 SIGNED = datetime(2026, 12, 1, 13, 52, 7, tzinfo=UTC)
 
 
@@ -39,22 +50,30 @@ def person(
     return {"name": name, "seat": seat, "weight": q(weight, unit), "how": how, **more}
 
 
-def item(
-    what: str, place: str, weight: str, unit: str, kind: str = "baggage", how: str = "weighed"
-) -> dict[str, Any]:
-    return {"kind": kind, "what": what, "place": place, "weight": q(weight, unit), "how": how}
+def pilot(name: str, seat: str, weight: str, unit: str) -> dict[str, Any]:
+    login = name.lower().replace(" ", "")
+    return person(name, seat, weight, unit, "weighed", position="pilot in command", person=login)
+
+
+def item(what: str, place: str, weight: dict[str, str], **more: Any) -> dict[str, Any]:
+    return {"kind": "baggage", "what": what, "place": place, "weight": weight, "how": "weighed", **more}
 
 
 def _flight(reference: str, departure: str, origin: str, destination: str) -> dict[str, Any]:
     return {
-        "reference": reference, "leg": 1, "departure": departure, "origin": origin, "destination": destination,
+        "reference": reference,
+        "leg": 1,
+        "departure": departure,
+        "origin": origin,
+        "destination": destination,
         "operation": "passenger-charter",
-    }  # fmt: skip
+    }
 
 
 def twin_load(**changes: Any) -> dict[str, Any]:
     """A light twin in lb and in, six seats, four tanks; with a lap infant and a stated limit."""
     unit = "lb"
+    infant = {"name": "I. Dravo", "weight": q(18, unit), "how": "weighed"}
     pilot = person(
         "R. Amani", "COCKPIT-L", "181", unit, "weighed", position="pilot in command", person="r.amani"
     )
@@ -62,15 +81,15 @@ def twin_load(**changes: Any) -> dict[str, Any]:
         "schema": "tarebook.load/1", "aircraft": "Q9-KTB", "configuration": "six-seat",
         "flight": _flight("KT-214", "2026-12-01T08:30:00-06:00", "XNAL", "XKOR"),
         "persons_on_board": 5,
-        "crew": [pilot],
+        "crew": [pilot("R. Amani", "COCKPIT-L", "181", unit)],
         "passengers": [
             person("L. Osei", "ROW1-L", "176", unit),
-            person("M. Dravo", "ROW1-R", "139", unit, lap_infant={"name": "I. Dravo", "weight": q(18, unit), "how": "weighed"}),
+            person("M. Dravo", "ROW1-R", "139", unit, lap_infant=infant),
             person("T. Havel", "ROW2-L", "158", unit),
         ],
         "items": [
-            item("checked bags", "AFT-HOLD", "85", unit),
-            item("survey tripod", "NOSE-HOLD", "60", unit, "cargo"),
+            item("checked bags", "AFT-HOLD", q(85, unit)),
+            item("survey tripod", "NOSE-HOLD", q(60, unit), kind="cargo"),
         ],
         "fuel": {
             "density": {**q("6.7", "lb/US gal"), "source": "delivery note 4471"},
@@ -90,20 +109,22 @@ def turboprop_load(**changes: Any) -> dict[str, Any]:
     """A single turboprop in kg and mm, every seat taken and many items: the longest paper expected."""
     unit = "kg"
     seats = ["ROW1-L", "ROW1-R", "ROW2-L", "ROW2-R", "ROW3-L", "ROW3-R", "ROW4-L", "ROW4-R"]
+    holds = ("AFT-HOLD", "FWD-POD", "AFT-POD")
     long = "Wilhelmina Oyelaran-Castellanos van der Merwede-Thorvaldsen"
     return {
         "schema": "tarebook.load/1", "aircraft": "Q9-FEN", "configuration": "eight-seat",
         "flight": _flight("KT-318", "2026-12-01T14:05:00+01:00", "XVEL", "XMIR"),
         "persons_on_board": 10,
         "crew": [
-            person("K. Ilves", "COCKPIT-L", "84", unit, "weighed", position="pilot in command", person="k.ilves"),
+            pilot("K. Ilves", "COCKPIT-L", "84", unit),
             person("S. Boateng", "COCKPIT-R", "71", unit, "weighed", position="second in command"),
         ],
         "passengers": [
-            person(long if n == 3 else f"P{n}. Larssen", seat, str(60 + n), unit) for n, seat in enumerate(seats)
+            person(long if n == 3 else f"P{n}. Larssen", seat, str(60 + n), unit)
+            for n, seat in enumerate(seats)
         ],
         "items": [
-            item(f"bags of party {n + 1}", ("AFT-HOLD", "FWD-POD", "AFT-POD")[n % 3], str(9 + n), unit, how="estimated" if n == 4 else "weighed")
+            item(f"bags of party {n + 1}", holds[n % 3], q(9 + n, unit), how="estimated" if n == 4 else "weighed")
             for n in range(7)
         ],
         "fuel": {
@@ -123,9 +144,9 @@ def helicopter_load(**changes: Any) -> dict[str, Any]:
         "schema": "tarebook.load/1", "aircraft": "Q9-HEL", "configuration": "five-seat",
         "flight": _flight("KT-77", "2026-12-01T10:00:00+00:00", "XMIR", "XOBS"),
         "persons_on_board": 3,
-        "crew": [person("J. Sorrel", "FRONT-R", "79", unit, "weighed", position="pilot in command", person="j.sorrel")],
+        "crew": [pilot("J. Sorrel", "FRONT-R", "79", unit)],
         "passengers": [person("A. Quist", "REAR-L", "82", unit), person("B. Quist", "REAR-R", "64", unit)],
-        "items": [item("mast parts", "AFT-HOLD", "30", unit, "cargo")],
+        "items": [item("mast parts", "AFT-HOLD", q(30, unit), kind="cargo")],
         "fuel": {
             "density": {**q("0.80", "kg/l"), "source": "delivery note 90"},
             "at_engine_start": {"MAIN": q(220, "l")},
@@ -138,43 +159,37 @@ def helicopter_load(**changes: Any) -> dict[str, Any]:
 
 def accepted(load: dict[str, Any], kind: str, *, rule_set: str = "US", invented: bool = True) -> Facts:
     """Facts of the load as accepted, with what the real engine finds."""
-    inputs = read(json.dumps(load).encode())
-    assert isinstance(inputs, dict)
-    inputs = json.loads(canonical(inputs))
+    inputs = json.loads(canonical(read(json.dumps(load).encode())))
     text = (DATA / f"{kind}.loading-basis.json").read_text()
-    empty_document = read((DATA / f"{kind}.empty-weight.json").read_bytes())
+    empty_document = json.loads((DATA / f"{kind}.empty-weight.json").read_bytes())
     basis = basis_from_text(text)
     result = assess(read_load(inputs, basis), basis, read_empty_weight(empty_document, basis)).as_document()
-    basis_document = json.loads(text)
-    digests = {"loading_basis": digest(read(text.encode())), "empty_weight": digest(empty_document)}
-    versions = {
-        name: {"id": f"0190{n}000-0000-7000-8000-000000000000", "digest": d}
-        for n, (name, d) in enumerate(digests.items())
-    }
+    digests = {"loading_basis": digest(json.loads(text)), "empty_weight": digest(empty_document)}
+    versions = {name: {"id": f"id of the {name}", "digest": found} for name, found in digests.items()}
     signed = canonical(statement(inputs, versions, ENGINE_VERSION, result))
-    name = next(line["name"] for line in inputs["crew"])
+    began = datetime(2026, 3, 19, tzinfo=UTC)
+    name = inputs["crew"][0]["name"]
     return Facts(
-        operator=OperatorFacts(
-            "kestrel-ridge", "Kestrel Ridge Air", "KRA-0417", "Nallow Field", "America/Chicago", rule_set,
-            "Operations manual part B, section 6, revision 4", "actual weights, each person and item weighed or declared", invented,
+        operator=replace(OPERATOR, rule_set=rule_set, invented=invented),
+        aircraft=AircraftFacts(
+            load["aircraft"], "62-0113", basis.aircraft_type, basis.category, basis.engines
         ),
-        aircraft=AircraftFacts(load["aircraft"], "62-0113", basis.aircraft_type, basis.category, basis.engines),
-        load="01980a11-2222-7333-8444-555566667777", replaces="", number=14, inputs=inputs, result=result,
-        basis=BasisFacts(3, digests["loading_basis"], SIGNED, basis_document, basis.envelopes, basis.chord),
-        empty_weight=EmptyWeightFacts(
-            digests["empty_weight"], datetime(2026, 3, 19, tzinfo=UTC), SIGNED, json.loads(json.dumps(empty_document, default=str))
-        ),
+        load="01980a11-2222-7333-8444-555566667777",
+        replaces="",
+        number=14,
+        inputs=inputs,
+        result=result,
+        basis=BasisFacts(3, digests["loading_basis"], began, json.loads(text), basis.envelopes, basis.chord),
+        empty_weight=EmptyWeightFacts(digests["empty_weight"], began, began, empty_document),
         engine=ENGINE_VERSION,
         signatures=tuple(
-            SignatureFacts(name, capacity, meaning, words, SIGNED, "session")
-            for capacity, meaning, words in (
-                ("load preparer", "prepared", "I prepared this load from what was declared, and checked the figures above"),
-                ("pilot in command", "accepted", "I accept this load for the flight named above as its pilot in command"),
-            )
+            SignatureFacts(name, capacity, meaning, MEANINGS[meaning], SIGNED, "session")
+            for capacity, meaning in (("load preparer", "prepared"), ("pilot in command", "accepted"))
         ),
         seal=SealFacts(42, hashlib.sha256(b"seal").hexdigest(), SIGNED),
-        statement=signed, digest=hashlib.sha256(signed).hexdigest(),
-    )  # fmt: skip
+        statement=signed,
+        digest=hashlib.sha256(signed).hexdigest(),
+    )
 
 
 def twin(**changes: Any) -> Facts:
@@ -186,4 +201,4 @@ def turboprop(**changes: Any) -> Facts:
 
 
 def helicopter(**changes: Any) -> Facts:
-    return replace(accepted(helicopter_load(**changes), "helicopter"))
+    return accepted(helicopter_load(**changes), "helicopter")
