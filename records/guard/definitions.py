@@ -10,7 +10,7 @@ _FUNCTION = re.compile(
     r"^CREATE OR REPLACE FUNCTION (?P<name>\w+)\((?P<head>.*?)\bAS \$\$(?P<body>.*?)\$\$",
     re.DOTALL | re.MULTILINE,
 )
-_PINNED = re.compile(r"""\bSET "?(\w+)"? = ('[^']*'|[\w, ]+?)(?=\s+(?:SET\b|$))""")
+_PINNED = re.compile(r"""\bSET "?(\w+)"? = ('[^']*'|[\w, ]+?)(?=\s+SET\b|\s*$)""")
 
 
 @dataclass(frozen=True, slots=True)

@@ -1,8 +1,8 @@
 """Every way of writing, tried on every guarded table of the catalogue.
 
-For each table a transaction of the superuser takes away what is not a guard (checks, foreign keys, unique keys and
-triggers of other purpose), so that nothing but the guards can refuse; then it writes as the service role. All of it is
-rolled back.
+For each table a transaction of the superuser takes away what is not a guard (checks, foreign keys, unique
+keys and triggers of other purpose), so that nothing but the guards can refuse; then it writes as the service
+role. All of it is rolled back.
 """
 
 import datetime
@@ -80,7 +80,9 @@ class Cell:
 
 
 def _columns(table: Table) -> str:
-    return ", ".join(f'"{field.column}"' for field in table.model._meta.concrete_fields if not field.generated)
+    return ", ".join(
+        f'"{field.column}"' for field in table.model._meta.concrete_fields if not field.generated
+    )
 
 
 def create(cell: Cell) -> int:
@@ -98,7 +100,11 @@ def update(cell: Cell) -> int:
 
 
 def bulk_update(cell: Cell) -> int:
-    fields = [field.name for field in cell.row._meta.concrete_fields if not field.primary_key and not field.generated]
+    fields = [
+        field.name
+        for field in cell.row._meta.concrete_fields
+        if not field.primary_key and not field.generated
+    ]
     return cell.rows.bulk_update([cell.row], fields[:2]) if fields else update(cell)
 
 
@@ -108,7 +114,11 @@ def save_again(cell: Cell) -> int:
 
 
 def upsert(cell: Cell) -> int:
-    fields = [field.name for field in cell.row._meta.concrete_fields if not field.primary_key and not field.generated]
+    fields = [
+        field.name
+        for field in cell.row._meta.concrete_fields
+        if not field.primary_key and not field.generated
+    ]
     unique = [cell.row._meta.pk.name]
     cell.rows.bulk_create([cell.row], update_conflicts=True, update_fields=fields, unique_fields=unique)
     return 1
@@ -201,7 +211,9 @@ def made(table: Table) -> models.Model:
             continue
         if field.attname == table.operator_column or field.column == table.operator_column:
             setattr(row, field.attname, f"m-{uuid.uuid4().hex[:12]}" if table.keyed_by_operator else OPERATOR)
-        elif field.primary_key or not (field.null or field.has_default() or field.db_default is not models.NOT_PROVIDED):
+        elif field.primary_key or not (
+            field.null or field.has_default() or field.db_default is not models.NOT_PROVIDED
+        ):
             if not isinstance(field, models.AutoField | models.BigAutoField):
                 setattr(row, field.attname, _value(field))
     return row
@@ -242,7 +254,9 @@ def _value(field: models.Field) -> object:
 
 @contextmanager
 def laid_bare(table: Table) -> Iterator[Cell]:
-    """This function will hold one row of the table with nothing but the guards on it, and take it all back."""
+    """This function will hold one row of the table with nothing but the guards on it, and take it all
+    back.
+    """
     with transaction.atomic(using=ALIAS):
         with connections[ALIAS].cursor() as cursor:
             cursor.execute(_STRIP.format(table=table.name))
@@ -264,7 +278,10 @@ def _lines_of(table: Table, rows: list[models.Model]) -> bytes:
     state = transaction.savepoint(using=ALIAS)
     for row in rows:
         row.save(using=ALIAS, force_insert=True)
-    with connections[ALIAS].cursor() as cursor, cursor.copy(f"COPY {table.name} ({_columns(table)}) TO STDOUT") as out:
+    with (
+        connections[ALIAS].cursor() as cursor,
+        cursor.copy(f"COPY {table.name} ({_columns(table)}) TO STDOUT") as out,
+    ):
         lines = b"".join(out)
     transaction.savepoint_rollback(state, using=ALIAS)
     return lines

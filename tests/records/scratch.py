@@ -48,7 +48,9 @@ def run(statement: str, *values: object) -> list[tuple]:
 
 def put(what: str = "spanner", operator: str | None = "kt") -> int:
     """This function will insert one thing and return its number."""
-    return run("INSERT INTO scratch_thing (operator_id, what) VALUES (%s, %s) RETURNING id", operator, what)[0][0]
+    return run("INSERT INTO scratch_thing (operator_id, what) VALUES (%s, %s) RETURNING id", operator, what)[
+        0
+    ][0]
 
 
 def count(table: str) -> int:

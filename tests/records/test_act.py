@@ -75,8 +75,10 @@ def test_a_write_after_the_seal_of_its_act_is_refused():
 
 
 def test_an_act_inside_an_act_is_refused():
-    with pytest.raises(ActMisplaced, match="inside another act"), act(NOTE, by=AMANI, about="thing:1"), act(
-        NOTE, by=AMANI, about="thing:2"
+    with (
+        pytest.raises(ActMisplaced, match="inside another act"),
+        act(NOTE, by=AMANI, about="thing:1"),
+        act(NOTE, by=AMANI, about="thing:2"),
     ):
         pytest.fail("the inner body must not run")
 
@@ -89,15 +91,20 @@ def test_an_act_inside_an_act_is_refused_by_the_database_as_well():
 
 
 def test_an_act_inside_a_plain_transaction_is_refused():
-    with transaction.atomic(), pytest.raises(ActMisplaced, match="plain transaction"), act(
-        NOTE, by=AMANI, about="thing:1"
+    with (
+        transaction.atomic(),
+        pytest.raises(ActMisplaced, match="plain transaction"),
+        act(NOTE, by=AMANI, about="thing:1"),
     ):
         pytest.fail("the body must not run")
 
 
 def test_an_act_inside_a_plain_block_inside_the_transaction_for_acts_is_refused():
-    with transaction_for_acts(), transaction.atomic(), pytest.raises(ActMisplaced), act(
-        NOTE, by=AMANI, about="thing:1"
+    with (
+        transaction_for_acts(),
+        transaction.atomic(),
+        pytest.raises(ActMisplaced),
+        act(NOTE, by=AMANI, about="thing:1"),
     ):
         pytest.fail("the body must not run")
 
@@ -156,8 +163,9 @@ def test_a_broken_foreign_key_is_found_before_the_seal():
 
 
 def test_a_row_of_another_operator_is_refused():
-    with pytest.raises(OtherOperator, match="an act of 'kt' may not write a row of 'zz'"), act(
-        NOTE, by=AMANI, about="thing:1"
+    with (
+        pytest.raises(OtherOperator, match="an act of 'kt' may not write a row of 'zz'"),
+        act(NOTE, by=AMANI, about="thing:1"),
     ):
         put(operator="zz")
 

@@ -1,4 +1,6 @@
-"""No write escapes the trail: every way of writing on every table of the catalogue, in an act and without one."""
+"""No write escapes the trail: every way of writing on every table of the catalogue, in an act and without
+one.
+"""
 
 import pytest
 
@@ -20,7 +22,9 @@ def test_every_table_is_in_the_list_of_guarded_or_of_exempt_tables():
 
 def test_every_exempt_table_says_why():
     with connect("superuser") as admin:
-        rows = admin.execute("SELECT name FROM records_guarded_table WHERE mode IN ('exempt', 'trail') AND reason = ''")
+        rows = admin.execute(
+            "SELECT name FROM records_guarded_table WHERE mode IN ('exempt', 'trail') AND reason = ''"
+        )
         assert rows.fetchall() == []
 
 

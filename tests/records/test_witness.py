@@ -31,8 +31,10 @@ def test_an_image_is_the_same_whatever_the_session_is_set_to():
     with act(NOTE, by=AMANI, about="thing:1") as plain:
         run(insert)
     with act(NOTE, by=AMANI, about="thing:1") as strange:
-        run("SELECT set_config('TimeZone', 'Asia/Kolkata', true), set_config('DateStyle', 'German', true), "
-            "set_config('bytea_output', 'escape', true)")
+        run(
+            "SELECT set_config('TimeZone', 'Asia/Kolkata', true), set_config('DateStyle', 'German', true), "
+            "set_config('bytea_output', 'escape', true)"
+        )
         run(insert)
 
     (_, _, first), (_, _, second) = *changes(plain), *changes(strange)
@@ -60,7 +62,9 @@ def test_a_key_of_several_columns_is_a_list():
 
 def test_a_statement_over_many_rows_leaves_one_change_for_each():
     with act(NOTE, by=AMANI, about="thing:1") as entry:
-        run("INSERT INTO scratch_thing (operator_id, what) SELECT 'kt', 'row ' || i FROM generate_series(1, 500) i")
+        run(
+            "INSERT INTO scratch_thing (operator_id, what) SELECT 'kt', 'row ' || i FROM generate_series(1, 500) i"
+        )
 
     assert Change.objects.filter(act_id=entry.id).count() == 500
     assert len(json.loads(Seal.objects.get(act_id=entry.id).entry)["changes"]) == 500
@@ -111,22 +115,28 @@ def test_an_insert_that_becomes_an_update_is_witnessed_as_what_it_was():
     with act(NOTE, by=AMANI, about="person:10") as entry:
         run(upsert, SALT, SALT)
 
-    assert sorted((key, operation) for key, operation, _ in changes(entry)) == [("10", "update"), ("11", "insert")]
+    assert sorted((key, operation) for key, operation, _ in changes(entry)) == [
+        ("10", "update"),
+        ("11", "insert"),
+    ]
 
 
 def test_the_key_of_a_row_may_not_change():
     with act(NOTE, by=AMANI, about="person:20"):
         run("INSERT INTO scratch_person VALUES (20, 'kt', 'A', NULL, '', %s)", SALT)
 
-    with pytest.raises(FixedForGood, match="the key of a row of scratch_person may not change"), act(
-        NOTE, by=AMANI, about="person:20"
+    with (
+        pytest.raises(FixedForGood, match="the key of a row of scratch_person may not change"),
+        act(NOTE, by=AMANI, about="person:20"),
     ):
         run("UPDATE scratch_person SET id = 21 WHERE id = 20")
 
 
 def test_a_row_may_be_closed_once():
     with act(NOTE, by=AMANI, about="span:1"):
-        run("INSERT INTO scratch_span VALUES (1, 'kt', NULL, '[2026-01-01,)', 'a'), (2, 'kt', NULL, '[2026-01-01,infinity)', 'b')")
+        run(
+            "INSERT INTO scratch_span VALUES (1, 'kt', NULL, '[2026-01-01,)', 'a'), (2, 'kt', NULL, '[2026-01-01,infinity)', 'b')"
+        )
     with act(NOTE, by=AMANI, about="span:1") as entry:
         run("UPDATE scratch_span SET known = tstzrange(lower(known), '2026-06-01')")
 
@@ -150,7 +160,9 @@ def test_nothing_but_the_end_of_an_open_row_may_change(setting):
         owner.execute("BEGIN")
         owner.execute("SELECT act_open('kt', 'note-thing', 'person', 'person:7', '', '', 'span:1')")
         owner.execute("INSERT INTO scratch_span VALUES (50, 'kt', NULL, '[2026-01-01,)', 'a')")
-        with pytest.raises(Exception, match="may be closed once, and nothing else of it may change") as refused:
+        with pytest.raises(
+            Exception, match="may be closed once, and nothing else of it may change"
+        ) as refused:
             owner.execute(f"UPDATE scratch_span SET {setting} WHERE id = 50")
         assert refused.value.sqlstate == "TB005"
         owner.execute("ROLLBACK")
@@ -163,7 +175,9 @@ def test_a_delete_that_cascades_is_refused_and_nothing_is_gone():
     before = (count("scratch_thing"), count("scratch_part"))
 
     with databases.connect() as owner:
-        owner.execute("BEGIN; SELECT act_open('kt', 'note-thing', 'person', 'person:7', '', '', 'thing:8001')")
+        owner.execute(
+            "BEGIN; SELECT act_open('kt', 'note-thing', 'person', 'person:7', '', '', 'thing:8001')"
+        )
         with pytest.raises(Exception, match="DELETE is refused: rows of scratch_thing"):
             owner.execute("DELETE FROM scratch_thing WHERE id = 8001")
         owner.execute("ROLLBACK")
@@ -194,7 +208,10 @@ def test_a_guard_without_its_arguments_lets_nothing_pass():
         ("'odd', key => '{id}', mode => 'append', operator => 'nobody'", "no column nobody"),
         ("'odd', key => '{id}', mode => 'sometimes', operator => 'o'", "its mode is none of"),
         ("'odd', key => '{id}', mode => 'close-once', operator => 'o'", "closing columns go with close-once"),
-        ("'odd', key => '{id}', mode => 'append', operator => 'o', closes => '{p}'", "closing columns go with"),
+        (
+            "'odd', key => '{id}', mode => 'append', operator => 'o', closes => '{p}'",
+            "closing columns go with",
+        ),
         ("'odd', key => '{id}', mode => 'append', operator => 'o', personal => '{p}'", "need a column salt"),
     ],
 )
