@@ -51,7 +51,7 @@ class Strangers:
     pilot: Person
 
 
-def actor(person: Person, **changes: object) -> Actor:
+def actor(person: Person, /, **changes: object) -> Actor:
     """This function will return the actor a person is now, with fields changed for the test."""
     return dataclasses.replace(actor_of_person(person), **changes)
 
