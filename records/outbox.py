@@ -49,16 +49,16 @@ def put(entry: Entry, task: str, key: str) -> None:
 
 def wake(task: str, key: str) -> bool:
     """This function will ask the broker to wake a worker, and say whether that was taken; it never raises."""
-    try:
-        if not broker.answers():
-            raise ConnectionError("the broker does not answer")
-        current_app.send_task(task, args=[key], retry=False)
-    except Exception as problem:  # noqa: BLE001  # whatever the broker fails with, the sweeper does it
-        log.warning(
-            "broker not reached, %s(%s) is left to the sweeper: %s", task, key, type(problem).__name__
-        )
-        return False
-    return True
+    problem = "no answer"
+    if broker.answers():
+        try:
+            current_app.send_task(task, args=[key], retry=False)
+        except Exception as refused:  # noqa: BLE001  # whatever the broker fails with, the sweeper does it
+            problem = type(refused).__name__
+        else:
+            return True
+    log.warning("broker not reached (%s), %s(%s) is left to the sweeper", problem, task, key)
+    return False
 
 
 def done(task: str, key: str) -> None:

@@ -74,9 +74,6 @@ def twin_load(**changes: Any) -> dict[str, Any]:
     """A light twin in lb and in, six seats, four tanks; with a lap infant and a stated limit."""
     unit = "lb"
     infant = {"name": "I. Dravo", "weight": q(18, unit), "how": "weighed"}
-    pilot = person(
-        "R. Amani", "COCKPIT-L", "181", unit, "weighed", position="pilot in command", person="r.amani"
-    )
     return {
         "schema": "tarebook.load/1", "aircraft": "Q9-KTB", "configuration": "six-seat",
         "flight": _flight("KT-214", "2026-12-01T08:30:00-06:00", "XNAL", "XKOR"),
@@ -124,8 +121,8 @@ def turboprop_load(**changes: Any) -> dict[str, Any]:
             for n, seat in enumerate(seats)
         ],
         "items": [
-            item(f"bags of party {n + 1}", holds[n % 3], q(9 + n, unit), how="estimated" if n == 4 else "weighed")
-            for n in range(7)
+            item(f"bags of party {n + 1}", holds[n % 3], q(9 + n, unit), how=how)
+            for n, how in enumerate(["weighed"] * 4 + ["estimated"] + ["weighed"] * 2)
         ],
         "fuel": {
             "density": {**q("0.80", "kg/l"), "source": "delivery note 88"},
