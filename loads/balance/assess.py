@@ -2,7 +2,6 @@
 always.
 """
 
-from fractions import Fraction
 
 from fleet.basis import PHASES, Basis, Phase
 from fleet.weighing import EmptyFigures
@@ -51,7 +50,7 @@ def assess(declared: Declared | Outline, basis: Basis | None, empty: EmptyFigure
         *off_table,
         path_check(),
     )
-    lines = all_lines(aboard, declared.fuel, fuel, ready)
+    lines = all_lines(aboard, declared.fuel, fuel, states, ready)
     verdict = verdict_of(checks)
     document = report(Assessed(declared, aboard, lines, states, fuel, checks), ready)
     return Result(verdict, checks, tuple(states.values()), lines, document)
@@ -75,10 +74,9 @@ def _states(aboard: Aboard, fuel: dict[Phase, FuelState] | None) -> dict[Phase, 
         held = fuel[phase]
         weight, moment = dry.weight + held.weight, dry.moment + held.moment
         across = dry.lateral_moment + held.lateral_moment
-        lateral_arm = across / weight if across else Fraction(0)
-        found[phase] = State(
-            phase, weight, moment, across, moment / weight, lateral_arm, held.usable_weight - staying
-        )
+        lateral_arm = across / weight if across else across
+        usable = held.usable_weight - staying if staying else held.usable_weight
+        found[phase] = State(phase, weight, moment, across, moment / weight, lateral_arm, usable)
     return found
 
 

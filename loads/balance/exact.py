@@ -14,6 +14,13 @@ def product(one: Fraction, other: Fraction) -> Ratio:
     return above * over, below * under
 
 
+def times(one: Fraction, other: Fraction) -> Fraction:
+    """Multiply two rationals; the same as `*`, without asking what else they could be."""
+    above, below = one.as_integer_ratio()
+    over, under = other.as_integer_ratio()
+    return Fraction(above * over, below * under)
+
+
 def total(ratios: Sequence[Ratio]) -> Fraction:
     """Add unreduced rationals exactly; the sum of nothing is 0."""
     shared = lcm(*[below for _, below in ratios])

@@ -12,7 +12,7 @@ from fractions import Fraction
 from fleet.basis import BurnStage, Phase
 from fleet.tanks import OutsideTable
 from loads.balance.aboard import FuelPlan
-from loads.balance.exact import added, product, total
+from loads.balance.exact import added, product, times, total
 from loads.balance.prepared import Prepared
 
 Contents = Mapping[str, Fraction]  # usable volume by tank id
@@ -117,7 +117,7 @@ def _state(
         moments[tank.id] = known[key]
         if tank.lateral_arm:
             across.append(product(volume, tank.lateral_arm))
-    usable_weight = added(usable.values()) * density
+    usable_weight = times(added(usable.values()), density)
     return FuelState(
         phase,
         usable,
@@ -125,12 +125,12 @@ def _state(
         usable_weight,
         usable_weight + trapped * density if trapped else usable_weight,
         added(moments.values()),
-        total(across) * density if across else NOTHING,
+        times(total(across), density) if across else NOTHING,
     )
 
 
 def _moment(tank: str, volume: Fraction, phase: Phase, density: Fraction, ready: Prepared) -> Fraction:
     try:
-        return ready.curves[tank].moment(volume, density)
+        return ready.fuel_moment(tank, volume, density)
     except OutsideTable as outside:
         raise FuelOffTable(tank, phase, volume, outside.first, outside.last) from None

@@ -5,10 +5,11 @@ its units.
 from collections import OrderedDict
 from fractions import Fraction
 
-from fleet.basis import PHASES, Axis, Basis, Envelope, Phase
+from fleet.basis import PHASES, Axis, Basis, Envelope, Phase, TankTable
 from fleet.conversion import density_unit
 from fleet.envelope import Shape
 from fleet.tanks import TankCurve
+from loads.balance.exact import times
 from loads.balance.rounding import LENGTH_PLACES, MOMENT_PLACES
 
 MOST_KEPT = 64
@@ -21,8 +22,10 @@ class Prepared:
 
     __slots__ = (
         "_bounds",
+        "_chord_factor",
+        "_curves",
+        "_steady",
         "basis",
-        "curves",
         "density",
         "length",
         "length_places",
@@ -41,7 +44,7 @@ class Prepared:
         self.density = density_unit(basis.weight_unit, basis.volume_unit).value
         self.length_places = LENGTH_PLACES[basis.length_unit]
         self.moment_places = MOMENT_PLACES[basis.length_unit]
-        self.curves = {
+        self._curves = {
             tank.id: TankCurve(
                 against=tank.table.against,
                 gives=tank.table.gives,
@@ -51,6 +54,8 @@ class Prepared:
             )
             for tank in basis.tanks
         }
+        self._chord_factor = None if basis.chord is None else 100 / basis.chord.length
+        self._steady = {tank.id: _steady_arm(tank.table) for tank in basis.tanks}
         shapes = [(envelope, Shape(envelope.plane, envelope.points)) for envelope in basis.envelopes]
         axes: tuple[Axis, ...] = ("longitudinal", "lateral")
         self._bounds = {(axis, phase): _covering(shapes, axis, phase) for axis in axes for phase in PHASES}
@@ -61,10 +66,23 @@ class Prepared:
         """
         return self._bounds[axis, phase]
 
+    def fuel_moment(self, tank: str, volume: Fraction, density: Fraction) -> Fraction:
+        """Return the moment of a volume of fuel in a tank. Raises `fleet.tanks.OutsideTable`."""
+        curve, arm = self._curves[tank], self._steady[tank]
+        if arm is None or not volume.numerator or not curve.first <= volume <= curve.last:
+            return curve.moment(volume, density)
+        return times(times(volume, arm), density)
+
     def chord_percent(self, arm: Fraction) -> Fraction | None:
         """Return an arm in percent of the mean aerodynamic chord, or None without a chord."""
-        chord = self.basis.chord
-        return None if chord is None else (arm - chord.leading_edge) * 100 / chord.length
+        chord, factor = self.basis.chord, self._chord_factor
+        return None if chord is None or factor is None else times(arm - chord.leading_edge, factor)
+
+
+def _steady_arm(table: TankTable) -> Fraction | None:
+    """Return the arm of a table that gives the same arm at every quantity, where nothing is interpolated."""
+    arms = {arm for _, arm in table.points}
+    return arms.pop() if table.gives == "arm" and len(arms) == 1 else None
 
 
 def _covering(shapes: list[Bound], axis: Axis, phase: Phase) -> tuple[Bound, ...]:

@@ -105,9 +105,13 @@ def _units(above: int, below: int, places: int, direction: Direction) -> int:
 def _text(units: int, places: int) -> str:
     if not places:
         return str(units)
-    whole, part = divmod(units if units >= 0 else -units, _TENS[places])
-    sign = "-" if units < 0 else ""
-    return f"{sign}{whole}.{part:0{places}d}".rstrip("0") if part else f"{sign}{whole}"
+    digits = str(units) if units >= 0 else str(-units)
+    if len(digits) <= places:
+        digits = digits.zfill(places + 1)
+    whole, part = digits[:-places], digits[-places:].rstrip("0")
+    if units < 0:
+        whole = f"-{whole}"
+    return f"{whole}.{part}" if part else whole
 
 
 def _negated(text: str) -> str:

@@ -2,16 +2,17 @@
 arms.
 """
 
+from collections.abc import Mapping
 from fractions import Fraction
 from typing import NamedTuple
 
 from fleet.basis import FixedItem, Phase
 from fleet.weighing import EmptyFigures
 from loads.balance.aboard import Declared, FuelPlan, Item, Person
-from loads.balance.exact import added
+from loads.balance.exact import added, times
 from loads.balance.fuel import FuelState
 from loads.balance.prepared import Prepared
-from loads.balance.result import Json, Line
+from loads.balance.result import Json, Line, State
 from loads.balance.rounding import VOLUME_PLACES, WEIGHT_PLACES, printed
 
 FROM_RECORD = "from the record"
@@ -52,34 +53,35 @@ def lines_without_fuel(declared: Declared, empty: EmptyFigures | None) -> Aboard
 
 
 def all_lines(
-    aboard: Aboard, plan: FuelPlan, states: dict[Phase, FuelState] | None, ready: Prepared
+    aboard: Aboard,
+    plan: FuelPlan,
+    fuel: Mapping[Phase, FuelState] | None,
+    states: Mapping[Phase, State],
+    ready: Prepared,
 ) -> tuple[Line, ...]:
     """Return every line in order: operating weight, zero fuel, ramp, take-off and landing are totals."""
-    lines = [*aboard.operating, _total("operating weight", aboard.operating_weight), *aboard.payload]
-    if states is None:
+    lines = [*aboard.operating, _operating_total(aboard.operating_weight), *aboard.payload]
+    if fuel is None:
         return tuple(lines)
-    dry = aboard.without_fuel
-    zero = states["zero fuel"]
-    for fuel in plan.tanks:
-        stays = zero.usable[fuel.tank.id] + fuel.trapped
+    zero, ramp, take_off, landing = (fuel[phase] for phase in ("zero fuel", "ramp", "take-off", "landing"))
+    for held in plan.tanks:
+        tank = held.tank
+        stays = zero.usable[tank.id] + held.trapped
         if stays:
-            weight = stays * plan.density
-            what = f"{fuel.tank.name}, {_volume(stays, ready)} that cannot be used"
-            lines.append(
-                _plain("fuel not usable", what, weight, zero.moments[fuel.tank.id], fuel.tank.lateral_arm)
-            )
-    lines.append(_total("zero fuel", _with_fuel(dry, zero)))
-    ramp = states["ramp"]
-    for fuel in plan.tanks:
-        burnable = ramp.usable[fuel.tank.id] - zero.usable[fuel.tank.id]
+            what = f"{tank.name}, {_volume(stays, ready)} that cannot be used"
+            weight, moment = times(stays, plan.density), zero.moments[tank.id]
+            lines.append(_plain("fuel not usable", what, weight, moment, tank.lateral_arm))
+    lines.append(_total("zero fuel", states))
+    for held in plan.tanks:
+        tank = held.tank
+        burnable = ramp.usable[tank.id] - zero.usable[tank.id]
         if burnable:
-            moment = ramp.moments[fuel.tank.id] - zero.moments[fuel.tank.id]
-            what = f"{fuel.tank.name}, {_volume(burnable, ready)}"
-            lines.append(_plain("fuel", what, burnable * plan.density, moment, fuel.tank.lateral_arm))
-    lines.append(_total("ramp", _with_fuel(dry, ramp)))
-    take_off, landing = states["take-off"], states["landing"]
-    lines += [_burned("taxi", "taxi fuel", ramp, take_off), _total("take-off", _with_fuel(dry, take_off))]
-    lines += [_burned("trip", "trip fuel", take_off, landing), _total("landing", _with_fuel(dry, landing))]
+            what = f"{tank.name}, {_volume(burnable, ready)}"
+            weight, moment = times(burnable, plan.density), ramp.moments[tank.id] - zero.moments[tank.id]
+            lines.append(_plain("fuel", what, weight, moment, tank.lateral_arm))
+    lines += [_total("ramp", states), _burned("taxi", "taxi fuel", ramp, take_off)]
+    lines += [_total("take-off", states), _burned("trip", "trip fuel", take_off, landing)]
+    lines.append(_total("landing", states))
     return tuple(lines)
 
 
@@ -140,12 +142,12 @@ def _placed(line: Line, lateral_arm: Fraction) -> Line:
     group, what, how, weight, arm, _, _, total, pointer = line
     if weight is None or arm is None:
         return line
-    lateral = weight * lateral_arm if lateral_arm else lateral_arm
-    return Line(group, what, how, weight, arm, weight * arm, lateral, total, pointer)
+    lateral = times(weight, lateral_arm) if lateral_arm else lateral_arm
+    return Line(group, what, how, weight, arm, times(weight, arm), lateral, total, pointer)
 
 
 def _plain(group: str, what: str, weight: Fraction, moment: Fraction, lateral_arm: Fraction) -> Line:
-    return Line(group, what, "declared", weight, moment / weight, moment, weight * lateral_arm)
+    return Line(group, what, "declared", weight, moment / weight, moment, times(weight, lateral_arm))
 
 
 def _burned(group: str, what: str, before: FuelState, after: FuelState) -> Line:
@@ -155,12 +157,20 @@ def _burned(group: str, what: str, before: FuelState, after: FuelState) -> Line:
     return Line(group, what, "declared", weight, arm, moment, after.lateral_moment - before.lateral_moment)
 
 
-def _total(group: str, sums: Sums | None) -> Line:
+def _operating_total(sums: Sums | None) -> Line:
+    name = "operating weight"
     if sums is None:
-        return Line(group, group, None, None, None, None, None, True)
-    return Line(
-        group, group, None, sums.weight, sums.moment / sums.weight, sums.moment, sums.lateral_moment, True
-    )
+        return Line(name, name, None, None, None, None, None, True)
+    arm = sums.moment / sums.weight
+    return Line(name, name, None, sums.weight, arm, sums.moment, sums.lateral_moment, True)
+
+
+def _total(phase: Phase, states: Mapping[Phase, State]) -> Line:
+    """Return the total at a phase; without an empty weight, or with an unknown line, it is not known."""
+    state = states.get(phase)
+    if state is None:
+        return Line(phase, phase, None, None, None, None, None, True)
+    return Line(phase, phase, None, state.weight, state.arm, state.moment, state.lateral_moment, True)
 
 
 def _sums(lines: list[Line]) -> Sums | None:
@@ -179,12 +189,6 @@ def _together(one: Sums, other: Sums) -> Sums:
     return Sums(
         one.weight + other.weight, one.moment + other.moment, one.lateral_moment + other.lateral_moment
     )
-
-
-def _with_fuel(dry: Sums | None, fuel: FuelState) -> Sums | None:
-    if dry is None:
-        return None
-    return _together(dry, Sums(fuel.weight, fuel.moment, fuel.lateral_moment))
 
 
 def _volume(volume: Fraction, ready: Prepared) -> str:

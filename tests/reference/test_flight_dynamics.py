@@ -12,7 +12,7 @@ from dataclasses import dataclass
 from fractions import Fraction
 from pathlib import Path
 from typing import Any
-from xml.etree import ElementTree
+from xml.etree import ElementTree as ET
 
 import pytest
 
@@ -58,11 +58,11 @@ class Model:
         return PlainAircraft(weight, weight * along, weight * across, lines, tanks, DENSITY)
 
 
-def length(element: ElementTree.Element, axis: str) -> Fraction:
+def length(element: ET.Element, axis: str) -> Fraction:
     return Fraction(element.findtext(axis, "0").strip()) * INCHES[element.get("unit", "IN")]
 
 
-def weight(element: ElementTree.Element, name: str) -> Fraction:
+def weight(element: ET.Element, name: str) -> Fraction:
     found = element.find(name)
     assert found is not None
     return Fraction((found.text or "").strip()) * POUNDS[found.get("unit", "LBS")]
@@ -74,7 +74,7 @@ def model(name: str) -> Model:
     assert library.load_model(name)
     assert library.run_ic()
     file = Path(jsbsim.get_default_root_dir()) / "aircraft" / name / f"{name}.xml"
-    root = ElementTree.parse(file).getroot()  # noqa: S314  a file of an installed package
+    root = ET.parse(file).getroot()  # noqa: S314  a file of an installed package
     balance = root.find("mass_balance")
     assert balance is not None
     centre = next(spot for spot in balance.findall("location") if spot.get("name") == "CG")
