@@ -5,11 +5,13 @@ import uuid
 from collections.abc import Callable
 from typing import Final
 
+from django.contrib.auth.views import redirect_to_login
 from django.http import HttpRequest, HttpResponse
 from django.http.response import HttpResponseBase
 
 from records.act import request_id
-from service.problems import is_api, not_found
+from records.refusal import NotSignedIn, Refused
+from service.problems import is_api, not_found, refusal, refused_page
 
 # Everything is served from here and nothing stands inline, so a foreign script or style is never run.
 CONTENT_SECURITY_POLICY: Final = (
@@ -59,6 +61,18 @@ class HeadersMiddleware:
         # get here.)
         response.headers.setdefault("Cache-Control", "no-store")
         return response
+
+    def process_exception(self, request: HttpRequest, error: Exception) -> HttpResponse | None:
+        """This function will answer for a refusal that a view let through; the rest is a failure
+        (handler500).
+        """
+        if not isinstance(error, Refused):
+            return None
+        if is_api(request):
+            return refusal(error)
+        if isinstance(error, NotSignedIn):
+            return redirect_to_login(request.get_full_path())
+        return refused_page(error)
 
     def _answer(self, request: HttpRequest) -> HttpResponseBase:
         # PostgreSQL holds no NUL in a text, so no address with one names anything.

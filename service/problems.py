@@ -14,7 +14,6 @@ from typing import Any, Final
 from django.core.exceptions import PermissionDenied, SuspiciousOperation
 from django.db import InterfaceError, OperationalError
 from django.http import Http404, HttpRequest, HttpResponse
-from django.template import TemplateDoesNotExist
 from django.template.loader import render_to_string
 from rest_framework import exceptions
 
@@ -42,6 +41,12 @@ _REFUSED_BY_DJANGO: Final[Mapping[type[Exception], tuple[int, str]]] = {
     Http404: (404, "There is nothing at this address."),
     PermissionDenied: (403, "This is not allowed."),
     SuspiciousOperation: (400, "The request cannot be read."),
+}
+
+_NEXT_OF_PAGE: Final[Mapping[int, str]] = {
+    403: "Ask somebody who holds the duty, or have it granted.",
+    404: "Check the address, or begin at the day's loads.",
+    500: "Try again in a minute; if it stays, report the number below.",
 }
 
 
@@ -114,31 +119,36 @@ def is_api(request: HttpRequest) -> bool:
 def not_found(request: HttpRequest, exception: Exception | None = None) -> HttpResponse:  # noqa: ARG001  # the form Django calls
     """This function will answer for an address that names nothing (handler404)."""
     words = "There is nothing at this address."
-    return _framework(404, words) if is_api(request) else _page(request, 404, words)
+    return _framework(404, words) if is_api(request) else _page(404, words)
 
 
 def unreadable(request: HttpRequest, exception: Exception | None = None) -> HttpResponse:  # noqa: ARG001  # the form Django calls
     """This function will answer for a request that Django itself refuses to read (handler400)."""
     words = "The request cannot be read."
-    return _framework(400, words) if is_api(request) else _page(request, 400, words)
+    return _framework(400, words) if is_api(request) else _page(400, words)
 
 
 def not_allowed(request: HttpRequest, exception: Exception | None = None) -> HttpResponse:  # noqa: ARG001  # the form Django calls
     """This function will answer for what Django refuses before a view is asked (handler403)."""
     words = "This is not allowed."
-    return _framework(403, words) if is_api(request) else _page(request, 403, words)
+    return _framework(403, words) if is_api(request) else _page(403, words)
 
 
 def failed(request: HttpRequest) -> HttpResponse:
     """This function will answer for an exception nobody caught (handler500); Django has logged it."""
     words = "Something failed here; nothing was stored."
-    return _failure() if is_api(request) else _page(request, 500, words)
+    return _failure() if is_api(request) else _page(500, words)
 
 
-def forged(request: HttpRequest, reason: str = "") -> HttpResponse:
+def forged(_request: HttpRequest, reason: str = "") -> HttpResponse:
     """This function will answer for a form without its token, or from elsewhere (CSRF_FAILURE_VIEW)."""
     log.warning("cross-site check of request %s: %s", request_id.get(), reason)
-    return _page(request, 403, "This form was open too long, or came from elsewhere. Load the page again.")
+    return _page(403, "This form was open too long, or came from elsewhere.", "Load the page again.")
+
+
+def refused_page(refused: Refused) -> HttpResponse:
+    """This function will answer with a page for a refusal that no page of its own shows."""
+    return _page(refused.status, refused.detail, refused.next_step)
 
 
 def keep_answer(_request: HttpRequest, answer: HttpResponse, _credentials: Mapping[str, Any]) -> HttpResponse:
@@ -185,12 +195,16 @@ def _failure() -> HttpResponse:
     )
 
 
-def _page(request: HttpRequest, status: int, words: str) -> HttpResponse:
-    context = {"status": status, "words": words, "request_number": request_id.get()}
-    try:
-        return HttpResponse(render_to_string("service/problem.html", context, request), status=status)
-    except TemplateDoesNotExist:
-        return HttpResponse(words, status=status, content_type="text/plain; charset=utf-8")
+def _page(status: int, words: str, next_step: str = "") -> HttpResponse:
+    # Rendered without the request: whoever is signed in is not asked for, since the database may be what
+    # failed.
+    context = {
+        "status": status,
+        "words": words,
+        "next_step": next_step or _NEXT_OF_PAGE.get(status, "Go back and try again."),
+        "request_number": request_id.get(),
+    }
+    return HttpResponse(render_to_string("service/problem.html", context), status=status)
 
 
 def _faults(details: Any, pointer: str) -> Iterable[Fault]:

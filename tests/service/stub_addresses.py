@@ -78,7 +78,13 @@ def breaks(_request: HttpRequest) -> HttpResponse:
     raise RuntimeError(SECRET)
 
 
+def refuses(_request: HttpRequest) -> HttpResponse:
+    raise StepRefused("s", "The load has departed.", next_step="Write a note.")
+
+
 urlpatterns = [
+    path("page-refuses", refuses),
+    path("api/v1/refuses", refuses),
     path("api/v1/fails/<str:how>", Fails.as_view()),
     path("api/v1/echoes", Echoes.as_view()),
     path("api/v1/asks", Asks.as_view()),

@@ -119,6 +119,15 @@ def test_a_view_of_django_that_breaks_is_a_problem_under_the_api_and_a_page_else
     assert SECRET not in page.content.decode()
 
 
+def test_a_refusal_that_a_view_of_django_let_through_is_shown_as_what_it_is(client):
+    page = client.get("/page-refuses")
+
+    _problem(client.get("/api/v1/refuses"), 409, "s")
+    assert page.status_code == 409
+    assert "The load has departed." in page.content.decode()
+    assert "Write a note." in page.content.decode()
+
+
 def test_another_method_is_refused_with_those_that_are_there(client):
     response = client.delete("/api/v1/echoes")
 
