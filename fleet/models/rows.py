@@ -20,7 +20,7 @@ def new_uuid() -> UUID:
 
 def new_number(model: type[models.Model]) -> int:
     """This function will draw the next number of a table, for a row whose act must name it beforehand."""
-    table = model._meta.db_table  # noqa: SLF001 - Django's documented interface, in spite of the name
+    table = model._meta.db_table  # noqa: SLF001  # Django's documented interface, in spite of the name
     with connection.cursor() as cursor:
         cursor.execute("SELECT nextval(pg_get_serial_sequence(%s, 'id'))", [table])
         (drawn,) = cursor.fetchone()
