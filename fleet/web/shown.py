@@ -118,11 +118,11 @@ def _limits(basis: LoadingBasis | None) -> list[dict[str, str]]:
             value = "none" if limit.get("none") else _quantity(limit)
             page = limit["source"]
             own = document["document"]
-            document, revision = (
+            number, revision = (
                 page.get("document", own["number"]),
                 page.get("revision", own["revision"]),
             )
-            source = f"{document} rev {revision} p. {page['page']}"
+            source = f"{number} rev {revision} p. {page['page']}"
         shown.append({"title": title, "value": value, "source": source})
     return shown
 

@@ -5,11 +5,23 @@ does.
 from collections.abc import Mapping
 from dataclasses import dataclass
 from datetime import datetime
-from typing import Any, Literal
+from typing import Any, Literal, Protocol
 
 from fleet.basis import Chord, Envelope
 
 RuleSet = Literal["US", "EU-UK"]
+
+
+class Computed(Protocol):
+    """What was declared and what came out: all that most tables need, on paper and on a page alike."""
+
+    @property
+    def inputs(self) -> Mapping[str, Any]:
+        """The document `tarebook.load/1` as typed."""
+
+    @property
+    def result(self) -> Mapping[str, Any]:
+        """The result document."""
 
 
 @dataclass(frozen=True, slots=True)

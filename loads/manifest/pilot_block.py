@@ -6,7 +6,7 @@ from typing import Any
 
 from loads.balance.aboard import PILOT_IN_COMMAND
 from loads.balance.rounding import CHORD_PLACES
-from loads.manifest.facts import Facts
+from loads.manifest.facts import Computed, Facts
 from loads.manifest.figures import SPACE, column, figure, offset, percent_chord
 from loads.manifest.words import Words
 
@@ -39,7 +39,7 @@ def flight_block(facts: Facts) -> Block:
     }
 
 
-def verdict_block(facts: Facts, words: Words) -> Block:
+def verdict_block(facts: Computed, words: Words) -> Block:
     """This function will return the verdict in words, with the nearest limit of weight and of balance."""
     head, sentence = VERDICTS[facts.result["verdict"]]
     governing = facts.result["governing"]
@@ -80,7 +80,7 @@ def figures_block(facts: Facts, words: Words) -> Block:
     }
 
 
-def fuel_block(facts: Facts) -> Block:
+def fuel_block(facts: Computed) -> Block:
     """This function will return the fuel by tank and in total, in volume and in weight."""
     fuel = facts.result["fuel"]
     keys = ("at_engine_start", "at_take_off", "at_landing")
@@ -104,7 +104,7 @@ def fuel_block(facts: Facts) -> Block:
 _FUEL_TOTALS = ("engine_start", "taxi", "take_off", "trip", "landing", "minimum_at_landing")
 
 
-def open_points(facts: Facts, words: Words) -> Block:
+def open_points(facts: Computed, words: Words) -> Block:
     """This function will return what was not assessed, what is standard or estimated, and what is advised."""
     return {
         "not_assessed": [words.said(text) for text in facts.result["not_assessed"]],
@@ -118,7 +118,7 @@ def figure_sided(text: str) -> str:
     return text.replace(" ", SPACE)
 
 
-def _by_how(facts: Facts) -> Iterator[str]:
+def _by_how(facts: Computed) -> Iterator[str]:
     """Name the lines whose weight is standard or estimated; nothing means all were weighed or declared."""
     for how in ("standard", "estimated"):
         lines = [str(line["line"]) for line in facts.result["sumsheet"] if line["how"] == how]

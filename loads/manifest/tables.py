@@ -3,7 +3,7 @@
 from collections.abc import Iterable, Mapping
 from typing import Any
 
-from loads.manifest.facts import Facts
+from loads.manifest.facts import Computed, Facts
 from loads.manifest.figures import both_clocks, column, sided, utc
 from loads.manifest.ruler import ruler
 from loads.manifest.words import Words
@@ -16,7 +16,7 @@ WHOLE = ("weight", "performance", "cg", "lateral", "fuel", "persons", "standing"
 OUTCOMES = {"pass": "kept", "fail": "BROKEN", "unresolved": "NOT CHECKED", "advisory": "told, not judged"}
 
 
-def computation(facts: Facts, words: Words) -> list[Row]:
+def computation(facts: Computed, words: Words) -> list[Row]:
     """This function will return the loading computation with the names of the people beside their lines."""
     lines = facts.result["sumsheet"]
     columns = {key: column([line[key] for line in lines]) for key in ("weight", "arm", "moment")}
@@ -34,7 +34,7 @@ def computation(facts: Facts, words: Words) -> list[Row]:
     ]
 
 
-def phases(facts: Facts) -> list[Row]:
+def phases(facts: Computed) -> list[Row]:
     """This function will return the phases with the letter and the shape they have on the plot."""
     rows = facts.result["phases"]
     columns = {
@@ -53,7 +53,7 @@ def phases(facts: Facts) -> list[Row]:
     ]
 
 
-def limits(facts: Facts, words: Words) -> dict[str, Any]:
+def limits(facts: Computed, words: Words) -> dict[str, Any]:
     """This function will return every check with its ruler: the aircraft's, and in pairs its parts'."""
     checks = facts.result["checks"]
     whole = [check for check in checks if check["code"].partition(".")[0] in WHOLE]
@@ -88,7 +88,7 @@ def _limit(check: Mapping[str, Any], words: Words) -> Row:
     }
 
 
-def allowable(facts: Facts, words: Words) -> list[Row]:
+def allowable(facts: Computed, words: Words) -> list[Row]:
     """This function will return what bears on the take-off weight, the least marked."""
     block = facts.result["allowable_take_off"]
     weights = column([one["weight"] for one in block["candidates"]])
@@ -136,7 +136,7 @@ def signatures(facts: Facts) -> list[Row]:
 
 
 def _name_at(inputs: Mapping[str, Any], pointer: str | None) -> str:
-    """Look up the name behind a line; a lap infant without a line of its own stands beside its adult."""
+    """Look up the name behind a line, or what an item is; a lap infant stands beside its adult."""
     if not pointer:
         return ""
     found: Any = inputs
@@ -146,7 +146,7 @@ def _name_at(inputs: Mapping[str, Any], pointer: str | None) -> str:
         return ""
     infant = found.get("lap_infant")
     beside = f", with infant {infant['name']}" if infant else ""
-    return f"{found.get('name', '')}{beside}"
+    return f"{found.get('name') or found.get('what', '')}{beside}"
 
 
 def crew(facts: Facts) -> Iterable[str]:

@@ -9,8 +9,6 @@ import re
 from collections.abc import Mapping
 from dataclasses import dataclass
 
-from loads.manifest.facts import RuleSet
-
 
 @dataclass(frozen=True, slots=True)
 class Words:
@@ -71,7 +69,7 @@ _EU_UK = Words(
     rules_are="Numbers beside items: CAT.POL.MAB.100 and 105.",
 )  # fmt: skip
 
-WORDS: Mapping[RuleSet, Words] = {"US": _US, "EU-UK": _EU_UK}
+WORDS: Mapping[str, Words] = {"US": _US, "EU-UK": _EU_UK}
 SINGLE_ENGINE_US = (
     "135.63(c) binds multi-engine aircraft; its items are given here under the operator's procedure."
 )

@@ -1,5 +1,6 @@
 """The page of one day's loads, by departure."""
 
+from collections.abc import Mapping
 from datetime import UTC, date, datetime, time, timedelta
 from typing import Any
 from zoneinfo import ZoneInfo
@@ -10,10 +11,12 @@ from django.utils import timezone
 from django.views.decorators.http import require_safe
 
 from loads.lifecycle import ways_out
+from loads.manifest.words import WORDS, Words
 from loads.queries.current import Current
 from loads.queries.listing import MOST_ROWS, Filters, list_loads
 from loads.queries.stale import stale_parts
-from loads.web.asking import zone_of
+from loads.web.asking import zone_of, zone_words
+from loads.web.shown import stops
 from records.web.asking import operator_of, signed_in
 
 GONE = ("superseded", "withdrawn")
@@ -34,6 +37,7 @@ def day(request: HttpRequest) -> HttpResponse:
     lines = [_line(current, zone, now) for current in page.loads]
     context = {
         "day": wanted,
+        "zone": zone_words(zone, since),
         "before": wanted - ONE_DAY,
         "after": wanted + ONE_DAY,
         "loads": lines,
@@ -52,8 +56,8 @@ def _day_asked(request: HttpRequest, today: date) -> date:
 
 
 def _line(current: Current, zone: ZoneInfo, now: datetime) -> dict[str, Any]:
-    load, governing = current.load, current.result().get("governing")
-    lines = governing if isinstance(governing, dict) else {}
+    load, result = current.load, current.result()
+    words = WORDS[load.operator.rule_set]
     paper = getattr(load, "paper", None)
     return {
         "id": load.id,
@@ -65,13 +69,20 @@ def _line(current: Current, zone: ZoneInfo, now: datetime) -> dict[str, Any]:
         "origin": load.origin,
         "destination": load.destination,
         "verdict": current.assessment.verdict,
-        "weight_line": lines.get("weight", ""),
-        "cg_line": lines.get("cg", ""),
+        "lines": _nearest(result, words),
         "state": current.state,
         "gone": current.state in GONE,
         "stale": "open" in ways_out(current.state) and bool(stale_parts(current, now)),
         "number": paper.number if paper else None,
     }
+
+
+def _nearest(result: Mapping[str, Any], words: Words) -> list[str]:
+    """This function will return what is in the way, or the two governing lines when nothing is."""
+    if in_the_way := stops(result, words):
+        return [f"{stop['title']}: {stop['margin']}" for stop in in_the_way]
+    governing = result.get("governing") or {}
+    return [words.said(line) for line in (governing.get("weight"), governing.get("cg")) if line]
 
 
 def _counted(lines: list[dict[str, Any]], *, more: bool) -> str:

@@ -20,12 +20,13 @@ from fleet.queries.in_force import basis_in_force
 from loads.actions.revise_load import revise_load
 from loads.actions.stepping import reason_in
 from loads.actions.submit_load import submit_load
+from loads.manifest.words import WORDS
 from loads.queries.computation import compute
 from loads.queries.current import declared_in, load_of
-from loads.web.asking import typed_in, zone_of
+from loads.web.asking import typed_in, zone_of, zone_words
 from loads.web.desk import lay_desk, wrong_inputs
 from loads.web.form import can_carry, document_of, field_of, typed_of
-from loads.web.shown import verdict_words
+from loads.web.shown import stops, verdict_words
 from records.refusal import Fault, Invalid, NotKnown, Refused
 from records.web.asking import actor_of, operator_of, signed_in
 
@@ -34,7 +35,7 @@ NEXT_STEP = "Have one entered and approved, or submit the load through the API: 
 
 @dataclass(frozen=True, slots=True)
 class Table:
-    """What a load is declared on: the aircraft, the basis in force at the departure, and the configuration."""
+    """What a load is declared on: aircraft, the basis in force at the departure, configuration."""
 
     aircraft: Aircraft
     basis: Basis
@@ -143,6 +144,7 @@ def _first_page(request: HttpRequest, typed: Mapping[str, str], departure: datet
         "configurations": basis.configurations if basis else (),
         "no_basis": NEXT_STEP if aircraft is not None and basis is None else "",
         "typed": typed,
+        "zone": zone_words(zone_of(request), timezone.now()),
     }
     return render(request, "loads/declare.html", context)
 
@@ -172,12 +174,12 @@ def _previewed(
     revised: UUID | None = None,
 ) -> HttpResponse:
     result: dict[str, Any] = compute(operator_of(request), document, timezone.now()).result
+    words = WORDS[table.aircraft.operator.rule_set]
     preview = {
         "verdict": result["verdict"],
         "verdict_words": verdict_words(result["verdict"]),
-        "weight_line": result["governing"]["weight"],
-        "cg_line": result["governing"]["cg"],
-        "stops": [check for check in result["checks"] if check["result"] in {"fail", "unresolved"}],
+        "lines": [words.said(result["governing"][part]) for part in ("weight", "cg")],
+        "stops": stops(result, words),
         "not_assessed": result["not_assessed"],
     }
     return _desk_page(request, table, typed, zone, revised=revised, preview=preview)
@@ -198,7 +200,13 @@ def _desk_page(
     )
     context = {
         "heading": "Revise" if revised else "Declare a load",
-        "desk": lay_desk(table.basis, table.configuration, typed=typed, faults=faults, zone=str(zone)),
+        "desk": lay_desk(
+            table.basis,
+            table.configuration,
+            typed=typed,
+            faults=faults,
+            zone=zone_words(zone, timezone.now()),
+        ),
         "typed": typed,
         "step": typed.get("step", ""),
         "copied": revised is not None,

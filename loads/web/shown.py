@@ -1,7 +1,9 @@
 """What one load's page shows, as plain values."""
 
 from collections.abc import Iterable, Mapping, Sequence
+from dataclasses import dataclass
 from datetime import UTC, datetime
+from itertools import zip_longest
 from typing import Any
 from zoneinfo import ZoneInfo
 
@@ -11,8 +13,10 @@ from fleet.basis import Axis
 from fleet.queries.figures import basis_of
 from loads import acts
 from loads.lifecycle import ways_out
-from loads.manifest.pilot_block import VERDICTS
-from loads.manifest.ruler import ruler
+from loads.manifest.figures import figure
+from loads.manifest.pilot_block import VERDICTS, fuel_block, open_points
+from loads.manifest.tables import computation, limits
+from loads.manifest.words import WORDS, Words
 from loads.models import Load
 from loads.plot import plot
 from loads.queries.answer import signatures_of
@@ -35,25 +39,54 @@ SIGNING_ACTS = {"prepared": acts.PREPARE_LOAD.name, "accepted": acts.ACCEPT_LOAD
 FIGURES = (("take-off", "Take-off"), ("zero fuel", "Zero fuel"), ("landing", "Landing"))
 
 
+@dataclass(frozen=True, slots=True)
+class Page:
+    """What was declared and what came out, as the tables of the paper take it."""
+
+    inputs: Mapping[str, Any]
+    result: Mapping[str, Any]
+
+
 def load_page(current: Current, zone: ZoneInfo, now: datetime, actor: Actor) -> dict[str, Any]:
     """This function will return the values of one load's page at `now`, for this actor."""
-    load, result, declared = current.load, current.result(), declared_in(current.load)
+    load, page = current.load, Page(declared_in(current.load), current.result())
+    words = WORDS[load.operator.rule_set]
     stale = stale_parts(current, now) if ways_out(current.state) else ()
-    checks = _checks(result)
-    stops = [check for check in checks if check["result"] in {"fail", "unresolved"}]
     return {
         "load": _head(current, zone),
-        "result": result,
-        "figures": _figures(result),
-        "stops": stops,
-        "stops_title": "What is in the way, and what would help",
+        "units": page.result.get("units"),
+        "weight_word": words.weight,
+        "figures": _figures(page, words),
+        "lines": _lines(page, words),
+        "stops": stops(page.result, words),
         "stale": f"Changed since it was assessed: {', '.join(stale)}." if stale else "",
-        "checks": checks,
-        "plots": _plots(current, result),
-        "computation": _computation(result, declared),
+        "limits": _limits(page, words),
+        "plots": _plots(current, page.result, words),
+        "computation": computation(page, words) if page.result.get("sumsheet") else [],
         "steps": _steps(load),
         "versions": _versions(current),
-        "can": _can(current, declared, actor, stale=bool(stale)),
+        "can": _can(current, page.inputs, actor, stale=bool(stale)),
+    }
+
+
+def stops(result: Mapping[str, Any], words: Words) -> list[dict[str, str]]:
+    """This function will return what is in the way of a departure, and what would help."""
+    return [
+        {
+            "title": words.said(check["title"]),
+            "margin": words.said(check["margin_text"]),
+            "what_next": words.said(check["what_next"]),
+        }
+        for check in result.get("checks", ())
+        if check["result"] in {"fail", "unresolved"}
+    ]
+
+
+def _lines(page: Page, words: Words) -> dict[str, Any]:
+    governing = page.result.get("governing") or {}
+    return {
+        "governing": [words.said(line) for line in (governing.get("weight"), governing.get("cg")) if line],
+        **open_points(page, words),
     }
 
 
@@ -88,103 +121,62 @@ def _head(current: Current, zone: ZoneInfo) -> dict[str, Any]:
     }
 
 
-def _figures(result: Mapping[str, Any]) -> list[dict[str, Any]]:
+def _figures(page: Page, words: Words) -> list[dict[str, Any]]:
     """This function will return the figures a pilot asks for first, each with its limit beside it."""
+    result = page.result
     if not result.get("phases"):
         return []
     at = {phase["phase"]: phase for phase in result["phases"]}
-    checks = {check["code"]: check for check in result["checks"]}
-    units, persons = result["units"], result["persons"]
+    margins = {check["code"]: words.said(check["margin_text"]) for check in result["checks"]}
+    units = result["units"]
     shown = []
     for phase, title in FIGURES:
         code = phase.replace(" ", "-")
-        small = [checks[f"weight.{code}"]["margin_text"]] if f"weight.{code}" in checks else []
         arm = f"CG {at[phase]['arm']} {units['length']}"
         if at[phase]["percent_chord"]:
-            arm += f", {at[phase]['percent_chord']} % of the chord"
-        small.append(arm)
-        if f"cg.{code}" in checks:
-            small.append(checks[f"cg.{code}"]["margin_text"])
+            arm += f", {at[phase]['percent_chord']} % MAC"
+        small = [margins.get(f"weight.{code}", ""), arm, margins.get(f"cg.{code}", "")]
+        value = f"{figure(at[phase]['weight'])} {units['weight']}"
         shown.append(
-            {"title": f"{title} weight", "value": f"{at[phase]['weight']} {units['weight']}", "small": small}
+            {"title": f"{title} {words.weight}", "value": value, "small": [one for one in small if one]}
         )
     allowable = result["allowable_take_off"]
     if allowable["weight"]:
-        governed = [f"governed by {allowable['governed_by']}"]
-        value = f"{allowable['weight']} {units['weight']}"
-        shown.insert(1, {"title": "Allowable take-off weight", "value": value, "small": governed})
-    fuel = result["fuel"]
-    tanks = [f"{tank['name']}: {tank['at_engine_start']} {tank['unit']}" for tank in fuel["tanks"]]
-    shown.append({"title": "Fuel at take-off", "value": f"{fuel['take_off']} {fuel['unit']}", "small": tanks})
-    counted = f"{persons['crew']} crew, {persons['passengers']} passengers, {persons['lap_infants']} on laps"
-    shown.append({"title": "Persons on board", "value": str(persons["total"]), "small": [counted]})
-    return shown
+        value = f"{figure(allowable['weight'])} {units['weight']}"
+        governed = [f"governed by {words.said(allowable['governed_by'])}"]
+        shown.insert(1, {"title": f"Allowable take-off {words.weight}", "value": value, "small": governed})
+    return [*shown, _fuel(page), _persons(page)]
 
 
-def _checks(result: Mapping[str, Any]) -> list[dict[str, Any]]:
-    return [
-        dict(check)
-        | {
-            "actual_text": _with_unit(check["actual"], check["unit"]),
-            "limit_text": _limit_text(check),
-            # Drawn by our own code from figures alone; every text in it is escaped there.
-            "ruler": mark_safe("" if check["code"].startswith("persons") else ruler(check)),  # noqa: S308  # see above
-        }
-        for check in result.get("checks", ())
-    ]
+def _fuel(page: Page) -> dict[str, Any]:
+    fuel = fuel_block(page)
+    tanks = [f"{tank['name']}: {tank['at_take_off']} {fuel['volume_unit']}" for tank in fuel["tanks"]]
+    return {"title": "Fuel at take-off", "value": f"{fuel['take_off']} {fuel['unit']}", "small": tanks}
 
 
-def _with_unit(value: str | None, unit: str | None) -> str:
-    if value is None:
-        return ""
-    return value if unit in {None, "persons"} else f"{value} {unit}"
+def _persons(page: Page) -> dict[str, Any]:
+    counts = page.result["persons"]
+    small = [f"{counts['crew']} crew", f"{counts['passengers']} in passenger seats"]
+    if counts["lap_infants"]:
+        small.append(f"{counts['lap_infants']} on a lap")
+    return {"title": "Persons on board", "value": str(counts["total"]), "small": [", ".join(small)]}
 
 
-def _limit_text(check: Mapping[str, Any]) -> str:
-    low, high = check["low"], check["limit"]
-    if low is not None and high is not None and low != high:
-        return f"{low} to {_with_unit(high, check['unit'])}"
-    if high is not None:
-        return _with_unit(high, check["unit"])
-    return f"at least {_with_unit(low, check['unit'])}" if low is not None else ""
+def _limits(page: Page, words: Words) -> list[dict[str, Any]]:
+    """This function will return every limit as the paper has it: the whole aircraft's, then its parts'."""
+    tables = limits(page, words)
+    rows = [*tables["whole"], *(row for pair in zip_longest(*tables["parts"]) for row in pair if row)]
+    # Drawn by our own code from figures alone; whatever text stands in a drawing is escaped there.
+    return [row | {"ruler": mark_safe(row["ruler"])} for row in rows]  # noqa: S308  # see above
 
 
-def _plots(current: Current, result: Mapping[str, Any]) -> list[str]:
+def _plots(current: Current, result: Mapping[str, Any], words: Words) -> list[str]:
     basis = current.assessment.loading_basis
     if basis is None or not result.get("phases"):
         return []
     envelopes = basis_of(basis).envelopes
-    drawn = (plot(result, envelopes, axis=axis) for axis in AXES)
+    drawn = (plot(result, envelopes, axis=axis, weight_word=words.weight) for axis in AXES)
     return [mark_safe(svg) for svg in drawn if svg]  # noqa: S308  # drawn by our own code, its texts are escaped there
-
-
-def _computation(result: Mapping[str, Any], declared: Mapping[str, Any]) -> list[dict[str, Any]]:
-    return [
-        dict(line)
-        | {"name": _name_at(declared, line["pointer"]), "lateral_text": _sided(line["lateral_moment"])}
-        for line in result.get("sumsheet", ())
-    ]
-
-
-def _sided(moment: str | None) -> str:
-    """This function will write a lateral moment as people read it: L or R of the centreline, never a bare
-    sign.
-    """
-    if moment is None:
-        return ""
-    if moment.startswith("-"):
-        return f"L {moment[1:]}"
-    return f"R {moment}" if any(digit in moment for digit in "123456789") else moment
-
-
-def _name_at(declared: Mapping[str, Any], pointer: str | None) -> str:
-    found: Any = declared
-    for step in (pointer or "").strip("/").split("/"):
-        if isinstance(found, list):
-            found = found[int(step)]
-        elif isinstance(found, Mapping):
-            found = found.get(step)
-    return str(found["name"]) if isinstance(found, Mapping) and "name" in found else ""
 
 
 def _steps(load: Load) -> Iterable[dict[str, Any]]:
