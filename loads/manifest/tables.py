@@ -84,6 +84,7 @@ def _limit(check: Mapping[str, Any], words: Words) -> Row:
         else words.said(check["margin_text"]),
         "outcome": OUTCOMES[check["result"]],
         "kept": kept,
+        "stops": check["result"] in {"fail", "unresolved"},
         "source": check["source"],
     }
 

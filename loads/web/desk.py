@@ -126,22 +126,24 @@ def _flight(make: Maker, zone: str) -> list[Field]:
     ]
 
 
-def _seat(make: Maker, seat_id: str, serves: str, weights: Choices) -> list[Field]:
+def _seat(make: Maker, seat_id: str, serves: str, weights: Choices) -> list[Field | None]:
+    """This function will return the inputs of one seat; None where the seat has no use for one."""
     prefix = f"seat:{seat_id}"
-    positions = POSITIONS[1:] if serves == "crew" else POSITIONS[:1] if serves == "passenger" else POSITIONS
-    if serves == "crew":
-        positions = (("", "empty"), *positions)
+    crew, passenger = serves != "passenger", serves != "crew"
+    positions = POSITIONS if passenger else (("", "nobody"), *POSITIONS[1:])
     return [
         make.text(f"{prefix}:name", f"Name in {seat_id}", maximum=80),
-        make.choice(f"{prefix}:position", f"Position in {seat_id}", positions),
-        make.text(f"{prefix}:person", f"Login in {seat_id}", maximum=60),
+        make.choice(f"{prefix}:position", f"Position in {seat_id}", positions) if crew else None,
+        make.text(f"{prefix}:person", f"Login in {seat_id}", maximum=60) if crew else None,
         make.figure(f"{prefix}:weight", f"Weight in {seat_id}"),
         make.choice(f"{prefix}:unit", f"Unit of the weight in {seat_id}", weights),
         make.choice(f"{prefix}:how", f"How the weight in {seat_id} was got", HOW),
         make.choice(f"{prefix}:category", f"Category in {seat_id}", CATEGORIES),
-        make.text(f"{prefix}:infant", f"Infant on the lap in {seat_id}", maximum=80),
-        make.figure(f"{prefix}:infant_weight", f"Weight of the infant in {seat_id}"),
-        make.choice(f"{prefix}:infant_how", f"How the weight of the infant in {seat_id} was got", INFANT_HOW),
+        make.text(f"{prefix}:infant", f"Infant on the lap in {seat_id}", maximum=80) if passenger else None,
+        make.figure(f"{prefix}:infant_weight", f"Weight of the infant in {seat_id}") if passenger else None,
+        make.choice(f"{prefix}:infant_how", f"How the infant's weight in {seat_id} was got", INFANT_HOW)
+        if passenger
+        else None,
     ]
 
 
