@@ -2,7 +2,6 @@
 always.
 """
 
-
 from fleet.basis import PHASES, Basis, Phase
 from fleet.weighing import EmptyFigures
 from loads.balance.aboard import Declared, Outline
@@ -10,6 +9,7 @@ from loads.balance.checks_balance import balance_checks
 from loads.balance.checks_known import (
     empty_weight_check,
     no_basis,
+    nothing_left_check,
     off_table_check,
     path_check,
     persons_check,
@@ -41,13 +41,14 @@ def assess(declared: Declared | Outline, basis: Basis | None, empty: EmptyFigure
     standing = empty_weight_check(empty, basis, declared.configuration.fit)
     aboard = lines_without_fuel(declared, empty if standing.outcome == "pass" else None)
     fuel, off_table = _fuel(declared, ready)
-    states = _states(aboard, fuel)
+    states, nothing_left = _states(aboard, fuel, ready)
     checks = (
         standing,
         *weight_knowledge(declared),
         persons_check(declared),
         *_checks(declared, states, ready),
         *off_table,
+        *nothing_left,
         path_check(),
     )
     lines = all_lines(aboard, declared.fuel, fuel, states, ready)
@@ -63,21 +64,25 @@ def _fuel(declared: Declared, ready: Prepared) -> tuple[dict[Phase, FuelState] |
         return None, (off_table_check(off, ready),)
 
 
-def _states(aboard: Aboard, fuel: dict[Phase, FuelState] | None) -> dict[Phase, State]:
+def _states(
+    aboard: Aboard, fuel: dict[Phase, FuelState] | None, ready: Prepared
+) -> tuple[dict[Phase, State], tuple[Check, ...]]:
     """Return the aircraft at each phase in order; nothing at all where a part of it is not known."""
     dry = aboard.without_fuel
     if dry is None or fuel is None:
-        return {}
-    found = {}
+        return {}, ()
+    found: dict[Phase, State] = {}
     staying = fuel["zero fuel"].usable_weight
     for phase in PHASES:
         held = fuel[phase]
         weight, moment = dry.weight + held.weight, dry.moment + held.moment
+        if weight.numerator <= 0:
+            return {}, (nothing_left_check(weight, ready),)
         across = dry.lateral_moment + held.lateral_moment
         lateral_arm = across / weight if across else across
         usable = held.usable_weight - staying if staying else held.usable_weight
         found[phase] = State(phase, weight, moment, across, moment / weight, lateral_arm, usable)
-    return found
+    return found, ()
 
 
 def _checks(declared: Declared, states: dict[Phase, State], ready: Prepared) -> list[Check]:

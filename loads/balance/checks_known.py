@@ -2,13 +2,15 @@
 people.
 """
 
+from fractions import Fraction
+
 from fleet.basis import Basis
 from fleet.weighing import EmptyFigures
 from loads.balance.aboard import Declared
 from loads.balance.fuel import FuelOffTable
 from loads.balance.prepared import Prepared
 from loads.balance.result import Check
-from loads.balance.rounding import VOLUME_PLACES, printed
+from loads.balance.rounding import VOLUME_PLACES, WEIGHT_PLACES, printed
 
 PATH_SENTENCE = "the path between the phases was not checked"
 
@@ -79,6 +81,22 @@ def weight_knowledge(declared: Declared) -> list[Check]:
             )
         )
     return found
+
+
+def nothing_left_check(least: Fraction, ready: Prepared) -> Check:
+    """Return the failing check of a load from which more was taken out than it weighs."""
+    return Check(
+        "weight.total",
+        "weight of the aircraft",
+        "fail",
+        None,
+        printed(least, WEIGHT_PLACES),
+        None,
+        "0",
+        ready.weight,
+        margin_text="more is taken out than the aircraft weighs",
+        what_next="Correct the weights of the equipment that is not aboard.",
+    )
 
 
 def persons_check(declared: Declared) -> Check:

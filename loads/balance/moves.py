@@ -91,7 +91,7 @@ def _possible(declared: Declared, ready: Prepared) -> Iterator[Move]:
     for item in declared.items:
         if item.weight is not None and not item.removed:
             for place in places:
-                yield Move(item.what, item.weight, item.place, place, False)
+                yield Move(item.kind, item.weight, item.place, place, False)
     for person in declared.passengers:
         if person.weight is not None and person.lap_infant is None:
             for seat in seats:

@@ -130,7 +130,7 @@ def _fuel(declared: Declared, fuel: Mapping[Phase, FuelState], ready: Prepared) 
 
 
 def _operating(sums: Sums | None, ready: Prepared) -> Json | None:
-    if sums is None:
+    if sums is None or sums.weight <= 0:
         return None
     arm = sums.moment / sums.weight
     percent = ready.chord_percent(arm)

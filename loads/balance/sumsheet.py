@@ -132,7 +132,8 @@ def _people(group: str, person: Person) -> list[Line]:
 
 def _item(item: Item) -> Line:
     place = item.place
-    what = f"{place.name}, {item.kind}: {item.what}{', removed' if item.removed else ''}"
+    # What it is called is typed freely and may name somebody: it is joined where it is shown, by its pointer.
+    what = f"{place.name}, {item.kind}{', removed' if item.removed else ''}"
     line = Line("items", what, item.how, item.weight, place.arm, None, None, False, item.pointer)
     return _placed(line, place.lateral_arm)
 
@@ -161,7 +162,7 @@ def _operating_total(sums: Sums | None) -> Line:
     name = "operating weight"
     if sums is None:
         return Line(name, name, None, None, None, None, None, True)
-    arm = sums.moment / sums.weight
+    arm = sums.moment / sums.weight if sums.weight > 0 else None
     return Line(name, name, None, sums.weight, arm, sums.moment, sums.lateral_moment, True)
 
 

@@ -414,3 +414,42 @@ def test_a_percentage_of_the_chord_is_only_told_where_there_is_a_chord():
 def test_with_a_basis_an_outline_alone_is_not_assessed():
     with pytest.raises(TypeError):
         assess(read_outline(load()), twin(), twin_empty())
+
+
+def test_nothing_typed_freely_about_people_or_things_stands_in_a_result():
+    document = load()
+    document["items"][0]["what"] = "bags of Liora Osei"
+    document["items"][0]["weight"]["value"] = 290
+
+    assert b"Osei" not in canonical(result_of(document).as_document())
+
+
+@pytest.mark.parametrize("taken", ["4531", "4532", "99999"])
+def test_more_taken_out_than_the_aircraft_weighs_is_outside_and_never_an_error(taken):
+    document = load()
+    document["passengers"] = []
+    document["persons_on_board"] = 1
+    document["items"] = [
+        {
+            "kind": "equipment",
+            "what": "everything",
+            "place": "AFT-HOLD",
+            "weight": {"value": taken, "unit": "lb"},
+            "how": "weighed",
+            "removed": True,
+        }
+    ]
+    result = result_of(document)
+
+    assert result.verdict == "outside"
+    assert result.check("weight.total").outcome == "fail"
+    assert result.states == ()
+
+
+def test_equipment_taken_out_that_leaves_exactly_nothing_is_no_division_by_zero():
+    basis = twin()
+    one = basis.configurations[0]
+    gone = fixed_item("the whole of it", -(4350 + 181), 100)
+    result = result_of(basis=replace(basis, configurations=(replace(one, equipment=(gone,)), one)))
+
+    assert result.as_document()["operating_weight"] is None
