@@ -25,6 +25,8 @@ from fleet.basis import (
 )
 from fleet.quantities import Unit
 from fleet.weighing import EmptyFigures
+from loads.balance.assess import assess
+from loads.balance.declared import read_load
 
 F = Fraction
 SOURCE = Source("VP2-FM", "B", "6-4")
@@ -187,3 +189,24 @@ LOAD: dict[str, Any] = {
 def load(**changes: Any) -> dict[str, Any]:
     """A fresh copy of a sound load for the twin, with top fields exchanged."""
     return {**deepcopy(LOAD), **changes}
+
+
+def result_of(document: Any = None, basis: Basis | None = None, empty: Any = "twin") -> Any:
+    """Read and assess a load, by default the sound one, on the twin with its empty weight."""
+    basis = basis or twin()
+    declared = read_load(document or load(), basis)
+    return assess(declared, basis, twin_empty() if empty == "twin" else empty)
+
+
+def with_limits(**values: str | int | None) -> Basis:
+    """The twin with other limits of weight."""
+    basis = twin()
+    weights = limits(**values)
+    return replace(
+        basis,
+        limits=weights,
+        configurations=tuple(replace(one, limits=weights) for one in basis.configurations),
+    )
+
+
+ROOMY = {"ramp": 9000, "take_off": 9000, "zero_fuel": 9000, "landing": 9000, "minimum_flying": 1000}

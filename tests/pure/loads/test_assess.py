@@ -7,31 +7,18 @@ from fractions import Fraction
 import pytest
 
 from fleet.basis import FixedItem
-from loads.balance.assess import assess
-from loads.balance.declared import read_load, read_outline
 from records.canonical import canonical
-from tests.pure.loads.making import envelope, limit, limits, load, twin, twin_empty
+from tests.pure.loads.making import (
+    ROOMY,
+    envelope,
+    limit,
+    load,
+    result_of,
+    twin,
+    with_limits,
+)
 
 F = Fraction
-
-
-def result_of(document=None, basis=None, empty="twin"):
-    basis = basis or twin()
-    declared = read_load(document or load(), basis)
-    return assess(declared, basis, twin_empty() if empty == "twin" else empty)
-
-
-def with_limits(**values):
-    basis = twin()
-    weights = limits(**values)
-    return replace(
-        basis,
-        limits=weights,
-        configurations=tuple(replace(one, limits=weights) for one in basis.configurations),
-    )
-
-
-ROOMY = {"ramp": 9000, "take_off": 9000, "zero_fuel": 9000, "landing": 9000, "minimum_flying": 1000}
 
 
 def test_the_sum_is_what_a_hand_makes_of_the_lines():
@@ -165,19 +152,6 @@ def test_a_landing_limit_stated_with_the_load_bounds_take_off_and_landing():
     assert (allowed["governed_by"], allowed["weight"]) == ("wet runway sheet + trip fuel", "5720")
 
 
-def test_a_limit_that_was_not_entered_is_unresolved_and_one_shown_to_be_none_passes():
-    values = {name: value for name, value in ROOMY.items() if name != "landing"}
-    unresolved = result_of(basis=with_limits(**values))
-    none = result_of(basis=with_limits(**{**values, "landing": None}))
-
-    assert unresolved.check("weight.landing").outcome == "unresolved"
-    assert unresolved.verdict == "unresolved"
-    assert unresolved.as_document()["allowable_take_off"]["not_entered"] == ["landing limit + trip fuel"]
-    assert none.check("weight.landing").margin_text == "no limit"
-    assert none.check("weight.landing").source == "VP2-FM rev B p. 6-4"
-    assert none.verdict == "within"
-
-
 def test_the_lightest_moment_of_the_flight_must_reach_the_minimum_flying_weight():
     result = result_of(basis=with_limits(**{**ROOMY, "minimum_flying": 5250}))
     check = result.check("weight.minimum-flying")
@@ -206,69 +180,6 @@ def test_less_fuel_is_only_advised_where_the_minimum_at_landing_allows_it():
 
     assert plenty == "Take off at least 60.5 lb of people or items, or carry 10.1 US gal less fuel."
     assert "only 36 lb is above the minimum at landing" in short
-
-
-def test_no_empty_weight_in_force_is_unresolved_and_computes_no_phase():
-    result = result_of(empty=None)
-    document = result.as_document()
-
-    assert result.verdict == "unresolved"
-    assert result.check("standing.empty-weight").margin_text == "no empty weight in force"
-    assert document["phases"] == []
-    assert document["allowable_take_off"] is None
-    assert document["operating_weight"] is None
-    assert document["sumsheet"][0]["weight"] is None
-    assert result.check("seat.ROW1-L").outcome == "pass"
-
-
-def test_no_loading_basis_in_force_is_unresolved():
-    result = assess(read_outline(load()), None, None)
-
-    assert result.verdict == "unresolved"
-    assert [check.code for check in result.checks] == ["standing.loading-basis"]
-    assert result.as_document()["phases"] == []
-
-
-@pytest.mark.parametrize("changed", [{"datum": "firewall"}, {"fit": "floats"}])
-def test_an_empty_weight_of_another_datum_or_fit_is_never_mixed_in(changed):
-    result = result_of(empty=replace(twin_empty(), **changed))
-
-    assert result.verdict == "unresolved"
-    assert result.states == ()
-
-
-def test_a_standard_weight_without_a_table_is_unresolved_and_counts_as_nothing_known():
-    document = load()
-    adult = document["passengers"][0]
-    del adult["weight"]
-    adult |= {"how": "standard", "category": "adult"}
-
-    result = result_of(document)
-
-    assert result.verdict == "unresolved"
-    assert result.check("weights.unknown").outcome == "unresolved"
-    assert result.check("seat.ROW1-L").outcome == "unresolved"
-    assert result.states == ()
-
-
-def test_an_estimated_person_is_computed_but_unresolved_and_an_estimated_bag_is_told():
-    document = load()
-    document["passengers"][0]["how"] = "estimated"
-    document["items"][0]["how"] = "estimated"
-
-    result = result_of(document)
-
-    assert result.verdict == "unresolved"
-    assert result.check("weights.estimated").outcome == "unresolved"
-    assert len(result.states) == 5
-    assert "1 of 1 item weights are estimates" in result.as_document()["advisories"]
-
-
-def test_a_broken_limit_weighs_more_than_an_open_question():
-    document = load()
-    document["items"][0]["weight"]["value"] = 301
-
-    assert result_of(document, empty=None).verdict == "outside"
 
 
 def test_a_lap_infant_adds_its_weight_at_that_seat_and_counts_as_a_person():
@@ -315,35 +226,6 @@ def test_a_removed_equipment_lightens_the_aircraft_but_not_the_place_it_came_fro
     assert result.check("place.AFT-HOLD").actual == "120"
 
 
-def test_a_seat_or_place_without_an_entered_limit_is_unresolved_only_when_it_is_used():
-    basis = twin()
-    bare = tuple(replace(one, maximum=None) for one in basis.places)
-    result = result_of(basis=replace(basis, places=bare))
-
-    assert result.check("place.AFT-HOLD").outcome == "unresolved"
-    with pytest.raises(KeyError):
-        result.check("place.NOSE-HOLD")
-
-
-def test_without_a_zero_fuel_envelope_the_zero_fuel_cg_is_told_and_not_judged():
-    basis = twin()
-    basis = replace(basis, envelopes=(replace(basis.envelopes[0], phases=("take-off", "landing")),))
-    result = result_of(basis=basis)
-
-    assert result.check("cg.zero-fuel").outcome == "advisory"
-    assert result.check("cg.ramp").outcome == "advisory"
-    assert result.check("cg.minimum-at-landing").outcome == "pass"
-    assert result.verdict == "within"
-    assert any("zero fuel" in line for line in result.as_document()["not_assessed"])
-
-
-def test_without_a_landing_envelope_a_load_is_unresolved():
-    basis = twin()
-    basis = replace(basis, envelopes=(replace(basis.envelopes[0], phases=("take-off",)),))
-
-    assert result_of(basis=basis).check("cg.landing").outcome == "unresolved"
-
-
 def test_of_two_envelopes_at_one_phase_both_must_hold_the_load():
     basis = twin()
     narrow = envelope((117, 4000), (117, 7000), ("118.5", 7000), ("118.5", 4000), phases=("take-off",))
@@ -368,13 +250,6 @@ def test_lateral_limits_are_judged_at_every_phase_and_read_as_left_and_right():
     assert result.as_document()["phases"][1]["lateral_text"] == "L 0.23 in"
 
 
-def test_lateral_limits_nobody_entered_are_unresolved():
-    result = result_of(basis=replace(twin(), lateral_limits_entered=False))
-
-    assert result.check("lateral.take-off").outcome == "unresolved"
-    assert result.verdict == "unresolved"
-
-
 def test_a_cg_line_names_the_nearest_edge_its_phase_and_both_margins():
     line = result_of().as_document()["governing"]["cg"]
 
@@ -390,13 +265,6 @@ def test_a_return_above_landing_weight_is_an_advisory_and_never_a_verdict():
     )
 
 
-def test_the_open_path_between_the_phases_is_always_said():
-    document = result_of().as_document()
-
-    assert document["not_assessed"][0] == "the path between the phases was not checked"
-    assert document["checks"][-1]["code"] == "path.between-phases"
-
-
 def test_the_same_inputs_give_the_same_bytes():
     first = canonical(result_of().as_document())
     again = canonical(result_of(deepcopy(load())).as_document())
@@ -409,11 +277,6 @@ def test_a_percentage_of_the_chord_is_only_told_where_there_is_a_chord():
     assert result_of().as_document()["phases"][0]["percent_chord"] == "14.1"
     bare = result_of(basis=replace(twin(), chord=None))
     assert bare.as_document()["phases"][0]["percent_chord"] is None
-
-
-def test_with_a_basis_an_outline_alone_is_not_assessed():
-    with pytest.raises(TypeError):
-        assess(read_outline(load()), twin(), twin_empty())
 
 
 def test_nothing_typed_freely_about_people_or_things_stands_in_a_result():
