@@ -1,4 +1,4 @@
-"""Typed readers of environment variables. Nonsense stops the start with one sentence that names the variable."""
+"""Typed readers of environment variables. Nonsense stops the start with a sentence that names the variable."""
 
 import os
 from pathlib import Path
@@ -11,7 +11,7 @@ class SettingRefused(SystemExit):
 
 
 def text(name: str, default: str | None = None) -> str:
-    """This function will return the variable `name`, or the first line of the file that `name`_FILE points at.
+    """This function will return the variable `name`, or what the file holds that `name`_FILE points at.
 
     Raises SettingRefused when neither is set and there is no default.
     """
