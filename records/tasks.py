@@ -3,8 +3,10 @@
 import logging
 
 from celery import shared_task
+from django.db.models.functions import Now
 
 from records import outbox
+from records.models.receipt import KEPT_FOR, Receipt
 
 log = logging.getLogger(__name__)
 
@@ -26,3 +28,10 @@ def sweep_outbox() -> int:
     if due:
         log.info("promised work: %d due, %d sent", len(due), sent)
     return sent
+
+
+@shared_task(name="records.tasks.forget_old_answers", ignore_result=True)
+def forget_old_answers() -> int:
+    """This function will delete the answers kept for repeated requests whose time is over, and count them."""
+    deleted, _ = Receipt.objects.filter(answered_at__lte=Now() - KEPT_FOR).delete()
+    return deleted

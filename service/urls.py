@@ -1,23 +1,15 @@
 """All addresses: the API of the rooms under /api/v1/, the pages, health."""
 
-from importlib.util import find_spec
-
 from django.urls import URLPattern, URLResolver, include, path
 
 from service import pages
 from service.docs import docs, openapi
 from service.health import Health
 
-
-def _room(addresses: str) -> list[URLResolver]:
-    """This function will include the addresses of a room, once the room has any."""
-    return [path("", include(addresses))] if find_spec(addresses) else []
-
-
 api: list[URLPattern | URLResolver] = [
-    *_room("records.api.urls"),
-    *_room("fleet.api.urls"),
-    *_room("loads.api.urls"),
+    path("", include("records.api.urls")),
+    path("", include("fleet.api.urls")),
+    path("", include("loads.api.urls")),
     path("health", Health.as_view(), name="api-health"),
     path("openapi.json", openapi, name="openapi"),
 ]
@@ -27,8 +19,8 @@ urlpatterns = [
     path("docs", docs, name="docs"),
     path("sign-in", pages.sign_in, name="sign-in"),
     path("sign-out", pages.sign_out, name="sign-out"),
-    *_room("fleet.web.urls"),
-    *_room("loads.web.urls"),
+    path("", include("fleet.web.urls")),
+    path("", include("loads.web.urls")),
 ]
 
 handler400 = "service.problems.unreadable"

@@ -8,7 +8,6 @@ kept them is rolled back.
 
 import re
 from collections.abc import Callable, Mapping
-from datetime import timedelta
 from http import HTTPStatus
 from typing import Final, TypeAlias
 
@@ -22,13 +21,12 @@ from records.act import transaction_for_acts
 from records.api.asking import actor_of
 from records.api.parser import body_of
 from records.api.render import rendered
-from records.models.receipt import Receipt
+from records.models.receipt import KEPT_FOR, Receipt
 from records.refusal import Invalid, StepRefused, Unreadable
 
 # Status, headers and body of an answer.
 Answer: TypeAlias = tuple[int, Mapping[str, str], Mapping[str, object]]
 
-KEPT_FOR: Final = timedelta(days=7)
 _KEY: Final = re.compile(r"[\x21-\x7e]{1,120}")
 
 
@@ -65,12 +63,6 @@ def once(request: Request, work: Callable[[], Answer]) -> HttpResponse:
             answered_at=Now(),
         )
     return _response(status, headers, answer)
-
-
-def forget_old_answers() -> int:
-    """This function will delete the answers older than seven days and return how many there were."""
-    deleted, _ = Receipt.objects.filter(answered_at__lte=Now() - KEPT_FOR).delete()
-    return deleted
 
 
 def _key_of(request: Request) -> str:

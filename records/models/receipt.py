@@ -1,6 +1,11 @@
 """Answers kept for repeated requests (Idempotency-Key)."""
 
+from datetime import timedelta
+from typing import Final
+
 from django.db import models
+
+KEPT_FOR: Final = timedelta(days=7)
 
 
 class Receipt(models.Model):

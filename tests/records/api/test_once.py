@@ -15,11 +15,13 @@ from rest_framework.test import APIRequestFactory
 
 from records.act import act
 from records.actor import Actor
-from records.api.once import KEPT_FOR, forget_old_answers, once
+from records.api.once import once
 from records.api.parser import StrictJSONParser
 from records.kind import Kind
 from records.models import Act, Receipt
+from records.models.receipt import KEPT_FOR
 from records.refusal import Invalid, NotAllowed, NotSignedIn, StepRefused, Unreadable
+from records.tasks import forget_old_answers
 
 TRIED = Kind("try-something", "tried something")
 ACTOR = Actor(
