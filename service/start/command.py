@@ -65,9 +65,6 @@ def _enter_demo(supervisor: Supervisor) -> None:
     """Run the invented day in a process of its own, which knows by its mark in the data folder what is
     already entered.
     """
-    if not (ROOT / "service" / "demo.py").exists() and not (ROOT / "service" / "demo").is_dir():
-        say("There is no invented operator to enter yet.")
-        return
     command = (
         sys.executable,
         "-m",

@@ -73,18 +73,30 @@ def data(tmp_path_factory) -> Path:
     return tmp_path_factory.mktemp("start") / "data"
 
 
-@pytest.fixture
-def start(data: Path):
-    runs: list[Run] = []
+class OneRun:
+    """The one run on a data folder, started when there is none: a start takes seconds."""
 
-    def begin(*words: str) -> Run:
-        runs.append(Run(data, "start", "--empty", "--port", "0", *words))
-        return runs[-1]
+    def __init__(self, data: Path) -> None:
+        self.data, self.run = data, None
 
-    yield begin
-    for run in runs:
-        if run.process.poll() is None:
-            run.end(signal.SIGTERM)
+    def running(self) -> Run:
+        if self.run is None or self.run.process.poll() is not None:
+            self.run = Run(self.data, "start", "--empty", "--port", "0")
+        return self.run
+
+    def ended(self) -> None:
+        if self.run is None:
+            assert self.running().address
+        if self.run.process.poll() is None:
+            self.run.end(signal.SIGTERM)
+
+
+@pytest.fixture(scope="module")
+def one(data: Path):
+    found = OneRun(data)
+    yield found
+    if found.run is not None:
+        found.ended()
 
 
 def health(address: str) -> dict[str, object]:
@@ -116,22 +128,21 @@ def left_of(data: Path) -> list[str]:
     return found
 
 
-def test_it_serves_until_ctrl_c_and_leaves_nothing_behind(start, data: Path):
-    run = start()
+def test_it_serves_and_shows_what_each_process_says_under_its_name(one, data: Path):
+    run = one.running()
 
     assert health(run.address)["status"] == "ready"
-    run.wait_for(r"(?m)^web +\| ")
-    run.wait_for(r"(?m)^worker +\| .*ready")
-    assert run.end(signal.SIGINT) == 0
-    assert run.said.splitlines()[-1].startswith("Stopped;")
-    assert left_of(data) == []
+    for name in ("web", "worker", "scheduler", "database"):
+        run.wait_for(rf"(?m)^{name} +\| ")
+    for name in ("secret-key", "postgres.passwords"):
+        assert (data / name).stat().st_mode & 0o777 == 0o600
 
 
-def test_a_second_start_on_the_same_data_is_refused_in_one_sentence_that_names_the_first(start, data: Path):
-    first = start()
+def test_a_second_start_on_the_same_data_is_refused_in_one_sentence_that_names_the_first(one, data: Path):
+    first = one.running()
     address = first.address
 
-    second = start()
+    second = Run(data, "start", "--empty", "--port", "0")
 
     assert second.wait() == 2
     (sentence,) = second.said.splitlines()
@@ -140,41 +151,18 @@ def test_a_second_start_on_the_same_data_is_refused_in_one_sentence_that_names_t
     assert health(address)["status"] == "ready"
 
 
-def test_a_busy_port_is_refused_in_one_sentence_with_the_next_step(data: Path):
-    with socket.create_server(("127.0.0.1", 0)) as other:
-        port = other.getsockname()[1]
+def test_another_command_uses_the_running_database_and_leaves_it_running(one, data: Path):
+    address = one.running().address
 
-        run = Run(data, "start", "--empty", "--port", str(port))
+    command = Run(data, "showmigrations", "records")
 
-        assert run.wait() == 2
-    assert run.said.startswith(f"Tarebook: Port {port} is taken by another program; try")
-    assert len(run.said.splitlines()) == 1
-    assert left_of(data) == []
+    assert command.wait() == 0
+    assert "[X] 0001" in command.said
+    assert health(address)["status"] == "ready"
 
 
-def test_killed_with_everything_running_it_starts_again_on_the_same_data(start, data: Path):
-    first = start()
-    assert health(first.address)
-    cluster = postgres.find(data / "postgres")
-    with psycopg.connect(cluster.url(roles.OWNER, roles.DATABASE)) as owner:
-        owner.execute("CREATE SCHEMA kept CREATE TABLE answer AS SELECT 42 AS value")
-    before = json.loads((data / "pids" / "web.json").read_text())["pid"]
-
-    first.end(signal.SIGKILL)
-    second = start()
-
-    assert health(second.address)["status"] == "ready"
-    assert "Ended the web process that an earlier, killed run left behind" in second.said
-    assert processes.members(before) == ()
-    with psycopg.connect(cluster.url(roles.OWNER, roles.DATABASE)) as owner:
-        assert owner.execute("SELECT value FROM kept.answer").fetchone() == (42,)
-        owner.execute("DROP SCHEMA kept CASCADE")
-    assert second.end(signal.SIGTERM) == 0
-    assert left_of(data) == []
-
-
-def test_whatever_dies_is_started_again(start, data: Path):
-    run = start()
+def test_whatever_dies_is_started_again(one, data: Path):
+    run = one.running()
     address = run.address
 
     for name in ("web", "worker", "scheduler"):
@@ -194,23 +182,38 @@ def test_whatever_dies_is_started_again(start, data: Path):
     assert eventually(well)
 
 
-def test_another_command_starts_the_database_for_its_own_length(data: Path):
-    run = Run(data, "showmigrations", "records")
+def test_killed_with_everything_running_it_starts_again_on_the_same_data_and_ends_with_ctrl_c(
+    one, data: Path
+):
+    first = one.running()
+    assert health(first.address)
+    cluster = postgres.find(data / "postgres")
+    with psycopg.connect(cluster.url(roles.OWNER, roles.DATABASE)) as owner:
+        owner.execute("CREATE SCHEMA kept")
+        owner.execute("CREATE TABLE kept.answer AS SELECT 42 AS value")
+    web = json.loads((data / "pids" / "web.json").read_text())["pid"]
 
-    assert run.wait() == 0
-    assert "[X] 0001" in run.said
+    first.end(signal.SIGKILL)
+    second = one.running()
+
+    assert health(second.address)["status"] == "ready"
+    assert "Ended the web process that an earlier, killed run left behind" in second.said
+    assert processes.members(web) == ()
+    with psycopg.connect(cluster.url(roles.OWNER, roles.DATABASE)) as owner:
+        assert owner.execute("SELECT value FROM kept.answer").fetchone() == (42,)
+    assert second.end(signal.SIGINT) == 0
+    assert second.said.splitlines()[-1].startswith("Stopped;")
     assert left_of(data) == []
 
 
-def test_another_command_uses_the_running_database_and_leaves_it_running(start, data: Path):
-    first = start()
-    address = first.address
+def test_another_command_starts_the_database_for_its_own_length(one, data: Path):
+    one.ended()
 
-    run = Run(data, "showmigrations", "records")
+    command = Run(data, "showmigrations", "records")
 
-    assert run.wait() == 0
-    assert "[X] 0001" in run.said
-    assert health(address)["status"] == "ready"
+    assert command.wait() == 0
+    assert "[X] 0001" in command.said
+    assert left_of(data) == []
 
 
 def test_before_the_first_start_another_command_says_what_to_do(tmp_path: Path):
@@ -220,14 +223,21 @@ def test_before_the_first_start_another_command_says_what_to_do(tmp_path: Path):
     assert "run `python3 manage.py start` first" in run.said
 
 
-def test_secrets_are_readable_by_this_account_only(data: Path):
-    for name in ("secret-key", "postgres.passwords"):
-        assert (data / name).stat().st_mode & 0o777 == 0o600
+def test_a_busy_port_is_refused_in_one_sentence_with_the_next_step(tmp_path: Path):
+    with socket.create_server(("127.0.0.1", 0)) as other:
+        port = other.getsockname()[1]
+
+        run = Run(tmp_path / "data", "start", "--empty", "--port", str(port))
+
+        assert run.wait() == 2
+    assert run.said.startswith(f"Tarebook: Port {port} is taken by another program; try")
+    assert len(run.said.splitlines()) == 1
+    assert left_of(tmp_path / "data") == []
 
 
 @pytest.mark.parametrize("words", [["--port", "70000"], ["--port", "x"], ["--nonsense"]])
-def test_nonsense_on_the_command_line_is_refused(words: list[str], data: Path):
-    run = Run(data, "start", *words)
+def test_nonsense_on_the_command_line_is_refused(words: list[str], tmp_path: Path):
+    run = Run(tmp_path / "data", "start", *words)
 
     assert run.wait() == 2
     assert "error:" in run.said
