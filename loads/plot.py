@@ -135,8 +135,16 @@ def _grid(x: Scale, y: Scale, frame: Frame, *, sided: bool) -> list[str]:
             line((frame.left, at), (frame.right, at), stroke="#ccc"),
             label(_tick(value), (frame.left - 4, at + 3), text_anchor="end"),
         ]
-    size = {"width": frame.right - frame.left, "height": frame.bottom - frame.top}
-    edge = element("rect", x=frame.left, y=frame.top, fill="none", stroke="#000", stroke_width=0.6, **size)
+    edge = element(
+        "rect",
+        x=frame.left,
+        y=frame.top,
+        width=frame.right - frame.left,
+        height=frame.bottom - frame.top,
+        fill="none",
+        stroke="#000",
+        stroke_width=0.6,
+    )
     return [*parts, edge]
 
 

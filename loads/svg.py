@@ -1,5 +1,6 @@
 """SVG elements as text, escaped in one place. Presentation attributes only, never `style`."""
 
+from collections.abc import Mapping
 from xml.sax.saxutils import escape, quoteattr
 
 
@@ -8,6 +9,10 @@ def element(name: str, *inside: str, words: str = "", **attributes: str | float)
 
     An underscore in an attribute's name stands for a hyphen: `stroke_width=1`.
     """
+    return _element(name, attributes, *inside, words=words)
+
+
+def _element(name: str, attributes: Mapping[str, str | float], *inside: str, words: str = "") -> str:
     written = "".join(
         f" {key.replace('_', '-')}={quoteattr(value if isinstance(value, str) else short(value))}"
         for key, value in attributes.items()
@@ -18,8 +23,9 @@ def element(name: str, *inside: str, words: str = "", **attributes: str | float)
 
 def line(start: tuple[float, float], end: tuple[float, float], **attributes: str | float) -> str:
     """This function will write a straight black line, 0.5 wide unless said otherwise."""
-    look: dict[str, str | float] = {"stroke": "#000", "stroke_width": 0.5, **attributes}
-    return element("line", x1=start[0], y1=start[1], x2=end[0], y2=end[1], **look)
+    stroke, width = attributes.pop("stroke", "#000"), attributes.pop("stroke_width", 0.5)
+    ends = {"x1": start[0], "y1": start[1], "x2": end[0], "y2": end[1]}
+    return _element("line", {**ends, "stroke": stroke, "stroke_width": width, **attributes})
 
 
 def label(words: str, at: tuple[float, float], **attributes: str | float) -> str:

@@ -96,4 +96,4 @@ def take_due(most: int) -> list[tuple[str, str]]:
 
 def wait_after(tries: int) -> timedelta:
     """This function will return how long to wait after the given number of earlier tries."""
-    return min(timedelta(seconds=30) * 2 ** min(tries, 10), LONGEST_WAIT)
+    return min(timedelta(seconds=30 << min(tries, 10)), LONGEST_WAIT)

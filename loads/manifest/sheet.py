@@ -2,6 +2,7 @@
 
 import segno
 
+from fleet.basis import Axis
 from loads.cautions import CAUTIONS, INVENTED
 from loads.manifest import pilot_block, tables
 from loads.manifest.facts import Facts
@@ -74,7 +75,7 @@ def _plots(facts: Facts, words: Words) -> list[str]:
     lateral = any(envelope.axis == "lateral" for envelope in facts.basis.envelopes)
     height = HEIGHTS[words.paper, lateral]
     frame = Frame(height=height, bottom=height - 34.0)
-    axes = ("longitudinal", "lateral") if lateral else ("longitudinal",)
+    axes: tuple[Axis, ...] = ("longitudinal", "lateral") if lateral else ("longitudinal",)
     drawn = [
         plot(facts.result, facts.basis.envelopes, axis=axis, weight_word=words.weight, frame=frame)
         for axis in axes
