@@ -2,8 +2,8 @@
 
 CAUTIONS: tuple[str, ...] = (
     (
-        "The approved flight manual, the operator's approved procedures, local rules and licensed people decide; "
-        "this computation does not replace them."
+        "The approved flight manual, the operator's approved procedures, local rules and licensed people "
+        "decide; this computation does not replace them."
     ),
     (
         "It is only as true as what was declared: check people, items, places and fuel at the aircraft "

@@ -1,4 +1,4 @@
-"""Typed readers of environment variables. Nonsense stops the start with a sentence that names the variable."""
+"""Typed readers of environment variables. Nonsense stops the start with a sentence that names it."""
 
 import os
 from pathlib import Path
