@@ -10,8 +10,10 @@ from django.utils.http import url_has_allowed_host_and_scheme
 from django.views.decorators.debug import sensitive_post_parameters
 from django.views.decorators.http import require_http_methods, require_POST
 
+from fleet.actions.confirm_password import refuse_locked_out
 from fleet.models import Person
 from loads.cautions import CAUTIONS, INVENTED
+from records.refusal import LockedOut
 
 
 def page_context(request: HttpRequest) -> dict[str, Any]:
@@ -43,17 +45,33 @@ def sign_in(request: HttpRequest) -> HttpResponse:
     """
     if request.method != "POST":
         return render(request, "service/sign_in.html", {"next": _where_next(request)})
-    person = authenticate(
-        request,
-        username=request.POST.get("login", "").strip().lower(),
-        password=request.POST.get("password", ""),
-    )
-    if person is not None:
-        login(request, person)
-        return HttpResponseRedirect(_where_next(request))
-    locked = bool(getattr(request, "axes_locked_out", False))
-    context = {"next": _where_next(request), "login": request.POST.get("login", ""), "locked": locked}
-    return render(request, "service/sign_in.html", context | {"failed": True}, status=429 if locked else 422)
+    typed = request.POST.get("login", "")
+    try:
+        person = _let_in(request, typed.strip().lower(), request.POST.get("password", ""))
+    except LockedOut as locked:
+        return _again(request, typed, locked)
+    if person is None:
+        return _again(request, typed)
+    login(request, person)
+    return HttpResponseRedirect(_where_next(request))
+
+
+def _let_in(request: HttpRequest, name: str, password: str) -> Person | None:
+    """This function will return the person behind login and password, or None; raises LockedOut.
+
+    Whoever is locked out is told before the password is looked at, so that a try does not lengthen the wait.
+    """
+    refuse_locked_out(request, name)
+    person = authenticate(request, username=name, password=password)
+    if isinstance(person, Person):
+        return person
+    refuse_locked_out(request, name)
+    return None
+
+
+def _again(request: HttpRequest, typed: str, locked: LockedOut | None = None) -> HttpResponse:
+    context = {"next": _where_next(request), "login": typed, "failed": True, "locked": locked}
+    return render(request, "service/sign_in.html", context, status=429 if locked else 422)
 
 
 @require_POST
