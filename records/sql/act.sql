@@ -11,8 +11,7 @@ CREATE OR REPLACE FUNCTION act_open(
     for_chain text, of_kind text, by_kind text, by_key text, by_name text, in_capacity text,
     what_about text, why text DEFAULT '', because_of uuid DEFAULT NULL, in_request text DEFAULT '',
     OUT act_id uuid, OUT opened timestamptz
-) RETURNS record LANGUAGE plpgsql SECURITY DEFINER
-SET search_path = public, pg_temp SET "TimeZone" = 'UTC' SET "DateStyle" = 'ISO, YMD' AS $$
+) RETURNS record LANGUAGE plpgsql SECURITY DEFINER SET search_path = public, pg_temp AS $$
 DECLARE
     name_digest text;
 BEGIN
@@ -25,7 +24,9 @@ BEGIN
         RAISE EXCEPTION USING ERRCODE = 'TB002', MESSAGE = format('the act %s was opened inside another act', of_kind);
     END IF;
     IF by_name <> '' THEN
-        name_digest := name_kept(for_chain, by_key, by_name);
+        SELECT n.digest INTO name_digest FROM records_name n
+        WHERE n.actor_key = by_key AND n.chain = for_chain AND n.name = convert_to(by_name, 'UTF8') ORDER BY n.id LIMIT 1;
+        name_digest := coalesce(name_digest, name_kept(for_chain, by_key, by_name));
     END IF;
     act_id := uuidv7();
     opened := clock_timestamp();
@@ -35,24 +36,17 @@ BEGIN
             what_about, why, because_of, in_request);
 END $$;
 
--- The salted digest under which an actor's name, as printed now, is kept. The name itself stands only in records_name, where it
--- can be destroyed. Not unique on purpose: two first acts of one person must not wait for each other.
+-- Keeps a name as printed under a salted digest, and returns that. The name itself stands only in records_name, where it can be
+-- destroyed. Not unique on purpose: two first acts of one person must not wait for each other.
 CREATE OR REPLACE FUNCTION name_kept(for_chain text, of_key text, as_printed text)
 RETURNS text LANGUAGE plpgsql SECURITY DEFINER SET search_path = public, pg_temp AS $$
 DECLARE
     printed bytea := convert_to(as_printed, 'UTF8');
-    new_salt bytea;
-    found_digest text;
+    new_salt bytea := uuid_send(gen_random_uuid()) || uuid_send(gen_random_uuid());
 BEGIN
-    SELECT n.digest INTO found_digest FROM records_name n
-    WHERE n.chain = for_chain AND n.actor_key = of_key AND n.name = printed ORDER BY n.id LIMIT 1;
-    IF found_digest IS NULL THEN
-        new_salt := uuid_send(gen_random_uuid()) || uuid_send(gen_random_uuid());
-        found_digest := salted_digest(new_salt, printed);
-        INSERT INTO records_name (chain, actor_key, name, salt, digest)
-        VALUES (for_chain, of_key, printed, new_salt, found_digest);
-    END IF;
-    RETURN found_digest;
+    INSERT INTO records_name (chain, actor_key, name, salt, digest)
+    VALUES (for_chain, of_key, printed, new_salt, salted_digest(new_salt, printed));
+    RETURN salted_digest(new_salt, printed);
 END $$;
 
 CREATE OR REPLACE FUNCTION salted_digest(salt bytea, value bytea)

@@ -22,7 +22,10 @@ DECLARE
     entry text;
 BEGIN
     SELECT a.* INTO STRICT act FROM records_act a WHERE a.id = NEW.act_id;
-    changes := entry_changes(act.id);
+    SELECT coalesce(string_agg(
+        '{"table":' || to_json(c.table_name)::text || ',"key":' || to_json(c.row_key)::text
+        || ',"operation":' || to_json(c.operation)::text || ',"image":' || c.image || '}', ',' ORDER BY c.id), '')
+    INTO changes FROM records_change c WHERE c.act_id = act.id;
     PERFORM pg_advisory_xact_lock(hashtextextended(act.chain, 4201));
     -- A new statement, so a new snapshot: it sees the link of whoever held the lock before.
     SELECT s.position, s.digest INTO last_position, last_digest FROM records_seal s
@@ -40,14 +43,6 @@ END $$;
 CREATE OR REPLACE FUNCTION entry_digest(entry text)
 RETURNS text LANGUAGE sql IMMUTABLE AS $$
     SELECT encode(sha256('\x00'::bytea || convert_to(entry, 'UTF8')), 'hex')
-$$;
-
-CREATE OR REPLACE FUNCTION entry_changes(of_act uuid)
-RETURNS text LANGUAGE sql STABLE AS $$
-    SELECT coalesce(string_agg(
-        '{"table":' || to_json(c.table_name)::text || ',"key":' || to_json(c.row_key)::text
-        || ',"operation":' || to_json(c.operation)::text || ',"image":' || c.image || '}', ',' ORDER BY c.id), '')
-    FROM records_change c WHERE c.act_id = of_act
 $$;
 
 CREATE OR REPLACE FUNCTION entry_text(act records_act, at_position bigint, previous text, changes text)

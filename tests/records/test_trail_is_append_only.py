@@ -73,7 +73,7 @@ def test_the_service_role_forges_no_row_of_the_trail(table):
         "SELECT guard_table('scratch_free', key => '{id}', mode => 'append', operator => 'id')",
         "SELECT exempt_table('scratch_thing', 'because')",
         "SELECT name_kept('kt', 'person:7', 'Somebody Else')",
-        "SELECT entry_changes(uuidv7())",
+        "SELECT check_operator('a', 'b', 'c')",
         "SET ROLE tarebook_owner",
         "SET SESSION AUTHORIZATION tarebook_owner",
         "ALTER ROLE tarebook_service SUPERUSER",
