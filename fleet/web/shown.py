@@ -84,6 +84,14 @@ def _quantity(part: dict[str, Any]) -> str:
     return f"{part['value']} {part['unit']}"
 
 
+def _sided(name: str, part: dict[str, Any]) -> str:
+    """This function will write a lateral figure as L or R of the centreline, never with a bare sign."""
+    value = str(part["value"])
+    if not name.startswith("lateral") or not value.strip("-0."):
+        return _quantity(part)
+    return f"{'L' if value.startswith('-') else 'R'} {value.lstrip('-')} {part['unit']}"
+
+
 def _weight_words(weight: EmptyWeight) -> str:
     return _quantity(json.loads(weight.document)["weight"])
 
@@ -96,7 +104,7 @@ def _weight_lines(weight: EmptyWeight) -> list[str]:
         ("lateral_moment", "lateral moment"),
         ("lateral_arm", "lateral arm"),
     )
-    lines = [f"{title} {_quantity(document[part])}" for part, title in titles if part in document]
+    lines = [f"{title} {_sided(part, document[part])}" for part, title in titles if part in document]
     return [*lines, f"by {document['how']}, {document['date']}, report {document['report']}"]
 
 
@@ -163,7 +171,7 @@ def _version(
 
 
 def _local(instant: datetime | None, zone: ZoneInfo) -> str:
-    return instant.astimezone(zone).strftime("%Y-%m-%d %H:%M %Z") if instant else ""
+    return instant.astimezone(zone).isoformat(sep=" ", timespec="minutes") if instant else ""
 
 
 def _standing(one: VersionHistory, now: datetime) -> str:
