@@ -19,6 +19,7 @@ def run_django(arguments: list[str]) -> int:
     With DATABASE_URL set, the environment alone decides. Without, the embedded database of the data folder is
     used, and started for the length of the command if it does not run.
     """
+    arguments = _as_django_calls_it(arguments)
     os.environ.setdefault("DJANGO_SETTINGS_MODULE", "service.settings")
     if "DATABASE_URL" in os.environ or "DATABASE_URL_FILE" in os.environ:
         return _execute(arguments)
@@ -35,6 +36,13 @@ def run_django(arguments: list[str]) -> int:
             return _with(folder, started, arguments)
         finally:
             postgres.stop(started)
+
+
+def _as_django_calls_it(arguments: list[str]) -> list[str]:
+    """People type `enter-operator`; Django knows a command by the name of its module, `enter_operator`."""
+    if not arguments or arguments[0].startswith("-"):
+        return arguments
+    return [arguments[0].replace("-", "_"), *arguments[1:]]
 
 
 def _with(folder: DataFolder, cluster: postgres.Cluster, arguments: list[str]) -> int:
