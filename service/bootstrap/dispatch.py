@@ -43,7 +43,7 @@ def _run(arguments: list[str]) -> int:
         _inside("run", arguments, may_install=False)
     from service.start.other import run_django  # noqa: PLC0415 - needs the packages
 
-    return run_django(arguments)
+    return run_django(arguments or ["help"])
 
 
 def _inside(wanted: str, arguments: list[str], *, may_install: bool) -> None:
