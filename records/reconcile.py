@@ -49,7 +49,8 @@ WITH today AS (
         row_image(s.r, %(personal)s::text[], %(binary_personal)s::text[], %(hidden)s::text[]) AS image
     FROM (SELECT to_jsonb(t.*) AS r FROM public.{table} t) s
 ), witnessed AS (
-    SELECT DISTINCT ON (row_key) row_key AS k, image::jsonb - %(hidden)s::text[] AS image, act_id FROM records_change
+    SELECT DISTINCT ON (row_key) row_key AS k, image::jsonb - %(hidden)s::text[] AS image, act_id
+    FROM records_change
     WHERE table_name = %(name)s ORDER BY row_key, id DESC
 )
 SELECT coalesce(t.k, w.k), s.chain, s.position, t.k IS NULL, w.k IS NULL,

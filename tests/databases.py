@@ -169,7 +169,8 @@ BEGIN
     EXECUTE (SELECT 'TRUNCATE ' || string_agg(format('public.%I', tablename), ', ')
              FROM pg_tables WHERE schemaname = 'public');
     FOR t IN SELECT c.table_name AS called, string_agg(quote_ident(c.column_name), ', ') AS columns
-             FROM information_schema.columns c JOIN pg_tables s ON s.schemaname = 'seed' AND s.tablename = c.table_name
+             FROM information_schema.columns c
+             JOIN pg_tables s ON s.schemaname = 'seed' AND s.tablename = c.table_name
              WHERE c.table_schema = 'public' AND c.is_generated = 'NEVER' GROUP BY 1 LOOP
         EXECUTE format('INSERT INTO public.%I (%s) OVERRIDING SYSTEM VALUE SELECT %s FROM seed.%I',
                        t.called, t.columns, t.columns, t.called);
@@ -183,7 +184,7 @@ END $$;
 
 
 def connect(alias: str = "owner") -> psycopg.Connection[tuple[object, ...]]:
-    """This function will connect to the database of now past Django, as the service role, the owner or the superuser."""
+    """This function will connect to the database of now past Django, in the role of that alias."""
     place = connections.settings[alias]
     return psycopg.connect(
         dbname=place["NAME"],

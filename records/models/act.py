@@ -43,3 +43,6 @@ class Act(models.Model):
         indexes = [
             models.Index(fields=["about", "id"], name="act_by_about"),
         ]
+
+    def __str__(self) -> str:
+        return f"{self.kind} about {self.about}"

@@ -30,3 +30,6 @@ class Change(models.Model):
             )
         ]
         indexes = [models.Index(fields=["table_name", "row_key", "id"], name="change_by_row")]
+
+    def __str__(self) -> str:
+        return f"{self.operation} of {self.table_name} {self.row_key}"

@@ -27,3 +27,6 @@ class GuardedTable(models.Model):
                 name="guarded_table_mode_is_known",
             )
         ]
+
+    def __str__(self) -> str:
+        return f"{self.name}: {self.mode}"

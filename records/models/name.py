@@ -17,3 +17,6 @@ class Name(models.Model):
 
     class Meta:
         indexes = [models.Index(fields=["actor_key", "chain"], name="name_by_bearer")]
+
+    def __str__(self) -> str:
+        return f"{self.digest} of {self.actor_key}"

@@ -33,6 +33,9 @@ class Seal(models.Model):
         ]
         indexes = [models.Index(fields=["digest"], name="seal_by_digest")]
 
+    def __str__(self) -> str:
+        return f"{self.chain} {self.position}"
+
 
 class Closing(models.Model):
     """An act that is about to be sealed: the second stage of the seal hangs on this table. Empty between
@@ -42,3 +45,6 @@ class Closing(models.Model):
     act = models.OneToOneField(
         Act, primary_key=True, on_delete=models.DO_NOTHING, db_constraint=False, related_name="+"
     )
+
+    def __str__(self) -> str:
+        return f"closing of {self.act_id}"

@@ -2,8 +2,9 @@
 
     python -m tests.bench.act_against_bare_insert
 
-Both go through Django and end in a commit that waits for the disk; they take turns in short rounds, and the median of
-the rounds' ratios counts. The 20,000 rows are one statement (target: 4 times the same unguarded, or less).
+Both go through Django and end in a commit that waits for the disk; they take turns in short rounds, and the
+median of the rounds' ratios counts. The 20,000 rows are one statement (target: 4 times the same unguarded, or
+less).
 """
 
 import statistics
@@ -14,9 +15,13 @@ from tests.bench.ground import database
 
 ROUNDS, TURNS = 15, 100
 ROW = "INSERT INTO {} (operator_id, what, n, t) VALUES ('kt', 'a spanner and a hammer', 12.50, now())"
-MANY = "INSERT INTO {} (operator_id, what, n, t) SELECT 'kt', 'row ' || i, i, now() FROM generate_series(1, 20000) i"
+MANY = (
+    "INSERT INTO {} (operator_id, what, n, t) "
+    "SELECT 'kt', 'row ' || i, i, now() FROM generate_series(1, 20000) i"
+)
 TABLES = """
-CREATE TABLE {0} (id uuid PRIMARY KEY DEFAULT uuidv7(), operator_id text, what text, n numeric, t timestamptz);
+CREATE TABLE {0} (
+    id uuid PRIMARY KEY DEFAULT uuidv7(), operator_id text, what text, n numeric, t timestamptz);
 """
 
 
@@ -37,7 +42,9 @@ def measure() -> dict[str, float]:
 
     with databases.connect("owner") as owner:
         owner.execute(TABLES.format("bench_guarded") + TABLES.format("bench_bare"))
-        owner.execute("SELECT guard_table('bench_guarded', key => '{id}', mode => 'append', operator => 'operator_id')")
+        owner.execute(
+            "SELECT guard_table('bench_guarded', key => '{id}', mode => 'append', operator => 'operator_id')"
+        )
         owner.execute("SELECT exempt_table('bench_bare', 'it is what the guarded one is measured against')")
 
     def bare(statement: str = ROW) -> None:

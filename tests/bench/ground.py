@@ -1,6 +1,7 @@
 """What the measurements stand on: a PostgreSQL that really waits for its disk, and a migrated database in it.
 
-`TAREBOOK_TEST_SERVER` names a running one to use; figures are ratios within one run, never times between runs.
+`TAREBOOK_TEST_SERVER` names a running one to use. Figures are ratios within one run, never times
+between runs.
 """
 
 import os

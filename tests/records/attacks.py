@@ -2,10 +2,13 @@
 
 Each starts from a sound database: chain "kt" with entries 1 to 12, each a thing noted by person 7, entry n
 writing the thing with number 100 + n; entries 3, 6 and 9 also write the person with that number. Statements
-run as the superuser or the owner, one after the other. `{seal}` stands for the column lists below.
+run as the superuser or the owner, one after the other. They strike at a place drawn anew for each trial:
+`<p>` is that place, `<q>`, `<r>` and `<s>` the three after it, `<id>` the thing of that place, `<t>` a place
+that wrote a person.
 """
 
-from dataclasses import dataclass
+from dataclasses import dataclass, replace
+from random import Random
 
 OFF = "ALTER TABLE {0} DISABLE TRIGGER USER"
 SEAL_OFF, SEAL_ON = "ALTER TABLE records_seal DISABLE TRIGGER USER", "SELECT enable_always('records_seal')"
@@ -30,49 +33,73 @@ class Attack:
     says: str
     by: str = "superuser"
 
+    def drawn(self, seed: int) -> "Attack":
+        """This function will return the attack at the place this seed draws."""
+        random = Random(f"{seed} {self.description}")
+        place, person = random.randint(2, 9), random.choice((3, 6, 9))
+        tokens = {
+            "<p>": place,
+            "<q>": place + 1,
+            "<r>": place + 2,
+            "<s>": place + 3,
+            "<id>": 100 + place,
+            "<t>": person,
+        }
+
+        def filled(words: str) -> str:
+            for token, value in tokens.items():
+                words = words.replace(token, str(value))
+            return words
+
+        return replace(
+            self, statements=tuple(filled(one) for one in self.statements), names=filled(self.names)
+        )
+
 
 ATTACKS = (
     Attack(
         "edit: a word inside a sealed entry is replaced",
         (
             SEAL_OFF,
-            "UPDATE records_seal SET entry = replace(entry, 'thing 5', 'thing S') WHERE chain='kt' AND position=5",
+            "UPDATE records_seal SET entry = replace(entry, 'thing <p>', 'thing S') "
+            "WHERE chain='kt' AND position=<p>",
             SEAL_ON,
         ),
-        "chain kt, entry 5",
+        "chain kt, entry <p>",
         "the digest of the stored entry",
     ),
     Attack(
         "edit: an entry is replaced and its digest made to fit",
         (
             SEAL_OFF,
-            "UPDATE records_seal SET entry = replace(entry, 'thing 5', 'thing S') WHERE chain='kt' AND position=5",
-            "UPDATE records_seal SET digest = entry_digest(entry) WHERE chain='kt' AND position=5",
+            "UPDATE records_seal SET entry = replace(entry, 'thing <p>', 'thing S') "
+            "WHERE chain='kt' AND position=<p>",
+            "UPDATE records_seal SET digest = entry_digest(entry) WHERE chain='kt' AND position=<p>",
             SEAL_ON,
         ),
-        "chain kt, entry 6",
+        "chain kt, entry <q>",
         "the link to the entry before",
     ),
     Attack(
         "edit: an entry and every link after it are made anew, rows and changes left as they were",
-        (SEAL_OFF, "SELECT chain_anew('kt', 5, 'thing 5', 'thing S')", SEAL_ON),
-        "chain kt, entry 5",
+        (SEAL_OFF, "SELECT chain_anew('kt', <p>, 'thing <p>', 'thing S')", SEAL_ON),
+        "chain kt, entry <p>",
         "the changes of the act",
     ),
     Attack(
         "edit: a change is altered behind its sealed entry",
         (
             CHANGE_OFF,
-            "UPDATE records_change SET image = replace(image, 'thing 5', 'thing S') WHERE row_key = '105'",
+            "UPDATE records_change SET image = replace(image, 'thing <p>', 'thing S') WHERE row_key = '<id>'",
             CHANGE_ON,
         ),
-        "chain kt, entry 5",
+        "chain kt, entry <p>",
         "the changes of the act",
     ),
     Attack(
         "edit: an act is laid at somebody else's door",
-        (ACT_OFF, "UPDATE records_act SET actor_key = 'person:9' WHERE id = act_at('kt', 5)", ACT_ON),
-        "chain kt, entry 5",
+        (ACT_OFF, "UPDATE records_act SET actor_key = 'person:9' WHERE id = act_at('kt', <p>)", ACT_ON),
+        "chain kt, entry <p>",
         "actor of the act",
     ),
     Attack(
@@ -87,8 +114,8 @@ ATTACKS = (
     ),
     Attack(
         "delete: an entry in the middle is taken out",
-        (SEAL_OFF, "DELETE FROM records_seal WHERE chain='kt' AND position=5", SEAL_ON),
-        "chain kt, entry 5",
+        (SEAL_OFF, "DELETE FROM records_seal WHERE chain='kt' AND position=<p>", SEAL_ON),
+        "chain kt, entry <p>",
         "the place in the chain",
     ),
     Attack(
@@ -113,24 +140,24 @@ ATTACKS = (
         "delete: the middle is taken out and the rest moved up, links as they were",
         (
             SEAL_OFF,
-            "DELETE FROM records_seal WHERE chain='kt' AND position=5",
-            "UPDATE records_seal SET position = position + 1000 WHERE chain='kt' AND position > 5",
+            "DELETE FROM records_seal WHERE chain='kt' AND position=<p>",
+            "UPDATE records_seal SET position = position + 1000 WHERE chain='kt' AND position > <p>",
             "UPDATE records_seal SET position = position - 1001 WHERE chain='kt' AND position > 1000",
             SEAL_ON,
         ),
-        "chain kt, entry 5",
+        "chain kt, entry <p>",
         "the link to the entry before",
     ),
     Attack(
         "swap: two neighbours change places",
         (
             SEAL_OFF,
-            "UPDATE records_seal SET position = 1000 WHERE chain='kt' AND position=5",
-            "UPDATE records_seal SET position = 5 WHERE chain='kt' AND position=6",
-            "UPDATE records_seal SET position = 6 WHERE chain='kt' AND position=1000",
+            "UPDATE records_seal SET position = 1000 WHERE chain='kt' AND position=<p>",
+            "UPDATE records_seal SET position = <p> WHERE chain='kt' AND position=<q>",
+            "UPDATE records_seal SET position = <q> WHERE chain='kt' AND position=1000",
             SEAL_ON,
         ),
-        "chain kt, entry 5",
+        "chain kt, entry <p>",
         "the link to the entry before",
     ),
     Attack(
@@ -138,22 +165,22 @@ ATTACKS = (
         (
             SEAL_OFF,
             "UPDATE records_seal a SET entry = b.entry, digest = b.digest FROM records_seal b "
-            "WHERE a.chain='kt' AND b.chain='kt' AND (a.position, b.position) IN ((5, 8), (8, 5))",
+            "WHERE a.chain='kt' AND b.chain='kt' AND (a.position, b.position) IN ((<p>, <s>), (<s>, <p>))",
             SEAL_ON,
         ),
-        "chain kt, entry 5",
+        "chain kt, entry <p>",
         "position inside the entry",
     ),
     Attack(
         "insert: a forged entry is put in the middle, the rest moved down",
         (
             SEAL_OFF,
-            "UPDATE records_seal SET position = position + 1000 WHERE chain='kt' AND position > 5",
-            "SELECT forge('kt', 6)",
+            "UPDATE records_seal SET position = position + 1000 WHERE chain='kt' AND position > <p>",
+            "SELECT forge('kt', <q>)",
             "UPDATE records_seal SET position = position - 999 WHERE chain='kt' AND position > 1000",
             SEAL_ON,
         ),
-        "chain kt, entry 7",
+        "chain kt, entry <r>",
         "the link to the entry before",
     ),
     Attack(
@@ -167,16 +194,16 @@ ATTACKS = (
         (
             CHANGE_OFF,
             "INSERT INTO records_change (act_id, table_name, row_key, operation, image) "
-            "VALUES (act_at('kt', 5), 'scratch_thing', '999', 'insert', '{}')",
+            "VALUES (act_at('kt', <p>), 'scratch_thing', '999', 'insert', '{}')",
             CHANGE_ON,
         ),
-        "chain kt, entry 5",
+        "chain kt, entry <p>",
         "the changes of the act",
     ),
     Attack(
         "disable a trigger: a row is edited with its guards off, and they are put on again",
-        (THING_OFF, "UPDATE scratch_thing SET what = 'thing S' WHERE id = 105", THING_ON),
-        "row 105 of scratch_thing, last witnessed by chain kt, entry 5",
+        (THING_OFF, "UPDATE scratch_thing SET what = 'thing S' WHERE id = <id>", THING_ON),
+        "row <id> of scratch_thing, last witnessed by chain kt, entry <p>",
         "it differs in what",
         by="owner",
     ),
@@ -185,11 +212,11 @@ ATTACKS = (
         (
             THING_OFF,
             "ALTER TABLE scratch_part DISABLE TRIGGER USER",
-            "DELETE FROM scratch_thing WHERE id = 105",
+            "DELETE FROM scratch_thing WHERE id = <id>",
             "SELECT enable_always('scratch_part')",
             THING_ON,
         ),
-        "row 105 of scratch_thing, last witnessed by chain kt, entry 5",
+        "row <id> of scratch_thing, last witnessed by chain kt, entry <p>",
         "it is gone",
         by="owner",
     ),
@@ -208,15 +235,15 @@ ATTACKS = (
         "disable a trigger: a personal value is replaced with its guards off, salt and all",
         (
             "ALTER TABLE scratch_person DISABLE TRIGGER USER",
-            "UPDATE scratch_person SET name = 'S. Omebody' WHERE id = 6",
+            "UPDATE scratch_person SET name = 'S. Omebody' WHERE id = <t>",
             "SELECT enable_always('scratch_person')",
         ),
-        "row 6 of scratch_person, last witnessed by chain kt, entry 6",
+        "row <t> of scratch_person, last witnessed by chain kt, entry <t>",
         "it differs in name",
         by="owner",
     ),
     Attack(
-        "disable a trigger: the triggers are deaf for a session in replica mode (they are not: enabled always)",
+        "disable a trigger: a session in replica mode, to which ordinary triggers are deaf",
         (
             "SET session_replication_role = replica",
             "SELECT write_or_say('UPDATE scratch_thing SET what = ''x''')",
@@ -250,7 +277,8 @@ ATTACKS = (
         (
             "DROP TRIGGER refuse_delete ON scratch_thing",
             "ALTER TABLE records_guarded_table DISABLE TRIGGER USER",
-            "UPDATE records_guarded_table SET triggers = trigger_definitions(name) WHERE name = 'scratch_thing'",
+            "UPDATE records_guarded_table SET triggers = trigger_definitions(name) "
+            "WHERE name = 'scratch_thing'",
             "SELECT enable_always('records_guarded_table')",
         ),
         "row scratch_thing of records_guarded_table",
@@ -261,7 +289,8 @@ ATTACKS = (
         "disable a trigger: it is made anew with a condition that never holds",
         (
             "DROP TRIGGER refuse_delete ON scratch_thing",
-            "CREATE TRIGGER refuse_delete BEFORE DELETE ON scratch_thing FOR EACH STATEMENT WHEN (false) EXECUTE FUNCTION refuse_write()",
+            "CREATE TRIGGER refuse_delete BEFORE DELETE ON scratch_thing "
+            "FOR EACH STATEMENT WHEN (false) EXECUTE FUNCTION refuse_write()",
             "ALTER TABLE scratch_thing ENABLE ALWAYS TRIGGER refuse_delete",
         ),
         "guards",
@@ -271,7 +300,8 @@ ATTACKS = (
     Attack(
         "disable a trigger: its function is made to do nothing",
         (
-            "CREATE OR REPLACE FUNCTION refuse_write() RETURNS trigger LANGUAGE plpgsql AS 'BEGIN RETURN NULL; END'",
+            "CREATE OR REPLACE FUNCTION refuse_write() RETURNS trigger "
+            "LANGUAGE plpgsql AS 'BEGIN RETURN NULL; END'",
         ),
         "guards",
         "The body of the function refuse_write() is not that of the file",
@@ -322,7 +352,8 @@ DECLARE g record; BEGIN
         EXECUTE format('ALTER TABLE %I ENABLE ALWAYS TRIGGER %I', t, g.tgname); END LOOP; END $$;
 CREATE FUNCTION attacker.act_at(c text, p bigint) RETURNS uuid LANGUAGE sql AS
     'SELECT act_id FROM records_seal WHERE chain = c AND position = p';
-CREATE FUNCTION attacker.chain_anew(c text, p bigint, was text, becomes text) RETURNS void LANGUAGE plpgsql AS $$
+CREATE FUNCTION attacker.chain_anew(c text, p bigint, was text, becomes text) RETURNS void
+LANGUAGE plpgsql AS $$
 DECLARE s record; old_digest text; new_digest text; BEGIN
     UPDATE records_seal SET entry = replace(entry, was, becomes) WHERE chain = c AND position = p;
     FOR s IN SELECT * FROM records_seal WHERE chain = c AND position >= p ORDER BY position LOOP

@@ -5,12 +5,13 @@ keys and triggers of other purpose), so that nothing but the guards can refuse; 
 role. All of it is rolled back.
 """
 
-import datetime
+import datetime as dt
 import decimal
 import uuid
 from collections.abc import Callable, Iterator
 from contextlib import contextmanager
 from dataclasses import dataclass
+from typing import Any
 
 import psycopg
 from django.apps import apps
@@ -18,6 +19,7 @@ from django.contrib.postgres.fields import ArrayField, DateTimeRangeField
 from django.db import DatabaseError, connections, models, transaction
 from django.db.backends.postgresql.psycopg_any import DateTimeTZRange
 
+from records.act import _SEAL
 from tests.databases import connect
 
 ALIAS = "superuser"
@@ -25,7 +27,6 @@ OPERATOR = "matrix"
 # What a refusal may be: one of the guards (class TB), or no right to do that at all.
 REFUSALS = {"TB001", "TB004", "TB005", "42501"}
 OPEN = "SELECT act_open('{chain}', 'try-cell', 'service', 'service:matrix', '', '', 'matrix:1')"
-SEAL = "SET CONSTRAINTS ALL IMMEDIATE; SET CONSTRAINTS records_closing_seals IMMEDIATE; SET CONSTRAINTS ALL DEFERRED"
 
 
 @dataclass(frozen=True)
@@ -165,7 +166,8 @@ def merge_insert(cell: Cell) -> int:
     columns = _columns(cell.table)
     values = ", ".join(f"s.{column}" for column in columns.split(", "))
     cell.run(
-        f"MERGE INTO {cell.table.name} t USING matrix_rows s ON false WHEN NOT MATCHED THEN INSERT ({columns}) VALUES ({values})"
+        f"MERGE INTO {cell.table.name} t USING matrix_rows s ON false "
+        f"WHEN NOT MATCHED THEN INSERT ({columns}) VALUES ({values})"
     )
     return 2
 
@@ -173,7 +175,8 @@ def merge_insert(cell: Cell) -> int:
 def merge_update(cell: Cell) -> int:
     column = cell.table.operator_column
     cell.run(
-        f"MERGE INTO {cell.table.name} t USING (VALUES (1)) s (i) ON true WHEN MATCHED THEN UPDATE SET {column} = t.{column}"
+        f"MERGE INTO {cell.table.name} t USING (VALUES (1)) s (i) ON true "
+        f"WHEN MATCHED THEN UPDATE SET {column} = t.{column}"
     )
     return 1
 
@@ -209,46 +212,42 @@ def made(table: Table) -> models.Model:
     for field in table.model._meta.concrete_fields:
         if field.generated:
             continue
-        if field.attname == table.operator_column or field.column == table.operator_column:
+        filled = field.null or field.has_default() or field.db_default is not models.NOT_PROVIDED
+        if table.operator_column in {field.attname, field.column}:
             setattr(row, field.attname, f"m-{uuid.uuid4().hex[:12]}" if table.keyed_by_operator else OPERATOR)
-        elif field.primary_key or not (
-            field.null or field.has_default() or field.db_default is not models.NOT_PROVIDED
-        ):
-            if not isinstance(field, models.AutoField | models.BigAutoField):
-                setattr(row, field.attname, _value(field))
+        elif (field.primary_key or not filled) and not isinstance(field, models.AutoField):
+            setattr(row, field.attname, _value(field))
     return row
 
 
 _numbers = iter(range(900_000, 10_000_000))
 
 
-def _value(field: models.Field) -> object:
-    target = field
-    while isinstance(target, models.ForeignKey):
-        target = target.target_field
-    moment = datetime.datetime(2026, 12, 1, tzinfo=datetime.UTC)
-    if isinstance(target, models.DateTimeField):
-        return moment
-    if isinstance(target, models.DateField):
-        return moment.date()
-    if isinstance(target, DateTimeRangeField):
-        return DateTimeTZRange(moment, None)
-    if isinstance(target, models.UUIDField):
-        return uuid.uuid4()
-    if isinstance(target, models.BooleanField):
-        return True
-    if isinstance(target, models.IntegerField):
-        return next(_numbers) % 30_000 if isinstance(target, models.SmallIntegerField) else next(_numbers)
-    if isinstance(target, models.DecimalField):
-        return decimal.Decimal(1)
-    if isinstance(target, models.BinaryField):
-        return uuid.uuid4().bytes * 2
-    if isinstance(target, ArrayField):
-        return []
-    if isinstance(target, models.JSONField):
-        return {}
-    if isinstance(target, models.CharField | models.TextField):
-        return uuid.uuid4().hex[: (target.max_length or 32)]
+_MOMENT = dt.datetime(2026, 12, 1, tzinfo=dt.UTC)
+# A value for each kind of column, the narrower kinds first.
+_VALUES: tuple[tuple[type, Callable[[Any], object]], ...] = (
+    (models.DateTimeField, lambda _: _MOMENT),
+    (models.DateField, lambda _: _MOMENT.date()),
+    (DateTimeRangeField, lambda _: DateTimeTZRange(_MOMENT, None)),
+    (models.UUIDField, lambda _: uuid.uuid4()),
+    (models.BooleanField, lambda _: True),
+    (models.SmallIntegerField, lambda _: next(_numbers) % 30_000),
+    (models.IntegerField, lambda _: next(_numbers)),
+    (models.DecimalField, lambda _: decimal.Decimal(1)),
+    (models.BinaryField, lambda _: uuid.uuid4().bytes * 2),
+    (ArrayField, lambda _: []),
+    (models.JSONField, lambda _: {}),
+    (models.CharField, lambda field: uuid.uuid4().hex[: field.max_length or 32]),
+    (models.TextField, lambda _: uuid.uuid4().hex),
+)
+
+
+def _value(field: Any) -> object:
+    while isinstance(field, models.ForeignKey):
+        field = field.target_field
+    for kind, make in _VALUES:
+        if isinstance(field, kind):
+            return make(field)
     raise AssertionError(f"no value is known for {field}: say here what one looks like")
 
 
@@ -267,7 +266,7 @@ def laid_bare(table: Table) -> Iterator[Cell]:
             with cursor.copy(f"COPY matrix_rows ({_columns(table)}) FROM STDIN") as into:
                 into.write(lines)
             row.save(using=ALIAS, force_insert=True)
-            cursor.execute(SEAL)
+            cursor.execute(_SEAL)
             cursor.execute(_PARENT.format(table=table.name))
         yield Cell(table, row)
         transaction.set_rollback(True, using=ALIAS)
@@ -324,7 +323,8 @@ BEGIN
                WHERE indrelid = '{table}'::regclass AND indisunique AND NOT indisprimary LOOP
         EXECUTE format('DROP INDEX %s CASCADE', one.called);
     END LOOP;
-    FOR one IN SELECT tgname AS called FROM pg_trigger WHERE tgrelid = '{table}'::regclass AND NOT tgisinternal
+    FOR one IN SELECT tgname AS called FROM pg_trigger
+               WHERE tgrelid = '{table}'::regclass AND NOT tgisinternal
                AND tgname NOT LIKE 'witness\\_%' AND tgname NOT LIKE 'refuse\\_%' LOOP
         EXECUTE format('DROP TRIGGER %I ON {table}', one.called);
     END LOOP;

@@ -28,7 +28,8 @@ SELECT guard_table('scratch_thing', key => '{id}', mode => 'append', operator =>
 SELECT guard_table('scratch_part', key => '{thing_id,number}', mode => 'append', operator => 'operator_id');
 SELECT guard_table('scratch_person', key => '{id}', mode => 'edit', operator => 'operator_id',
                    personal => '{name,face}', hidden => '{password}');
-SELECT guard_table('scratch_span', key => '{id}', mode => 'close-once', operator => 'operator_id', closes => '{known}');
+SELECT guard_table('scratch_span', key => '{id}', mode => 'close-once', operator => 'operator_id',
+                   closes => '{known}');
 SELECT exempt_table('scratch_free', 'nothing hangs on it');
 """
 

@@ -81,7 +81,7 @@ def test_the_service_role_can_change_nothing_of_a_filed_document(change: str) ->
     _filed()
 
     with pytest.raises(Exception, match=r"permission denied|only ever added"):
-        _execute(f"UPDATE records_document SET {change}")  # noqa: S608  # fixed words above
+        _execute(f"UPDATE records_document SET {change}")  # fixed words above
 
 
 @pytest.mark.parametrize("wrong", [{"digest": "0" * 64}, {"size": 1}])

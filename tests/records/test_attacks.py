@@ -1,5 +1,7 @@
 """Whoever alters the trail is found out, and the right entry is named."""
 
+import os
+
 import pytest
 from django.db import DatabaseError, connections, transaction
 
@@ -8,6 +10,9 @@ from records.reconcile import reconcile
 from records.verify import altered_documents, follow_chains
 from tests.records.attacks import ATTACKS, TOOLS
 from tests.records.scratch import AMANI, NOTE, run
+
+# The long form, with 60 drawn places an attack, is asked for by name.
+TRIALS = 60 if os.environ.get("TAREBOOK_LONG_FORMS") == "1" else 2
 
 
 @pytest.fixture(scope="module")
@@ -53,8 +58,11 @@ def test_before_any_attack_all_is_sound():
 
 
 @pytest.mark.usefixtures("a_trail_of_twelve")
+@pytest.mark.parametrize("seed", range(TRIALS))
 @pytest.mark.parametrize("attack", [one for one in ATTACKS if one.says], ids=lambda one: one.description)
-def test_an_attack_is_found_and_the_right_place_is_named(attack):
+def test_an_attack_is_found_and_the_right_place_is_named(attack, seed):
+    attack = attack.drawn(seed)
+
     found = under_attack(attack.statements, attack.by)
 
     where, what = found[0]

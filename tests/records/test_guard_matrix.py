@@ -14,7 +14,8 @@ def test_every_table_is_in_the_list_of_guarded_or_of_exempt_tables():
     with connect("superuser") as admin:
         unlisted = admin.execute(
             "SELECT c.relname FROM pg_class c WHERE c.relnamespace = 'public'::regnamespace "
-            "AND c.relkind IN ('r', 'p', 'f') AND NOT EXISTS (SELECT FROM records_guarded_table g WHERE g.name = c.relname)"
+            "AND c.relkind IN ('r', 'p', 'f') "
+            "AND NOT EXISTS (SELECT FROM records_guarded_table g WHERE g.name = c.relname)"
         ).fetchall()
 
     assert unlisted == []

@@ -50,7 +50,8 @@ def test_many_clients_on_one_chain_leave_it_without_gaps_and_in_the_order_of_the
         # xmin rises with the order in which transactions got their number; what counts is that nobody linked
         # to a seal that was not yet committed: each link's predecessor is the one before, with its digest.
         unlinked = admin.execute(
-            "SELECT count(*) FROM records_seal s JOIN records_seal b ON b.chain = s.chain AND b.position = s.position - 1 "
+            "SELECT count(*) FROM records_seal s "
+            "JOIN records_seal b ON b.chain = s.chain AND b.position = s.position - 1 "
             "WHERE s.chain = 'busy' AND s.previous <> b.digest"
         ).fetchone()
     assert [place for (place,) in places] == list(range(1, clients * each + 1))
@@ -72,7 +73,8 @@ def test_whoever_commits_later_stands_later_even_if_its_act_began_first():
 
     with databases.connect("superuser") as admin:
         words = admin.execute(
-            "SELECT c.image::jsonb ->> 'what' FROM records_seal s JOIN records_change c ON c.act_id = s.act_id "
+            "SELECT c.image::jsonb ->> 'what' FROM records_seal s "
+            "JOIN records_change c ON c.act_id = s.act_id "
             "WHERE s.chain = 'order' ORDER BY s.position"
         ).fetchall()
     assert first is not None

@@ -57,7 +57,8 @@ def test_a_filed_document_whose_bytes_were_swapped_is_named(three_entries):
         admin.execute("ALTER TABLE records_document DISABLE TRIGGER USER")
         admin.execute("ALTER TABLE records_document DROP CONSTRAINT document_digest_fits_its_body")
         admin.execute(
-            "INSERT INTO records_document (digest, operator_id, about, title, media_type, size, renderer, body, salt, filed_at) "
+            "INSERT INTO records_document "
+            "(digest, operator_id, about, title, media_type, size, renderer, body, salt, filed_at) "
             "VALUES (repeat('a', 64), 'kt', 'load:1', 't', 'application/pdf', 3, '', '\\x616263', "
             "'\\x00112233445566778899aabbccddeeff', now())"
         )

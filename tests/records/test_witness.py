@@ -63,7 +63,8 @@ def test_a_key_of_several_columns_is_a_list():
 def test_a_statement_over_many_rows_leaves_one_change_for_each():
     with act(NOTE, by=AMANI, about="thing:1") as entry:
         run(
-            "INSERT INTO scratch_thing (operator_id, what) SELECT 'kt', 'row ' || i FROM generate_series(1, 500) i"
+            "INSERT INTO scratch_thing (operator_id, what) "
+            "SELECT 'kt', 'row ' || i FROM generate_series(1, 500) i"
         )
 
     assert Change.objects.filter(act_id=entry.id).count() == 500
@@ -135,7 +136,8 @@ def test_the_key_of_a_row_may_not_change():
 def test_a_row_may_be_closed_once():
     with act(NOTE, by=AMANI, about="span:1"):
         run(
-            "INSERT INTO scratch_span VALUES (1, 'kt', NULL, '[2026-01-01,)', 'a'), (2, 'kt', NULL, '[2026-01-01,infinity)', 'b')"
+            "INSERT INTO scratch_span VALUES (1, 'kt', NULL, '[2026-01-01,)', 'a'), "
+            "(2, 'kt', NULL, '[2026-01-01,infinity)', 'b')"
         )
     with act(NOTE, by=AMANI, about="span:1") as entry:
         run("UPDATE scratch_span SET known = tstzrange(lower(known), '2026-06-01')")
@@ -237,6 +239,7 @@ def test_the_right_to_update_a_row_that_closes_is_on_that_column_alone():
     with connection.cursor() as cursor:
         cursor.execute(
             "SELECT has_table_privilege('scratch_span', 'UPDATE'), "
-            "has_column_privilege('scratch_span', 'known', 'UPDATE'), has_column_privilege('scratch_span', 'what', 'UPDATE')"
+            "has_column_privilege('scratch_span', 'known', 'UPDATE'), "
+            "has_column_privilege('scratch_span', 'what', 'UPDATE')"
         )
         assert cursor.fetchone() == (False, True, False)
