@@ -1,7 +1,7 @@
 """Every measurement, one after the other: `python -m tests.bench`, or with names for some of them.
 
-Each runs in a process of its own, so that none warms or slows another. Ratios within one measurement count; times
-on a shared machine do not.
+Each runs in a process of its own, so that none warms or slows another. Ratios within one measurement count;
+times on a shared machine do not.
 """
 
 import subprocess
@@ -21,7 +21,7 @@ MEASUREMENTS = (
 
 
 def main(names: list[str]) -> int:
-    """This function will run the named measurements, or all, and return 1 if one of them could not or missed."""
+    """This function will run the named measurements, or all, and return 1 if one failed or missed."""
     unknown = [name for name in names if name not in MEASUREMENTS]
     if unknown:
         print(f"Not a measurement: {', '.join(unknown)}. There are: {', '.join(MEASUREMENTS)}.")

@@ -2,8 +2,8 @@
 
     python -m tests.bench.seconds_to_the_summary
 
-The folder of packages is there already: what is measured is database, queue, tables, people, aircraft, twelve flights
-and their papers. These are times, not ratios: they say something only beside each other.
+The folder of packages is there already: what is measured is database, queue, tables, people, aircraft, twelve
+flights and their papers. These are times, not ratios: they say something only beside each other.
 """
 
 import shutil
@@ -17,7 +17,7 @@ ROOT = Path(__file__).resolve().parents[2]
 
 
 def _seconds(folder: Path) -> tuple[float, float]:
-    """Return the seconds until the logins are printed, which is right after the summary, and until all is stopped."""
+    """Return the seconds until the logins are printed, right after the summary, and until all is stopped."""
     command = [
         sys.executable,
         "manage.py",
