@@ -81,3 +81,29 @@ def test_a_weight_off_the_envelope_is_mended_first():
     assert check.outcome == "fail"
     assert check.what_next == "Bring the weight within the envelope first, then assess again."
     assert "above the envelope at the same arm" in check.margin_text
+
+
+def test_a_move_that_would_break_the_lateral_limit_is_not_named():
+    document, basis = tail_heavy()
+    aside = tuple(place("NOSE-HOLD", 30, 250, 60) if one.id == "NOSE-HOLD" else one for one in basis.places)
+    across = envelope((-1, 4000), (-1, 7000), ("0.05", 7000), ("0.05", 4000), axis="lateral")
+    free = replace(basis, places=aside)
+    tied = replace(free, envelopes=(*basis.envelopes, across))
+
+    assert "nose hold" in assessed(document, free).check("cg.take-off").what_next
+    assert "nose hold" not in assessed(document, tied).check("cg.take-off").what_next
+    assert assessed(document, tied).check("lateral.take-off").outcome == "pass"
+
+
+def test_a_passenger_is_only_reseated_whole_and_into_a_free_seat_that_serves():
+    document, basis = tail_heavy(bags=1, aft="119.3")
+    document = {**document, "passengers": [
+        {**document["passengers"][0], "seat": "ROW2-L", "weight": {"value": 240, "unit": "lb"}},
+        {**document["passengers"][1], "seat": "ROW2-R"},
+    ]}  # fmt: skip
+    advice = assessed(document, basis).check("cg.take-off").what_next
+    reseated = {**document, "passengers": [{**document["passengers"][0], "seat": "COCKPIT-R"}]}
+    reseated["passengers"].append(document["passengers"][1])
+
+    assert advice == "Reseat the passenger from row2 l to cockpit r (at least 1804.7 lb in forward)."
+    assert assessed(reseated, basis).verdict == "within"

@@ -6,7 +6,19 @@ import pytest
 from hypothesis import given
 from hypothesis import strategies as st
 
-from loads.balance.rounding import against_maximum, against_minimum, between, printed, room
+from fleet.quantities import Unit
+from loads.balance.rounding import (
+    CHORD_PLACES,
+    LENGTH_PLACES,
+    MOMENT_PLACES,
+    VOLUME_PLACES,
+    WEIGHT_PLACES,
+    against_maximum,
+    against_minimum,
+    between,
+    printed,
+    room,
+)
 
 F = Fraction
 
@@ -86,3 +98,21 @@ def test_room_rounds_down_and_excess_rounds_up():
     assert room(F("41.96"), 1) == "41.9"
     assert room(F("-41.96"), 1) == "42"
     assert room(F("-0.0001"), 1) == "0.1"
+
+
+@pytest.mark.parametrize(
+    ("unit", "arm", "moment"),
+    [
+        (Unit.IN, "0.33", "0.3"),
+        (Unit.MM, "0.3", "0"),
+        (Unit.CM, "0.33", "0.3"),
+        (Unit.M, "0.3333", "0.333"),
+        (Unit.FT, "0.333", "0.33"),
+    ],
+)
+def test_every_unit_has_its_digits(unit, arm, moment):
+    assert printed(F(1, 3), LENGTH_PLACES[unit]) == arm
+    assert printed(F(1, 3), MOMENT_PLACES[unit]) == moment
+    assert [printed(F(1, 3), places) for places in (WEIGHT_PLACES, VOLUME_PLACES, CHORD_PLACES)] == [
+        "0.3"
+    ] * 3
