@@ -5,6 +5,7 @@ from dataclasses import dataclass
 from typing import Any
 
 from fleet.basis import Basis, Configuration
+from loads.web.form import ITEM_PARTS, LIMIT_PARTS, MOST_ROWS, SEAT_PARTS
 
 Choices = tuple[tuple[str, str], ...]
 
@@ -105,8 +106,13 @@ class Maker:
         )
 
     def choice(self, name: str, label: str, choices: Choices, *, first: str = "", title: str = "") -> Field:
-        """This function will return a list to choose from; `first` is chosen while nothing was typed."""
+        """This function will return a list to choose from; `first` is chosen while nothing was typed.
+
+        A word typed elsewhere that is in no list is added: left out, the browser would choose another for it.
+        """
         value = self.typed.get(name, first)
+        if value and value not in {word for word, _ in choices}:
+            choices = (*choices, (value, value))
         return Field(name, label, value, self.faults.get(name, ""), choices, title or label)
 
 
@@ -127,9 +133,13 @@ def _flight(make: Maker, zone: str) -> list[Field]:
 
 
 def _seat(make: Maker, seat_id: str, serves: str, weights: Choices) -> list[Field | None]:
-    """This function will return the inputs of one seat; None where the seat has no use for one."""
+    """This function will return the inputs of one seat; None where the seat has no use for one and none was
+    typed.
+    """
     prefix = f"seat:{seat_id}"
-    crew, passenger = serves != "passenger", serves != "crew"
+    typed = {part for part in SEAT_PARTS if make.typed.get(f"{prefix}:{part}")}
+    crew = serves != "passenger" or bool(typed & {"position", "person"})
+    passenger = serves != "crew" or bool(typed & {"infant", "infant_weight", "infant_how"})
     positions = POSITIONS if passenger else (("", "nobody"), *POSITIONS[1:])
     return [
         make.text(f"{prefix}:name", f"Name in {seat_id}", maximum=80),
@@ -190,10 +200,15 @@ def _limit(make: Maker, row: int, weights: Choices) -> list[Field]:
 
 
 def _rows_typed(typed: Mapping[str, str], prefix: str) -> int:
-    rows = [
-        int(name.split(":")[1]) for name in typed if name.startswith(prefix) and name.split(":")[1].isdigit()
-    ]
-    return max(rows, default=-1) + 1
+    """This function will return how many rows reach to the last one typed in, of those ever offered."""
+    return max(
+        (
+            row + 1
+            for row in range(MOST_ROWS)
+            if any(typed.get(f"{prefix}:{row}:{part}") for part in (*ITEM_PARTS, *LIMIT_PARTS))
+        ),
+        default=0,
+    )
 
 
 def lay_desk(
@@ -218,8 +233,8 @@ def lay_desk(
         ("", "choose"),
         *((place.id, place.name) for place in basis.places if place.id in configuration.places),
     )
-    item_rows = max(FEWEST_ITEM_ROWS, _rows_typed(typed, "item:") + EMPTY_ITEM_ROWS)
-    limit_rows = max(1, _rows_typed(typed, "limit:")) + 1
+    item_rows = min(MOST_ROWS, max(FEWEST_ITEM_ROWS, _rows_typed(typed, "item") + EMPTY_ITEM_ROWS))
+    limit_rows = min(MOST_ROWS, max(1, _rows_typed(typed, "limit")) + 1)
     return {
         "type": basis.aircraft_type,
         "configuration_name": configuration.name,

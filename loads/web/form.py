@@ -1,22 +1,46 @@
 """Between the page that declares a load and the document `tarebook.load/1`, both ways; no Django here.
 
 Inputs are named after what they hold: `seat:ROW1-L:weight`, `item:0:place`, `tank:LEFT-MAIN:quantity`.
-Nothing is filled in
-that was not typed: an empty weight stays absent and is refused by the reader of the document, with its field.
+Nothing is filled in that was not typed, and nothing typed is dropped: a line begun and not finished goes to
+the reader of the document as it is, which refuses it with its field.
 """
 
 from collections.abc import Mapping, Sequence
 from typing import Any
 
-# Far more rows than the page offers; a typed document is never cut short.
+# More rows than one load has; the page offers no row beyond, so what is typed is never cut short.
 MOST_ROWS = 200
 FUEL_FIGURES = ("taxi", "trip", "minimum_at_landing")
+LONGEST_COUNT = 9  # digits; a longer count stays text and is refused as one
+# What makes a line a line. A unit does not: lists of units always have one chosen.
+SEAT_PARTS = (
+    "name",
+    "weight",
+    "how",
+    "position",
+    "person",
+    "category",
+    "infant",
+    "infant_weight",
+    "infant_how",
+)
+ITEM_PARTS = ("kind", "what", "place", "how", "weight")
+LIMIT_PARTS = ("weight", "source")
 
 Typed = Mapping[str, str]
 
 
 def _clean(typed: Typed, name: str) -> str:
     return typed.get(name, "").strip()
+
+
+def _begun(typed: Typed, prefix: str, parts: Sequence[str]) -> bool:
+    return any(_clean(typed, f"{prefix}:{part}") for part in parts)
+
+
+def _count(typed: Typed, name: str, otherwise: str = "") -> int | str:
+    count = _clean(typed, name) or otherwise
+    return int(count) if count.isascii() and count.isdigit() and len(count) <= LONGEST_COUNT else count
 
 
 def _quantity(typed: Typed, name: str, unit_name: str) -> dict[str, str]:
@@ -37,55 +61,41 @@ class _Builder:
         person["how"] = _clean(self.typed, f"{prefix}:how")
         if _clean(self.typed, f"{prefix}:weight"):
             person["weight"] = _quantity(self.typed, f"{prefix}:weight", f"{prefix}:unit")
+        for part in ("category", "person"):
+            if word := _clean(self.typed, f"{prefix}:{part}"):
+                person[part] = word
+        if _begun(self.typed, prefix, ("infant", "infant_weight", "infant_how")):
+            person["lap_infant"] = self.infant(prefix)
+        parts = ("name", "weight", "how", "position", "person", "category")
+        self.field_of |= {f"{at}/{part}": f"{prefix}:{part}" for part in parts}
         self.field_of |= {
             at: f"{prefix}:name",
-            f"{at}/name": f"{prefix}:name",
-            f"{at}/weight": f"{prefix}:weight",
-            f"{at}/how": f"{prefix}:how",
+            f"{at}/lap_infant": f"{prefix}:infant",
+            f"{at}/lap_infant/weight": f"{prefix}:infant_weight",
+            f"{at}/lap_infant/how": f"{prefix}:infant_how",
         }
         return person
 
-    def crew(self, seat: str, at: str) -> dict[str, Any]:
-        """This function will return the crew member in `seat`."""
-        person = self.person(seat, at) | {"position": _clean(self.typed, f"seat:{seat}:position")}
-        self.field_of |= {f"{at}/position": f"seat:{seat}:position", f"{at}/person": f"seat:{seat}:person"}
-        if login := _clean(self.typed, f"seat:{seat}:person"):
-            person["person"] = login
-        return person
-
-    def passenger(self, seat: str, at: str) -> dict[str, Any]:
-        """This function will return the passenger in `seat`, with a lap infant when one is named."""
-        person = self.person(seat, at)
-        if category := _clean(self.typed, f"seat:{seat}:category"):
-            person["category"] = category
-        if infant := _clean(self.typed, f"seat:{seat}:infant"):
-            person["lap_infant"] = {"name": infant}
-            if _clean(self.typed, f"seat:{seat}:infant_weight"):
-                person["lap_infant"]["weight"] = _quantity(
-                    self.typed, f"seat:{seat}:infant_weight", f"seat:{seat}:unit"
-                )
-            if how := _clean(self.typed, f"seat:{seat}:infant_how"):
-                person["lap_infant"]["how"] = how
-        self.field_of |= {
-            f"{at}/category": f"seat:{seat}:category",
-            f"{at}/lap_infant/how": f"seat:{seat}:infant_how",
-            f"{at}/lap_infant": f"seat:{seat}:infant",
-            f"{at}/lap_infant/weight": f"seat:{seat}:infant_weight",
-        }
-        return person
+    def infant(self, prefix: str) -> dict[str, Any]:
+        """This function will return the infant on the lap of the person in a seat."""
+        infant: dict[str, Any] = {"name": _clean(self.typed, f"{prefix}:infant")}
+        if _clean(self.typed, f"{prefix}:infant_weight"):
+            infant["weight"] = _quantity(self.typed, f"{prefix}:infant_weight", f"{prefix}:unit")
+        if how := _clean(self.typed, f"{prefix}:infant_how"):
+            infant["how"] = how
+        return infant
 
     def people(self, seats: Sequence[str]) -> tuple[list[dict[str, Any]], list[dict[str, Any]]]:
         """This function will return crew and passengers: a seat with anything typed in it is taken."""
         crew: list[dict[str, Any]] = []
         passengers: list[dict[str, Any]] = []
         for seat in seats:
-            parts = ("name", "weight", "position", "infant")
-            if not any(_clean(self.typed, f"seat:{seat}:{part}") for part in parts):
+            if not _begun(self.typed, f"seat:{seat}", SEAT_PARTS):
                 continue
-            if _clean(self.typed, f"seat:{seat}:position"):
-                crew.append(self.crew(seat, f"/crew/{len(crew)}"))
+            if position := _clean(self.typed, f"seat:{seat}:position"):
+                crew.append(self.person(seat, f"/crew/{len(crew)}") | {"position": position})
             else:
-                passengers.append(self.passenger(seat, f"/passengers/{len(passengers)}"))
+                passengers.append(self.person(seat, f"/passengers/{len(passengers)}"))
         return crew, passengers
 
     def items(self) -> list[dict[str, Any]]:
@@ -93,7 +103,7 @@ class _Builder:
         found: list[dict[str, Any]] = []
         for row in range(MOST_ROWS):
             prefix = f"item:{row}"
-            if not any(_clean(self.typed, f"{prefix}:{part}") for part in ("what", "weight", "place")):
+            if not _begun(self.typed, prefix, ITEM_PARTS):
                 continue
             at = f"/items/{len(found)}"
             item: dict[str, Any] = {
@@ -102,8 +112,8 @@ class _Builder:
             if _clean(self.typed, f"{prefix}:weight"):
                 item["weight"] = _quantity(self.typed, f"{prefix}:weight", f"{prefix}:unit")
             found.append(item)
-            self.field_of |= {
-                f"{at}/{part}": f"{prefix}:{part}" for part in ("kind", "what", "place", "how", "weight")
+            self.field_of |= {f"{at}/{part}": f"{prefix}:{part}" for part in ITEM_PARTS} | {
+                at: f"{prefix}:what"
             }
         return found
 
@@ -138,18 +148,16 @@ class _Builder:
         found: list[dict[str, Any]] = []
         for row in range(MOST_ROWS):
             prefix = f"limit:{row}"
-            if not _clean(self.typed, f"{prefix}:weight"):
+            if not _begun(self.typed, prefix, LIMIT_PARTS):
                 continue
-            self.field_of |= {
-                f"/limits/{len(found)}/{part}": f"{prefix}:{part}" for part in ("at", "weight", "source")
+            at = f"/limits/{len(found)}"
+            self.field_of |= {f"{at}/{part}": f"{prefix}:{part}" for part in ("at", *LIMIT_PARTS)}
+            limit: dict[str, Any] = {
+                part: _clean(self.typed, f"{prefix}:{part}") for part in ("at", "source")
             }
-            found.append(
-                {
-                    "at": _clean(self.typed, f"{prefix}:at"),
-                    "weight": _quantity(self.typed, f"{prefix}:weight", f"{prefix}:unit"),
-                    "source": _clean(self.typed, f"{prefix}:source"),
-                }
-            )
+            if _clean(self.typed, f"{prefix}:weight"):
+                limit["weight"] = _quantity(self.typed, f"{prefix}:weight", f"{prefix}:unit")
+            found.append(limit)
         return found
 
 
@@ -171,15 +179,13 @@ def document_of(
         "/flight/leg": "leg",
         "/persons_on_board": "persons_on_board",
     }
-    leg = _clean(typed, "leg") or "1"
-    persons = _clean(typed, "persons_on_board")
     document: dict[str, Any] = {
         "schema": "tarebook.load/1",
         "aircraft": _clean(typed, "aircraft"),
         "configuration": _clean(typed, "configuration"),
         "flight": {part: _clean(typed, part) for part in flight_parts}
-        | {"leg": int(leg) if leg.isascii() and leg.isdigit() else leg, "departure": departure},
-        "persons_on_board": int(persons) if persons.isascii() and persons.isdigit() else persons,
+        | {"leg": _count(typed, "leg", "1"), "departure": departure},
+        "persons_on_board": _count(typed, "persons_on_board"),
         "crew": crew,
         "passengers": passengers,
         "items": builder.items(),
