@@ -39,10 +39,9 @@ def drawn_marks(marks: Sequence[Mark], x: Scale, y: Scale, right: float) -> list
         at, far = _free_place(place, taken, right)
         taken.append(_box(at, LETTER))
         if far:
-            parts += [
-                line(place, at, stroke_width=0.4),
-                element("circle", cx=at[0], cy=at[1], r=6, fill="#fff"),
-            ]
+            parts.append(line(place, at, stroke_width=0.4))
+        # A white ground keeps the letter legible on a line of the grid or an envelope.
+        parts.append(element("circle", cx=at[0], cy=at[1], r=5, fill="#fff"))
         parts.append(
             label(mark.letter, (at[0], at[1] + 3.8), text_anchor="middle", font_size=10.5, font_weight=700)
         )

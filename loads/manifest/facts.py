@@ -117,3 +117,8 @@ class Facts:
     seal: SealFacts
     statement: bytes
     digest: str
+
+
+def typed_sources(facts: Computed) -> tuple[str, ...]:
+    """This function will return the sources of stated limits, as typed: they stand inside our sentences."""
+    return tuple(limit["source"] for limit in facts.inputs.get("limits", ()))

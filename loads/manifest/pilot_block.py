@@ -6,7 +6,7 @@ from typing import Any
 
 from loads.balance.aboard import PILOT_IN_COMMAND
 from loads.balance.rounding import CHORD_PLACES
-from loads.manifest.facts import Computed, Facts
+from loads.manifest.facts import Computed, Facts, typed_sources
 from loads.manifest.figures import SPACE, column, figure, offset, percent_chord
 from loads.manifest.words import Words
 
@@ -46,7 +46,7 @@ def verdict_block(facts: Computed, words: Words) -> Block:
     return {
         "head": head,
         "sentence": sentence,
-        "weight": words.said(governing["weight"]),
+        "weight": words.said(governing["weight"], typed=typed_sources(facts)),
         "cg": words.said(governing["cg"]),
     }
 
@@ -62,7 +62,7 @@ def figures_block(facts: Facts, words: Words) -> Block:
         "take_off": figure(at["take-off"]["weight"]),
         "unit": units["weight"],
         "allowable": figure(allowable["weight"]) if allowable["weight"] else "no limit",
-        "governed_by": words.said(allowable["governed_by"]),
+        "governed_by": words.said(allowable["governed_by"], typed=typed_sources(facts)),
         "cg_arm": figure(at["take-off"]["arm"]),
         "cg_unit": units["length"],
         "cg_chord": figure(at["take-off"]["percent_chord"], CHORD_PLACES)

@@ -3,7 +3,7 @@
 from collections.abc import Iterable, Mapping
 from typing import Any
 
-from loads.manifest.facts import Computed, Facts
+from loads.manifest.facts import Computed, Facts, typed_sources
 from loads.manifest.figures import both_clocks, column, sided, utc
 from loads.manifest.ruler import ruler
 from loads.manifest.words import Words
@@ -94,7 +94,11 @@ def allowable(facts: Computed, words: Words) -> list[Row]:
     block = facts.result["allowable_take_off"]
     weights = column([one["weight"] for one in block["candidates"]])
     return [
-        {"name": words.said(one["name"]), "weight": weight, "least": one["name"] == block["governed_by"]}
+        {
+            "name": words.said(one["name"], typed=typed_sources(facts)),
+            "weight": weight,
+            "least": one["name"] == block["governed_by"],
+        }
         for one, weight in zip(block["candidates"], weights, strict=True)
     ]
 

@@ -6,7 +6,7 @@ numbered here, because only the list itself was read.
 """
 
 import re
-from collections.abc import Mapping
+from collections.abc import Iterable, Mapping
 from dataclasses import dataclass
 
 
@@ -20,10 +20,18 @@ class Words:
     rules: Mapping[str, str]
     rules_are: str
 
-    def said(self, text: str) -> str:
-        """This function will put a text of ours into this rule set's words; never give it a typed one."""
+    def said(self, text: str, *, typed: Iterable[str] = ()) -> str:
+        """This function will put a text of ours into this rule set's words.
+
+        Of what was typed nothing is changed: name in `typed` what may stand inside the text.
+        """
         if self.weight == "weight":
             return text
+        kept = sorted({part for part in typed if part}, key=len, reverse=True)
+        parts = re.split(f"({'|'.join(map(re.escape, kept))})", text) if kept else [text]
+        return "".join(part if place % 2 else self._put(part) for place, part in enumerate(parts))
+
+    def _put(self, text: str) -> str:
         text = re.sub(r"\boperating weight\b", self.operating, text)
         return re.sub(
             r"\b([Ww])eight(s?)\b", lambda m: f"{'M' if m[1] == 'W' else 'm'}ass{'es' if m[2] else ''}", text

@@ -170,6 +170,17 @@ def test_under_the_european_rule_set_it_speaks_of_mass_and_is_a4() -> None:
     assert _size(pdf_of(twin())) == LETTER
 
 
+def test_typed_words_are_left_as_they_were_typed() -> None:
+    stated = [{"at": "take-off", "weight": q(3600, "kg"), "source": "weight sheet 3 of the field"}]
+    facts = accepted(turboprop_load(limits=stated), "turboprop", rule_set="EU-UK")
+
+    text = " ".join(_pages(facts))
+
+    assert "governed by weight sheet 3 of the field" in text
+    assert "mass sheet" not in text
+    assert "take-off mass 3587 of 3600 kg" in text
+
+
 def test_the_longest_usual_paper_stays_on_two_pages() -> None:
     assert len(_pages(turboprop())) == 2
     assert len(_pages(helicopter())) == 2
