@@ -37,6 +37,29 @@ def canonical(document: object) -> bytes:
         raise NotCanonical("a text holds half a surrogate pair") from problem
 
 
+def canonical_of_exact(document: object) -> bytes:
+    """This function will return the bytes `canonical` returns, without looking at every value for what it
+    refuses.
+
+    For documents known to hold only texts, whole numbers within 2**53 - 1, Decimals, truth values and nulls
+    under text keys: what `records.strict_json` reads, and what our own code makes of texts. It is many times
+    faster.
+    """
+    text = json.dumps(
+        document, sort_keys=True, separators=(",", ":"), ensure_ascii=False, default=_text_of_decimal
+    )
+    # Below the surrogates Python's order of keys is the order of UTF-16 units.
+    if text.isascii() or max(text) < "\ud800":
+        return text.encode()
+    return canonical(document)
+
+
+def _text_of_decimal(value: object) -> str:
+    if isinstance(value, Decimal):
+        return decimal_text(value)
+    raise NotCanonical(f"{type(value).__name__} has no place in a document")
+
+
 def digest(document: object) -> str:
     """This function will return the SHA-256 of the canonical bytes as 64 lower-case hexadecimal digits."""
     return hashlib.sha256(canonical(document)).hexdigest()

@@ -2,6 +2,7 @@
 
 from dataclasses import dataclass
 from datetime import datetime
+from functools import lru_cache
 from uuid import UUID
 
 from fleet.models import Aircraft, EmptyWeight, LoadingBasis, Standing
@@ -28,9 +29,14 @@ def in_force_for(aircraft: Aircraft, at: datetime, known: datetime, configuratio
     Without a basis in force, or a configuration of that name in it, no base fit is known, so no empty
     weight is.
     """
-    version = basis_in_force(aircraft, at, known)
-    fit = fit_of(basis_of(version), configuration) if version else None
-    return InForce(version, empty_weight_in_force(aircraft, at, known, fit) if fit else None)
+    # Asked for every load, so: one query for what stands, and rows that never change are read once.
+    standing = Standing.objects.filter(aircraft=aircraft, valid__contains=at, known__contains=known)
+    versions = {(kind, fit): version for kind, fit, version in standing.values_list("kind", "fit", "version")}
+    if (LOADING_BASIS, "") not in versions:
+        return InForce(None, None)
+    basis = _loading_basis(versions[LOADING_BASIS, ""])
+    weight = versions.get((EMPTY_WEIGHT, fit_of(basis_of(basis), configuration) or ""))
+    return InForce(basis, _empty_weight(weight) if weight else None)
 
 
 def basis_in_force(aircraft: Aircraft, at: datetime, known: datetime) -> LoadingBasis | None:
@@ -53,6 +59,16 @@ def empty_weights_in_force(aircraft: Aircraft, at: datetime, known: datetime) ->
         aircraft=aircraft, kind=EMPTY_WEIGHT, valid__contains=at, known__contains=known
     )
     return tuple(EmptyWeight.objects.filter(id__in=standing.values("version")).order_by("fit"))
+
+
+@lru_cache(maxsize=256)
+def _loading_basis(version: UUID) -> LoadingBasis:
+    return LoadingBasis.objects.get(id=version)
+
+
+@lru_cache(maxsize=256)
+def _empty_weight(version: UUID) -> EmptyWeight:
+    return EmptyWeight.objects.get(id=version)
 
 
 def _standing(aircraft: Aircraft, kind: str, fit: str, at: datetime, known: datetime) -> UUID | None:

@@ -5,13 +5,16 @@ share.
 import secrets
 from uuid import UUID
 
+from django.db import models
+
+from loads.actions.identifier import new_load_id
+from loads.actions.together import insert_together
 from loads.balance.engine import ENGINE_VERSION
 from loads.models import Assessment, Declaration, Load, Step
 from loads.queries.answer import departure_text
 from loads.queries.computation import Computation
 from loads.queries.current import Current
 from records.act import Entry
-from records.canonical import canonical
 
 SALT_BYTES = 32
 
@@ -23,9 +26,9 @@ def keep_load(
     step.
     """
     flight = computation.outline.flight
-    load = Load.objects.create(
+    load = Load(
         id=number,
-        operator_id=entry.chain,
+        operator=computation.aircraft.operator,
         aircraft=computation.aircraft,
         configuration=computation.outline.configuration,
         reference=flight.reference,
@@ -39,35 +42,48 @@ def keep_load(
         replaces=replaces,
         submitted_at=entry.at,
     )
-    load.operator = computation.aircraft.operator
-    Declaration.objects.create(
+    declaration = Declaration(
         load=load,
         operator_id=entry.chain,
-        body=canonical(computation.document),
+        body=computation.inputs,
         salt=secrets.token_bytes(SALT_BYTES),
     )
-    return keep_assessment(entry, load, computation, after=None, by=by)
+    return _keep_opening(entry, load, computation, (load, declaration), after=None, by=by)
 
 
 def keep_assessment(
-    entry: Entry, load: Load, computation: Computation, *, after: Current | None, by: int | None
+    entry: Entry, load: Load, computation: Computation, *, after: Current, by: int | None
 ) -> Current:
     """This function will write an assessment and the step that brings it into use; `after` is where the load
     stood.
     """
-    assessment = Assessment.objects.create(
+    return _keep_opening(entry, load, computation, (), after=after, by=by)
+
+
+def _keep_opening(
+    entry: Entry,
+    load: Load,
+    computation: Computation,
+    before: tuple[models.Model, ...],
+    *,
+    after: Current | None,
+    by: int | None,
+) -> Current:
+    assessment = Assessment(
+        id=new_load_id(),
         operator_id=entry.chain,
         load=load,
         number=after.assessment.number + 1 if after else 1,
         verdict=computation.verdict,
-        result=canonical(computation.result).decode(),
+        result=computation.result_text.decode(),
+        salt=secrets.token_bytes(SALT_BYTES),
         digest=computation.digest,
         loading_basis=computation.basis,
         empty_weight=computation.empty_weight,
         engine=ENGINE_VERSION,
         assessed_at=entry.at,
     )
-    step = Step.objects.create(
+    step = Step(
         operator_id=entry.chain,
         load=load,
         number=after.step.number + 1 if after else 1,
@@ -79,4 +95,5 @@ def keep_assessment(
         at=entry.at,
         act=entry.id,
     )
+    step.id = insert_together((*before, assessment, step))
     return Current(load, step, assessment)

@@ -99,6 +99,7 @@ class Migration(migrations.Migration):
                 ("number", models.PositiveIntegerField()),
                 ("verdict", models.CharField(max_length=12)),
                 ("result", models.TextField()),
+                ("salt", models.BinaryField()),
                 ("digest", models.CharField(max_length=64)),
                 ("engine", models.CharField(max_length=20)),
                 ("assessed_at", models.DateTimeField()),

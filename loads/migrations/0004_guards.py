@@ -6,7 +6,8 @@ GUARDS = [
     "'loads_load', key => '{id}', mode => 'append', operator => 'operator_id'",
     # What was declared names people: the trail keeps a salted digest, so the paper can be destroyed when its time comes.
     "'loads_declaration', key => '{load_id}', mode => 'append', operator => 'operator_id', personal => '{body}'",
-    "'loads_assessment', key => '{id}', mode => 'append', operator => 'operator_id'",
+    # A result is long; a salted digest of it in the trail finds any change of it just as well.
+    "'loads_assessment', key => '{id}', mode => 'append', operator => 'operator_id', personal => '{result}'",
     "'loads_step', key => '{id}', mode => 'append', operator => 'operator_id'",
     "'loads_signature', key => '{id}', mode => 'append', operator => 'operator_id', personal => '{name,signed_from}'",
     "'loads_paper', key => '{load_id}', mode => 'append', operator => 'operator_id'",

@@ -19,7 +19,9 @@ class Assessment(models.Model):
     load = models.ForeignKey(Load, on_delete=models.PROTECT, related_name="assessments")
     number = models.PositiveIntegerField()
     verdict = models.CharField(max_length=12)
+    # Long, and covered by `digest`: the trail holds a salted digest of it, which keeps its entries short.
     result = models.TextField()
+    salt = models.BinaryField()
     digest = models.CharField(max_length=64)
     loading_basis = models.ForeignKey(LoadingBasis, on_delete=models.PROTECT, null=True)
     empty_weight = models.ForeignKey(EmptyWeight, on_delete=models.PROTECT, null=True)

@@ -4,7 +4,6 @@ from dataclasses import dataclass
 from datetime import datetime
 
 from fleet.models import Aircraft, EmptyWeight, LoadingBasis
-from fleet.queries.aircraft import aircraft_of
 from fleet.queries.figures import basis_of
 from fleet.queries.in_force import in_force_for
 from loads.balance.aboard import Outline
@@ -14,9 +13,9 @@ from loads.balance.engine import ENGINE_VERSION
 from loads.balance.shape import check_shape
 from loads.queries.crew import pilot_in
 from loads.queries.figures import empty_figures
-from loads.statement import statement
-from records.canonical import digest
-from records.refusal import Fault, Invalid, NotKnown
+from loads.statement import digest_from
+from records.canonical import canonical_of_exact
+from records.refusal import Fault, Invalid
 from records.strict_json import JSON
 
 
@@ -28,12 +27,14 @@ class Computation:
     """
 
     document: dict[str, JSON]
+    inputs: bytes  # the document, canonical
     outline: Outline
     aircraft: Aircraft
     pilot: int | None
     basis: LoadingBasis | None
     empty_weight: EmptyWeight | None
     result: dict[str, object]
+    result_text: bytes  # the result, canonical
     digest: str
 
     @property
@@ -49,10 +50,7 @@ def compute(operator: str, document: dict[str, JSON], known: datetime) -> Comput
     Raises Invalid with every fault found; an aircraft the operator has not entered is one.
     """
     outline = read_outline(document)
-    try:
-        aircraft = aircraft_of(operator, outline.aircraft)
-    except NotKnown as unknown:
-        raise Invalid(Fault("/aircraft", "unknown-aircraft", unknown.detail)) from unknown
+    aircraft = _aircraft_in(operator, outline)
     used = in_force_for(aircraft, outline.flight.departure, known, outline.configuration)
     basis = basis_of(used.basis) if used.basis else None
     if basis is None:
@@ -66,10 +64,31 @@ def compute(operator: str, document: dict[str, JSON], known: datetime) -> Comput
     )
     result = assess(declared, basis, empty).as_document()
     versions = versions_of(used.basis, used.empty_weight)
-    signed = statement(document, versions, ENGINE_VERSION, result)
+    inputs, result_text = canonical_of_exact(document), canonical_of_exact(result)
     return Computation(
-        document, outline, aircraft, pilot, used.basis, used.empty_weight, result, digest(signed)
+        document=document,
+        inputs=inputs,
+        outline=outline,
+        aircraft=aircraft,
+        pilot=pilot,
+        basis=used.basis,
+        empty_weight=used.empty_weight,
+        result=result,
+        result_text=result_text,
+        digest=digest_from(inputs, versions, ENGINE_VERSION, result_text),
     )
+
+
+def _aircraft_in(operator: str, outline: Outline) -> Aircraft:
+    found = (
+        Aircraft.objects.select_related("operator")
+        .filter(operator_id=operator, registration=outline.aircraft.upper())
+        .first()
+    )
+    if found is None:
+        detail = f"no aircraft {outline.aircraft} is entered; correct the registration, or enter the aircraft"
+        raise Invalid(Fault("/aircraft", "unknown-aircraft", detail))
+    return found
 
 
 def versions_of(basis: LoadingBasis | None, empty_weight: EmptyWeight | None) -> dict[str, object]:
