@@ -50,7 +50,7 @@ def declare(request: HttpRequest) -> HttpResponse:
     zone = zone_of(request)
     departure = _departure(typed, zone)
     table = _table(request, typed, departure)
-    if table is None or departure is None:
+    if table is None or (departure is None and request.method != "POST"):
         return _first_page(request, typed, departure)
     if request.method != "POST":
         return _desk_page(request, table, typed, zone)
@@ -81,7 +81,7 @@ def revise(request: HttpRequest, load: UUID) -> HttpResponse:
     typed = typed_in(request) if request.method == "POST" else copied
     departure = _departure(typed, zone)
     table = _table(request, typed, departure)
-    if table is None or departure is None or not _carries(declared, table):
+    if table is None or not _carries(declared, table):
         return render(
             request,
             "loads/declare.html",
@@ -126,18 +126,20 @@ def _table(request: HttpRequest, typed: Mapping[str, str], departure: datetime |
 def _basis(
     request: HttpRequest, typed: Mapping[str, str], departure: datetime | None
 ) -> tuple[Basis | None, Aircraft | None]:
-    if departure is None or not typed.get("aircraft"):
+    if not typed.get("aircraft"):
         return None, None
     try:
         aircraft = aircraft_of(operator_of(request), typed["aircraft"].strip())
     except NotKnown:
         return None, None
-    version = basis_in_force(aircraft, departure, timezone.now())
+    # A form sent without its time is shown again on what is in force now, with all that was typed.
+    now = timezone.now()
+    version = basis_in_force(aircraft, departure or now, now)
     return (basis_of(version) if version else None), aircraft
 
 
 def _first_page(request: HttpRequest, typed: Mapping[str, str], departure: datetime | None) -> HttpResponse:
-    basis, aircraft = _basis(request, typed, departure)
+    basis, aircraft = _basis(request, typed, departure) if departure else (None, None)
     context = {
         "heading": "Declare a load",
         "aircraft": all_aircraft(operator_of(request)),
@@ -150,11 +152,11 @@ def _first_page(request: HttpRequest, typed: Mapping[str, str], departure: datet
 
 
 def _document(
-    table: Table, typed: Mapping[str, str], departure: datetime
+    table: Table, typed: Mapping[str, str], departure: datetime | None
 ) -> tuple[dict[str, Any], dict[str, str]]:
     return document_of(
         typed,
-        departure=departure.isoformat(),
+        departure=departure.isoformat() if departure else "",
         seats=table.configuration.seats,
         tanks=[tank.id for tank in table.basis.tanks],
     )

@@ -175,7 +175,7 @@ def document_of(
     flight_parts = ("reference", "origin", "destination", "operation")
     builder.field_of |= {f"/flight/{part}": part for part in flight_parts}
     builder.field_of |= {
-        "/flight/departure": "time",
+        "/flight/departure": "time" if _clean(typed, "date") else "date",
         "/flight/leg": "leg",
         "/persons_on_board": "persons_on_board",
     }

@@ -12,6 +12,8 @@ from records.actor import Actor
 from records.refusal import NotAllowed
 
 View = Callable[..., HttpResponse]
+# Somebody without any duty may sign in and sees nothing, here as over the API.
+READ = "read"
 
 
 def actor_of(request: HttpRequest) -> Actor:
@@ -28,12 +30,22 @@ def operator_of(request: HttpRequest) -> str:
 
 
 def signed_in(view: View) -> View:
-    """This function will make `view` ask for a sign-in first and come back to the page afterwards."""
+    """This function will make `view` ask for a sign-in first and come back to the page afterwards.
+
+    Whoever is signed in and holds no duty is refused: raises NotAllowed.
+    """
 
     @wraps(view)
     def ask_first(request: HttpRequest, *args: Any, **kwargs: Any) -> HttpResponse:
-        if actor_of(request).kind == "person":
-            return view(request, *args, **kwargs)
-        return HttpResponseRedirect(f"{resolve_url('sign-in')}?next={quote(request.get_full_path())}")
+        actor = actor_of(request)
+        if actor.kind != "person":
+            return HttpResponseRedirect(f"{resolve_url('sign-in')}?next={quote(request.get_full_path())}")
+        if READ not in actor.may:
+            raise NotAllowed(
+                "read-not-allowed",
+                f"{actor.name} holds no duty, so there is nothing to see here.",
+                next_step="Have the operations manager grant a duty.",
+            )
+        return view(request, *args, **kwargs)
 
     return ask_first
