@@ -84,6 +84,14 @@ def test_the_service_role_may_not_loosen_a_guard(statement):
     assert outcome_of(statement, "default") == FORBIDDEN
 
 
+def test_the_closing_table_is_empty_between_transactions_and_not_logged():
+    with databases.connect("superuser") as admin:
+        assert admin.execute("SELECT count(*) FROM records_closing").fetchone() == (0,)
+        assert admin.execute(
+            "SELECT relpersistence FROM pg_class WHERE oid = 'records_closing'::regclass"
+        ).fetchone() == ("u",)
+
+
 def test_a_function_of_the_door_runs_with_its_own_search_path():
     with databases.connect("superuser") as admin:
         loose = admin.execute(

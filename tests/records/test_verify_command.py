@@ -7,6 +7,8 @@ from django.core.management import call_command
 from django.db import connections
 
 from records.act import act
+from records.chain import Finding
+from records.reconcile import reconcile
 from tests import databases
 from tests.records.scratch import AMANI, NOTE, make_tables, put
 
@@ -33,6 +35,26 @@ def test_a_sound_trail_ends_with_zero_and_tells_where_each_chain_ends(three_entr
     assert code == 0
     assert "chain kt: 3 entries hold, head " in said
     assert said.endswith("Sound: chains, filed documents, rows and guards all hold.\n")
+
+
+def test_acts_that_are_open_or_sealed_meanwhile_raise_no_false_alarm(three_entries, monkeypatch):
+    opening = "SELECT act_open('kt', 'note-thing', 'service', 'service:x', '', '', 'thing:9')"
+    writing = "INSERT INTO scratch_thing (operator_id, what) VALUES ('kt', 'meanwhile')"
+
+    def meanwhile(database: str) -> tuple[Finding, ...]:
+        with databases.connect("default") as other, other.transaction():
+            other.execute(opening)
+            other.execute(writing)
+        return reconcile(database)
+
+    monkeypatch.setattr("records.management.commands.verify.reconcile", meanwhile)
+    with databases.connect("default") as unfinished:
+        unfinished.execute("BEGIN")
+        unfinished.execute(opening)
+        unfinished.execute(writing)
+        code, said, _ = verified()
+
+    assert (code, "chain kt: 3 entries hold" in said) == (0, True)
 
 
 def test_a_broken_trail_ends_with_one_and_names_the_first_broken_place_with_both_values(three_entries):
