@@ -1,0 +1,50 @@
+"""Which acts the roles allow, over all rooms, and what no integration may, whatever it is given."""
+
+import fleet.acts
+import fleet.duties
+import loads.acts
+import loads.duties
+from service import allowed
+
+ALL = {kind.name for kind in (*fleet.acts.KINDS, *loads.acts.KINDS)}
+
+
+def test_every_act_that_a_role_allows_is_an_act():
+    for role in fleet.duties.ROLES:
+        assert allowed.to_person([role]) <= ALL | {"read"}
+
+
+def test_what_people_do_can_be_done_by_some_role():
+    # Operators are entered at set-up, manifests are filed by the worker; the rest is done by people.
+    somebody = allowed.to_person(fleet.duties.ROLES)
+
+    assert ALL - somebody == {"enter-operator", "file-manifest"}
+
+
+def test_no_role_reads_nothing_and_an_unknown_role_is_none():
+    assert allowed.to_person([]) == frozenset()
+    assert allowed.to_person(["emperor"]) == frozenset()
+    assert allowed.to_person(["auditor"]) >= {"read"}
+
+
+def test_an_integration_does_nothing_that_needs_a_person_even_with_every_role_and_scope():
+    acts = allowed.to_token(fleet.duties.ROLES, ALL | {"read", "sign"}, integration=True)
+
+    assert acts == {
+        "read",
+        "submit-load",
+        "revise-load",
+        "assess-load",
+        "withdraw-load",
+        "depart-load",
+        "enter-aircraft",
+        "enter-loading-basis",
+        "enter-empty-weight",
+    }
+    assert allowed.grantable(fleet.duties.ROLES, integration=True) == acts
+
+
+def test_the_scope_sign_is_to_be_had_by_who_signs_and_is_no_act():
+    assert "sign" in allowed.grantable(["pilot"], integration=False)
+    assert "sign" not in allowed.grantable(["auditor"], integration=False)
+    assert "sign" not in allowed.to_token(["pilot"], ["sign", "accept-load"], integration=False)
