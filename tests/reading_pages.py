@@ -8,6 +8,7 @@ from django.http import HttpResponse
 
 VOID = frozenset({"input", "meta", "link", "br", "col", "img", "hr"})
 HEADINGS = ("h1", "h2", "h3")
+WITHIN_A_LINE = frozenset({"a", "span", "strong", "title"})
 
 
 @dataclass
@@ -68,6 +69,7 @@ class Page(HTMLParser):
     def handle_starttag(self, tag: str, attrs: list[tuple[str, str | None]]) -> None:
         """This function will keep what a tag begins."""
         held = {name: value or "" for name, value in attrs}
+        self._part(tag)
         if tag == "form":
             self.forms.append(Form(held.get("action", ""), held.get("method", "get")))
         elif tag == "input":
@@ -84,6 +86,7 @@ class Page(HTMLParser):
 
     def handle_endtag(self, tag: str) -> None:
         """This function will keep the words of what ends, by what it was."""
+        self._part(tag)
         if tag == "select":
             self._select = None
         while self._stack:
@@ -105,6 +108,10 @@ class Page(HTMLParser):
         self._words.append(data)
         for _, _, parts in self._stack:
             parts.append(data)
+
+    def _part(self, tag: str) -> None:
+        if tag not in WITHIN_A_LINE:
+            self.handle_data(" ")
 
     def _input(self, held: dict[str, str]) -> None:
         form = self.forms[-1]
