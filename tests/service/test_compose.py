@@ -13,7 +13,6 @@ import yaml
 from service import compose_secrets, probe
 from service.bootstrap.environment import ROOT
 
-
 COMPOSE = ROOT / "docker-compose.yml"
 
 
