@@ -29,8 +29,8 @@ def insert_together(rows: Sequence[models.Model]) -> int:
         cursor.execute(plan[0], values)
         (number,) = cursor.fetchone()
     for row in rows:
-        row._state.adding = False  # noqa: SLF001 - the mark by which the model layer knows a stored row
-        row._state.db = connection.alias  # noqa: SLF001 - as above
+        row._state.adding = False  # noqa: SLF001  # the mark by which the model layer knows a stored row
+        row._state.db = connection.alias  # noqa: SLF001  # as above
     return int(number)
 
 
@@ -46,7 +46,7 @@ def _plan(kinds: tuple[type[models.Model], ...]) -> tuple[str, tuple[tuple[_Fiel
 def _fields(kind: type[models.Model], *, numbered: bool) -> tuple[_Field, ...]:
     return tuple(
         field
-        for field in kind._meta.concrete_fields  # noqa: SLF001 - Django's public way to ask a model
+        for field in kind._meta.concrete_fields  # noqa: SLF001  # Django's public way to ask a model
         if not field.generated and not (numbered and field.primary_key)
     )
 
@@ -55,5 +55,5 @@ def _insert(kind: type[models.Model], fields: Sequence[_Field]) -> str:
     quote = connection.ops.quote_name
     names = ", ".join(quote(str(field.column)) for field in fields)
     places = ", ".join(["%s"] * len(fields))
-    table = quote(kind._meta.db_table)  # noqa: SLF001 - as above
-    return f"INSERT INTO {table} ({names}) VALUES ({places})"  # noqa: S608 - names of our own models only
+    table = quote(kind._meta.db_table)  # noqa: SLF001  # as above
+    return f"INSERT INTO {table} ({names}) VALUES ({places})"  # noqa: S608  # names of our own models only

@@ -37,10 +37,10 @@ settings.configure(
 )
 django.setup()
 
-from rest_framework.renderers import JSONRenderer  # noqa: E402 - needs the settings above
-from rest_framework.request import Request  # noqa: E402
-from rest_framework.response import Response  # noqa: E402
-from rest_framework.views import APIView  # noqa: E402
+from rest_framework.renderers import JSONRenderer  # noqa: E402  # needs the settings above
+from rest_framework.request import Request  # noqa: E402  # as above
+from rest_framework.response import Response  # noqa: E402  # as above
+from rest_framework.views import APIView  # noqa: E402  # as above
 
 
 class Row(models.Model):

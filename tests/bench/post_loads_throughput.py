@@ -8,7 +8,7 @@ only the ratio of the two counts. The target is at least half the bare endpoint'
 `TAREBOOK_TEST_SERVER` (libpq address of a superuser of a PostgreSQL 18), or starts an embedded one.
 """
 
-import tests.environment  # noqa: F401 - the settings are read from it
+import tests.environment  # noqa: F401  # the settings are read from it
 
 # isort: split
 import http.client
@@ -34,14 +34,14 @@ from django.db import connections
 os.environ.setdefault("DJANGO_SETTINGS_MODULE", "service.settings")
 django.setup()
 
-from fleet.actions.issue_token import issue_token  # noqa: E402 - needs the settings above
-from service import roles  # noqa: E402
-from service.allowed import grantable  # noqa: E402
-from service.embedded import postgres  # noqa: E402
-from tests import databases  # noqa: E402
-from tests.cast import actor, cast  # noqa: E402
-from tests.loads.making import load_document  # noqa: E402
-from tests.makers import q, ready_aircraft  # noqa: E402
+from fleet.actions.issue_token import issue_token  # noqa: E402  # needs the settings above
+from service import roles  # noqa: E402  # as above
+from service.allowed import grantable  # noqa: E402  # as above
+from service.embedded import postgres  # noqa: E402  # as above
+from tests import databases  # noqa: E402  # as above
+from tests.cast import actor, cast  # noqa: E402  # as above
+from tests.loads.making import load_document  # noqa: E402  # as above
+from tests.makers import q, ready_aircraft  # noqa: E402  # as above
 
 CLIENTS, ROUNDS, SECONDS = 8, 5, 4.0
 ROOT = Path(__file__).resolve().parent.parent.parent

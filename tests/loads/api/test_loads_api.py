@@ -279,7 +279,7 @@ BAD = [
     (["persons_on_board"], 4, "/persons_on_board"),
     (["persons_on_board"], "3", "/persons_on_board"),
     (["configuration"], "six-seat", "/configuration"),
-    (["aircraft"], "Q9-XXX", "/aircraft"),
+    (["aircraft"], "Q9-ZZZ", "/aircraft"),
     (["aircraft"], 9, "/aircraft"),
     (["flight", "departure"], "2026-12-01T08:30:00", "/flight/departure"),
     (["flight", "departure"], "tomorrow", "/flight/departure"),
