@@ -15,6 +15,7 @@ import pytest
 from django.conf import settings
 from django.db import connections
 from django.test import TransactionTestCase
+from pytest_django import DjangoDbBlocker
 
 from service.embedded import postgres
 from tests import databases
@@ -26,7 +27,7 @@ def pytest_configure(config: pytest.Config) -> None:
     """Start the cluster once, before any worker is made, and use a password hasher that is quick."""
     settings.PASSWORD_HASHERS = ["django.contrib.auth.hashers.MD5PasswordHasher"]
     # A flush is a TRUNCATE, which our own triggers refuse.
-    TransactionTestCase._fixture_teardown = lambda _self: databases.emptied()  # type: ignore[method-assign]
+    TransactionTestCase._fixture_teardown = lambda _self: databases.emptied()
     if hasattr(config, "workerinput") or "TAREBOOK_TEST_SERVER" in os.environ or config.option.collectonly:
         return
     if getattr(config.option, "numprocesses", None):
@@ -42,26 +43,26 @@ def pytest_unconfigure(config: pytest.Config) -> None:
 
 
 @pytest.fixture(scope="session")
-def django_db_setup(django_db_blocker: object) -> Iterator[None]:
+def django_db_setup(django_db_blocker: DjangoDbBlocker) -> Iterator[None]:
     """This fixture will give this process a migrated database of its own."""
     if "TAREBOOK_TEST_SERVER" not in os.environ:
         _start_cluster()
-    with django_db_blocker.unblock(), databases.copied(os.environ.get("PYTEST_XDIST_WORKER", "main")):  # type: ignore[attr-defined]
+    with django_db_blocker.unblock(), databases.copied(os.environ.get("PYTEST_XDIST_WORKER", "main")):
         yield
         connections.close_all()
 
 
 @pytest.fixture(scope="module")
-def own_database(django_db_setup: None, django_db_blocker: object) -> Iterator[str]:
+def own_database(django_db_setup: None, django_db_blocker: DjangoDbBlocker) -> Iterator[str]:
     """This fixture will give a module a fresh database in which its tests really commit."""
-    with django_db_blocker.unblock(), databases.copied("own") as name:  # type: ignore[attr-defined]
+    with django_db_blocker.unblock(), databases.copied("own") as name:
         yield name
 
 
 @pytest.fixture
-def fresh_database(django_db_setup: None, django_db_blocker: object) -> Iterator[str]:
+def fresh_database(django_db_setup: None, django_db_blocker: DjangoDbBlocker) -> Iterator[str]:
     """This fixture will give one test a fresh database in which it really commits."""
-    with django_db_blocker.unblock(), databases.copied("fresh") as name:  # type: ignore[attr-defined]
+    with django_db_blocker.unblock(), databases.copied("fresh") as name:
         yield name
 
 

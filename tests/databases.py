@@ -61,7 +61,10 @@ def template() -> str:
     wanted = name(f"template_{_digest_of_what_makes_it()}")
     with psycopg.connect(server(), autocommit=True) as admin:
         admin.execute("SELECT pg_advisory_lock(%s)", [_BUILDING])
-        found = [row[0] for row in admin.execute("SELECT datname FROM pg_database")]
+        found = [str(row[0]) for row in admin.execute("SELECT datname FROM pg_database")]
+        for left in found:
+            if left.startswith(name("")) and left.rpartition("_")[2].isdigit() and _is_gone(left):
+                _drop(admin, left)
         if wanted not in found:
             for old in found:
                 if old.startswith(name("template_")):
@@ -102,6 +105,12 @@ def emptied() -> None:
     with psycopg.connect(server(), dbname=database) as connection:
         connection.execute("SET LOCAL lock_timeout = '20s'")
         connection.execute(_EMPTY)
+
+
+def _is_gone(database: str) -> bool:
+    """Whether the run whose process number ends this name is over: it was killed and left its copy."""
+    number = database.rpartition("_")[2]
+    return not database.startswith(name("template_")) and not Path(f"/proc/{number}").exists()
 
 
 def _digest_of_what_makes_it() -> str:

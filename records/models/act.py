@@ -18,7 +18,7 @@ class Act(models.Model):
     kind = models.TextField()
     actor_kind = models.TextField()
     actor_key = models.TextField()
-    name_digest = models.TextField(null=True)  # noqa: DJ001 - NULL is "no name was given", and is sealed as null
+    name_digest = models.TextField(null=True)  # noqa: DJ001  # NULL, sealed as null: no name
     capacity = models.TextField(blank=True)
     about = models.TextField()
     reason = models.TextField(blank=True)

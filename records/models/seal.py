@@ -18,7 +18,7 @@ class Seal(models.Model):
     )
     chain = models.TextField()
     position = models.BigIntegerField()
-    previous = models.TextField(null=True)  # noqa: DJ001 - NULL is "the first", and is sealed as null
+    previous = models.TextField(null=True)  # noqa: DJ001  # NULL, sealed as null: the first
     digest = models.TextField()
     entry = models.TextField()
 

@@ -34,11 +34,11 @@ def _seconds(work: Callable[[], None], turns: int) -> float:
 
 def measure() -> dict[str, float]:
     """This function will return the two ratios and the times they are made of (milliseconds)."""
-    from django.db import connection, transaction  # noqa: PLC0415 - Django is set up by now
+    from django.db import connection, transaction
 
-    from records.act import act  # noqa: PLC0415
-    from tests import databases  # noqa: PLC0415
-    from tests.records.scratch import AMANI, NOTE  # noqa: PLC0415
+    from records.act import act
+    from tests import databases
+    from tests.records.scratch import AMANI, NOTE
 
     with databases.connect("owner") as owner:
         owner.execute(TABLES.format("bench_guarded") + TABLES.format("bench_bare"))

@@ -39,7 +39,7 @@ class Tally:
 
 
 def _client(seed: int, until: float, tally: Tally, *, sealed: bool) -> None:
-    from tests import databases  # noqa: PLC0415 - Django is set up by now
+    from tests import databases
 
     draw, kind = random.Random(seed), "guarded" if sealed else "bare"
     with databases.connect("default") as connection:
@@ -54,7 +54,7 @@ def _client(seed: int, until: float, tally: Tally, *, sealed: bool) -> None:
 
 
 def _turn(connection: psycopg.Connection, kind: str, parent: int) -> tuple[UUID | None, float]:
-    from records.act import _SEAL  # noqa: PLC0415
+    from records.act import _SEAL
 
     with connection.transaction():
         connection.execute(f"SELECT FROM load_{kind}_parent WHERE id = %s FOR UPDATE", [parent])
@@ -89,7 +89,7 @@ def run(clients: int, seconds: float, *, sealed: bool) -> Tally:
 
 def make_tables() -> None:
     """This function will make the guarded tables and the bare ones."""
-    from tests import databases  # noqa: PLC0415
+    from tests import databases
 
     with databases.connect("owner") as owner:
         owner.execute(TABLES.format("guarded") + TABLES.format("bare"))
@@ -125,9 +125,9 @@ def out_of_order(around: list[tuple[float, float]]) -> int:
 
 def measure(seconds: float, clients: int) -> dict[str, object]:
     """This function will run both kinds in turns and return what was seen."""
-    from records.reconcile import reconcile  # noqa: PLC0415
-    from records.verify import follow_chains  # noqa: PLC0415
-    from tests import databases  # noqa: PLC0415
+    from records.reconcile import reconcile
+    from records.verify import follow_chains
+    from tests import databases
 
     make_tables()
     turns = 3

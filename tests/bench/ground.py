@@ -20,11 +20,11 @@ os.environ.setdefault("DJANGO_SETTINGS_MODULE", "service.settings")
 def database() -> Iterator[None]:
     """This function will give the measurement a database, and take it away again."""
     assert tests.environment.__name__  # its import set the environment that settings read
-    import django  # noqa: PLC0415 - only now does the environment stand
+    import django
 
     django.setup()
-    from service.embedded import postgres  # noqa: PLC0415
-    from tests import databases  # noqa: PLC0415
+    from service.embedded import postgres
+    from tests import databases
 
     own, folder = None, Path(tempfile.mkdtemp(prefix="tarebook-bench-"))
     if "TAREBOOK_TEST_SERVER" not in os.environ:
