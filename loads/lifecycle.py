@@ -1,13 +1,15 @@
-"""The states of a load and every step between them, as one table. Nothing here reads, writes or knows a clock.
+"""The states of a load and every step between them, as one table. Nothing here reads, writes or knows a
+clock.
 
 Laws of the table:
-1. Only a load whose verdict is `within` may be prepared, confirmed as loaded, or accepted; each of these is signed.
-2. Accepting is the pilot in command's alone; whether the signer is that pilot is asked where people are known.
+1. Only a load whose verdict is `within` may be prepared, confirmed as loaded, or accepted; each is signed.
+2. Accepting is the pilot in command's alone; who that is, is asked where people are known.
 3. A load is withdrawn, or superseded by a revision, only before it departed. After that nothing replaces it.
 4. `departed`, `superseded` and `withdrawn` have no way out.
 5. `loaded` stands between `prepared` and `accepted` only where a rule set asks for the loading supervisor.
-6. What the table does not list is refused. Only `open` leads to itself: a load assessed again takes a step, so that
-   whoever was about to sign the result before it is refused; one that was prepared opens again and is signed anew.
+6. What the table does not list is refused. Only `open` leads to itself: a load assessed again takes a step,
+   so that whoever was about to sign the result before it is refused; one that was prepared opens again and
+   is signed anew.
 
         open --> prepared --> accepted --> departed
                     |            ^
@@ -30,7 +32,7 @@ FIRST_STATE: State = "open"
 
 @dataclass(frozen=True, slots=True)
 class Step:
-    """One allowed step: the act that takes it, whether it needs the verdict `within`, and whose signature it is."""
+    """One allowed step: the act that takes it, whether it needs `within`, and whose signature it is."""
 
     start: State
     end: State
