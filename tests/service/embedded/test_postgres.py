@@ -145,6 +145,7 @@ def test_a_path_too_long_for_a_socket_gets_a_short_private_folder(tmp_path: Path
     assert stat.S_IMODE(one.socket_dir.stat().st_mode) == 0o700
     assert ask(one, "SELECT 1") == 1
     postgres.stop(one)
+    one.socket_dir.rmdir()
 
 
 def test_stopping_cuts_off_clients_and_leaves_no_process(tmp_path: Path):
