@@ -44,7 +44,8 @@ class Page(HTMLParser):
         self.alerts: list[str] = []
         self._stack: list[tuple[str, dict[str, str], list[str]]] = []
         self._words: list[str] = []
-        self._select: tuple[str, bool] | None = None
+        self._select = ""
+        self._chosen: str | None = None
         self.feed(response.content.decode())
         self.close()
         self.words = " ".join("".join(self._words).split())
@@ -76,7 +77,7 @@ class Page(HTMLParser):
             self._input(held)
         elif tag == "select":
             self.forms[-1].values[held["name"]] = ""
-            self._select = (held["name"], False)
+            self._select, self._chosen = held["name"], None
         elif tag == "option":
             self._option(held)
         elif tag == "button" and self.forms:
@@ -87,8 +88,6 @@ class Page(HTMLParser):
     def handle_endtag(self, tag: str) -> None:
         """This function will keep the words of what ends, by what it was."""
         self._part(tag)
-        if tag == "select":
-            self._select = None
         while self._stack:
             began, held, parts = self._stack.pop()
             words = " ".join("".join(parts).split())
@@ -122,9 +121,5 @@ class Page(HTMLParser):
 
     def _option(self, held: dict[str, str]) -> None:
         # Without a chosen one a browser sends the first.
-        assert self._select is not None
-        name, chosen = self._select
-        values = self.forms[-1].values
-        if "selected" in held or (not chosen and not values[name]):
-            values[name] = held.get("value", "")
-            self._select = (name, True if "selected" in held else chosen)
+        if "selected" in held or self._chosen is None:
+            self._chosen = self.forms[-1].values[self._select] = held.get("value", "")

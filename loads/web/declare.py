@@ -85,7 +85,7 @@ def revise(request: HttpRequest, load: UUID) -> HttpResponse:
         return render(
             request,
             "loads/declare.html",
-            {"heading": "Revise", "no_basis": NEXT_STEP, "typed": typed, "refusal": _not_here()},
+            {"heading": "Revise", "typed": typed, "refusal": _not_here(), "back": load},
             status=409,
         )
     if request.method != "POST":
