@@ -52,11 +52,11 @@ def cg_advice(declared: Declared, states: Mapping[Phase, State], held: Held, rea
     )
     best = min(working, key=lambda move: _enough(move, low, high) or move.weight, default=None)
     if best is None:
-        return f"Change the moment by at least {figure} {side}; no single move does it alone."
+        return f"Change the moment by at least {figure}, {side}; no single move does it alone."
     weight = _enough(best, low, high) or best.weight
     amount = f"{printed(weight, WEIGHT_PLACES, 'up')} {ready.weight}"
     verb = f"Reseat {best.what}" if best.whole else f"Move at least {amount} of {best.what}"
-    return f"{verb} from {best.start.name} to {best.end.name} (at least {figure} {side})."
+    return f"{verb} from {best.start.name} to {best.end.name}: a moment of at least {figure}, {side}."
 
 
 def _moment_wanted(states: Mapping[Phase, State], ready: Prepared) -> tuple[Fraction, Fraction] | None:

@@ -68,7 +68,7 @@ def insert(scene: Scene, table: str, row: dict[str, Any]) -> None:
         connection.cursor() as cursor,
     ):
         cursor.execute(
-            f"INSERT INTO {table} ({columns}) VALUES ({', '.join(['%s'] * len(row))})",  # noqa: S608  # our own names
+            f"INSERT INTO {table} ({columns}) VALUES ({', '.join(['%s'] * len(row))})",  # our own names
             list(row.values()),
         )
 
@@ -320,8 +320,8 @@ def test_every_constraint_named_in_words_is_tested() -> None:
 @pytest.mark.parametrize("model", [Aircraft, LoadingBasis, EmptyWeight, Approval])
 def test_the_service_role_cannot_change_or_delete_a_version(model: Any, scene: Scene) -> None:
     for statement in (
-        f"UPDATE {model._meta.db_table} SET operator_id = operator_id",  # noqa: S608  # our own names
-        f"DELETE FROM {model._meta.db_table}",  # noqa: S608  # our own names
+        f"UPDATE {model._meta.db_table} SET operator_id = operator_id",  # our own names
+        f"DELETE FROM {model._meta.db_table}",  # our own names
         f"TRUNCATE {model._meta.db_table} CASCADE",
     ):
         with (

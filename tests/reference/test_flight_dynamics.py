@@ -58,6 +58,12 @@ class Model:
         return PlainAircraft(weight, weight * along, weight * across, lines, tanks, DENSITY)
 
 
+@pytest.fixture(autouse=True)
+def _away_from_the_house(tmp_path: Path, monkeypatch: pytest.MonkeyPatch) -> None:
+    """The library writes the outputs its models ask for into the working folder."""
+    monkeypatch.chdir(tmp_path)
+
+
 def length(element: ET.Element, axis: str) -> Fraction:
     return Fraction(element.findtext(axis, "0").strip()) * INCHES[element.get("unit", "IN")]
 

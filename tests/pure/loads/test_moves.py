@@ -61,7 +61,7 @@ def test_where_no_single_move_does_it_the_moment_is_named():
     document, basis = tail_heavy(bags=60, aft="115")
     advice = assessed(document, basis).check("cg.take-off").what_next
 
-    assert re.fullmatch(r"Change the moment by at least [\d.]+ lb in forward; no single move .*", advice)
+    assert re.fullmatch(r"Change the moment by at least [\d.]+ lb in, forward; no single move .*", advice)
 
 
 def test_phases_that_cannot_be_mended_together_are_said_to_be_so():
@@ -105,5 +105,5 @@ def test_a_passenger_is_only_reseated_whole_and_into_a_free_seat_that_serves():
     reseated = {**document, "passengers": [{**document["passengers"][0], "seat": "COCKPIT-R"}]}
     reseated["passengers"].append(document["passengers"][1])
 
-    assert advice == "Reseat the passenger from row2 l to cockpit r (at least 1804.7 lb in forward)."
+    assert advice == "Reseat the passenger from row2 l to cockpit r: a moment of at least 1804.7 lb in, forward."
     assert assessed(reseated, basis).verdict == "within"
