@@ -8,5 +8,23 @@ from records.models.name import Name
 from records.models.outbox import Outbox
 from records.models.receipt import Receipt
 from records.models.seal import Closing, Seal
+from records.models.webhook import Webhook, WebhookSecret, WebhookStep
+from records.models.webhook_delivery import WebhookAttempt, WebhookDelivery, WebhookEvent
 
-__all__ = ["Act", "Change", "Closing", "Document", "GuardedTable", "Name", "Outbox", "Receipt", "Seal"]
+__all__ = [
+    "Act",
+    "Change",
+    "Closing",
+    "Document",
+    "GuardedTable",
+    "Name",
+    "Outbox",
+    "Receipt",
+    "Seal",
+    "Webhook",
+    "WebhookAttempt",
+    "WebhookDelivery",
+    "WebhookEvent",
+    "WebhookSecret",
+    "WebhookStep",
+]
