@@ -105,5 +105,6 @@ def test_a_passenger_is_only_reseated_whole_and_into_a_free_seat_that_serves():
     reseated = {**document, "passengers": [{**document["passengers"][0], "seat": "COCKPIT-R"}]}
     reseated["passengers"].append(document["passengers"][1])
 
-    assert advice == "Reseat the passenger from row2 l to cockpit r: a moment of at least 1804.7 lb in, forward."
+    told = "Reseat the passenger from row2 l to cockpit r: a moment of at least 1804.7 lb in, forward."
+    assert advice == told
     assert assessed(reseated, basis).verdict == "within"
