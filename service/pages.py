@@ -1,6 +1,7 @@
 """Signing in and out, and the values every page carries."""
 
-from typing import Any
+import re
+from typing import Any, Final
 from urllib.parse import urlsplit
 
 from django.contrib.auth import authenticate, login, logout
@@ -14,6 +15,9 @@ from fleet.actions.confirm_password import refuse_locked_out
 from fleet.models import Person
 from loads.cautions import CAUTIONS, INVENTED
 from records.refusal import LockedOut
+
+# What any login looks like. Anything else is nobody's, and the table that counts failures could not hold it.
+_LOGIN: Final = re.compile(r"[a-z0-9][a-z0-9._-]{1,59}")
 
 
 def page_context(request: HttpRequest) -> dict[str, Any]:
@@ -61,6 +65,8 @@ def _let_in(request: HttpRequest, name: str, password: str) -> Person | None:
 
     Whoever is locked out is told before the password is looked at, so that a try does not lengthen the wait.
     """
+    if _LOGIN.fullmatch(name) is None:
+        return None
     refuse_locked_out(request, name)
     person = authenticate(request, username=name, password=password)
     if isinstance(person, Person):
