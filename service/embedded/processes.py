@@ -36,23 +36,11 @@ def remember(child: "subprocess.Popen[bytes]") -> None:
 
 
 def identity_of(pid: int) -> Identity | None:
-    """Return the identity of a living process, or None when there is none (a dead, unreaped child counts as
-    none).
-    """
-    _reap(pid)
-    if _PROC.exists():
-        try:
-            fields = Path(f"/proc/{pid}/stat").read_text(errors="replace").rpartition(")")[2].split()
-        except (OSError, ValueError):
-            return None
-        # Fields 3 (state) and 22 (start time in clock ticks after boot) of proc(5); two stood before the
-        # bracket.
-        return None if fields[0] in "ZX" else Identity(pid, f"{_boot()}/{fields[19]}")
-    answer = subprocess.run(
-        ["ps", "-o", "stat=,lstart=", "-p", str(pid)], capture_output=True, text=True, check=False
-    )
-    state, _, started = answer.stdout.strip().partition(" ")
-    return Identity(pid, started.strip()) if started and not state.startswith("Z") else None
+    """Return the identity of a living process; None when there is none, or only a dead one nobody reaped."""
+    found = _look(pid)
+    if found is None:
+        _reap(pid)  # ours, or it would stay a zombie, and its Popen would warn of it when it is collected
+    return found
 
 
 def is_alive(identity: Identity) -> bool:
@@ -73,10 +61,7 @@ def command_of(pid: int) -> str:
             )
         except OSError:
             return ""
-    answer = subprocess.run(
-        ["ps", "-o", "command=", "-p", str(pid)], capture_output=True, text=True, check=False
-    )
-    return answer.stdout.strip()
+    return _ps("command=", pid).stdout.strip()
 
 
 def write_pid_file(path: Path, identity: Identity) -> None:
@@ -133,6 +118,18 @@ def wait_until_gone(identity: Identity, seconds: float) -> bool:
             return False
         time.sleep(0.02)
     return True
+
+
+def _look(pid: int) -> Identity | None:
+    if _PROC.exists():
+        try:
+            fields = Path(f"/proc/{pid}/stat").read_text(errors="replace").rpartition(")")[2].split()
+        except OSError:
+            return None
+        # Fields 3 (state) and 22 (start time in clock ticks after boot) of proc(5).
+        return None if fields[0] in "ZX" else Identity(pid, f"{_boot()}/{fields[19]}")
+    state, _, started = _ps("stat=,lstart=", pid).stdout.strip().partition(" ")
+    return Identity(pid, started.strip()) if started and not state.startswith("Z") else None
 
 
 def _reap(pid: int) -> None:
