@@ -14,6 +14,7 @@ ENTER_LOADING_BASIS = Kind("enter-loading-basis", "entered a loading basis")
 APPROVE_LOADING_BASIS = Kind("approve-loading-basis", "approved a loading basis")
 ENTER_EMPTY_WEIGHT = Kind("enter-empty-weight", "entered an empty weight")
 APPROVE_EMPTY_WEIGHT = Kind("approve-empty-weight", "approved an empty weight")
+CHANGE_SETTINGS = Kind("change-settings", "changed the operator's settings")
 
 KINDS = (
     ENTER_OPERATOR,
@@ -28,4 +29,5 @@ KINDS = (
     APPROVE_LOADING_BASIS,
     ENTER_EMPTY_WEIGHT,
     APPROVE_EMPTY_WEIGHT,
+    CHANGE_SETTINGS,
 )

@@ -27,6 +27,7 @@ _OWN = frozenset({acts.CHANGE_PASSWORD.name, acts.ISSUE_TOKEN.name, acts.REVOKE_
 _ENTERS = frozenset({acts.ENTER_AIRCRAFT.name, acts.ENTER_LOADING_BASIS.name, acts.ENTER_EMPTY_WEIGHT.name})
 _APPROVES = frozenset({acts.APPROVE_LOADING_BASIS.name, acts.APPROVE_EMPTY_WEIGHT.name})
 _PEOPLE = frozenset({acts.ENTER_PERSON.name, acts.GRANT_DUTY.name, acts.END_DUTY.name})
+_SETTLES = frozenset({acts.CHANGE_SETTINGS.name})
 
 ACTS_OF: Mapping[Role, frozenset[str]] = MappingProxyType(
     {
@@ -35,7 +36,7 @@ ACTS_OF: Mapping[Role, frozenset[str]] = MappingProxyType(
         "loading supervisor": _OWN,
         "maintenance": _OWN | _ENTERS,
         "records approver": _OWN | _APPROVES,
-        "operations manager": _OWN | _ENTERS | _APPROVES | _PEOPLE,
+        "operations manager": _OWN | _ENTERS | _APPROVES | _PEOPLE | _SETTLES,
         "auditor": _OWN,
         "integration": frozenset(),
     }

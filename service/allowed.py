@@ -18,6 +18,7 @@ SIGNATURES: Final = frozenset({loads.acts.PREPARE_LOAD.name, loads.acts.ACCEPT_L
 _NEEDS_A_PERSON: Final = SIGNATURES | {
     fleet.acts.APPROVE_LOADING_BASIS.name,
     fleet.acts.APPROVE_EMPTY_WEIGHT.name,
+    fleet.acts.CHANGE_SETTINGS.name,
     fleet.acts.ENTER_PERSON.name,
     fleet.acts.GRANT_DUTY.name,
     fleet.acts.END_DUTY.name,

@@ -2,11 +2,12 @@
 
 from django.urls import path
 
-from fleet.api import aircraft, empty_weights, loading_bases
+from fleet.api import aircraft, empty_weights, loading_bases, settings
 
 _ONE = "aircraft/<str:registration>"
 
 urlpatterns = [
+    path("settings", settings.SettingsEndpoint.as_view()),
     path("aircraft", aircraft.AircraftEndpoint.as_view()),
     path(_ONE, aircraft.OneAircraftEndpoint.as_view()),
     path(f"{_ONE}/configurations", aircraft.ConfigurationsEndpoint.as_view()),

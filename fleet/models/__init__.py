@@ -6,6 +6,7 @@ from fleet.models.duty import Duty
 from fleet.models.empty_weight import EmptyWeight
 from fleet.models.loading_basis import LoadingBasis
 from fleet.models.operator import Operator
+from fleet.models.operator_settings import OperatorSettings
 from fleet.models.person import Person
 from fleet.models.standing import Standing
 from fleet.models.token import Token
@@ -17,6 +18,7 @@ __all__ = [
     "EmptyWeight",
     "LoadingBasis",
     "Operator",
+    "OperatorSettings",
     "Person",
     "Standing",
     "Token",

@@ -8,11 +8,13 @@ import pytest
 from django.db import IntegrityError, ProgrammingError, connection, transaction
 
 from fleet import acts
+from fleet.actions.change_settings import change_settings
 from fleet.actions.enter_aircraft import enter_aircraft
 from fleet.actions.enter_empty_weight import enter_empty_weight
 from fleet.actions.enter_loading_basis import enter_loading_basis
 from fleet.entering import NewAircraft
 from fleet.models import Aircraft, Approval, EmptyWeight, LoadingBasis, Standing
+from fleet.settings_reading import read_settings
 from records.act import act
 from records.guard.refusals import FixedForGood
 from tests.cast import Cast, Strangers, actor, cast, strangers
@@ -47,6 +49,7 @@ def scene() -> Scene:
         actor(others.manager), NewAircraft("Q9-KTB", "Fenlark 9", "9-1", "aeroplane", 2, 4)
     )
     approved_basis, approved_weight = make_basis(people, aircraft), make_empty_weight(people, aircraft)
+    change_settings(actor(people.manager), read_settings({"reason": "first"}), seen="0")
     return Scene(
         people=people,
         others=others,
@@ -178,6 +181,29 @@ def token(scene: Scene, **changes: Any) -> dict[str, Any]:
     return row | changes
 
 
+def settings(scene: Scene, **changes: Any) -> dict[str, Any]:
+    row = {
+        "operator_id": scene.people.operator.code,
+        "number": 2,
+        "true_from": SOON,
+        "known_from": SOON,
+        "entered_by_id": scene.people.manager.id,
+        "reason": "test",
+        "last_minute_weight": "30",
+        "last_minute_unit": "kg",
+        "last_minute_persons": 1,
+        "weighing_threshold_percent": "0.5",
+        "operations_mail": [],
+        "salt": b"0" * 32,
+        "prepare_and_accept_by_one": True,
+        "estimates_may_be_signed": False,
+        "rule_set": "US",
+        "procedure": "manual",
+        "weight_method": "weighed",
+    }
+    return row | changes
+
+
 # What breaks each constraint: its name, the table, the row.
 BREAKS: dict[str, tuple[str, Any]] = {
     "approval_is_by_a_second_person": (
@@ -273,6 +299,23 @@ BREAKS: dict[str, tuple[str, Any]] = {
     "duty_is_of_the_persons_operator": ("duty", lambda s: duty(s, person_id=s.others.pilot.id)),
     "token_is_of_the_persons_operator": ("token", lambda s: token(s, person_id=s.others.pilot.id)),
     "token_expires_after_it_is_issued": ("token", lambda s: token(s, expires_at=SOON)),
+    "settings_number_is_taken_once": ("operatorsettings", lambda s: settings(s, number=1)),
+    "settings_count_from_one": ("operatorsettings", lambda s: settings(s, number=0)),
+    "settings_say_why": ("operatorsettings", lambda s: settings(s, reason="")),
+    "settings_bound_has_weight_unit_and_persons": (
+        "operatorsettings",
+        lambda s: settings(s, last_minute_unit=""),
+    ),
+    "settings_threshold_is_a_percentage": (
+        "operatorsettings",
+        lambda s: settings(s, weighing_threshold_percent="1e1"),
+    ),
+    "settings_rule_set_is_known": ("operatorsettings", lambda s: settings(s, rule_set="MARS")),
+    "settings_name_procedure_and_method": ("operatorsettings", lambda s: settings(s, procedure="")),
+    "settings_are_changed_within_the_operator": (
+        "operatorsettings",
+        lambda s: settings(s, entered_by_id=s.others.manager.id),
+    ),
 }
 # Unique keys that only serve as the target of a tie: their first column is the key of the table already.
 TARGETS = {
