@@ -6,4 +6,7 @@ from records.kind import Kind
 GUARD_TABLE = Kind("guard-table", "put a table under guard")
 EXEMPT_TABLE = Kind("exempt-table", "exempted a table from guard")
 
-KINDS = (GUARD_TABLE, EXEMPT_TABLE)
+# Done each minute by the scheduler: the last digest of the log of sign-ins goes into the chain.
+SEAL_ACCESS_LOG = Kind("seal-access-log", "sealed the log of sign-ins")
+
+KINDS = (GUARD_TABLE, EXEMPT_TABLE, SEAL_ACCESS_LOG)

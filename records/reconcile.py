@@ -11,6 +11,7 @@ from typing import Any
 
 from django.db import connections
 
+from records.access_log import broken_rows
 from records.chain import Finding
 from records.guard import missing_guards
 
@@ -65,9 +66,10 @@ ORDER BY s.chain, s.position, 1 LIMIT %(at_most)s
 
 
 def reconcile(using: str = "default") -> tuple[Finding, ...]:
-    """This function will compare the whole trail with itself, with the rows of every guarded table, and the
-    guards with
-    their definitions; it returns what does not fit, in that order. Runs inside a transaction of the caller.
+    """This function will compare the whole trail with itself, with the rows of every guarded table, the log
+    of sign-ins with what was sealed of it, and the guards with their definitions.
+
+    It returns what does not fit, in that order. Runs inside a transaction of the caller.
     """
     with connections[using].cursor() as cursor:
         cursor.execute(_SETTINGS)
@@ -75,6 +77,7 @@ def reconcile(using: str = "default") -> tuple[Finding, ...]:
         *_entries_and_their_rows(using),
         *_loose_ends(using),
         *_rows_of_today(using),
+        *broken_rows(using),
         *(Finding("guards", sentence, "as defined", "not so") for sentence in missing_guards(using)),
     )
 

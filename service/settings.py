@@ -89,6 +89,7 @@ CELERY_BROKER_TRANSPORT_OPTIONS = {
 }
 CELERY_BEAT_SCHEDULE = {
     "sweep-the-outbox": {"task": "records.tasks.sweep_outbox", "schedule": 20.0},
+    "seal-the-log-of-sign-ins": {"task": "records.tasks.seal_access_log", "schedule": 60.0},
     "forget-old-answers": {"task": "records.tasks.forget_old_answers", "schedule": 3600.0},
 }
 

@@ -1,5 +1,6 @@
 """The rows of the notary."""
 
+from records.models.access import Access, AccessSeal
 from records.models.act import Act
 from records.models.change import Change
 from records.models.document import Document
@@ -12,6 +13,8 @@ from records.models.webhook import Webhook, WebhookSecret, WebhookStep
 from records.models.webhook_delivery import WebhookAttempt, WebhookDelivery, WebhookEvent
 
 __all__ = [
+    "Access",
+    "AccessSeal",
     "Act",
     "Change",
     "Closing",
