@@ -1,10 +1,14 @@
-"""POST /api/v1/loads (20 items, computed, audited, sealed, its answer kept) against a bare DRF insert of one
-row.
+"""POST /api/v1/loads (20 items, computed, audited, sealed, its answer kept) against a bare endpoint that
+inserts one row.
 
     python -m tests.bench.post_loads_throughput
 
-Both run on granian with two workers, on one database, and are asked in turns by the same clients, so that
-only the ratio of the two counts. The target is at least half the bare endpoint's requests a second. Needs
+The judge is an endpoint of the same framework in the same server program (granian, two workers), on the same
+database, with the service's own settings and middleware: who asks is found out by token and the body is read
+strictly there, too, so that only the endpoint differs. A second judge is the same endpoint as a fresh project
+without any of that. All are asked in turns by the same clients, so that only ratios count. The target is at
+least half the first judge's requests a second. CPU is that of the server's processes, and of the database's
+sessions beside it, both as /proc tells them (Linux, a database on this machine). Needs
 `TAREBOOK_TEST_SERVER` (libpq address of a superuser of a PostgreSQL 18), or starts an embedded one.
 """
 
@@ -22,9 +26,11 @@ import threading
 import time
 import uuid
 from collections.abc import Iterator
-from contextlib import contextmanager
+from contextlib import ExitStack, contextmanager
+from dataclasses import dataclass
 from datetime import timedelta
 from pathlib import Path
+from typing import Any
 
 import django
 import psycopg
@@ -45,36 +51,83 @@ from tests.makers import q, ready_aircraft  # noqa: E402  # as above
 
 CLIENTS, ROUNDS, SECONDS = 8, 5, 4.0
 ROOT = Path(__file__).resolve().parent.parent.parent
-PORTS = {"loads": 8713, "bare": 8714}
+PORTS = {"loads": 8713, "bare": 8714, "fresh": 8715}
+TITLES = {"loads": "POST /loads", "bare": "bare, same house", "fresh": "bare, fresh project"}
+APPLICATIONS = {
+    "loads": "service.wsgi:application",
+    "bare": "tests.bench.bare_in_service:application",
+    "fresh": "tests.bench.bare_fresh:application",
+}
+_TICK = 1000 / os.sysconf("SC_CLK_TCK")  # milliseconds
+
+
+@dataclass(frozen=True)
+class Turn:
+    """What one turn saw: requests a second, and CPU milliseconds a request of server and database."""
+
+    rate: float
+    server: float
+    database: float
 
 
 def main() -> int:
-    """This function will print both rates, round by round, and their ratio."""
-    with _server(), databases.copied("bench") as database:
+    """This function will print the rates round by round, their ratios, and the CPU a request took."""
+    with _server(), databases.copied("bench") as database, ExitStack() as running:
         body, token = _scene()
-        with psycopg.connect(databases.server(), dbname=database, autocommit=True) as admin:
-            admin.execute(
-                "CREATE TABLE bench_row "
-                "(id bigserial PRIMARY KEY, reference varchar(80) NOT NULL, document jsonb NOT NULL)"
-            )
-            admin.execute(f"GRANT ALL ON bench_row, bench_row_id_seq TO {roles.SERVICE}")
+        admin = running.enter_context(psycopg.connect(databases.server(), dbname=database, autocommit=True))
+        admin.execute(
+            "CREATE TABLE bench_row "
+            "(id bigserial PRIMARY KEY, reference varchar(80) NOT NULL, document jsonb NOT NULL)"
+        )
+        admin.execute(f"GRANT ALL ON bench_row, bench_row_id_seq TO {roles.SERVICE}")
         connections.close_all()
-        with (
-            _granian("loads", "service.wsgi:application"),
-            _granian("bare", "tests.bench.bare_endpoint:application"),
-        ):
-            rates = {name: [] for name in PORTS}
+        servers = {name: running.enter_context(_granian(name, APPLICATIONS[name])) for name in PORTS}
+        turns: dict[str, list[Turn]] = {name: [] for name in PORTS}
+        for name in PORTS:
+            _rate(name, body, token, seconds=2.0)  # warm
+        for _ in range(ROUNDS):
             for name in PORTS:
-                _rate(name, body, token, seconds=2.0)  # warm
-            for _ in range(ROUNDS):
-                for name in PORTS:
-                    rates[name].append(_rate(name, body, token, seconds=SECONDS))
-    ratios = [loads / bare for loads, bare in zip(rates["loads"], rates["bare"], strict=True)]
-    print(f"{'round':>6} {'POST /loads':>12} {'bare insert':>12} {'ratio':>6}")
-    for number, (loads, bare) in enumerate(zip(rates["loads"], rates["bare"], strict=True), 1):
-        print(f"{number:>6} {loads:>10.0f}/s {bare:>10.0f}/s {loads / bare:>6.2f}")
-    print(f"median ratio {statistics.median(ratios):.2f} (target: 0.50 or more)")
+                turns[name].append(_turn(name, body, token, servers[name], admin))
+    _print(turns)
     return 0
+
+
+def _turn(name: str, body: str, token: str, server: int, admin: "psycopg.Connection[Any]") -> Turn:
+    before, begun = (_cpu_below(server), _cpu_of_sessions(admin)), time.monotonic()
+    rate = _rate(name, body, token, seconds=SECONDS)
+    requests = rate * (time.monotonic() - begun)
+    after = (_cpu_below(server), _cpu_of_sessions(admin))
+    return Turn(rate, (after[0] - before[0]) / requests, (after[1] - before[1]) / requests)
+
+
+def _print(turns: dict[str, list[Turn]]) -> None:
+    print(f"{'round':>6} " + " ".join(f"{TITLES[name]:>20}" for name in turns))
+    for number, row in enumerate(zip(*turns.values(), strict=True), 1):
+        print(f"{number:>6} " + " ".join(f"{turn.rate:>18.0f}/s" for turn in row))
+    for what in ("server", "database"):
+        means = [statistics.median(getattr(turn, what) for turn in turns[name]) for name in turns]
+        print(f"CPU ms a request, {what:<9}" + " ".join(f"{mean:>8.2f}" for mean in means))
+    for judge, wanted in (("bare", "target: 0.50 or more"), ("fresh", "no target")):
+        pairs = zip(turns["loads"], turns[judge], strict=True)
+        ratio = statistics.median(loads.rate / bare.rate for loads, bare in pairs)
+        print(f"median ratio to {TITLES[judge]}: {ratio:.2f} ({wanted})")
+
+
+def _cpu_below(process: int) -> float:
+    """CPU milliseconds of a process and its children until now."""
+    children = Path(f"/proc/{process}/task/{process}/children").read_text().split()
+    return _cpu_of(process) + sum(_cpu_below(int(child)) for child in children)
+
+
+def _cpu_of_sessions(admin: "psycopg.Connection[Any]") -> float:
+    """CPU milliseconds of all sessions of this database until now; every server keeps its own."""
+    sessions = admin.execute("SELECT pid FROM pg_stat_activity WHERE datname = current_database()").fetchall()
+    return sum(_cpu_of(pid) for (pid,) in sessions)
+
+
+def _cpu_of(process: int) -> float:
+    words = Path(f"/proc/{process}/stat").read_text().rpartition(")")[2].split()
+    return (int(words[11]) + int(words[12])) * _TICK  # utime and stime, proc(5)
 
 
 @contextmanager
@@ -117,7 +170,7 @@ def _scene() -> tuple[str, str]:
 
 
 @contextmanager
-def _granian(name: str, application: str) -> Iterator[None]:
+def _granian(name: str, application: str) -> Iterator[int]:
     place = connections.settings["default"]
     login = f"{place['USER']}:{place['PASSWORD']}"
     address = f"postgresql://{login}@:{place['PORT'] or 5432}/{place['NAME']}?host={place['HOST']}"
@@ -131,7 +184,7 @@ def _granian(name: str, application: str) -> Iterator[None]:
     process = subprocess.Popen(command, cwd=ROOT, env=environment)
     try:
         _wait_for(PORTS[name])
-        yield
+        yield process.pid
     finally:
         process.terminate()
         process.wait(20)
