@@ -64,8 +64,8 @@ def _stand_ins(folder: DataFolder) -> None:
 
 def _execute(arguments: list[str]) -> int:
     # Imported here, once the environment is set: importing Django's command line reads nothing before.
-    from django.core.management import execute_from_command_line  # noqa: PLC0415
-    from django.db import OperationalError  # noqa: PLC0415
+    from django.core.management import execute_from_command_line  # noqa: PLC0415 - only once the environment is set
+    from django.db import OperationalError  # noqa: PLC0415 - only once the environment is set
 
     try:
         execute_from_command_line(["manage.py", *arguments])

@@ -59,7 +59,7 @@ def main() -> int:
         ("both", best_ms(lambda: assess(read_load(document, basis), basis, empty).as_document())),
         ("digest of the statement", best_ms(lambda: digest_of(statement(document, {}, "1", result)))),
     )
-    print(f"{ITEMS} items, {len(basis.tanks)} tanks, {len(result['checks'])} checks: ms of CPU")  # type: ignore[arg-type]
+    print(f"{ITEMS} items, {len(basis.tanks)} tanks, {len(result['checks'])} checks: ms of CPU")  # type: ignore[arg-type] # a result is plain JSON
     for name, figure in rows:
         print(f"  {name:<34}{figure:7.3f}")
     print(f"  target for the first line: under {TARGET_MS} ms: {'met' if answer < TARGET_MS else 'MISSED'}")

@@ -54,10 +54,10 @@ def test_imports_are_absolute() -> None:
     assert relative == set()
 
 
-# What is switched off, by name, and then words: `# noqa: S603 - our own program`.
+# What is switched off, by its name, and then why in words.
 SWITCHED_OFF = re.compile(r"#\s*(type:\s*ignore|noqa|pragma: no cover)")
 WITH_A_REASON = re.compile(
-    r"#\s*(?:type:\s*ignore\[[^\]]+\]|noqa:\s*[A-Z]+\d+(?:\s*,\s*[A-Z]+\d+)*|pragma: no cover)[\s#-]+\w+ \w+"
+    r"#\s*(?:type:\s*ignore\[[^\]]+\]|noqa:\s*[A-Z]+\d+(?:\s*,\s*[A-Z]+\d+)*|pragma: no cover)[\s#-]+\S+ \S+"
 )
 
 

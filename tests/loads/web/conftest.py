@@ -11,7 +11,7 @@ from tests.makers import ready_aircraft
 @pytest.fixture(scope="module")
 def people(own_database: str, django_db_blocker: object) -> Cast:
     """This fixture will give the people of an operator that has one ready twin, Q9-KTB."""
-    with django_db_blocker.unblock():  # type: ignore[attr-defined]
+    with django_db_blocker.unblock():  # type: ignore[attr-defined] # a fixture without a type
         made = cast()
         ready_aircraft(made)
     return made

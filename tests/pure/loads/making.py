@@ -54,7 +54,7 @@ def tank(name: str, arm: str | int, capacity: str | int, lateral: str | int = 0)
 
 def seat(name: str, arm: str | int, lateral: str | int = 0, serves: str = "either", most: Any = 300) -> Seat:
     maximum = None if most == "absent" else limit(most)
-    return Seat(name, name.replace("-", " ").lower(), serves, F(arm), F(lateral), maximum, SOURCE)  # type: ignore[arg-type]
+    return Seat(name, name.replace("-", " ").lower(), serves, F(arm), F(lateral), maximum, SOURCE)  # type: ignore[arg-type] # words of tests
 
 
 def place(name: str, arm: str | int, most: Any = 400, lateral: str | int = 0) -> Place:
@@ -69,7 +69,7 @@ def envelope(
     phases: tuple[Phase, ...] = ALL_PHASES,
 ) -> Envelope:
     exact = tuple((F(x), F(y)) for x, y in points)
-    return Envelope(f"{axis}-{plane}", axis, phases, plane, exact, SOURCE)  # type: ignore[arg-type]
+    return Envelope(f"{axis}-{plane}", axis, phases, plane, exact, SOURCE)  # type: ignore[arg-type] # words of tests
 
 
 def twin() -> Basis:

@@ -29,7 +29,7 @@ def test_the_move_that_is_named_works_and_a_little_less_does_not():
     document, basis = tail_heavy()
     failed = assessed(document, basis)
     advice = failed.check("cg.take-off").what_next
-    amount = F(re.search(r"at least ([\d.]+) lb of baggage from aft hold to nose hold", advice)[1])  # type: ignore[index]
+    amount = F(re.search(r"at least ([\d.]+) lb of baggage from aft hold to nose hold", advice)[1])  # type: ignore[index] # fails if it is absent
 
     def moved(weight):
         rest = {"value": str(float(290 - weight)), "unit": "lb"}
