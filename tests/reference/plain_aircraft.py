@@ -100,7 +100,7 @@ class PlainAircraft:
             burn_order=order,
             taxi_order=order,
             limits=weights,
-            envelopes=(Envelope("all", "longitudinal", phases, "arm", around, SOURCE),),  # type: ignore[arg-type]
+            envelopes=(Envelope("all", "longitudinal", phases, "arm", around, SOURCE),),  # type: ignore[arg-type] # all five phases
             lateral_limits_entered=True,
             configurations=(
                 Configuration("one", "one", (), tuple(p.id for p in places), 0, "wheels", (), (), weights),

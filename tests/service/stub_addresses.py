@@ -67,7 +67,7 @@ class Asks(APIView):
     """Says who asks."""
 
     def get(self, request: Request) -> Response:
-        actor = request.actor  # type: ignore[attr-defined]
+        actor = request.actor  # type: ignore[attr-defined] # the middleware sets it
         return Response({"key": actor.key, "capacity": actor.capacity, "may": sorted(actor.may)})
 
     def post(self, request: Request) -> Response:
