@@ -8,7 +8,7 @@ written after that.
 """
 
 from collections.abc import Iterator
-from contextlib import contextmanager
+from contextlib import AbstractContextManager, contextmanager
 from contextvars import ContextVar
 from dataclasses import dataclass
 from datetime import datetime
@@ -27,8 +27,10 @@ request_id: ContextVar[str] = ContextVar("request_id", default="")
 _joinable: ContextVar[transaction.Atomic | None] = ContextVar("joinable", default=None)
 
 _OPEN = "SELECT act_id, opened FROM act_open(%s, %s, %s, %s, %s, %s, %s, %s, %s, %s)"
-# First every deferred check, which also moves the act to the closing table; then the seal, last; then back
-# to deferred, for the acts that may follow in the same transaction. One message, so one round trip.
+# Every deferred check, which also closes the act: the witnesses take no more rows for it. Then back to
+# deferred, for the acts that may follow in the same transaction.
+_CLOSE = "SET CONSTRAINTS ALL IMMEDIATE; SET CONSTRAINTS ALL DEFERRED"
+# The same and then the seal, as a commit does it.
 _SEAL = (
     "SET CONSTRAINTS ALL IMMEDIATE; "
     "SET CONSTRAINTS records_closing_seals IMMEDIATE; "
@@ -61,10 +63,7 @@ def act(kind: Kind, *, by: Actor, about: str, reason: str = "") -> Iterator[Entr
             next_step="Ask somebody who holds the duty, or have it granted.",
         )
     with refusals_named(), _transaction_of_an_act(kind):
-        entry = _open(kind, by, about, reason)
-        yield entry
-        with connection.cursor() as cursor:
-            cursor.execute(_SEAL)
+        yield _open(kind, by, about, reason)
 
 
 @contextmanager
@@ -75,7 +74,7 @@ def transaction_for_acts() -> Iterator[None]:
     It serves what must be stored together with an act (the answer to a request). An act that fails takes it
     all back.
     """
-    with refusals_named(), transaction.atomic(durable=True):
+    with refusals_named(), _sealed_transaction():
         token = _joinable.set(connection.atomic_blocks[-1])
         try:
             yield
@@ -83,13 +82,38 @@ def transaction_for_acts() -> Iterator[None]:
             _joinable.reset(token)
 
 
-def _transaction_of_an_act(kind: Kind) -> transaction.Atomic:
+def _transaction_of_an_act(kind: Kind) -> AbstractContextManager[None]:
     innermost = connection.atomic_blocks[-1] if connection.atomic_blocks else None
     if innermost is None or getattr(innermost, "_from_testcase", False):
-        return transaction.atomic(durable=True)
+        return _sealed_transaction()
     if innermost is _joinable.get():
-        return transaction.atomic(savepoint=False)
+        return _closed_act()
     raise ActMisplaced(f"the act {kind.name} was begun inside another act or a plain transaction")
+
+
+@contextmanager
+def _sealed_transaction() -> Iterator[None]:
+    """The durable transaction whose commit seals. The chain is locked from the seal to the commit, so the
+    database does both with nothing of ours between: waiting for this process to go on, however shortly, would
+    hold up every act of the operator.
+    """
+    committed = not connection.atomic_blocks  # a test case keeps its own transaction around everything
+    with transaction.atomic(durable=True):
+        yield
+        if not committed:
+            _run(_SEAL)
+
+
+@contextmanager
+def _closed_act() -> Iterator[None]:
+    with transaction.atomic(savepoint=False):
+        yield
+        _run(_CLOSE)
+
+
+def _run(statements: str) -> None:
+    with connection.cursor() as cursor:
+        cursor.execute(statements)
 
 
 def _open(kind: Kind, by: Actor, about: str, reason: str) -> Entry:

@@ -20,7 +20,8 @@ BEGIN
         RAISE EXCEPTION USING ERRCODE = 'TB002', MESSAGE = 'an act needs a READ COMMITTED transaction';
     END IF;
     IF EXISTS (SELECT FROM records_act a WHERE a.txid = pg_current_xact_id()
-               AND NOT EXISTS (SELECT FROM records_seal s WHERE s.act_id = a.id)) THEN
+               AND NOT EXISTS (SELECT FROM records_seal s WHERE s.act_id = a.id)
+               AND NOT EXISTS (SELECT FROM records_closing c WHERE c.act_id = a.id)) THEN
         RAISE EXCEPTION USING ERRCODE = 'TB002', MESSAGE = format('the act %s was opened inside another act', of_kind);
     END IF;
     IF by_name <> '' THEN

@@ -1,6 +1,8 @@
--- The seal, in two stages, at commit. A deferred trigger on records_act writes a row into records_closing; the deferred trigger of
--- that table is therefore last in the queue, after the deferred foreign-key checks, and seals. A seal in one stage would hold the
--- chain's lock while a foreign-key check waits for a row that another transaction holds while it waits for the chain.
+-- The seal, in two stages. A deferred trigger on records_act closes the act: it writes a row into records_closing, and from then on the
+-- witnesses take no more rows for this act. The deferred trigger of that table is therefore last in the queue, after the deferred
+-- foreign-key checks, and seals at commit. A seal in one stage would hold the chain's lock while a foreign-key check waits for a row
+-- that another transaction holds while it waits for the chain. An act may be closed long before its transaction ends (the answer to
+-- its request is kept beside it); sealed then, it would hold up the whole chain until a busy client finds the time to commit.
 
 CREATE OR REPLACE FUNCTION act_closes()
 RETURNS trigger LANGUAGE plpgsql SECURITY DEFINER SET search_path = public, pg_temp AS $$

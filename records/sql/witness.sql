@@ -1,4 +1,4 @@
--- The witnesses: AFTER, one call a statement, with transition tables, never deferrable, ENABLE ALWAYS. Each finds the unsealed
+-- The witnesses: AFTER, one call a statement, with transition tables, never deferrable, ENABLE ALWAYS. Each finds the open
 -- act of this very transaction and leaves one row in records_change for each row written.
 -- Arguments: key, personal text, personal bytes, hidden, closing columns (each an array), operator column.
 
@@ -39,9 +39,10 @@ BEGIN
         RAISE EXCEPTION USING ERRCODE = 'TB006', MESSAGE = format('the guard of %I is not set up as it must be', TG_TABLE_NAME);
     END IF;
     -- The unsealed one, since the number alone does not tell: a restored cluster starts low again, so that an old, sealed act may
-    -- carry the number of today.
+    -- carry the number of today. One that is closed waits for its seal and takes no more rows.
     SELECT a.id, a.chain INTO act FROM records_act a WHERE a.txid = pg_current_xact_id_if_assigned()
-        AND NOT EXISTS (SELECT FROM records_seal s WHERE s.act_id = a.id);
+        AND NOT EXISTS (SELECT FROM records_seal s WHERE s.act_id = a.id)
+        AND NOT EXISTS (SELECT FROM records_closing c WHERE c.act_id = a.id);
     IF NOT FOUND THEN
         PERFORM refuse_without_act(TG_TABLE_NAME);
     END IF;
@@ -84,9 +85,10 @@ BEGIN
         RAISE EXCEPTION USING ERRCODE = 'TB006', MESSAGE = format('the guard of %I is not set up as it must be', TG_TABLE_NAME);
     END IF;
     -- The unsealed one, since the number alone does not tell: a restored cluster starts low again, so that an old, sealed act may
-    -- carry the number of today.
+    -- carry the number of today. One that is closed waits for its seal and takes no more rows.
     SELECT a.id, a.chain INTO act FROM records_act a WHERE a.txid = pg_current_xact_id_if_assigned()
-        AND NOT EXISTS (SELECT FROM records_seal s WHERE s.act_id = a.id);
+        AND NOT EXISTS (SELECT FROM records_seal s WHERE s.act_id = a.id)
+        AND NOT EXISTS (SELECT FROM records_closing c WHERE c.act_id = a.id);
     IF NOT FOUND THEN
         PERFORM refuse_without_act(TG_TABLE_NAME);
     END IF;

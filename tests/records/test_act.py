@@ -242,12 +242,28 @@ def test_raw_sql_without_the_python_door_is_sealed_at_commit_all_the_same():
         assert superuser.execute("SELECT count(*) FROM records_closing").fetchone() == (0,)
 
 
-def test_a_cursor_of_django_sees_its_own_seal_before_commit():
+def test_an_act_inside_the_transaction_for_acts_is_closed_at_its_end_and_sealed_with_the_commit():
     with transaction_for_acts():
         with act(NOTE, by=AMANI, about="thing:1") as entry:
-            put()
-        assert seal_of(entry.id) is not None
+            number = put()
+        assert seal_of(entry.id) is None
+        with databases.connect("default") as other:  # while the chain is free for everybody else
+            other.execute("SET lock_timeout = '5s'")
+            other.execute("SELECT act_open('kt', 'note-thing', 'service', 'service:x', '', '', 'thing:2nd')")
         assert connection.in_atomic_block
+
+    sealed, quicker = seal_of(entry.id), seal_of(Act.objects.get(about="thing:2nd").id)
+    assert f'"table":"scratch_thing","key":"{number}"' in Seal.objects.get(act_id=entry.id).entry
+    assert sealed.position > quicker.position
+
+
+def test_an_act_closed_by_hand_takes_no_more_rows():
+    with pytest.raises(NoOpenAct), act(NOTE, by=AMANI, about="thing:1"):
+        put()
+        run("SET CONSTRAINTS ALL IMMEDIATE")
+        put("too late")
+
+    assert run("SELECT count(*) FROM scratch_thing WHERE what = 'too late'") == [(0,)]
 
 
 def test_kinds_are_the_permission():
