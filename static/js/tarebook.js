@@ -2,22 +2,18 @@
 // and one press only on forms that store something.
 "use strict";
 
-function cellInputs(table) {
-  return Array.from(table.tBodies).flatMap((body) => Array.from(body.rows)).map((row) =>
-    Array.from(row.querySelectorAll("input:not([type=hidden]):not([type=checkbox])")));
-}
+const TYPED_IN = "input:not([type=hidden]):not([type=checkbox])";
 
 function moveFocus(event) {
   const step = { ArrowUp: -1, ArrowDown: 1 }[event.key];
   if (!step || event.altKey || event.ctrlKey || event.metaKey || event.target.tagName !== "INPUT") return;
-  const rows = cellInputs(event.currentTarget).filter((inputs) => inputs.length > 0);
-  const row = rows.findIndex((inputs) => inputs.includes(event.target));
-  if (row < 0) return;
-  const column = rows[row].indexOf(event.target);
-  const next = rows[row + step];
-  if (!next) return;
+  const cell = event.target.closest("td");
+  // By column, not by count: a row may lack an input that its neighbour has.
+  const column = Array.from(event.currentTarget.tBodies).flatMap((body) => Array.from(body.rows))
+    .map((row) => row.cells[cell.cellIndex]?.querySelector(TYPED_IN)).filter(Boolean);
+  const target = column[column.indexOf(event.target) + step];
+  if (!target) return;
   event.preventDefault();
-  const target = next[Math.min(column, next.length - 1)];
   target.focus();
   target.select();
 }
