@@ -9,6 +9,7 @@ from types import MappingProxyType
 from typing import Literal, get_args
 
 from fleet import acts
+from records.acts import WEBHOOK_KINDS
 
 Role = Literal[
     "pilot",
@@ -28,6 +29,8 @@ _ENTERS = frozenset({acts.ENTER_AIRCRAFT.name, acts.ENTER_LOADING_BASIS.name, ac
 _APPROVES = frozenset({acts.APPROVE_LOADING_BASIS.name, acts.APPROVE_EMPTY_WEIGHT.name})
 _PEOPLE = frozenset({acts.ENTER_PERSON.name, acts.GRANT_DUTY.name, acts.END_DUTY.name})
 _SETTLES = frozenset({acts.CHANGE_SETTINGS.name})
+# Who is told of events: a manager decides it, and an integration that was given the scope may for itself.
+_WEBHOOKS = frozenset(kind.name for kind in WEBHOOK_KINDS)
 
 ACTS_OF: Mapping[Role, frozenset[str]] = MappingProxyType(
     {
@@ -36,9 +39,9 @@ ACTS_OF: Mapping[Role, frozenset[str]] = MappingProxyType(
         "loading supervisor": _OWN,
         "maintenance": _OWN | _ENTERS,
         "records approver": _OWN | _APPROVES,
-        "operations manager": _OWN | _ENTERS | _APPROVES | _PEOPLE | _SETTLES,
+        "operations manager": _OWN | _ENTERS | _APPROVES | _PEOPLE | _SETTLES | _WEBHOOKS,
         "auditor": _OWN,
-        "integration": frozenset(),
+        "integration": _WEBHOOKS,
     }
 )
 

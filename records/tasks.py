@@ -1,12 +1,15 @@
 """Work the scheduler starts: looking for promised work that is not done."""
 
 import logging
+from uuid import UUID
 
 from celery import shared_task
 from django.db.models.functions import Now
 
 from records import access_log, outbox
 from records.models.receipt import KEPT_FOR, Receipt
+from records.webhooks.deliver import deliver_due, due_webhooks
+from records.webhooks.waking import DELIVERING, wake
 
 log = logging.getLogger(__name__)
 
@@ -41,3 +44,15 @@ def forget_old_answers() -> int:
 def seal_access_log() -> int:
     """This function will seal the log of sign-ins of every chain where it grew, and count them."""
     return access_log.seal_log()
+
+
+@shared_task(name=DELIVERING, ignore_result=True)
+def deliver_to_webhook(webhook: str) -> int:
+    """This function will try what is due to one subscription, and return how many were tried."""
+    return deliver_due(UUID(webhook))
+
+
+@shared_task(name="records.tasks.sweep_webhooks", ignore_result=True)
+def sweep_webhooks() -> int:
+    """This function will wake a worker for each subscription with something due, and count those woken."""
+    return wake(str(webhook) for webhook in due_webhooks(MOST_AT_ONCE))

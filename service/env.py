@@ -1,9 +1,13 @@
 """Typed readers of environment variables. Nonsense stops the start with a sentence that names it."""
 
 import os
+import re
+from collections.abc import Iterable
 from pathlib import Path
 from typing import Any
 from urllib.parse import parse_qsl, unquote, urlsplit
+
+_HOST = re.compile(r"[a-z0-9_.-]+|\[[0-9a-f:]+\]")
 
 
 class SettingRefused(SystemExit):
@@ -48,6 +52,16 @@ def whole(name: str, default: int, *, low: int, high: int) -> int:
 def words(name: str, default: str) -> list[str]:
     """This function will read a comma-separated list; empty words are dropped."""
     return [word.strip() for word in text(name, default).split(",") if word.strip()]
+
+
+def places(name: str, given: Iterable[str]) -> frozenset[str]:
+    """This function will check that each word is `host:port` (`[::1]:9000` for an IPv6 address)."""
+    found = frozenset(word.lower() for word in given)
+    for word in found:
+        host, _, port = word.rpartition(":")
+        if not _HOST.fullmatch(host) or not (port.isdigit() and 0 < int(port) <= 65535):  # noqa: PLR2004  # the last port
+            raise SettingRefused(f"{name} must hold words like relay.example.org:8443, not {word!r}.")
+    return found
 
 
 def database(name: str, default: str | None = None) -> dict[str, Any]:

@@ -6,6 +6,8 @@ ATOMIC_REQUESTS stays off: the door (records.act) opens the one durable transact
 from pathlib import Path
 from typing import Any
 
+import fleet.events
+import loads.events
 from service import env
 
 BASE_DIR = Path(__file__).resolve().parent.parent
@@ -90,8 +92,21 @@ CELERY_BROKER_TRANSPORT_OPTIONS = {
 CELERY_BEAT_SCHEDULE = {
     "sweep-the-outbox": {"task": "records.tasks.sweep_outbox", "schedule": 20.0},
     "seal-the-log-of-sign-ins": {"task": "records.tasks.seal_access_log", "schedule": 60.0},
+    # The first wait of the schedule is five seconds. A sweep nobody took up by the next one is not needed.
+    "sweep-the-webhooks": {
+        "task": "records.tasks.sweep_webhooks",
+        "schedule": 5.0,
+        "options": {"expires": 5.0},
+    },
     "forget-old-answers": {"task": "records.tasks.forget_old_answers", "schedule": 3600.0},
 }
+
+# What can be subscribed to, by name, and what it means. (Pure modules: they import no models.)
+WEBHOOK_EVENTS: dict[str, str] = {**loads.events.EVENTS, **fleet.events.EVENTS}
+# Receivers inside the operator's own network, as host:port: they may be private and speak plain http.
+WEBHOOK_TRUSTED_RECEIVERS = env.places(
+    "WEBHOOK_TRUSTED_RECEIVERS", env.words("WEBHOOK_TRUSTED_RECEIVERS", "")
+)
 
 AUTH_USER_MODEL = "fleet.Person"
 AUTHENTICATION_BACKENDS = [

@@ -4,6 +4,7 @@ from uuid import UUID
 
 from django.db import connection
 
+from loads.actions.announcing import announce_accepted
 from loads.actions.signing import Signing, sign
 from loads.actions.stepping import one_of_two_racers
 from loads.acts import ACCEPT_LOAD
@@ -26,7 +27,8 @@ def accept_load(load: UUID, signing: Signing, *, seen: str, by: Actor) -> Curren
     """
     with one_of_two_racers(), act(ACCEPT_LOAD, by=by, about=f"load:{load}") as entry:
         stood, step = sign(entry, load, "accepted", signing, seen=seen, by=by)
-        _take_number(entry, stood.load)
+        paper = _take_number(entry, stood.load)
+        announce_accepted(entry, stood.load, stood.assessment, paper)
         outbox.put(entry, FILING, str(load))
         return Current(stood.load, step, stood.assessment)
 

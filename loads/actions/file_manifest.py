@@ -4,6 +4,7 @@ from uuid import UUID
 
 from django.db import IntegrityError
 
+from loads.actions.announcing import announce_filed
 from loads.acts import FILE_MANIFEST
 from loads.duties import ACTS_OF_THE_WORKER
 from loads.manifest.gathering import facts_of, paper_of
@@ -59,6 +60,7 @@ def file_manifest(paper: Paper) -> FiledPaper:
             filed = FiledPaper.objects.create(
                 paper=paper, operator_id=entry.chain, document=document, filed_at=entry.at
             )
+            announce_filed(entry, paper, document.digest)
             outbox.done(FILING, str(paper.load_id))
     except IntegrityError:
         filed = filed_paper(paper)  # another came first, with the same bytes

@@ -7,6 +7,7 @@ from uuid import UUID
 
 from django.db import models
 
+from loads.actions.announcing import announce_rejected
 from loads.actions.identifier import new_load_id
 from loads.actions.together import insert_together
 from loads.balance.engine import ENGINE_VERSION
@@ -96,4 +97,6 @@ def _keep_opening(
         act=entry.id,
     )
     step.id = insert_together((*before, assessment, step))
+    if computation.verdict != "within":
+        announce_rejected(entry, load, assessment, computation.result)
     return Current(load, step, assessment)

@@ -23,19 +23,22 @@ from records.api.parser import body_of
 from records.api.render import rendered
 from records.models.receipt import KEPT_FOR, Receipt
 from records.refusal import Invalid, StepRefused, Unreadable
+from records.sealing import opened, sealed
 
 # Status, headers and body of an answer.
 Answer: TypeAlias = tuple[int, Mapping[str, str], Mapping[str, object]]
 
 _KEY: Final = re.compile(r"[\x21-\x7e]{1,120}")
+_PURPOSE: Final = "receipt"
 
 
-def once(request: Request, work: Callable[[], Answer]) -> HttpResponse:
+def once(request: Request, work: Callable[[], Answer], *, confidential: bool = False) -> HttpResponse:
     """This function will do `work` once for the request's `Idempotency-Key` and return its answer, now or
     again.
 
     `work` runs inside one durable transaction that its acts join; it raises a `Refused` to refuse. A
-    repeated answer carries `Idempotency-Replayed: true`. Raises Unreadable (no key, or one that is not 1 to
+    repeated answer carries `Idempotency-Replayed: true`. The answer of a `confidential` endpoint (it shows a
+    secret once) is kept encrypted. Raises Unreadable (no key, or one that is not 1 to
     120 visible ASCII characters), Invalid (the key came with another request before), StepRefused (that
     request is still being answered).
     """
@@ -46,7 +49,7 @@ def once(request: Request, work: Callable[[], Answer]) -> HttpResponse:
         _hold(actor, key)
         kept = Receipt.objects.filter(actor=actor, key=key, answered_at__gt=Now() - KEPT_FOR).first()
         if kept is not None:
-            return _again(kept, asked)
+            return _again(kept, asked, confidential=confidential)
         status, headers, body = work()
         if status >= HTTPStatus.BAD_REQUEST:
             raise ValueError("a refusal is raised, never returned: it must not be kept")
@@ -59,7 +62,7 @@ def once(request: Request, work: Callable[[], Answer]) -> HttpResponse:
             request_digest=asked,
             status=status,
             headers=dict(headers),
-            body=answer,
+            body=sealed(answer, _PURPOSE) if confidential else answer,
             answered_at=Now(),
         )
     return _response(status, headers, answer)
@@ -111,14 +114,15 @@ def _hold(actor: str, key: str) -> None:
         )
 
 
-def _again(kept: Receipt, asked: str) -> HttpResponse:
+def _again(kept: Receipt, asked: str, *, confidential: bool) -> HttpResponse:
     if kept.request_digest != asked:
         raise Invalid(
             code="idempotency-key-reused",
             detail="This Idempotency-Key came with another request before.",
             next_step="Send a fresh key for a new request, or the same bytes for a repeated one.",
         )
-    response = _response(kept.status, kept.headers, bytes(kept.body))
+    body = bytes(kept.body)  # the digest names the address, so it was kept as this endpoint keeps it
+    response = _response(kept.status, kept.headers, opened(body, _PURPOSE) if confidential else body)
     response["Idempotency-Replayed"] = "true"
     return response
 

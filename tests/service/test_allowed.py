@@ -4,9 +4,10 @@ import fleet.acts
 import fleet.duties
 import loads.acts
 import loads.duties
+import records.acts
 from service import allowed
 
-ALL = {kind.name for kind in (*fleet.acts.KINDS, *loads.acts.KINDS)}
+ALL = {kind.name for kind in (*fleet.acts.KINDS, *loads.acts.KINDS, *records.acts.WEBHOOK_KINDS)}
 
 
 def test_every_act_that_a_role_allows_is_an_act():
@@ -40,6 +41,11 @@ def test_an_integration_does_nothing_that_needs_a_person_even_with_every_role_an
         "enter-aircraft",
         "enter-loading-basis",
         "enter-empty-weight",
+        "subscribe-webhook",
+        "rotate-webhook-secret",
+        "resume-webhook",
+        "replay-webhook",
+        "end-webhook",
     }
     assert allowed.grantable(fleet.duties.ROLES, integration=True) == acts
 
