@@ -9,6 +9,9 @@ END_DUTY = Kind("end-duty", "ended a duty")
 CHANGE_PASSWORD = Kind("change-password", "changed a password")
 ISSUE_TOKEN = Kind("issue-token", "issued a token")
 REVOKE_TOKEN = Kind("revoke-token", "revoked a token")
+ROTATE_TOKEN = Kind("rotate-token", "made a new secret for a token")
+DEACTIVATE_PERSON = Kind("deactivate-person", "deactivated a person")
+END_SESSIONS = Kind("end-sessions", "ended all sessions")
 ENTER_AIRCRAFT = Kind("enter-aircraft", "entered an aircraft")
 ENTER_LOADING_BASIS = Kind("enter-loading-basis", "entered a loading basis")
 APPROVE_LOADING_BASIS = Kind("approve-loading-basis", "approved a loading basis")
@@ -24,6 +27,9 @@ KINDS = (
     CHANGE_PASSWORD,
     ISSUE_TOKEN,
     REVOKE_TOKEN,
+    ROTATE_TOKEN,
+    DEACTIVATE_PERSON,
+    END_SESSIONS,
     ENTER_AIRCRAFT,
     ENTER_LOADING_BASIS,
     APPROVE_LOADING_BASIS,

@@ -6,10 +6,13 @@ that enter and that approve; the database still refuses the same person twice on
 
 from collections.abc import Mapping
 from types import MappingProxyType
-from typing import Literal, get_args
+from typing import Final, Literal, get_args
 
 from fleet import acts
-from records.acts import WEBHOOK_KINDS
+from records.acts import READ_ACCESS_LOG, WEBHOOK_KINDS
+
+# Looking at the people, and at who signed in when, is no act; it needs leave all the same.
+READ_PEOPLE: Final = "read-people"
 
 Role = Literal[
     "pilot",
@@ -24,10 +27,25 @@ Role = Literal[
 ROLES: tuple[Role, ...] = get_args(Role)
 
 # What anybody with a login may do for themselves.
-_OWN = frozenset({acts.CHANGE_PASSWORD.name, acts.ISSUE_TOKEN.name, acts.REVOKE_TOKEN.name})
+_OWN = frozenset(
+    {
+        acts.CHANGE_PASSWORD.name,
+        acts.END_SESSIONS.name,
+        acts.ISSUE_TOKEN.name,
+        acts.ROTATE_TOKEN.name,
+        acts.REVOKE_TOKEN.name,
+    }
+)
 _ENTERS = frozenset({acts.ENTER_AIRCRAFT.name, acts.ENTER_LOADING_BASIS.name, acts.ENTER_EMPTY_WEIGHT.name})
 _APPROVES = frozenset({acts.APPROVE_LOADING_BASIS.name, acts.APPROVE_EMPTY_WEIGHT.name})
-_PEOPLE = frozenset({acts.ENTER_PERSON.name, acts.GRANT_DUTY.name, acts.END_DUTY.name})
+_PEOPLE = frozenset(
+    {
+        acts.ENTER_PERSON.name,
+        acts.GRANT_DUTY.name,
+        acts.END_DUTY.name,
+        acts.DEACTIVATE_PERSON.name,
+    }
+)
 _SETTLES = frozenset({acts.CHANGE_SETTINGS.name})
 # Who is told of events: a manager decides it, and an integration that was given the scope may for itself.
 _WEBHOOKS = frozenset(kind.name for kind in WEBHOOK_KINDS)
@@ -42,6 +60,14 @@ ACTS_OF: Mapping[Role, frozenset[str]] = MappingProxyType(
         "operations manager": _OWN | _ENTERS | _APPROVES | _PEOPLE | _SETTLES | _WEBHOOKS,
         "auditor": _OWN,
         "integration": _WEBHOOKS,
+    }
+)
+
+# What each role may look at besides the fleet and the loads, which every role does.
+READS_OF: Mapping[Role, frozenset[str]] = MappingProxyType(
+    {
+        "operations manager": frozenset({READ_PEOPLE, READ_ACCESS_LOG}),
+        "auditor": frozenset({READ_PEOPLE, READ_ACCESS_LOG}),
     }
 )
 

@@ -4,6 +4,8 @@ from dataclasses import dataclass
 from typing import Literal
 from uuid import UUID
 
+from records.refusal import NotAllowed
+
 HOUSE = "house"  # the chain of what belongs to no operator
 
 
@@ -23,6 +25,8 @@ class Actor:
     may: frozenset[str]
     person: int | None = None
     caused_by: UUID | None = None
+    # What a token is limited to, by the names the rooms above use (registrations); None: to nothing.
+    reach: frozenset[str] | None = None
 
     def __post_init__(self) -> None:
         if self.operator in {"", HOUSE}:
@@ -34,3 +38,15 @@ class Actor:
     def chain(self) -> str:
         """The chain this one's acts are sealed on: the operator's, or that of the house."""
         return self.operator or HOUSE
+
+
+def refuse_without_leave(actor: Actor, leave: str) -> None:
+    """This function will do nothing for an actor who may do or look at what `leave` names; raises
+    NotAllowed.
+    """
+    if leave not in actor.may:
+        raise NotAllowed(
+            "leave-missing",
+            f"{actor.key} ({actor.capacity}) may not do this: {leave}.",
+            next_step="Ask somebody who holds the duty, or have it granted.",
+        )

@@ -8,6 +8,8 @@ EXEMPT_TABLE = Kind("exempt-table", "exempted a table from guard")
 
 # Done each minute by the scheduler: the last digest of the log of sign-ins goes into the chain.
 SEAL_ACCESS_LOG = Kind("seal-access-log", "sealed the log of sign-ins")
+# Looking at that log is no act and leaves nothing in the trail; it needs leave all the same.
+READ_ACCESS_LOG = "read-access-log"
 
 # Told of events: who subscribes, and what becomes of it.
 SUBSCRIBE_WEBHOOK = Kind("subscribe-webhook", "subscribed an address to events")

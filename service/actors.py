@@ -1,6 +1,7 @@
 """Finds out who asks: from a bearer token, or from a signed-in browser; fills the Actor of the request."""
 
 from collections.abc import Callable
+from datetime import UTC, datetime, timedelta
 from typing import Any, Final
 
 from django.http import HttpRequest
@@ -9,17 +10,23 @@ from django.utils import timezone
 from rest_framework import authentication, permissions
 from rest_framework.request import Request
 
+from fleet.actions.noting import note_stranger, note_token
 from fleet.models import Person, Token
 from fleet.queries.duties import roles_of
-from fleet.queries.tokens import token_sent
+from fleet.queries.tokens import TokenRefused, token_sent
 from records.actor import Actor
 from records.refusal import NotAllowed, NotSignedIn
 from service import allowed
+from service.limited import refuse_beyond
 from service.problems import CHALLENGE, is_api
 
 STRANGER: Final = Actor(
     operator=None, kind="stranger", key="stranger", name="", capacity="stranger", may=frozenset()
 )
+# How often the use of a token is noted, and when this process last did, by the token's digest.
+NOTED_EVERY: Final = timedelta(minutes=5)
+_LONG_AGO: Final = datetime(1970, 1, 1, tzinfo=UTC)
+_last_use: dict[str, datetime] = {}
 
 
 def actor_of_person(person: Person) -> Actor:
@@ -49,6 +56,7 @@ def actor_of_token(token: Token) -> Actor:
         capacity="integration" if token.integration else ", ".join(roles) or "no duty",
         may=allowed.to_token(roles, token.scopes, integration=token.integration),
         person=token.person_id,
+        reach=frozenset(token.registrations) or None,
     )
 
 
@@ -86,13 +94,31 @@ class TokenAuthentication(authentication.BaseAuthentication):
                 "The header Authorization is not a bearer token.",
                 next_step="Send: Authorization: Bearer tb_...",
             )
-        token = token_sent(secret.strip(), at=timezone.now())
+        token = _noted(request, secret.strip())
         request.actor = actor_of_token(token)  # type: ignore[attr-defined]  # as in ActorMiddleware
         return token.person, token
 
     def authenticate_header(self, request: Request) -> str:  # noqa: ARG002  # the framework's form
         """This function will return the challenge of a 401."""
         return CHALLENGE
+
+
+def _noted(request: Request, secret: str) -> Token:
+    """This function will return the token sent; its use, or why it does not serve, is noted first."""
+    now = timezone.now()
+    try:
+        token = token_sent(secret, at=now)
+    except TokenRefused as refused:
+        if refused.token is None:
+            note_stranger(request, "token-refused", secret)
+        else:
+            note_token(request, "token-refused", refused.token)
+        raise
+    # The log takes one line in five minutes; each process remembers, so that it is not asked every time.
+    if _last_use.get(token.digest, _LONG_AGO) + NOTED_EVERY <= now:
+        note_token(request, "token-used", token)
+        _last_use[token.digest] = now
+    return token
 
 
 class SessionAuthentication(authentication.SessionAuthentication):
@@ -110,7 +136,7 @@ class SessionAuthentication(authentication.SessionAuthentication):
 class Known(permissions.BasePermission):
     """Lets in who is signed in; reading needs `read` besides. Each act asks for itself."""
 
-    def has_permission(self, request: Request, view: Any) -> bool:  # noqa: ARG002  # the framework's form
+    def has_permission(self, request: Request, view: Any) -> bool:
         """This function will say yes, or raise NotSignedIn or NotAllowed."""
         actor = getattr(request, "actor", STRANGER)
         if actor.kind == "stranger":
@@ -125,4 +151,6 @@ class Known(permissions.BasePermission):
                 f"{actor.key} ({actor.capacity}) may not read here.",
                 next_step="Use a token with the scope read, or have a duty granted.",
             )
+        if actor.reach is not None:
+            refuse_beyond(actor.reach, request, view)
         return True

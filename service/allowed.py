@@ -7,9 +7,11 @@ import fleet.acts
 import fleet.duties
 import loads.acts
 import loads.duties
+import records.acts
 
 # Reading is no act and leaves nothing in the trail, but a token needs leave for it all the same.
 READ: Final = "read"
+READS: Final = frozenset({READ, fleet.duties.READ_PEOPLE, records.acts.READ_ACCESS_LOG})
 # The scope a person's token needs, besides the password, to sign. It is no act either.
 SIGN: Final = "sign"
 SIGNATURES: Final = frozenset({loads.acts.PREPARE_LOAD.name, loads.acts.ACCEPT_LOAD.name})
@@ -25,7 +27,21 @@ _NEEDS_A_PERSON: Final = SIGNATURES | {
     fleet.acts.CHANGE_PASSWORD.name,
     fleet.acts.ISSUE_TOKEN.name,
     fleet.acts.REVOKE_TOKEN.name,
+    fleet.acts.ROTATE_TOKEN.name,
+    fleet.acts.DEACTIVATE_PERSON.name,
+    fleet.acts.END_SESSIONS.name,
+    fleet.duties.READ_PEOPLE,
+    records.acts.READ_ACCESS_LOG,
 }
+# A token makes no token and takes nobody's session or password: these need a person who is signed in.
+_NEEDS_A_SESSION: Final = frozenset(
+    {
+        fleet.acts.CHANGE_PASSWORD.name,
+        fleet.acts.END_SESSIONS.name,
+        fleet.acts.ISSUE_TOKEN.name,
+        fleet.acts.ROTATE_TOKEN.name,
+    }
+)
 
 
 def to_person(roles: Collection[str]) -> frozenset[str]:
@@ -37,6 +53,7 @@ def to_person(roles: Collection[str]) -> frozenset[str]:
     for role in fleet.duties.ROLES:
         if role in roles:
             acts |= fleet.duties.ACTS_OF[role] | loads.duties.ACTS_OF[role] | {READ}
+            acts |= fleet.duties.READS_OF.get(role, frozenset())
     return acts
 
 
@@ -46,7 +63,7 @@ def to_token(roles: Collection[str], scopes: Collection[str], *, integration: bo
     Signatures need the scope `sign` besides the act's own name. An integration does nothing that needs a
     person.
     """
-    acts = to_person(roles) & frozenset(scopes)
+    acts = (to_person(roles) & frozenset(scopes)) - _NEEDS_A_SESSION
     if SIGN not in scopes:
         acts -= SIGNATURES
     return acts - _NEEDS_A_PERSON if integration else acts
@@ -54,7 +71,7 @@ def to_token(roles: Collection[str], scopes: Collection[str], *, integration: bo
 
 def grantable(roles: Collection[str], *, integration: bool) -> frozenset[str]:
     """This function will return the scopes a token of somebody with these roles may be given."""
-    acts = to_person(roles)
+    acts = to_person(roles) - _NEEDS_A_SESSION
     if integration:
         return acts - _NEEDS_A_PERSON
     return acts | {SIGN} if acts & SIGNATURES else acts

@@ -12,6 +12,7 @@ from django.views.decorators.debug import sensitive_post_parameters
 from django.views.decorators.http import require_http_methods, require_POST
 
 from fleet.actions.confirm_password import refuse_locked_out
+from fleet.actions.noting import note_login, note_person
 from fleet.models import Person
 from loads.cautions import CAUTIONS, INVENTED
 from records.refusal import LockedOut
@@ -50,12 +51,16 @@ def sign_in(request: HttpRequest) -> HttpResponse:
     if request.method != "POST":
         return render(request, "service/sign_in.html", {"next": _where_next(request)})
     typed = request.POST.get("login", "")
+    name = typed.strip().lower()
     try:
-        person = _let_in(request, typed.strip().lower(), request.POST.get("password", ""))
+        person = _let_in(request, name, request.POST.get("password", ""))
     except LockedOut as locked:
+        note_login(request, "locked-out", name)
         return _again(request, typed, locked)
     if person is None:
+        note_login(request, "sign-in-failed", name)
         return _again(request, typed)
+    note_person(request, "sign-in", person)
     login(request, person)
     return HttpResponseRedirect(_where_next(request))
 
@@ -83,5 +88,7 @@ def _again(request: HttpRequest, typed: str, locked: LockedOut | None = None) ->
 @require_POST
 def sign_out(request: HttpRequest) -> HttpResponse:
     """This function will end the session."""
+    if isinstance(request.user, Person):
+        note_person(request, "sign-out", request.user)
     logout(request)
     return HttpResponseRedirect(resolve_url("sign-in"))

@@ -119,6 +119,8 @@ AUTH_PASSWORD_VALIDATORS = [
     {"NAME": "django.contrib.auth.password_validation.NumericPasswordValidator"},
 ]
 LOGIN_URL = "sign-in"
+# Joins the duties of all rooms: which scopes a token of somebody with these roles may be given.
+GRANTABLE = "service.allowed.grantable"
 AXES_FAILURE_LIMIT = env.whole("SIGN_IN_FAILURES", 5, low=1, high=100)
 AXES_COOLOFF_TIME = 0.25  # hours
 AXES_LOCKOUT_PARAMETERS = ["username"]

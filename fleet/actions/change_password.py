@@ -13,8 +13,8 @@ RENEWED = "the same password, hashed anew with stronger settings"
 
 
 def change_password(actor: Actor, person: Person, *, current: str, new: str) -> None:
-    """This function will give the person acting a new password; raises Invalid for a wrong current or a
-    weak new one.
+    """This function will give the person acting a new password; raises Invalid for a wrong current, the
+    same or a weak new one.
 
     Sessions begun with the old one end by themselves, since Django ties them to the hash.
     """
@@ -22,6 +22,8 @@ def change_password(actor: Actor, person: Person, *, current: str, new: str) -> 
         raise NotAllowed("own-password-only", "A person changes their own password only.")
     if not person.check_password(current):
         raise Invalid(Fault("/current", "password-wrong", "this is not the current password"))
+    if new == current:
+        raise Invalid(Fault("/new", "password-same", "this is the password you have; choose another"))
     hashed = hash_of_new(new, pointer="/new")
     with act(acts.CHANGE_PASSWORD, by=actor, about=f"person:{person.pk}"):
         _keep(person, hashed)

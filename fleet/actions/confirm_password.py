@@ -12,6 +12,7 @@ from django.db.models import Max
 from django.http import HttpRequest
 from django.utils import timezone
 
+from fleet.actions.noting import note_person
 from fleet.models import Person
 from records.refusal import Fault, Invalid, LockedOut
 
@@ -19,25 +20,29 @@ POINTER: Final = "/password"
 LONGEST: Final = 1000
 
 
-def confirm_password(request: HttpRequest, person: Person, password: object) -> None:
+def confirm_password(
+    request: HttpRequest, person: Person, password: object, *, pointer: str = POINTER
+) -> None:
     """This function will do nothing when this is the person's password.
 
-    Raises Invalid (pointer /password) when it is missing or wrong, LockedOut after repeated failures.
-    Call it before any transaction: a failure must stay counted when the signing is undone, so inside one
-    it raises RuntimeError.
+    Raises Invalid at `pointer` when it is missing or wrong, LockedOut after repeated failures; both are
+    noted in the log of sign-ins. Call it before any transaction: a failure must stay counted when the
+    signing is undone, so inside one it raises RuntimeError.
     """
     if not isinstance(password, str) or not password or len(password) > LONGEST:
-        raise Invalid(Fault(POINTER, "password-missing", "type your password again to sign"))
+        words = "type your password again to sign" if pointer == POINTER else "type the password you have"
+        raise Invalid(Fault(pointer, "password-missing", words))
     plain = getattr(request, "_request", request)  # the API's request wraps the one the counting writes to
+    _refuse_locked_out(plain, person)
     with transaction.atomic(durable=True):
-        refuse_locked_out(plain, person.login)
         found = authenticate(plain, username=person.login, password=password)
         if found is not None and found.pk == person.pk:
             AxesProxyHandler.reset_attempts(username=person.login)
             return
-    refuse_locked_out(plain, person.login)
+    note_person(plain, "password-wrong", person)
+    _refuse_locked_out(plain, person)
     raise Invalid(
-        Fault(POINTER, "password-wrong", "this is not the password of the person who is signed in"),
+        Fault(pointer, "password-wrong", "this is not the password of the person who is signed in"),
         next_step="Type it again; after repeated failures you have to wait.",
     )
 
@@ -58,3 +63,11 @@ def refuse_locked_out(request: HttpRequest, login: str) -> None:
         wait_seconds=wait,
         next_step="Wait as stated; the password itself stays as it is.",
     )
+
+
+def _refuse_locked_out(request: HttpRequest, person: Person) -> None:
+    try:
+        refuse_locked_out(request, person.login)
+    except LockedOut:
+        note_person(request, "locked-out", person)
+        raise

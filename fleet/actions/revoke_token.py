@@ -1,13 +1,12 @@
-"""Revoking a bearer token, for good."""
-
-from django.db.models import Q
+"""Revoking a bearer token, for good, with every secret it has."""
 
 from fleet.actions.issue_token import refuse_meddling
 from fleet.acts import REVOKE_TOKEN
 from fleet.models import Token
+from fleet.queries.tokens import token_of
 from records.act import act
 from records.actor import Actor
-from records.refusal import NotKnown, StepRefused
+from records.refusal import StepRefused
 
 
 def revoke_token(by: Actor, number: int, *, reason: str) -> Token:
@@ -16,10 +15,7 @@ def revoke_token(by: Actor, number: int, *, reason: str) -> Token:
     Raises NotKnown (no such token, or another operator's), NotAllowed (another person's) and StepRefused
     (revoked before).
     """
-    whose = Q() if by.kind == "service" else Q(operator=by.operator)
-    token = Token.objects.select_related("person").filter(whose, pk=number).first()
-    if token is None:
-        raise NotKnown("token-not-known", "There is no such token.")
+    token = token_of(None if by.kind == "service" else by.chain, number)
     refuse_meddling(by, token.person, integration=token.integration)
     with act(REVOKE_TOKEN, by=by, about=f"token:{token.pk}", reason=reason) as entry:
         # Counted in the database: of two who revoke at once, one is told that it was done.

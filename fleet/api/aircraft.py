@@ -21,11 +21,19 @@ from records.api.once import Answer, once
 class AircraftEndpoint(APIView):
     """The operator's aircraft."""
 
+    limits_its_answer = True
+
     @extend_schema(operation_id="list_aircraft", responses=AircraftList)
     def get(self, request: Request) -> HttpResponse:
-        """Every aircraft of the operator, by registration; a fleet is small, so the list is whole."""
+        """Every aircraft of the operator, by registration; a fleet is small, so the list is whole. A token
+        limited to some aircraft sees those.
+        """
         parameters_of(request, allowed=())
-        return shown({"aircraft": [aircraft_line(each) for each in all_aircraft(operator_of(request))]})
+        reach = actor_of(request).reach
+        seen = [
+            each for each in all_aircraft(operator_of(request)) if reach is None or each.registration in reach
+        ]
+        return shown({"aircraft": [aircraft_line(each) for each in seen]})
 
     @extend_schema(
         operation_id="enter_aircraft", request=described("aircraft-1"), responses={201: AircraftAnswer}

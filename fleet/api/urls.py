@@ -2,11 +2,21 @@
 
 from django.urls import path
 
-from fleet.api import aircraft, empty_weights, loading_bases, settings
+from fleet.api import aircraft, empty_weights, loading_bases, own, people, settings, tokens
 
 _ONE = "aircraft/<str:registration>"
 
 urlpatterns = [
+    path("me", own.OwnEndpoint.as_view()),
+    path("me/password", own.OwnPasswordEndpoint.as_view()),
+    path("me/sessions/ending", own.SessionsEndingEndpoint.as_view()),
+    path("people", people.PeopleEndpoint.as_view()),
+    path("people/<int:person>", people.OnePersonEndpoint.as_view()),
+    path("people/<int:person>/duties", people.DutiesEndpoint.as_view()),
+    path("people/<int:person>/deactivation", people.DeactivationEndpoint.as_view()),
+    path("tokens", tokens.TokensEndpoint.as_view()),
+    path("tokens/<int:token>/rotation", tokens.RotationEndpoint.as_view()),
+    path("tokens/<int:token>/revocation", tokens.RevocationEndpoint.as_view()),
     path("settings", settings.SettingsEndpoint.as_view()),
     path("aircraft", aircraft.AircraftEndpoint.as_view()),
     path(_ONE, aircraft.OneAircraftEndpoint.as_view()),

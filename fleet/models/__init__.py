@@ -9,7 +9,7 @@ from fleet.models.operator import Operator
 from fleet.models.operator_settings import OperatorSettings
 from fleet.models.person import Person
 from fleet.models.standing import Standing
-from fleet.models.token import Token
+from fleet.models.token import Rotation, Token
 
 __all__ = [
     "Aircraft",
@@ -20,6 +20,7 @@ __all__ = [
     "Operator",
     "OperatorSettings",
     "Person",
+    "Rotation",
     "Standing",
     "Token",
 ]

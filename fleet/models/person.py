@@ -5,6 +5,7 @@ from typing import ClassVar
 from django.contrib.auth.base_user import AbstractBaseUser, BaseUserManager
 from django.contrib.auth.hashers import check_password
 from django.db import models
+from django.utils.crypto import salted_hmac
 
 from fleet.models.operator import Operator
 
@@ -29,6 +30,8 @@ class Person(AbstractBaseUser):
     name = models.CharField(max_length=120)
     salt = models.BinaryField()
     is_active = models.BooleanField(default=True)
+    # Raised to end every session at once: each session carries a digest of password hash and series.
+    session_series = models.PositiveIntegerField(default=0)
 
     USERNAME_FIELD = "login"
     REQUIRED_FIELDS: ClassVar[list[str]] = []
@@ -54,3 +57,10 @@ class Person(AbstractBaseUser):
         `fleet.actions.change_password.renew_hash` does that openly.
         """
         return check_password(raw_password, self.password)
+
+    def _get_session_auth_hash(self, secret: str | None = None) -> str:
+        """This function will return what a session must carry to be of today; Django's own knows no
+        series.
+        """
+        of_today = f"{self.password}\n{self.session_series}"
+        return salted_hmac("fleet.person.session", of_today, secret=secret, algorithm="sha256").hexdigest()

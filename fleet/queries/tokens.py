@@ -1,16 +1,40 @@
-"""Finding the bearer token that was sent."""
+"""Finding the bearer token that was sent, and how long each of its secrets serves."""
 
 import hashlib
 import re
+from collections.abc import Sequence
+from dataclasses import dataclass
 from datetime import datetime
 from typing import Final
 
-from fleet.models import Token
-from records.refusal import NotSignedIn
+from django.db.models import Q
+
+from fleet.models import Rotation, Token
+from records.refusal import NotKnown, NotSignedIn
 
 # `tb_` and 32 random bytes as base64url without padding (RFC 4648 section 5).
 SHAPE: Final = re.compile(r"tb_[A-Za-z0-9_-]{43}")
 _FRESH_ONE: Final = "Have a fresh token issued."
+
+
+class TokenRefused(NotSignedIn):
+    """A token that does not serve; `token` is the one it was, where there is one."""
+
+    def __init__(self, code: str, detail: str, token: Token | None = None) -> None:
+        left = code == "token-person-inactive"
+        super().__init__(code, detail, next_step="" if left else _FRESH_ONE)
+        self.token = token
+
+
+@dataclass(frozen=True, slots=True)
+class Secret:
+    """A secret of a token: number 0 is the first, the others are of rotations. It serves until `ends_at`,
+    which is `expires_at` or comes before it.
+    """
+
+    number: int
+    expires_at: datetime
+    ends_at: datetime
 
 
 def digest_of(secret: str) -> str:
@@ -24,22 +48,70 @@ def digest_of(secret: str) -> str:
 def token_sent(secret: str, *, at: datetime) -> Token:
     """This function will return the token, with its person, that `secret` is and that is valid at `at`.
 
-    Raises NotSignedIn: token-malformed, token-unknown, token-revoked, token-expired, token-person-inactive.
+    Raises TokenRefused: token-malformed, token-unknown, token-revoked, token-expired, token-rotated,
+    token-person-inactive.
     """
     if not SHAPE.fullmatch(secret):
-        raise NotSignedIn("token-malformed", "This has not the form of a token.", next_step=_FRESH_ONE)
-    token = Token.objects.select_related("person").filter(digest=digest_of(secret)).first()
-    if token is None:
-        raise NotSignedIn("token-unknown", "No such token was issued.", next_step=_FRESH_ONE)
+        raise TokenRefused("token-malformed", "This has not the form of a token.")
+    found = _found(digest_of(secret))
+    if found is None:
+        raise TokenRefused("token-unknown", "No such token was issued.")
+    token, number = found
     if token.revoked_at is not None:
-        raise NotSignedIn("token-revoked", "This token was revoked.", next_step=_FRESH_ONE)
-    if token.expires_at <= at:
-        raise NotSignedIn("token-expired", "This token has expired.", next_step=_FRESH_ONE)
+        raise TokenRefused("token-revoked", "This token was revoked.", token)
+    sent = secrets_of(token)[number]
+    if sent.expires_at <= at:
+        raise TokenRefused("token-expired", "This token has expired.", token)
+    if sent.ends_at <= at:
+        raise TokenRefused(
+            "token-rotated", "This token has a newer secret; the time of this one is over.", token
+        )
     if not token.person.is_active:
-        raise NotSignedIn("token-person-inactive", "The person this token belongs to has left.")
+        raise TokenRefused("token-person-inactive", "The person this token belongs to has left.", token)
     return token
 
 
-def tokens_of(operator: str, person: int) -> tuple[Token, ...]:
-    """This function will return the person's tokens, the newest first."""
-    return tuple(Token.objects.filter(operator=operator, person=person).order_by("-issued_at", "-id"))
+def secrets_of(token: Token) -> tuple[Secret, ...]:
+    """This function will return every secret the token ever had, in order."""
+    return lives(token, sorted(token.rotations.all(), key=lambda one: one.number))
+
+
+def lives(token: Token, rotations: Sequence[Rotation]) -> tuple[Secret, ...]:
+    """This function will return how long each secret serves, given the rotations by number.
+
+    A rotation lets the secret before it serve for the overlap it states, and ends the one before that: two
+    serve at a time, at most.
+    """
+    expires = [token.expires_at, *(one.expires_at for one in rotations)]
+    ends = list(expires)
+    for place, one in enumerate(rotations):
+        ends[place] = min(ends[place], one.previous_ends_at)
+        if place:
+            ends[place - 1] = min(ends[place - 1], one.issued_at)
+    return tuple(Secret(number, *both) for number, both in enumerate(zip(expires, ends, strict=True)))
+
+
+def token_of(operator: str | None, number: int) -> Token:
+    """This function will return the operator's token of that number (any operator's for None); raises
+    NotKnown.
+    """
+    whose = Q() if operator is None else Q(operator=operator)
+    token = Token.objects.select_related("person").filter(whose, pk=number).first()
+    if token is None:
+        raise NotKnown("token-not-known", "There is no such token.")
+    return token
+
+
+def tokens_of(operator: str, person: int | None = None) -> tuple[Token, ...]:
+    """This function will return the tokens of a person, or all of the operator's, the newest first."""
+    wanted = Q(operator=operator) if person is None else Q(operator=operator, person=person)
+    found = Token.objects.filter(wanted).select_related("person").prefetch_related("rotations")
+    return tuple(found.order_by("-issued_at", "-id"))
+
+
+def _found(digest: str) -> tuple[Token, int] | None:
+    token = Token.objects.select_related("person").filter(digest=digest).first()
+    if token is not None:
+        return token, 0
+    rotation = Rotation.objects.select_related("token__person").filter(digest=digest).first()
+    return None if rotation is None else (rotation.token, rotation.number)

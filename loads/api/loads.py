@@ -1,5 +1,6 @@
 """Submitting, listing and reading loads."""
 
+from dataclasses import replace
 from uuid import UUID
 
 from django.http import HttpResponse
@@ -39,6 +40,8 @@ _FILTERS = [
 class LoadsView(APIView):
     """Loads by departure, and new ones."""
 
+    limits_its_answer = True
+
     @extend_schema(
         operation_id="submit_load",
         summary="Submit a load",
@@ -61,7 +64,8 @@ class LoadsView(APIView):
         """List loads by planned departure, the earliest first, a page at a time."""
         asked = parameters_of(request, allowed=PARAMETERS)
         after, most = page_asked(asked)
-        page = list_loads(operator_of(request), filters_in(asked), after=after, most=most)
+        filters = replace(filters_in(asked), reach=actor_of(request).reach)
+        page = list_loads(operator_of(request), filters, after=after, most=most)
         following = next_address(request, page.after) if page.after else None
         headers = {"Link": f'<{following}>; rel="next"'} if following else {}
         return Response(

@@ -24,6 +24,7 @@ class Filters:
     state: str = ""
     verdict: str = ""
     reference: str = ""
+    reach: frozenset[str] | None = None  # the registrations somebody is limited to; None: to none
 
 
 @dataclass(frozen=True, slots=True)
@@ -64,6 +65,8 @@ def _wanted(operator: str, filters: Filters, after: Place | None) -> Q:
         wanted &= Q(load__departure__lt=filters.until)
     if filters.aircraft:
         wanted &= Q(load__aircraft__registration=filters.aircraft.upper())
+    if filters.reach is not None:
+        wanted &= Q(load__aircraft__registration__in=filters.reach)
     if filters.state:
         wanted &= Q(after=filters.state)
     if filters.verdict:

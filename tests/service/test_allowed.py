@@ -12,7 +12,7 @@ ALL = {kind.name for kind in (*fleet.acts.KINDS, *loads.acts.KINDS, *records.act
 
 def test_every_act_that_a_role_allows_is_an_act():
     for role in fleet.duties.ROLES:
-        assert allowed.to_person([role]) <= ALL | {"read"}
+        assert allowed.to_person([role]) <= ALL | allowed.READS
 
 
 def test_what_people_do_can_be_done_by_some_role():
@@ -54,3 +54,20 @@ def test_the_scope_sign_is_to_be_had_by_who_signs_and_is_no_act():
     assert "sign" in allowed.grantable(["pilot"], integration=False)
     assert "sign" not in allowed.grantable(["auditor"], integration=False)
     assert "sign" not in allowed.to_token(["pilot"], ["sign", "accept-load"], integration=False)
+
+
+def test_a_token_makes_no_token_and_takes_nobodys_session_or_password():
+    session_only = {"issue-token", "rotate-token", "change-password", "end-sessions"}
+
+    assert session_only <= allowed.to_person(["pilot"])
+    assert not session_only & allowed.to_token(["pilot"], ALL, integration=False)
+    assert not session_only & allowed.grantable(fleet.duties.ROLES, integration=False)
+
+
+def test_people_and_the_log_of_sign_ins_are_looked_at_by_manager_and_auditor_only():
+    private = {"read-people", "read-access-log"}
+
+    seen = {role for role in fleet.duties.ROLES if allowed.to_person([role]) & private}
+
+    assert seen == {"operations manager", "auditor"}
+    assert not allowed.grantable(["auditor"], integration=True) & private

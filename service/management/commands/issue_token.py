@@ -7,9 +7,10 @@ from typing import Any
 from django.core.management.base import BaseCommand, CommandError
 from django.utils import timezone
 
-from fleet.actions.issue_token import LONGEST, issue_token
+from fleet.actions.issue_token import issue_token
 from fleet.acts import ISSUE_TOKEN
 from fleet.models import Person
+from fleet.models.token import LONGEST
 from fleet.queries.duties import roles_of
 from records.actor import Actor
 from records.refusal import Refused
@@ -33,6 +34,13 @@ class Command(BaseCommand):
             help="an act's name, read, or sign; repeat for more; without any: all the duties allow but sign",
         )
         parser.add_argument("--days", type=int, default=90, help=f"valid for so many, 1 to {LONGEST.days}")
+        parser.add_argument(
+            "--aircraft",
+            action="append",
+            default=[],
+            metavar="REGISTRATION",
+            help="serve for this aircraft only; repeat for more; without any: for all",
+        )
         parser.add_argument("--integration", action="store_true", help="a program's token, which never signs")
 
     def handle(self, *_: Any, **options: Any) -> None:
@@ -58,6 +66,7 @@ class Command(BaseCommand):
                 grantable=grantable,
                 valid_for=timedelta(days=options["days"]),
                 integration=options["integration"],
+                registrations=options["aircraft"],
             )
         except Refused as refused:
             raise CommandError(refused.detail) from refused
