@@ -16,7 +16,7 @@ class SubscriptionRequest(serializers.Serializer[object]):
     label = serializers.CharField(required=False, allow_blank=True, max_length=80)  # type: ignore[assignment]  # DRF takes fields out of the class
 
 
-class SecretLine(serializers.Serializer[object]):
+class SigningSecretLine(serializers.Serializer[object]):
     """One signing secret, without the secret; null: until a new one is made."""
 
     made_at = serializers.DateTimeField()
@@ -34,7 +34,7 @@ class SubscriptionAnswer(serializers.Serializer[object]):
     because = serializers.CharField()
     since = serializers.DateTimeField()
     subscribed_at = serializers.DateTimeField()
-    secrets = SecretLine(many=True)
+    secrets = SigningSecretLine(many=True)
     waiting = serializers.IntegerField()
     parked = serializers.IntegerField()
 
