@@ -34,7 +34,7 @@ class PeopleList(serializers.Serializer[object]):
     people = PersonLine(many=True)
 
 
-class SecretLine(serializers.Serializer[object]):
+class TokenSecretLine(serializers.Serializer[object]):
     """A secret that serves now: the first has the number 0. It ends when it expires, or before, by
     rotation.
     """
@@ -57,7 +57,7 @@ class TokenLine(serializers.Serializer[object]):
     issued_at = serializers.DateTimeField()
     revoked_at = serializers.DateTimeField(allow_null=True)
     last_used_at = serializers.DateTimeField(allow_null=True)
-    secrets = SecretLine(many=True)
+    secrets = TokenSecretLine(many=True)
 
 
 class TokenIssued(TokenLine):

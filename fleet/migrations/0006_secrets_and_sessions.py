@@ -1,6 +1,7 @@
 """Tokens limited to aircraft and to a year, later secrets of a token, and a way to end every session of a person."""
 
-import datetime
+import datetime as dt
+
 import django.contrib.postgres.fields
 import django.db.models.deletion
 import django.db.models.expressions
@@ -51,7 +52,7 @@ class Migration(migrations.Migration):
                     (
                         "expires_at__lte",
                         django.db.models.expressions.CombinedExpression(
-                            models.F("issued_at"), "+", models.Value(datetime.timedelta(days=365))
+                            models.F("issued_at"), "+", models.Value(dt.timedelta(days=365))
                         ),
                     )
                 ),
@@ -94,7 +95,7 @@ class Migration(migrations.Migration):
                     (
                         "expires_at__lte",
                         django.db.models.expressions.CombinedExpression(
-                            models.F("issued_at"), "+", models.Value(datetime.timedelta(days=365))
+                            models.F("issued_at"), "+", models.Value(dt.timedelta(days=365))
                         ),
                     ),
                 ),
@@ -109,7 +110,7 @@ class Migration(migrations.Migration):
                     (
                         "previous_ends_at__lte",
                         django.db.models.expressions.CombinedExpression(
-                            models.F("issued_at"), "+", models.Value(datetime.timedelta(days=30))
+                            models.F("issued_at"), "+", models.Value(dt.timedelta(days=30))
                         ),
                     ),
                 ),

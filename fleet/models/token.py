@@ -9,7 +9,6 @@ from django.db import models
 from fleet.models.operator import Operator
 from fleet.models.person import Person
 
-
 LONGEST: Final = timedelta(days=365)
 LONGEST_OVERLAP: Final = timedelta(days=30)
 

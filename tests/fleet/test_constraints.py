@@ -1,7 +1,6 @@
 """Each constraint of the room, broken below the models: the database itself refuses, by name."""
 
-from dataclasses import dataclass
-from datetime import UTC, datetime
+from datetime import UTC, datetime, timedelta
 from typing import Any
 
 import pytest
@@ -17,28 +16,26 @@ from fleet.models import Aircraft, Approval, EmptyWeight, LoadingBasis, Standing
 from fleet.settings_reading import read_settings
 from records.act import act
 from records.guard.refusals import FixedForGood
-from tests.cast import Cast, Strangers, actor, cast, strangers
+from tests.cast import actor, cast, strangers
+from tests.fleet.constraint_rows import (
+    OPEN,
+    SOON,
+    Scene,
+    aircraft,
+    approval,
+    basis,
+    duty,
+    person,
+    rotation,
+    settings,
+    standing,
+    token,
+    weight,
+    weight_approval,
+)
 from tests.makers import basis_document, empty_weight_document, make_aircraft, make_basis, make_empty_weight
 
 pytestmark = pytest.mark.django_db
-
-SOON = datetime(2026, 6, 1, tzinfo=UTC)
-OPEN = "[2026-06-01 00:00:00+00,)"
-
-
-@dataclass
-class Scene:
-    """Two versions entered and not approved, two approved, another aircraft, and another operator's."""
-
-    people: Cast
-    others: Strangers
-    aircraft: Aircraft
-    sister: Aircraft
-    their_aircraft: Aircraft
-    basis: LoadingBasis
-    weight: EmptyWeight
-    approved_basis: LoadingBasis
-    approved_weight: EmptyWeight
 
 
 @pytest.fixture
@@ -76,135 +73,6 @@ def insert(scene: Scene, table: str, row: dict[str, Any]) -> None:
         )
 
 
-def approval(scene: Scene, **changes: Any) -> dict[str, Any]:
-    row = {
-        "operator_id": scene.people.operator.code,
-        "aircraft_id": scene.aircraft.id,
-        "loading_basis_id": scene.basis.id,
-        "empty_weight_id": None,
-        "entered_by_id": scene.people.maintenance.id,
-        "approved_by_id": scene.people.approver.id,
-        "true_from": SOON,
-        "known_from": SOON,
-    }
-    return row | changes
-
-
-def weight_approval(scene: Scene, **changes: Any) -> dict[str, Any]:
-    of_weight = {
-        "loading_basis_id": None,
-        "empty_weight_id": scene.weight.id,
-        "true_from": scene.weight.true_from,
-    }
-    return approval(scene, **(of_weight | changes))
-
-
-def standing(scene: Scene, **changes: Any) -> dict[str, Any]:
-    row = {
-        "operator_id": scene.people.operator.code,
-        "aircraft_id": scene.aircraft.id,
-        "kind": "empty weight",
-        "fit": "wheels",
-        "version": scene.approved_weight.id,
-        "valid": "[2020-01-01 00:00:00+00,2020-02-01 00:00:00+00)",
-        "known": OPEN,
-    }
-    return row | changes
-
-
-def basis(scene: Scene, **changes: Any) -> dict[str, Any]:
-    row = {
-        "operator_id": scene.people.operator.code,
-        "aircraft_id": scene.aircraft.id,
-        "revision": 77,
-        "document": "{}",
-        "digest": "0" * 64,
-        "entered_by_id": scene.people.maintenance.id,
-        "entered_at": SOON,
-    }
-    return row | changes
-
-
-def weight(scene: Scene, **changes: Any) -> dict[str, Any]:
-    row = basis(scene) | {"fit": "wheels", "true_from": SOON, "salt": b"0" * 32}
-    del row["revision"]
-    return row | changes
-
-
-def aircraft(scene: Scene, **changes: Any) -> dict[str, Any]:
-    row = {
-        "operator_id": scene.people.operator.code,
-        "registration": "Q9-NEW",
-        "serial_number": "9-0077",
-        "type": "Fenlark 9",
-        "category": "aeroplane",
-        "engines": 2,
-        "passenger_seats": 4,
-    }
-    return row | changes
-
-
-def person(scene: Scene, **changes: Any) -> dict[str, Any]:
-    row = {
-        "operator_id": scene.people.operator.code,
-        "login": "new.person",
-        "name": "New",
-        "password": "!",
-        "salt": b"0" * 32,
-        "is_active": True,
-    }
-    return row | changes
-
-
-def duty(scene: Scene, **changes: Any) -> dict[str, Any]:
-    row = {
-        "operator_id": scene.people.operator.code,
-        "person_id": scene.people.pilot.id,
-        "role": "auditor",
-        "granted": True,
-        "since": SOON,
-    }
-    return row | changes
-
-
-def token(scene: Scene, **changes: Any) -> dict[str, Any]:
-    row = {
-        "operator_id": scene.people.operator.code,
-        "person_id": scene.people.pilot.id,
-        "label": "test",
-        "digest": "0" * 64,
-        "scopes": ["read"],
-        "integration": False,
-        "issued_at": SOON,
-        "expires_at": datetime(2026, 7, 1, tzinfo=UTC),
-    }
-    return row | changes
-
-
-def settings(scene: Scene, **changes: Any) -> dict[str, Any]:
-    row = {
-        "operator_id": scene.people.operator.code,
-        "number": 2,
-        "true_from": SOON,
-        "known_from": SOON,
-        "entered_by_id": scene.people.manager.id,
-        "reason": "test",
-        "last_minute_weight": "30",
-        "last_minute_unit": "kg",
-        "last_minute_persons": 1,
-        "weighing_threshold_percent": "0.5",
-        "operations_mail": [],
-        "salt": b"0" * 32,
-        "prepare_and_accept_by_one": True,
-        "estimates_may_be_signed": False,
-        "rule_set": "US",
-        "procedure": "manual",
-        "weight_method": "weighed",
-    }
-    return row | changes
-
-
-# What breaks each constraint: its name, the table, the row.
 BREAKS: dict[str, tuple[str, Any]] = {
     "approval_is_by_a_second_person": (
         "approval",
@@ -299,6 +167,21 @@ BREAKS: dict[str, tuple[str, Any]] = {
     "duty_is_of_the_persons_operator": ("duty", lambda s: duty(s, person_id=s.others.pilot.id)),
     "token_is_of_the_persons_operator": ("token", lambda s: token(s, person_id=s.others.pilot.id)),
     "token_expires_after_it_is_issued": ("token", lambda s: token(s, expires_at=SOON)),
+    "token_lives_a_year_at_most": ("token", lambda s: token(s, expires_at=SOON + timedelta(days=366))),
+    "rotation_is_of_the_tokens_operator": (
+        "rotation",
+        lambda s: rotation(s, s.others.pilot),
+    ),
+    "rotation_number_is_taken_once": ("rotation", lambda s: rotation(s, number=1)),
+    "rotation_counts_from_one": ("rotation", lambda s: rotation(s, number=0)),
+    "rotation_lives_a_year_at_most": (
+        "rotation",
+        lambda s: rotation(s, expires_at=SOON + timedelta(days=366)),
+    ),
+    "rotation_overlaps_a_month_at_most": (
+        "rotation",
+        lambda s: rotation(s, previous_ends_at=SOON + timedelta(days=31)),
+    ),
     "settings_number_is_taken_once": ("operatorsettings", lambda s: settings(s, number=1)),
     "settings_count_from_one": ("operatorsettings", lambda s: settings(s, number=0)),
     "settings_say_why": ("operatorsettings", lambda s: settings(s, reason="")),
@@ -321,6 +204,7 @@ BREAKS: dict[str, tuple[str, Any]] = {
 TARGETS = {
     "aircraft_is_of_one_operator",
     "person_is_of_one_operator",
+    "token_is_of_one_operator",
     "loading_basis_has_one_author",
     "loading_basis_is_of_one_aircraft",
     "empty_weight_has_one_author",
