@@ -86,8 +86,9 @@ def _taken(webhook: UUID) -> WebhookDelivery | None:
         due = waiting.filter(try_at__lte=Now()).select_related("webhook", "event")
         delivery = due.order_by("try_at", "id").first()
         if delivery is not None:
-            delivery.held_until = timezone.now() + HELD_FOR
-            delivery.save(update_fields=["held_until"])
+            # By the database's clock, against which it is looked at.
+            WebhookDelivery.objects.filter(pk=delivery.pk).update(held_until=Now() + HELD_FOR)
+            delivery.refresh_from_db(fields=["held_until"])
         return delivery
 
 
