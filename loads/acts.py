@@ -7,8 +7,12 @@ REVISE_LOAD = Kind("revise-load", "replaced a load by a revision")
 ASSESS_LOAD = Kind("assess-load", "assessed a load again")
 PREPARE_LOAD = Kind("prepare-load", "signed a load as prepared")
 ACCEPT_LOAD = Kind("accept-load", "accepted a load")
+CHANGE_LATE = Kind("change-load-late", "changed an accepted load at the last minute")
 WITHDRAW_LOAD = Kind("withdraw-load", "withdrew a load")
 DEPART_LOAD = Kind("depart-load", "reported a load as departed")
+REMARK_REJECT = Kind("remark-reject", "remarked on a rejected load")
+WRITE_NOTE = Kind("write-note", "wrote a note after flight")
+TELL_STALE = Kind("tell-stale-load", "told that an accepted load is stale")
 FILE_MANIFEST = Kind("file-manifest", "filed a manifest")
 
 KINDS = (
@@ -17,7 +21,11 @@ KINDS = (
     ASSESS_LOAD,
     PREPARE_LOAD,
     ACCEPT_LOAD,
+    CHANGE_LATE,
     WITHDRAW_LOAD,
     DEPART_LOAD,
+    REMARK_REJECT,
+    WRITE_NOTE,
+    TELL_STALE,
     FILE_MANIFEST,
 )

@@ -20,20 +20,24 @@ _DECLARES = frozenset(
     }
 )
 _PREPARES = frozenset({acts.PREPARE_LOAD.name})
-_ACCEPTS = frozenset({acts.ACCEPT_LOAD.name})
+# A last-minute change is accepted in the step that makes it, so it is the pilot's.
+_ACCEPTS = frozenset({acts.ACCEPT_LOAD.name, acts.CHANGE_LATE.name})
+_NOTES = frozenset({acts.WRITE_NOTE.name})
+# Whoever may have a hand in mending a rejected load, maintenance with its weighings among them.
+_REMARKS = frozenset({acts.REMARK_REJECT.name})
 
 ACTS_OF: Mapping[Role, frozenset[str]] = MappingProxyType(
     {
-        "pilot": _DECLARES | _PREPARES | _ACCEPTS,
-        "load preparer": _DECLARES | _PREPARES,
-        "loading supervisor": frozenset(),
-        "maintenance": frozenset(),
-        "records approver": frozenset(),
-        "operations manager": _DECLARES | _PREPARES,
+        "pilot": _DECLARES | _PREPARES | _ACCEPTS | _REMARKS | _NOTES,
+        "load preparer": _DECLARES | _PREPARES | _REMARKS | _NOTES,
+        "loading supervisor": _REMARKS,
+        "maintenance": _REMARKS,
+        "records approver": _REMARKS,
+        "operations manager": _DECLARES | _PREPARES | _REMARKS | _NOTES,
         "auditor": frozenset(),
         "integration": _DECLARES,
     }
 )
 
-# What the worker that prints and files manifests may do.
-ACTS_OF_THE_WORKER = frozenset({acts.FILE_MANIFEST.name})
+# What the worker may do that prints and files manifests and tells of stale loads.
+ACTS_OF_THE_WORKER = frozenset({acts.FILE_MANIFEST.name, acts.TELL_STALE.name})

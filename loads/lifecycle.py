@@ -6,15 +6,17 @@ Laws of the table:
 2. Accepting is the pilot in command's alone; who that is, is asked where people are known.
 3. A load is withdrawn, or superseded by a revision, only before it departed. After that nothing replaces it.
 4. `departed`, `superseded` and `withdrawn` have no way out.
-5. `loaded` stands between `prepared` and `accepted` only where a rule set asks for the loading supervisor.
-6. What the table does not list is refused. Only `open` leads to itself: a load assessed again takes a step,
-   so that whoever was about to sign the result before it is refused; one that was prepared opens again and
-   is signed anew.
+5. A last-minute change accepts an accepted load again, under a new assessment.
+6. `loaded` stands between `prepared` and `accepted` only where a rule set asks for the loading supervisor.
+7. What the table does not list is refused. Besides `accepted` only `open` leads to itself: a load assessed
+   again takes a step, so that whoever was about to sign the result before it is refused; one that was
+   prepared opens again and is signed anew.
 
         open --> prepared --> accepted --> departed
                     |            ^
                     +--> loaded -+
         (open, prepared, loaded) --> open, by assessing again
+        accepted --> accepted, by a last-minute change
         (open, prepared, loaded, accepted) --> superseded | withdrawn
 """
 
@@ -46,6 +48,7 @@ STEPS: tuple[Step, ...] = (
     Step("prepared", "loaded", "confirm-loading", needs_within=True, signed_by="loading supervisor"),
     Step("prepared", "accepted", "accept-load", needs_within=True, signed_by="pilot in command"),
     Step("loaded", "accepted", "accept-load", needs_within=True, signed_by="pilot in command"),
+    Step("accepted", "accepted", "change-load-late", needs_within=True, signed_by="pilot in command"),
     Step("accepted", "departed", "depart-load"),
     Step("open", "open", "assess-load"),
     Step("prepared", "open", "assess-load"),
@@ -68,12 +71,15 @@ def ways_out(state: str) -> tuple[State, ...]:
     return tuple(one.end for one in STEPS if one.start == state)
 
 
-def step(state: str, to: str) -> Step:
-    """Find the step from `state` to `to`, or raise `StepRefused` (409, `step-not-allowed`)."""
+def step(state: str, to: str, act: str = "") -> Step:
+    """Find the step from `state` to `to`, or raise `StepRefused` (409, `step-not-allowed`).
+
+    `act`, where it is known, must be the one that takes that step.
+    """
     found = _BY_PAIR.get((state, to))
-    if found is not None:
+    if found is not None and act in {"", found.act}:
         return found
-    ways = ways_out(state)
+    ways = tuple(way for way in ways_out(state) if way != state)
     if ways:
         next_step = f"From {state} a load can become {', '.join(ways)}."
     elif state in STATES:

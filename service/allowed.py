@@ -14,13 +14,17 @@ READ: Final = "read"
 READS: Final = frozenset({READ, fleet.duties.READ_PEOPLE, records.acts.READ_ACCESS_LOG})
 # The scope a person's token needs, besides the password, to sign. It is no act either.
 SIGN: Final = "sign"
-SIGNATURES: Final = frozenset({loads.acts.PREPARE_LOAD.name, loads.acts.ACCEPT_LOAD.name})
+SIGNATURES: Final = frozenset(
+    {loads.acts.PREPARE_LOAD.name, loads.acts.ACCEPT_LOAD.name, loads.acts.CHANGE_LATE.name}
+)
 # Whatever moves a limit or says who may do what needs a person: an integration never does it, whoever owns
 # it.
 _NEEDS_A_PERSON: Final = SIGNATURES | {
     fleet.acts.APPROVE_LOADING_BASIS.name,
     fleet.acts.APPROVE_EMPTY_WEIGHT.name,
     fleet.acts.CHANGE_SETTINGS.name,
+    loads.acts.REMARK_REJECT.name,
+    loads.acts.WRITE_NOTE.name,
     fleet.acts.ENTER_PERSON.name,
     fleet.acts.GRANT_DUTY.name,
     fleet.acts.END_DUTY.name,

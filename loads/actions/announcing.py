@@ -25,15 +25,20 @@ def announce_rejected(entry: Entry, load: Load, assessment: Assessment, result: 
     announce(entry, LOAD_REJECTED, f"load:{load.id}", payload)
 
 
-def announce_accepted(entry: Entry, load: Load, assessment: Assessment, paper: Paper) -> None:
-    """This function will tell that the pilot in command signed a load, and the number of its manifest."""
-    payload = _load(entry, load, assessment) | {"manifest": _manifest(paper)}
+def announce_accepted(
+    entry: Entry, load: Load, assessment: Assessment, paper: Paper, *, issue: int = 1
+) -> None:
+    """This function will tell that the pilot in command signed a load, and the number of its manifest.
+
+    `issue` is above 1 for a last-minute change.
+    """
+    payload = _load(entry, load, assessment) | {"manifest": _manifest(paper, issue)}
     announce(entry, LOAD_ACCEPTED, f"load:{load.id}", payload)
 
 
-def announce_filed(entry: Entry, paper: Paper, digest: str) -> None:
-    """This function will tell that the manifest of a load is filed, and the digest of its bytes."""
-    payload = _flight(paper.load) | {"manifest": _manifest(paper) | {"digest": digest}}
+def announce_filed(entry: Entry, paper: Paper, digest: str, *, issue: int = 1) -> None:
+    """This function will tell that an issue of a load's manifest is filed, and the digest of its bytes."""
+    payload = _flight(paper.load) | {"manifest": _manifest(paper, issue) | {"digest": digest}}
     announce(entry, MANIFEST_FILED, f"load:{paper.load_id}", payload)
 
 
@@ -63,5 +68,6 @@ def _flight(load: Load) -> dict[str, object]:
     }
 
 
-def _manifest(paper: Paper) -> dict[str, object]:
-    return {"number": paper.number, "href": f"/api/v1/loads/{paper.load_id}/manifest"}
+def _manifest(paper: Paper, issue: int) -> dict[str, object]:
+    href = f"/api/v1/loads/{paper.load_id}/manifest?issue={issue}"
+    return {"number": paper.number, "issue": issue, "href": href}

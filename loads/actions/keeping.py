@@ -61,20 +61,13 @@ def keep_assessment(
     return _keep_opening(entry, load, computation, (), after=after, by=by)
 
 
-def _keep_opening(
-    entry: Entry,
-    load: Load,
-    computation: Computation,
-    before: tuple[models.Model, ...],
-    *,
-    after: Current | None,
-    by: int | None,
-) -> Current:
-    assessment = Assessment(
+def assessment_of(entry: Entry, load: Load, computation: Computation, *, number: int) -> Assessment:
+    """This function will return the row of an assessment, not yet written."""
+    return Assessment(
         id=new_load_id(),
         operator_id=entry.chain,
         load=load,
-        number=after.assessment.number + 1 if after else 1,
+        number=number,
         verdict=computation.verdict,
         result=computation.result_text.decode(),
         salt=secrets.token_bytes(SALT_BYTES),
@@ -84,6 +77,19 @@ def _keep_opening(
         engine=ENGINE_VERSION,
         assessed_at=entry.at,
     )
+
+
+def _keep_opening(
+    entry: Entry,
+    load: Load,
+    computation: Computation,
+    before: tuple[models.Model, ...],
+    *,
+    after: Current | None,
+    by: int | None,
+) -> Current:
+    number = after.assessment.number + 1 if after else 1
+    assessment = assessment_of(entry, load, computation, number=number)
     step = Step(
         operator_id=entry.chain,
         load=load,

@@ -1,14 +1,16 @@
 """Signing: what preparing and accepting share. Every refusal here leaves no row."""
 
 import secrets
+from collections.abc import Mapping
 from dataclasses import dataclass
 from typing import Literal
 from uuid import UUID
 
 from loads.actions.keeping import SALT_BYTES
 from loads.actions.stepping import load_as_seen, take_step
-from loads.models import Signature, Step
-from loads.queries.current import Current, declared_in
+from loads.models import Load, Signature, Step
+from loads.queries.current import Current
+from loads.queries.declaration import declared_now
 from loads.queries.signable import capacity_of, statement_of, words_to_sign
 from loads.queries.stale import stale_parts
 from loads.statement import digest_of
@@ -69,19 +71,31 @@ def sign(
     """
     signer = person_signing(by)
     current = load_as_seen(entry, load, seen, meaning)
-    declared = declared_in(current.load)
-    _refuse_other_hands(current, meaning, by)
-    _refuse_what_cannot_be_signed(entry, current, signing, declared)
+    declared = declared_now(current)
+    if meaning == "accepted":
+        refuse_all_but_the_pilot(current.load, by)
+        _refuse_the_same_hand_twice(current, signer)
+    used = current.assessment
+    refuse_unsignable(current.load, signing, verdict=used.verdict, digest=used.digest, declared=declared)
+    _refuse_what_moved_on(entry, current, declared)
+    words = words_to_sign(current, declared, meaning)
     step = take_step(entry, current, meaning, by=by)
-    Signature.objects.create(
+    write_signature(entry, Current(current.load, step, used), signing, words=words, by=by)
+    return current, step
+
+
+def write_signature(entry: Entry, stands: Current, signing: Signing, *, words: str, by: Actor) -> Signature:
+    """This function will write the signature under the step just taken; `words` are what was signed."""
+    step = stands.step
+    return Signature.objects.create(
         operator_id=entry.chain,
-        load=current.load,
-        assessment=current.assessment,
+        load=stands.load,
+        assessment=stands.assessment,
         step=step,
-        person_id=signer,
-        meaning=meaning,
-        capacity=capacity_of(current.state, meaning),
-        statement=words_to_sign(current, declared, meaning),
+        person_id=person_signing(by),
+        meaning=step.after,
+        capacity=capacity_of(step.before, step.after),
+        statement=words,
         digest=signing.digest,
         name=by.name.encode(),
         salt=secrets.token_bytes(SALT_BYTES),
@@ -89,13 +103,10 @@ def sign(
         signed_from=signing.signed_from[:LONGEST_ADDRESS],
         means="token" if by.kind == "token" else "session",
     )
-    return current, step
 
 
-def _refuse_other_hands(current: Current, meaning: Meaning, by: Actor) -> None:
-    load = current.load
-    if meaning != "accepted":
-        return
+def refuse_all_but_the_pilot(load: Load, by: Actor) -> None:
+    """This function will raise StepRefused unless the actor is the load's pilot in command."""
     if load.pilot_id is None:
         raise StepRefused(
             "no-pilot-in-command",
@@ -108,7 +119,11 @@ def _refuse_other_hands(current: Current, meaning: Meaning, by: Actor) -> None:
             "Only the pilot in command of this load accepts it.",
             next_step="Let that pilot sign, or revise the load if another pilot flies.",
         )
-    prepared = load.steps.filter(after="prepared", assessment=current.assessment, person_id=by.person)
+
+
+def _refuse_the_same_hand_twice(current: Current, signer: int) -> None:
+    load = current.load
+    prepared = load.steps.filter(after="prepared", assessment=current.assessment, person_id=signer)
     if not load.operator.prepare_and_accept_by_one and prepared.exists():
         raise StepRefused(
             "second-person-needed",
@@ -117,35 +132,38 @@ def _refuse_other_hands(current: Current, meaning: Meaning, by: Actor) -> None:
         )
 
 
-def _refuse_what_cannot_be_signed(
-    entry: Entry, current: Current, signing: Signing, declared: dict[str, JSON]
+def refuse_unsignable(
+    load: Load, signing: Signing, *, verdict: str, digest: str, declared: Mapping[str, JSON]
 ) -> None:
-    used = current.assessment
-    if signing.digest != used.digest:
+    """This function will raise StepRefused unless what was shown is what would be signed, and may be."""
+    if signing.digest != digest:
         raise StepRefused(
             "digest-differs",
             "What was shown is not what would be signed.",
             next_step="Read the load again and sign the digest it shows now.",
         )
-    if used.verdict != "within":
+    if verdict != "within":
         raise StepRefused(
             "not-within",
-            f"The verdict is {used.verdict}; only a load that is within every limit can be signed.",
+            f"The verdict is {verdict}; only a load that is within every limit can be signed.",
             next_step="See the checks, and revise the load.",
         )
+    if not load.operator.estimates_may_be_signed and _estimated(declared):
+        raise StepRefused(
+            "estimated-weights",
+            "The weight of a person is estimated, and this operator's procedure has no estimates of people.",
+            next_step="Weigh or ask, and revise the load.",
+        )
+
+
+def _refuse_what_moved_on(entry: Entry, current: Current, declared: Mapping[str, JSON]) -> None:
     if changed := stale_parts(current, entry.at):
         raise StepRefused(
             "stale",
             f"Changed since it was assessed: {', '.join(changed)}.",
             next_step="Have it assessed again, look at the result, and sign that.",
         )
-    if not current.load.operator.estimates_may_be_signed and _estimated(declared):
-        raise StepRefused(
-            "estimated-weights",
-            "The weight of a person is estimated, and this operator's procedure has no estimates of people.",
-            next_step="Weigh or ask, and revise the load.",
-        )
-    if digest_of(statement_of(current, declared)) != used.digest:
+    if digest_of(statement_of(current, declared)) != current.assessment.digest:
         raise StepRefused(
             "record-altered",
             "What is stored no longer gives the digest it was kept under.",
@@ -153,7 +171,7 @@ def _refuse_what_cannot_be_signed(
         )
 
 
-def _estimated(declared: dict[str, JSON]) -> bool:
+def _estimated(declared: Mapping[str, JSON]) -> bool:
     for group in ("crew", "passengers"):
         lines = declared.get(group)
         for line in lines if isinstance(lines, list) else []:

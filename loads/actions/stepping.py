@@ -36,7 +36,7 @@ def load_as_seen(entry: Entry, load: UUID, seen: str, to: str) -> Current:
             f"The load has moved on since it was read; it is {current.state} now.",
             next_step="Read it again, look at what changed, and send its new ETag.",
         )
-    lifecycle.step(current.state, to)
+    lifecycle.step(current.state, to, entry.kind)
     return current
 
 

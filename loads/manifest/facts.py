@@ -97,10 +97,26 @@ class SealFacts:
 
 
 @dataclass(frozen=True, slots=True)
+class ChangeFacts:
+    """One last-minute change: its lines in words (with names), who accepted it, when, and what all changes
+    came to with it, beside the bound.
+    """
+
+    number: int
+    lines: tuple[str, ...]
+    by: str
+    at: datetime
+    moved: str
+    bound: str
+
+
+@dataclass(frozen=True, slots=True)
 class Facts:
     """One accepted load. `inputs` is the document `tarebook.load/1` as typed, `result` the result document.
 
     `statement` is what was signed, as canonical bytes; `digest` is its SHA-256. `number` is the manifest's.
+    `changes` are those at the last minute, the first one first: each reissued the manifest, so the issue is
+    one more than there are. `earlier` are the signatures under the issues before.
     """
 
     operator: OperatorFacts
@@ -117,6 +133,13 @@ class Facts:
     seal: SealFacts
     statement: bytes
     digest: str
+    changes: tuple[ChangeFacts, ...] = ()
+    earlier: tuple[SignatureFacts, ...] = ()
+
+    @property
+    def issue(self) -> int:
+        """The issue of the manifest, 1 as long as nothing was changed at the last minute."""
+        return len(self.changes) + 1
 
 
 def typed_sources(facts: Computed) -> tuple[str, ...]:

@@ -6,45 +6,52 @@ from uuid import UUID
 
 from fleet.models import Aircraft, EmptyWeight, LoadingBasis, Operator
 from fleet.queries.figures import basis_of
+from loads.balance.late_change import said
 from loads.manifest.facts import (
     AircraftFacts,
     BasisFacts,
+    ChangeFacts,
     EmptyWeightFacts,
     Facts,
     OperatorFacts,
     SealFacts,
     SignatureFacts,
 )
-from loads.models import Assessment, Load, Paper, Signature, Step
-from loads.queries.current import Current, declared_in
+from loads.models import Assessment, LateChange, Load, Paper, Signature, Step
+from loads.queries.current import Current
+from loads.queries.declaration import declared_now
+from loads.queries.late_change import bound_of, changes_of, lines_of, moved_by
 from loads.queries.signable import statement_of
 from loads.statement import MEANINGS
 from records.canonical import canonical
 from records.models.act import Act
 from records.queries import seal_of
 from records.refusal import NotKnown, StepRefused
+from records.strict_json import JSON
 
 
-def facts_of(paper: Paper) -> Facts:
-    """This function will return the facts of the load a manifest number was taken for.
+def facts_of(paper: Paper, change: LateChange | None = None) -> Facts:
+    """This function will return the facts of the load a manifest number was taken for, for its first issue or
+    the one that a last-minute change made.
 
-    They are those of its acceptance: the assessment that was signed and the versions it used, whatever is in
+    They are those of that acceptance: the assessment that was signed and the versions it used, whatever is in
     force now. Raises StepRefused while the act of acceptance is not sealed, which another transaction never
     sees.
     """
+    act = change.act if change else paper.act
     step = Step.objects.select_related(
         "load__operator",
         "load__aircraft",
         "assessment__loading_basis__approval",
         "assessment__empty_weight__approval",
-    ).get(load_id=paper.load_id, act=paper.act)
+    ).get(load_id=paper.load_id, act=act)
     load, used = step.load, step.assessment
     if used is None or used.loading_basis is None or used.empty_weight is None:
         raise StepRefused(
             "not-computed", "The load was accepted on no computation, so there is nothing to print."
         )
     current = Current(load, step, used)
-    declared = declared_in(load)
+    declared = declared_now(current)
     signed = canonical(statement_of(current, declared))
     return Facts(
         operator=_operator(load.operator),
@@ -58,9 +65,11 @@ def facts_of(paper: Paper) -> Facts:
         empty_weight=_empty_weight(used.empty_weight),
         engine=used.engine,
         signatures=_signatures(load, used),
-        seal=_seal(paper.act),
+        seal=_seal(act),
         statement=signed,
         digest=used.digest,
+        changes=_changes(load, change, declared),
+        earlier=_signatures(load, used, before=step.number) if change else (),
     )
 
 
@@ -111,8 +120,36 @@ def _known_from(row: LoadingBasis | EmptyWeight) -> datetime | None:
     return approval.known_from if approval else None
 
 
-def _signatures(load: Load, used: Assessment) -> tuple[SignatureFacts, ...]:
-    rows = Signature.objects.filter(load=load, assessment=used).order_by("step__number")
+def _changes(load: Load, last: LateChange | None, declared: dict[str, JSON]) -> tuple[ChangeFacts, ...]:
+    """Tell the changes up to the last one given; a later one belongs to a later issue."""
+    if last is None:
+        return ()
+    changes = changes_of(load)[: last.number]
+    names = {one.step_id: bytes(one.name).decode() for one in Signature.objects.filter(load=load)}
+    told = []
+    for place, one in enumerate(changes, 1):
+        bound = bound_of(one)
+        told.append(
+            ChangeFacts(
+                number=one.number,
+                lines=tuple(said(line, named=True) for line in lines_of(one)),
+                by=names[one.step_id],
+                at=one.changed_at,
+                moved=bound.said(moved_by(changes[:place], declared)),
+                bound=bound.words(),
+            )
+        )
+    return tuple(told)
+
+
+def _signatures(load: Load, used: Assessment, before: int | None = None) -> tuple[SignatureFacts, ...]:
+    """Tell the signatures under an assessment, or those under the earlier ones that were accepted."""
+    rows = Signature.objects.filter(load=load).order_by("step__number")
+    if before is None:
+        rows = rows.filter(assessment=used)
+    else:
+        accepted = load.steps.filter(after="accepted", number__lt=before).values("assessment")
+        rows = rows.filter(assessment__in=accepted)
     return tuple(
         SignatureFacts(
             name=bytes(row.name).decode(),

@@ -34,6 +34,9 @@ def sheet(facts: Facts) -> dict[str, object]:
         "operator": facts.operator,
         "aircraft": facts.aircraft,
         "number": str(facts.number),
+        "issue": str(facts.issue) if facts.changes else "",
+        "changes": tables.changes(facts, words),
+        "earlier": tables.signatures_under_earlier_issues(facts),
         "load": facts.load,
         "replaces": facts.replaces,
         "units": facts.result["units"],
@@ -67,7 +70,8 @@ def title_of(facts: Facts) -> str:
     """This function will return the title of the paper; it names no person."""
     flight = facts.inputs["flight"]
     named = f"{flight['reference']} leg {flight['leg']}"
-    return f"Load manifest {facts.number}, {facts.aircraft.registration}, {named}"
+    issue = f" issue {facts.issue}" if facts.changes else ""
+    return f"Load manifest {facts.number}{issue}, {facts.aircraft.registration}, {named}"
 
 
 def _plots(facts: Facts, words: Words) -> list[str]:
@@ -91,6 +95,7 @@ def _rules_note(facts: Facts, words: Words) -> str:
 
 def _code(facts: Facts) -> str:
     """A QR code with the number and the digest, for comparing a paper with the record by machine."""
-    text = f"{facts.operator.code} manifest {facts.number} sha256:{facts.digest}"
+    issue = f" issue {facts.issue}" if facts.changes else ""
+    text = f"{facts.operator.code} manifest {facts.number}{issue} sha256:{facts.digest}"
     drawn: str = segno.make(text, error="m", micro=False).svg_inline(border=0, svgclass=None, lineclass=None)
     return drawn

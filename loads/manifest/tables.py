@@ -3,7 +3,7 @@
 from collections.abc import Iterable, Mapping
 from typing import Any
 
-from loads.manifest.facts import Computed, Facts, typed_sources
+from loads.manifest.facts import Computed, Facts, SignatureFacts, typed_sources
 from loads.manifest.figures import both_clocks, column, sided, utc
 from loads.manifest.ruler import ruler
 from loads.manifest.words import Words
@@ -125,18 +125,39 @@ def _since(moment: Any) -> str:
 
 def signatures(facts: Facts) -> list[Row]:
     """This function will return the signatures in the order they were given, with both clocks."""
+    return [_signature(one, facts) for one in facts.signatures]
+
+
+def signatures_under_earlier_issues(facts: Facts) -> list[Row]:
+    """This function will return the signatures given before the last-minute change, the same way."""
+    return [_signature(one, facts) for one in facts.earlier]
+
+
+def _signature(one: SignatureFacts, facts: Facts) -> Row:
+    return {
+        "name": one.name,
+        "capacity": one.capacity,
+        "meaning": one.meaning,
+        "statement": one.statement,
+        "time": both_clocks(one.signed_at, facts.operator.time_zone),
+        "means": f"password at a {one.means}"
+        if one.means == "session"
+        else f"password and a personal {one.means}",
+    }
+
+
+def changes(facts: Facts, words: Words) -> list[Row]:
+    """This function will return the last-minute changes, each a numbered line with its parts."""
     return [
         {
-            "name": one.name,
-            "capacity": one.capacity,
-            "meaning": one.meaning,
-            "statement": one.statement,
-            "time": both_clocks(one.signed_at, facts.operator.time_zone),
-            "means": f"password at a {one.means}"
-            if one.means == "session"
-            else f"password and a personal {one.means}",
+            "number": str(one.number),
+            "issue": str(one.number + 1),
+            "lines": one.lines,
+            "by": one.by,
+            "time": both_clocks(one.at, facts.operator.time_zone),
+            "counted": words.said(f"added up {one.moved}, of {one.bound} allowed"),
         }
-        for one in facts.signatures
+        for one in facts.changes
     ]
 
 

@@ -2,9 +2,27 @@
 
 from loads.models.assessment import Assessment
 from loads.models.declaration import Declaration
+from loads.models.late_change import FiledIssue, LateChange
 from loads.models.load import Load
+from loads.models.note import Note
 from loads.models.paper import FiledPaper, Paper
+from loads.models.remark import Remark
 from loads.models.signature import Signature
+from loads.models.stale_notice import StaleNotice
 from loads.models.step import AllowedStep, Step
 
-__all__ = ["AllowedStep", "Assessment", "Declaration", "FiledPaper", "Load", "Paper", "Signature", "Step"]
+__all__ = [
+    "AllowedStep",
+    "Assessment",
+    "Declaration",
+    "FiledIssue",
+    "FiledPaper",
+    "LateChange",
+    "Load",
+    "Note",
+    "Paper",
+    "Remark",
+    "Signature",
+    "StaleNotice",
+    "Step",
+]

@@ -28,8 +28,9 @@ class Step(models.Model):
     """One step. The first goes from "" to "open".
 
     Foreign keys in the database: (before, after) is an allowed pair; (load, previous, before) is the step
-    before; (load, previous, carried) too, so only a step to "open" brings another assessment; (load,
-    acceptor) is the load's pilot in command. (load, number) is unique, so of two racers one is refused.
+    before; (load, previous, carried) too, so only a step to "open", or a last-minute change ("accepted" to
+    "accepted"), brings another assessment; (load, acceptor) is the load's pilot in command. (load, number)
+    is unique, so of two racers one is refused.
     """
 
     id = models.BigAutoField(primary_key=True)
@@ -48,7 +49,9 @@ class Step(models.Model):
     departed_at = models.DateTimeField(null=True)
     act = models.UUIDField()
     carried = models.GeneratedField(
-        expression=Case(When(~Q(after="open"), then=F("assessment"))),
+        expression=Case(
+            When(~Q(after="open") & ~Q(before="accepted", after="accepted"), then=F("assessment"))
+        ),
         output_field=models.UUIDField(null=True),
         db_persist=True,
     )
@@ -68,6 +71,11 @@ class Step(models.Model):
             ),
             models.UniqueConstraint(
                 fields=["assessment"], condition=Q(after="open"), name="step_brings_an_assessment_once"
+            ),
+            models.UniqueConstraint(
+                fields=["assessment"],
+                condition=Q(before="accepted", after="accepted"),
+                name="step_of_a_late_change_brings_an_assessment_once",
             ),
             models.CheckConstraint(
                 condition=Q(number=1, previous__isnull=True, before="", after="open")

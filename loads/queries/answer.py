@@ -8,7 +8,8 @@ from loads.cautions import CAUTIONS, INVENTED
 from loads.lifecycle import ways_out
 from loads.models import Load, Paper, Signature
 from loads.queries.computation import Computation, versions_of
-from loads.queries.current import Current, declared_in
+from loads.queries.current import Current
+from loads.queries.declaration import declared_now
 from loads.queries.signable import signatures_due
 from loads.queries.stale import stale_parts
 
@@ -44,7 +45,7 @@ def full_answer_of(current: Current, *, known: datetime) -> Answer:
     """This function will return all there is to read about a load: also what was declared, the names of the
     signers, every step, and whether the assessment still rests on what is in force as known at `known`.
     """
-    load, declared = current.load, declared_in(current.load)
+    load, declared = current.load, declared_now(current)
     signatures = [
         {**_signature(one), "name": bytes(one.name).decode(), "statement": one.statement}
         for one in signatures_of(load)

@@ -28,8 +28,13 @@ class Current:
 
     def result(self) -> dict[str, object]:
         """This function will return the result document of the assessment in use."""
-        document: dict[str, object] = json.loads(self.assessment.result)
-        return document
+        return result_in(self.assessment)
+
+
+def result_in(assessment: Assessment) -> dict[str, object]:
+    """This function will return the result document of an assessment."""
+    document: dict[str, object] = json.loads(assessment.result)
+    return document
 
 
 def load_of(operator: str, load: UUID) -> Current:

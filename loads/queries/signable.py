@@ -37,7 +37,9 @@ def signatures_due(current: Current, declared: Mapping[str, object]) -> dict[str
     """
     if current.assessment.verdict != "within":
         return {}
-    due = (meaning for meaning in MEANINGS if meaning in lifecycle.ways_out(current.state))
+    # What is signed already is not due: a last-minute change is signed in its own step.
+    ways = set(lifecycle.ways_out(current.state)) - {current.state}
+    due = (meaning for meaning in MEANINGS if meaning in ways)
     return {meaning: words_to_sign(current, declared, meaning) for meaning in due}
 
 

@@ -22,7 +22,8 @@ from loads.actions.stepping import reason_in
 from loads.actions.submit_load import submit_load
 from loads.manifest.words import WORDS
 from loads.queries.computation import compute
-from loads.queries.current import declared_in, load_of
+from loads.queries.current import load_of
+from loads.queries.declaration import declared_now
 from loads.web.asking import typed_in, zone_of, zone_words
 from loads.web.desk import lay_desk, wrong_inputs
 from loads.web.form import can_carry, document_of, field_of, typed_of
@@ -71,7 +72,7 @@ def revise(request: HttpRequest, load: UUID) -> HttpResponse:
     load.
     """
     current, zone = load_of(operator_of(request), load), zone_of(request)
-    declared = declared_in(current.load)
+    declared = declared_now(current)
     local = current.load.departure.astimezone(zone)
     copied = typed_of(declared) | {
         "date": f"{local:%Y-%m-%d}",

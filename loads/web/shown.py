@@ -20,7 +20,8 @@ from loads.manifest.words import WORDS, Words
 from loads.models import Load
 from loads.plot import plot
 from loads.queries.answer import signatures_of
-from loads.queries.current import Current, declared_in
+from loads.queries.current import Current
+from loads.queries.declaration import declared_now
 from loads.queries.signable import signatures_due
 from loads.queries.stale import stale_parts
 from records.actor import Actor
@@ -49,7 +50,7 @@ class Page:
 
 def load_page(current: Current, zone: ZoneInfo, now: datetime, actor: Actor) -> dict[str, Any]:
     """This function will return the values of one load's page at `now`, for this actor."""
-    load, page = current.load, Page(declared_in(current.load), current.result())
+    load, page = current.load, Page(declared_now(current), current.result())
     words = WORDS[load.operator.rule_set]
     stale = stale_parts(current, now) if ways_out(current.state) else ()
     return {

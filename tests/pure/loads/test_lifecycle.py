@@ -11,7 +11,7 @@ ALLOWED = {
     "open": {"open", "prepared", "superseded", "withdrawn"},
     "prepared": {"open", "loaded", "accepted", "superseded", "withdrawn"},
     "loaded": {"open", "accepted", "superseded", "withdrawn"},
-    "accepted": {"departed", "superseded", "withdrawn"},
+    "accepted": {"accepted", "departed", "superseded", "withdrawn"},
     "departed": set(),
     "superseded": set(),
     "withdrawn": set(),
@@ -64,3 +64,10 @@ def test_after_departure_nothing_replaces_or_withdraws_a_load():
     with pytest.raises(StepRefused) as refused:
         step("departed", "superseded")
     assert "stays as it is" in refused.value.next_step
+
+
+def test_an_accepted_load_is_accepted_again_only_by_a_last_minute_change():
+    assert step("accepted", "accepted", "change-load-late").signed_by == "pilot in command"
+    with pytest.raises(StepRefused) as refused:
+        step("accepted", "accepted", "accept-load")
+    assert refused.value.next_step == "From accepted a load can become departed, superseded, withdrawn."
