@@ -12,11 +12,13 @@ from contextlib import AbstractContextManager, contextmanager
 from contextvars import ContextVar
 from dataclasses import dataclass
 from datetime import datetime
+from functools import partial
 from uuid import UUID
 
 from django.db import connection, transaction
 
 from records.actor import Actor
+from records.figures import count_act
 from records.guard.refusals import ActMisplaced, refusals_named
 from records.kind import Kind
 from records.refusal import NotAllowed
@@ -64,6 +66,7 @@ def act(kind: Kind, *, by: Actor, about: str, reason: str = "") -> Iterator[Entr
         )
     with refusals_named(), _transaction_of_an_act(kind):
         yield _open(kind, by, about, reason)
+        transaction.on_commit(partial(count_act, kind.name), robust=True)
 
 
 @contextmanager

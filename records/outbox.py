@@ -8,12 +8,13 @@ sends it again.
 from __future__ import annotations
 
 import logging
+from dataclasses import dataclass
 from datetime import timedelta
 from typing import TYPE_CHECKING
 
 from celery import current_app
 from django.db import transaction
-from django.db.models import F
+from django.db.models import Count, F, Max, Min
 from django.db.models.functions import Now
 
 from records import broker
@@ -27,6 +28,14 @@ log = logging.getLogger(__name__)
 # The first sweep leaves the worker that was woken at commit this much time.
 FIRST_LOOK = timedelta(seconds=15)
 LONGEST_WAIT = timedelta(hours=1)
+
+
+@dataclass(frozen=True, slots=True)
+class Waiting:
+    """Promised work not done: how many pieces, and how long the oldest waits (seconds, 0 for none)."""
+
+    count: int
+    oldest_seconds: float
 
 
 def put(entry: Entry, task: str, key: str) -> None:
@@ -97,3 +106,12 @@ def take_due(most: int) -> list[tuple[str, str]]:
 def wait_after(tries: int) -> timedelta:
     """This function will return how long to wait after the given number of earlier tries."""
     return min(timedelta(seconds=30 << min(tries, 10)), LONGEST_WAIT)
+
+
+def waiting() -> Waiting:
+    """This function will return how much promised work is not done."""
+    found = Outbox.objects.filter(done_at__isnull=True).aggregate(
+        count=Count("id"), oldest=Min("put_at"), now=Max(Now())
+    )
+    waits = (found["now"] - found["oldest"]).total_seconds() if found["oldest"] else 0.0
+    return Waiting(found["count"], max(0.0, waits))

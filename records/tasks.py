@@ -6,7 +6,7 @@ from uuid import UUID
 from celery import shared_task
 from django.db.models.functions import Now
 
-from records import access_log, outbox
+from records import access_log, outbox, verified
 from records.models.receipt import KEPT_FOR, Receipt
 from records.webhooks.deliver import deliver_due, due_webhooks
 from records.webhooks.waking import DELIVERING, wake
@@ -56,3 +56,15 @@ def deliver_to_webhook(webhook: str) -> int:
 def sweep_webhooks() -> int:
     """This function will wake a worker for each subscription with something due, and count those woken."""
     return wake(str(webhook) for webhook in due_webhooks(MOST_AT_ONCE))
+
+
+@shared_task(name="records.tasks.verify_onwards", ignore_result=True)
+def verify_onwards() -> int:
+    """This function will follow each chain from where it last held, and count the places that do not hold."""
+    return len(verified.verify_onwards())
+
+
+@shared_task(name="records.tasks.verify_everything", ignore_result=True)
+def verify_everything() -> int:
+    """This function will verify chains, documents, rows and guards, and count the places that do not hold."""
+    return len(verified.verify_everything())

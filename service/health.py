@@ -1,24 +1,29 @@
 """Whether the service is alive, and whether it can do its job: GET /health, without login.
 
 It says which part is not well and nothing about its inside. A broker that is down is told but does not make
-the service unready: loads are signed without it, and manifests are made on demand.
+the service unready: loads are signed without it, and manifests are made on demand. Nor does a trail that was
+found broken: who then may sign is for people to decide, and `manage.py verify` names the place.
+
+GET /health/alive answers as long as this process does, and asks nothing else.
 """
 
 import logging
 from collections.abc import Callable
 from contextlib import suppress
-from typing import Final
+from typing import Any, Final
 
 from celery import current_app
 from django.db import DatabaseError, connection
 from django.db.migrations.executor import MigrationExecutor
-from django.http import HttpResponse
+from django.http import HttpRequest, HttpResponse
+from django.views.decorators.http import require_safe
 from drf_spectacular.utils import extend_schema
 from rest_framework.request import Request
 from rest_framework.views import APIView
 
 from records.api.render import rendered
 from records.guard import missing_guards
+from records.verified import last_verified
 from service.roles import SERVICE
 
 log = logging.getLogger(__name__)
@@ -30,6 +35,16 @@ _SHAPE: Final = {
     "properties": {
         "status": {"type": "string", "enum": ["ready", "not ready"]},
         "parts": {"type": "object", "additionalProperties": {"type": "string"}},
+        "verified": {
+            "type": "object",
+            "required": ["entries", "waiting", "at", "whole_at"],
+            "properties": {
+                "entries": {"type": "integer"},
+                "waiting": {"type": "integer"},
+                "at": {"type": ["string", "null"], "format": "date-time"},
+                "whole_at": {"type": ["string", "null"], "format": "date-time"},
+            },
+        },
     },
 }
 
@@ -55,8 +70,16 @@ class Health(APIView):
         }
         ready = all(found == "ok" for found in parts.values())
         parts["broker"] = _asked(_broker)
-        body = {"status": "ready" if ready else "not ready", "parts": parts}
+        body: dict[str, Any] = {"status": "ready" if ready else "not ready", "parts": parts}
+        with suppress(DatabaseError):
+            body["verified"], parts["trail"] = _trail()
         return HttpResponse(rendered(body), status=200 if ready else 503, content_type="application/json")
+
+
+@require_safe
+def alive(_request: HttpRequest) -> HttpResponse:
+    """This function will answer that this process answers."""
+    return HttpResponse(rendered({"status": "alive"}), content_type="application/json")
 
 
 def _asked(part: Callable[[], str]) -> str:
@@ -94,6 +117,19 @@ def _guards() -> str:
 def _migrations() -> str:
     executor = MigrationExecutor(connection)
     return "ok" if not executor.migration_plan(executor.loader.graph.leaf_nodes()) else "not all have run"
+
+
+def _trail() -> tuple[dict[str, Any], str]:
+    found = last_verified()
+    told = {
+        "entries": found.entries,
+        "waiting": found.waiting,
+        "at": found.at.isoformat() if found.at else None,
+        "whole_at": found.whole_at.isoformat() if found.whole_at else None,
+    }
+    if not found.sound:
+        return told, "broken"
+    return told, "ok" if found.at else "not all verified yet"
 
 
 def _broker() -> str:

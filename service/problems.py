@@ -24,6 +24,7 @@ from records.refusal import Fault, LockedOut, Refused
 log = logging.getLogger(__name__)
 
 MEDIA_TYPE: Final = "application/problem+json"
+_FOR_PROGRAMS: Final = frozenset({"/health", "/health/alive", "/metrics"})
 CHALLENGE: Final = 'Bearer realm="tarebook"'
 
 # What the framework refuses, by status: code, title, next step.
@@ -113,7 +114,7 @@ def problem(
 
 def is_api(request: HttpRequest) -> bool:
     """This function will say whether the request is one of a program, whose answers are JSON."""
-    return request.path_info.startswith("/api/") or request.path_info == "/health"
+    return request.path_info.startswith("/api/") or request.path_info in _FOR_PROGRAMS
 
 
 def not_found(request: HttpRequest, exception: Exception | None = None) -> HttpResponse:  # noqa: ARG001  # the form Django calls

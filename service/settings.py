@@ -6,6 +6,8 @@ ATOMIC_REQUESTS stays off: the door (records.act) opens the one durable transact
 from pathlib import Path
 from typing import Any
 
+from celery.schedules import crontab
+
 import fleet.events
 import loads.events
 from service import env
@@ -37,6 +39,8 @@ MIDDLEWARE = [
     "django.middleware.security.SecurityMiddleware",
     "whitenoise.middleware.WhiteNoiseMiddleware",
     "service.headers.HeadersMiddleware",
+    "service.accounting.AccountingMiddleware",
+    "service.rate_limits.RateLimitMiddleware",
     "django.middleware.clickjacking.XFrameOptionsMiddleware",
     "django.contrib.sessions.middleware.SessionMiddleware",
     "django.middleware.common.CommonMiddleware",
@@ -98,6 +102,15 @@ CELERY_BEAT_SCHEDULE = {
         "schedule": 5.0,
         "options": {"expires": 5.0},
     },
+    "verify-onwards": {
+        "task": "records.tasks.verify_onwards",
+        "schedule": 300.0,
+        "options": {"expires": 300.0},
+    },
+    "verify-everything": {
+        "task": "records.tasks.verify_everything",
+        "schedule": crontab(hour="2", minute="30"),
+    },
     "forget-old-answers": {"task": "records.tasks.forget_old_answers", "schedule": 3600.0},
 }
 
@@ -151,8 +164,20 @@ SECURE_HSTS_PRELOAD = HTTPS
 SECURE_CONTENT_TYPE_NOSNIFF = True
 SECURE_REFERRER_POLICY = "same-origin"
 X_FRAME_OPTIONS = "DENY"
-if env.flag("BEHIND_PROXY", False):
+BEHIND_PROXY = env.flag("BEHIND_PROXY", False)
+if BEHIND_PROXY:
     SECURE_PROXY_SSL_HEADER = ("HTTP_X_FORWARDED_PROTO", "https")
+
+# Requests a minute: of a token or a person, of an address nobody is known at, and of what tries a password.
+# 0: no limit.
+RATE_LIMITS = {
+    "known": env.whole("RATE_LIMIT_KNOWN", 1200, low=0, high=1_000_000),
+    "stranger": env.whole("RATE_LIMIT_STRANGER", 120, low=0, high=1_000_000),
+    "sign-in": env.whole("RATE_LIMIT_SIGN_IN", 20, low=0, high=1_000_000),
+    "signing": env.whole("RATE_LIMIT_SIGNING", 30, low=0, high=1_000_000),
+}
+# Without a token only this machine is told the figures, and nobody behind a proxy.
+METRICS_TOKEN = env.text("METRICS_TOKEN", "")
 
 STATIC_URL = "static/"
 STATICFILES_DIRS = [BASE_DIR / "static"]
@@ -199,11 +224,21 @@ SPECTACULAR_SETTINGS = {
 LOGGING = {
     "version": 1,
     "disable_existing_loggers": False,
-    "formatters": {"plain": {"format": "%(levelname)s %(name)s %(message)s"}},
-    "handlers": {"console": {"class": "logging.StreamHandler", "formatter": "plain"}},
+    "filters": {"numbered": {"()": "service.log_lines.Numbered"}},
+    "formatters": {
+        "plain": {
+            "()": "service.log_lines.Plain",
+            "format": "%(levelname)s %(name)s [%(request_number)s] %(message)s",
+        }
+    },
+    "handlers": {
+        "console": {"class": "logging.StreamHandler", "formatter": "plain", "filters": ["numbered"]}
+    },
     "root": {"handlers": ["console"], "level": env.text("LOG_LEVEL", "INFO")},
     "loggers": {
         "axes": {"level": "ERROR"},
+        # What was refused stands in the line of its request already; a failure comes with its trace.
+        "django.request": {"level": "ERROR"},
         "fontTools": {"level": "WARNING"},
         "weasyprint": {"level": "ERROR"},
     },

@@ -4,7 +4,8 @@ from django.urls import URLPattern, URLResolver, include, path
 
 from service import pages
 from service.docs import docs, openapi
-from service.health import Health
+from service.figures import metrics
+from service.health import Health, alive
 
 api: list[URLPattern | URLResolver] = [
     path("", include("records.api.urls")),
@@ -16,6 +17,8 @@ api: list[URLPattern | URLResolver] = [
 urlpatterns = [
     path("api/v1/", include(api)),
     path("health", Health.as_view(schema=None), name="health"),
+    path("health/alive", alive, name="alive"),
+    path("metrics", metrics, name="metrics"),
     path("docs", docs, name="docs"),
     path("sign-in", pages.sign_in, name="sign-in"),
     path("sign-out", pages.sign_out, name="sign-out"),

@@ -9,6 +9,7 @@ from records.models.name import Name
 from records.models.outbox import Outbox
 from records.models.receipt import Receipt
 from records.models.seal import Closing, Seal
+from records.models.verified import Verified
 from records.models.webhook import Webhook, WebhookSecret, WebhookStep
 from records.models.webhook_delivery import WebhookAttempt, WebhookDelivery, WebhookEvent
 
@@ -24,6 +25,7 @@ __all__ = [
     "Outbox",
     "Receipt",
     "Seal",
+    "Verified",
     "Webhook",
     "WebhookAttempt",
     "WebhookDelivery",

@@ -32,6 +32,11 @@ class DataFolder:
         """The folder of the embedded broker."""
         return self.path / "valkey"
 
+    @property
+    def figures(self) -> Path:
+        """The folder where the processes count together what a monitor is told."""
+        return self.path / "figures"
+
     def log(self, name: str) -> Path:
         """Return where a process of this name writes what it says."""
         return self.path / "log" / f"{name}.log"
@@ -92,8 +97,10 @@ class DataFolder:
             "SECRET_KEY": self.secret_key(),
             "HTTPS": "false",
             "TAREBOOK_DATA": str(self.path),
+            "PROMETHEUS_MULTIPROC_DIR": str(self.figures),
             "PYTHONUNBUFFERED": "1",
         }
+        self.figures.mkdir(exist_ok=True, mode=0o700)
         if owner:
             ours["OWNER_DATABASE_URL"] = cluster.url(OWNER, DATABASE)
         return {**kept, **ours}

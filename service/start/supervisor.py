@@ -3,6 +3,7 @@ and this one.
 """
 
 import os
+import shutil
 import subprocess
 import sys
 import threading
@@ -40,6 +41,8 @@ class Supervisor:
         up.
         """
         self._logs.start()
+        # What is counted is counted from this start on; each process has its own file there.
+        shutil.rmtree(self.folder.figures, ignore_errors=True)
         self._logs.follow("database", self.folder.log("postgres"))
         self._cluster = postgres.start(self.folder.postgres, log=self.folder.log("postgres"), say=say)
         self._broker = valkey.start(self.folder.valkey, log=self.folder.log("valkey"))
