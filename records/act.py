@@ -21,6 +21,7 @@ from records.actor import Actor
 from records.figures import count_act
 from records.guard.refusals import ActMisplaced, refusals_named
 from records.kind import Kind
+from records.prepared import rows
 from records.refusal import NotAllowed
 
 # The request an act is done in, as the switchboard names it; it is sealed with the act.
@@ -132,7 +133,5 @@ def _open(kind: Kind, by: Actor, about: str, reason: str) -> Entry:
         by.caused_by,
         request_id.get(),
     )
-    with connection.cursor() as cursor:
-        cursor.execute(_OPEN, values)
-        number, opened = cursor.fetchone()
+    ((number, opened),) = rows(_OPEN, values)
     return Entry(id=number, at=opened, chain=by.chain, kind=kind.name)

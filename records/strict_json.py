@@ -9,6 +9,7 @@ import json
 import re
 from collections import Counter
 from decimal import Decimal
+from itertools import accumulate
 from typing import Final, TypeAlias
 
 from records.refusal import Fault, TooLarge, Unreadable
@@ -21,7 +22,9 @@ MOST_DIGITS: Final = 15
 MOST_DEPTH: Final = 32
 
 # Texts are matched whole and only once, so a body of nothing but quotes is still read in linear time.
-_TEXT_OR_BRACKET: Final = re.compile(rb'"[^"\\]*+(?:\\.[^"\\]*+)*+"?|[\[\]{}]', re.DOTALL)
+_TEXT: Final = re.compile(rb'"[^"\\]*+(?:\\.[^"\\]*+)*+"?', re.DOTALL)
+_NO_BRACKET: Final = bytes(byte for byte in range(256) if byte not in b"[]{}")
+_STEP: Final = {ord("["): 1, ord("{"): 1, ord("]"): -1, ord("}"): -1}
 
 _SENTENCES: Final = {
     "json-number-exponent": "a number is written with an exponent; write its digits out",
@@ -135,18 +138,10 @@ def _depth(body: bytes) -> int:
     """
     if body.count(b"[") + body.count(b"{") <= MOST_DEPTH:
         return 0
-    depth = deepest = 0
-    for match in _TEXT_OR_BRACKET.finditer(body):
-        mark = match[0]
-        if mark in b"[{":
-            depth += 1
-            if depth > deepest:
-                deepest = depth
-                if deepest > MOST_DEPTH:
-                    break
-        elif mark in b"]}":
-            depth -= 1
-    return deepest
+    # Without a backslash each quote begins or ends a text: every other piece between quotes is outside.
+    outside = _TEXT.sub(b"", body) if b"\\" in body else b"".join(body.split(b'"')[::2])
+    brackets = outside.translate(None, _NO_BRACKET)
+    return max(accumulate(map(_STEP.__getitem__, brackets)), default=0)
 
 
 def _find(value: object, pointer: str, faults: list[Fault]) -> None:

@@ -8,6 +8,11 @@ from uuid import UUID
 from fleet.models import Aircraft, EmptyWeight, LoadingBasis, Standing
 from fleet.models.standing import EMPTY_WEIGHT, LOADING_BASIS
 from fleet.queries.figures import basis_of, fit_of
+from records.prepared import rows
+
+_STANDING = (
+    "SELECT kind, fit, version FROM fleet_standing WHERE aircraft_id = %s AND valid @> %s AND known @> %s"
+)
 
 
 @dataclass(frozen=True, slots=True)
@@ -30,8 +35,7 @@ def in_force_for(aircraft: Aircraft, at: datetime, known: datetime, configuratio
     weight is.
     """
     # Asked for every load, so: one query for what stands, and rows that never change are read once.
-    standing = Standing.objects.filter(aircraft=aircraft, valid__contains=at, known__contains=known)
-    versions = {(kind, fit): version for kind, fit, version in standing.values_list("kind", "fit", "version")}
+    versions = {(kind, fit): version for kind, fit, version in rows(_STANDING, [aircraft.pk, at, known])}
     if (LOADING_BASIS, "") not in versions:
         return InForce(None, None)
     basis = _loading_basis(versions[LOADING_BASIS, ""])

@@ -10,6 +10,8 @@ from typing import TypeAlias
 
 from django.db import connection, models
 
+from records import prepared
+
 _Field: TypeAlias = "models.Field[object, object]"
 
 
@@ -25,9 +27,7 @@ def insert_together(rows: Sequence[models.Model]) -> int:
         for row, fields in zip(rows, plan[1], strict=True)
         for field in fields
     ]
-    with connection.cursor() as cursor:
-        cursor.execute(plan[0], values)
-        (number,) = cursor.fetchone()
+    ((number,),) = prepared.rows(plan[0], values)
     for row in rows:
         row._state.adding = False  # noqa: SLF001  # the mark by which the model layer knows a stored row
         row._state.db = connection.alias  # noqa: SLF001  # as above

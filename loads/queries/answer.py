@@ -22,11 +22,17 @@ def answer_of(current: Current) -> Answer:
 
     It is what a change of state answers, and such answers are kept a while for repeated requests.
     """
+    before, _, after = answer_parts(current)
+    return {**before, **current.result(), **after}
+
+
+def answer_parts(current: Current) -> tuple[Answer, str, Answer]:
+    """This function will return what stands before the result document in the answer, the result as the text
+    that is stored, and what stands behind it.
+    """
     load, used = current.load, current.assessment
     begun = current.step.number > 1  # a first step can have neither signature nor manifest
-    return {
-        **_standing(current),
-        **current.result(),
+    after = {
         "basis": {
             **versions_of(used.loading_basis, used.empty_weight),
             "configuration": load.configuration,
@@ -39,6 +45,7 @@ def answer_of(current: Current) -> Answer:
         "manifest": _manifest(load) if begun else None,
         "cautions": cautions(invented=load.operator.invented),
     }
+    return _standing(current), used.result, after
 
 
 def full_answer_of(current: Current, *, known: datetime) -> Answer:

@@ -4,6 +4,7 @@ from dataclasses import dataclass
 from datetime import datetime
 
 from fleet.models import Aircraft, EmptyWeight, LoadingBasis
+from fleet.queries.aircraft import aircraft_of
 from fleet.queries.figures import basis_of
 from fleet.queries.in_force import in_force_for
 from loads.balance.aboard import Outline
@@ -15,7 +16,7 @@ from loads.queries.crew import pilot_in
 from loads.queries.figures import empty_figures
 from loads.statement import digest_from
 from records.canonical import canonical_of_exact
-from records.refusal import Fault, Invalid
+from records.refusal import Fault, Invalid, NotKnown
 from records.strict_json import JSON
 
 
@@ -80,15 +81,11 @@ def compute(operator: str, document: dict[str, JSON], known: datetime) -> Comput
 
 
 def _aircraft_in(operator: str, outline: Outline) -> Aircraft:
-    found = (
-        Aircraft.objects.select_related("operator")
-        .filter(operator_id=operator, registration=outline.aircraft.upper())
-        .first()
-    )
-    if found is None:
+    try:
+        return aircraft_of(operator, outline.aircraft)
+    except NotKnown:
         detail = f"no aircraft {outline.aircraft} is entered; correct the registration, or enter the aircraft"
-        raise Invalid(Fault("/aircraft", "unknown-aircraft", detail))
-    return found
+        raise Invalid(Fault("/aircraft", "unknown-aircraft", detail)) from None
 
 
 def versions_of(basis: LoadingBasis | None, empty_weight: EmptyWeight | None) -> dict[str, object]:

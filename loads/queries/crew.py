@@ -2,9 +2,7 @@
 
 from collections.abc import Mapping
 
-from django.db.models.functions import Lower
-
-from fleet.models import Person
+from fleet.queries.logins import active_people
 from loads.balance.aboard import PILOT_IN_COMMAND
 from records.refusal import Fault, Invalid
 
@@ -18,13 +16,7 @@ def pilot_in(operator: str, document: Mapping[str, object]) -> int | None:
     named = _named(document)
     if not named:
         return None
-    rows = (
-        Person.objects.filter(operator_id=operator, is_active=True)
-        .annotate(plain=Lower("login"))
-        .filter(plain__in={login.lower() for _, login, _ in named})
-        .values_list("plain", "id")
-    )
-    known = dict(rows)
+    known = active_people(operator, {login.lower() for _, login, _ in named})
     faults = tuple(
         Fault(pointer, "unknown-person", "nobody here has this login; correct it, or leave it out")
         for pointer, login, _ in named

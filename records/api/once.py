@@ -6,13 +6,12 @@ the next try; one killed before leaves nothing. Refusals are never kept: the tra
 kept them is rolled back.
 """
 
+import json
 import re
 from collections.abc import Callable, Mapping
 from http import HTTPStatus
 from typing import Final, TypeAlias
 
-from django.db import connection
-from django.db.models.functions import Now
 from django.http import HttpRequest, HttpResponse
 from django.utils.crypto import salted_hmac
 from rest_framework.request import Request
@@ -22,14 +21,23 @@ from records.api.asking import actor_of
 from records.api.parser import body_of
 from records.api.render import rendered
 from records.models.receipt import KEPT_FOR, Receipt
+from records.prepared import rows
 from records.refusal import Invalid, StepRefused, Unreadable
 from records.sealing import opened, sealed
 
-# Status, headers and body of an answer.
-Answer: TypeAlias = tuple[int, Mapping[str, str], Mapping[str, object]]
+# Status, headers and body of an answer; the body is a document, or its bytes where they stand already.
+Answer: TypeAlias = tuple[int, Mapping[str, str], Mapping[str, object] | bytes]
 
 _KEY: Final = re.compile(r"[\x21-\x7e]{1,120}")
 _PURPOSE: Final = "receipt"
+_HOLD: Final = "SELECT pg_try_advisory_xact_lock(hashtextextended(%s, 0))"
+_FIND: Final = (
+    "SELECT id, answered_at > statement_timestamp() - %s FROM records_receipt WHERE actor = %s AND key = %s"
+)
+_KEEP: Final = (
+    "INSERT INTO records_receipt (actor, key, request_digest, status, headers, body, answered_at) "
+    "VALUES (%s, %s, %s, %s, %s, %s, statement_timestamp())"
+)
 
 
 def once(request: Request, work: Callable[[], Answer], *, confidential: bool = False) -> HttpResponse:
@@ -47,24 +55,15 @@ def once(request: Request, work: Callable[[], Answer], *, confidential: bool = F
     asked = _request_digest(request)
     with transaction_for_acts():
         _hold(actor, key)
-        kept = Receipt.objects.filter(actor=actor, key=key, answered_at__gt=Now() - KEPT_FOR).first()
+        kept = _kept(actor, key)
         if kept is not None:
             return _again(kept, asked, confidential=confidential)
         status, headers, body = work()
         if status >= HTTPStatus.BAD_REQUEST:
             raise ValueError("a refusal is raised, never returned: it must not be kept")
-        answer = rendered(body)
-        # An answer whose time is over makes room; its row may still stand when nobody has swept yet.
-        Receipt.objects.filter(actor=actor, key=key).delete()
-        Receipt.objects.create(
-            actor=actor,
-            key=key,
-            request_digest=asked,
-            status=status,
-            headers=dict(headers),
-            body=sealed(answer, _PURPOSE) if confidential else answer,
-            answered_at=Now(),
-        )
+        answer = body if isinstance(body, bytes) else rendered(body)
+        body = sealed(answer, _PURPOSE) if confidential else answer
+        rows(_KEEP, [actor, key, asked, int(status), json.dumps(dict(headers)), body])
     return _response(status, headers, answer)
 
 
@@ -101,17 +100,25 @@ def _hold(actor: str, key: str) -> None:
     An advisory lock, since there is no row to lock before the work is done, and one that does not wait:
     whoever repeats too early is told so instead of holding a connection.
     """
-    with connection.cursor() as cursor:
-        cursor.execute(
-            "SELECT pg_try_advisory_xact_lock(hashtextextended(%s, 0))", [f"receipt\n{actor}\n{key}"]
-        )
-        (held,) = cursor.fetchone()
+    ((held,),) = rows(_HOLD, [f"receipt\n{actor}\n{key}"])
     if not held:
         raise StepRefused(
             "idempotency-key-in-flight",
             "A request with this Idempotency-Key is being answered right now.",
             next_step="Wait a second and repeat the same request with the same key.",
         )
+
+
+def _kept(actor: str, key: str) -> Receipt | None:
+    """This function will return the answer kept under the key. One whose time is over makes room: its row
+    may still stand when nobody has swept yet.
+    """
+    for number, fresh in rows(_FIND, [KEPT_FOR, actor, key]):
+        receipt = Receipt.objects.get(id=number)
+        if fresh:
+            return receipt
+        receipt.delete()
+    return None
 
 
 def _again(kept: Receipt, asked: str, *, confidential: bool) -> HttpResponse:

@@ -8,10 +8,14 @@ from uuid import uuid4
 import pytest
 from django.utils import timezone
 
+from loads.actions.submit_load import submit_load
+from loads.api.answering import written
 from loads.models import Assessment, Declaration, Load, Signature, Step
+from loads.queries.answer import answer_of
+from records.api.render import rendered
 from records.models import Act
 from records.models.receipt import Receipt
-from tests.cast import PASSWORD, api, cast, strangers
+from tests.cast import PASSWORD, actor, api, cast, strangers
 from tests.loads.making import accepted, load_document, outside_document, submitted
 from tests.makers import make_empty_weight, ready_aircraft
 
@@ -356,3 +360,13 @@ def test_a_submission_needs_a_key(people) -> None:
 
     assert (refused.status_code, answer(refused)["code"]) == (400, "idempotency-key-missing")
     assert rows() == before
+
+
+def test_an_answer_holds_the_bytes_that_writing_it_whole_would_give(people) -> None:
+    early = load_document(people)
+    early["flight"]["departure"] = "1990-01-01T08:30:00-06:00"  # no version was in force then
+    loads = [submitted(people), accepted(people)]
+    loads += [submit_load(one, by=actor(people.preparer)) for one in (outside_document(people), early)]
+
+    assert [one.assessment.verdict for one in loads] == ["within", "within", "outside", "unresolved"]
+    assert all(written(one) == rendered(answer_of(one)) for one in loads)

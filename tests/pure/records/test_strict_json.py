@@ -4,9 +4,11 @@ import time
 from decimal import Decimal
 
 import pytest
+from hypothesis import given
+from hypothesis import strategies as st
 
 from records.refusal import TooLarge, Unreadable
-from records.strict_json import MOST_BYTES, pointer_step, read
+from records.strict_json import MOST_BYTES, MOST_DEPTH, _depth, pointer_step, read
 
 # body, code, pointer of the first fault (None: it has no place in a document)
 REFUSED = [
@@ -137,3 +139,25 @@ def test_a_pointer_step_is_escaped_as_rfc_6901_section_3_says():
     assert pointer_step("a/b") == "/a~1b"
     assert pointer_step("m~n") == "/m~0n"
     assert pointer_step(3) == "/3"
+
+
+@given(
+    st.lists(
+        st.sampled_from(["[", "]", "{", "}", '"', '\\"', "\\\\", "\\", "a", ",", '"["', '"\\"["', "[" * 20]),
+        max_size=120,
+    )
+)
+def test_depth_is_what_counting_mark_by_mark_gives(parts):
+    body = "".join(parts).encode()
+    depth = deepest = 0
+    inside = escaped = False
+    for mark in body.decode():
+        if inside:
+            inside, escaped = mark != '"' or escaped, mark == "\\" and not escaped
+        elif mark == '"':
+            inside = True
+        else:
+            depth += (mark in "[{") - (mark in "]}")
+            deepest = max(deepest, depth)
+
+    assert (_depth(body) > MOST_DEPTH) == (deepest > MOST_DEPTH)
