@@ -56,12 +56,14 @@ def put(entry: Entry, task: str, key: str) -> None:
     transaction.on_commit(lambda: wake(task, key))
 
 
-def wake(task: str, key: str) -> bool:
-    """This function will ask the broker to wake a worker, and say whether that was taken; it never raises."""
+def wake(task: str, key: str, *, after: timedelta = timedelta(0)) -> bool:
+    """This function will ask the broker to wake a worker (after a wait, if one is named), and say whether
+    that was taken; it never raises.
+    """
     problem = "no answer"
     if broker.answers():
         try:
-            current_app.send_task(task, args=[key], retry=False)
+            current_app.send_task(task, args=[key], retry=False, countdown=after.total_seconds() or None)
         except Exception as refused:  # noqa: BLE001  # whatever the broker fails with, the sweeper does it
             problem = type(refused).__name__
         else:

@@ -96,11 +96,11 @@ CELERY_BROKER_TRANSPORT_OPTIONS = {
 CELERY_BEAT_SCHEDULE = {
     "sweep-the-outbox": {"task": "records.tasks.sweep_outbox", "schedule": 20.0},
     "seal-the-log-of-sign-ins": {"task": "records.tasks.seal_access_log", "schedule": 60.0},
-    # The first wait of the schedule is five seconds. A sweep nobody took up by the next one is not needed.
+    # A sweep nobody took up by the next one is not needed.
     "sweep-the-webhooks": {
         "task": "records.tasks.sweep_webhooks",
-        "schedule": 5.0,
-        "options": {"expires": 5.0},
+        "schedule": 20.0,
+        "options": {"expires": 20.0},
     },
     "verify-onwards": {
         "task": "records.tasks.verify_onwards",

@@ -85,6 +85,7 @@ class WebhookView(APIView):
     def delete(self, request: Request, webhook: UUID) -> HttpResponse:
         """End a subscription and whatever waits for it. One that is ended stays ended."""
         parameters_of(request, allowed=())
+        refuse_a_body(request)
         actor = actor_of(request)
         standing_of(operator_of(request), webhook)
         end_subscription(actor, webhook)

@@ -31,6 +31,7 @@ from records.webhooks.schedule import next_try
 from records.webhooks.sending import Outcome, send
 from records.webhooks.signing import headers
 from records.webhooks.standing import one_of_two_racers, standing_of, take_step
+from records.webhooks.waking import wake_in
 
 log = logging.getLogger(__name__)
 
@@ -125,6 +126,8 @@ def _settle(delivery: WebhookDelivery, outcome: Outcome, attempt: WebhookAttempt
         )
         try_at = again if state == "waiting" else None
         as_taken.update(state=state, failed=failed, try_at=try_at, held_until=None)
+    if state == "waiting" and again is not None:
+        wake_in(delivery.webhook_id, again - timezone.now())
     worker = _worker_for(delivery)
     try:
         if state == "ended":

@@ -1,6 +1,7 @@
 """Waking a worker for subscriptions that have something waiting; the list itself is in the database."""
 
 from collections.abc import Iterable
+from datetime import timedelta
 from typing import Final
 from uuid import UUID
 
@@ -9,6 +10,8 @@ from django.db import transaction
 from records import outbox
 
 DELIVERING: Final = "records.tasks.deliver_to_webhook"
+# The first wait of the schedule is shorter than the sweeper's round.
+SHORT_WAIT: Final = timedelta(seconds=20)
 
 
 def wake_after_commit(webhooks: Iterable[UUID]) -> None:
@@ -27,3 +30,9 @@ def wake(webhooks: Iterable[str]) -> int:
             break
         woken += 1
     return woken
+
+
+def wake_in(webhook: UUID, wait: timedelta) -> None:
+    """This function will wake a worker after a short wait; after a longer one the sweeper does it."""
+    if wait <= SHORT_WAIT:
+        outbox.wake(DELIVERING, str(webhook), after=wait)

@@ -8,10 +8,12 @@ import pytest
 from rest_framework.test import APIClient
 
 from fleet.actions.issue_token import issue_token
+from records.acts import WEBHOOK_KINDS
 from records.models import Act, Receipt, Webhook, WebhookDelivery
 from records.webhooks.deliver import deliver_due
 from service import allowed
 from tests.cast import actor, api, cast, get, post, strangers
+from tests.makers import make_aircraft
 from tests.records.webhooks.making import announced, verified
 from tests.records.webhooks.receiver import running
 
@@ -97,6 +99,31 @@ def test_an_integration_with_the_scope_subscribes_and_one_without_does_not(peopl
 
     assert post(client("read", "subscribe-webhook"), "/webhooks", ASKED).status_code == 201
     assert post(client("read"), "/webhooks", ASKED).status_code == 403
+
+
+def test_a_token_limited_to_aircraft_has_no_part_in_it_whatever_body_it_sends(people):
+    make_aircraft(people)
+    issued = issue_token(
+        actor(people.manager),
+        people.manager,
+        label="one aircraft",
+        scopes=[kind.name for kind in WEBHOOK_KINDS] + ["read"],
+        grantable=allowed.grantable(["operations manager"], integration=False),
+        valid_for=timedelta(days=1),
+        registrations=["Q9-KTB"],
+    )
+    client, body = APIClient(), {"aircraft": "Q9-KTB"}
+    client.credentials(HTTP_AUTHORIZATION=f"Bearer {issued.secret}")
+    made = answer(post(api(people.manager), "/webhooks", ASKED))
+    place = f"/webhooks/{made['id']}"
+
+    assert get(client, "/webhooks").status_code == get(client, place).status_code == 403
+    assert post(client, "/webhooks", ASKED).status_code == 403
+    assert post(client, "/webhooks", ASKED | body).status_code == 422
+    assert post(client, f"{place}/secret", body).status_code == 422
+    ended = client.delete(f"/api/v1{place}", data=json.dumps(body), content_type="application/json")
+    assert ended.status_code == 422
+    assert answer(get(api(people.manager), place))["state"] == "live"
 
 
 def test_a_repeated_request_gets_the_same_secret_and_it_is_not_kept_readable(people):

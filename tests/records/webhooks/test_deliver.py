@@ -310,5 +310,23 @@ def test_a_worker_is_woken_after_the_commit_and_a_broker_that_is_down_is_asked_o
     assert len(asked) == 1
 
 
+def test_after_the_first_failure_the_queue_wakes_a_worker_itself_after_that_the_sweeper_does(
+    people, receiver, monkeypatch
+):
+    asked = []
+    monkeypatch.setattr("records.outbox.wake", lambda _task, key, after: asked.append((key, after)) or True)
+    receiver.status = 500
+    webhook = subscribed(people, receiver).standing.webhook.pk
+    announced(people)
+
+    for _ in range(3):
+        make_due(webhook)
+        deliver_due(webhook)
+
+    ((key, after),) = asked
+    assert key == str(webhook)
+    assert timedelta(seconds=4) < after <= timedelta(seconds=5.5)
+
+
 def test_the_worker_may_do_its_two_acts_and_no_other():
     assert {"park-webhook", "end-webhook"} == deliver.ACTS_OF_THE_WORKER
