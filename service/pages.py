@@ -15,7 +15,9 @@ from fleet.actions.confirm_password import refuse_locked_out
 from fleet.actions.noting import note_login, note_person
 from fleet.models import Person
 from loads.cautions import CAUTIONS, INVENTED
+from records.actor import Actor
 from records.refusal import LockedOut
+from records.web.asking import READ
 
 # What any login looks like. Anything else is nobody's, and the table that counts failures could not hold it.
 _LOGIN: Final = re.compile(r"[a-z0-9][a-z0-9._-]{1,59}")
@@ -25,7 +27,9 @@ def page_context(request: HttpRequest) -> dict[str, Any]:
     """This function will give every page the signed-in person, their operator and the cautions."""
     user = getattr(request, "user", None)
     person = user if isinstance(user, Person) else None
+    actor = getattr(request, "actor", None)
     return {
+        "may_read": isinstance(actor, Actor) and READ in actor.may,
         "operator": person.operator if person else None,
         "person_name": person.name if person else "",
         "cautions": CAUTIONS,

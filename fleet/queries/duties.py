@@ -15,3 +15,21 @@ def roles_of(person: Person, at: datetime) -> tuple[str, ...]:
         Duty.objects.filter(person=person, since__lte=at).order_by("role", "-since", "-id").distinct("role")
     )
     return tuple(duty.role for duty in begun if duty.granted)
+
+
+def holders_at(operator: str, at: datetime) -> dict[str, tuple[Person, ...]]:
+    """This function will return who held each role at `at`, by role and name; roles nobody held are left out.
+
+    Rows of duties never begin before they are entered, so what was known then is the same question.
+    """
+    begun = (
+        Duty.objects.filter(operator_id=operator, since__lte=at)
+        .select_related("person")
+        .order_by("person_id", "role", "-since", "-id")
+        .distinct("person_id", "role")
+    )
+    held: dict[str, list[Person]] = {}
+    for duty in begun:
+        if duty.granted:
+            held.setdefault(duty.role, []).append(duty.person)
+    return {role: tuple(sorted(people, key=lambda one: one.name)) for role, people in sorted(held.items())}

@@ -2,7 +2,7 @@
 
 from django.urls import path
 
-from fleet.web import aircraft
+from fleet.web import aircraft, settings
 
 urlpatterns = [
     path("aircraft", aircraft.aircraft_list, name="aircraft-list"),
@@ -17,4 +17,5 @@ urlpatterns = [
         aircraft.approve_weight,
         name="approve-empty-weight",
     ),
+    path("settings", settings.settings, name="settings"),
 ]

@@ -7,6 +7,7 @@ from loads.api.loads import LoadsView, LoadView
 from loads.api.manifests import ManifestView
 from loads.api.signatures import SignaturesView
 from loads.api.steps import AssessmentView, DepartureView, RevisionsView, WithdrawalView
+from loads.api.trail import ActView, TrailView
 
 urlpatterns = [
     path("assessments", AssessmentsView.as_view(), name="api-assessments"),
@@ -18,4 +19,6 @@ urlpatterns = [
     path("loads/<uuid:load>/manifest", ManifestView.as_view(), name="api-load-manifest"),
     path("loads/<uuid:load>/withdrawal", WithdrawalView.as_view(), name="api-load-withdrawal"),
     path("loads/<uuid:load>/departure", DepartureView.as_view(), name="api-load-departure"),
+    path("trail", TrailView.as_view(), name="api-trail"),
+    path("trail/<uuid:act>", ActView.as_view(), name="api-act"),
 ]

@@ -2,7 +2,7 @@
 
 from django.urls import path
 
-from loads.web import day, declare, load, steps
+from loads.web import day, declare, documents, inspect, load, rejects, steps, trail
 
 urlpatterns = [
     path("", day.day, name="day"),
@@ -14,4 +14,10 @@ urlpatterns = [
     path("loads/<uuid:load>/assess", steps.assess, name="assess-load"),
     path("loads/<uuid:load>/depart", steps.depart, name="depart-load"),
     path("loads/<uuid:load>/withdraw", steps.withdraw, name="withdraw-load"),
+    path("rejects", rejects.rejects, name="rejects"),
+    path("rejects/<uuid:load>/remarks", rejects.remark, name="remark-reject"),
+    path("documents", documents.documents, name="documents"),
+    path("inspect", inspect.inspect, name="inspect"),
+    path("trail", trail.trail, name="trail"),
+    path("trail/<uuid:act>", trail.one_act, name="act"),
 ]
