@@ -29,6 +29,8 @@ def page_context(request: HttpRequest) -> dict[str, Any]:
     person = user if isinstance(user, Person) else None
     actor = getattr(request, "actor", None)
     return {
+        # What the person signed in may do, by name, for links that only some may follow.
+        "may": actor.may if isinstance(actor, Actor) else frozenset(),
         "may_read": isinstance(actor, Actor) and READ in actor.may,
         "operator": person.operator if person else None,
         "person_name": person.name if person else "",
