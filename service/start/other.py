@@ -6,7 +6,7 @@ from pathlib import Path
 from service.bootstrap.speech import complain, say
 from service.embedded import postgres, valkey
 from service.embedded.stopped import Stopped
-from service.roles import DATABASE, SERVICE
+from service.roles import DATABASE, OWNER, SERVICE
 from service.start.data_folder import DataFolder, default_path
 
 # What only the owner of the tables may do or see.
@@ -24,6 +24,8 @@ def run_django(arguments: list[str]) -> int:
     if "DATABASE_URL" in os.environ or "DATABASE_URL_FILE" in os.environ:
         return _execute(arguments)
     folder = DataFolder(default_path())
+    if arguments[:1] == ["restore"] and not any(word.startswith("--into") for word in arguments):
+        return _restored_here(folder, arguments)
     if arguments[:1] == ["makemigrations"] or not (folder.path / "secret-key").exists():
         _stand_ins(folder)
         return _execute(arguments)
@@ -50,6 +52,21 @@ def _with(folder: DataFolder, cluster: postgres.Cluster, arguments: list[str]) -
     if arguments[0] in _OWNERS_WORK and not any(word.startswith("--database") for word in arguments):
         arguments = [*arguments, "--database", "owner"]
     return _execute(arguments)
+
+
+def _restored_here(folder: DataFolder, arguments: list[str]) -> int:
+    """Restore into a data folder without a database, so that `start` goes on with what was restored."""
+    folder.make()
+    with folder.held("manage.py restore"):
+        cluster = postgres.start(folder.postgres, log=folder.log("postgres"), say=say)
+        try:
+            os.environ.update(folder.environment(cluster, valkey.address(folder.valkey)))
+            os.environ["OWNER_PASSWORD"] = cluster.passwords[OWNER]
+            os.environ["SERVICE_PASSWORD"] = cluster.passwords[SERVICE]
+            os.environ["SUPERUSER_URL"] = cluster.url("postgres", DATABASE)
+            return _execute(arguments)
+        finally:
+            postgres.stop(cluster)
 
 
 def _stand_ins(folder: DataFolder) -> None:
