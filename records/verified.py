@@ -53,8 +53,8 @@ def verify_onwards() -> tuple[Finding, ...]:
     found = []
     for chain in sorted(lengths.keys() | before.keys()):
         row = before.get(chain)
-        # What did not hold is asked from the beginning: it may have been put back.
-        start = Head(chain, row.position, row.digest) if row and not row.broken else Head(chain)
+        # What does not hold keeps its last sound place, so it is told again each round until it is put back.
+        start = Head(chain, row.position, row.digest or None) if row else Head(chain)
         head, finding = _onwards(start)
         _keep(head, finding)
         if finding:
