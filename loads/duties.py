@@ -6,9 +6,11 @@ never signs.
 
 from collections.abc import Mapping
 from types import MappingProxyType
+from uuid import UUID
 
 from fleet.duties import Role
 from loads import acts
+from records.actor import Actor
 
 _DECLARES = frozenset(
     {
@@ -41,3 +43,16 @@ ACTS_OF: Mapping[Role, frozenset[str]] = MappingProxyType(
 
 # What the worker may do that prints and files manifests and tells of stale loads.
 ACTS_OF_THE_WORKER = frozenset({acts.FILE_MANIFEST.name, acts.TELL_STALE.name})
+
+
+def service_at_work(operator: str, caused_by: UUID | None) -> Actor:
+    """This function will return the service itself, acting for an operator because of somebody's act."""
+    return Actor(
+        operator=operator,
+        kind="service",
+        key="service:worker",
+        name="",
+        capacity="worker",
+        may=ACTS_OF_THE_WORKER,
+        caused_by=caused_by,
+    )

@@ -1,12 +1,16 @@
 """Work done after a commit. Ids in, one call; safe to run twice and at the same time."""
 
+from collections.abc import Callable
 from uuid import UUID
 
 from celery import shared_task
 
+from fleet.events import VERSIONS_CHANGED
 from loads.actions.file_manifest import FILING, FILING_ISSUE
 from loads.actions.file_manifest import file_issue as file_one_issue
 from loads.actions.file_manifest import file_manifest as file_one
+from loads.actions.mail_stale import mail_stale_notice
+from loads.actions.tell_stale import MAILING, tell_after_approval
 from loads.models import LateChange, Paper
 from records import outbox
 
@@ -14,21 +18,36 @@ from records import outbox
 @shared_task(name=FILING, ignore_result=True)
 def file_manifest(load: str) -> None:
     """This function will file the manifest of an accepted load. A failure is noted and tried again later."""
-    try:
-        file_one(Paper.objects.get(load_id=UUID(load)))
-        outbox.done(FILING, load)  # also when a request had filed it before the outbox row was seen
-    except Exception as problem:
-        outbox.failed(FILING, load, problem)
-        raise
+    _work(FILING, load, lambda: file_one(Paper.objects.get(load_id=UUID(load))))
 
 
 @shared_task(name=FILING_ISSUE, ignore_result=True)
 def file_issue(key: str) -> None:
     """This function will file a reissued manifest; `key` is "load/number of the last-minute change"."""
     load, _, number = key.partition("/")
+    _work(
+        FILING_ISSUE,
+        key,
+        lambda: file_one_issue(LateChange.objects.get(load_id=UUID(load), number=int(number))),
+    )
+
+
+@shared_task(name=VERSIONS_CHANGED, ignore_result=True)
+def tell_of_stale_loads(approval: str) -> None:
+    """This function will tell at once of the accepted loads that an approval made stale."""
+    _work(VERSIONS_CHANGED, approval, lambda: tell_after_approval(UUID(approval)))
+
+
+@shared_task(name=MAILING, ignore_result=True)
+def mail_stale(notice: str) -> None:
+    """This function will mail one notice of a stale load."""
+    _work(MAILING, notice, lambda: mail_stale_notice(UUID(notice)))
+
+
+def _work(task: str, key: str, work: Callable[[], object]) -> None:
     try:
-        file_one_issue(LateChange.objects.get(load_id=UUID(load), number=int(number)))
-        outbox.done(FILING_ISSUE, key)
+        work()
+        outbox.done(task, key)  # also what a request had done before the outbox row was seen
     except Exception as problem:
-        outbox.failed(FILING_ISSUE, key, problem)
+        outbox.failed(task, key, problem)
         raise

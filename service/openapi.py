@@ -18,7 +18,7 @@ from service.problems import MEDIA_TYPE
 
 COMMITTED: Final = Path(__file__).with_name("openapi.json")
 # The same sum with nothing stored: repeating it needs no key.
-STORES_NOTHING: Final = frozenset({"/api/v1/assessments"})
+STORES_NOTHING: Final = frozenset({"/api/v1/assessments", "/api/v1/loads/{load}/last-minute-changes/preview"})
 _KEY: Final = {
     "name": IDEMPOTENCY_KEY.name,
     "in": "header",

@@ -186,6 +186,15 @@ STATIC_ROOT = env.text("STATIC_ROOT", "") or None
 WHITENOISE_USE_FINDERS = True
 WHITENOISE_AUTOREFRESH = False
 
+# Mail about accepted loads that went stale; without a server none is promised, and pages and events tell.
+EMAIL_HOST = env.text("MAIL_HOST", "")
+EMAIL_PORT = env.whole("MAIL_PORT", 587, low=1, high=65535)
+EMAIL_HOST_USER = env.text("MAIL_USER", "")
+EMAIL_HOST_PASSWORD = env.text("MAIL_PASSWORD", "")
+EMAIL_USE_TLS = env.flag("MAIL_TLS", True)
+EMAIL_TIMEOUT = 20
+DEFAULT_FROM_EMAIL = env.text("MAIL_FROM", "tarebook@localhost")
+
 LANGUAGE_CODE = "en"
 USE_I18N = False
 USE_TZ = True

@@ -5,7 +5,9 @@ from fleet.actions.authorship import approver_acting, own
 from fleet.actions.basis_fit import refuse_unfit
 from fleet.actions.constraint_refusals import refused_as
 from fleet.actions.standing_projection import APPROVAL_REFUSALS, stand
+from fleet.events import VERSIONS_CHANGED
 from fleet.models import Aircraft, Approval, EmptyWeight
+from records import outbox
 from records.act import act
 from records.actor import Actor
 from records.refusal import Invalid, NotKnown, StepRefused
@@ -48,4 +50,5 @@ def approve_empty_weight(
             known_from=entry.at,
         )
         stand(approval, empty_weight)
+        outbox.put(entry, VERSIONS_CHANGED, str(approval.id))
     return approval

@@ -7,9 +7,11 @@ from fleet.actions.authorship import approver_acting, own
 from fleet.actions.constraint_refusals import refused_as
 from fleet.actions.standing_projection import APPROVAL_REFUSALS, stand
 from fleet.entering import plausible
+from fleet.events import VERSIONS_CHANGED
 from fleet.models import Aircraft, Approval, LoadingBasis
 from fleet.queries.figures import basis_of
 from fleet.sample_loads import failures_of
+from records import outbox
 from records.act import act
 from records.actor import Actor
 from records.refusal import Fault, NotKnown, StepRefused
@@ -49,6 +51,7 @@ def approve_loading_basis(
             known_from=entry.at,
         )
         stand(approval, basis)
+        outbox.put(entry, VERSIONS_CHANGED, str(approval.id))
     return approval
 
 

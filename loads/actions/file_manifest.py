@@ -4,13 +4,15 @@ A last-minute change reissues it under the same number: each issue is a document
 ones stay.
 """
 
+from contextlib import AbstractContextManager
 from uuid import UUID
 
 from django.db import IntegrityError
 
 from loads.actions.announcing import announce_filed
+from loads.actions.tell_stale import tell_if_stale
 from loads.acts import FILE_MANIFEST
-from loads.duties import ACTS_OF_THE_WORKER
+from loads.duties import service_at_work
 from loads.manifest.facts import Facts
 from loads.manifest.gathering import facts_of, paper_of
 from loads.manifest.printing import pdf_of
@@ -18,7 +20,6 @@ from loads.manifest.sheet import title_of
 from loads.models import FiledIssue, FiledPaper, LateChange, Paper
 from records import outbox
 from records.act import Entry, act
-from records.actor import Actor
 from records.archive import file_document, hand_out
 from records.models import Document
 from records.press import renderer_versions
@@ -71,10 +72,12 @@ def file_manifest(paper: Paper) -> FiledPaper:
     """
     if (filed := filed_paper(paper)) is not None:
         return filed
+    # An approval that committed beside the acceptance did not see it; here the acceptance sees the approval.
+    tell_if_stale(paper.operator_id, paper.load_id, paper.act)
     facts = facts_of(paper)
     body = pdf_of(facts)
     try:
-        with act(FILE_MANIFEST, by=worker(paper.operator_id, paper.act), about=_about(paper)) as entry:
+        with _filing(paper, paper.act) as entry:
             document = _document(entry, paper, facts, body)
             filed = FiledPaper.objects.create(
                 paper=paper, operator_id=entry.chain, document=document, filed_at=entry.at
@@ -93,10 +96,11 @@ def file_issue(change: LateChange) -> FiledIssue:
     if (filed := filed_issue(change)) is not None:
         return filed
     paper = Paper.objects.select_related("load__aircraft").get(load_id=change.load_id)
+    tell_if_stale(paper.operator_id, paper.load_id, change.act)  # as above
     facts = facts_of(paper, change)
     body = pdf_of(facts)
     try:
-        with act(FILE_MANIFEST, by=worker(paper.operator_id, change.act), about=_about(paper)) as entry:
+        with _filing(paper, change.act) as entry:
             document = _document(entry, paper, facts, body)
             filed = FiledIssue.objects.create(
                 change=change, operator_id=entry.chain, document=document, filed_at=entry.at
@@ -120,17 +124,8 @@ def filed_issue(change: LateChange) -> FiledIssue | None:
     return FiledIssue.objects.select_related("document").filter(change=change).first()
 
 
-def worker(operator: str, caused_by: UUID) -> Actor:
-    """This function will return the service itself, acting because of an act of an operator's person."""
-    return Actor(
-        operator=operator,
-        kind="service",
-        key="service:worker",
-        name="",
-        capacity="worker",
-        may=ACTS_OF_THE_WORKER,
-        caused_by=caused_by,
-    )
+def _filing(paper: Paper, cause: UUID) -> AbstractContextManager[Entry]:
+    return act(FILE_MANIFEST, by=service_at_work(paper.operator_id, cause), about=_about(paper))
 
 
 def _about(paper: Paper) -> str:

@@ -3,6 +3,7 @@
 from rest_framework import serializers
 
 from loads.api.shapes_in import Flight, LoadDocument
+from loads.api.shapes_late import LateBound, LateChangeMade, NoteAnswer
 from loads.lifecycle import STATES
 
 VERDICTS = ("within", "outside", "unresolved")
@@ -79,9 +80,23 @@ class SignatureGiven(serializers.Serializer[object]):
 
 
 class ManifestNumber(serializers.Serializer[object]):
-    """The manifest of an accepted load: its number, and where its PDF is."""
+    """The manifest of an accepted load: its number, its last issue, and where its PDF is."""
 
     number = serializers.IntegerField()
+    issue = serializers.IntegerField()
+    href = serializers.CharField()
+
+
+class LoadWarning(serializers.Serializer[object]):
+    """What looks doubled: one aircraft, or one person, on two standing loads less than an hour apart.
+
+    `pointer` is the part of this load it is about; `load` is the other one. It refuses nothing.
+    """
+
+    code = serializers.ChoiceField(("same-aircraft", "same-person"))
+    detail = serializers.CharField()
+    pointer = serializers.CharField()
+    load = serializers.UUIDField()
     href = serializers.CharField()
 
 
@@ -96,6 +111,29 @@ class LoadAnswer(ComputedAnswer):
     assessed_at = serializers.DateTimeField()
     signatures = SignatureGiven(many=True)
     manifest = ManifestNumber(allow_null=True)
+    late_changes = LateChangeMade(many=True)
+    warnings = LoadWarning(many=True)
+
+
+class LatePreview(ComputedAnswer):
+    """A last-minute change computed, nothing stored: sign `digest` to make it."""
+
+    load = serializers.UUIDField()
+    step = serializers.IntegerField()
+    number = serializers.IntegerField()
+    issue = serializers.IntegerField()
+    lines = serializers.ListField(child=serializers.CharField())
+    moved = serializers.CharField()
+    bound = LateBound()
+    to_sign = serializers.CharField(allow_blank=True)
+
+
+class StaleTold(serializers.Serializer[object]):
+    """That an accepted load went stale, as it was told: what changed, and to how many addresses mail went."""
+
+    told_at = serializers.DateTimeField()
+    changed = serializers.ListField(child=serializers.CharField())
+    mail_addresses = serializers.IntegerField()
 
 
 class StepTaken(serializers.Serializer[object]):
@@ -118,6 +156,8 @@ class FullLoadAnswer(LoadAnswer):
         help_text="what may be signed next, by meaning: exactly the words signed",
     )
     declared = LoadDocument()
+    stale_notices = StaleTold(many=True)
+    notes = NoteAnswer(many=True)
 
 
 class LoadSummary(serializers.Serializer[object]):

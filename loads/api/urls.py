@@ -3,6 +3,7 @@
 from django.urls import path
 
 from loads.api.assessments import AssessmentsView
+from loads.api.late_changes import LateChangesView, LatePreviewView, NotesView
 from loads.api.loads import LoadsView, LoadView
 from loads.api.manifests import ManifestView
 from loads.api.signatures import SignaturesView
@@ -17,6 +18,13 @@ urlpatterns = [
     path("loads/<uuid:load>/assessment", AssessmentView.as_view(), name="api-load-assessment"),
     path("loads/<uuid:load>/signatures", SignaturesView.as_view(), name="api-load-signatures"),
     path("loads/<uuid:load>/manifest", ManifestView.as_view(), name="api-load-manifest"),
+    path("loads/<uuid:load>/last-minute-changes", LateChangesView.as_view(), name="api-load-late-changes"),
+    path(
+        "loads/<uuid:load>/last-minute-changes/preview",
+        LatePreviewView.as_view(),
+        name="api-load-late-preview",
+    ),
+    path("loads/<uuid:load>/notes", NotesView.as_view(), name="api-load-notes"),
     path("loads/<uuid:load>/withdrawal", WithdrawalView.as_view(), name="api-load-withdrawal"),
     path("loads/<uuid:load>/departure", DepartureView.as_view(), name="api-load-departure"),
     path("trail", TrailView.as_view(), name="api-trail"),

@@ -4,15 +4,27 @@ from collections.abc import Mapping
 from datetime import datetime
 
 from loads.balance.engine import ENGINE_VERSION
+from loads.balance.late_change import said
 from loads.cautions import CAUTIONS, INVENTED
 from loads.lifecycle import ways_out
-from loads.models import Load, Paper, Signature
+from loads.models import LateChange, Load, Note, Paper, Signature
 from loads.queries.computation import Computation, versions_of
 from loads.queries.current import Current
 from loads.queries.declaration import declared_now
+from loads.queries.doubles import Double, doubles_of
+from loads.queries.late_change import (
+    Bound,
+    Proposal,
+    bound_of,
+    changes_of,
+    lines_of,
+    words_to_sign_late,
+)
 from loads.queries.signable import signatures_due
 from loads.queries.stale import stale_parts
+from records.canonical import decimal_text
 
+LOAD_PATH = "/api/v1/loads/{}"
 MANIFEST_PATH = "/api/v1/loads/{}/manifest"
 Answer = dict[str, object]
 
@@ -43,6 +55,8 @@ def answer_parts(current: Current) -> tuple[Answer, str, Answer]:
         "assessed_at": used.assessed_at,
         "signatures": [_signature(one) for one in signatures_of(load)] if begun else [],
         "manifest": _manifest(load) if begun else None,
+        "late_changes": [late_answer(one) for one in changes_of(load)] if begun else [],
+        "warnings": [_warning(one) for one in doubles_of(current)],
         "cautions": cautions(invented=load.operator.invented),
     }
     return _standing(current), used.result, after
@@ -67,6 +81,11 @@ def full_answer_of(current: Current, *, known: datetime) -> Answer:
             for one in load.steps.order_by("number")
         ],
         "to_sign": signatures_due(current, declared),
+        "stale_notices": [
+            {"told_at": one.told_at, "changed": one.changed.split(", "), "mail_addresses": one.mail_addresses}
+            for one in load.stale_notices.order_by("told_at", "id")
+        ],
+        "notes": [note_answer(one) for one in notes_of(load)],
         "declared": declared,
     }
 
@@ -153,6 +172,76 @@ def _signature(one: Signature) -> Answer:
     }
 
 
+def late_answer(change: LateChange) -> Answer:
+    """This function will return one last-minute change without the name of anybody."""
+    bound = bound_of(change)
+    return {
+        "number": change.number,
+        "issue": change.issue,
+        "lines": [said(line, named=False) for line in lines_of(change)],
+        "changed_at": change.changed_at,
+        "person": change.person_id,
+        "digest": change.assessment.digest,
+        "moved": {
+            "kilograms": decimal_text(change.kilograms_moved.normalize()),
+            "persons": change.persons_moved,
+        },
+        "bound": bound_answer(bound),
+    }
+
+
+def bound_answer(bound: Bound) -> Answer:
+    """This function will return the most that may change at the last minute, as the settings state it."""
+    weight = {"value": decimal_text(bound.weight), "unit": bound.unit.value}
+    return {"weight": weight, "persons": bound.persons, "settings": bound.settings_number}
+
+
+def proposed_answer(current: Current, proposal: Proposal, number: int) -> Answer:
+    """This function will return the answer about a last-minute change of which nothing is stored."""
+    return {
+        **computed_answer(proposal.computation),
+        "load": current.load.id,
+        "step": current.step.number,
+        "number": proposal.number,
+        "issue": proposal.issue,
+        "lines": [said(line, named=False) for line in proposal.lines],
+        "moved": proposal.bound.said(proposal.moved),
+        "bound": bound_answer(proposal.bound),
+        "to_sign": words_to_sign_late(current, proposal, number)
+        if proposal.computation.verdict == "within"
+        else "",
+    }
+
+
+def note_answer(note: Note) -> Answer:
+    """This function will return one note after flight, with the name of who wrote it."""
+    return {
+        "id": note.id,
+        "written_at": note.written_at,
+        "person": note.person_id,
+        "name": note.person.name,
+        "text": note.text,
+    }
+
+
+def notes_of(load: Load) -> list[Note]:
+    """This function will return the notes on a load, the first one first."""
+    return list(Note.objects.filter(load=load).select_related("person").order_by("written_at", "id"))
+
+
+def _warning(one: Double) -> Answer:
+    return {
+        "code": one.code,
+        "detail": one.detail,
+        "pointer": one.pointer,
+        "load": one.load,
+        "href": LOAD_PATH.format(one.load),
+    }
+
+
 def _manifest(load: Load) -> Answer | None:
     paper = Paper.objects.filter(load=load).first()
-    return {"number": paper.number, "href": MANIFEST_PATH.format(load.id)} if paper else None
+    if paper is None:
+        return None
+    issue = 1 + LateChange.objects.filter(load=load).count()
+    return {"number": paper.number, "issue": issue, "href": MANIFEST_PATH.format(load.id)}

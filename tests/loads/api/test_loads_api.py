@@ -61,7 +61,11 @@ def test_a_load_goes_from_submission_to_departure(people) -> None:
 
     signed = send(people.pilot, f"{at}/signatures", signing | {"meaning": "accepted"}, seen='"2"')
     assert (signed.status_code, answer(signed)["state"]) == (200, "accepted")
-    assert answer(signed)["manifest"] == {"number": 1, "href": f"/api/v1/loads/{body['id']}/manifest"}
+    assert answer(signed)["manifest"] == {
+        "number": 1,
+        "issue": 1,
+        "href": f"/api/v1/loads/{body['id']}/manifest",
+    }
 
     left = send(people.pilot, f"{at}/departure", {"at": timezone.now().isoformat()}, seen='"3"')
     assert (left.status_code, answer(left)["state"]) == (200, "departed")

@@ -1,0 +1,99 @@
+"""What looks doubled: one aircraft, or one person, on two standing loads at about the same time.
+
+A load document states no arrival, so two loads count as overlapping when their planned departures lie less
+than an hour apart. It is a warning and refuses nothing: a spare aircraft, a short hop or two people of one
+name are lawful. It is looked for whenever a load is answered, so it goes when its cause goes.
+"""
+
+from collections.abc import Iterator, Mapping
+from dataclasses import dataclass
+from datetime import timedelta
+from typing import Any, Final
+from uuid import UUID
+
+from django.db.models import Exists, OuterRef
+
+from loads.models import Step
+from loads.queries.current import Current, current_at, steps_with_their_loads
+from loads.queries.declaration import declared_now
+
+APART: Final = timedelta(hours=1)
+STANDING: Final = ("open", "prepared", "loaded", "accepted")
+# As many of one hour are looked at; a day's list shows the rest.
+MOST_LOOKED_AT: Final = 50
+
+
+@dataclass(frozen=True, slots=True)
+class Double:
+    """One warning: a stable code, a sentence without the name of a person, the other load, and the part of
+    this load it is about, as a JSON pointer.
+    """
+
+    code: str
+    detail: str
+    load: UUID
+    pointer: str
+
+
+def doubles_of(current: Current) -> tuple[Double, ...]:
+    """This function will return what of a standing load stands on another one too; () for an ended load."""
+    if current.state not in STANDING:
+        return ()
+    others = _beside(current)
+    if not others:
+        return ()
+    own = tuple(_people(declared_now(current)))
+    found: list[Double] = []
+    for other in others:
+        which = _words(other)
+        if other.load.aircraft_id == current.load.aircraft_id:
+            detail = f"The same aircraft stands on another load: {which}."
+            found.append(Double("same-aircraft", detail, other.load.id, "/aircraft"))
+        there = frozenset().union(*(marks for _, marks, _ in _people(declared_now(other))))
+        found += [
+            Double("same-person", f"{who} is on another load: {which}.", other.load.id, pointer)
+            for pointer, marks, who in own
+            if marks & there
+        ]
+    return tuple(found)
+
+
+def _beside(current: Current) -> list[Current]:
+    load = current.load
+    later = Step.objects.filter(load_id=OuterRef("load_id"), number__gt=OuterRef("number"))
+    rows = (
+        steps_with_their_loads()
+        .filter(
+            ~Exists(later),
+            load__operator_id=load.operator_id,
+            load__departure__gt=load.departure - APART,
+            load__departure__lt=load.departure + APART,
+            after__in=STANDING,
+        )
+        .exclude(load_id=load.id)
+        .order_by("load__departure", "load_id")
+    )
+    return [current_at(one) for one in rows[:MOST_LOOKED_AT]]
+
+
+def _people(declared: Mapping[str, Any]) -> Iterator[tuple[str, frozenset[str], str]]:
+    """Yield (pointer, marks, who) of everybody aboard: a login marks a person surely, a name as people do."""
+    for place, line in enumerate(declared.get("crew", ())):
+        login = {f"login {line['person'].lower()}"} if line.get("person") else set()
+        yield f"/crew/{place}", frozenset({_name(line), *login}), "One of the crew, by login or name,"
+    for place, line in enumerate(declared.get("passengers", ())):
+        pointer, infant = f"/passengers/{place}", line.get("lap_infant")
+        yield pointer, frozenset({_name(line)}), "A passenger of the same name"
+        if infant:
+            yield f"{pointer}/lap_infant", frozenset({_name(infant)}), "A lap infant of the same name"
+
+
+def _name(line: Mapping[str, Any]) -> str:
+    return f"name {' '.join(line['name'].split()).casefold()}"
+
+
+def _words(other: Current) -> str:
+    load = other.load
+    leg = f" leg {load.leg}" if load.leg > 1 else ""
+    flight = f"{load.aircraft.registration} {load.reference}{leg}, {load.origin} to {load.destination}"
+    return f"{flight}, departs {load.departure_text}, {other.state}"
