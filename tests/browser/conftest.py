@@ -86,6 +86,7 @@ class Visit:
         self.page.fill("#login", login)
         self.page.fill("#password", PASSWORD)
         self.page.click("main button")
+        self.page.wait_for_selector("nav")
 
     def _said(self, kind: str, text: str) -> None:
         # A browser reports every answer of 400 and more; the tests expect those themselves.
