@@ -8,24 +8,24 @@ from collections.abc import Sequence
 from functools import lru_cache
 from typing import Any, TypeVar
 
-from django.db import connection, models
+from django.db import DEFAULT_DB_ALIAS, connections, models
 from psycopg import Cursor
 
 _Row = TypeVar("_Row", bound=models.Model)
 
 
 def rows(statement: str, values: Sequence[object]) -> list[tuple[Any, ...]]:
-    """This function will run one statement, `%s` for each value, and return the rows it gives.
+    """This function will run one statement, `%s` for each value, and return the rows it gives, some or none.
 
     The statement is a fixed text, since each text is kept as a plan. It runs in the transaction that is
     open, like a query of the models, and raises Django's errors of the database.
     """
-    connection.close_if_health_check_failed()
-    connection.ensure_connection()
-    connection.validate_no_broken_transaction()
-    with connection.wrap_database_errors, Cursor(connection.connection) as cursor:
-        cursor.execute(statement, values, prepare=True)
-        return cursor.fetchall() if cursor.description else []
+    database = connections[DEFAULT_DB_ALIAS]
+    database.close_if_health_check_failed()
+    database.ensure_connection()
+    database.validate_no_broken_transaction()
+    with database.wrap_database_errors, Cursor(database.connection) as cursor:
+        return cursor.execute(statement, values, prepare=True).fetchall()
 
 
 @lru_cache(maxsize=64)
@@ -40,7 +40,7 @@ def instance(kind: type[_Row], row: Sequence[Any], start: int = 0) -> _Row:
     For models whose values the driver reads by itself: no JSON, no choices of our own.
     """
     names = [field.attname for field in _fields(kind)]
-    return kind.from_db(connection.alias, names, row[start : start + len(names)])
+    return kind.from_db(DEFAULT_DB_ALIAS, names, row[start : start + len(names)])
 
 
 def width(kind: type[models.Model]) -> int:

@@ -80,7 +80,8 @@ def database(name: str, default: str | None = None) -> dict[str, Any]:
         "PASSWORD": unquote(address.password or ""),
         "HOST": query.pop("host", address.hostname or ""),
         "PORT": query.pop("port", str(address.port or "")),
-        "OPTIONS": query,
+        # Lets a session keep the plans records.prepared asks for; Django's own statements never ask.
+        "OPTIONS": {**query, "prepare_threshold": 5},
         "CONN_MAX_AGE": None,
         "CONN_HEALTH_CHECKS": True,
         "ATOMIC_REQUESTS": False,

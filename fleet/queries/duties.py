@@ -1,8 +1,15 @@
 """The roles a person holds at an instant."""
 
 from datetime import datetime
+from typing import Final
 
 from fleet.models import Duty, Person
+from records.prepared import rows
+
+_ROLES: Final = (
+    "SELECT DISTINCT ON (role) role, granted FROM fleet_duty WHERE person_id = %s AND since <= %s "
+    "ORDER BY role, since DESC, id DESC"
+)
 
 
 def roles_of(person: Person, at: datetime) -> tuple[str, ...]:
@@ -11,10 +18,7 @@ def roles_of(person: Person, at: datetime) -> tuple[str, ...]:
     Of the rows of one role that have begun, the one with the latest beginning counts; of equals, the one
     entered last.
     """
-    begun = (
-        Duty.objects.filter(person=person, since__lte=at).order_by("role", "-since", "-id").distinct("role")
-    )
-    return tuple(duty.role for duty in begun if duty.granted)
+    return tuple(role for role, granted in rows(_ROLES, [person.pk, at]) if granted)
 
 
 def holders_at(operator: str, at: datetime) -> dict[str, tuple[Person, ...]]:

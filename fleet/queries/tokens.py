@@ -5,11 +5,13 @@ import re
 from collections.abc import Sequence
 from dataclasses import dataclass
 from datetime import datetime
+from functools import lru_cache
 from typing import Final
 
 from django.db.models import Q
 
-from fleet.models import Rotation, Token
+from fleet.models import Person, Rotation, Token
+from records.prepared import columns, instance, rows, width
 from records.refusal import NotKnown, NotSignedIn
 
 # `tb_` and 32 random bytes as base64url without padding (RFC 4648 section 5).
@@ -56,10 +58,10 @@ def token_sent(secret: str, *, at: datetime) -> Token:
     found = _found(digest_of(secret))
     if found is None:
         raise TokenRefused("token-unknown", "No such token was issued.")
-    token, number = found
+    token, number, rotated = found
     if token.revoked_at is not None:
         raise TokenRefused("token-revoked", "This token was revoked.", token)
-    sent = secrets_of(token)[number]
+    sent = (secrets_of(token) if rotated else lives(token, ()))[number]
     if sent.expires_at <= at:
         raise TokenRefused("token-expired", "This token has expired.", token)
     if sent.ends_at <= at:
@@ -109,9 +111,25 @@ def tokens_of(operator: str, person: int | None = None) -> tuple[Token, ...]:
     return tuple(found.order_by("-issued_at", "-id"))
 
 
-def _found(digest: str) -> tuple[Token, int] | None:
-    token = Token.objects.select_related("person").filter(digest=digest).first()
-    if token is not None:
-        return token, 0
-    rotation = Rotation.objects.select_related("token__person").filter(digest=digest).first()
-    return None if rotation is None else (rotation.token, rotation.number)
+def _found(digest: str) -> tuple[Token, int, bool] | None:
+    """This function will return the token with its person, the number of the secret, whether others came
+    after the first.
+    """
+    found = rows(_statement(), [digest, digest])
+    if not found:
+        return None
+    number, rotated, *row = found[0]
+    token = instance(Token, row)
+    token.person = instance(Person, row, width(Token))
+    return token, number, rotated
+
+
+@lru_cache(maxsize=1)
+def _statement() -> str:
+    return (
+        "SELECT sent.number, EXISTS (SELECT FROM fleet_rotation r WHERE r.token_id = t.id), "  # noqa: S608  # names of our own only
+        f"{columns(Token, 't')}, {columns(Person, 'p')} "
+        "FROM (SELECT id, 0 AS number FROM fleet_token WHERE digest = %s "
+        "UNION ALL SELECT token_id, number FROM fleet_rotation WHERE digest = %s) AS sent "
+        "JOIN fleet_token t ON t.id = sent.id JOIN fleet_person p ON p.id = t.person_id"
+    )

@@ -19,14 +19,11 @@ def insert_together(rows: Sequence[models.Model]) -> int:
     """This function will insert the rows, the last of which is given its number by the database; returns that
     number.
 
-    Every other row brings its key. Rows may name each other, in any order.
+    Every other row brings its key. Rows may name each other, in any order. Values go to the driver as they
+    are: texts, whole numbers, instants, identifiers, bytes; for JSON a model would have more to do.
     """
     plan = _plan(tuple(type(row) for row in rows))
-    values = [
-        field.get_db_prep_save(getattr(row, field.attname), connection)
-        for row, fields in zip(rows, plan[1], strict=True)
-        for field in fields
-    ]
+    values = [getattr(row, name) for row, names in zip(rows, plan[1], strict=True) for name in names]
     ((number,),) = prepared.rows(plan[0], values)
     for row in rows:
         row._state.adding = False  # noqa: SLF001  # the mark by which the model layer knows a stored row
@@ -35,12 +32,14 @@ def insert_together(rows: Sequence[models.Model]) -> int:
 
 
 @lru_cache(maxsize=64)
-def _plan(kinds: tuple[type[models.Model], ...]) -> tuple[str, tuple[tuple[_Field, ...], ...]]:
-    """Return the statement for rows of these tables, and the fields whose values it takes, row by row."""
+def _plan(kinds: tuple[type[models.Model], ...]) -> tuple[str, tuple[tuple[str, ...], ...]]:
+    """Return the statement for rows of these tables, and the names of the values it takes, row by row."""
     columns = tuple(_fields(kind, numbered=place == len(kinds) - 1) for place, kind in enumerate(kinds))
     inserts = [_insert(kind, fields) for kind, fields in zip(kinds, columns, strict=True)]
     before = ", ".join(f"row_{place} AS ({insert})" for place, insert in enumerate(inserts[:-1]))
-    return f"{f'WITH {before} ' if before else ''}{inserts[-1]} RETURNING id", columns
+    return f"{f'WITH {before} ' if before else ''}{inserts[-1]} RETURNING id", tuple(
+        tuple(field.attname for field in fields) for fields in columns
+    )
 
 
 def _fields(kind: type[models.Model], *, numbered: bool) -> tuple[_Field, ...]:

@@ -36,7 +36,7 @@ _FIND: Final = (
 )
 _KEEP: Final = (
     "INSERT INTO records_receipt (actor, key, request_digest, status, headers, body, answered_at) "
-    "VALUES (%s, %s, %s, %s, %s, %s, statement_timestamp())"
+    "VALUES (%s, %s, %s, %s, %s, %s, statement_timestamp()) RETURNING id"
 )
 
 

@@ -43,7 +43,7 @@ django.setup()
 from fleet.actions.issue_token import issue_token  # noqa: E402  # needs the settings above
 from service import roles  # noqa: E402  # as above
 from service.allowed import grantable  # noqa: E402  # as above
-from service.embedded import postgres  # noqa: E402  # as above
+from service.embedded import postgres, valkey  # noqa: E402  # as above
 from tests import databases  # noqa: E402  # as above
 from tests.cast import actor, cast  # noqa: E402  # as above
 from tests.loads.making import load_document  # noqa: E402  # as above
@@ -81,6 +81,9 @@ def main() -> int:
         )
         admin.execute(f"GRANT ALL ON bench_row, bench_row_id_seq TO {roles.SERVICE}")
         connections.close_all()
+        broker = valkey.start(Path(running.enter_context(tempfile.TemporaryDirectory())))
+        running.callback(valkey.stop, broker)
+        os.environ["BROKER_URL"] = broker.url
         servers = {name: running.enter_context(_granian(name, APPLICATIONS[name])) for name in PORTS}
         turns: dict[str, list[Turn]] = {name: [] for name in PORTS}
         for name in PORTS:
@@ -179,7 +182,9 @@ def _granian(name: str, application: str) -> Iterator[int]:
         "--port", str(PORTS[name]), "--workers", "2", "--blocking-threads", "4", "--no-ws",
         "--log-level", "error", application,
     )  # fmt: skip
-    environment = {**os.environ, "DATABASE_URL": address, "LOG_LEVEL": "ERROR"}
+    # One client of many: as many requests as it likes, each of them charged.
+    unlimited = {"RATE_LIMIT_KNOWN": "1000000", "RATE_LIMIT_STRANGER": "1000000"}
+    environment = {**os.environ, **unlimited, "DATABASE_URL": address, "LOG_LEVEL": "ERROR"}
     environment.pop("OWNER_DATABASE_URL", None)
     process = subprocess.Popen(command, cwd=ROOT, env=environment)
     try:

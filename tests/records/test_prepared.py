@@ -11,12 +11,12 @@ pytestmark = pytest.mark.django_db
 
 PUT = (
     "INSERT INTO records_receipt (actor, key, request_digest, status, headers, body, answered_at) "
-    "VALUES (%s, %s, 'x', %s, '{}', %s, statement_timestamp())"
+    "VALUES (%s, %s, 'x', %s, '{}', %s, statement_timestamp()) RETURNING key"
 )
 
 
 def test_a_statement_runs_in_the_open_transaction_and_gives_its_rows():
-    assert rows(PUT, ["person:1", "k", 201, b"\x00 body"]) == []
+    assert rows(PUT, ["person:1", "k", 201, b"\x00 body"]) == [("k",)]
     with pytest.raises(ZeroDivisionError), transaction.atomic():
         rows(PUT, ["person:1", "taken back", 201, b""])
         raise ZeroDivisionError

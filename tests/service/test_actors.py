@@ -114,7 +114,7 @@ def test_the_token_of_a_person_who_has_left_does_not_serve(monkeypatch):
     secret = _token(people.pilot, "read").secret
     kept = tokens.Token.objects.select_related("person").get()
     kept.person.is_active = False
-    monkeypatch.setattr("django.db.models.query.QuerySet.first", lambda _rows: kept)
+    monkeypatch.setattr(tokens, "_found", lambda _digest: (kept, 0, False))
 
     assert _body(_ask(secret))["code"] == "token-person-inactive"
 
