@@ -17,10 +17,13 @@ def make(folder: Path) -> tuple[str, ...]:
     """Make whatever secret is missing in the folder, and return the names of those made."""
     folder.mkdir(parents=True, exist_ok=True, mode=0o700)
     made = []
-    for name in (*(f"{role}-password" for role in _ROLES), "secret-key"):
+    for name in (*(f"{role}-password" for role in _ROLES), "secret-key", "metrics-token"):
         if not (folder / name).exists():
-            _write(folder / name, secrets.token_urlsafe(36))
+            _write(folder / name, secrets.token_urlsafe(48))
             made.append(name)
+    if not (folder / "mail-password").exists():
+        _write(folder / "mail-password", "")  # given by whoever runs the mail server
+        made.append("mail-password")
     for role, (login, database) in _ROLES.items():
         password = (folder / f"{role}-password").read_text().strip()
         address = f"postgresql://{login}:{password}@{_HOST}:5432/{database}"

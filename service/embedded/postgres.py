@@ -170,6 +170,9 @@ def _try(cluster: Cluster, log: Path, programs: Path, to: Account, *, durable: b
         "max_connections=200",
         "unix_socket_permissions=0700",
         "log_checkpoints=off",
+        # A failed statement and the row it failed on hold names and stored passwords: no log is given them.
+        "log_min_error_statement=panic",
+        "log_error_verbosity=terse",
         *(() if durable else _QUICK),
     ]
     options = [word for setting in given for word in ("-c", setting)]

@@ -1,8 +1,14 @@
 """Mistakes of a deployment stop it, each with an id and a hint."""
 
+import re
+import subprocess
+import sys
 from types import SimpleNamespace
 
-from service import checks
+import yaml
+
+from service import checks, compose_secrets
+from service.bootstrap.environment import ROOT
 
 HERE = SimpleNamespace(
     ALLOWED_HOSTS=["127.0.0.1", "localhost"], HTTPS=False, DATABASES={"default": {"USER": "a"}}
@@ -45,3 +51,27 @@ def test_the_owners_address_beside_the_serving_one_is_warned_of(monkeypatch):
 
     _settings(monkeypatch)
     assert _ids(checks.owner_stays_away(None)) == []
+
+
+def test_what_the_compose_file_sets_passes_every_check_of_a_deployment(tmp_path):
+    """As a server would run it: the secrets as they are made, the settings as they are composed."""
+    compose_secrets.make(tmp_path)
+    composed = yaml.safe_load((ROOT / "docker-compose.yml").read_text())["services"]["web"]["environment"]
+    environment = {"PATH": "/usr/bin:/bin", "TAREBOOK_HOST": "loads.example.org"}
+    for name, value in composed.items():
+        filled = re.sub(r"\$\{(\w+)(?::[-?]([^}]*))?\}", lambda m: environment.get(m[1], m[2] or ""), value)
+        environment[name] = filled.replace("/run/secrets", str(tmp_path))
+    environment["PROMETHEUS_MULTIPROC_DIR"] = str(tmp_path)
+
+    def checked(**changes):
+        return subprocess.run(
+            [sys.executable, "manage.py", "check", "--deploy", "--fail-level", "DEBUG"],
+            cwd=ROOT, env=environment | changes, capture_output=True, text=True, check=False,
+        )  # fmt: skip
+
+    sound, plain = checked(), checked(HTTPS="false")
+
+    assert sound.returncode == 0, sound.stderr
+    assert "System check identified no issues" in sound.stdout
+    assert "tarebook.E002" in plain.stderr
+    assert plain.returncode == 1
