@@ -16,11 +16,15 @@ from django.db.models import Exists, OuterRef
 from loads.models import Step
 from loads.queries.current import Current, current_at, steps_with_their_loads
 from loads.queries.declaration import declared_now
+from records import prepared
 
 APART: Final = timedelta(hours=1)
 STANDING: Final = ("open", "prepared", "loaded", "accepted")
 # As many of one hour are looked at; a day's list shows the rest.
 MOST_LOOKED_AT: Final = 50
+_NEAR: Final = (
+    "SELECT FROM loads_load WHERE operator_id = %s AND departure > %s AND departure < %s AND id <> %s LIMIT 1"
+)
 
 
 @dataclass(frozen=True, slots=True)
@@ -60,14 +64,18 @@ def doubles_of(current: Current) -> tuple[Double, ...]:
 
 def _beside(current: Current) -> list[Current]:
     load = current.load
+    # Mostly nothing departs near it. A look at one index tells; the whole question costs many times that.
+    span = (load.departure - APART, load.departure + APART)
+    if not prepared.rows(_NEAR, [load.operator_id, *span, load.id]):
+        return []
     later = Step.objects.filter(load_id=OuterRef("load_id"), number__gt=OuterRef("number"))
     rows = (
         steps_with_their_loads()
         .filter(
             ~Exists(later),
             load__operator_id=load.operator_id,
-            load__departure__gt=load.departure - APART,
-            load__departure__lt=load.departure + APART,
+            load__departure__gt=span[0],
+            load__departure__lt=span[1],
             after__in=STANDING,
         )
         .exclude(load_id=load.id)

@@ -16,6 +16,7 @@ import tests.environment  # noqa: F401  # the settings are read from it
 
 # isort: split
 import http.client
+import itertools
 import json
 import os
 import statistics
@@ -46,7 +47,7 @@ from service.allowed import grantable  # noqa: E402  # as above
 from service.embedded import postgres, valkey  # noqa: E402  # as above
 from tests import databases  # noqa: E402  # as above
 from tests.cast import actor, cast  # noqa: E402  # as above
-from tests.loads.making import load_document  # noqa: E402  # as above
+from tests.loads.making import DEPARTURE, DEPARTURE_AT, load_document  # noqa: E402  # as above
 from tests.makers import q, ready_aircraft  # noqa: E402  # as above
 
 CLIENTS, ROUNDS, SECONDS = 8, 5, 4.0
@@ -58,6 +59,9 @@ APPLICATIONS = {
     "bare": "tests.bench.bare_in_service:application",
     "fresh": "tests.bench.bare_fresh:application",
 }
+# Each load departs this long after the one before it, as no fleet of one aircraft could otherwise fly them.
+APART = timedelta(hours=2)
+_flights = itertools.count(1)
 _TICK = 1000 / os.sysconf("SC_CLK_TCK")  # milliseconds
 
 
@@ -209,13 +213,16 @@ def _wait_for(port: int) -> None:
 def _rate(name: str, body: str, token: str, *, seconds: float) -> float:
     """Requests a second that were answered 201, by `CLIENTS` clients with a kept connection each."""
     until = time.monotonic() + seconds
+    before, _, after = body.partition(DEPARTURE)
     counts = [0] * CLIENTS
 
     def ask(number: int) -> None:
         client = http.client.HTTPConnection("127.0.0.1", PORTS[name], timeout=30)
         headers = {"Content-Type": "application/json", "Authorization": f"Bearer {token}"}
         while time.monotonic() < until:
-            client.request("POST", "/api/v1/loads", body, headers | {"Idempotency-Key": str(uuid.uuid4())})
+            departure = (DEPARTURE_AT + APART * next(_flights)).isoformat()
+            key = {"Idempotency-Key": str(uuid.uuid4())}
+            client.request("POST", "/api/v1/loads", before + departure + after, headers | key)
             answer = client.getresponse()
             text = answer.read()
             if answer.status != http.client.CREATED:
