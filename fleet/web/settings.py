@@ -162,7 +162,9 @@ def _by_one(held: Settings) -> str:
 
 
 def _estimates(held: Settings) -> str:
-    return "may be signed" if held.estimates_may_be_signed else "cannot be signed"
+    if held.estimates_may_be_signed:
+        return "may be signed by the procedure; not in effect yet: loads with an estimate stay unresolved"
+    return "cannot be signed"
 
 
 def _version(row: OperatorSettings, zone: ZoneInfo, now: datetime) -> dict[str, Any]:

@@ -46,9 +46,7 @@ def change_late(
         refuse_all_but_the_pilot(current.load, by)
         proposal = propose(current, change, entry.at)
         made = proposal.computation
-        refuse_unsignable(
-            current.load, signing, verdict=made.verdict, digest=made.digest, declared=made.document
-        )
+        refuse_unsignable(entry, signing, verdict=made.verdict, digest=made.digest, declared=made.document)
         paper = Paper.objects.get(load=current.load)
         words = words_to_sign_late(current, proposal, paper.number)
         assessment = assessment_of(entry, current.load, made, number=current.assessment.number + 1)

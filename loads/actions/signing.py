@@ -6,6 +6,7 @@ from dataclasses import dataclass
 from typing import Literal
 from uuid import UUID
 
+from fleet.queries.settings import settings_at
 from loads.actions.keeping import SALT_BYTES
 from loads.actions.stepping import load_as_seen, take_step
 from loads.models import Load, Signature, Step
@@ -74,9 +75,9 @@ def sign(
     declared = declared_now(current)
     if meaning == "accepted":
         refuse_all_but_the_pilot(current.load, by)
-        _refuse_the_same_hand_twice(current, signer)
+        _refuse_the_same_hand_twice(entry, current, signer)
     used = current.assessment
-    refuse_unsignable(current.load, signing, verdict=used.verdict, digest=used.digest, declared=declared)
+    refuse_unsignable(entry, signing, verdict=used.verdict, digest=used.digest, declared=declared)
     _refuse_what_moved_on(entry, current, declared)
     words = words_to_sign(current, declared, meaning)
     step = take_step(entry, current, meaning, by=by)
@@ -121,10 +122,9 @@ def refuse_all_but_the_pilot(load: Load, by: Actor) -> None:
         )
 
 
-def _refuse_the_same_hand_twice(current: Current, signer: int) -> None:
-    load = current.load
-    prepared = load.steps.filter(after="prepared", assessment=current.assessment, person_id=signer)
-    if not load.operator.prepare_and_accept_by_one and prepared.exists():
+def _refuse_the_same_hand_twice(entry: Entry, current: Current, signer: int) -> None:
+    prepared = current.load.steps.filter(after="prepared", assessment=current.assessment, person_id=signer)
+    if prepared.exists() and not settings_at(entry.chain, entry.at, entry.at).prepare_and_accept_by_one:
         raise StepRefused(
             "second-person-needed",
             "This operator asks that somebody else prepares the load.",
@@ -133,7 +133,7 @@ def _refuse_the_same_hand_twice(current: Current, signer: int) -> None:
 
 
 def refuse_unsignable(
-    load: Load, signing: Signing, *, verdict: str, digest: str, declared: Mapping[str, JSON]
+    entry: Entry, signing: Signing, *, verdict: str, digest: str, declared: Mapping[str, JSON]
 ) -> None:
     """This function will raise StepRefused unless what was shown is what would be signed, and may be."""
     if signing.digest != digest:
@@ -148,7 +148,7 @@ def refuse_unsignable(
             f"The verdict is {verdict}; only a load that is within every limit can be signed.",
             next_step="See the checks, and revise the load.",
         )
-    if not load.operator.estimates_may_be_signed and _estimated(declared):
+    if _estimated(declared) and not settings_at(entry.chain, entry.at, entry.at).estimates_may_be_signed:
         raise StepRefused(
             "estimated-weights",
             "The weight of a person is estimated, and this operator's procedure has no estimates of people.",

@@ -6,6 +6,7 @@ from uuid import UUID
 
 from fleet.models import Aircraft, EmptyWeight, LoadingBasis, Operator
 from fleet.queries.figures import basis_of
+from fleet.queries.settings import Settings, settings_at
 from loads.balance.late_change import said
 from loads.manifest.facts import (
     AircraftFacts,
@@ -54,7 +55,7 @@ def facts_of(paper: Paper, change: LateChange | None = None) -> Facts:
     declared = declared_now(current)
     signed = canonical(statement_of(current, declared))
     return Facts(
-        operator=_operator(load.operator),
+        operator=_operator(load.operator, settings_at(load.operator_id, step.at, step.at)),
         aircraft=_aircraft(load.aircraft),
         load=str(load.id),
         replaces=str(load.replaces_id or ""),
@@ -87,16 +88,17 @@ def paper_of(operator: str, load: UUID) -> Paper:
     return found
 
 
-def _operator(row: Operator) -> OperatorFacts:
+def _operator(row: Operator, then: Settings) -> OperatorFacts:
+    """Tell the operator, with what its settings said at the acceptance."""
     return OperatorFacts(
         code=row.code,
         name=row.name,
         certificate=row.certificate,
         base=row.base,
         time_zone=row.time_zone,
-        rule_set="US" if row.rule_set == "US" else "EU-UK",
-        procedure=row.procedure,
-        weight_method=row.weight_method,
+        rule_set="US" if then.rule_set == "US" else "EU-UK",
+        procedure=then.procedure,
+        weight_method=then.weight_method,
         invented=row.invented,
     )
 

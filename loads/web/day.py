@@ -11,12 +11,13 @@ from django.utils import timezone
 from django.views.decorators.http import require_safe
 
 from loads.lifecycle import ways_out
-from loads.manifest.words import WORDS, Words
+from loads.manifest.words import Words
 from loads.queries.current import Current
 from loads.queries.listing import MOST_ROWS, Filters, list_loads
 from loads.queries.stale import stale_parts
 from loads.web.asking import zone_of, zone_words
 from loads.web.shown import stops
+from loads.web.wording import words_at
 from records.web.asking import operator_of, signed_in
 
 GONE = ("superseded", "withdrawn")
@@ -34,7 +35,8 @@ def day(request: HttpRequest) -> HttpResponse:
     since = datetime.combine(wanted, time(), tzinfo=zone)
     until = datetime.combine(wanted + ONE_DAY, time(), tzinfo=zone)
     page = list_loads(operator_of(request), Filters(since=since, until=until), most=MOST_ROWS)
-    lines = [_line(current, zone, now) for current in page.loads]
+    words = words_at(operator_of(request), now)
+    lines = [_line(current, zone, now, words) for current in page.loads]
     context = {
         "day": wanted,
         "zone": zone_words(zone, since),
@@ -55,9 +57,8 @@ def _day_asked(request: HttpRequest, today: date) -> date:
     return wanted if date(1950, 1, 1) <= wanted <= date(2150, 1, 1) else today
 
 
-def _line(current: Current, zone: ZoneInfo, now: datetime) -> dict[str, Any]:
+def _line(current: Current, zone: ZoneInfo, now: datetime, words: Words) -> dict[str, Any]:
     load, result = current.load, current.result()
-    words = WORDS[load.operator.rule_set]
     paper = getattr(load, "paper", None)
     return {
         "id": load.id,

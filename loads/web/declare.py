@@ -20,7 +20,6 @@ from fleet.queries.in_force import basis_in_force
 from loads.actions.revise_load import revise_load
 from loads.actions.stepping import reason_in
 from loads.actions.submit_load import submit_load
-from loads.manifest.words import WORDS
 from loads.queries.computation import compute
 from loads.queries.current import load_of
 from loads.queries.declaration import declared_now
@@ -28,6 +27,7 @@ from loads.web.asking import typed_in, zone_of, zone_words
 from loads.web.desk import lay_desk, wrong_inputs
 from loads.web.form import can_carry, document_of, field_of, typed_of
 from loads.web.shown import stops, verdict_words
+from loads.web.wording import words_at
 from records.refusal import Fault, Invalid, NotKnown, Refused
 from records.web.asking import actor_of, operator_of, signed_in
 
@@ -177,7 +177,7 @@ def _previewed(
     revised: UUID | None = None,
 ) -> HttpResponse:
     result: dict[str, Any] = compute(operator_of(request), document, timezone.now()).result
-    words = WORDS[table.aircraft.operator.rule_set]
+    words = words_at(operator_of(request), timezone.now())
     preview = {
         "verdict": result["verdict"],
         "verdict_words": verdict_words(result["verdict"]),

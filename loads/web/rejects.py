@@ -13,7 +13,7 @@ from django.views.decorators.http import require_POST, require_safe
 
 from loads.actions.remark_reject import LONGEST_REMARK, read_remark, remark_reject
 from loads.acts import REMARK_REJECT, REVISE_LOAD
-from loads.manifest.words import WORDS
+from loads.manifest.words import Words
 from loads.models import Remark
 from loads.queries.current import Current, result_in
 from loads.queries.rejects import (
@@ -28,6 +28,7 @@ from loads.queries.trend import WEEK, Trend, reject_trend
 from loads.trend_chart import Series, trend_chart
 from loads.web.asking import zone_of, zone_words
 from loads.web.shown import stops
+from loads.web.wording import words_at
 from records.refusal import Refused
 from records.web.asking import actor_of, operator_of, signed_in
 
@@ -65,7 +66,8 @@ def _page(
     until = datetime.combine(now.astimezone(zone).date() + timedelta(days=1), time(), tzinfo=zone)
     since = until - timedelta(days=DAYS)
     found = open_rejects(operator)
-    lines = [_reject(one, zone, now) for one in found]
+    words = words_at(operator, now)
+    lines = [_reject(one, zone, now, words) for one in found]
     if about is not None:
         for line in lines:
             line["typed"] = typed if line["id"] == about else None
@@ -77,7 +79,7 @@ def _page(
         "may_revise": REVISE_LOAD.name in actor.may,
         "people": people_who_may_hold(operator) if found else (),
         "longest": LONGEST_REMARK,
-        "settled": [_settled(one, zone) for one in settled_rejects(operator, since, until, most=50)],
+        "settled": [_settled(one, zone, words) for one in settled_rejects(operator, since, until, most=50)],
         "days": DAYS,
         "trend": _trend(reject_trend(operator, since, until), zone),
         "refusal": refusal,
@@ -101,9 +103,8 @@ def _flight(current: Current, zone: ZoneInfo) -> dict[str, Any]:
     }
 
 
-def _reject(one: Reject, zone: ZoneInfo, now: datetime) -> dict[str, Any]:
+def _reject(one: Reject, zone: ZoneInfo, now: datetime, words: Words) -> dict[str, Any]:
     load, result = one.current.load, one.current.result()
-    words = WORDS[load.operator.rule_set]
     governing: Any = result.get("governing") or {}
     return _flight(one.current, zone) | {
         "past": load.departure < now,
@@ -127,9 +128,8 @@ def _remark(one: Remark, zone: ZoneInfo) -> dict[str, str]:
     }
 
 
-def _settled(one: Settled, zone: ZoneInfo) -> dict[str, Any]:
+def _settled(one: Settled, zone: ZoneInfo, words: Words) -> dict[str, Any]:
     load = one.current.load
-    words = WORDS[load.operator.rule_set]
     return _flight(one.current, zone) | {
         "rejected": one.rejected.verdict,
         "stops": [f"{stop['title']}: {stop['margin']}" for stop in stops(result_in(one.rejected), words)],

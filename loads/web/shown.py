@@ -16,7 +16,7 @@ from loads.lifecycle import ways_out
 from loads.manifest.figures import figure
 from loads.manifest.pilot_block import VERDICTS, fuel_block, open_points
 from loads.manifest.tables import computation, limits
-from loads.manifest.words import WORDS, Words
+from loads.manifest.words import Words
 from loads.models import Load
 from loads.plot import plot
 from loads.queries.answer import signatures_of
@@ -24,6 +24,7 @@ from loads.queries.current import Current
 from loads.queries.declaration import declared_now
 from loads.queries.signable import signatures_due
 from loads.queries.stale import stale_parts
+from loads.web.wording import words_at
 from records.actor import Actor
 
 AXES: tuple[Axis, ...] = ("longitudinal", "lateral")
@@ -51,7 +52,7 @@ class Page:
 def load_page(current: Current, zone: ZoneInfo, now: datetime, actor: Actor) -> dict[str, Any]:
     """This function will return the values of one load's page at `now`, for this actor."""
     load, page = current.load, Page(declared_now(current), current.result())
-    words = WORDS[load.operator.rule_set]
+    words = words_at(load.operator_id, now)
     stale = stale_parts(current, now) if ways_out(current.state) else ()
     return {
         "load": _head(current, zone),

@@ -42,6 +42,10 @@ class Act(models.Model):
         ]
         indexes = [
             models.Index(fields=["about", "id"], name="act_by_about"),
+            # The trail is read newest first: whole, by who acted, by what was done.
+            models.Index(fields=["chain", "id"], name="act_by_chain"),
+            models.Index(fields=["chain", "actor_key", "id"], name="act_by_actor"),
+            models.Index(fields=["chain", "kind", "id"], name="act_by_kind"),
         ]
 
     def __str__(self) -> str:
