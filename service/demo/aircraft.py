@@ -2,15 +2,16 @@
 
 import json
 from dataclasses import dataclass
+from datetime import UTC, datetime
 from pathlib import Path
 from typing import Any
 
-from service.demo.client import Client
+from service.client import Tarebook
 from service.demo.day import HELICOPTER, TURBOPROP, TWIN, TWIN_UNWEIGHED
 
 DATA = Path(__file__).parent / "data"
 # All that was entered on paper before counts from here on.
-TRUE_FROM = "2026-04-01T00:00:00Z"
+TRUE_FROM = datetime(2026, 4, 1, tzinfo=UTC)
 
 
 @dataclass(frozen=True, slots=True)
@@ -33,20 +34,19 @@ AIRFRAMES = (
 )
 
 
-def enter_aircraft(maintenance: Client, approver: Client) -> None:
+def enter_aircraft(maintenance: Tarebook, approver: Tarebook) -> None:
     """This function will enter every airframe; the same keys again have no second effect."""
     for one in AIRFRAMES:
         _enter(one, maintenance, approver)
 
 
-def _enter(one: Airframe, maintenance: Client, approver: Client) -> None:
+def _enter(one: Airframe, maintenance: Tarebook, approver: Tarebook) -> None:
     basis = _document(f"{one.documents}.loading-basis.json")
     weight = _document(f"{one.documents}.empty-weight.json")
-    key, path = f"invented-{one.registration}", f"/aircraft/{one.registration}"
-    maintenance.post(
-        "/aircraft",
+    key, registration = f"invented-{one.registration}", one.registration
+    maintenance.enter_aircraft(
         {
-            "registration": one.registration,
+            "registration": registration,
             "serial_number": one.serial_number,
             "type": basis["aircraft_type"],
             "category": basis["category"],
@@ -55,15 +55,18 @@ def _enter(one: Airframe, maintenance: Client, approver: Client) -> None:
         },
         key=f"{key}-aircraft",
     )
-    entered = maintenance.post(f"{path}/loading-bases", basis, key=f"{key}-basis").body
-    approval: dict[str, Any] = {"true_from": TRUE_FROM, "reason": "checked against the manual's sample loads"}
-    approver.post(f"{path}/loading-bases/{entered['id']}/approval", approval, key=f"{key}-basis-approval")
-    weighed = maintenance.post(f"{path}/weighings", weight, key=f"{key}-weight").body
+    entered = maintenance.enter_loading_basis(registration, basis, key=f"{key}-basis")
+    approver.approve_loading_basis(
+        registration,
+        entered,
+        "checked against the manual's sample loads",
+        true_from=TRUE_FROM,
+        key=f"{key}-basis-approval",
+    )
+    weighed = maintenance.enter_empty_weight(registration, weight, key=f"{key}-weight")
     if one.weight_approved:
-        approver.post(
-            f"{path}/empty-weights/{weighed['id']}/approval",
-            {"reason": "compared with the report"},
-            key=f"{key}-weight-approval",
+        approver.approve_empty_weight(
+            registration, weighed, "compared with the report", key=f"{key}-weight-approval"
         )
 
 

@@ -10,9 +10,9 @@ from django.utils import timezone
 from rich.console import Console
 
 from loads.models import FiledPaper
+from service.client import Tarebook
 from service.demo.aircraft import enter_aircraft
 from service.demo.cast import APPROVER, MAINTENANCE, OPERATOR, PILOTS, SCHEDULER
-from service.demo.client import Client
 from service.demo.flights import Flown, fly
 from service.demo.notes import Notes
 from service.demo.people import enter_people
@@ -33,12 +33,12 @@ def run(address: str, data: Path) -> None:
         return
     console.print(f"Entering the invented operator {OPERATOR.name} and a day of its loads ...")
     tokens = enter_people(notes)
-    enter_aircraft(Client(address, tokens[MAINTENANCE]), Client(address, tokens[APPROVER]))
+    enter_aircraft(Tarebook(address, tokens[MAINTENANCE]), Tarebook(address, tokens[APPROVER]))
     if notes.get("day") is None:
         today = timezone.now().astimezone(ZoneInfo(OPERATOR.time_zone)).date()
         notes.keep("day", today.isoformat())
-    scheduler = Client(address, tokens[SCHEDULER])
-    pilots = {login: Client(address, tokens[login]) for login in PILOTS}
+    scheduler = Tarebook(address, tokens[SCHEDULER])
+    pilots = {login: Tarebook(address, tokens[login]) for login in PILOTS}
     day = datetime.fromisoformat(notes.get("day")).date()
     flown = fly(scheduler, pilots, notes.password, day)
     papers = _papers(flown, scheduler, data / "papers")
@@ -47,15 +47,15 @@ def run(address: str, data: Path) -> None:
     show_logins(console, address, notes.password)
 
 
-def _papers(flown: list[Flown], client: Client, folder: Path) -> dict[str, Path]:
+def _papers(flown: list[Flown], client: Tarebook, folder: Path) -> dict[str, Path]:
     """This function will fetch the manifest of every accepted load into `folder`, by flight reference."""
     folder.mkdir(exist_ok=True)
-    accepted = [one for one in flown if one.last["manifest"]]
-    _await_filing([UUID(one.last["id"]) for one in accepted])
+    accepted = [(one, one.last.manifest) for one in flown if one.last.manifest]
+    _await_filing([UUID(one.last.id) for one, _ in accepted])
     papers = {}
-    for one in accepted:
-        path = folder / f"manifest-{one.last['manifest']['number']:03d}-{one.trip.reference}.pdf"
-        path.write_bytes(client.download(f"/loads/{one.last['id']}/manifest"))
+    for one, manifest in accepted:
+        path = folder / f"manifest-{manifest.number:03d}-{one.trip.reference}.pdf"
+        path.write_bytes(client.manifest(one.last).pdf)
         papers[one.trip.reference] = path
     return papers
 

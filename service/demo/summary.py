@@ -21,22 +21,22 @@ def show_summary(console: Console, flown: list[Flown], papers: dict[str, Path], 
     for name in ("load", "aircraft", "verdict", "governing: weight, CG", "state", "paper"):
         table.add_column(name, overflow="fold")
     for one in flown:
-        governing = one.last["governing"]
+        governing = one.last.governing
         table.add_row(
             one.trip.reference,
-            one.last["aircraft"],
+            one.last.body["aircraft"],
             _verdict(one),
             f"{governing['weight']}\n{governing['cg']}",
-            one.last["state"],
+            one.last.state,
             str(papers.get(one.trip.reference, "")),
         )
     Console(width=max(console.width, NARROWEST), highlight=False, file=console.file).print(table)
 
 
 def _verdict(one: Flown) -> str:
-    if one.first["id"] == one.last["id"]:
-        return str(one.last["verdict"])
-    return f"{one.first['verdict']}, revised: {one.last['verdict']}"
+    if one.first.id == one.last.id:
+        return one.last.verdict
+    return f"{one.first.verdict}, revised: {one.last.verdict}"
 
 
 def show_logins(console: Console, address: str, password: str) -> None:

@@ -1,0 +1,62 @@
+"""A small client of Tarebook's API for Python 3.11 and newer, on the standard library alone.
+
+Nothing in this folder imports anything of the service: copy it into your own program, under any name.
+
+    with_token = Tarebook("http://127.0.0.1:8000", token)
+    load = with_token.submit(document)
+    if load.verdict != "within":
+        print([check.what_next for check in load.failed])
+"""
+
+from .events import Message, MessageRefused, read_message
+from .exchange import Patience
+from .problems import (
+    AnswerUnusable,
+    Fault,
+    Invalid,
+    MovedOn,
+    NotAllowed,
+    NotKnown,
+    NotSignedIn,
+    Refused,
+    ServerFailed,
+    StateNotSent,
+    StepRefused,
+    TarebookError,
+    TooLarge,
+    TooSoon,
+    Unanswered,
+    Unreadable,
+)
+from .shapes import Assessment, Check, Load, LoadLine, ManifestNumber, Paper
+from .tarebook import Tarebook
+
+__all__ = (
+    "AnswerUnusable",
+    "Assessment",
+    "Check",
+    "Fault",
+    "Invalid",
+    "Load",
+    "LoadLine",
+    "ManifestNumber",
+    "Message",
+    "MessageRefused",
+    "MovedOn",
+    "NotAllowed",
+    "NotKnown",
+    "NotSignedIn",
+    "Paper",
+    "Patience",
+    "Refused",
+    "ServerFailed",
+    "StateNotSent",
+    "StepRefused",
+    "Tarebook",
+    "TarebookError",
+    "TooLarge",
+    "TooSoon",
+    "Unanswered",
+    "Unreadable",
+    "read_message",
+)

@@ -1,0 +1,35 @@
+"""The client itself: one server, one token."""
+
+import ssl
+import time
+from collections.abc import Callable
+
+from .aircraft import AircraftRecords
+from .exchange import Exchange, Patience
+from .loads import Loads
+from .webhooks import Webhooks
+
+
+class Tarebook(Loads, AircraftRecords, Webhooks):
+    """Talks to one Tarebook with one bearer token. Threads may share it.
+
+    What stores something is sent with an Idempotency-Key that is made once a call, and sent again with the
+    same key when no answer came, when the same key is just being answered, and after 429, 502 and 503. Raises
+    a subclass of `Refused` for a refusal, `Unanswered` when no answer came at all.
+    """
+
+    def __init__(
+        self,
+        address: str,
+        token: str,
+        *,
+        patience: Patience | None = None,
+        tls: ssl.SSLContext | None = None,
+        sleep: Callable[[float], None] = time.sleep,
+    ) -> None:
+        """Raises ValueError for an address that is none. `tls` is for a private certificate authority."""
+        self._exchange = Exchange(address, token, patience=patience or Patience(), tls=tls, sleep=sleep)
+
+    def __repr__(self) -> str:
+        """Say where to; a token is no text for a log."""
+        return f"Tarebook({self._exchange.address!r})"
