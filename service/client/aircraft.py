@@ -18,7 +18,7 @@ class AircraftRecords:
 
     def aircraft(self) -> tuple[Aircraft, ...]:
         """This function will return every aircraft this token may see, by registration."""
-        return tuple(aircraft_in(one) for one in self._exchange.get("/aircraft").document()["aircraft"])
+        return tuple(aircraft_in(one) for one in self._exchange.get("/aircraft").rows("aircraft"))
 
     def one_aircraft(self, registration: str) -> Aircraft:
         """This function will return one aircraft; `body` also says what is in force now."""

@@ -74,6 +74,13 @@ class Answer:
             raise AnswerUnusable("the answer is no JSON object")
         return found
 
+    def rows(self, name: str) -> list[dict[str, Any]]:
+        """This function will return the list `name` of the body; raises AnswerUnusable."""
+        found = self.document().get(name)
+        if not isinstance(found, list):
+            raise AnswerUnusable(f"the answer has no list {name}")
+        return found
+
 
 class Exchange:
     """Sends to one server with one token. Each request has its own connection, so threads may share this."""

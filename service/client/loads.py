@@ -96,7 +96,7 @@ class Loads:
         path = f"/loads?{urlencode({name: value for name, value in asked.items() if value})}"
         while path:
             answer = self._exchange.get(path)
-            yield from (line_in(one) for one in answer.document()["loads"])
+            yield from (line_in(one) for one in answer.rows("loads"))
             path = answer.following
 
     def manifest(self, load: Load | LoadLine, *, issue: int | None = None) -> Paper:

@@ -15,7 +15,7 @@ class Webhooks:
 
     def webhooks(self) -> tuple[Subscription, ...]:
         """This function will return the subscriptions that are not ended."""
-        found = self._exchange.get("/webhooks").document()["webhooks"]
+        found = self._exchange.get("/webhooks").rows("webhooks")
         return tuple(subscription_in(one) for one in found)
 
     def subscribe(
@@ -49,7 +49,7 @@ class Webhooks:
         path = f"/webhooks/{subscription.id}/deliveries?{urlencode(asked)}"
         while path:
             answer = self._exchange.get(path)
-            yield from (delivery_in(one) for one in answer.document()["deliveries"])
+            yield from (delivery_in(one) for one in answer.rows("deliveries"))
             path = answer.following
 
     def replay(self, subscription: Subscription, delivery: Delivery, *, key: str = "") -> Delivery:
