@@ -140,7 +140,7 @@ def _lines(held: Settings, zone: ZoneInfo) -> list[dict[str, Any]]:
         )
     threshold = "not set"
     if held.weighing_threshold_percent is not None:
-        threshold = f"{held.weighing_threshold_percent} % of the landing weight limit"
+        threshold = f"{held.weighing_threshold_percent} % of the landing weight limit; not in effect yet"
     since = f"since {_local(held.true_from, zone)}" if held.true_from else "as entered with the operator"
     return [
         {"title": "Most that may change at the last minute", "value": bound},

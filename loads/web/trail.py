@@ -7,6 +7,7 @@ from urllib.parse import urlencode
 from uuid import UUID
 from zoneinfo import ZoneInfo
 
+from django.apps import apps
 from django.http import HttpRequest, HttpResponse
 from django.shortcuts import render
 from django.urls import reverse
@@ -112,7 +113,7 @@ def _line(line: Line, subject: Subject, zone: ZoneInfo) -> dict[str, Any]:
 
 def _written(one: Written) -> dict[str, Any]:
     return {
-        "table": one.table.partition("_")[2].replace("_", " "),
+        "table": _called(one.table),
         "row": one.row,
         "added": one.operation == "insert",
         "fields": [
@@ -124,6 +125,12 @@ def _written(one: Written) -> dict[str, Any]:
             for name, before, after in one.fields
         ],
     }
+
+
+def _called(table: str) -> str:
+    """This function will return the name of a table's rows as people say it ("empty weight")."""
+    found = (model for model in apps.get_models() if model._meta.db_table == table)  # noqa: SLF001  # documented
+    return next((str(model._meta.verbose_name) for model in found), table)  # noqa: SLF001  # documented
 
 
 def _text(value: object) -> str:

@@ -114,6 +114,22 @@ def test_what_makes_no_sense_stands_beside_its_field_with_all_that_was_typed(typ
     assert not OperatorSettings.objects.exists()
 
 
+def test_all_that_is_wrong_is_named_at_once() -> None:
+    people = cast()
+    form = Page(browser(people.manager).get("/settings")).form("")
+    wrong = {
+        "last_minute_weight": "abc",
+        "last_minute_persons": "1",
+        "operations_mail": "nobody",
+        "reason": "x",
+    }
+
+    page = Page(browser(people.manager).post("/settings", form.filled(wrong)))
+
+    assert set(page.faults) == {"last_minute_weight", "operations_mail"}
+    assert "The fields that are wrong are marked below" in page.words
+
+
 def test_who_saw_an_older_version_is_told() -> None:
     people = cast()
     form = Page(browser(people.manager).get("/settings")).form("")
