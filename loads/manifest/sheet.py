@@ -12,6 +12,8 @@ from loads.plot import Frame, plot
 
 # Height of one plot, by paper and by whether there are two of them, so that the first page holds them.
 HEIGHTS = {("Letter", False): 315.0, ("A4", False): 355.0, ("Letter", True): 200.0, ("A4", True): 232.0}
+# Each line of a last-minute change takes this much of the plots, which stay readable at what is left.
+LINE_OF_CHANGES, MOST_SPARED = 12.0, 84.0
 STATEMENT_NAME = "statement.json"
 ENCLOSED = (
     f"Enclosed in this file as {STATEMENT_NAME}: what was signed (inputs as typed, digests of the versions "
@@ -77,7 +79,7 @@ def title_of(facts: Facts) -> str:
 def _plots(facts: Facts, words: Words) -> list[str]:
     """The longitudinal plot, and a lateral one beside it where the basis has a lateral envelope."""
     lateral = any(envelope.axis == "lateral" for envelope in facts.basis.envelopes)
-    height = HEIGHTS[words.paper, lateral]
+    height = HEIGHTS[words.paper, lateral] - _height_of_changes(facts)
     frame = Frame(height=height, bottom=height - 34.0)
     axes: tuple[Axis, ...] = ("longitudinal", "lateral") if lateral else ("longitudinal",)
     drawn = [
@@ -85,6 +87,12 @@ def _plots(facts: Facts, words: Words) -> list[str]:
         for axis in axes
     ]
     return [one for one in drawn if one]
+
+
+def _height_of_changes(facts: Facts) -> float:
+    """What the lines of last-minute changes take from the first page, up to what a plot can spare."""
+    lines = sum(max(len(one.lines), 2) for one in facts.changes)
+    return min(MOST_SPARED, LINE_OF_CHANGES * lines)
 
 
 def _rules_note(facts: Facts, words: Words) -> str:

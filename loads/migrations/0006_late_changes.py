@@ -86,7 +86,7 @@ class Migration(migrations.Migration):
                     ),
                     models.CheckConstraint(
                         condition=Q(number=1, previous__isnull=True)
-                        | Q(number__gt=1, previous=F("number") - 1),
+                        | Q(number__gt=1, previous__isnull=False, previous=F("number") - 1),
                         name="late_change_follows_the_one_before",
                     ),
                     models.CheckConstraint(

@@ -49,7 +49,7 @@ class LateChange(models.Model):
             models.UniqueConstraint(fields=["step", "operator"], name="late_change_is_of_one_operator"),
             models.CheckConstraint(
                 condition=models.Q(number=1, previous__isnull=True)
-                | models.Q(number__gt=1, previous=models.F("number") - 1),
+                | models.Q(number__gt=1, previous__isnull=False, previous=models.F("number") - 1),
                 name="late_change_follows_the_one_before",
             ),
             models.CheckConstraint(

@@ -25,7 +25,7 @@ class Paper(models.Model):
             models.UniqueConstraint(fields=["load", "operator"], name="paper_is_of_one_operator"),
             models.CheckConstraint(
                 condition=models.Q(number=1, previous__isnull=True)
-                | models.Q(number__gt=1, previous=models.F("number") - 1),
+                | models.Q(number__gt=1, previous__isnull=False, previous=models.F("number") - 1),
                 name="paper_numbers_have_no_gaps",
             ),
         ]

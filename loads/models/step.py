@@ -79,7 +79,7 @@ class Step(models.Model):
             ),
             models.CheckConstraint(
                 condition=Q(number=1, previous__isnull=True, before="", after="open")
-                | Q(number__gt=1, previous=F("number") - 1),
+                | Q(number__gt=1, previous__isnull=False, previous=F("number") - 1),
                 name="step_follows_the_one_before",
             ),
             models.CheckConstraint(

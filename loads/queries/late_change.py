@@ -168,9 +168,7 @@ def words_to_sign_late(current: Current, proposal: Proposal, number: int) -> str
     stated = statement(
         _object(made.inputs), versions_of(made.basis, made.empty_weight), ENGINE_VERSION, made.result
     )
-    lines = [
-        f"{place}. {said(line, named=False).capitalize()}." for place, line in enumerate(proposal.lines, 1)
-    ]
+    lines = [f"{place}. {said(line, named=False)}." for place, line in enumerate(proposal.lines, 1)]
     words = signing_text(
         stated,
         name=SIGNER,

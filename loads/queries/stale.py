@@ -20,6 +20,7 @@ def stale_parts(current: Current, known: datetime) -> tuple[str, ...]:
         changed.append("loading basis")
     if (now.empty_weight.id if now.empty_weight else None) != used.empty_weight_id:
         changed.append("empty weight")
-    if used.engine != ENGINE_VERSION:
+    # A newer program moves no figure of a load that is accepted; anybody else assesses again with it.
+    if used.engine != ENGINE_VERSION and current.state != "accepted":
         changed.append("engine")
     return tuple(changed)

@@ -73,9 +73,16 @@ def _line(current: Current, zone: ZoneInfo, now: datetime, words: Words) -> dict
         "lines": _nearest(result, words),
         "state": current.state,
         "gone": current.state in GONE,
-        "stale": "open" in ways_out(current.state) and bool(stale_parts(current, now)),
+        "stale": _stale(current, now),
         "number": paper.number if paper else None,
     }
+
+
+def _stale(current: Current, now: datetime) -> str:
+    """This function will say what is to be done with a load that went stale before its departure."""
+    if not ways_out(current.state) or not stale_parts(current, now):
+        return ""
+    return "revise" if current.state == "accepted" else "assess again"
 
 
 def _nearest(result: Mapping[str, Any], words: Words) -> list[str]:

@@ -9,10 +9,14 @@ from django.views.decorators.http import require_safe
 
 from loads.actions.file_manifest import manifest_bytes
 from loads.queries.current import load_of
+from loads.queries.declaration import declared_now
 from loads.web.asking import zone_of
+from loads.web.beside import beside
 from loads.web.shown import load_page
 from records.refusal import Refused
 from records.web.asking import actor_of, operator_of, signed_in
+
+ISSUES = frozenset(str(issue) for issue in range(1, 1000))
 
 
 @require_safe
@@ -32,6 +36,7 @@ def load_answer(
     """
     current = load_of(operator_of(request), load)
     context = load_page(current, zone_of(request), timezone.now(), actor_of(request))
+    context |= beside(current, declared_now(current), actor_of(request))
     if refusal is not None:
         context["refusal"] = {
             "title": refusal.title,
@@ -45,9 +50,13 @@ def load_answer(
 @require_safe
 @signed_in
 def manifest(request: HttpRequest, load: UUID) -> HttpResponse:
-    """This function will hand out the filed manifest, and file it first if no worker has yet."""
+    """This function will hand out the filed manifest, the last issue or the one asked for, and file it first
+    if no worker has yet.
+    """
     current = load_of(operator_of(request), load)
-    body = manifest_bytes(operator_of(request), load)
+    issue = request.GET.get("issue", "")
+    asked = int(issue) if issue in ISSUES else None
+    body = manifest_bytes(operator_of(request), load, asked)
     name = f"manifest-{current.load.aircraft.registration}-{current.load.reference}.pdf"
     headers = {"Content-Disposition": f'inline; filename="{_plain(name)}"'}
     return HttpResponse(body, content_type="application/pdf", headers=headers)

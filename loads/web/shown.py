@@ -189,6 +189,8 @@ def _steps(load: Load) -> Iterable[dict[str, Any]]:
         if step.after == "open":
             assessed += 1
             words = "submitted and assessed" if assessed == 1 else "assessed again"
+        if step.before == "accepted" == step.after:
+            words = "changed at the last minute and accepted again"
         signature = signed.get(step.id)
         name = bytes(signature.name).decode() if signature else step.person.name if step.person else ""
         why = f"as {signature.capacity}: {signature.statement}" if signature else step.reason

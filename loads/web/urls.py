@@ -2,7 +2,7 @@
 
 from django.urls import path
 
-from loads.web import day, declare, documents, inspect, load, rejects, steps, trail
+from loads.web import day, declare, documents, inspect, late, load, rejects, steps, trail
 
 urlpatterns = [
     path("", day.day, name="day"),
@@ -13,6 +13,8 @@ urlpatterns = [
     path("loads/<uuid:load>/sign", steps.sign, name="sign-load"),
     path("loads/<uuid:load>/assess", steps.assess, name="assess-load"),
     path("loads/<uuid:load>/depart", steps.depart, name="depart-load"),
+    path("loads/<uuid:load>/change", late.change, name="change-load-late"),
+    path("loads/<uuid:load>/note", late.note, name="note-load"),
     path("loads/<uuid:load>/withdraw", steps.withdraw, name="withdraw-load"),
     path("rejects", rejects.rejects, name="rejects"),
     path("rejects/<uuid:load>/remarks", rejects.remark, name="remark-reject"),

@@ -74,7 +74,9 @@ def test_a_bag_at_the_door_is_computed_and_signed_in_one_step(people) -> None:
         people.pilot.pk,
     )
     assert signature.digest == done.assessment.digest
-    assert signature.statement.startswith("Last-minute change 1, for issue 2 of manifest 1:\n1. Baggage")
+    assert signature.statement.startswith(
+        "Last-minute change 1, for issue 2 of manifest 1:\n1. baggage “bag at the door” on, NOSE-HOLD,"
+    )
     assert "All changes since issue 1: 20 lb and 0 persons, of 200 lb and 1 person allowed." in (
         signature.statement
     )

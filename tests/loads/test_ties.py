@@ -323,3 +323,17 @@ def test_rows_are_only_ever_added(people, table: str, words: str) -> None:
 
     state = getattr(refused.value.__cause__, "sqlstate", "")
     assert state in {"42501", NeverChanged.sqlstate}  # no right to, or refused by the guard
+
+
+def test_a_later_number_names_the_one_before_it(people) -> None:
+    """A comparison with NULL breaks no check, so that a number stands there is asked for by name."""
+    current = prepared(people)
+
+    def write(entry):
+        Paper.objects.create(
+            load=current.load, operator_id=entry.chain, number=5, previous=None, act=entry.id
+        )
+
+    assert _broken(people, write) == "paper_numbers_have_no_gaps"
+    tie = _broken(people, lambda e: _step(current, e, previous=None))
+    assert tie == "step_follows_the_one_before"

@@ -122,8 +122,9 @@ def test_cautions_stand_beside_every_verdict(people, make) -> None:
         (prepared, "auditor", set()),
         (accepted, "pilot", {"depart", "withdraw"}),
         (accepted, "auditor", set()),
-        (departed, "pilot", set()),
-        (departed, "manager", set()),
+        (departed, "pilot", {"note"}),
+        (departed, "manager", {"note"}),
+        (departed, "auditor", set()),
         (withdrawn, "manager", set()),
     ],
 )

@@ -1,0 +1,62 @@
+"""What stands beside a load on its page: doubles, last-minute changes, what was told, notes after flight."""
+
+from datetime import UTC
+from typing import Any
+
+from fleet.queries.settings import settings_at
+from loads import acts
+from loads.actions.write_note import LONGEST_NOTE
+from loads.balance.late_change import said
+from loads.models import Signature
+from loads.queries.answer import notes_of
+from loads.queries.current import Current
+from loads.queries.doubles import doubles_of
+from loads.queries.late_change import bound_of, changes_of, lines_of, moved_by
+from loads.queries.overtaken import database_time
+from records.actor import Actor
+
+
+def beside(current: Current, declared: dict[str, Any], actor: Actor) -> dict[str, Any]:
+    """This function will return the values of these parts, and what this actor can do there now."""
+    load, state = current.load, current.state
+    may_change = acts.CHANGE_LATE.name in actor.may and load.pilot_id == actor.person
+    return {
+        "doubles": doubles_of(current),
+        "late_changes": _changes(current, declared),
+        "told": [
+            {"at": one.told_at.astimezone(UTC), "changed": one.changed, "mail": one.mail_addresses}
+            for one in load.stale_notices.order_by("told_at", "id")
+        ],
+        "notes": [
+            {"at": one.written_at.astimezone(UTC), "who": one.person.name, "text": one.text}
+            for one in (notes_of(load) if state == "departed" else ())
+        ],
+        "longest_note": LONGEST_NOTE,
+        "can_change_late": state == "accepted" and may_change and _bounded(load.operator_id),
+        "can_note": state == "departed" and acts.WRITE_NOTE.name in actor.may,
+    }
+
+
+def _bounded(operator: str) -> bool:
+    now = database_time()
+    return settings_at(operator, now, now).last_minute_bound_weight is not None
+
+
+def _changes(current: Current, declared: dict[str, Any]) -> list[dict[str, Any]]:
+    if current.assessment.number == 1:
+        return []
+    changes = changes_of(current.load)
+    names = {one.step_id: bytes(one.name).decode() for one in Signature.objects.filter(load=current.load)}
+    return [
+        {
+            "number": one.number,
+            "issue": one.issue,
+            "earlier": one.issue - 1,
+            "lines": [said(line, named=True) for line in lines_of(one)],
+            "at": one.changed_at.astimezone(UTC),
+            "who": names[one.step_id],
+            "counted": f"{bound_of(one).said(moved_by(changes[:place], declared))} "
+            f"of {bound_of(one).words()}",
+        }
+        for place, one in enumerate(changes, 1)
+    ]
