@@ -19,6 +19,7 @@ from service.problems import MEDIA_TYPE
 COMMITTED: Final = Path(__file__).with_name("openapi.json")
 # The same sum with nothing stored: repeating it needs no key.
 STORES_NOTHING: Final = frozenset({"/api/v1/assessments", "/api/v1/loads/{load}/last-minute-changes/preview"})
+UNLIMITED: Final = frozenset({"health"})
 _KEY: Final = {
     "name": IDEMPOTENCY_KEY.name,
     "in": "header",
@@ -34,6 +35,7 @@ _REFUSALS: Final = {
     "409": "The state does not allow this step, or a request with this key is being answered.",
     "413": "The body is larger than is read.",
     "422": "Fields are wrong, each named by its pointer; or the key came with another request before.",
+    "429": "Too many requests came in a minute; the header Retry-After says how many seconds to wait.",
     "default": "Any other refusal or failure.",
 }
 
@@ -73,7 +75,7 @@ def finish(result: dict[str, Any], **_: Any) -> dict[str, Any]:
         named = {parameter.get("name") for parameter in operation.get("parameters", ())}
         if stores and "Idempotency-Key" not in named:
             operation.setdefault("parameters", []).append(_KEY)
-        statuses = {"default"}
+        statuses = {"429", "default"} if operation["operationId"] not in UNLIMITED else {"default"}
         statuses |= {"401", "403"} if operation.get("security") else set()
         statuses |= {"404"} if "{" in path else set()
         statuses |= {"400", "413", "422"} if method == "post" else set()

@@ -75,6 +75,12 @@ def test_every_post_that_stores_something_needs_a_key(schema):
         assert named.count("Idempotency-Key") == (1 if needs_one else 0), (method, path)
 
 
+def test_every_operation_but_health_says_that_it_is_limited(schema):
+    limited = {path for path, _method, operation in _operations(schema) if "429" in operation["responses"]}
+
+    assert set(schema["paths"]) - limited == {"/api/v1/health"}
+
+
 def test_every_reference_leads_somewhere(schema):
     def references(value):
         if isinstance(value, dict):
