@@ -1,12 +1,14 @@
 """Who acts: a plain value, filled by the switchboard for every request and by a worker for itself."""
 
 from dataclasses import dataclass
-from typing import Literal
+from typing import Final, Literal
 from uuid import UUID
 
 from records.refusal import NotAllowed
 
 HOUSE = "house"  # the chain of what belongs to no operator
+# Looking is no act and leaves nothing in the trail, but somebody without any duty sees nothing.
+READ: Final = "read"
 
 
 @dataclass(frozen=True, slots=True)

@@ -7,10 +7,11 @@ import fleet.acts
 import fleet.duties
 import loads.acts
 import loads.duties
+import records.actor
 import records.acts
 
 # Reading is no act and leaves nothing in the trail, but a token needs leave for it all the same.
-READ: Final = "read"
+READ: Final = records.actor.READ
 READS: Final = frozenset({READ, fleet.duties.READ_PEOPLE, records.acts.READ_ACCESS_LOG})
 # The scope a person's token needs, besides the password, to sign. It is no act either.
 SIGN: Final = "sign"

@@ -15,9 +15,8 @@ from fleet.actions.confirm_password import refuse_locked_out
 from fleet.actions.noting import note_login, note_person
 from fleet.models import Person
 from loads.cautions import CAUTIONS, INVENTED
-from records.actor import Actor
+from records.actor import READ, Actor
 from records.refusal import LockedOut
-from records.web.asking import READ
 
 # What any login looks like. Anything else is nobody's, and the table that counts failures could not hold it.
 _LOGIN: Final = re.compile(r"[a-z0-9][a-z0-9._-]{1,59}")

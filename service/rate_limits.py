@@ -24,7 +24,16 @@ from service.problems import is_api, refusal, refused_page
 EXEMPT: Final = frozenset({"health", "api-health", "alive", "metrics"})
 SIGNING_IN: Final = frozenset({"sign-in"})
 # Whatever tries the password of somebody who is signed in.
-SIGNING: Final = frozenset({"api-load-signatures", "sign-load"})
+SIGNING: Final = frozenset(
+    {
+        "api-load-signatures",
+        "sign-load",
+        "api-load-late-changes",
+        "change-load-late",
+        "api-own-password",
+        "own-password",
+    }
+)
 
 
 class RateLimitMiddleware:

@@ -11,7 +11,7 @@ from fleet.models import Aircraft, Person, Token
 from fleet.models.token import LONGEST
 from fleet.queries.tokens import digest_of
 from records.act import act
-from records.actor import Actor
+from records.actor import Actor, refuse_without_leave
 from records.refusal import Fault, Invalid, NotAllowed, NotKnown, StepRefused
 
 LONGEST_LABEL: Final = 80
@@ -47,6 +47,9 @@ def issue_token(
     if by.kind != "service" and by.operator != person.operator_id:
         raise NotKnown("person-not-known", "There is no such person.")
     refuse_meddling(by, person, integration=integration)
+    refuse_without_leave(
+        by, ISSUE_TOKEN.name
+    )  # before the scopes are judged, of which none would be to be had
     if not person.is_active:
         raise StepRefused("person-inactive", "This person has left, so no token of theirs would serve.")
     _refuse_wrong(label, scopes, grantable, valid_for)

@@ -10,7 +10,8 @@ from loads.api.shapes_in import LoadDocument
 from loads.api.shapes_out import ComputedAnswer
 from loads.queries.answer import computed_answer
 from loads.queries.computation import compute
-from records.api.asking import document_of, operator_of
+from records.actor import READ, refuse_without_leave
+from records.api.asking import actor_of, document_of, operator_of
 from records.api.describing import problems
 
 
@@ -25,5 +26,7 @@ class AssessmentsView(APIView):
     )
     def post(self, request: Request) -> Response:
         """Compute a load with the versions in force at its departure, as known now; nothing is stored."""
+        # Nothing is stored, so no act asks: the answer tells what an aircraft weighs and may weigh.
+        refuse_without_leave(actor_of(request), READ)
         computation = compute(operator_of(request), document_of(request), timezone.now())
         return Response(computed_answer(computation))

@@ -23,6 +23,7 @@ from loads.queries.answer import note_answer, proposed_answer
 from loads.queries.current import load_of
 from loads.queries.late_change import propose
 from loads.queries.overtaken import database_time
+from records.actor import READ, refuse_without_leave
 from records.api.asking import actor_of, document_of, operator_of, state_seen
 from records.api.describing import (
     IDEMPOTENCY_KEY,
@@ -75,6 +76,8 @@ class LatePreviewView(APIView):
     )
     def post(self, request: Request, load: UUID) -> Response:
         """Compute an accepted load with the change in it; the answer holds the digest and words to sign."""
+        # Nothing is stored, so no act asks: the answer tells what stands in the load.
+        refuse_without_leave(actor_of(request), READ)
         document = document_of(request)
         refuse_other_fields(document, *_CHANGE)
         operator = operator_of(request)

@@ -8,12 +8,10 @@ from urllib.parse import quote
 from django.http import HttpRequest, HttpResponse, HttpResponseRedirect
 from django.shortcuts import resolve_url
 
-from records.actor import Actor
+from records.actor import READ, Actor
 from records.refusal import NotAllowed
 
 View = Callable[..., HttpResponse]
-# Somebody without any duty may sign in and sees nothing, here as over the API.
-READ = "read"
 
 
 def actor_of(request: HttpRequest) -> Actor:

@@ -1,0 +1,179 @@
+"""What the permission matrix is tried on: two operators with one of everything, one person for each role."""
+
+from dataclasses import dataclass, field
+from datetime import timedelta
+from typing import Any
+
+from django.test import Client
+from django.utils import timezone
+
+from fleet.actions.enter_empty_weight import enter_empty_weight
+from fleet.actions.enter_loading_basis import enter_loading_basis
+from fleet.actions.enter_person import enter_person
+from fleet.actions.grant_duty import grant_duty
+from fleet.actions.issue_token import issue_token
+from fleet.models import EmptyWeight, Person
+from loads.actions.depart_load import depart_load
+from loads.actions.file_manifest import manifest_of
+from loads.actions.submit_load import submit_load
+from loads.queries.current import Current
+from records.models import Act, WebhookDelivery
+from records.webhooks.deliver import deliver_due
+from records.webhooks.sending import Outcome
+from records.webhooks.subscribe import subscribe
+from service import allowed
+from tests.cast import PASSWORD, Cast, actor, cast
+from tests.loads.late import BAG, bounded, change_of, proposed
+from tests.loads.making import accepted, load_document, outside_document, prepared, submitted
+from tests.makers import basis_document, empty_weight_document, make_empty_weight, q, ready_aircraft
+from tests.records.webhooks.making import make_due
+
+ADDRESS = "https://hooks.example.org/"
+
+
+@dataclass(frozen=True, slots=True)
+class World:
+    """One operator: who holds which role (`idle` holds none), and what stands there by name."""
+
+    people: Cast
+    by_role: dict[str, Person]
+    aircraft: str
+    loads: dict[str, Current]
+    names: dict[str, str] = field(default_factory=dict)
+    secrets: dict[tuple[str, bool], str] = field(default_factory=dict)
+
+    def marks(self) -> set[str]:
+        """This function will return words by which what is this operator's is known."""
+        loads = {str(one.load.id) for one in self.loads.values()}
+        return (
+            loads | set(self.names.values()) | {one.login for one in self.by_role.values()} | {self.aircraft}
+        )
+
+
+def make_world(code: str, aircraft: str) -> World:
+    """This function will enter an operator with all its people, aircraft, loads in every state and tokens."""
+    people = cast(code)
+    by_role = _roles(people, code)
+    # A stale load has an aircraft of its own, so that the others stay fresh.
+    stale_at = f"{aircraft}S"
+    ready_aircraft(people, stale_at)
+    stale = _submitted(people, stale_at, reference="STALE")
+    make_empty_weight(people, stale.load.aircraft, _heavier())
+    ready_aircraft(people, aircraft)
+    bounded(people)
+    names = _subscriptions(people, aircraft)
+    loads = {"stale": stale, **_loads(people, aircraft)}
+    _park(names)
+    names |= _waiting_versions(loads["open"])
+    names["digest"] = manifest_of(people.operator.code, loads["accepted"].load.id)[0]
+    names["act"] = str(Act.objects.get(about=f"load:{loads['open'].load.id}").pk)
+    late = proposed(loads["accepted"], change_of(BAG))
+    names["late digest"] = late.computation.digest
+    secrets = _tokens(by_role, names)
+    Client().post("/sign-in", {"login": people.pilot.login, "password": PASSWORD})
+    return World(people, by_role, aircraft, loads, names, secrets)
+
+
+def _roles(people: Cast, code: str) -> dict[str, Person]:
+    def another(login: str, role: str) -> Person:
+        made = enter_person(
+            actor(people.manager),
+            people.operator,
+            login=f"{code}.{login}",
+            name=f"B. {login}",
+            password=PASSWORD,
+        )
+        grant_duty(actor(people.manager), made, role)
+        return made
+
+    return {
+        "pilot": people.pilot,
+        "load preparer": people.preparer,
+        "loading supervisor": another("loading", "loading supervisor"),
+        "maintenance": people.maintenance,
+        "records approver": people.approver,
+        "operations manager": people.manager,
+        "auditor": people.auditor,
+        "integration": another("program", "integration"),
+        "idle": people.idle,
+    }
+
+
+def _submitted(people: Cast, aircraft: str, **flight: str) -> Current:
+    document = load_document(people, aircraft=aircraft)
+    document["flight"] |= flight
+    return submitted(people, **document)
+
+
+def _heavier() -> dict[str, Any]:
+    return empty_weight_document(weight=q("5220", "lb"), report="W-2026-1", true_from="2026-02-01T00:00:00Z")
+
+
+def _loads(people: Cast, aircraft: str) -> dict[str, Current]:
+    """This function will make a load in every state, and one that is outside."""
+    outside = outside_document(people) | {"aircraft": aircraft}
+    departed = accepted(people, prepared(people, _submitted(people, aircraft, reference="GONE")))
+    return {
+        "open": _submitted(people, aircraft),
+        "prepared": prepared(people, _submitted(people, aircraft, reference="PREPARED")),
+        "accepted": accepted(people, prepared(people, _submitted(people, aircraft, reference="ACCEPTED"))),
+        "reject": submit_load(outside, by=actor(people.preparer)),
+        "departed": depart_load(
+            departed.load.id, at=timezone.now(), seen=str(departed.step.number), by=actor(people.pilot)
+        ),
+    }
+
+
+def _subscriptions(people: Cast, aircraft: str) -> dict[str, str]:
+    """This function will subscribe two receivers before the loads are made, so that both have deliveries."""
+    made = {
+        name: subscribe(
+            actor(people.manager),
+            address=f"{ADDRESS}{aircraft}/{name}",
+            events=["load.rejected"],
+            label=f"{name} {aircraft}",
+        )
+        for name in ("webhook", "parked")
+    }
+    return {name: str(one.standing.webhook.pk) for name, one in made.items()}
+
+
+def _park(names: dict[str, str]) -> None:
+    """This function will let ten tries at one receiver fail, and remember a delivery of the other."""
+    down = Outcome("not reached", detail="nobody there")
+    for _ in range(10):
+        make_due(names["parked"])
+        deliver_due(names["parked"], sending=lambda *_: down)
+    names["delivery"] = str(WebhookDelivery.objects.get(webhook=names["webhook"]).pk)
+
+
+def _waiting_versions(current: Current) -> dict[str, str]:
+    """This function will enter a loading basis and an empty weight that nobody approved yet."""
+    aircraft = current.load.aircraft
+    mechanic = Person.objects.get(operator=aircraft.operator_id, login__endswith=".mechanic")
+    basis = enter_loading_basis(actor(mechanic), aircraft, basis_document())
+    weight = enter_empty_weight(actor(mechanic), aircraft, _heavier())
+    assert EmptyWeight.objects.filter(aircraft=aircraft).count() == 2
+    return {"basis": str(basis.id), "weight": str(weight.id)}
+
+
+def _tokens(by_role: dict[str, Person], names: dict[str, str]) -> dict[tuple[str, bool], str]:
+    """This function will issue everybody who may read a token of their own and one for a program."""
+    secrets = {}
+    for role, person in by_role.items():
+        for integration in (False, True):
+            scopes = allowed.grantable([role], integration=integration)
+            if not scopes:
+                continue
+            issued = issue_token(
+                actor(person, may=frozenset({"issue-token"})),
+                person,
+                label=f"{role} of {person.operator_id}",
+                scopes=scopes,
+                grantable=scopes,
+                valid_for=timedelta(days=1),
+                integration=integration,
+            )
+            secrets[role, integration] = issued.secret
+            names[f"token of {role}{', a program' if integration else ''}"] = str(issued.token.pk)
+    return secrets
