@@ -8,10 +8,11 @@ import sys
 import pytest
 from django.db import OperationalError
 from django.test import Client
+from django.utils import timezone
 from prometheus_client.parser import text_string_to_metric_families
 
 from loads.actions.submit_load import submit_load
-from records.models import Seal
+from records.models import Outbox, Seal
 from records.verified import verify_everything, verify_onwards
 from service import figures
 from service.bootstrap.environment import ROOT
@@ -85,7 +86,12 @@ def test_the_last_verified_position_and_waiting_work_are_told():
     assert (after["tarebook_verified_entries",], after["tarebook_unverified_entries",]) == (sealed, 0)
     assert after["tarebook_trail_sound",] == after["tarebook_database_up",] == 1
     assert after["tarebook_verified_whole_timestamp_seconds",] > 1_700_000_000
-    assert after["tarebook_outbox_waiting",] == after["tarebook_outbox_oldest_seconds",] == 0
+    waiting = Outbox.objects.filter(done_at__isnull=True).count()  # no worker runs here
+    assert after["tarebook_outbox_waiting",] == waiting > 0
+    assert 0 < after["tarebook_outbox_oldest_seconds",] < 60
+    Outbox.objects.update(done_at=timezone.now())
+    done = _told()
+    assert done["tarebook_outbox_waiting",] == done["tarebook_outbox_oldest_seconds",] == 0
 
 
 def test_a_database_that_is_not_reached_is_told_as_such(monkeypatch):
