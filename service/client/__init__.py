@@ -28,13 +28,28 @@ from .problems import (
     Unanswered,
     Unreadable,
 )
-from .shapes import Assessment, Check, Load, LoadLine, ManifestNumber, Paper
+from .shapes import (
+    Aircraft,
+    Assessment,
+    Check,
+    Delivery,
+    EmptyWeights,
+    Load,
+    LoadLine,
+    ManifestNumber,
+    Paper,
+    Subscription,
+    Version,
+)
 from .tarebook import Tarebook
 
 __all__ = (
+    "Aircraft",
     "AnswerUnusable",
     "Assessment",
     "Check",
+    "Delivery",
+    "EmptyWeights",
     "Fault",
     "Invalid",
     "Load",
@@ -52,11 +67,13 @@ __all__ = (
     "ServerFailed",
     "StateNotSent",
     "StepRefused",
+    "Subscription",
     "Tarebook",
     "TarebookError",
     "TooLarge",
     "TooSoon",
     "Unanswered",
     "Unreadable",
+    "Version",
     "read_message",
 )

@@ -99,13 +99,15 @@ class Loads:
             yield from (line_in(one) for one in answer.rows("loads"))
             path = answer.following
 
-    def manifest(self, load: Load | LoadLine, *, issue: int | None = None) -> Paper:
+    def manifest(self, load: Load | LoadLine | str, *, issue: int | None = None) -> Paper:
         """This function will fetch the filed PDF of an accepted load, the last issue unless one is named.
 
-        Raises AnswerUnusable when the bytes are not those the server names.
+        `load` may be its id alone, as an event names it. Raises AnswerUnusable when the bytes are not those
+        the server names.
         """
         asked = f"?issue={issue}" if issue else ""
-        answer = self._exchange.get(f"/loads/{load.id}/manifest{asked}", accept=PDF)
+        number = uuid.UUID(load if isinstance(load, str) else load.id)
+        answer = self._exchange.get(f"/loads/{number}/manifest{asked}", accept=PDF)
         digest = hashlib.sha256(answer.body).hexdigest()
         if answer.etag != f'"{digest}"':
             raise AnswerUnusable(f"the manifest's bytes are not those of its ETag {answer.etag}")
