@@ -90,8 +90,10 @@ def _sound(document: object) -> Mapping[str, Any]:
     else:
         faults += [_gap(document, which) for which in ("", "lateral_") if _grossly_apart(document, which)]
     particulars = _particulars(document)
-    # A day is a day somewhere: offsets differ by up to a day and two hours.
-    if particulars.how == "weighing" and particulars.true_from.date() < particulars.date - timedelta(days=1):
+    # A day is a day somewhere: offsets differ by up to a day and two hours. The first day of the calendar has
+    # none before it, so days are counted, not subtracted.
+    early = particulars.date - particulars.true_from.date() > timedelta(days=1)
+    if particulars.how == "weighing" and early:
         faults.append(
             Fault(
                 "/true_from",

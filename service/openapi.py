@@ -35,6 +35,7 @@ _REFUSALS: Final = {
     "409": "The state does not allow this step, or a request with this key is being answered.",
     "413": "The body is larger than is read.",
     "422": "Fields are wrong, each named by its pointer; or the key came with another request before.",
+    "503": "The database could not be reached; nothing was stored.",
     "429": "Too many requests came in a minute; the header Retry-After says how many seconds to wait.",
     "default": "Any other refusal or failure.",
 }
@@ -76,7 +77,8 @@ def finish(result: dict[str, Any], **_: Any) -> dict[str, Any]:
         if stores and "Idempotency-Key" not in named:
             operation.setdefault("parameters", []).append(_KEY)
         statuses = {"429", "default"} if operation["operationId"] not in UNLIMITED else {"default"}
-        statuses |= {"401", "403"} if operation.get("security") else set()
+        # A parameter that is not known is a 422 wherever somebody is asked for.
+        statuses |= {"401", "403", "422", "503"} if operation.get("security") else set()
         statuses |= {"404"} if "{" in path else set()
         statuses |= {"400", "413", "422"} if method == "post" else set()
         statuses |= {"409"} if stores else set()

@@ -146,3 +146,16 @@ def test_the_particulars_can_be_read_before_a_basis_is_known() -> None:
 def test_what_is_no_empty_weight_at_all_is_refused(document: Any) -> None:
     with pytest.raises(Invalid):
         read_particulars(document)
+
+
+@pytest.mark.parametrize("day", ["0001-01-01", "9999-12-31"])
+def test_the_ends_of_the_calendar_are_days_like_others(day: str) -> None:
+    document = changed(empty_weight_document("twin"), "/how", "weighing")
+    document = changed(changed(document, "/date", day), "/true_from", "2026-05-03T00:00:00Z")
+
+    if day < "2026":
+        assert read_particulars(document).date.year == 1
+    else:
+        with pytest.raises(Invalid) as refused:
+            read_particulars(document)
+        assert found_in(refused.value) == {("/true_from", "true-before-weighing")}
