@@ -22,7 +22,7 @@ from fractions import Fraction
 from itertools import pairwise
 from math import lcm
 from operator import itemgetter
-from typing import Literal
+from typing import Literal, NamedTuple
 
 from shapely import Polygon
 from shapely.validation import explain_validity
@@ -34,6 +34,19 @@ Trapezoid = tuple[
 ]  # left side P, Q, R, then right side P, Q, R; inside: both >= 0
 Stretch = tuple[Fraction, Fraction]
 FEWEST_POINTS = 3
+
+
+class Slabs(NamedTuple):
+    """The polygon cut at the weights of its vertices: whole `levels`, rising, in units of 1 / `scale`.
+
+    `trapezoids[i]` lie between levels i and i + 1, side by side; sides are lines of arm, or of moment where
+    `in_moment`.
+    """
+
+    scale: int
+    levels: tuple[int, ...]
+    trapezoids: tuple[tuple[Trapezoid, ...], ...]
+    in_moment: bool
 
 
 class NotAnEnvelope(ValueError):
@@ -70,6 +83,7 @@ class Shape:
         "_spans",
         "_whole",
         "_whole_scale",
+        "slabs",
     )
 
     def __init__(self, plane: Literal["arm", "moment"], points: Sequence[Point]) -> None:
@@ -82,6 +96,7 @@ class Shape:
         self._levels = [int(weight * self._scale) for weight in weights]
         self._at_level = frozenset(self._levels)
         slabs = [tuple(_trapezoids(points, low, high)) for low, high in pairwise(weights)]
+        self.slabs = Slabs(self._scale, tuple(self._levels), tuple(slabs), self._moment_plane)
         # Nothing below, then by turns what is at a level and what is between two levels, then nothing above.
         between = [(), *slabs, ()]
         spans: list[tuple[Trapezoid, ...]] = [()]

@@ -13,9 +13,10 @@ weight times an arm.
 """
 
 from bisect import bisect_left
-from collections.abc import Sequence
+from collections.abc import Iterator, Sequence
 from fractions import Fraction
-from typing import Literal
+from itertools import pairwise
+from typing import Literal, NamedTuple
 
 Measure = Literal["arm", "moment"]
 
@@ -44,10 +45,24 @@ class OutsideTable(ValueError):
         self.last = last
 
 
+class TankPiece(NamedTuple):
+    """A part of a tank's table between two volumes, without a kink in it.
+
+    There moment(volume, density) = density * (steady + slope * volume + bend * volume**2); the slope is an
+    arm.
+    """
+
+    first: Fraction
+    last: Fraction
+    steady: Fraction
+    slope: Fraction
+    bend: Fraction
+
+
 class TankCurve:
     """A tank table prepared for exact interpolation. Unchanging once made."""
 
-    __slots__ = ("_straight_in_moment", "_values", "_volumes")
+    __slots__ = ("_straight_in_moment", "_values", "_volumes", "pieces")
 
     def __init__(
         self,
@@ -73,6 +88,7 @@ class TankCurve:
             self._value(volume, value, gives, printed, row)
             for row, (volume, (_, value)) in enumerate(zip(self._volumes, points, strict=True))
         )
+        self.pieces = tuple(self._pieces())
 
     @property
     def first(self) -> Fraction:
@@ -113,6 +129,26 @@ class TankCurve:
             return values[right]
         v1, v2, y1, y2 = volumes[right - 1], volumes[right], values[right - 1], values[right]
         return y1 if y1 == y2 else y1 + (y2 - y1) * (volume - v1) / (v2 - v1)
+
+    def _pieces(self) -> Iterator[TankPiece]:
+        """Yield the parts of the curve in rising order; points without a kink are passed over."""
+        held: TankPiece | None = None
+        for (v1, y1), (v2, y2) in pairwise(zip(self._volumes, self._values, strict=True)):
+            rise = (y2 - y1) / (v2 - v1)
+            at_nothing = y1 - rise * v1
+            steady, slope, bend = (
+                (at_nothing, rise, Fraction(0))
+                if self._straight_in_moment
+                else (Fraction(0), at_nothing, rise)
+            )
+            if held is not None and held[2:] == (steady, slope, bend):
+                held = held._replace(last=v2)
+            else:
+                if held is not None:
+                    yield held
+                held = TankPiece(v1, v2, steady, slope, bend)
+        if held is not None:
+            yield held
 
     def _value(
         self, volume: Fraction, value: Fraction, gives: Measure, printed: Fraction, row: int

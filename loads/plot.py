@@ -1,4 +1,4 @@
-r"""The plot of a load: envelopes, weight limits and the phases, as one SVG text.
+r"""The plot of a load: envelopes, weight limits, the phases and the burn between them, as one SVG text.
 
     weight ^        .--------------  take-off limit    limits: broken lines, named at the right
            |   ____/ R T     \       8750 lb           envelopes: closed lines, named at the right
@@ -16,6 +16,7 @@ from typing import Any
 
 from fleet.basis import Axis, Envelope
 from loads.plot_marks import MARKS, Mark, drawn_marks
+from loads.plot_path import burn_line, worst_mark
 from loads.plot_scale import Scale, ticks
 from loads.svg import corners, element, label, line, short
 
@@ -71,7 +72,7 @@ def plot(
             float(Fraction(phase["weight"])),
         )
         for phase in result["phases"]
-    ]
+    ] + worst_mark(result, axis, plane)
     units = result["units"]
     limits = _weight_limits(result["checks"], units["weight"])
     corner_points = [point for envelope in shown for point in envelope.points]
@@ -85,6 +86,7 @@ def plot(
         *(_curve(envelope, number, x, y) for number, envelope in enumerate(shown)),
         *(line((frame.left, y.at(v)), (frame.right, y.at(v)), stroke_dasharray="4 2") for v in limits),
         *_names(_wanted(shown, limits, x, y, frame.right), frame),
+        *burn_line(result, axis, plane, x, y),
         *drawn_marks(marks, x, y, frame.right),
     ]
     told = "; ".join(

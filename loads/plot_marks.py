@@ -10,6 +10,7 @@ from loads.svg import corners, element, label, line
 
 # Letters of the phases: R ramp, T take-off, Z zero fuel, L landing, M minimum at landing.
 MARKS = {"ramp": "R", "take-off": "T", "zero fuel": "Z", "landing": "L", "minimum at landing": "M"}
+WORST = "W"  # the worst point of the burn: a cross, which leaves the shape of a phase below it in sight
 RADIUS = 4.2
 LETTER = 11.0  # height and width kept free around a letter
 # Corners and the direction of the first one: a square, a triangle, a lozenge, a triangle on its tip.
@@ -50,6 +51,12 @@ def drawn_marks(marks: Sequence[Mark], x: Scale, y: Scale, right: float) -> list
 
 def shape(letter: str, at: tuple[float, float], size: float = RADIUS) -> str:
     """This function will return the shape that belongs to a letter, around a point."""
+    if letter == WORST:
+        reach = size * 1.5
+        ends = [
+            ((at[0] - reach, at[1] + way * reach), (at[0] + reach, at[1] - way * reach)) for way in (1, -1)
+        ]
+        return element("g", *(line(start, end, stroke_width=1.0) for start, end in ends))
     fill = "#000" if letter == "T" else "#fff"
     if letter not in SHAPES:
         return element("circle", cx=at[0], cy=at[1], r=size, fill=fill, stroke="#000", stroke_width=1.2)

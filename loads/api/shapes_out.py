@@ -42,6 +42,7 @@ class Check(serializers.Serializer[object]):
     what_next = serializers.CharField(allow_blank=True)
     margin_weight = serializers.CharField(allow_null=True, required=False)
     edge = serializers.CharField(allow_null=True, required=False)
+    at = serializers.DictField(allow_null=True, required=False)
 
 
 class ComputedAnswer(serializers.Serializer[object]):
@@ -53,6 +54,7 @@ class ComputedAnswer(serializers.Serializer[object]):
     verdict = serializers.ChoiceField(VERDICTS)
     units = serializers.DictField(child=serializers.CharField(), allow_null=True)
     phases = serializers.ListField(child=serializers.DictField())
+    path = serializers.DictField(allow_null=True, required=False)
     checks = Check(many=True)
     allowable_take_off = serializers.DictField(allow_null=True)
     governing = serializers.DictField(child=serializers.CharField())

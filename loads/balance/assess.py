@@ -1,6 +1,8 @@
-"""One load assessed: every phase, every limit, exact. Pure: the same inputs and versions give the same bytes,
-always.
+"""One load assessed: every phase, the burn between them, every limit, exact. Pure: the same inputs and
+versions give the same bytes, always.
 """
+
+from functools import cache
 
 from fleet.basis import PHASES, Basis, Phase
 from fleet.weighing import EmptyFigures
@@ -11,14 +13,16 @@ from loads.balance.checks_known import (
     no_basis,
     nothing_left_check,
     off_table_check,
-    path_check,
     persons_check,
     weight_knowledge,
 )
+from loads.balance.checks_path import path_checks
 from loads.balance.checks_places import held_by, place_checks, tank_checks
 from loads.balance.checks_weight import landing_fuel_check, weight_checks
 from loads.balance.fuel import FuelOffTable, FuelState, fuel_states
 from loads.balance.moves import cg_advice
+from loads.balance.path import burn_path
+from loads.balance.path_worst import Burn, burn_of
 from loads.balance.prepared import Prepared, prepared
 from loads.balance.report import Assessed, report, report_without_basis
 from loads.balance.result import Check, Result, State, verdict_of
@@ -42,18 +46,18 @@ def assess(declared: Declared | Outline, basis: Basis | None, empty: EmptyFigure
     aboard = lines_without_fuel(declared, empty if standing.outcome == "pass" else None)
     fuel, off_table = _fuel(declared, ready)
     states, nothing_left = _states(aboard, fuel, ready)
+    burn = burn_of(burn_path(declared.fuel, fuel, states), ready) if fuel and states else None
     checks = (
         standing,
         *weight_knowledge(declared),
         persons_check(declared),
-        *_checks(declared, states, ready),
+        *_checks(declared, states, burn, ready),
         *off_table,
         *nothing_left,
-        path_check(),
     )
     lines = all_lines(aboard, declared.fuel, fuel, states, ready)
     verdict = verdict_of(checks)
-    document = report(Assessed(declared, aboard, lines, states, fuel, checks), ready)
+    document = report(Assessed(declared, aboard, lines, states, fuel, burn, checks), ready)
     return Result(verdict, checks, tuple(states.values()), lines, document)
 
 
@@ -85,11 +89,15 @@ def _states(
     return found, ()
 
 
-def _checks(declared: Declared, states: dict[Phase, State], ready: Prepared) -> list[Check]:
+def _checks(
+    declared: Declared, states: dict[Phase, State], burn: Burn | None, ready: Prepared
+) -> list[Check]:
     held = held_by(declared)
     found: list[Check] = []
-    if states:
+    if states and burn is not None:
+        advice = cache(lambda: cg_advice(declared, states, burn, held, ready))
         found += weight_checks(declared, states, ready)
-        found += balance_checks(states, ready, lambda: cg_advice(declared, states, held, ready))
+        found += balance_checks(states, ready, advice)
+        found += path_checks(burn, states, ready, advice)
         found.append(landing_fuel_check(declared.fuel, states["landing"], ready))
     return found + place_checks(held, ready) + tank_checks(declared, ready)

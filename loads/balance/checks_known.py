@@ -12,8 +12,6 @@ from loads.balance.prepared import Prepared
 from loads.balance.result import Check
 from loads.balance.rounding import VOLUME_PLACES, WEIGHT_PLACES, printed
 
-PATH_SENTENCE = "the path between the phases was not checked"
-
 
 def no_basis() -> Check:
     """Return the check of an aircraft without a loading basis in force."""
@@ -130,8 +128,3 @@ def off_table_check(off: FuelOffTable, ready: Prepared) -> Check:
         source=str(tank.source),
         what_next=fix,
     )
-
-
-def path_check() -> Check:
-    """Return the line that says openly what is not looked at: the flight between its phases."""
-    return Check("path.between-phases", "the path between the phases", "advisory", margin_text=PATH_SENTENCE)

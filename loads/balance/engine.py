@@ -2,4 +2,4 @@
 change.
 """
 
-ENGINE_VERSION = "1"
+ENGINE_VERSION = "2"

@@ -8,6 +8,7 @@ the volume unit of the basis, weights in its weight unit.
 from collections.abc import Mapping
 from dataclasses import dataclass
 from fractions import Fraction
+from typing import NamedTuple
 
 from fleet.basis import BurnStage, Phase
 from fleet.tanks import OutsideTable
@@ -19,10 +20,17 @@ Contents = Mapping[str, Fraction]  # usable volume by tank id
 NOTHING = Fraction(0)
 
 
+class Draw(NamedTuple):
+    """One step of a burn: the tanks that feed together, and the volume each of them gives."""
+
+    feeding: tuple[str, ...]
+    each: Fraction
+
+
 @dataclass(frozen=True, slots=True)
 class FuelState:
     """Fuel in the tanks at one phase. `usable` and `moments` are by tank; weight and moments count trapped
-    fuel, too.
+    fuel, too. `draws` lead here from the phase before it in flight; () at the ramp and at zero fuel.
     """
 
     phase: Phase
@@ -32,6 +40,7 @@ class FuelState:
     weight: Fraction
     moment: Fraction
     lateral_moment: Fraction
+    draws: tuple[Draw, ...] = ()
 
 
 class FuelOffTable(Exception):
@@ -50,7 +59,16 @@ def burn(contents: Contents, order: tuple[BurnStage, ...], volume: Fraction) -> 
     """Return what each tank holds after a volume was taken out in the given order, and the volume that was
     not there.
     """
+    left, short, _ = drawn(contents, order, volume)
+    return left, short
+
+
+def drawn(
+    contents: Contents, order: tuple[BurnStage, ...], volume: Fraction
+) -> tuple[Contents, Fraction, tuple[Draw, ...]]:
+    """Return what `burn` returns, and the steps of it in their order; none of them draws nothing."""
     left = dict(contents)
+    draws = []
     for stage in order:
         if volume <= 0:
             break
@@ -59,15 +77,17 @@ def burn(contents: Contents, order: tuple[BurnStage, ...], volume: Fraction) -> 
             share = volume / len(feeding) if len(feeding) > 1 else volume
             least = min(left[tank] for tank in feeding)
             if share < least:
+                draws.append(Draw(tuple(feeding), share))
                 for tank in feeding:
                     left[tank] -= share
                 volume = NOTHING
             else:
+                draws.append(Draw(tuple(feeding), least))
                 for tank in feeding:
                     left[tank] -= least
                 volume -= least * len(feeding)
                 feeding = [tank for tank in feeding if left[tank]]
-    return left, volume if volume > 0 else NOTHING
+    return left, volume if volume > 0 else NOTHING, tuple(draws)
 
 
 def fuel_states(plan: FuelPlan, ready: Prepared) -> dict[Phase, FuelState]:
@@ -78,21 +98,21 @@ def fuel_states(plan: FuelPlan, ready: Prepared) -> dict[Phase, FuelState]:
     """
     basis, density = ready.basis, plan.density
     ramp: Contents = {fuel.tank.id: fuel.usable for fuel in plan.tanks}
-    take_off, _ = burn(ramp, basis.taxi_order, plan.taxi / density)
-    landing, _ = burn(take_off, basis.burn_order, plan.trip / density)
+    take_off, _, taxiing = drawn(ramp, basis.taxi_order, plan.taxi / density)
+    landing, _, flying = drawn(take_off, basis.burn_order, plan.trip / density)
     spare = added(landing.values()) - plan.minimum_at_landing / density
-    least, _ = burn(landing, basis.burn_order, spare)
+    least, _, holding = drawn(landing, basis.burn_order, spare)
     fed = {tank for stage in basis.burn_order for tank in stage.tanks}
     empty = {tank: NOTHING if tank in fed else held for tank, held in take_off.items()}
-    contents: tuple[tuple[Phase, Contents], ...] = (
-        ("ramp", ramp),
-        ("take-off", take_off),
-        ("zero fuel", empty),
-        ("landing", landing),
-        ("minimum at landing", least),
+    contents: tuple[tuple[Phase, Contents, tuple[Draw, ...]], ...] = (
+        ("ramp", ramp, ()),
+        ("take-off", take_off, taxiing),
+        ("zero fuel", empty, ()),
+        ("landing", landing, flying),
+        ("minimum at landing", least, holding),
     )
     known: dict[tuple[str, int, int], Fraction] = {}
-    return {phase: _state(phase, plan, held, ready, known) for phase, held in contents}
+    return {phase: _state(phase, plan, held, ready, known, draws=draws) for phase, held, draws in contents}
 
 
 def _state(
@@ -101,6 +121,8 @@ def _state(
     usable: Contents,
     ready: Prepared,
     known: dict[tuple[str, int, int], Fraction],
+    *,
+    draws: tuple[Draw, ...],
 ) -> FuelState:
     density = plan.density
     moments: dict[str, Fraction] = {}
@@ -126,6 +148,7 @@ def _state(
         usable_weight + trapped * density if trapped else usable_weight,
         added(moments.values()),
         times(total(across), density) if across else NOTHING,
+        draws,
     )
 
 

@@ -13,6 +13,7 @@ from loads.balance.result import Check, State
 from loads.balance.rounding import VOLUME_PLACES, WEIGHT_PLACES, against_maximum, printed, room
 
 NOT_KNOWN = "not known"
+LONGITUDINAL_PATH = "path.longitudinal"
 
 
 def weight_line(allowable: Allowable, take_off: State, ready: Prepared) -> str:
@@ -31,13 +32,21 @@ def weight_line(allowable: Allowable, take_off: State, ready: Prepared) -> str:
 
 
 def cg_line(checks: tuple[Check, ...]) -> str:
-    """Return the least distance to an edge along the arm at the same weight, at which phase, and the room in
-    weight.
+    """Return the least distance to an edge along the arm at the same weight, and where on the flight it is.
+
+    At a phase the room in weight at the same arm is told, too.
     """
-    judged = [check for check in checks if check.code.startswith("cg.") and check.outcome in ("pass", "fail")]
+    judged = [
+        check
+        for check in checks
+        if (check.code.startswith("cg.") or (check.code == LONGITUDINAL_PATH and check.actual))
+        and check.outcome in ("pass", "fail")
+    ]
     if not judged:
         return NOT_KNOWN
     nearest = min(judged, key=lambda check: (check.room is not None, check.room or Fraction(0)))
+    if nearest.code == LONGITUDINAL_PATH:
+        return f"along the burn: {nearest.margin_text}"
     return f"{nearest.title.removeprefix('CG ')}: {nearest.margin_text}"
 
 

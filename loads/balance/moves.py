@@ -3,8 +3,8 @@ off.
 
 A move of weight w from arm a to arm b changes the moment at every phase by w * (b - a) and leaves the weights
 alone. So the moves that help are those whose change of moment lies in the interval every phase asks for; the
-one that shifts the least weight is named, after it was tried at every phase and against every limit of seat,
-place and zone it touches.
+one that shifts the least weight is named, after it was tried at every phase, along the whole burn and against
+every limit of seat, place and zone it touches.
 """
 
 from collections.abc import Iterator, Mapping
@@ -15,6 +15,7 @@ from typing import NamedTuple
 from fleet.basis import Phase, Place, Seat
 from loads.balance.aboard import Declared
 from loads.balance.checks_places import Held
+from loads.balance.path_worst import Burn, stays_inside
 from loads.balance.prepared import Prepared
 from loads.balance.result import State
 from loads.balance.rounding import WEIGHT_PLACES, printed
@@ -32,9 +33,13 @@ class Move(NamedTuple):
     whole: bool
 
 
-def cg_advice(declared: Declared, states: Mapping[Phase, State], held: Held, ready: Prepared) -> str:
-    """Return what brings the CG within at every phase, in words and figures; verified before it is named."""
-    wanted = _moment_wanted(states, ready)
+def cg_advice(
+    declared: Declared, states: Mapping[Phase, State], burn: Burn, held: Held, ready: Prepared
+) -> str:
+    """Return what brings the CG within all along the flight, in words and figures; verified before it is
+    named.
+    """
+    wanted = _moment_wanted(states, burn, ready)
     if wanted is None:
         return "Bring the weight within the envelope first, then assess again."
     low, high = wanted
@@ -48,7 +53,8 @@ def cg_advice(declared: Declared, states: Mapping[Phase, State], held: Held, rea
     working = (
         move
         for move in _possible(declared, ready)
-        if (weight := _enough(move, low, high)) is not None and _holds(move, weight, states, held, ready)
+        if (weight := _enough(move, low, high)) is not None
+        and _holds(move, weight, states, burn, held=held, ready=ready)
     )
     best = min(working, key=lambda move: _enough(move, low, high) or move.weight, default=None)
     if best is None:
@@ -59,11 +65,19 @@ def cg_advice(declared: Declared, states: Mapping[Phase, State], held: Held, rea
     return f"{verb} from {best.start.name} to {best.end.name}: a moment of at least {figure}, {side}."
 
 
-def _moment_wanted(states: Mapping[Phase, State], ready: Prepared) -> tuple[Fraction, Fraction] | None:
-    """Return the least and the greatest change of moment that put every judged phase inside, weights
-    unchanged.
+def _moment_wanted(
+    states: Mapping[Phase, State], burn: Burn, ready: Prepared
+) -> tuple[Fraction, Fraction] | None:
+    """Return the least and the greatest change of moment that put every judged phase and the worst point of
+    the path inside, weights unchanged. The rest of the path is only tried with a move.
     """
     lows, highs = [], []
+    worst = burn.worst.get("longitudinal")
+    if worst is not None:
+        if worst.low is None or worst.high is None:
+            return None
+        lows.append(worst.low * worst.knot.weight - worst.knot.moment)
+        highs.append(worst.high * worst.knot.weight - worst.knot.moment)
     for state in states.values():
         for _, shape in ready.bounds("longitudinal", state.phase):
             along = shape.arm_section(state.weight, state.moment)
@@ -99,8 +113,10 @@ def _possible(declared: Declared, ready: Prepared) -> Iterator[Move]:
                     yield Move("the passenger", person.weight, person.seat, seat, True)
 
 
-def _holds(move: Move, weight: Fraction, states: Mapping[Phase, State], held: Held, ready: Prepared) -> bool:
-    """Return whether a move was tried and found good: both axes at every phase, seat, place and zones."""
+def _holds(
+    move: Move, weight: Fraction, states: Mapping[Phase, State], burn: Burn, *, held: Held, ready: Prepared
+) -> bool:
+    """Return whether a move was tried and found good: both axes all along, seat, place and zones."""
     along = weight * (move.end.arm - move.start.arm)
     across = weight * (move.end.lateral_arm - move.start.lateral_arm)
     for state in states.values():
@@ -114,12 +130,13 @@ def _holds(move: Move, weight: Fraction, states: Mapping[Phase, State], held: He
     after = (held.get(move.end.id) or Fraction(0)) + weight
     if maximum is None or (maximum.value is not None and after > maximum.value):
         return False
-    return all(
+    zones = all(
         zone.maximum is not None
         and (zone.maximum.value is None or _in_zone(zone.members, held) + weight <= zone.maximum.value)
         for zone in ready.basis.zones
         if move.end.id in zone.members and move.start.id not in zone.members
     )
+    return zones and stays_inside(burn.path, ready, along, across)
 
 
 def _in_zone(members: tuple[str, ...], held: Held) -> Fraction:

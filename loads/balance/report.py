@@ -1,8 +1,8 @@
 """The printed parts of a result, as the API answers them, the pages show them and the paper prints them.
 
-Beyond the checks and the verdict: `units`, `phases`, `allowable_take_off`, `governing`, `fuel`, `sumsheet`,
-`operating_weight`, `persons`, `advisories`, `not_assessed`. Figures are decimal texts; what is not known is
-null, and the phases of a load that could not be computed are an empty list.
+Beyond the checks and the verdict: `units`, `phases`, `path`, `allowable_take_off`, `governing`, `fuel`,
+`sumsheet`, `operating_weight`, `persons`, `advisories`, `not_assessed`. Figures are decimal texts; what is
+not known is null, and the phases of a load that could not be computed are an empty list.
 """
 
 from collections.abc import Mapping
@@ -12,9 +12,10 @@ from typing import NamedTuple
 from fleet.basis import Phase
 from loads.balance.aboard import Declared
 from loads.balance.allowable import Allowable, allowable_take_off
-from loads.balance.checks_known import PATH_SENTENCE
+from loads.balance.checks_path import path_document
 from loads.balance.fuel import FuelState
 from loads.balance.governing import NOT_KNOWN, cg_line, return_advisory, weight_line
+from loads.balance.path_worst import Burn
 from loads.balance.prepared import Prepared
 from loads.balance.result import Check, Json, Line, State
 from loads.balance.rounding import CHORD_PLACES, VOLUME_PLACES, WEIGHT_PLACES, printed
@@ -24,23 +25,25 @@ DENSITY_PLACES = 4
 
 
 class Assessed(NamedTuple):
-    """What an assessment found, exact; `states` is empty and `fuel` None where it could not be known."""
+    """What an assessment found, exact; `states` is empty, `fuel` and `burn` None where not known."""
 
     declared: Declared
     aboard: Aboard
     lines: tuple[Line, ...]
     states: Mapping[Phase, State]
     fuel: Mapping[Phase, FuelState] | None
+    burn: Burn | None
     checks: tuple[Check, ...]
 
 
 def report(assessed: Assessed, ready: Prepared) -> Json:
     """Return the printed parts of an assessment with a basis."""
-    declared, aboard, lines, states, fuel, checks = assessed
+    declared, aboard, lines, states, fuel, burn, checks = assessed
     allowable = allowable_take_off(declared, states) if states else None
     return {
         "units": {"weight": ready.weight, "length": ready.length, "moment": ready.moment},
         "phases": [_phase(state, ready) for state in states.values()],
+        "path": None if burn is None else path_document(burn, checks, ready),
         "allowable_take_off": None if allowable is None else allowable.as_document(),
         "governing": _governing(allowable, states, checks, ready),
         "fuel": None if fuel is None else _fuel(declared, fuel, ready),
@@ -57,6 +60,7 @@ def report_without_basis() -> Json:
     return {
         "units": {"weight": None, "length": None, "moment": None},
         "phases": [],
+        "path": None,
         "allowable_take_off": None,
         "governing": {"weight": NOT_KNOWN, "cg": NOT_KNOWN},
         "fuel": None,
@@ -166,9 +170,7 @@ def _advisories(declared: Declared, states: Mapping[Phase, State], ready: Prepar
 
 
 def _not_assessed(checks: tuple[Check, ...], computed: bool) -> list[str]:
-    found = [PATH_SENTENCE]
-    if not computed:
-        found.append("weights and centres of gravity: a figure they need is not known")
+    found = [] if computed else ["weights and centres of gravity: a figure they need is not known"]
     told = [check for check in checks if check.outcome == "advisory" and check.phase]
     return found + [f"{check.title}: {check.margin_text}" for check in told]
 

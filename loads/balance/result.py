@@ -21,8 +21,9 @@ class Check(NamedTuple):
     """One limit tested at one phase. Texts are printed figures; `room` is the exact margin (below 0:
     outside).
 
-    `limit` is the upper and `low` the lower bound. A longitudinal check also carries `margin_weight`, the
-    room in weight at the same arm, and `edge`, the nearest bound along the arm.
+    `limit` is the upper and `low` the lower bound. A check of a centre of gravity also carries
+    `margin_weight`, the room in weight at the same arm, and `edge`, the nearest bound along the arm. One
+    along the burn carries `edge`, and `at`: where its worst point is, in printed figures.
     """
 
     code: str
@@ -40,6 +41,7 @@ class Check(NamedTuple):
     room: Fraction | None = None
     margin_weight: str | None = None
     edge: str | None = None
+    at: Json | None = None
 
     def as_document(self) -> Json:
         """Return the check as it stands in the result document."""
@@ -60,6 +62,9 @@ class Check(NamedTuple):
         if self.code.startswith(("cg.", "lateral.")):
             found["margin_weight"] = self.margin_weight
             found["edge"] = self.edge
+        elif self.code.startswith("path."):
+            found["edge"] = self.edge
+            found["at"] = self.at
         return found
 
 

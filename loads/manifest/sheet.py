@@ -11,7 +11,7 @@ from loads.manifest.words import SINGLE_ENGINE_US, WORDS, Words
 from loads.plot import Frame, plot
 
 # Height of one plot, by paper and by whether there are two of them, so that the first page holds them.
-HEIGHTS = {("Letter", False): 315.0, ("A4", False): 355.0, ("Letter", True): 200.0, ("A4", True): 232.0}
+HEIGHTS = {("Letter", False): 300.0, ("A4", False): 340.0, ("Letter", True): 183.0, ("A4", True): 215.0}
 # Each line of a last-minute change takes this much of the plots, which stay readable at what is left.
 LINE_OF_CHANGES, MOST_SPARED = 12.0, 84.0
 STATEMENT_NAME = "statement.json"

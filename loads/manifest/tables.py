@@ -7,7 +7,7 @@ from loads.manifest.facts import Computed, Facts, SignatureFacts, typed_sources
 from loads.manifest.figures import both_clocks, column, sided, utc
 from loads.manifest.ruler import ruler
 from loads.manifest.words import Words
-from loads.plot_marks import MARKS, shape
+from loads.plot_marks import MARKS, WORST, shape
 from loads.svg import element
 
 Row = dict[str, Any]
@@ -35,8 +35,11 @@ def computation(facts: Computed, words: Words) -> list[Row]:
 
 
 def phases(facts: Computed) -> list[Row]:
-    """This function will return the phases with the letter and the shape they have on the plot."""
-    rows = facts.result["phases"]
+    """This function will return the phases, and where the burn is worst, with their marks on the plot."""
+    rows = [
+        *({**row, "letter": MARKS[row["phase"]]} for row in facts.result["phases"]),
+        *(_worst_row(each) for each in (facts.result.get("path") or {}).get("worst", ())),
+    ]
     columns = {
         key: column([row[key] for row in rows])
         for key in ("weight", "moment", "arm", "percent_chord", "fuel")
@@ -44,13 +47,19 @@ def phases(facts: Computed) -> list[Row]:
     columns["lateral_arm"] = sided([row["lateral_arm"] for row in rows])
     return [
         {
-            "letter": MARKS[row["phase"]],
-            "shape": element("svg", shape(MARKS[row["phase"]], (6, 6)), viewBox="0 0 12 12"),
+            "letter": row["letter"],
+            "shape": element("svg", shape(row["letter"], (6, 6)), viewBox="0 0 12 12"),
             "phase": row["phase"],
             **{key: values[place] for key, values in columns.items()},
         }
         for place, row in enumerate(rows)
     ]
+
+
+def _worst_row(worst: Mapping[str, Any]) -> Row:
+    """The worst point of the burn as a row beside the phases."""
+    side = "lateral CG" if worst["axis"] == "lateral" else "CG"
+    return {**worst, "letter": WORST, "phase": f"{side} worst, {worst['point']}"}
 
 
 def limits(facts: Computed, words: Words) -> dict[str, Any]:
@@ -69,7 +78,8 @@ def _limit(check: Mapping[str, Any], words: Words) -> Row:
     typed = family in {"seat", "place", "zone", "tank", "tank-table", "performance"}
     kept = check["result"] == "pass"
     low, actual, high = check["low"], check["actual"], check["limit"]
-    low, actual, high = sided([low, actual, high]) if family == "lateral" else column([low, actual, high])
+    lateral = family == "lateral" or check["code"] == "path.lateral"
+    low, actual, high = sided([low, actual, high]) if lateral else column([low, actual, high])
     return {
         "title": check["title"] if typed else words.said(check["title"]),
         "actual": actual,

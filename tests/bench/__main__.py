@@ -8,9 +8,10 @@ import subprocess
 import sys
 from pathlib import Path
 
-# In the order in which they are read: decision, answer, paper, act, endpoint, start.
+# In the order in which they are read: decision, path, answer, paper, act, endpoint, start.
 MEASUREMENTS = (
     "decision_against_shapely",
+    "path_against_shapely",
     "full_answer_cpu",
     "paper_against_weasyprint",
     "act_against_bare_insert",

@@ -7,6 +7,7 @@ from urllib.parse import quote
 import pytest
 
 from fleet.models import Aircraft
+from loads.balance.engine import ENGINE_VERSION
 from records.canonical import digest
 from tests.cast import Cast, strangers
 from tests.journeys.over_the_api import Answer, Desk
@@ -54,7 +55,7 @@ def test_the_figures_of_a_flight_are_found_although_they_were_corrected_since(
     assert version["document"]["report"] == "W-2025-31"
     assert version["entered_by"] == f"person:{people.maintenance.pk}"
     assert version["approval"]["approved_by"] == f"person:{people.approver.pk}"
-    assert used["engine"] == "1"
+    assert used["engine"] == ENGINE_VERSION
 
 
 def test_every_digest_in_the_answer_is_that_of_what_it_names(people: Cast) -> None:

@@ -10,6 +10,7 @@ import pikepdf
 import pytest
 from pypdf import PdfReader
 
+from loads.balance.engine import ENGINE_VERSION
 from loads.cautions import CAUTIONS, INVENTED
 from loads.manifest.facts import Facts
 from loads.manifest.printing import html_of, pdf_of
@@ -68,7 +69,7 @@ def test_the_first_page_answers_the_pilot_in_the_order_of_asking() -> None:
         "not in the loading basis",
         "1 crew, 3 passengers, 1 lap infant",
         "left auxiliary tank",
-        "Not assessed: the path between the phases was not checked",
+        "Not assessed: nothing",
         "Permits and restrictions None recorded.",
     ]
 
@@ -127,7 +128,7 @@ def test_the_record_is_named_to_the_last_digit() -> None:
         "entry 42 of the operator's chain, pinned once per load",
         "revision 3 (Ostrel Kestava 62 flight manual, OK62-FM revision D)",
         "3962 lb by weighing of 2026-03-18, report W-2026-07",
-        "engine version 1",
+        f"engine version {ENGINE_VERSION}",
         facts.operator.procedure,
         facts.operator.weight_method,
         "structural take-off 6200 lb",

@@ -3,7 +3,8 @@ at random.
 
 Its aircraft are read from where it is installed and none of its data is kept here; they are no real
 aircraft's figures. Some of its models overwrite what is set, so what the library holds is read back before
-both are compared. Compared are weight and the CG along and across; the CG's height is not computed here.
+both are compared. Compared are weight and the CG along and across; the CG's height is not computed here. How
+much each tank still holds while they drain is found by `drawn_down`, which shares no code with the engine.
 """
 
 import os
@@ -16,6 +17,10 @@ from xml.etree import ElementTree as ET
 
 import pytest
 
+from loads.balance.fuel import fuel_states
+from loads.balance.path import burn_path
+from loads.balance.prepared import prepared
+from tests.pure.loads.naive_path import drawn_down
 from tests.reference.plain_aircraft import FuelTank, PlainAircraft
 
 os.environ["JSBSIM_DEBUG"] = "0"  # read when the library is imported
@@ -23,6 +28,7 @@ jsbsim: Any = pytest.importorskip("jsbsim", reason="the flight-dynamics library 
 
 MODELS = ("c172x", "c310", "DHC6", "787-8", "ah1s", "Concorde")
 RANDOM_LOADS = 20
+DRAIN_STEPS = 60
 RELATIVE = 1e-6  # the library computes in doubles, through slugs
 NOTHING = 1e-9  # inches, where both lie on the centreline
 INCHES = {"IN": Fraction(1), "FT": Fraction(12), "M": 1 / Fraction("0.0254")}
@@ -132,3 +138,42 @@ def test_loaded_at_random_both_give_the_same_weight_and_cg(name):
         weights.add(flown.library["inertia/weight-lbs"])
 
     assert len(weights) == RANDOM_LOADS
+
+
+@pytest.mark.parametrize("name", ["c310", "Concorde"])
+def test_draining_the_tanks_step_by_step_both_follow_the_same_path(name):
+    """Filled unevenly, so that the tanks run dry one after another. The library is given what each holds."""
+    flown = model(name)
+    for number, (_, _, capacity) in enumerate(flown.tanks):
+        flown.library[f"propulsion/tank[{number}]/contents-lbs"] = float(capacity) * (number + 1) / 20
+    assert flown.library.run_ic()
+    ours = flown.same_in_our_engine()
+    on_board = sum((Fraction(tank.held) for tank in ours.tanks), Fraction(0)) * DENSITY
+    ours.trip = on_board * 9 / 10
+    basis = ours.basis()
+    declared, result = ours.declared(basis), ours.result()
+    states = {state.phase: state for state in result.states}
+    path = burn_path(declared.fuel, fuel_states(declared.fuel, prepared(basis)), states)
+    assert len(path.stretches) > 1
+
+    start = states["take-off"].weight
+    for step in range(DRAIN_STEPS + 1):
+        burned = ours.trip * step / DRAIN_STEPS
+        left = drawn_down(
+            {held.tank.id: held.usable for held in declared.fuel.tanks}, basis.burn_order, burned / DENSITY
+        )
+        for number, volume in enumerate(left.values()):
+            flown.library[f"propulsion/tank[{number}]/contents-lbs"] = float(volume * DENSITY)
+        assert flown.library.run_ic()
+        weight = start - burned
+        on_it = next(each for each in path.stretches if each.end.weight <= weight <= each.start.weight)
+        at = on_it.at(weight)
+        for figure, read in (
+            (weight, "inertia/weight-lbs"),
+            (at.moment / weight, "inertia/cg-x-in"),
+            (at.lateral_moment / weight, "inertia/cg-y-in"),
+        ):
+            assert float(figure) == pytest.approx(flown.library[read], rel=RELATIVE, abs=NOTHING), (
+                step,
+                read,
+            )

@@ -10,6 +10,7 @@ from django.utils import timezone
 
 from loads.actions.submit_load import submit_load
 from loads.api.answering import written
+from loads.balance.engine import ENGINE_VERSION
 from loads.models import Assessment, Declaration, Load, Signature, Step
 from loads.queries.answer import answer_of
 from records.api.render import rendered
@@ -83,7 +84,7 @@ def test_the_answer_of_a_submission_holds_the_whole_sum_and_no_name(people) -> N
     body = answer(send(people.preparer, "/loads", load_document(people)))
 
     assert {"phases", "checks", "sumsheet", "basis", "digest", "cautions", "governing"} <= set(body)
-    assert body["basis"]["engine"] == "1"
+    assert body["basis"]["engine"] == ENGINE_VERSION
     assert not any(name in json.dumps(body) for name in ("Osei", "Dravo", "Amani"))
 
 

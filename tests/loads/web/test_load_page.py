@@ -53,7 +53,7 @@ def test_a_load_within_shows_what_a_pilot_asks_first(people) -> None:
         "Landing",
         "left tank",
         "Persons on board 3",
-        "Not assessed: the path between the phases was not checked",
+        "entre of gravity along the burn",
     ):
         assert words in page.words, words
 

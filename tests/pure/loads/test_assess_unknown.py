@@ -121,11 +121,19 @@ def test_lateral_limits_nobody_entered_are_unresolved():
     assert result.verdict == "unresolved"
 
 
-def test_the_open_path_between_the_phases_is_always_said():
+def test_where_everything_is_known_nothing_is_left_unassessed_and_the_burn_is_a_check():
     document = result_of().as_document()
 
-    assert document["not_assessed"][0] == "the path between the phases was not checked"
-    assert document["checks"][-1]["code"] == "path.between-phases"
+    assert document["not_assessed"] == []
+    assert "path.longitudinal" in [check["code"] for check in document["checks"]]
+
+
+def test_without_a_computed_load_there_is_no_path():
+    document = result_of(empty=None).as_document()
+
+    assert document["path"] is None
+    assert document["not_assessed"] == ["weights and centres of gravity: a figure they need is not known"]
+    assert not [check for check in document["checks"] if check["code"].startswith("path.")]
 
 
 def test_with_a_basis_an_outline_alone_is_not_assessed():

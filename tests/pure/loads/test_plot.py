@@ -34,6 +34,31 @@ def test_every_phase_is_marked_by_its_letter_and_a_shape_of_its_own(make) -> Non
     assert len(shapes) == 5
 
 
+def test_the_burn_is_a_thin_line_through_its_phases_and_its_worst_point_is_marked() -> None:
+    facts = twin()
+    drawing = _drawn(facts)
+    worst = facts.result["path"]["worst"][0]
+
+    burn = [each for each in _tree(drawing).iter(f"{SVG}polyline") if each.get("stroke-width") == "0.4"]
+    assert len(burn) == 1
+    heights = [float(point.split(",")[1]) for point in (burn[0].get("points") or "").split()]
+    assert heights == sorted(heights)
+    assert "W" in _texts(drawing)
+    assert f"worst point, {worst['point']}: " in (_tree(drawing).get("aria-label") or "")
+    cross = [each for each in _tree(drawing).iter(f"{SVG}line") if each.get("stroke-width") == "1"]
+    assert len(cross) == 2
+
+
+def test_a_result_that_holds_no_path_is_drawn_as_it_was() -> None:
+    facts = twin()
+    older = {name: part for name, part in facts.result.items() if name != "path"}
+
+    drawing = plot(older, facts.basis.envelopes)
+
+    assert "W" not in _texts(drawing)
+    assert set("RTZLM") <= set(_texts(drawing))
+
+
 def test_axes_carry_their_units_and_the_word_of_the_rule_set() -> None:
     assert {"centre of gravity, arm, in", "weight, lb"} <= set(_texts(_drawn(twin())))
     assert {"moment, kg mm", "mass, kg"} <= set(_texts(_drawn(turboprop(), weight_word="mass")))
@@ -83,7 +108,7 @@ def test_hostile_names_stay_text() -> None:
     drawing = plot({**facts.result, "checks": checks}, (envelope,))
 
     tags = {each.tag.removeprefix(SVG) for each in _tree(drawing).iter()}
-    assert tags <= {"svg", "line", "text", "rect", "polygon", "polyline", "circle"}
+    assert tags <= {"svg", "g", "line", "text", "rect", "polygon", "polyline", "circle"}
 
 
 def test_marks_on_one_spot_get_letters_that_do_not_cover_each_other() -> None:

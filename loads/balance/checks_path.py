@@ -1,0 +1,144 @@
+"""Checks of the centre of gravity along the burn: the one worst point of the whole path, for each axis."""
+
+from collections.abc import Callable, Iterable, Mapping
+from fractions import Fraction
+
+from fleet.basis import Axis, Phase
+from loads.balance.checks_balance import AT, SIDES
+from loads.balance.path import Gap, Knot, Leg, Path
+from loads.balance.path_worst import AXES, Burn, Worst
+from loads.balance.prepared import Prepared
+from loads.balance.result import Check, Json, State
+from loads.balance.rounding import CHORD_PLACES, VOLUME_PLACES, WEIGHT_PLACES, between, printed, room
+
+TITLES: dict[Axis, str] = {
+    "longitudinal": "centre of gravity along the burn",
+    "lateral": "lateral centre of gravity along the burn",
+}
+WHERE: dict[Leg, str] = {
+    "taxi": "while taxiing",
+    "flight": "between take-off and landing",
+    "reserve": "between landing and the least fuel at landing",
+}
+
+Fix = Callable[[], str]
+
+
+def path_checks(burn: Burn, states: Mapping[Phase, State], ready: Prepared, fix: Fix) -> list[Check]:
+    """Return the check of each axis that has an envelope; `fix` is asked only when one of them fails."""
+    return [
+        _check(burn, axis, states, ready, fix)
+        for axis in AXES
+        if axis == "longitudinal" or axis in burn.worst or ready.bounds(axis, "take-off")
+    ]
+
+
+def path_document(burn: Burn, checks: Iterable[Check], ready: Prepared) -> Json:
+    """Return the path for the plot and the paper: its kinks between phases, and its worst points as the
+    checks name them. In a stretch that is bent its middle is told, too.
+    """
+    kinks = []
+    for stretch in burn.path.stretches:
+        if stretch.bend:
+            kinks.append(stretch.at((stretch.start.weight + stretch.end.weight) / 2))
+        if stretch.end.phase is None:
+            kinks.append(stretch.end)
+    at = {check.code: check.at for check in checks if check.at is not None}
+    worst: list[Json] = [
+        {"axis": axis, **at[f"path.{axis}"], "feeding": list(found.stretch.feeding)}
+        for axis, found in burn.worst.items()
+        if f"path.{axis}" in at
+    ]
+    return {"points": [_figures(knot, _arms(knot), ready) for knot in kinks], "worst": worst}
+
+
+def _check(burn: Burn, axis: Axis, states: Mapping[Phase, State], ready: Prepared, fix: Fix) -> Check:
+    code, title = f"path.{axis}", TITLES[axis]
+    worst = burn.worst.get(axis)
+    broken = worst is not None and (worst.room is None or worst.room.numerator < 0)
+    if not broken:
+        unknown = _unknown(burn.path, axis, ready)
+        if unknown is not None:
+            text, what_next = unknown
+            return Check(code, title, "unresolved", margin_text=text, what_next=what_next)
+    if worst is None:
+        return Check(code, title, "pass", margin_text="nothing is burned in flight")
+    places, at = ready.length_places, _at(worst, states, ready)
+    if worst.low is None or worst.high is None or worst.room is None:
+        actual, low, high, margin, edge = printed(worst.arm, places), None, None, None, None
+        words = "no part of the envelope lies at this weight"
+    else:
+        actual, low, high, digits = between(worst.arm, worst.low, worst.high, places)
+        margin, edge = printed(worst.room, digits, "down"), SIDES[axis][worst.aft]
+        figure = f"{room(worst.room, digits)} {ready.length}"
+        side = "beyond" if broken else "from"
+        words = f"on the {edge} limit" if not worst.room else f"{figure} {side} the {edge} limit"
+    return Check(
+        code,
+        title,
+        "fail" if broken else "pass",
+        worst.knot.phase,
+        actual,
+        high,
+        low,
+        ready.length,
+        margin,
+        f"{words}, {_place(worst, at, ready)}",
+        str(worst.bound[0].source),
+        fix() if broken else "",
+        worst.room,
+        None,
+        edge,
+        at,
+    )
+
+
+def _unknown(path: Path, axis: Axis, ready: Prepared) -> tuple[str, str] | None:
+    """Return what of a path cannot be judged, and what would mend it; None when all of it can."""
+    if not ready.bounds(axis, "take-off"):
+        return "no envelope is entered for take-off", "Enter the envelope of this phase in the loading basis."
+    if path.gaps:
+        return _gap_words(path.gaps[0], ready)
+    return None
+
+
+def _gap_words(gap: Gap, ready: Prepared) -> tuple[str, str]:
+    name = next(tank.name for tank in ready.basis.tanks if tank.id == gap.tank)
+    first = f"{printed(gap.first, VOLUME_PLACES)} {ready.volume}"
+    return (
+        f"{WHERE[gap.leg]} {name} holds less than {first}, where its table begins",
+        f"Change the fuel of {name}, or enter the rest of its table in the loading basis.",
+    )
+
+
+def _place(worst: Worst, at: Json, ready: Prepared) -> str:
+    if worst.knot.phase is not None:
+        return AT[worst.knot.phase].strip()
+    return f"{at['point']}, at {at['weight']} {ready.weight} with {at['fuel']} {ready.weight} of fuel"
+
+
+def _at(worst: Worst, states: Mapping[Phase, State], ready: Prepared) -> Json:
+    """Return where the worst point is, as it stands in the document."""
+    knot, phase = worst.knot, worst.knot.phase
+    arms = (states[phase].arm, states[phase].lateral_arm) if phase is not None else _arms(knot)
+    percent = ready.chord_percent(arms[0])
+    return {
+        "point": phase or WHERE[worst.stretch.leg],
+        **_figures(knot, arms, ready),
+        "percent_chord": None if percent is None else printed(percent, CHORD_PLACES),
+        "fuel": printed(knot.weight - states["zero fuel"].weight, WEIGHT_PLACES),
+        "feeding": list(worst.stretch.feeding),
+    }
+
+
+def _arms(knot: Knot) -> tuple[Fraction, Fraction]:
+    return knot.moment / knot.weight, knot.lateral_moment / knot.weight
+
+
+def _figures(knot: Knot, arms: tuple[Fraction, Fraction], ready: Prepared) -> dict[str, str]:
+    return {
+        "weight": printed(knot.weight, WEIGHT_PLACES),
+        "moment": printed(knot.moment, ready.moment_places),
+        "arm": printed(arms[0], ready.length_places),
+        "lateral_arm": printed(arms[1], ready.length_places),
+    }

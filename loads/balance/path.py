@@ -1,0 +1,199 @@
+r"""The burn of one flight as a path: weight and moments from engine start to the least fuel at landing.
+
+    moment ^  R---T                     kinks: a tank runs dry, another stage feeds,
+           |       \__                  a point of a tank's table, another phase
+           |          \____
+           |                L----M      R ramp, T take-off, L landing, M minimum at landing
+           +------------------------> fuel burned
+
+Between two kinks weight and lateral moment are linear in the volume burned, and the moment is, too, or else
+quadratic where a table is straight in arm. So over weight the moment is the straight line between the two
+kinks plus bend * (weight - start) * (weight - end). Weight falls strictly along the path.
+
+A tank's table may begin above zero. What lies between nothing and its first quantity is a gap: there the
+moment is not known, and nothing is extrapolated.
+"""
+
+from collections.abc import Iterator, Mapping, Sequence
+from dataclasses import dataclass
+from fractions import Fraction
+from itertools import pairwise
+from typing import Literal, NamedTuple
+
+from fleet.basis import Phase
+from fleet.tanks import TankPiece
+from loads.balance.aboard import FuelPlan, TankFuel
+from loads.balance.exact import added, times
+from loads.balance.fuel import Contents, Draw, FuelState
+from loads.balance.result import State
+
+Leg = Literal["taxi", "flight", "reserve"]
+LEGS: tuple[tuple[Leg, Phase, Phase], ...] = (
+    ("taxi", "ramp", "take-off"),
+    ("flight", "take-off", "landing"),
+    ("reserve", "landing", "minimum at landing"),
+)
+NOTHING = Fraction(0)
+
+
+class Knot(NamedTuple):
+    """The aircraft at a kink, exact; the phase it is, or None between phases."""
+
+    weight: Fraction
+    moment: Fraction
+    lateral_moment: Fraction
+    phase: Phase | None = None
+
+
+class Stretch(NamedTuple):
+    """The path between two kinks; `bend` is the square part of moment over weight, in length / weight."""
+
+    leg: Leg
+    feeding: tuple[str, ...]
+    start: Knot
+    end: Knot
+    bend: Fraction
+
+    def at(self, weight: Fraction) -> Knot:
+        """Return the aircraft at a weight of this stretch."""
+        start, end = self.start, self.end
+        if weight == start.weight:
+            return start
+        if weight == end.weight:
+            return end
+        share = (start.weight - weight) / (start.weight - end.weight)
+        bent = self.bend * (weight - start.weight) * (weight - end.weight)
+        return Knot(
+            weight,
+            start.moment + share * (end.moment - start.moment) + bent,
+            start.lateral_moment + share * (end.lateral_moment - start.lateral_moment),
+        )
+
+
+class Gap(NamedTuple):
+    """Where on the path a tank holds less than the first quantity of its table, without being empty."""
+
+    leg: Leg
+    tank: str
+    first: Fraction
+
+
+@dataclass(frozen=True, slots=True)
+class Path:
+    """The path in the order of flight, and what of it is not known."""
+
+    stretches: tuple[Stretch, ...]
+    gaps: tuple[Gap, ...]
+
+
+def burn_path(plan: FuelPlan, fuel: Mapping[Phase, FuelState], states: Mapping[Phase, State]) -> Path:
+    """Return the path of a load whose phases are known; a leg that burns nothing has no stretch."""
+    tanks = _Tanks(plan, fuel["ramp"], states["ramp"])
+    stretches: list[Stretch] = []
+    gaps: list[Gap] = []
+    for leg, before, after in LEGS:
+        draws, contents = fuel[after].draws, fuel[before].usable
+        here: Knot | None = _knot(states[before])
+        for number, draw in enumerate(draws, 1):
+            last = number == len(draws)
+            left = contents if last else _less(contents, draw)
+            if here is not None and tanks.of_one_arm(draw.feeding):
+                there = _knot(states[after]) if last else tanks.burned(here, draw)
+                stretches.append(Stretch(leg, draw.feeding, here, there, NOTHING))
+                here = there
+            else:
+                there_or_gap = _knot(states[after]) if last else tanks.knot(left)
+                for part in tanks.parts(leg, draw, contents, here, there_or_gap):
+                    if isinstance(part, Stretch):
+                        stretches.append(part)
+                    else:
+                        gaps.append(part)
+                here = there_or_gap
+            contents = left
+    return Path(tuple(stretches), tuple(gaps))
+
+
+class _Tanks:
+    """The tanks of one load with the aircraft around them."""
+
+    __slots__ = ("density", "held", "loaded")
+
+    def __init__(self, plan: FuelPlan, fuel: FuelState, state: State) -> None:
+        self.density = plan.density
+        self.held: dict[str, TankFuel] = {held.tank.id: held for held in plan.tanks}
+        self.loaded = (fuel, state)
+
+    def of_one_arm(self, feeding: Sequence[str]) -> bool:
+        """Return whether each of these tanks has one arm at every quantity down to nothing."""
+        for tank in feeding:
+            pieces = self.held[tank].tank.table.curve.pieces
+            if pieces[1:] or pieces[0].bend or pieces[0].first:
+                return False
+        return True
+
+    def burned(self, before: Knot, draw: Draw) -> Knot:
+        """Return the aircraft after a draw from tanks of one arm."""
+        weight = times(draw.each, self.density)
+        tanks = [self.held[tank].tank for tank in draw.feeding]
+        arm = added(tank.table.curve.pieces[0].slope for tank in tanks)
+        across = added(tank.lateral_arm for tank in tanks)
+        return Knot(
+            before.weight - weight * len(tanks),
+            before.moment - times(weight, arm),
+            before.lateral_moment - times(weight, across) if across else before.lateral_moment,
+        )
+
+    def knot(self, contents: Contents) -> Knot | None:
+        """Return the aircraft with these usable volumes, or None where a table tells no moment for one."""
+        fuel, state = self.loaded
+        weight, moment, across = state.weight - fuel.weight, state.moment - fuel.moment, NOTHING
+        for tank, held in self.held.items():
+            volume = contents[tank] + held.trapped
+            curve = held.tank.table.curve
+            if volume and volume < curve.first:
+                return None
+            weight += volume * self.density
+            moment += curve.moment(volume, self.density)
+            across += held.tank.lateral_moment(volume, self.density)
+        return Knot(weight, moment, state.lateral_moment - fuel.lateral_moment + across)
+
+    def parts(
+        self, leg: Leg, draw: Draw, contents: Contents, start: Knot | None, end: Knot | None
+    ) -> Iterator[Stretch | Gap]:
+        """Yield a draw cut at the points of the tables of the tanks that feed."""
+        full = {tank: contents[tank] + self.held[tank].trapped for tank in draw.feeding}
+        marks = {NOTHING, draw.each}
+        for tank, volume in full.items():
+            firsts = [piece.first for piece in self.held[tank].tank.table.curve.pieces]
+            marks.update(volume - first for first in firsts if NOTHING < volume - first < draw.each)
+        rising = sorted(marks)
+        here = start
+        for drawn, more in pairwise(rising):
+            there = end if more == draw.each else self.knot(_less(contents, Draw(draw.feeding, more)))
+            pieces = {tank: self._piece(tank, volume - drawn, volume - more) for tank, volume in full.items()}
+            unknown = [tank for tank, piece in pieces.items() if piece is None]
+            if here is None or there is None or unknown:
+                for tank in unknown:
+                    yield Gap(leg, tank, self.held[tank].tank.table.curve.first)
+            else:
+                square = added(piece.bend for piece in pieces.values() if piece is not None)
+                bend = square / (len(pieces) ** 2 * self.density)
+                yield Stretch(leg, draw.feeding, here, there, bend)
+            here = there
+
+    def _piece(self, tank: str, above: Fraction, below: Fraction) -> TankPiece | None:
+        """Return the part of a tank's table between two volumes no kink lies between; None in its gap."""
+        pieces = self.held[tank].tank.table.curve.pieces
+        return next((piece for piece in pieces if piece.first <= below and above <= piece.last), None)
+
+
+def _knot(state: State) -> Knot:
+    return Knot(state.weight, state.moment, state.lateral_moment, state.phase)
+
+
+def _less(contents: Contents, draw: Draw) -> Contents:
+    """Return the contents after a draw."""
+    left = dict(contents)
+    for tank in draw.feeding:
+        left[tank] -= draw.each
+    return left

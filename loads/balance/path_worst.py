@@ -1,0 +1,130 @@
+"""The worst point of a whole path on each axis, of all envelopes that hold along it.
+
+Which envelope holds where, as a flight manual means it:
+
+    engine start to take-off                the envelopes of the ramp; without one it is told, not judged
+    take-off to the least fuel at landing   those of take-off: the aircraft is in flight until then
+    landing to the least fuel at landing    those of landing, too: from there on it may land at any moment
+
+So an envelope for landing alone does not bind before the planned landing. Ends belong to both neighbours.
+What is named for the least fuel alone is checked at that phase.
+
+Verdicts are exact. Where the worst point has an irrational weight, its figures are those of a point of the
+path beside it, on the same side of the limit, and the room is rounded down (an excess up).
+"""
+
+from collections.abc import Mapping, Sequence
+from fractions import Fraction
+from typing import NamedTuple
+
+from fleet.basis import Axis
+from loads.balance.path import Knot, Path, Stretch
+from loads.balance.path_curve import curves_of
+from loads.balance.path_margin import Beyond, least_margin
+from loads.balance.path_outside import Nearest
+from loads.balance.prepared import Bound, Prepared
+
+AXES: tuple[Axis, ...] = ("longitudinal", "lateral")
+BITS = 80  # how finely an irrational weight or margin is bounded: 2**-80 of the unit
+
+
+class Worst(NamedTuple):
+    """The worst point of a path against one envelope; room and limits are None where the envelope has no part
+    at its weight. `low` and `high` are the ends of the nearest part, `aft` tells which of them is the nearer.
+    """
+
+    bound: Bound
+    stretch: Stretch
+    knot: Knot
+    arm: Fraction
+    low: Fraction | None
+    high: Fraction | None
+    room: Fraction | None
+    aft: bool
+
+
+class Burn(NamedTuple):
+    """The path of one load with its worst point on each axis that has an envelope."""
+
+    path: Path
+    worst: Mapping[Axis, Worst]
+
+
+def burn_of(path: Path, ready: Prepared) -> Burn:
+    """Return a path with its worst points: of several envelopes the one with the least room counts."""
+    worst: dict[Axis, Worst] = {}
+    for axis in AXES:
+        found = [_settled(bound, point, axis) for bound, point in _points(path, axis, ready)]
+        if found:
+            worst[axis] = min(found, key=lambda each: (each.room is not None, each.room or Fraction(0)))
+    return Burn(path, worst)
+
+
+def stays_inside(path: Path, ready: Prepared, along: Fraction, across: Fraction) -> bool:
+    """Return whether the whole path lies inside every envelope once these moments are added to it."""
+    shifted = Path(tuple(_shifted(stretch, along, across) for stretch in path.stretches), path.gaps)
+    return all(
+        isinstance(point, Nearest) and point.margin.sign() >= 0
+        for axis in AXES
+        for _, point in _points(shifted, axis, ready)
+    )
+
+
+def _points(path: Path, axis: Axis, ready: Prepared) -> list[tuple[Bound, Nearest | Beyond]]:
+    """Return the worst point of the path against each envelope that holds on some of it."""
+    ramp, flight = ready.bounds(axis, "ramp"), ready.bounds(axis, "take-off")
+    landing = ready.bounds(axis, "landing")
+    if not path.stretches or not (ramp or flight or landing):
+        return []
+    curves = curves_of(path.stretches, axis)
+    found = []
+    for bound in _each_once((*flight, *ramp, *landing)):
+        legs = {
+            "taxi": any(bound is each for each in ramp),
+            "flight": any(bound is each for each in flight),
+            "reserve": any(bound is each for each in (*flight, *landing)),
+        }
+        held = [curve for curve in curves if legs[curve.stretch.leg]]
+        if held:
+            found.append((bound, least_margin(held, bound[1])))
+    return found
+
+
+def _each_once(bounds: Sequence[Bound]) -> list[Bound]:
+    return list({id(bound): bound for bound in bounds}.values())
+
+
+def _shifted(stretch: Stretch, along: Fraction, across: Fraction) -> Stretch:
+    start, end = (
+        knot._replace(moment=knot.moment + along, lateral_moment=knot.lateral_moment + across)
+        for knot in (stretch.start, stretch.end)
+    )
+    return stretch._replace(start=start, end=end)
+
+
+def _settled(bound: Bound, point: Nearest | Beyond, axis: Axis) -> Worst:
+    """Return the worst point in rationals: itself, or a point of the path as near as makes no difference."""
+    _, shape = bound
+    stretch = point.stretch
+    if isinstance(point, Beyond):
+        knot = stretch.at(point.weight)
+        return Worst(bound, stretch, knot, _moment(knot, axis) / knot.weight, None, None, None, False)
+    outside, bits = point.margin.sign() < 0, BITS
+    while True:
+        weight = point.weight.floor(bits)
+        if weight >= point.floor:
+            knot = stretch.at(weight)
+            moment = _moment(knot, axis)
+            if not outside or not point.weight.factor or not shape.holds(weight, moment):
+                break
+        bits *= 2
+    over = weight if shape.slabs.in_moment else Fraction(1)
+    low, high = (
+        Fraction(-(q * weight.numerator + r * weight.denominator), p * weight.denominator) / over
+        for p, q, r in (point.sides[:3], point.sides[3:])
+    )
+    return Worst(bound, stretch, knot, moment / weight, low, high, point.margin.floor(BITS), point.aft)
+
+
+def _moment(knot: Knot, axis: Axis) -> Fraction:
+    return knot.moment if axis == "longitudinal" else knot.lateral_moment
