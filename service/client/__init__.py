@@ -1,6 +1,6 @@
 """A small client of Tarebook's API for Python 3.11 and newer, on the standard library alone.
 
-Nothing in this folder imports anything of the service: copy it into your own program, under any name.
+Nothing in this folder imports anything of the service: copy it into your own program, as `service/client`.
 
     with_token = Tarebook("http://127.0.0.1:8000", token)
     load = with_token.submit(document)
@@ -8,9 +8,9 @@ Nothing in this folder imports anything of the service: copy it into your own pr
         print([check.what_next for check in load.failed])
 """
 
-from .events import Message, MessageRefused, read_message
-from .exchange import Patience
-from .problems import (
+from service.client.events import Message, MessageRefused, read_message
+from service.client.exchange import Patience
+from service.client.problems import (
     AnswerUnusable,
     Fault,
     Invalid,
@@ -28,7 +28,7 @@ from .problems import (
     Unanswered,
     Unreadable,
 )
-from .shapes import (
+from service.client.shapes import (
     Aircraft,
     Assessment,
     Check,
@@ -41,7 +41,7 @@ from .shapes import (
     Subscription,
     Version,
 )
-from .tarebook import Tarebook
+from service.client.tarebook import Tarebook
 
 __all__ = (
     "Aircraft",

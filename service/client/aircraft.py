@@ -5,8 +5,8 @@ from datetime import datetime
 from urllib.parse import quote, urlencode
 from uuid import uuid4
 
-from .exchange import Exchange
-from .shapes import Aircraft, EmptyWeights, Version, aircraft_in, empty_weights_in, version_in
+from service.client.exchange import Exchange
+from service.client.shapes import Aircraft, EmptyWeights, Version, aircraft_in, empty_weights_in, version_in
 
 
 class AircraftRecords:

@@ -10,7 +10,7 @@ from dataclasses import dataclass, field
 from hashlib import sha256
 from typing import Any, Final
 
-from .problems import TarebookError
+from service.client.problems import TarebookError
 
 PREFIX: Final = "whsec_"
 # How far a message's time may be from ours, as the specification's own libraries have it.

@@ -16,7 +16,7 @@ from http import HTTPStatus
 from typing import Any, Final
 from urllib.parse import urlsplit
 
-from .problems import AnswerUnusable, Refused, Unanswered, refusal
+from service.client.problems import AnswerUnusable, Refused, Unanswered, refusal
 
 API: Final = "/api/v1"
 IN_FLIGHT: Final = "idempotency-key-in-flight"

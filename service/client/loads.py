@@ -7,9 +7,9 @@ from datetime import datetime
 from typing import Literal
 from urllib.parse import urlencode
 
-from .exchange import Exchange
-from .problems import AnswerUnusable
-from .shapes import Assessment, Load, LoadLine, Paper, assessment_in, line_in, load_in
+from service.client.exchange import Exchange
+from service.client.problems import AnswerUnusable
+from service.client.shapes import Assessment, Load, LoadLine, Paper, assessment_in, line_in, load_in
 
 PDF = "application/pdf"
 

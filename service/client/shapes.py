@@ -4,8 +4,8 @@ from collections.abc import Callable, Mapping
 from dataclasses import dataclass, field
 from typing import Any, TypeVar
 
-from .exchange import Answer
-from .problems import AnswerUnusable
+from service.client.exchange import Answer
+from service.client.problems import AnswerUnusable
 
 Shape = TypeVar("Shape")
 

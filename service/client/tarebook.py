@@ -4,10 +4,10 @@ import ssl
 import time
 from collections.abc import Callable
 
-from .aircraft import AircraftRecords
-from .exchange import Exchange, Patience
-from .loads import Loads
-from .webhooks import Webhooks
+from service.client.aircraft import AircraftRecords
+from service.client.exchange import Exchange, Patience
+from service.client.loads import Loads
+from service.client.webhooks import Webhooks
 
 
 class Tarebook(Loads, AircraftRecords, Webhooks):

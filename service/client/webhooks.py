@@ -4,8 +4,8 @@ from collections.abc import Collection, Iterator
 from urllib.parse import urlencode
 from uuid import uuid4
 
-from .exchange import Exchange
-from .shapes import Delivery, Subscription, delivery_in, subscription_in
+from service.client.exchange import Exchange
+from service.client.shapes import Delivery, Subscription, delivery_in, subscription_in
 
 
 class Webhooks:

@@ -5,11 +5,9 @@ loads signed, fetches every manifest, and is itself restarted in the middle. The
 """
 
 import hashlib
-import json
 from collections.abc import Iterator
 from dataclasses import dataclass, field
 from datetime import UTC, datetime, timedelta
-from pathlib import Path
 from uuid import UUID
 
 import pytest
@@ -18,24 +16,20 @@ from pytest_django.live_server_helper import LiveServer
 
 from fleet.actions.enter_person import enter_person
 from fleet.actions.grant_duty import grant_duty
-from fleet.actions.issue_token import issue_token
-from fleet.models import Person
 from loads.models import FiledPaper, Load, Paper, Step
 from loads.tasks import file_manifest
 from records.models import Act, WebhookDelivery, WebhookEvent
 from records.webhooks.deliver import deliver_due
-from service.allowed import grantable
 from service.client import LoadLine, Message, Patience, Subscription, Tarebook, read_message
 from service.client import Paper as Fetched
 from tests.cast import PASSWORD, Cast, actor
 from tests.journeys.bad_line import BadLine, bad_line
 from tests.journeys.scheduling import DAYS, FLIGHTS_A_DAY, Flight, mended_as_told, month
 from tests.journeys.trail import unsound
-from tests.makers import LONG_AGO, make_aircraft, make_basis, make_empty_weight
+from tests.journeys.twins import enter_twins, token_of
 from tests.records.webhooks.making import make_due
 from tests.records.webhooks.receiver import ToldReceiver, running
 
-DATA = Path(__file__).parents[2] / "service" / "demo" / "data"
 AIRCRAFT = ("Q9-LVN", "Q9-LVP")
 SEED = 7
 # On one day of four the weather keeps a flight on the ground.
@@ -44,37 +38,6 @@ EVENTS = ("load.rejected", "load.accepted", "manifest.filed")
 # Short waits, since the line's troubles pass at once; many tries, since they come one after the other.
 PATIENCE = Patience(tries=12, first_wait=0.02, longest_wait=1.0, answer_within=3.0)
 STALL_SECONDS = 3.5
-
-
-def enter_twins(people: Cast) -> None:
-    basis, weight = (
-        json.loads((DATA / f"twin.{name}.json").read_text("utf-8"))
-        for name in ("loading-basis", "empty-weight")
-    )
-    for registration in AIRCRAFT:
-        aircraft = make_aircraft(
-            people,
-            registration,
-            type=basis["aircraft_type"],
-            engines=basis["engines"],
-            passenger_seats=basis["passenger_seats_installed"],
-        )
-        make_basis(people, aircraft, basis, true_from=LONG_AGO)
-        make_empty_weight(people, aircraft, weight)
-
-
-def token_of(people: Cast, person: Person, role: str, *scopes: str) -> str:
-    integration = role == "integration"
-    issued = issue_token(
-        actor(people.manager if integration else person),
-        person,
-        label="month",
-        scopes=scopes,
-        grantable=grantable((role,), integration=integration),
-        valid_for=timedelta(days=1),
-        integration=integration,
-    )
-    return issued.secret
 
 
 @dataclass
@@ -141,7 +104,7 @@ class Airline:
 
 @pytest.fixture
 def airline(people: Cast, monkeypatch: pytest.MonkeyPatch) -> Iterator[Airline]:
-    enter_twins(people)
+    enter_twins(people, *AIRCRAFT)
     scheduler = enter_person(
         actor(people.manager), people.operator, login="scheduling", name="Scheduling", password=PASSWORD
     )

@@ -250,13 +250,18 @@ def test_a_token_stands_in_no_text() -> None:
     assert repr(made) == "Tarebook('https://tarebook.example.org')"
 
 
-def test_the_folder_works_alone_under_another_name(tmp_path: Path) -> None:
-    shutil.copytree(Path(__file__).parents[3] / "service" / "client", tmp_path / "loadbook")
-    program = f"import sys; sys.path.insert(0, {str(tmp_path)!r}); import loadbook; print(loadbook.Tarebook)"
+def test_the_folder_works_alone(tmp_path: Path) -> None:
+    shutil.copytree(Path(__file__).parents[3] / "service" / "client", tmp_path / "service" / "client")
+    program = (
+        f"import sys; sys.path.insert(0, {str(tmp_path)!r}); "
+        "import service.client as c; print(c.Tarebook, c.__file__)"
+    )
 
     # -I -S: no packages but the standard library, and nothing of where this runs.
     ran = subprocess.run(
         [sys.executable, "-I", "-S", "-c", program], capture_output=True, text=True, check=False, cwd=tmp_path
     )
 
-    assert (ran.returncode, ran.stdout.strip()) == (0, "<class 'loadbook.tarebook.Tarebook'>"), ran.stderr
+    place = tmp_path / "service" / "client" / "__init__.py"
+    said = f"<class 'service.client.tarebook.Tarebook'> {place}"
+    assert (ran.returncode, ran.stdout.strip()) == (0, said), ran.stderr
