@@ -6,6 +6,7 @@ from django.db import migrations, models
 from django.db.models import Case, F, Q, When
 
 _HERE = Path(__file__).resolve().parent
+_BROUGHT = "assessment_is_brought_by_a_step"
 GUARDS = [
     # Lines and document name people: the trail keeps salted digests.
     "'loads_latechange', key => '{step_id}', mode => 'append', operator => 'operator_id', personal => '{lines,body}'",
@@ -13,6 +14,18 @@ GUARDS = [
     "'loads_note', key => '{id}', mode => 'append', operator => 'operator_id', personal => '{text}'",
     "'loads_stalenotice', key => '{id}', mode => 'append', operator => 'operator_id'",
 ]
+
+
+def _text(name: str) -> str:
+    return (_HERE / name).read_text(encoding="utf-8")
+
+
+def _as_it_was(function: str) -> str:
+    """Return the function as the tables had it before, for the way back."""
+    text = _text("ties.sql")
+    begin = text.index(f"CREATE FUNCTION {function}()")
+    end = text.index("END $$;", begin) + len("END $$;")
+    return "\n" + text[begin:end].replace("CREATE FUNCTION", "CREATE OR REPLACE FUNCTION", 1)
 
 
 class Migration(migrations.Migration):
@@ -28,7 +41,8 @@ class Migration(migrations.Migration):
             ),
         ),
         migrations.RunSQL(
-            (_HERE / "late_changes.sql").read_text(encoding="utf-8"),
+            _text("late_changes.sql"),
+            _text("late_changes_undone.sql") + _as_it_was("step_is_backed") + _as_it_was(_BROUGHT),
             # The database alters the expression in place; Django itself could only drop the column.
             state_operations=[
                 migrations.AlterField(
