@@ -62,7 +62,7 @@ def actor_of_token(token: Token) -> Actor:
 
 def _asks(request: Request, actor: Actor) -> None:
     """Say who asks on the plain request: the framework's request hands it on, the request log reads it."""
-    plain = getattr(request, "_request", request)
+    plain: Any = getattr(request, "_request", request)
     plain.actor = actor
 
 

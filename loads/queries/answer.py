@@ -7,7 +7,7 @@ from loads.balance.engine import ENGINE_VERSION
 from loads.balance.late_change import said
 from loads.cautions import CAUTIONS, INVENTED
 from loads.lifecycle import ways_out
-from loads.models import LateChange, Load, Note, Paper, Signature
+from loads.models import LateChange, Load, Note, Paper, Signature, StaleNotice
 from loads.queries.computation import Computation, versions_of
 from loads.queries.current import Current
 from loads.queries.declaration import declared_now
@@ -83,7 +83,7 @@ def full_answer_of(current: Current, *, known: datetime) -> Answer:
         "to_sign": signatures_due(current, declared),
         "stale_notices": [
             {"told_at": one.told_at, "changed": one.changed.split(", "), "mail_addresses": one.mail_addresses}
-            for one in load.stale_notices.order_by("told_at", "id")
+            for one in StaleNotice.objects.filter(load=load).order_by("told_at", "id")
         ],
         "notes": [note_answer(one) for one in notes_of(load)],
         "declared": declared,

@@ -7,7 +7,7 @@ from fleet.queries.settings import settings_at
 from loads import acts
 from loads.actions.write_note import LONGEST_NOTE
 from loads.balance.late_change import said
-from loads.models import Signature
+from loads.models import Signature, StaleNotice
 from loads.queries.answer import notes_of
 from loads.queries.current import Current
 from loads.queries.doubles import doubles_of
@@ -25,7 +25,7 @@ def beside(current: Current, declared: dict[str, Any], actor: Actor) -> dict[str
         "late_changes": _changes(current, declared),
         "told": [
             {"at": one.told_at.astimezone(UTC), "changed": one.changed, "mail": one.mail_addresses}
-            for one in load.stale_notices.order_by("told_at", "id")
+            for one in StaleNotice.objects.filter(load=load).order_by("told_at", "id")
         ],
         "notes": [
             {"at": one.written_at.astimezone(UTC), "who": one.person.name, "text": one.text}
