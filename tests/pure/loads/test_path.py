@@ -2,6 +2,7 @@
 
 from dataclasses import replace
 from fractions import Fraction
+from math import floor
 
 import pytest
 
@@ -248,6 +249,20 @@ def test_the_ramp_envelope_binds_while_taxiing_and_without_one_taxiing_is_not_ju
     assert judged.check("path.longitudinal").outcome == "fail"
     assert judged.check("path.longitudinal").phase == "take-off"
     assert told.check("path.longitudinal").outcome == "pass"
+
+
+def test_a_hair_above_the_weight_of_a_corner_the_narrower_part_binds():
+    document = flight()
+    ramp = result_of(document, rear_first(aft="140")).state("ramp")
+    level = floor(ramp.weight)
+    arm = ramp.arm - 1
+    outline = ((100, 3000), (100, 7500), (arm, 7500), (arm, level), (140, level), (140, 3000))
+    result = result_of(document, replace(rear_first(), envelopes=(envelope(*outline),)))
+
+    assert 0 < ramp.weight - level < 1
+    check = result.check("path.longitudinal")
+    assert (check.outcome, check.phase, check.room) == ("fail", "ramp", -1)
+    assert result.check("cg.ramp").room == -1
 
 
 def test_lateral_limits_are_checked_along_the_burn():

@@ -15,8 +15,11 @@ from fleet.envelope import NotAnEnvelope
 from loads.balance.aboard import FuelPlan, TankFuel
 from loads.balance.assess import assess
 from loads.balance.declared import read_load
+from loads.balance.fuel import fuel_states
+from loads.balance.path import burn_path
+from loads.balance.prepared import prepared
 from tests.pure.loads.making import SOURCE, load, twin, twin_empty
-from tests.pure.loads.naive_path import assert_as_sampled, sampled
+from tests.pure.loads.naive_path import assert_as_sampled, points_along, sampled
 
 F = Fraction
 SAMPLES = 40
@@ -128,3 +131,20 @@ def test_no_sample_is_worse_one_is_as_bad_and_outside_is_outside(flight, data):
             continue
         assert_as_sampled(found[0], runs)
         event(f"{axis} {found[0].outcome}")
+
+
+@settings(max_examples=120, deadline=None, suppress_health_check=list(HealthCheck))
+@given(flights())
+def test_every_sample_lies_exactly_on_the_path(flight):
+    basis, plan = flight
+    declared = replace(DECLARED, fuel=plan)
+    result = assess(declared, basis, twin_empty())
+    states = {state.phase: state for state in result.states}
+    path = burn_path(plan, fuel_states(plan, prepared(basis)), states)
+
+    for point in points_along(declared, basis, (DRY.weight, DRY.moment, DRY.lateral_moment), 7):
+        on = [each for each in path.stretches if each.end.weight <= point.weight <= each.start.weight]
+        assert on or states["ramp"].weight == states["minimum at landing"].weight
+        for stretch in on:
+            at = stretch.at(point.weight)
+            assert (at.moment, at.lateral_moment) == (point.moment, point.lateral_moment)
