@@ -129,8 +129,10 @@ class Fields:
 
     def flag(self, name: str) -> bool | None:
         """Return true or false."""
-        value = self._values.get(name)
-        if value is not None and not isinstance(value, bool):
+        if name not in self._values:
+            return None
+        value = self._values[name]
+        if not isinstance(value, bool):
             self.note(name, "flag-form", "true or false is needed here, without quotes")
             return None
         return value

@@ -60,7 +60,7 @@ def make_world(code: str, aircraft: str) -> World:
     stale = _submitted(people, stale_at, reference="STALE")
     make_empty_weight(people, stale.load.aircraft, _heavier())
     ready_aircraft(people, aircraft)
-    bounded(people)
+    bounded(people, "500", persons=3)
     names = _subscriptions(people, aircraft)
     loads = {"stale": stale, **_loads(people, aircraft)}
     _park(names)

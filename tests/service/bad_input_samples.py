@@ -1,0 +1,209 @@
+"""Right documents of every kind that is taken, together with every field that may stand in one; and what of a
+spoiled one is right after all.
+"""
+
+from collections.abc import Callable, Mapping
+from typing import Any, Final
+
+from django.utils import timezone
+
+from tests.cast import PASSWORD
+from tests.loads.late import change_of, proposed
+from tests.loads.making import load_document, signing
+from tests.makers import basis_document, empty_weight_document, q
+from tests.service.permission_world import World
+
+Documents = tuple[dict[str, Any], ...]
+_AIRCRAFT: Final = "/api/v1/aircraft/{registration}"
+_LOAD: Final = "/api/v1/loads/{load}"
+
+
+def _source(page: str) -> dict[str, str]:
+    return {"document": "FL9-FM", "page": page, "revision": "C"}
+
+
+def _loading_bases(_world: World) -> Documents:
+    """Two: figures where the other says there are none."""
+    full = basis_document(
+        burn_order_source=_source("2-11"),
+        taxi_order=[{"tanks": ["LEFT", "RIGHT"]}],
+        datum={"name": "forward bulkhead", "source": _source("6-2")},
+        trim={"none": True, "source": _source("6-4")},
+        lateral_limits={"none": True, "source": _source("2-5")},
+    )
+    full["limits"]["minimum_flying"] = {**q("4000", "lb"), "source": _source("2-4")}
+    full["chord"]["source"] = _source("6-3")
+    for part in ("seats", "places"):
+        full[part][0] |= {"source": _source("6-9")}
+        full[part][0]["maximum"]["source"] = _source("6-9")
+    full["zones"][0]["maximum"]["source"] = _source("6-10")
+    by_weight = {
+        "against": "weight",
+        "against_unit": "lb",
+        "gives": "arm",
+        "gives_unit": "in",
+        "straight_in": "arm",
+        "points": [["0", "132.0"], ["400", "133.0"], ["804", "133.5"]],
+        "density": q("6.7", "lb/US gal"),
+    }
+    full["tanks"][0] |= {"table": by_weight, "source": _source("6-14")}
+    full["envelopes"][0]["source"] = _source("2-5")
+    cabin = {"weight": q("31", "lb"), "arm": q("150", "in"), "lateral_arm": q("0", "in")}
+    full["configurations"][0] |= {
+        "equipment": [{"what": "cabin divider", **cabin}],
+        "limits": {
+            "ramp": {**q("8700", "lb"), "source": _source("S-4")},
+            "take_off": {**q("8650", "lb"), "source": _source("S-4")},
+            "zero_fuel": {**q("7800", "lb"), "source": _source("S-4")},
+            "landing": {**q("8500", "lb"), "source": _source("S-4")},
+            "minimum_flying": {**q("4100", "lb"), "source": _source("S-4")},
+        },
+        "source": _source("S-1"),
+    }
+    full["sample_loads"][0]["source"] = _source("6-20")
+    for limit in full["limits"].values():
+        limit["source"] = _source("2-4")
+    none = {"none": True, "source": _source("2-4")}
+    spare = basis_document(chord=none, limits=dict.fromkeys(full["limits"], none))
+    spare["sample_loads"] = {"none": True, "source": _source("6-20")}
+    spare["seats"][0]["maximum"] = spare["places"][0]["maximum"] = spare["zones"][0]["maximum"] = none
+    spare["configurations"][0]["limits"] = dict.fromkeys(full["limits"], none)
+    return full, spare
+
+
+def _empty_weights(_world: World) -> Documents:
+    arms = empty_weight_document(arm=q("122.94", "in"), lateral_arm=q("-0.17", "in"))
+    for part in ("moment", "lateral_moment"):
+        del arms[part]
+    return empty_weight_document(), arms
+
+
+def load_with_everything(world: World) -> dict[str, Any]:
+    """This function will write a load with every field a load may have."""
+    document = load_document(world.people, aircraft=world.aircraft, persons_on_board=4)
+    document["crew"][0]["category"] = "adult"
+    infant = {"name": "B. Osei", "weight": q("18", "lb"), "how": "declared"}
+    document["passengers"][0] |= {"category": "adult", "lap_infant": infant}
+    document["items"][0]["removed"] = False
+    document["fuel"]["not_usable"] = {"LEFT": q("1", "US gal")}
+    return document
+
+
+def late_lines() -> dict[str, Any]:
+    """This function will write a last-minute change with a line of each kind."""
+    infant = {"name": "C. Pell", "weight": q("16", "lb"), "how": "declared"}
+    on = {"name": "U. Pell", "seat": "ROW2-L", "weight": q("90", "lb"), "how": "declared"}
+    return change_of(
+        {"change": "passenger-off", "seat": "ROW1-L"},
+        {"change": "passenger-on", **on, "category": "adult", "lap_infant": infant},
+        {"change": "item-off", "what": "checked bags", "place": "AFT-HOLD", "weight": q("10", "lb")},
+        {
+            "change": "item-on",
+            "kind": "baggage",
+            "what": "bag at the door",
+            "place": "NOSE-HOLD",
+            "weight": q("12", "lb"),
+            "how": "weighed",
+        },
+        {"change": "fuel-on", "tank": "LEFT", "quantity": q("1", "US gal")},
+        {"change": "fuel-off", "tank": "RIGHT", "quantity": q("1", "US gal")},
+        persons=4,
+    )
+
+
+def _late_changes(world: World) -> Documents:
+    change = late_lines()
+    digest = proposed(world.loads["accepted"], change).computation.digest
+    return ({**change, "digest": digest, "password": PASSWORD},)
+
+
+def _one(**document: Any) -> Callable[[World], Documents]:
+    return lambda _world: (document,)
+
+
+SAMPLES: Final[Mapping[str, Callable[[World], Documents]]] = {
+    "/api/v1/aircraft": _one(
+        registration="Q9-NEW",
+        type="Fenlark 9",
+        serial_number="9-new",
+        category="aeroplane",
+        engines=2,
+        passenger_seats=4,
+        reason="bought",
+    ),
+    f"{_AIRCRAFT}/loading-bases": _loading_bases,
+    f"{_AIRCRAFT}/loading-bases/{{version}}/approval": _one(true_from="2026-01-02T00:00:00Z", reason="read"),
+    f"{_AIRCRAFT}/empty-weights/{{version}}/approval": _one(reason="read"),
+    f"{_AIRCRAFT}/weighings": _empty_weights,
+    "/api/v1/assessments": lambda world: (load_with_everything(world),),
+    "/api/v1/loads": lambda world: (load_with_everything(world),),
+    f"{_LOAD}/revisions": lambda world: ({**load_with_everything(world), "reason": "one bag more"},),
+    f"{_LOAD}/departure": lambda _world: ({"at": timezone.now().isoformat()},),
+    f"{_LOAD}/last-minute-changes": _late_changes,
+    f"{_LOAD}/last-minute-changes/preview": lambda _world: (late_lines(),),
+    f"{_LOAD}/notes": _one(text="a bag too many"),
+    f"{_LOAD}/signatures": lambda world: (
+        {"meaning": "prepared", "digest": signing(world.loads["open"]).digest, "password": PASSWORD},
+    ),
+    f"{_LOAD}/withdrawal": _one(reason="not flown"),
+    "/api/v1/me/password": _one(current=PASSWORD, new="slow-copper-meadow-4"),
+    "/api/v1/people": _one(
+        login="new.person", name="N. Person", password="slow-copper-meadow-4", reason="joined"
+    ),
+    "/api/v1/people/{person}/deactivation": _one(reason="left"),
+    "/api/v1/people/{person}/duties": _one(
+        role="pilot", granted=True, since="2027-01-01T00:00:00Z", reason="checked out"
+    ),
+    "/api/v1/settings": _one(
+        reason="manual revised",
+        true_from="2027-01-01T00:00:00Z",
+        last_minute_bound={"weight": q("200", "lb"), "persons": 1},
+        weighing_threshold_percent="0.5",
+        operations_mail=["ops@kestrel.example"],
+        prepare_and_accept_by_one=True,
+        estimates_may_be_signed=False,
+        rule_set="US",
+        procedure="section 8",
+        weight_method="weighed",
+    ),
+    "/api/v1/tokens": lambda world: (
+        {
+            "label": "another",
+            "scopes": ["read"],
+            "days": 3,
+            "integration": True,
+            "registrations": [world.aircraft],
+            "person": world.by_role["operations manager"].pk,
+        },
+    ),
+    "/api/v1/tokens/{token}/rotation": _one(overlap_hours=1, days=3, reason="rotated"),
+    "/api/v1/tokens/{token}/revocation": _one(reason="lost"),
+    "/api/v1/webhooks": _one(address="https://hooks.example.org/new", events=["load.accepted"], label="new"),
+}
+
+# Where a spoiled document is right after all: the end of the address, the way ("" for any), the fields.
+RIGHT: Final[tuple[tuple[str, str, frozenset[str]], ...]] = (
+    # What there may be two of that are alike.
+    ("", "sent twice", frozenset({"/items/#", "/limits/#", "/lines/#", "/events/#"})),
+    (
+        "/loading-bases",
+        "sent twice",
+        frozenset(
+            {
+                "/configurations/#/equipment/#",
+                "/configurations/#/operating_items/#",
+                "/sample_loads/#",
+                "/sample_loads/#/weights/#",
+            }
+        ),
+    ),
+    # A datum may stand behind the wing.
+    ("/loading-bases", "negative", frozenset({"/chord/leading_edge/value"})),
+    # Nothing set, said plainly.
+    ("/settings", "null", frozenset({"/last_minute_bound", "/weighing_threshold_percent"})),
+    ("/webhooks", "empty", frozenset({"/label"})),
+)
+# What the schema describes and the endpoint refuses: an empty weight says itself from when it holds.
+NOT_TAKEN: Final[Mapping[str, frozenset[str]]] = {
+    f"{_AIRCRAFT}/empty-weights/{{version}}/approval": frozenset({"/true_from"})
+}
