@@ -4,7 +4,8 @@ from datetime import datetime
 
 from django.db import connection
 
-from fleet.queries.people import has_manager
+from fleet.models import Duty
+from fleet.queries.people import MANAGER, has_manager
 from records.act import Entry
 from records.refusal import StepRefused
 
@@ -18,10 +19,14 @@ def one_at_a_time(entry: Entry) -> None:
 
 
 def refuse_without_manager(entry: Entry, at: datetime) -> None:
-    """This function will do nothing while a manager is left at `at`; raises StepRefused, which undoes the
-    act.
+    """This function will do nothing while a manager is left at `at` and ever after; raises StepRefused, which
+    undoes the act.
+
+    Ever after: an ending may be dated later, by days when it is planned and by a moment when two race and the
+    act that was opened first comes second.
     """
-    if not has_manager(entry.chain, at):
+    changes = Duty.objects.filter(operator=entry.chain, role=MANAGER, since__gt=at)
+    if not all(has_manager(entry.chain, then) for then in (at, *changes.values_list("since", flat=True))):
         raise StepRefused(
             "last-manager",
             "Nobody would be left who may enter people and grant duties.",

@@ -71,3 +71,14 @@ def test_of_two_managers_who_end_each_others_duty_one_is_left():
 
     assert outcomes == ["done", "last-manager"]
     assert has_manager(people.operator.code, timezone.now())
+
+
+def test_a_manager_stays_while_the_other_one_is_to_go_tomorrow():
+    people = cast()
+    grant_duty(actor(people.manager), people.pilot, MANAGER)
+    end_duty(actor(people.manager), people.pilot, MANAGER, since=timezone.now() + DAY)
+
+    with pytest.raises(Refused) as refused:
+        end_duty(actor(people.pilot), people.manager, MANAGER)
+
+    assert refused.value.code == "last-manager"
