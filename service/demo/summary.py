@@ -28,9 +28,17 @@ def show_summary(console: Console, flown: list[Flown], papers: dict[str, Path], 
             _verdict(one),
             f"{governing['weight']}\n{governing['cg']}",
             one.last.state,
-            str(papers.get(one.trip.reference, "")),
+            _shown(papers.get(one.trip.reference)),
         )
     Console(width=max(console.width, NARROWEST), highlight=False, file=console.file).print(table)
+
+
+def _shown(paper: Path | None) -> str:
+    """This function will write a path from the folder the command was typed in, when it lies in there."""
+    if paper is None:
+        return ""
+    here = Path.cwd()
+    return str(paper.relative_to(here) if paper.is_relative_to(here) else paper)
 
 
 def _verdict(one: Flown) -> str:
