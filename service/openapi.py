@@ -35,7 +35,7 @@ _REFUSALS: Final = {
     "409": "The state does not allow this step, or a request with this key is being answered.",
     "413": "The body is larger than is read.",
     "422": "Fields are wrong, each named by its pointer; or the key came with another request before.",
-    "503": "The database could not be reached; nothing was stored.",
+    "503": "The database could not be reached; nothing is known to have been stored.",
     "429": "Too many requests came in a minute; the header Retry-After says how many seconds to wait.",
     "default": "Any other refusal or failure.",
 }

@@ -176,12 +176,13 @@ def _framework(status: int, detail: str, headers: Mapping[str, str] | None = Non
 
 
 def _unavailable() -> HttpResponse:
+    # A connection that breaks while a commit is answered leaves open whether it was done.
     return problem(
         503,
         "database-unavailable",
         "not available",
-        "The database could not be reached or gave the request up; nothing was stored.",
-        next_step="Repeat the same request, with the same Idempotency-Key, in a few seconds.",
+        "The database could not be reached or gave the request up; nothing is known to have been stored.",
+        next_step="Repeat it with the same Idempotency-Key in a few seconds; nothing is done twice.",
         headers={"Retry-After": "5"},
     )
 

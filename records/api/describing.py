@@ -54,7 +54,7 @@ _MEANING: Final[Mapping[int, str]] = {
     422: "Fields are wrong; each is named by its pointer.",
     428: "If-Match is missing.",
     429: "Too many wrong passwords; the header Retry-After says how long to wait.",
-    503: "The database could not be reached; nothing was stored.",
+    503: "The database could not be reached; nothing is known to have been stored.",
 }
 _READS: Final = (401, 403, 404, 422, 503)
 _STORES: Final = (400, 401, 403, 404, 409, 413, 422, 503)
