@@ -16,7 +16,7 @@ def test_every_act_that_a_role_allows_is_an_act():
 
 
 def test_what_people_do_can_be_done_by_some_role():
-    # Operators are entered at set-up; the worker files manifests and tells of stale loads; people do the rest.
+    # Operators are entered at set-up; the worker files manifests and tells of stale loads; people do the rest
     somebody = allowed.to_person(fleet.duties.ROLES)
 
     assert ALL - somebody == {"enter-operator", "file-manifest", "tell-stale-load"}
