@@ -103,7 +103,7 @@ def _same(chain: str, position: int, what: str, expected: object, found: object)
 
 def _read(link: Link, place: int) -> dict[str, object]:
     try:
-        inside = json.loads(link.entry, object_pairs_hook=_without_repeats)
+        inside = _READER.decode(link.entry)
     except ValueError as problem:
         raise ChainBroken(link.chain, place, "the entry", "a JSON object", str(problem)) from problem
     if not isinstance(inside, dict):
@@ -116,3 +116,7 @@ def _without_repeats(pairs: list[tuple[str, object]]) -> dict[str, object]:
     if len(found) != len(pairs):
         raise ValueError("a name stands twice in one object")
     return found
+
+
+# Made once: making it anew for each entry took a fifth of the time of following it.
+_READER = json.JSONDecoder(object_pairs_hook=_without_repeats)

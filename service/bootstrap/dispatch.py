@@ -1,5 +1,5 @@
-"""From the command line to the right program: `start` and `test` before any setting is read, the rest to
-Django.
+"""From the command line to the right program: `start`, `test` and `prove` before any setting is read, the
+rest to Django.
 """
 
 import importlib.util
@@ -38,6 +38,11 @@ def _run(arguments: list[str]) -> int:
         from service.gate import gate  # noqa: PLC0415 - not needed by the other commands
 
         return gate([word for word in arguments[1:] if word != _REFUSE])
+    if command == "prove":
+        _inside("tests", arguments, may_install=_REFUSE not in arguments)
+        from service.prove.command import prove  # noqa: PLC0415 - not needed by the other commands
+
+        return prove([word for word in arguments[1:] if word != _REFUSE])
     # In an image, or in a folder of packages of one's own, Django is already there.
     if importlib.util.find_spec("django") is None:
         _inside("run", arguments, may_install=False)

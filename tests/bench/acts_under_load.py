@@ -22,6 +22,14 @@ from tests.bench.ground import database
 
 APPLICATION_TIME = 0.020
 PARENTS = 20
+SHARE, TARGET = "throughput sealed / not sealed", 0.9
+MUST_BE_NONE = (
+    "gaps",
+    "links out of the order of commits",
+    "errors",
+    "deadlocks",
+    "broken places found by verify",
+)
 TABLES = """
 CREATE TABLE load_{0}_parent (id bigint PRIMARY KEY, operator_id text, n bigint);
 CREATE TABLE load_{0}_child (id uuid PRIMARY KEY DEFAULT uuidv7(), operator_id text, what text,
@@ -154,7 +162,7 @@ def measure(seconds: float, clients: int) -> dict[str, object]:
         "links out of the order of commits": out_of_order(around),
         "errors": len(errors),
         "deadlocks": sum(error.startswith("40P01") for error in errors),
-        "throughput sealed / not sealed": round(commits / sum(one.commits for one in bare), 3),
+        SHARE: round(commits / sum(one.commits for one in bare), 3),
         "broken places found by verify": len(follow_chains().broken) + len(reconcile()),
     }
 
@@ -162,5 +170,8 @@ def measure(seconds: float, clients: int) -> dict[str, object]:
 if __name__ == "__main__":
     words = sys.argv[1:]
     with database():
-        for what, figure in measure(float((words or ["30"])[0]), int((words[1:] or ["16"])[0])).items():
-            print(f"{what:<45} {figure}")
+        seen = measure(float((words or ["30"])[0]), int((words[1:] or ["16"])[0]))
+    for what, figure in seen.items():
+        print(f"{what:<45} {figure}")
+    wrong = [seen[what] for what in MUST_BE_NONE if seen[what]]
+    sys.exit(1 if wrong or float(str(seen[SHARE])) < TARGET else 0)
