@@ -38,7 +38,12 @@ class Load(models.Model):
                 condition=~models.Q(replaces=models.F("id")), name="load_does_not_replace_itself"
             ),
         ]
-        indexes = [models.Index(fields=["operator", "departure", "id"], name="load_by_departure")]
+        indexes = [
+            models.Index(fields=["operator", "departure", "id"], name="load_by_departure"),
+            # Programs look for one flight among years of them. Migration 0010 has one more, in SQL: by the
+            # beginning of the reference in any case, as people type it.
+            models.Index(fields=["operator", "reference", "departure", "id"], name="load_by_reference"),
+        ]
 
     def __str__(self) -> str:
         return f"load {self.id}"

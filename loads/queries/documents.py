@@ -63,7 +63,8 @@ def _wanted(operator: str, search: Search, after: int | None) -> Q:
     if search.registration:
         wanted &= Q(load__aircraft__registration=search.registration.upper())
     if search.reference:
-        wanted &= Q(load__reference__istartswith=search.reference)
+        # The operator of the load is that of its paper; named, so that one index answers.
+        wanted &= Q(load__operator_id=operator, load__reference__istartswith=search.reference)
     if search.since is not None:
         wanted &= Q(load__departure__gte=search.since)
     if search.until is not None:

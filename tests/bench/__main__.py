@@ -8,7 +8,7 @@ import subprocess
 import sys
 from pathlib import Path
 
-# In the order in which they are read: decision, path, answer, paper, act, endpoint, start.
+# In the order in which they are read: decision, path, answer, paper, act, endpoint, what is stored, start.
 MEASUREMENTS = (
     "decision_against_shapely",
     "path_against_shapely",
@@ -17,6 +17,7 @@ MEASUREMENTS = (
     "act_against_bare_insert",
     "acts_under_load",
     "post_loads_throughput",
+    "stored_loads",
     "seconds_to_the_summary",
 )
 
