@@ -11,36 +11,13 @@ from typing import Literal
 
 from fleet.envelope import Shape
 from fleet.quantities import Unit
+from fleet.sourced import Limit, Source
 from fleet.tanks import TankCurve
 
 Axis = Literal["longitudinal", "lateral"]
 Plane = Literal["arm", "moment"]
 Phase = Literal["ramp", "take-off", "zero fuel", "landing", "minimum at landing"]
 PHASES: tuple[Phase, ...] = ("ramp", "take-off", "zero fuel", "landing", "minimum at landing")
-
-
-@dataclass(frozen=True, slots=True)
-class Source:
-    """Where a figure stands: document, its revision and the page."""
-
-    document: str
-    revision: str
-    page: str
-
-    def __str__(self) -> str:
-        revision = f" rev {self.revision}" if self.revision else ""
-        return f"{self.document}{revision} p. {self.page}"
-
-
-@dataclass(frozen=True, slots=True)
-class Limit:
-    """A limit that was entered: a value in the basis's units, or `None` when the source shows there is none.
-
-    A limit that was not entered is the absence of a `Limit`, and makes a verdict `unresolved`.
-    """
-
-    value: Fraction | None
-    source: Source
 
 
 @dataclass(frozen=True, slots=True)

@@ -6,7 +6,8 @@ All must come out as printed before it can be approved.
 from dataclasses import dataclass
 from fractions import Fraction
 
-from fleet.basis import Basis, Envelope, Limit, Phase, SampleLoad
+from fleet.basis import Basis, Envelope, Phase, SampleLoad
+from fleet.sourced import Limit
 
 _LIMIT_OF: dict[Phase, str] = {
     "ramp": "ramp",

@@ -11,9 +11,9 @@ from decimal import Decimal
 from fractions import Fraction
 from typing import Any
 
-from fleet.basis import Limit, Source
 from fleet.conversion import in_unit
 from fleet.quantities import DENSITY_OF, MOMENT_OF, Quantity, Unit
+from fleet.sourced import Limit, Source
 from records.refusal import Fault
 from records.strict_json import pointer_step
 

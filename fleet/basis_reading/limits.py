@@ -2,8 +2,9 @@
 
 from typing import Any
 
-from fleet.basis import Limit, Limits
+from fleet.basis import Limits
 from fleet.basis_reading.findings import Findings
+from fleet.sourced import Limit
 
 FIELDS = ("ramp", "take_off", "zero_fuel", "landing", "minimum_flying")
 # The first may not lie above the second: nothing loaded to the first could ever be within the second.

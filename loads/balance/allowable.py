@@ -9,7 +9,8 @@ from collections.abc import Mapping
 from fractions import Fraction
 from typing import NamedTuple
 
-from fleet.basis import Limit, Phase
+from fleet.basis import Phase
+from fleet.sourced import Limit
 from loads.balance.aboard import Declared
 from loads.balance.result import Json, State
 from loads.balance.rounding import WEIGHT_PLACES, printed

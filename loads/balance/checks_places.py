@@ -5,7 +5,7 @@ test.
 from collections.abc import Iterable
 from fractions import Fraction
 
-from fleet.basis import Limit
+from fleet.sourced import Limit
 from loads.balance.aboard import Declared
 from loads.balance.exact import added
 from loads.balance.margins import Figure, Fix, at_most, below, not_entered

@@ -5,7 +5,8 @@ stated limits.
 from collections.abc import Mapping
 from fractions import Fraction
 
-from fleet.basis import Limit, Limits, Phase
+from fleet.basis import Limits, Phase
+from fleet.sourced import Limit
 from loads.balance.aboard import Declared, FuelPlan
 from loads.balance.margins import Figure, Fix, above, at_least, at_most, below
 from loads.balance.prepared import Prepared

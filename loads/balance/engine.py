@@ -2,4 +2,4 @@
 change.
 """
 
-ENGINE_VERSION = "2"
+ENGINE_VERSION = "3"

@@ -4,7 +4,7 @@ from collections.abc import Callable
 from fractions import Fraction
 from typing import NamedTuple
 
-from fleet.basis import Limit
+from fleet.sourced import Limit
 from loads.balance.result import Check
 from loads.balance.rounding import against_maximum, against_minimum, printed, room
 

@@ -7,20 +7,9 @@ from dataclasses import dataclass, field
 from datetime import UTC, datetime
 from fractions import Fraction
 
-from fleet.basis import (
-    Basis,
-    BurnStage,
-    Chord,
-    Configuration,
-    Envelope,
-    Limit,
-    Limits,
-    Place,
-    Source,
-    Tank,
-    TankTable,
-)
+from fleet.basis import Basis, BurnStage, Chord, Configuration, Envelope, Limits, Place, Tank, TankTable
 from fleet.quantities import Unit
+from fleet.sourced import Limit, Source
 from fleet.weighing import EmptyFigures
 from loads.balance.aboard import Declared, Flight, FuelPlan, Item, Outline, TankFuel
 from loads.balance.assess import assess

@@ -5,9 +5,10 @@ from typing import Any
 
 import pytest
 
-from fleet.basis import Basis, Limit, Source
+from fleet.basis import Basis
 from fleet.basis_reading import basis_from_text, read_basis
 from fleet.quantities import Unit
+from fleet.sourced import Limit, Source
 from records.refusal import Invalid
 from tests.pure.fleet.documents import (
     NAMES,

@@ -13,17 +13,16 @@ from fleet.basis import (
     Chord,
     Configuration,
     Envelope,
-    Limit,
     Limits,
     Phase,
     Place,
     Seat,
-    Source,
     Tank,
     TankTable,
     Zone,
 )
 from fleet.quantities import Unit
+from fleet.sourced import Limit, Source
 from fleet.weighing import EmptyFigures
 from loads.balance.assess import assess
 from loads.balance.declared import read_load
