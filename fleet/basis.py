@@ -22,7 +22,11 @@ PHASES: tuple[Phase, ...] = ("ramp", "take-off", "zero fuel", "landing", "minimu
 
 @dataclass(frozen=True, slots=True)
 class Seat:
-    """Where a person sits. Arms in the length unit of the basis."""
+    """Where a person sits. Arms in the length unit of the basis.
+
+    Whom a seat suits is stated where it matters: `row` it stands in, at an exit, with a restraint for an infant
+    or child (None: not stated), for an attendant.
+    """
 
     id: str
     name: str
@@ -31,6 +35,10 @@ class Seat:
     lateral_arm: Fraction
     maximum: Limit | None
     source: Source
+    row: str | None = None
+    exit_row: bool = False
+    infant_restraint: bool | None = None
+    attendant: bool = False
 
 
 @dataclass(frozen=True, slots=True)

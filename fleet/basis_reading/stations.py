@@ -10,7 +10,8 @@ def read_seats(findings: Findings) -> tuple[Seat, ...]:
     """Return the seats; an id used twice among seats and places is a fault."""
     findings.once(("seats", "places"))
     return tuple(
-        Seat(serves=entry["for"], **_station(findings, at, entry)) for at, entry in findings.entries("seats")
+        Seat(serves=entry["for"], **_station(findings, at, entry), **_suits(entry))
+        for at, entry in findings.entries("seats")
     )
 
 
@@ -29,6 +30,16 @@ def read_zones(findings: Findings) -> tuple[Zone, ...]:
         maximum = findings.limit(entry.get("maximum"), f"{at}/maximum")
         zones.append(Zone(entry["id"], entry["name"], tuple(entry["members"]), maximum))
     return tuple(zones)
+
+
+def _suits(entry: dict[str, Any]) -> dict[str, Any]:
+    """Return whom a seat suits, as far as it is stated."""
+    return {
+        "row": entry.get("row"),
+        "exit_row": entry.get("exit_row", False),
+        "infant_restraint": entry.get("infant_restraint"),
+        "attendant": entry.get("attendant", False),
+    }
 
 
 def _station(findings: Findings, at: str, entry: dict[str, Any]) -> dict[str, Any]:
