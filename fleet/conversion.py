@@ -7,9 +7,18 @@ Factors are exact by definition: 0.45359237 kg/lb and 25.4 mm/in (international 
 
 from fractions import Fraction
 
-from fleet.quantities import DENSITY_OF, DIMENSION_OF, MOMENT_OF, Dimension, Quantity, Unit
+from fleet.quantities import (
+    AREA_LOAD_OF,
+    DENSITY_OF,
+    DIMENSION_OF,
+    LINE_LOAD_OF,
+    MOMENT_OF,
+    Dimension,
+    Quantity,
+    Unit,
+)
 
-# In kilograms, millimetres and litres; densities and moments follow from their parts.
+# In kilograms, millimetres and litres; densities, moments and what a floor bears follow from their parts.
 _PLAIN: dict[Unit, Fraction] = {
     Unit.KG: Fraction(1),
     Unit.LB: Fraction("0.45359237"),
@@ -26,7 +35,11 @@ FACTOR: dict[Unit, Fraction] = (
     _PLAIN
     | {unit: _PLAIN[weight] / _PLAIN[volume] for (weight, volume), unit in DENSITY_OF.items()}
     | {unit: _PLAIN[weight] * _PLAIN[length] for (weight, length), unit in MOMENT_OF.items()}
+    | {unit: _PLAIN[weight] / _PLAIN[length] ** 2 for (weight, length), unit in AREA_LOAD_OF.items()}
+    | {unit: _PLAIN[weight] / _PLAIN[length] for (weight, length), unit in LINE_LOAD_OF.items()}
 )
+_PARTS_OF_AREA_LOAD = {unit: parts for parts, unit in AREA_LOAD_OF.items()}
+_PARTS_OF_LINE_LOAD = {unit: parts for parts, unit in LINE_LOAD_OF.items()}
 _PARTS_OF_DENSITY = {unit: parts for parts, unit in DENSITY_OF.items()}
 _RATIO: dict[tuple[Unit, Unit], Fraction] = {
     (given, wanted): FACTOR[given] / FACTOR[wanted]
@@ -68,6 +81,17 @@ def moment_unit(weight: Unit, length: Unit) -> Unit:
 def density_unit(weight: Unit, volume: Unit) -> Unit:
     """Return the unit of a weight over a volume, such as `lb/US gal`."""
     return DENSITY_OF[weight, volume]
+
+
+def length_under(unit: Unit) -> Unit:
+    """Return the length of a unit of what a floor bears: `ft` of `lb/ft2`, and of `lb/ft`.
+
+    Raises `UnitsDoNotMix` for any other unit.
+    """
+    parts = _PARTS_OF_AREA_LOAD.get(unit) or _PARTS_OF_LINE_LOAD.get(unit)
+    if parts is None:
+        raise UnitsDoNotMix(f"{unit.value} is no unit of what a floor bears")
+    return parts[1]
 
 
 def weight_of_volume(volume: Quantity, density: Quantity, unit: Unit) -> Fraction:

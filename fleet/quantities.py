@@ -27,6 +27,8 @@ class Dimension(Enum):
     VOLUME = "volume"
     DENSITY = "density"
     MOMENT = "moment"
+    AREA_LOAD = "weight on an area"
+    LINE_LOAD = "weight along a length"
 
 
 class Unit(Enum):
@@ -58,6 +60,26 @@ class Unit(Enum):
     LB_M = "lb m"
     LB_IN = "lb in"
     LB_FT = "lb ft"
+    KG_PER_MM2 = "kg/mm2"
+    KG_PER_CM2 = "kg/cm2"
+    KG_PER_M2 = "kg/m2"
+    KG_PER_IN2 = "kg/in2"
+    KG_PER_FT2 = "kg/ft2"
+    LB_PER_MM2 = "lb/mm2"
+    LB_PER_CM2 = "lb/cm2"
+    LB_PER_M2 = "lb/m2"
+    LB_PER_IN2 = "lb/in2"
+    LB_PER_FT2 = "lb/ft2"
+    KG_PER_MM = "kg/mm"
+    KG_PER_CM = "kg/cm"
+    KG_PER_M = "kg/m"
+    KG_PER_IN = "kg/in"
+    KG_PER_FT = "kg/ft"
+    LB_PER_MM = "lb/mm"
+    LB_PER_CM = "lb/cm"
+    LB_PER_M = "lb/m"
+    LB_PER_IN = "lb/in"
+    LB_PER_FT = "lb/ft"
 
 
 WEIGHTS = (Unit.KG, Unit.LB)
@@ -67,6 +89,9 @@ VOLUMES = (Unit.L, Unit.US_GAL, Unit.IMP_GAL)
 # parts.
 DENSITY_OF = {(w, v): Unit(f"{w.value}/{v.value}") for w in WEIGHTS for v in VOLUMES}
 MOMENT_OF = {(w, a): Unit(f"{w.value} {a.value}") for w in WEIGHTS for a in LENGTHS}
+# What a floor bears: a weight over a length squared, and over a length.
+AREA_LOAD_OF = {(w, a): Unit(f"{w.value}/{a.value}2") for w in WEIGHTS for a in LENGTHS}
+LINE_LOAD_OF = {(w, a): Unit(f"{w.value}/{a.value}") for w in WEIGHTS for a in LENGTHS}
 
 UNITS_OF: dict[Dimension, tuple[Unit, ...]] = {
     Dimension.WEIGHT: WEIGHTS,
@@ -74,6 +99,8 @@ UNITS_OF: dict[Dimension, tuple[Unit, ...]] = {
     Dimension.VOLUME: VOLUMES,
     Dimension.DENSITY: tuple(DENSITY_OF.values()),
     Dimension.MOMENT: tuple(MOMENT_OF.values()),
+    Dimension.AREA_LOAD: tuple(AREA_LOAD_OF.values()),
+    Dimension.LINE_LOAD: tuple(LINE_LOAD_OF.values()),
 }
 DIMENSION_OF: dict[Unit, Dimension] = {unit: d for d, units in UNITS_OF.items() for unit in units}
 _FIELDS = frozenset({"value", "unit"})

@@ -13,6 +13,7 @@ from fleet.conversion import (
     converted,
     density_unit,
     in_unit,
+    length_under,
     moment_unit,
     volume_of_weight,
     weight_of_volume,
@@ -27,6 +28,7 @@ _PINT_WORDS |= {
     "US gal": "US_liquid_gallon",
     "imp gal": "imperial_gallon",
 }
+_PINT_WORDS |= {f"{length}2": f"{_PINT_WORDS[length]} ** 2" for length in ("mm", "cm", "m", "in", "ft")}
 OUTSIDE = pint.UnitRegistry(non_int_type=Fraction)  # its definitions as exact rationals
 PAIRS = [(a, b) for a, b in product(Unit, Unit) if DIMENSION_OF[a] is DIMENSION_OF[b]]
 
@@ -138,6 +140,19 @@ def test_weights_and_volumes_are_not_taken_for_each_other() -> None:
 def test_moment_and_density_units_follow_from_their_parts() -> None:
     assert moment_unit(Unit.LB, Unit.IN) is Unit.LB_IN
     assert density_unit(Unit.KG, Unit.L) is Unit.KG_PER_L
+
+
+def test_what_a_floor_bears_is_a_weight_over_a_length_or_over_its_square() -> None:
+    # By hand: 1 lb/ft2 is 0.45359237 kg over 0.3048 m squared, 1 lb/ft that over 0.3048 m.
+    assert converted(Fraction(1), Unit.LB_PER_FT2, Unit.KG_PER_M2) == Fraction("0.45359237") / (
+        Fraction("0.3048") ** 2
+    )
+    assert converted(Fraction(144), Unit.LB_PER_FT2, Unit.LB_PER_IN2) == 1
+    assert converted(Fraction(12), Unit.LB_PER_FT, Unit.LB_PER_IN) == 1
+    assert converted(Fraction(1), Unit.KG_PER_CM2, Unit.KG_PER_M2) == 10_000
+    assert length_under(Unit.LB_PER_FT2) is length_under(Unit.LB_PER_FT) is Unit.FT
+    with pytest.raises(UnitsDoNotMix):
+        length_under(Unit.LB_FT)
 
 
 def _words(unit: Unit) -> str:
