@@ -1,8 +1,8 @@
 """The moment of a path over weight, as whole numbers, cut where a corner of an envelope lies.
 
 Over the weight W the moment of a stretch is (u0 + u1*W + u2*W**2) / unit, and a side of a trapezoid of an
-envelope is a line P*x + Q*W + R in arm or in moment. The arm is moment / W, so in either plane the margin to
-a side is A / W + B + C * W, with A, B and C rational.
+envelope is P*moment + A + B*W + C*W**2, whichever plane its edges are straight in. The arm is moment / W, so
+the margin to a side is A / W + B + C * W, with A, B and C rational.
 """
 
 from bisect import bisect_left
@@ -108,8 +108,7 @@ def _polynomial(curve: Curve) -> tuple[int, int, int, int]:
     )
 
 
-def side_of(piece: Piece, p: int, q: int, r: int, *, in_moment: bool) -> tuple[int, int, int]:
+def side_of(piece: Piece, p: int, a: int, b: int, c: int) -> tuple[int, int, int]:
     """Return A, B, C of the margin to one side, times |P| and the piece's unit."""
-    if in_moment:
-        return p * piece.u0 + r * piece.unit, p * piece.u1 + q * piece.unit, p * piece.u2
-    return p * piece.u0, p * piece.u1 + r * piece.unit, p * piece.u2 + q * piece.unit
+    unit = piece.unit
+    return p * piece.u0 + a * unit, p * piece.u1 + b * unit, p * piece.u2 + c * unit

@@ -65,12 +65,12 @@ def least_margin(curves: Sequence[Curve], shape: Shape) -> Nearest | Beyond:
         beyond += _beyond(curve, shape)
         for piece, trapezoids in pieces_of(curve, slabs):
             for sides in trapezoids:
-                found = _inside(piece, sides, between, in_moment=slabs.in_moment)
+                found = _inside(piece, sides, between)
                 if found is not None:
                     ends.append(found)
                     break
             else:
-                between.append(worst_outside(piece, trapezoids, in_moment=slabs.in_moment))
+                between.append(worst_outside(piece, trapezoids))
     if beyond:
         return max(beyond, key=lambda each: each.by)
     worst = _exact(_least(ends)) if ends else None
@@ -100,18 +100,14 @@ def _straight_inside(curve: Curve, slabs: Slabs) -> Reached | None:
     if bend or not 0 <= index < len(slabs.trapezoids) or slabs.levels[index] * over > bottom * slabs.scale:
         return None
     sides = slabs.trapezoids[index][0]
-    p, q, r, p2, q2, r2 = sides
-    if slabs.trapezoids[index][1:] or (not slabs.in_moment and (q > 0 or q2 > 0)):
+    p, a, b, c, p2, a2, b2, c2 = sides
+    if slabs.trapezoids[index][1:] or c > 0 or c2 > 0:
         return None
     least: Reached | None = None
     for weight, moment in ((top, top_moment), (bottom, bottom_moment)):
-        if slabs.in_moment:
-            forward, rear = p * moment + q * weight + r * over, p2 * moment + q2 * weight + r2 * over
-            unit = weight
-        else:
-            forward = (p * moment + r * weight) * over + q * weight * weight
-            rear = (p2 * moment + r2 * weight) * over + q2 * weight * weight
-            unit = weight * over
+        even, square, unit = over * over, weight * weight, weight * over
+        forward = (p * moment + b * weight) * over + a * even + c * square
+        rear = (p2 * moment + b2 * weight) * over + a2 * even + c2 * square
         if forward < 0 or rear < 0:
             return None
         aft = rear * p < -forward * p2
@@ -132,7 +128,7 @@ def _beyond(curve: Curve, shape: Shape) -> Iterator[Beyond]:
         yield Beyond(curve.stretch, weight, shape.lowest - weight)
 
 
-def _inside(piece: Piece, sides: Trapezoid, between: list[Nearest], *, in_moment: bool) -> Reached | None:
+def _inside(piece: Piece, sides: Trapezoid, between: list[Nearest]) -> Reached | None:
     """Return the least margin at the ends of a piece, or None when some of it is outside these sides.
 
     What is less between the ends is added to `between`, when all is inside.
@@ -140,8 +136,8 @@ def _inside(piece: Piece, sides: Trapezoid, between: list[Nearest], *, in_moment
     stretch, top, over, bottom, under = piece[:5]
     dips: list[Nearest] = []
     reached: list[Reached] = []
-    for aft, line in ((False, sides[:3]), (True, sides[3:])):
-        a, b, c = side_of(piece, *line, in_moment=in_moment)
+    for aft, line in ((False, sides[:4]), (True, sides[4:])):
+        a, b, c = side_of(piece, *line)
         at_top = (c * top + b * over) * top + a * over * over
         at_bottom = (c * bottom + b * under) * bottom + a * under * under
         if at_top < 0 or at_bottom < 0:

@@ -33,14 +33,14 @@ class Nearest(NamedTuple):
     floor: Fraction
 
 
-def worst_outside(piece: Piece, trapezoids: Sequence[Trapezoid], *, in_moment: bool) -> Nearest:
+def worst_outside(piece: Piece, trapezoids: Sequence[Trapezoid]) -> Nearest:
     """Return the worst point of a piece that is not inside one trapezoid all along."""
     margins = []
     for sides in trapezoids:
         pair = []
-        for line in (sides[:3], sides[3:]):
+        for line in (sides[:4], sides[4:]):
             each = abs(line[0]) * piece.unit
-            a, b, c = side_of(piece, *line, in_moment=in_moment)
+            a, b, c = side_of(piece, *line)
             pair.append((Fraction(a, each), Fraction(b, each), Fraction(c, each)))
         margins.append(pair)
     top, bottom = Fraction(piece.top, piece.over), Fraction(piece.bottom, piece.under)

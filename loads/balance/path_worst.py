@@ -118,10 +118,8 @@ def _settled(bound: Bound, point: Nearest | Beyond, axis: Axis) -> Worst:
             if not outside or not point.weight.factor or not shape.holds(weight, moment):
                 break
         bits *= 2
-    over = weight if shape.slabs.in_moment else Fraction(1)
     low, high = (
-        Fraction(-(q * weight.numerator + r * weight.denominator), p * weight.denominator) / over
-        for p, q, r in (point.sides[:3], point.sides[3:])
+        -(Fraction(a) / weight + b + c * weight) / p for p, a, b, c in (point.sides[:4], point.sides[4:])
     )
     return Worst(bound, stretch, knot, moment / weight, low, high, point.margin.floor(BITS), point.aft)
 
