@@ -7,6 +7,8 @@ ENTER_PERSON = Kind("enter-person", "entered a person")
 GRANT_DUTY = Kind("grant-duty", "granted a duty")
 END_DUTY = Kind("end-duty", "ended a duty")
 CHANGE_PASSWORD = Kind("change-password", "changed a password")
+CHANGE_MAIL = Kind("change-mail", "changed a mail address")
+LET_CHOOSE_PASSWORD = Kind("let-choose-password", "made a link to choose a new password")
 ISSUE_TOKEN = Kind("issue-token", "issued a token")
 REVOKE_TOKEN = Kind("revoke-token", "revoked a token")
 ROTATE_TOKEN = Kind("rotate-token", "made a new secret for a token")
@@ -25,6 +27,8 @@ KINDS = (
     GRANT_DUTY,
     END_DUTY,
     CHANGE_PASSWORD,
+    CHANGE_MAIL,
+    LET_CHOOSE_PASSWORD,
     ISSUE_TOKEN,
     REVOKE_TOKEN,
     ROTATE_TOKEN,

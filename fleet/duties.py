@@ -30,6 +30,7 @@ ROLES: tuple[Role, ...] = get_args(Role)
 _OWN = frozenset(
     {
         acts.CHANGE_PASSWORD.name,
+        acts.CHANGE_MAIL.name,
         acts.END_SESSIONS.name,
         acts.ISSUE_TOKEN.name,
         acts.ROTATE_TOKEN.name,
@@ -44,6 +45,7 @@ _PEOPLE = frozenset(
         acts.GRANT_DUTY.name,
         acts.END_DUTY.name,
         acts.DEACTIVATE_PERSON.name,
+        acts.LET_CHOOSE_PASSWORD.name,
     }
 )
 _SETTLES = frozenset({acts.CHANGE_SETTINGS.name})

@@ -19,6 +19,7 @@ class NewPerson:
     login: str
     name: str
     password: str
+    mail: str = ""
     reason: str = ""
 
 
@@ -106,6 +107,11 @@ def read_rotation(document: object) -> NewSecret:
 def read_password(document: object) -> NewPassword:
     """This function will return the password change in a document; raises Invalid with all faults."""
     return NewPassword(**_sound("password-1", document))
+
+
+def read_mail(document: object) -> str:
+    """This function will return the mail address in a document; raises Invalid with all faults."""
+    return str(_sound("mail-1", document)["mail"])
 
 
 def _sound(schema: str, document: object) -> dict[str, Any]:

@@ -1,6 +1,5 @@
 """Reads a change of an operator's settings: plain values, every fault by its pointer."""
 
-import re
 from collections.abc import Mapping
 from dataclasses import dataclass
 from datetime import datetime
@@ -9,6 +8,7 @@ from typing import Any, Final
 
 from fleet.document_schema import shape_faults
 from fleet.entering import plausible
+from fleet.mail_address import mail_fault
 from fleet.quantities import number_or_fault
 from records.refusal import Fault, Invalid
 
@@ -17,13 +17,6 @@ from records.refusal import Fault, Invalid
 MOST_WEIGHT: Final = Decimal(1_000_000)
 MOST_PERCENT: Final = Decimal(100)
 _PLACES: Final = -3
-# One mailbox and one domain of at least two labels; display names, comments and quoting are left out on
-# purpose (RFC 5321 allows them; nobody types them into such a form).
-_MAIL: Final = re.compile(
-    r"[A-Za-z0-9.!#$%&'*+/=?^_`{|}~-]{1,64}@(?:[A-Za-z0-9](?:[A-Za-z0-9-]{0,61}[A-Za-z0-9])?\.)+"
-    r"[A-Za-z](?:[A-Za-z0-9-]{0,61}[A-Za-z0-9])",
-    re.ASCII,
-)
 _AS_THEY_ARE: Final = (
     "prepare_and_accept_by_one",
     "estimates_may_be_signed",
@@ -97,9 +90,6 @@ def _figure(given: object, where: str, below: Decimal, faults: list[Fault]) -> s
 
 
 def _addresses(given: list[str], faults: list[Fault]) -> list[str]:
-    for place, address in enumerate(given):
-        if not _MAIL.fullmatch(address):
-            faults.append(
-                Fault(f"/operations_mail/{place}", "mail-form", "write one address, like ops@example.org")
-            )
+    found = (mail_fault(address, f"/operations_mail/{place}") for place, address in enumerate(given))
+    faults += [fault for fault in found if fault is not None]
     return list(given)

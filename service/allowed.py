@@ -30,6 +30,8 @@ _NEEDS_A_PERSON: Final = SIGNATURES | {
     fleet.acts.GRANT_DUTY.name,
     fleet.acts.END_DUTY.name,
     fleet.acts.CHANGE_PASSWORD.name,
+    fleet.acts.CHANGE_MAIL.name,
+    fleet.acts.LET_CHOOSE_PASSWORD.name,
     fleet.acts.ISSUE_TOKEN.name,
     fleet.acts.REVOKE_TOKEN.name,
     fleet.acts.ROTATE_TOKEN.name,
@@ -42,6 +44,8 @@ _NEEDS_A_PERSON: Final = SIGNATURES | {
 _NEEDS_A_SESSION: Final = frozenset(
     {
         fleet.acts.CHANGE_PASSWORD.name,
+        fleet.acts.CHANGE_MAIL.name,
+        fleet.acts.LET_CHOOSE_PASSWORD.name,
         fleet.acts.END_SESSIONS.name,
         fleet.acts.ISSUE_TOKEN.name,
         fleet.acts.ROTATE_TOKEN.name,

@@ -54,7 +54,8 @@ def sign_in(request: HttpRequest) -> HttpResponse:
     password.
     """
     if request.method != "POST":
-        return render(request, "service/sign_in.html", {"next": _where_next(request)})
+        context = {"next": _where_next(request), "chosen": "chosen" in request.GET}
+        return render(request, "service/sign_in.html", context)
     typed = request.POST.get("login", "")
     name = typed.strip().lower()
     try:

@@ -22,7 +22,7 @@ from service.problems import is_api, refusal, refused_page
 
 # Asked by monitors, and by whoever finds out why nothing else answers.
 EXEMPT: Final = frozenset({"health", "api-health", "alive", "metrics"})
-SIGNING_IN: Final = frozenset({"sign-in"})
+SIGNING_IN: Final = frozenset({"sign-in", "new-password"})
 # Whatever tries the password of somebody who is signed in.
 SIGNING: Final = frozenset(
     {

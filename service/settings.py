@@ -187,6 +187,8 @@ WHITENOISE_USE_FINDERS = True
 WHITENOISE_AUTOREFRESH = False
 
 # Mail about accepted loads that went stale; without a server none is promised, and pages and events tell.
+# How long a link to choose a new password serves, in seconds.
+PASSWORD_RESET_TIMEOUT = 4 * 3600
 EMAIL_HOST = env.text("MAIL_HOST", "")
 EMAIL_PORT = env.whole("MAIL_PORT", 587, low=1, high=65535)
 EMAIL_HOST_USER = env.text("MAIL_USER", "")

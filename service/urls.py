@@ -2,7 +2,7 @@
 
 from django.urls import URLPattern, URLResolver, include, path
 
-from service import pages
+from service import new_password, pages
 from service.docs import docs, openapi
 from service.figures import metrics
 from service.health import Health, alive
@@ -21,6 +21,7 @@ urlpatterns = [
     path("metrics", metrics, name="metrics"),
     path("docs", docs, name="docs"),
     path("sign-in", pages.sign_in, name="sign-in"),
+    path("new-password/<int:person>/<str:code>", new_password.new_password, name="new-password"),
     path("sign-out", pages.sign_out, name="sign-out"),
     path("", include("fleet.web.urls")),
     path("", include("loads.web.urls")),

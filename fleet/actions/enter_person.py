@@ -7,6 +7,7 @@ from fleet import acts
 from fleet.actions.constraint_refusals import refused_as
 from fleet.actions.passwords import hash_of_new
 from fleet.actions.row_faults import checked
+from fleet.mail_address import mail_fault
 from fleet.models import Operator, Person
 from fleet.models.rows import new_number
 from records.act import act
@@ -23,21 +24,31 @@ LOGIN_REFUSALS = {
 
 
 def enter_person(
-    actor: Actor, operator: Operator, *, login: str, name: str, password: str, reason: str = ""
+    actor: Actor,
+    operator: Operator,
+    *,
+    login: str,
+    name: str,
+    password: str,
+    mail: str = "",
+    reason: str = "",
 ) -> Person:
     """This function will enter a person with a first password.
 
-    Raises Invalid for a login that is taken or not plain, a blank name and a weak password; NotKnown for
-    another operator's.
+    Raises Invalid for a login that is taken or not plain, a blank name, a weak password and a wrong mail
+    address; NotKnown for another operator's.
     """
     if actor.operator != operator.code:
         raise NotKnown("operator-not-known", "No such operator.")
+    if mail and (fault := mail_fault(mail, "/mail")):
+        raise Invalid(fault)
     person = Person(
         id=new_number(Person),
         operator=operator,
         login=login.lower(),
         name=name,
         password=hash_of_new(password),
+        mail=mail,
         salt=secrets.token_bytes(32),
     )
     checked(person)

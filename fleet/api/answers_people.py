@@ -17,6 +17,7 @@ def person_line(person: Person, now: datetime) -> dict[str, Any]:
         "key": f"person:{person.pk}",
         "login": person.login,
         "name": person.name,
+        "mail": person.mail,
         "active": person.is_active,
         "roles": list(roles_of(person, now)),
     }

@@ -7,6 +7,7 @@ from rest_framework import serializers
 from rest_framework.request import Request
 from rest_framework.views import APIView
 
+from fleet.actions.change_mail import change_mail
 from fleet.actions.change_password import change_password
 from fleet.actions.confirm_password import confirm_password, refuse_locked_out
 from fleet.actions.end_sessions import end_sessions
@@ -14,7 +15,7 @@ from fleet.api.answers import shown
 from fleet.api.documents import described
 from fleet.api.shapes_people import WhoAnswer
 from fleet.models import Person
-from fleet.people_reading import read_password
+from fleet.people_reading import read_mail, read_password
 from records.api.asking import actor_of, document_of, operator_of, parameters_of
 from records.api.describing import problems, problems_of_storing
 from records.api.once import Answer, once
@@ -82,6 +83,26 @@ class OwnPasswordEndpoint(APIView):
             raise
         update_session_auth_hash(request, person)
         return answer
+
+
+class OwnMailEndpoint(APIView):
+    """One's own mail address."""
+
+    @extend_schema(
+        operation_id="change_mail",
+        summary="Change one's own mail address",
+        request=described("mail-1"),
+        responses={200: Done, **problems_of_storing()},
+    )
+    def post(self, request: Request) -> HttpResponse:
+        """Keeps where the person signed in is told what concerns them; an empty text takes it out."""
+        person, document = _signed_in(request), document_of(request)
+
+        def work() -> Answer:
+            change_mail(actor_of(request), person, read_mail(document))
+            return 200, {}, {"done": "The mail address is kept."}
+
+        return once(request, work)
 
 
 class SessionsEndingEndpoint(APIView):

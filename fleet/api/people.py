@@ -56,6 +56,7 @@ class PeopleEndpoint(APIView):
                 login=new.login,
                 name=new.name,
                 password=new.password,
+                mail=new.mail,
                 reason=new.reason,
             )
             return 201, {"Location": f"/api/v1/people/{person.pk}"}, person_answer(person, timezone.now())

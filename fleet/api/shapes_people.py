@@ -18,6 +18,7 @@ class PersonLine(serializers.Serializer[object]):
     key = serializers.CharField()
     login = serializers.CharField()
     name = serializers.CharField()
+    mail = serializers.CharField(help_text="Empty: none is known.")
     active = serializers.BooleanField()
     roles = serializers.ListField(child=serializers.CharField())
 

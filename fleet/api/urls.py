@@ -9,6 +9,7 @@ _ONE = "aircraft/<str:registration>"
 urlpatterns = [
     path("me", own.OwnEndpoint.as_view()),
     path("me/password", own.OwnPasswordEndpoint.as_view(), name="api-own-password"),
+    path("me/mail", own.OwnMailEndpoint.as_view()),
     path("me/sessions/ending", own.SessionsEndingEndpoint.as_view()),
     path("people", people.PeopleEndpoint.as_view()),
     path("people/<int:person>", people.OnePersonEndpoint.as_view()),

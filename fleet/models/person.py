@@ -19,7 +19,7 @@ class People(BaseUserManager["Person"]):
 
 
 class Person(AbstractBaseUser):
-    """A person. `login` (lower case) and `name` are personal: the trail holds salted digests of them only."""
+    """A person. `login` (lower case), `name` and `mail` are personal: the trail holds only their digests."""
 
     # A sign-in is not a change of a business row, so there is nothing to keep here.
     last_login = None  # Django's own way to drop the inherited column
@@ -28,12 +28,14 @@ class Person(AbstractBaseUser):
     operator = models.ForeignKey(Operator, on_delete=models.PROTECT, related_name="people")
     login = models.CharField(max_length=60)
     name = models.CharField(max_length=120)
+    mail = models.CharField(max_length=254, blank=True, default="")
     salt = models.BinaryField()
     is_active = models.BooleanField(default=True)
     # Raised to end every session at once: each session carries a digest of password hash and series.
     session_series = models.PositiveIntegerField(default=0)
 
     USERNAME_FIELD = "login"
+    EMAIL_FIELD = "mail"
     REQUIRED_FIELDS: ClassVar[list[str]] = []
     objects = People()
 

@@ -7,10 +7,11 @@ from django.utils import timezone
 from django.views.decorators.debug import sensitive_post_parameters
 from django.views.decorators.http import require_POST, require_safe
 
+from fleet.actions.change_mail import change_mail
 from fleet.actions.change_password import change_password
 from fleet.actions.confirm_password import confirm_password
 from fleet.actions.end_sessions import end_sessions
-from fleet.people_reading import read_password
+from fleet.people_reading import read_mail, read_password
 from fleet.queries.duties import roles_of
 from fleet.web.access_log import WORDS
 from fleet.web.asking import faults_by_input, local, person_of_page, zone_of
@@ -21,6 +22,7 @@ from records.web.asking import actor_of, operator_of, signed_in
 _SHOWN_EVENTS = 10
 _DONE = {
     "password": "The password is changed, and every other session of yours has ended.",
+    "mail": "The mail address is kept.",
     "sessions": "Every other session of yours has ended.",
 }
 
@@ -54,6 +56,18 @@ def password(request: HttpRequest) -> HttpResponse:
 
 @require_POST
 @signed_in
+def mail(request: HttpRequest) -> HttpResponse:
+    """This function will keep the mail address typed; an empty one takes it out."""
+    try:
+        typed = read_mail({"mail": request.POST.get("mail", "").strip()})
+        change_mail(actor_of(request), person_of_page(request), typed)
+    except Refused as refusal:
+        return _page(request, refusal)
+    return HttpResponseRedirect(f"{resolve_url('own')}?done=mail")
+
+
+@require_POST
+@signed_in
 def sessions(request: HttpRequest) -> HttpResponse:
     """This function will end every session of the person but the one that asked."""
     person = end_sessions(actor_of(request), person_of_page(request))
@@ -67,6 +81,7 @@ def _page(request: HttpRequest, refusal: Refused | None = None) -> HttpResponse:
     context = {
         "login": person.login,
         "name": person.name,
+        "mail": request.POST.get("mail", person.mail),
         "roles": ", ".join(roles_of(person, timezone.now())),
         "events": [
             {"at": local(one.at, zone), "what": WORDS[one.what], "origin": one.origin[:8]} for one in events

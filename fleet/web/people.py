@@ -1,6 +1,6 @@
 """The pages of people: the list with a form for a new one, and one person with their duties."""
 
-from collections.abc import Callable
+from collections.abc import Callable, Mapping
 from datetime import datetime
 from typing import Any
 from zoneinfo import ZoneInfo
@@ -16,6 +16,7 @@ from fleet.actions.deactivate_person import deactivate_person
 from fleet.actions.end_duty import end_duty
 from fleet.actions.enter_person import enter_person
 from fleet.actions.grant_duty import grant_duty
+from fleet.actions.mail_link import mail_goes
 from fleet.duties import READ_PEOPLE, ROLES
 from fleet.models import Person
 from fleet.people_reading import read_duty, read_person, read_reason
@@ -26,7 +27,7 @@ from records.actor import refuse_without_leave
 from records.refusal import Refused
 from records.web.asking import actor_of, operator_of, signed_in
 
-_TYPED = ("login", "name", "password", "reason")
+_TYPED = ("login", "name", "mail", "password", "reason")
 
 
 @sensitive_post_parameters("password")
@@ -45,6 +46,7 @@ def people(request: HttpRequest) -> HttpResponse:
             login=new.login,
             name=new.name,
             password=new.password,
+            mail=new.mail,
             reason=new.reason,
         )
     except Refused as refusal:
@@ -56,7 +58,7 @@ def people(request: HttpRequest) -> HttpResponse:
 @signed_in
 def one_person(request: HttpRequest, person: int) -> HttpResponse:
     """This function will show one person with every duty granted or ended."""
-    return _page(request, person)
+    return person_page(request, person)
 
 
 @require_POST
@@ -92,7 +94,7 @@ def _done(request: HttpRequest, number: int, work: Callable[[Person], None]) -> 
     try:
         work(whose)
     except Refused as refusal:
-        return _page(request, number, refusal)
+        return person_page(request, number, refusal)
     return HttpResponseRedirect(resolve_url("person", number))
 
 
@@ -109,7 +111,10 @@ def _list(request: HttpRequest, refusal: Refused | None = None) -> HttpResponse:
     return render(request, "fleet/people.html", context, status=refusal.status if refusal else 200)
 
 
-def _page(request: HttpRequest, number: int, refusal: Refused | None = None) -> HttpResponse:
+def person_page(
+    request: HttpRequest, number: int, refusal: Refused | None = None, link: Mapping[str, Any] | None = None
+) -> HttpResponse:
+    """This function will show the page of one person; `link`: one to choose a password, made just now."""
     actor, now, zone = actor_of(request), timezone.now(), zone_of(request)
     refuse_without_leave(actor, READ_PEOPLE)
     person = person_of(operator_of(request), number)
@@ -124,6 +129,11 @@ def _page(request: HttpRequest, number: int, refusal: Refused | None = None) -> 
         "may_deactivate": person.is_active
         and acts.DEACTIVATE_PERSON.name in actor.may
         and actor.person != person.pk,
+        "may_let_choose": person.is_active
+        and acts.LET_CHOOSE_PASSWORD.name in actor.may
+        and actor.person != person.pk,
+        "mail_goes": mail_goes(),
+        "link": link,
         "refusal": refusal,
     }
     return render(request, "fleet/person.html", context, status=refusal.status if refusal else 200)
@@ -134,6 +144,7 @@ def _line(person: Person, now: datetime) -> dict[str, Any]:
         "number": person.pk,
         "login": person.login,
         "name": person.name,
+        "mail": person.mail,
         "active": person.is_active,
         "roles": ", ".join(roles_of(person, now)) or "none",
     }

@@ -1,4 +1,4 @@
-"""The mail about a stale load. It names no person; who is to be told stands in the operator's settings."""
+"""The mail about a stale load, to its pilot in command and to operations. It names no person."""
 
 from datetime import UTC
 from uuid import UUID
@@ -14,19 +14,20 @@ Load {reference} leg {leg} of {registration}, {origin} to {destination}, planned
 ({utc} UTC), was accepted, and since then its {changed} changed. The accepted figures no longer rest on
 what is in force.
 
-Tell the pilot in command. Before departure the load is revised, prepared and accepted anew.
+The pilot in command must know. Before departure the load is revised, prepared and accepted anew.
 
 The load: /loads/{load}
 """
 
 
 def mail_stale_notice(notice: UUID) -> int:
-    """This function will mail a notice to the addresses in the operator's settings now; returns how many.
+    """This function will mail a notice to pilot and operations, as their addresses are now; returns how
+    many.
 
     A worker that ends between sending and noting it sends again, under the same Message-ID.
     """
-    row = StaleNotice.objects.select_related("load__aircraft").get(id=notice)
-    addresses = mail_addresses(row.operator_id)
+    row = StaleNotice.objects.select_related("load__aircraft", "load__pilot").get(id=notice)
+    addresses = mail_addresses(row.load)
     if not addresses:
         return 0
     load = row.load

@@ -1,4 +1,4 @@
-"""Telling at once that an accepted load is stale: a notice on its page, an event, and mail to operations.
+"""Telling at once that an accepted load is stale: a notice on its page, an event, mail to those concerned.
 
 Told once for each load and pair of versions: the row that says so is unique, and event and mail are promised
 in the act that writes it. Asked after every approval, and before a manifest is filed: an acceptance that
@@ -16,7 +16,7 @@ from fleet.queries.settings import settings_at
 from loads.actions.announcing import announce_stale
 from loads.acts import TELL_STALE
 from loads.duties import service_at_work
-from loads.models import StaleNotice
+from loads.models import Load, StaleNotice
 from loads.queries.current import load_of
 from loads.queries.overtaken import accepted_loads, database_time, is_told, overtaken
 from records import outbox
@@ -59,7 +59,7 @@ def _tell(operator: str, load: UUID, caused_by: UUID | None) -> StaleNotice:
         found = overtaken(current, entry.at)
         if found is None:
             raise _nothing_to_tell()
-        addresses = mail_addresses(operator)
+        addresses = mail_addresses(current.load)
         notice = StaleNotice.objects.create(
             operator_id=entry.chain,
             load=current.load,
@@ -81,9 +81,13 @@ def _nothing_to_tell() -> StepRefused:
     return StepRefused("nothing-to-tell", "It was told already, or the load moved on.")
 
 
-def mail_addresses(operator: str) -> tuple[str, ...]:
-    """This function will return where the operator wants such mail, nothing when no mail server is set."""
+def mail_addresses(load: Load) -> tuple[str, ...]:
+    """This function will return where such mail goes: the pilot in command's own address, if one is known,
+    and those of operations; nothing when no mail server is set.
+    """
     if not settings.EMAIL_HOST:
         return ()
     now = database_time()
-    return settings_at(operator, now, now).operations_mail
+    pilot = load.pilot
+    own = (pilot.mail,) if pilot is not None and pilot.is_active and pilot.mail else ()
+    return tuple(dict.fromkeys(own + settings_at(load.operator_id, now, now).operations_mail))

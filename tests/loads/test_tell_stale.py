@@ -6,6 +6,7 @@ import pytest
 from django.core import mail
 from django.utils import timezone
 
+from fleet.actions.change_mail import change_mail
 from fleet.events import VERSIONS_CHANGED
 from loads.actions.depart_load import depart_load
 from loads.actions.file_manifest import file_manifest
@@ -213,3 +214,15 @@ def test_what_is_not_stale_is_not_told(people) -> None:
     current = _flying_soon(people)
 
     assert tell_if_stale(people.operator.code, current.load.id, None) is None
+
+
+def test_the_pilot_in_command_is_mailed_at_their_own_address(people) -> None:
+    change_mail(actor(people.pilot), people.pilot, "r.amani@example.org")
+    current = _flying_soon(people)
+    tell_of_stale_loads(_new_weight(people, current))
+
+    mail_stale(str(StaleNotice.objects.get().id))
+
+    (message,) = mail.outbox
+    assert message.to[0] == "r.amani@example.org"
+    assert len(message.to) == StaleNotice.objects.get().mail_addresses == 2

@@ -146,6 +146,7 @@ SAMPLES: Final[Mapping[str, Callable[[World], Documents]]] = {
         {"meaning": "prepared", "digest": signing(world.loads["open"]).digest, "password": PASSWORD},
     ),
     f"{_LOAD}/withdrawal": _one(reason="not flown"),
+    "/api/v1/me/mail": _one(mail="r.amani@example.org"),
     "/api/v1/me/password": _one(current=PASSWORD, new="slow-copper-meadow-4"),
     "/api/v1/people": _one(
         login="new.person", name="N. Person", password="slow-copper-meadow-4", reason="joined"

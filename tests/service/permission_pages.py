@@ -3,6 +3,8 @@
 from collections.abc import Callable
 from typing import Any, Final
 
+from django.contrib.auth.tokens import default_token_generator
+
 from loads.queries.declaration import declared_now
 from loads.web.form import typed_of
 from tests.cast import PASSWORD
@@ -104,6 +106,12 @@ SETTINGS: Final = {
 }
 
 
+def _by_link(world: World, _role: str) -> Sent:
+    person = world.by_role["pilot"]
+    words = {"new": NEW_PASSWORD["new"], "again": NEW_PASSWORD["again"]}
+    return Sent(at={"person": str(person.pk), "code": default_token_generator.make_token(person)}, body=words)
+
+
 def _plain(body: dict[str, Any]) -> Send:
     return lambda _world, _role: Sent(body=body)
 
@@ -156,6 +164,17 @@ PAGES: tuple[Row, ...] = (
         named("person", body={"reason": "left"}),
         foreign=404,
     ),
+    # The page itself answers, with the link this once.
+    Row(
+        "POST",
+        "/people/{person}/password-link",
+        MANAGE,
+        200,
+        named("person", body={"reason": "forgotten"}),
+        foreign=404,
+    ),
+    Row("GET", "/new-password/{person}/{code}", EVERYBODY, 200, _by_link),
+    Row("POST", "/new-password/{person}/{code}", EVERYBODY, DONE, _by_link),
     Row("GET", "/tokens", EVERY, 200),
     # These two answer with the page itself, on which the secret shows this once.
     Row("POST", "/tokens", OWN, 200, _plain({"label": "another", "scopes": "read", "days": "3"})),
@@ -163,6 +182,7 @@ PAGES: tuple[Row, ...] = (
     Row("POST", "/tokens/{token}/revocation", OWN, DONE, _token, foreign=404),
     Row("GET", "/me", EVERY, 200),
     Row("POST", "/me/password", OWN, DONE, _plain(NEW_PASSWORD)),
+    Row("POST", "/me/mail", OWN, DONE, _plain({"mail": "r.amani@example.org"})),
     Row("POST", "/me/sessions", OWN, DONE),
     Row("GET", "/access-log", LOOK_AT_PEOPLE, 200),
     Row("GET", "/settings", EVERY, 200),

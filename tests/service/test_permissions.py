@@ -132,7 +132,7 @@ def test_each_role_gets_what_the_table_says_by_each_way(worlds, row):
     for role, way in cells(row, home):
         with undone():
             answer = ask(row, row.send(home, role), home, role, way)
-            status, signs_in = answer.status_code, answer.get("Location", "").startswith("/sign-in?")
+            status, signs_in = answer.status_code, answer.get("Location", "").startswith("/sign-in?next=")
             done = Act.objects.count() - acts
         due = wanted(row, role, way)
         if (
