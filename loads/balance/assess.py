@@ -29,8 +29,12 @@ from loads.balance.result import Check, Result, State, verdict_of
 from loads.balance.sumsheet import Aboard, all_lines, lines_without_fuel
 
 
-def assess(declared: Declared | Outline, basis: Basis | None, empty: EmptyFigures | None) -> Result:
+def assess(
+    declared: Declared | Outline, basis: Basis | None, empty: EmptyFigures | None, *, advised: bool = True
+) -> Result:
     """Return the result of a load against the versions in force; without one of them it is `unresolved`.
+
+    Without being `advised`, no single move is looked for: the checks are the same, without that sentence.
 
     A load can be declared in full only against a basis, so without one its outline is enough. Phases that
     cannot be known (no empty weight, an unknown weight, fuel off a tank's table) are not in the result:
@@ -51,14 +55,14 @@ def assess(declared: Declared | Outline, basis: Basis | None, empty: EmptyFigure
         standing,
         *weight_knowledge(declared),
         persons_check(declared),
-        *_checks(declared, states, burn, ready),
+        *_checks(declared, states, burn, ready, advised=advised),
         *off_table,
         *nothing_left,
     )
     lines = all_lines(aboard, declared.fuel, fuel, states, ready)
     verdict = verdict_of(checks)
     document = report(Assessed(declared, aboard, lines, states, fuel, burn, checks), ready)
-    return Result(verdict, checks, tuple(states.values()), lines, document)
+    return Result(verdict, checks, tuple(states.values()), lines, document, burn)
 
 
 def _fuel(declared: Declared, ready: Prepared) -> tuple[dict[Phase, FuelState] | None, tuple[Check, ...]]:
@@ -90,12 +94,12 @@ def _states(
 
 
 def _checks(
-    declared: Declared, states: dict[Phase, State], burn: Burn | None, ready: Prepared
+    declared: Declared, states: dict[Phase, State], burn: Burn | None, ready: Prepared, *, advised: bool
 ) -> list[Check]:
     held = held_by(declared)
     found: list[Check] = []
     if states and burn is not None:
-        advice = cache(lambda: cg_advice(declared, states, burn, held, ready))
+        advice = cache(lambda: cg_advice(declared, states, burn, held, ready) if advised else "")
         found += weight_checks(declared, states, ready)
         found += balance_checks(states, ready, advice)
         found += path_checks(burn, states, ready, advice)

@@ -8,9 +8,12 @@ personal name stands in a result: its lines name seats and places.
 
 from dataclasses import dataclass
 from fractions import Fraction
-from typing import Literal, NamedTuple
+from typing import TYPE_CHECKING, Literal, NamedTuple
 
 from fleet.basis import Phase
+
+if TYPE_CHECKING:  # the path is made of states, so it cannot be imported before them
+    from loads.balance.path_worst import Burn
 
 Verdict = Literal["within", "outside", "unresolved"]
 Outcome = Literal["pass", "fail", "unresolved", "advisory"]
@@ -98,8 +101,8 @@ class Line(NamedTuple):
 
 @dataclass(frozen=True, slots=True)
 class Result:
-    """What an assessment found. `states` and `lines` are exact; `document` holds the printed parts, ready
-    made.
+    """What an assessment found. `states`, `lines` and `burn` are exact (`burn`: None where not known);
+    `document` holds the printed parts, ready made.
     """
 
     verdict: Verdict
@@ -107,6 +110,7 @@ class Result:
     states: tuple[State, ...]
     lines: tuple[Line, ...]
     document: Json
+    burn: "Burn | None" = None
 
     def state(self, phase: Phase) -> State:
         """Return the aircraft at a phase. Raises `KeyError` when it was not computed."""
