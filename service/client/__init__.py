@@ -10,6 +10,8 @@ Nothing in this folder imports anything of the service: copy it into your own pr
 
 from service.client.events import Message, MessageRefused, read_message
 from service.client.exchange import Patience
+from service.client.late import LatePreview, Note
+from service.client.people import Person, Settings, Token, Who
 from service.client.problems import (
     AnswerUnusable,
     Fault,
@@ -42,16 +44,20 @@ from service.client.shapes import (
     Version,
 )
 from service.client.tarebook import Tarebook
+from service.client.trail import Act, Entry
 
 __all__ = (
+    "Act",
     "Aircraft",
     "AnswerUnusable",
     "Assessment",
     "Check",
     "Delivery",
     "EmptyWeights",
+    "Entry",
     "Fault",
     "Invalid",
+    "LatePreview",
     "Load",
     "LoadLine",
     "ManifestNumber",
@@ -61,19 +67,24 @@ __all__ = (
     "NotAllowed",
     "NotKnown",
     "NotSignedIn",
+    "Note",
     "Paper",
     "Patience",
+    "Person",
     "Refused",
     "ServerFailed",
+    "Settings",
     "StateNotSent",
     "StepRefused",
     "Subscription",
     "Tarebook",
     "TarebookError",
+    "Token",
     "TooLarge",
     "TooSoon",
     "Unanswered",
     "Unreadable",
     "Version",
+    "Who",
     "read_message",
 )

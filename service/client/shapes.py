@@ -1,13 +1,11 @@
 """What the server answers, as frozen values. `body` has the whole answer; figures are decimal texts."""
 
-from collections.abc import Callable, Mapping
+from collections.abc import Mapping
 from dataclasses import dataclass, field
-from typing import Any, TypeVar
+from typing import Any
 
 from service.client.exchange import Answer
-from service.client.problems import AnswerUnusable
-
-Shape = TypeVar("Shape")
+from service.client.reading import read
 
 
 @dataclass(frozen=True, slots=True)
@@ -138,13 +136,13 @@ class Delivery:
 
 def assessment_in(answer: Answer) -> Assessment:
     """This function will read a computed load."""
-    return _read(lambda body: Assessment(**_computed(body)), answer.document())
+    return read(lambda body: Assessment(**_computed(body)), answer.document())
 
 
 def load_in(answer: Answer) -> Load:
     """This function will read a stored load."""
 
-    def read(body: Mapping[str, Any]) -> Load:
+    def one_load(body: Mapping[str, Any]) -> Load:
         manifest = body["manifest"]
         return Load(
             **_computed(body),
@@ -156,13 +154,13 @@ def load_in(answer: Answer) -> Load:
             replayed=answer.replayed,
         )
 
-    return _read(read, answer.document())
+    return read(one_load, answer.document())
 
 
 def line_in(body: Mapping[str, Any]) -> LoadLine:
     """This function will read one line of the list of loads."""
 
-    def read(body: Mapping[str, Any]) -> LoadLine:
+    def one_line(body: Mapping[str, Any]) -> LoadLine:
         flight = body["flight"]
         return LoadLine(
             **{name: body[name] for name in ("id", "state", "verdict", "digest", "replaces", "aircraft")},
@@ -172,44 +170,44 @@ def line_in(body: Mapping[str, Any]) -> LoadLine:
             departure=flight["departure"],
         )
 
-    return _read(read, body)
+    return read(one_line, body)
 
 
 def aircraft_in(body: Mapping[str, Any]) -> Aircraft:
     """This function will read one aircraft."""
     named = ("id", "registration", "type", "serial_number")
-    return _read(lambda one: Aircraft(**{name: one[name] for name in named}, body=one), body)
+    return read(lambda one: Aircraft(**{name: one[name] for name in named}, body=one), body)
 
 
 def version_in(body: Mapping[str, Any]) -> Version:
     """This function will read one version of a loading basis or an empty weight."""
-    return _read(lambda one: Version(one["id"], one["digest"], one), body)
+    return read(lambda one: Version(one["id"], one["digest"], one), body)
 
 
 def empty_weights_in(body: Mapping[str, Any]) -> EmptyWeights:
     """This function will read the empty weights of an aircraft."""
 
-    def read(body: Mapping[str, Any]) -> EmptyWeights:
+    def the_weights(body: Mapping[str, Any]) -> EmptyWeights:
         in_force = {one["fit"]: one["id"] for one in body["in_force"]}
         return EmptyWeights(in_force, tuple(version_in(one) for one in body["empty_weights"]))
 
-    return _read(read, body)
+    return read(the_weights, body)
 
 
 def subscription_in(body: Mapping[str, Any]) -> Subscription:
     """This function will read one subscription."""
 
-    def read(body: Mapping[str, Any]) -> Subscription:
+    def one_subscription(body: Mapping[str, Any]) -> Subscription:
         named = {name: body[name] for name in ("id", "address", "state")}
         return Subscription(**named, events=tuple(body["events"]), secret=body.get("secret", ""))
 
-    return _read(read, body)
+    return read(one_subscription, body)
 
 
 def delivery_in(body: Mapping[str, Any]) -> Delivery:
     """This function will read one delivery."""
     named = ("id", "message", "event", "about", "state")
-    return _read(lambda one: Delivery(**{name: one[name] for name in named}), body)
+    return read(lambda one: Delivery(**{name: one[name] for name in named}), body)
 
 
 def _computed(body: Mapping[str, Any]) -> dict[str, Any]:
@@ -222,11 +220,3 @@ def _computed(body: Mapping[str, Any]) -> dict[str, Any]:
         "checks": checks,
         "body": body,
     }
-
-
-def _read(reading: Callable[[Mapping[str, Any]], Shape], body: Mapping[str, Any]) -> Shape:
-    """This function will read a shape; raises AnswerUnusable where the answer is of another form."""
-    try:
-        return reading(body)
-    except (KeyError, TypeError) as problem:
-        raise AnswerUnusable(f"the answer is of another form than described: {problem!r}") from problem

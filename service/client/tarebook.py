@@ -6,11 +6,14 @@ from collections.abc import Callable
 
 from service.client.aircraft import AircraftRecords
 from service.client.exchange import Exchange, Patience
+from service.client.late import LateChanges
 from service.client.loads import Loads
+from service.client.people import People
+from service.client.trail import Trail
 from service.client.webhooks import Webhooks
 
 
-class Tarebook(Loads, AircraftRecords, Webhooks):
+class Tarebook(Loads, LateChanges, AircraftRecords, People, Trail, Webhooks):
     """Talks to one Tarebook with one bearer token. Threads may share it.
 
     What stores something is sent with an Idempotency-Key that is made once a call, and sent again with the

@@ -13,7 +13,19 @@ from urllib.parse import parse_qs
 
 import pytest
 
-from service.client import AnswerUnusable, Check, Load, Tarebook, documents
+from service.client import (
+    Act,
+    AnswerUnusable,
+    Check,
+    LatePreview,
+    Load,
+    Note,
+    Person,
+    Settings,
+    Tarebook,
+    Token,
+    documents,
+)
 from service.client.shapes import Aircraft, Delivery, LoadLine, Subscription, Version
 from tests.service.client.told_server import Turn, telling
 
@@ -43,6 +55,12 @@ def test_a_document_has_the_fields_described(document: Any) -> None:
         (Version, "LoadingBasisLine"),
         (Version, "EmptyWeightLine"),
         (Delivery, "DeliveryAnswer"),
+        (LatePreview, "LatePreview"),
+        (Note, "NoteAnswer"),
+        (Act, "ActLine"),
+        (Person, "PersonLine"),
+        (Token, "TokenLine"),
+        (Settings, "SettingsAnswer"),
     ],
 )
 def test_what_is_read_is_always_answered(shape: Any, name: str) -> None:
@@ -65,6 +83,9 @@ NUMBER = "01a23107-3d72-7a66-8157-3ea0a197a14a"
 SEEN = Load("within", "d", {}, (), {}, NUMBER, "open", '"1"', None, None, False)
 VERSION = Version(NUMBER, "d", {})
 HOOK = Subscription(NUMBER, "https://x.example", ("load.rejected",), "live")
+PREVIEW = LatePreview("within", "d", 2, (), "", {})
+PERSON = Person(7, "r.amani", "R. Amani", True, ())
+TOKEN = Token(3, "planner", "person:7", True, (), {})
 AT = datetime(2026, 12, 1, tzinfo=UTC)
 CALLS: dict[str, Callable[[Tarebook], object]] = {
     "assess": lambda made: made.assess({}),
@@ -94,6 +115,23 @@ CALLS: dict[str, Callable[[Tarebook], object]] = {
     "approve_loading_basis": lambda made: made.approve_loading_basis("Q9-KTB", VERSION, "seen", true_from=AT),
     "enter_empty_weight": lambda made: made.enter_empty_weight("Q9-KTB", {}),
     "approve_empty_weight": lambda made: made.approve_empty_weight("Q9-KTB", VERSION, "seen"),
+    "preview_late_change": lambda made: made.preview_late_change(SEEN, {}),
+    "change_late": lambda made: made.change_late(SEEN, {}, PREVIEW, "pw"),
+    "write_note": lambda made: made.write_note(SEEN, "a bag too many"),
+    "trail": lambda made: list(
+        made.trail(about="load:1", actor="person:7", kind="accept-load", since=AT, before=AT)
+    ),
+    "entry": lambda made: made.entry(NUMBER),
+    "who_am_i": lambda made: made.who_am_i(),
+    "people": lambda made: made.people(),
+    "person": lambda made: made.person(7),
+    "enter_person": lambda made: made.enter_person({}),
+    "change_duty": lambda made: made.change_duty(PERSON, "pilot", "checked out", granted=True, since=AT),
+    "deactivate": lambda made: made.deactivate(PERSON, "left"),
+    "tokens": lambda made: made.tokens(),
+    "revoke_token": lambda made: made.revoke_token(TOKEN, "lost"),
+    "settings": lambda made: made.settings(at=AT, as_known_at=AT),
+    "change_settings": lambda made: made.change_settings(Settings(1, '"1"', {}), {}),
     "webhooks": lambda made: made.webhooks(),
     "subscribe": lambda made: made.subscribe("https://x.example", ["load.rejected"]),
     "new_webhook_secret": lambda made: made.new_webhook_secret(HOOK),
