@@ -9,10 +9,17 @@ from dataclasses import dataclass, field
 from fractions import Fraction
 from typing import Literal
 
+from fleet.curtailment import Curtailment
 from fleet.envelope import Shape
+from fleet.flight_rules import CertificationCategory, Modification, PerformanceRule
+from fleet.fuel_balance import FuelBalance
+from fleet.lateral import LateralByCg
+from fleet.positions import MovingPart
 from fleet.quantities import Unit
 from fleet.sourced import Limit, Source
+from fleet.stations import Condition, Conditional, Cumulative, Floor, Rail
 from fleet.tanks import TankCurve
+from fleet.trim import Trim
 
 Axis = Literal["longitudinal", "lateral"]
 Plane = Literal["arm", "moment"]
@@ -24,8 +31,8 @@ PHASES: tuple[Phase, ...] = ("ramp", "take-off", "zero fuel", "landing", "minimu
 class Seat:
     """Where a person sits. Arms in the length unit of the basis.
 
-    Whom a seat suits is stated where it matters: `row` it stands in, at an exit, with a restraint for an infant
-    or child (None: not stated), for an attendant.
+    Whom a seat suits is stated where it matters: `row` it stands in, at an exit, with a restraint for an
+    infant or child (None: not stated), for an attendant. On a `rail` its arm is a range, with `arm` in it.
     """
 
     id: str
@@ -39,6 +46,8 @@ class Seat:
     exit_row: bool = False
     infant_restraint: bool | None = None
     attendant: bool = False
+    conditional: tuple[Conditional, ...] = ()
+    rail: Rail | None = None
 
 
 @dataclass(frozen=True, slots=True)
@@ -51,6 +60,8 @@ class Place:
     lateral_arm: Fraction
     maximum: Limit | None
     source: Source
+    conditional: tuple[Conditional, ...] = ()
+    floor: Floor | None = None
 
 
 @dataclass(frozen=True, slots=True)
@@ -61,6 +72,7 @@ class Zone:
     name: str
     members: tuple[str, ...]
     maximum: Limit | None
+    conditional: tuple[Conditional, ...] = ()
 
 
 @dataclass(frozen=True, slots=True)
@@ -131,7 +143,8 @@ class Envelope:
     """A closed polygon in (arm or moment, weight); vertices in order, the first not repeated, notches kept.
 
     `plane` says in which plane the edges are straight. `shape` decides: `shape.holds(weight, moment)`,
-    exactly, and `shape.arm_section`, `shape.weight_section` for the two margins. Making one raises
+    exactly, and `shape.arm_section`, `shape.weight_section` for the two margins. `configurations` and
+    `categories` (of certification) are those it holds for, () for all. Making one raises
     `fleet.envelope.NotAnEnvelope`.
     """
 
@@ -141,6 +154,8 @@ class Envelope:
     plane: Plane
     points: tuple[tuple[Fraction, Fraction], ...]  # (arm or moment, weight)
     source: Source
+    configurations: tuple[str, ...] = ()
+    categories: tuple[str, ...] = ()
     shape: Shape = field(init=False, compare=False, repr=False)
 
     def __post_init__(self) -> None:
@@ -180,7 +195,9 @@ class Configuration:
     fit: str  # the base fit it is flown on: which empty weight it needs
     equipment: tuple[FixedItem, ...]
     operating_items: tuple[FixedItem, ...]
-    limits: Limits  # already the tighter of the basis's and the configuration's own
+    limits: Limits  # already the tighter of the basis's (or a fitted modification's) and its own
+    modifications: tuple[str, ...] = ()  # the approved modifications it has fitted
+    performance: tuple[PerformanceRule, ...] = ()  # its own rules, in place of the basis's
 
 
 @dataclass(frozen=True, slots=True)
@@ -232,3 +249,13 @@ class Basis:
     lateral_limits_entered: bool  # False: neither a lateral envelope nor a page that shows there is none
     configurations: tuple[Configuration, ...]
     sample_loads: tuple[SampleLoad, ...]
+    positions: tuple[MovingPart, ...] = ()  # gear, flaps: what moves and shifts the moment
+    conditions: tuple[Condition, ...] = ()
+    cumulative: tuple[Cumulative, ...] = ()
+    certification_categories: tuple[CertificationCategory, ...] = ()
+    modifications: tuple[Modification, ...] = ()
+    performance: tuple[PerformanceRule, ...] = ()
+    lateral_by_cg: tuple[LateralByCg, ...] = ()
+    fuel_balance: tuple[FuelBalance, ...] = ()
+    trim: Trim | None = None
+    curtailments: tuple[Curtailment, ...] = ()  # the operator's own margins inside the envelopes

@@ -111,20 +111,23 @@ class Shape:
 
         Empty when there are none.
         """
+        found = self._arms_of_pieces(weight)
+        return tuple(merged(found)) if found[1:] else tuple(found)
+
+    def _arms_of_pieces(self, weight: Fraction) -> list[Stretch]:
         whole, rest = divmod(weight.numerator * self._scale, weight.denominator)
         index = bisect_right(self._levels, whole) * 2
         if not rest and whole in self._at_level:
             index -= 1
         y, one = weight.numerator, weight.denominator
         per, even, square = y * one, one * one, y * y
-        found = [
+        return [
             (
                 Fraction(-a * even - b * per - c * square, p * per),
                 Fraction(-a2 * even - b2 * per - c2 * square, p2 * per),
             )
             for p, a, b, c, p2, a2, b2, c2 in self._spans[index]
         ]
-        return tuple(merged(found)) if found[1:] else tuple(found)
 
     def weights_at(self, arm: Fraction) -> tuple[Stretch, ...]:
         """Return the stretches of weight (low, high) inside the envelope along one arm, rising.

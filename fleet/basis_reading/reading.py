@@ -6,12 +6,20 @@ from typing import Any
 
 from fleet.basis import Basis, Chord
 from fleet.basis_reading.configurations import read_configurations
+from fleet.basis_reading.curtailments import read_curtailments
 from fleet.basis_reading.envelopes import lateral_limits_entered, read_envelopes
 from fleet.basis_reading.findings import Findings, exact
 from fleet.basis_reading.fuel import read_burn_order, read_tanks, read_taxi_order
+from fleet.basis_reading.fuel_balance import read_fuel_balance
+from fleet.basis_reading.lateral import read_lateral_by_cg
 from fleet.basis_reading.limits import read_limits
+from fleet.basis_reading.performance import read_performance
+from fleet.basis_reading.positions import read_positions
+from fleet.basis_reading.running_sums import read_conditions, read_cumulative
 from fleet.basis_reading.samples import read_sample_loads
 from fleet.basis_reading.stations import read_places, read_seats, read_zones
+from fleet.basis_reading.trim import read_trim
+from fleet.basis_reading.variants import read_variants
 from fleet.document_schema import shape_faults
 from records.refusal import Fault, Invalid
 from records.strict_json import read
@@ -51,8 +59,9 @@ def _headless(faults: list[Fault]) -> bool:
 def _parts(findings: Findings) -> dict[str, Any]:
     """Return what the lists of the document hold, leaving all faults in `findings`."""
     limits = read_limits(findings)
+    variants = read_variants(findings, limits)
     burn_order = read_burn_order(findings)
-    envelopes = read_envelopes(findings, limits)
+    envelopes = read_envelopes(findings, variants)
     return {
         "chord": _chord(findings),
         "seats": read_seats(findings),
@@ -64,8 +73,18 @@ def _parts(findings: Findings) -> dict[str, Any]:
         "limits": limits,
         "envelopes": envelopes,
         "lateral_limits_entered": lateral_limits_entered(findings, envelopes),
-        "configurations": read_configurations(findings, limits),
+        "configurations": read_configurations(findings, variants),
         "sample_loads": read_sample_loads(findings),
+        "certification_categories": variants.certification_categories,
+        "modifications": variants.modifications,
+        "performance": read_performance(findings, findings.document.get("performance"), "/performance"),
+        "lateral_by_cg": read_lateral_by_cg(findings),
+        "fuel_balance": read_fuel_balance(findings),
+        "trim": read_trim(findings),
+        "positions": read_positions(findings),
+        "conditions": read_conditions(findings),
+        "cumulative": read_cumulative(findings),
+        "curtailments": read_curtailments(findings, envelopes),
     }
 
 

@@ -19,6 +19,8 @@ from fractions import Fraction
 
 from fleet.basis import PHASES, Axis, Phase
 from fleet.envelope import Section
+from loads.balance.checks_lateral import AT, lateral_by_cg_checks
+from loads.balance.operator_margins import told
 from loads.balance.prepared import Bound, Prepared
 from loads.balance.result import Check, State
 from loads.balance.rounding import WEIGHT_PLACES, between, printed, room
@@ -27,13 +29,6 @@ NEEDED: tuple[Phase, ...] = ("take-off", "landing", "minimum at landing")
 SIDES: dict[Axis, tuple[str, str]] = {"longitudinal": ("forward", "aft"), "lateral": ("left", "right")}
 CODES: dict[Axis, str] = {"longitudinal": "cg", "lateral": "lateral"}
 TITLES: dict[Axis, str] = {"longitudinal": "CG", "lateral": "lateral CG"}
-AT: dict[Phase, str] = {
-    "ramp": " at the ramp",
-    "take-off": " at take-off",
-    "zero fuel": " at zero fuel",
-    "landing": " at landing",
-    "minimum at landing": " with the least fuel at landing",
-}
 
 CgFix = Callable[[], str]
 
@@ -41,9 +36,15 @@ CgFix = Callable[[], str]
 def balance_checks(states: Mapping[Phase, State], ready: Prepared, fix: CgFix) -> list[Check]:
     """Return the checks of both axes at every phase; `fix` is asked only when one of them fails."""
     found = [_at(state, "longitudinal", ready, fix) for state in states.values()]
-    if any(ready.bounds("lateral", phase) for phase in PHASES):
-        return found + [_at(state, "lateral", ready, fix) for state in states.values()]
-    return [*found, _no_lateral(states, ready)]
+    by_cg = ready.basis.lateral_by_cg
+    if not by_cg and not any(ready.bounds("lateral", phase) for phase in PHASES):
+        return [*found, _no_lateral(states, ready)]
+    across = [
+        _at(state, "lateral", ready, fix)
+        for state in states.values()
+        if ready.bounds("lateral", state.phase) or not ready.across(state.phase)
+    ]
+    return found + across + (lateral_by_cg_checks(states, ready, fix) if by_cg else [])
 
 
 def _at(state: State, axis: Axis, ready: Prepared, fix: CgFix) -> Check:
@@ -73,7 +74,7 @@ def _within(state: State, axis: Axis, bound: Bound, ready: Prepared, fix: CgFix)
         actual, low, high, digits = between(arm, along.low, along.high, places)
         margin = printed(along.margin, digits, "down")
     edge = None if along is None else SIDES[axis][along.edge == "high"]
-    return Check(
+    check = Check(
         f"{CODES[axis]}.{state.phase.replace(' ', '-')}",
         _title(axis, state.phase),
         "pass" if inside else "fail",
@@ -90,6 +91,7 @@ def _within(state: State, axis: Axis, bound: Bound, ready: Prepared, fix: CgFix)
         None if upward is None else printed(upward.margin, WEIGHT_PLACES, "down"),
         edge,
     )
+    return told(check, state.weight, moment, bound, ready)
 
 
 def _words(

@@ -4,8 +4,11 @@ from collections.abc import Callable, Iterable, Mapping
 from fractions import Fraction
 
 from fleet.basis import Axis, Phase
-from loads.balance.checks_balance import AT, SIDES
+from loads.balance.checks_balance import SIDES
+from loads.balance.checks_lateral import AT, PATH_CODE, lateral_by_cg_path
+from loads.balance.operator_margins import told
 from loads.balance.path import Gap, Knot, Leg, Path
+from loads.balance.path_across import WorstAcross
 from loads.balance.path_worst import AXES, Burn, Worst
 from loads.balance.prepared import Prepared
 from loads.balance.result import Check, Json, State
@@ -26,10 +29,20 @@ Fix = Callable[[], str]
 
 def path_checks(burn: Burn, states: Mapping[Phase, State], ready: Prepared, fix: Fix) -> list[Check]:
     """Return the check of each axis that has an envelope; `fix` is asked only when one of them fails."""
-    return [
+    found = [
         _check(burn, axis, states, ready, fix)
         for axis in AXES
         if axis == "longitudinal" or axis in burn.worst or ready.bounds(axis, "take-off")
+    ]
+    if not ready.basis.lateral_by_cg:
+        return found
+
+    def where(worst: WorstAcross) -> tuple[Json, str]:
+        at = _at(worst, states, ready)
+        return at, _place(worst, at, ready)
+
+    return found + [
+        _with_gaps(check, burn.path, ready) for check in lateral_by_cg_path(burn.path, ready, fix, where)
     ]
 
 
@@ -49,6 +62,8 @@ def path_document(burn: Burn, checks: Iterable[Check], ready: Prepared) -> Json:
         for axis, found in burn.worst.items()
         if f"path.{axis}" in at
     ]
+    if PATH_CODE in at:
+        worst.append({"axis": "lateral by CG", **at[PATH_CODE]})
     return {"points": [_figures(knot, _arms(knot), ready) for knot in kinks], "worst": worst}
 
 
@@ -73,7 +88,7 @@ def _check(burn: Burn, axis: Axis, states: Mapping[Phase, State], ready: Prepare
         figure = f"{room(worst.room, digits)} {ready.length}"
         side = "beyond" if broken else "from"
         words = f"on the {edge} limit" if not worst.room else f"{figure} {side} the {edge} limit"
-    return Check(
+    check = Check(
         code,
         title,
         "fail" if broken else "pass",
@@ -91,15 +106,25 @@ def _check(burn: Burn, axis: Axis, states: Mapping[Phase, State], ready: Prepare
         edge,
         at,
     )
+    moment = worst.knot.moment if axis == "longitudinal" else worst.knot.lateral_moment
+    return told(check, worst.knot.weight, moment, worst.bound, ready)
 
 
 def _unknown(path: Path, axis: Axis, ready: Prepared) -> tuple[str, str] | None:
     """Return what of a path cannot be judged, and what would mend it; None when all of it can."""
-    if not ready.bounds(axis, "take-off"):
+    if not ready.bounds(axis, "take-off") and not (axis == "lateral" and ready.across("take-off")):
         return "no envelope is entered for take-off", "Enter the envelope of this phase in the loading basis."
     if path.gaps:
         return _gap_words(path.gaps[0], ready)
     return None
+
+
+def _with_gaps(check: Check, path: Path, ready: Prepared) -> Check:
+    """Return a check that is kept as unresolved, where a part of the path is not known."""
+    if check.outcome == "fail" or not path.gaps:
+        return check
+    text, what_next = _gap_words(path.gaps[0], ready)
+    return Check(check.code, check.title, "unresolved", margin_text=text, what_next=what_next)
 
 
 def _gap_words(gap: Gap, ready: Prepared) -> tuple[str, str]:
@@ -111,13 +136,13 @@ def _gap_words(gap: Gap, ready: Prepared) -> tuple[str, str]:
     )
 
 
-def _place(worst: Worst, at: Json, ready: Prepared) -> str:
+def _place(worst: Worst | WorstAcross, at: Json, ready: Prepared) -> str:
     if worst.knot.phase is not None:
         return AT[worst.knot.phase].strip()
     return f"{at['point']}, at {at['weight']} {ready.weight} with {at['fuel']} {ready.weight} of fuel"
 
 
-def _at(worst: Worst, states: Mapping[Phase, State], ready: Prepared) -> Json:
+def _at(worst: Worst | WorstAcross, states: Mapping[Phase, State], ready: Prepared) -> Json:
     """Return where the worst point is, as it stands in the document."""
     knot, phase = worst.knot, worst.knot.phase
     arms = (states[phase].arm, states[phase].lateral_arm) if phase is not None else _arms(knot)

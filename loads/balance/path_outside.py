@@ -47,12 +47,15 @@ def worst_outside(piece: Piece, trapezoids: Sequence[Trapezoid]) -> Nearest:
     worst: Nearest | None = None
     for weight in _candidates(margins, top, bottom):
         best: tuple[Surd, Trapezoid, bool] | None = None
+        there = False
         for sides, (low, high) in zip(trapezoids, margins, strict=True):
             forward, rear = _value(low, weight), _value(high, weight)
             aft = rear.below(forward)
             margin = rear if aft else forward
-            if best is None or best[0].below(margin):
-                best = margin, sides, aft
+            # Near its tip a piece may be used up by an operator's margins: one that is there is the nearer.
+            left = Surd(forward.whole + rear.whole, forward.factor + rear.factor, weight.under).sign() >= 0
+            if best is None or (left and not there) or (left == there and best[0].below(margin)):
+                best, there = (margin, sides, aft), left
         if best is not None and (worst is None or best[0].below(worst.margin)):
             worst = Nearest(piece.stretch, weight, best[0], best[1], best[2], bottom)
     if worst is None:

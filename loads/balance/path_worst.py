@@ -14,6 +14,7 @@ path beside it, on the same side of the limit, and the room is rounded down (an 
 """
 
 from collections.abc import Mapping, Sequence
+from dataclasses import replace
 from fractions import Fraction
 from typing import NamedTuple
 
@@ -62,11 +63,25 @@ def burn_of(path: Path, ready: Prepared) -> Burn:
 
 def stays_inside(path: Path, ready: Prepared, along: Fraction, across: Fraction) -> bool:
     """Return whether the whole path lies inside every envelope once these moments are added to it."""
-    shifted = Path(tuple(_shifted(stretch, along, across) for stretch in path.stretches), path.gaps)
+    beside = shifted(path, along, across)
     return all(
         isinstance(point, Nearest) and point.margin.sign() >= 0
         for axis in AXES
-        for _, point in _points(shifted, axis, ready)
+        for _, point in _points(beside, axis, ready)
+    )
+
+
+def shifted(path: Path, along: Fraction, across: Fraction) -> Path:
+    """Return the path with these moments added to every point of it."""
+    turns = (
+        turn._replace(knots=tuple((_moved(knot, along, across), held) for knot, held in turn.knots))
+        for turn in path.turns
+    )
+    return replace(
+        path,
+        stretches=tuple(_shifted(stretch, along, across) for stretch in path.stretches),
+        turns=tuple(turns),
+        settings=tuple(_shifted(stretch, along, across) for stretch in path.settings),
     )
 
 
@@ -95,11 +110,12 @@ def _each_once(bounds: Sequence[Bound]) -> list[Bound]:
 
 
 def _shifted(stretch: Stretch, along: Fraction, across: Fraction) -> Stretch:
-    start, end = (
-        knot._replace(moment=knot.moment + along, lateral_moment=knot.lateral_moment + across)
-        for knot in (stretch.start, stretch.end)
-    )
+    start, end = (_moved(knot, along, across) for knot in (stretch.start, stretch.end))
     return stretch._replace(start=start, end=end)
+
+
+def _moved(knot: Knot, along: Fraction, across: Fraction) -> Knot:
+    return knot._replace(moment=knot.moment + along, lateral_moment=knot.lateral_moment + across)
 
 
 def _settled(bound: Bound, point: Nearest | Beyond, axis: Axis) -> Worst:
@@ -121,6 +137,8 @@ def _settled(bound: Bound, point: Nearest | Beyond, axis: Axis) -> Worst:
     low, high = (
         -(Fraction(a) / weight + b + c * weight) / p for p, a, b, c in (point.sides[:4], point.sides[4:])
     )
+    if low > high:  # the very tip of an envelope, which an operator's margins have cut off
+        return Worst(bound, stretch, knot, moment / weight, None, None, None, False)
     return Worst(bound, stretch, knot, moment / weight, low, high, point.margin.floor(BITS), point.aft)
 
 

@@ -5,22 +5,25 @@ its units.
 from collections import OrderedDict
 from fractions import Fraction
 
-from fleet.basis import PHASES, Axis, Basis, Envelope, Phase, TankTable
+from fleet.basis import PHASES, Axis, Basis, Phase, TankTable
 from fleet.conversion import density_unit
 from fleet.envelope import Shape
+from fleet.lateral import LateralByCg
 from fleet.tanks import TankCurve
 from loads.balance.exact import times
+from loads.balance.operational import Bound, Operational
 from loads.balance.rounding import LENGTH_PLACES, MOMENT_PLACES
 
-MOST_KEPT = 64
+__all__ = ["Bound", "Prepared", "prepared"]
 
-Bound = tuple[Envelope, Shape]
+MOST_KEPT = 64
 
 
 class Prepared:
     """What is derived from a basis once and used for every load of it. Unchanging once made."""
 
     __slots__ = (
+        "_across",
         "_bounds",
         "_chord_factor",
         "_curves",
@@ -58,13 +61,25 @@ class Prepared:
         self._steady = {tank.id: _steady_arm(tank.table) for tank in basis.tanks}
         shapes = [(envelope, Shape(envelope.plane, envelope.points)) for envelope in basis.envelopes]
         axes: tuple[Axis, ...] = ("longitudinal", "lateral")
-        self._bounds = {(axis, phase): _covering(shapes, axis, phase) for axis in axes for phase in PHASES}
+        left = Operational(basis.curtailments)
+        self._bounds = {
+            (axis, phase): left.bounds(_covering(shapes, axis, phase), axis, phase)
+            for axis in axes
+            for phase in PHASES
+        }
+        self._across = {
+            phase: tuple(limit for limit in basis.lateral_by_cg if phase in limit.phases) for phase in PHASES
+        }
 
     def bounds(self, axis: Axis, phase: Phase) -> tuple[Bound, ...]:
         """Return the envelopes that hold at a phase; all of them must hold the load. () when there is
         none.
         """
         return self._bounds[axis, phase]
+
+    def across(self, phase: Phase) -> tuple[LateralByCg, ...]:
+        """Return the lateral limits against the longitudinal CG that hold at a phase; () without any."""
+        return self._across[phase]
 
     def fuel_moment(self, tank: str, volume: Fraction, density: Fraction) -> Fraction:
         """Return the moment of a volume of fuel in a tank. Raises `fleet.tanks.OutsideTable`."""

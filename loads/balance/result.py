@@ -26,7 +26,9 @@ class Check(NamedTuple):
 
     `limit` is the upper and `low` the lower bound. A check of a centre of gravity also carries
     `margin_weight`, the room in weight at the same arm, and `edge`, the nearest bound along the arm. One
-    along the burn carries `edge`, and `at`: where its worst point is, in printed figures.
+    along the burn carries `edge`, and `at`: where its worst point is, in printed figures; a running sum has
+    each of its stations there. `curtailed` tells the operator's margins where an envelope is curtailed, and
+    how the certified one stands.
     """
 
     code: str
@@ -45,6 +47,7 @@ class Check(NamedTuple):
     margin_weight: str | None = None
     edge: str | None = None
     at: Json | None = None
+    curtailed: Json | None = None
 
     def as_document(self) -> Json:
         """Return the check as it stands in the result document."""
@@ -62,12 +65,16 @@ class Check(NamedTuple):
             "result": self.outcome,
             "what_next": self.what_next,
         }
-        if self.code.startswith(("cg.", "lateral.")):
+        if self.code.startswith(("cg.", "lateral.", "lateral-by-cg.")):
             found["margin_weight"] = self.margin_weight
             found["edge"] = self.edge
         elif self.code.startswith("path."):
             found["edge"] = self.edge
             found["at"] = self.at
+        elif self.at is not None:
+            found["at"] = self.at
+        if self.curtailed is not None:
+            found["curtailed"] = self.curtailed
         return found
 
 
