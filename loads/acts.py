@@ -14,6 +14,7 @@ REMARK_REJECT = Kind("remark-reject", "remarked on a rejected load")
 WRITE_NOTE = Kind("write-note", "wrote a note after flight")
 TELL_STALE = Kind("tell-stale-load", "told that an accepted load is stale")
 FILE_MANIFEST = Kind("file-manifest", "filed a manifest")
+RUN_SELF_CHECK = Kind("run-self-check", "had the computer prove itself")
 
 KINDS = (
     SUBMIT_LOAD,
@@ -28,4 +29,5 @@ KINDS = (
     WRITE_NOTE,
     TELL_STALE,
     FILE_MANIFEST,
+    RUN_SELF_CHECK,
 )

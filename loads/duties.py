@@ -28,6 +28,9 @@ _NOTES = frozenset({acts.WRITE_NOTE.name})
 # Whoever may have a hand in mending a rejected load, maintenance with its weighings among them.
 _REMARKS = frozenset({acts.REMARK_REJECT.name})
 
+# Who looks after the computing itself.
+_PROVES = frozenset({acts.RUN_SELF_CHECK.name})
+
 ACTS_OF: Mapping[Role, frozenset[str]] = MappingProxyType(
     {
         "pilot": _DECLARES | _PREPARES | _ACCEPTS | _REMARKS | _NOTES,
@@ -35,7 +38,7 @@ ACTS_OF: Mapping[Role, frozenset[str]] = MappingProxyType(
         "loading supervisor": _REMARKS,
         "maintenance": _REMARKS,
         "records approver": _REMARKS,
-        "operations manager": _DECLARES | _PREPARES | _REMARKS | _NOTES,
+        "operations manager": _DECLARES | _PREPARES | _REMARKS | _NOTES | _PROVES,
         "auditor": frozenset(),
         "integration": _DECLARES,
     }

@@ -10,6 +10,7 @@ from loads.actions.file_manifest import FILING, FILING_ISSUE
 from loads.actions.file_manifest import file_issue as file_one_issue
 from loads.actions.file_manifest import file_manifest as file_one
 from loads.actions.mail_stale import mail_stale_notice
+from loads.actions.self_check import run_self_check
 from loads.actions.tell_stale import MAILING, tell_after_approval
 from loads.models import LateChange, Paper
 from records import outbox
@@ -42,6 +43,12 @@ def tell_of_stale_loads(approval: str) -> None:
 def mail_stale(notice: str) -> None:
     """This function will mail one notice of a stale load."""
     _work(MAILING, notice, lambda: mail_stale_notice(UUID(notice)))
+
+
+@shared_task(name="loads.tasks.self_check", ignore_result=True)
+def self_check() -> None:
+    """This function will have the computer prove itself, as it does every day."""
+    run_self_check("daily")
 
 
 def _work(task: str, key: str, work: Callable[[], object]) -> None:

@@ -2,7 +2,8 @@
 
 It says which part is not well and nothing about its inside. A broker that is down is told but does not make
 the service unready: loads are signed without it, and manifests are made on demand. Nor does a trail that was
-found broken: who then may sign is for people to decide, and `manage.py verify` names the place.
+found broken: who then may sign is for people to decide, and `manage.py verify` names the place. Nor does a
+self-check that failed: everything but signing goes on.
 
 GET /health/alive answers as long as this process does, and asks nothing else.
 """
@@ -16,11 +17,13 @@ from celery import current_app
 from django.db import DatabaseError, connection
 from django.db.migrations.executor import MigrationExecutor
 from django.http import HttpRequest, HttpResponse
+from django.utils import timezone
 from django.views.decorators.http import require_safe
 from drf_spectacular.utils import extend_schema
 from rest_framework.request import Request
 from rest_framework.views import APIView
 
+from loads.queries.self_checks import last_word
 from records.api.render import rendered
 from records.guard import missing_guards
 from records.verified import last_verified
@@ -72,6 +75,7 @@ class Health(APIView):
         parts["broker"] = _asked(_broker)
         body: dict[str, Any] = {"status": "ready" if ready else "not ready", "parts": parts}
         with suppress(DatabaseError):
+            parts["self-check"] = last_word(timezone.now())
             body["verified"], parts["trail"] = _trail()
         return HttpResponse(rendered(body), status=200 if ready else 503, content_type="application/json")
 

@@ -8,6 +8,7 @@ from uuid import UUID
 
 from fleet.queries.settings import settings_at
 from loads.actions.keeping import SALT_BYTES
+from loads.actions.self_check import refuse_unproven
 from loads.actions.stepping import load_as_seen, take_step
 from loads.models import Load, Signature, Step
 from loads.queries.current import Current
@@ -136,6 +137,7 @@ def refuse_unsignable(
     entry: Entry, signing: Signing, *, verdict: str, digest: str, declared: Mapping[str, JSON]
 ) -> None:
     """This function will raise StepRefused unless what was shown is what would be signed, and may be."""
+    refuse_unproven(entry.chain)
     if signing.digest != digest:
         raise StepRefused(
             "digest-differs",

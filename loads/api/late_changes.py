@@ -12,6 +12,7 @@ from rest_framework.views import APIView
 from fleet.actions.confirm_password import confirm_password
 from fleet.models import Person
 from loads.actions.change_late import change_late
+from loads.actions.self_check import check_when_overdue
 from loads.actions.signing import Signing, refuse_unless_signer
 from loads.actions.write_note import write_note
 from loads.acts import CHANGE_LATE
@@ -62,6 +63,7 @@ class LateChangesView(APIView):
         # Before the transaction: a wrong password must stay counted although nothing else is kept.
         confirm_password(request, request.user, document.get("password"))
         change = _change_in(document)
+        check_when_overdue(actor.chain)
         return once(request, lambda: moved(change_late(load, change, signing, seen=seen, by=actor)))
 
 

@@ -11,6 +11,7 @@ from fleet.actions.confirm_password import confirm_password
 from fleet.models import Person
 from loads.actions.accept_load import accept_load
 from loads.actions.prepare_load import prepare_load
+from loads.actions.self_check import check_when_overdue
 from loads.actions.signing import Signing, refuse_unless_signer
 from loads.acts import ACCEPT_LOAD, PREPARE_LOAD
 from loads.api.answering import moved, refuse_other_fields, text_in
@@ -50,4 +51,5 @@ class SignaturesView(APIView):
             raise NotSignedIn("not-signed-in", "Only a person signs.")
         # Before the transaction: a wrong password must stay counted although nothing else is kept.
         confirm_password(request, request.user, document.get("password"))
+        check_when_overdue(actor.chain)
         return once(request, lambda: moved(_ACTIONS[meaning](load, signing, seen=seen, by=actor)))

@@ -6,7 +6,9 @@ from loads.models.late_change import FiledIssue, LateChange
 from loads.models.load import Load
 from loads.models.note import Note
 from loads.models.paper import FiledPaper, Paper
+from loads.models.present import Present
 from loads.models.remark import Remark
+from loads.models.self_check import SelfCheck
 from loads.models.signature import Signature
 from loads.models.stale_notice import StaleNotice
 from loads.models.step import AllowedStep, Step
@@ -21,7 +23,9 @@ __all__ = [
     "Load",
     "Note",
     "Paper",
+    "Present",
     "Remark",
+    "SelfCheck",
     "Signature",
     "StaleNotice",
     "Step",

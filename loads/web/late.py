@@ -13,6 +13,7 @@ from fleet.actions.confirm_password import confirm_password
 from fleet.models import Person
 from fleet.queries.figures import basis_of
 from loads.actions.change_late import change_late
+from loads.actions.self_check import check_when_overdue
 from loads.actions.signing import Signing, refuse_unless_signer
 from loads.actions.write_note import write_note
 from loads.acts import CHANGE_LATE
@@ -75,6 +76,7 @@ def _accept(
     if not isinstance(request.user, Person):
         raise NotSignedIn("not-signed-in", "Only a person signs.")
     confirm_password(request, request.user, password)
+    check_when_overdue(actor.chain)
     signing = Signing(typed.get("digest", ""), str(request.META.get("REMOTE_ADDR", "")))
     change_late(load, document, signing, seen=typed.get("step", ""), by=actor)
 

@@ -15,6 +15,7 @@ from loads.actions.accept_load import accept_load
 from loads.actions.assess_again import assess_again
 from loads.actions.depart_load import depart_load
 from loads.actions.prepare_load import prepare_load
+from loads.actions.self_check import check_when_overdue
 from loads.actions.signing import Signing, refuse_unless_signer
 from loads.actions.stepping import reason_in
 from loads.actions.withdraw_load import withdraw_load
@@ -44,6 +45,7 @@ def _sign(request: HttpRequest, load: UUID) -> Current:
     if not isinstance(request.user, Person):
         raise NotSignedIn("not-signed-in", "Only a person signs.")
     confirm_password(request, request.user, request.POST.get("password", ""))
+    check_when_overdue(actor.chain)
     signing = Signing(request.POST.get("digest", ""), str(request.META.get("REMOTE_ADDR", "")))
     return _ACTIONS[meaning](load, signing, seen=_seen(request), by=actor)
 

@@ -2,7 +2,7 @@
 
 from django.urls import path
 
-from loads.web import day, declare, documents, inspect, late, load, rejects, steps, trail
+from loads.web import day, declare, documents, inspect, late, load, rejects, self_check, steps, trail
 
 urlpatterns = [
     path("", day.day, name="day"),
@@ -20,6 +20,7 @@ urlpatterns = [
     path("rejects/<uuid:load>/remarks", rejects.remark, name="remark-reject"),
     path("documents", documents.documents, name="documents"),
     path("inspect", inspect.inspect, name="inspect"),
+    path("self-check", self_check.self_check, name="self-check"),
     path("trail", trail.trail, name="trail"),
     path("trail/<uuid:act>", trail.one_act, name="act"),
 ]

@@ -187,6 +187,8 @@ PAGES: tuple[Row, ...] = (
     Row("GET", "/access-log", LOOK_AT_PEOPLE, 200),
     Row("GET", "/settings", EVERY, 200),
     Row("POST", "/settings", MANAGE, DONE, _plain(SETTINGS)),
+    Row("GET", "/self-check", EVERY, 200),
+    Row("POST", "/self-check", MANAGE, DONE),
     Row("GET", "/declare", EVERY, 200),
     Row("POST", "/declare", EVERY, 200, _declared("look"), case="computed"),
     Row("POST", "/declare", DECLARE, DONE, _declared("submit"), case="submitted"),
