@@ -2,9 +2,11 @@
 
 from records.kind import Kind
 
-# Done by guard_table() and exempt_table() in migrations, on the chain of the house; nobody else may.
+# Done by guard_table(), exempt_table() and derive_table() in migrations, on the chain of the house; nobody
+# else may.
 GUARD_TABLE = Kind("guard-table", "put a table under guard")
 EXEMPT_TABLE = Kind("exempt-table", "exempted a table from guard")
+DERIVE_TABLE = Kind("derive-table", "said what must stand in a derived table")
 
 # Done each minute by the scheduler: the last digest of the log of sign-ins goes into the chain.
 SEAL_ACCESS_LOG = Kind("seal-access-log", "sealed the log of sign-ins")
@@ -22,4 +24,4 @@ PARK_WEBHOOK = Kind("park-webhook", "parked a subscription whose receiver cannot
 # What a person or an integration does; the worker ends one whose receiver says it is gone.
 WEBHOOK_KINDS = (SUBSCRIBE_WEBHOOK, ROTATE_WEBHOOK_SECRET, RESUME_WEBHOOK, REPLAY_WEBHOOK, END_WEBHOOK)
 
-KINDS = (GUARD_TABLE, EXEMPT_TABLE, SEAL_ACCESS_LOG, PARK_WEBHOOK, *WEBHOOK_KINDS)
+KINDS = (GUARD_TABLE, EXEMPT_TABLE, DERIVE_TABLE, SEAL_ACCESS_LOG, PARK_WEBHOOK, *WEBHOOK_KINDS)

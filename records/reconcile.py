@@ -13,6 +13,7 @@ from django.db import connections
 
 from records.access_log import broken_rows
 from records.chain import Finding
+from records.derived import false_rows
 from records.guard import missing_guards
 
 _BATCH = 500
@@ -66,8 +67,9 @@ ORDER BY s.chain, s.position, 1 LIMIT %(at_most)s
 
 
 def reconcile(using: str = "default") -> tuple[Finding, ...]:
-    """This function will compare the whole trail with itself, with the rows of every guarded table, the log
-    of sign-ins with what was sealed of it, and the guards with their definitions.
+    """This function will compare the whole trail with itself, with the rows of every guarded table, the
+    derived tables with the rows they follow from, the log of sign-ins with what was sealed of it, and the
+    guards with their definitions.
 
     It returns what does not fit, in that order. Runs inside a transaction of the caller.
     """
@@ -77,6 +79,7 @@ def reconcile(using: str = "default") -> tuple[Finding, ...]:
         *_entries_and_their_rows(using),
         *_loose_ends(using),
         *_rows_of_today(using),
+        *false_rows(using),
         *broken_rows(using),
         *(Finding("guards", sentence, "as defined", "not so") for sentence in missing_guards(using)),
     )

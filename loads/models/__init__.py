@@ -7,6 +7,7 @@ from loads.models.load import Load
 from loads.models.note import Note
 from loads.models.paper import FiledPaper, Paper
 from loads.models.present import Present
+from loads.models.present import Present
 from loads.models.remark import Remark
 from loads.models.self_check import SelfCheck
 from loads.models.signature import Signature
@@ -23,6 +24,7 @@ __all__ = [
     "Load",
     "Note",
     "Paper",
+    "Present",
     "Present",
     "Remark",
     "SelfCheck",

@@ -6,7 +6,7 @@ from uuid import UUID
 
 from django.db.models import QuerySet
 
-from loads.models import Assessment, Load, Step
+from loads.models import Assessment, Load, Present, Step
 from records import strict_json
 from records.refusal import NotKnown
 
@@ -59,6 +59,24 @@ def steps_with_their_loads() -> "QuerySet[Step]":
 def current_at(last: Step) -> Current:
     """This function will return the load of its last step."""
     return Current(last.load, last, last.assessment)
+
+
+def loads_present() -> "QuerySet[Present]":
+    """This function will return where loads stand, with what is shown beside it, in one query; long
+    documents stay behind. For questions about many loads: filters and orders go by its own columns.
+    """
+    return Present.objects.select_related(
+        "step",
+        "load__aircraft",
+        "load__operator",
+        "assessment__loading_basis",
+        "assessment__empty_weight",
+    ).defer("assessment__loading_basis__document", "assessment__empty_weight__document")
+
+
+def current_of(present: Present) -> Current:
+    """This function will return the load that stands there."""
+    return Current(present.load, present.step, present.assessment)
 
 
 def declared_in(load: Load) -> dict[str, strict_json.JSON]:

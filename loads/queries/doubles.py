@@ -11,10 +11,7 @@ from datetime import timedelta
 from typing import Any, Final
 from uuid import UUID
 
-from django.db.models import Exists, OuterRef
-
-from loads.models import Step
-from loads.queries.current import Current, current_at, steps_with_their_loads
+from loads.queries.current import Current, current_of, loads_present
 from loads.queries.declaration import declared_now
 from records import prepared
 
@@ -23,7 +20,8 @@ STANDING: Final = ("open", "prepared", "loaded", "accepted")
 # As many of one hour are looked at; a day's list shows the rest.
 MOST_LOOKED_AT: Final = 50
 _NEAR: Final = (
-    "SELECT FROM loads_load WHERE operator_id = %s AND departure > %s AND departure < %s AND id <> %s LIMIT 1"
+    "SELECT FROM loads_present "
+    "WHERE operator_id = %s AND departure > %s AND departure < %s AND load_id <> %s LIMIT 1"
 )
 
 
@@ -68,20 +66,18 @@ def _beside(current: Current) -> list[Current]:
     span = (load.departure - APART, load.departure + APART)
     if not prepared.rows(_NEAR, [load.operator_id, *span, load.id]):
         return []
-    later = Step.objects.filter(load_id=OuterRef("load_id"), number__gt=OuterRef("number"))
     rows = (
-        steps_with_their_loads()
+        loads_present()
         .filter(
-            ~Exists(later),
-            load__operator_id=load.operator_id,
-            load__departure__gt=span[0],
-            load__departure__lt=span[1],
-            after__in=STANDING,
+            operator_id=load.operator_id,
+            departure__gt=span[0],
+            departure__lt=span[1],
+            state__in=STANDING,
         )
         .exclude(load_id=load.id)
-        .order_by("load__departure", "load_id")
+        .order_by("departure", "load_id")
     )
-    return [current_at(one) for one in rows[:MOST_LOOKED_AT]]
+    return [current_of(one) for one in rows[:MOST_LOOKED_AT]]
 
 
 def _people(declared: Mapping[str, Any]) -> Iterator[tuple[str, frozenset[str], str]]:

@@ -4,23 +4,40 @@ from dataclasses import dataclass
 from datetime import datetime
 
 from django.db import connection
-from django.db.models import Exists, OuterRef, QuerySet
 
 from fleet.models import Aircraft
-from loads.models import Paper, Signature, Step
+from loads.models import Paper, Signature
 from loads.queries.answer import signatures_of
-from loads.queries.current import Current, current_at, steps_with_their_loads
+from loads.queries.current import Current, current_of, loads_present
 from records.models import Seal
 from records.queries import seal_of
 
 MOST_FLIGHTS = 200
 # States of a load that never will need a manifest.
 _GONE = ("superseded", "withdrawn")
+# Looked through one by one; that the older ones have no gap is held by the database (see `_HELD`).
+NEWEST = 1000
+_NUMBERS = """
+SELECT (SELECT min(number) FROM loads_paper WHERE operator_id = %(operator)s), max(newest.number),
+    count(*), count(f.paper_id)
+FROM (SELECT load_id, number FROM loads_paper WHERE operator_id = %(operator)s
+      ORDER BY number DESC LIMIT %(most)s) newest
+LEFT JOIN loads_filedpaper f ON f.paper_id = newest.load_id
+"""
 _GAPS = """
 SELECT number + 1, following - 1 FROM (
     SELECT number, lead(number) OVER (ORDER BY number) AS following
-    FROM loads_paper WHERE operator_id = %s) held
+    FROM (SELECT number FROM loads_paper WHERE operator_id = %(operator)s
+          ORDER BY number DESC LIMIT %(most)s) newest) held
 WHERE following > number + 1 ORDER BY number LIMIT 20
+"""
+# Each number names the one before it, which is there, and none is taken twice.
+_TIES = (
+    "paper_follows_the_one_before", "paper_numbers_have_no_gaps", "paper_number_is_taken_once"
+)  # fmt: skip
+_HELD = """
+SELECT count(*) FROM pg_constraint
+WHERE conrelid = 'loads_paper'::regclass AND conname = ANY (%s) AND convalidated AND conenforced
 """
 
 
@@ -36,32 +53,32 @@ class Flown:
 
 @dataclass(frozen=True, slots=True)
 class Numbers:
-    """The manifest numbers of an operator: how many, the first and last (None without any), how many are
-    filed, and each gap as (first missing, last missing), which the database does not allow.
+    """The manifest numbers of an operator: the first and last (None without any); of the newest, how many
+    were looked at and how many of these are filed, and each gap among them as (first missing, last missing),
+    which the database does not allow. `held` tells whether the ties that hold all of them stand.
     """
 
-    count: int
     first: int | None
     last: int | None
+    newest: int
     filed: int
     gaps: tuple[tuple[int, int], ...]
+    held: bool
 
     @property
     def unbroken(self) -> bool:
         """Whether the numbers run from 1 without a gap."""
-        return not self.gaps and self.first in {None, 1} and self.count == (self.last or 0)
+        return self.held and not self.gaps and self.first in {None, 1}
 
 
 def loads_of_day(aircraft: Aircraft, since: datetime, until: datetime) -> tuple[Flown, ...]:
     """This function will return every load of the aircraft planned to depart from `since` to `until`, also
     those that were replaced or withdrawn.
     """
-    rows = _last_steps(aircraft.operator_id).filter(
-        load__aircraft=aircraft, load__departure__gte=since, load__departure__lt=until
+    rows = loads_present().filter(
+        operator_id=aircraft.operator_id, aircraft=aircraft, departure__gte=since, departure__lt=until
     )
-    return tuple(
-        _flown(current_at(row)) for row in rows.order_by("load__departure", "load_id")[:MOST_FLIGHTS]
-    )
+    return tuple(_flown(current_of(row)) for row in rows.order_by("departure", "load_id")[:MOST_FLIGHTS])
 
 
 def flights_without_manifest(operator: str, since: datetime, until: datetime) -> tuple[Current, ...]:
@@ -69,30 +86,24 @@ def flights_without_manifest(operator: str, since: datetime, until: datetime) ->
     were neither replaced nor withdrawn, the latest first.
     """
     rows = (
-        _last_steps(operator)
-        .filter(load__departure__gte=since, load__departure__lt=until, load__paper__isnull=True)
-        .exclude(after__in=_GONE)
+        loads_present()
+        .filter(operator_id=operator, departure__gte=since, departure__lt=until, load__paper__isnull=True)
+        .exclude(state__in=_GONE)
     )
-    return tuple(current_at(row) for row in rows.order_by("-load__departure", "-load_id")[:MOST_FLIGHTS])
+    return tuple(current_of(row) for row in rows.order_by("-departure", "-load_id")[:MOST_FLIGHTS])
 
 
 def numbers_of(operator: str) -> Numbers:
-    """This function will count the manifest numbers of the operator and look for gaps."""
+    """This function will return the manifest numbers of the operator and look for gaps in the newest."""
+    asked = {"operator": operator, "most": NEWEST}
     with connection.cursor() as cursor:
-        cursor.execute(
-            "SELECT count(*), min(p.number), max(p.number), count(f.paper_id) FROM loads_paper p"
-            " LEFT JOIN loads_filedpaper f ON f.paper_id = p.load_id WHERE p.operator_id = %s",
-            [operator],
-        )
-        count, first, last, filed = cursor.fetchone()
-        cursor.execute(_GAPS, [operator])
+        cursor.execute(_NUMBERS, asked)
+        first, last, newest, filed = cursor.fetchone()
+        cursor.execute(_GAPS, asked)
         gaps = tuple((low, high) for low, high in cursor.fetchall())
-    return Numbers(count, first, last, filed, gaps)
-
-
-def _last_steps(operator: str) -> "QuerySet[Step]":
-    later = Step.objects.filter(load_id=OuterRef("load_id"), number__gt=OuterRef("number"))
-    return steps_with_their_loads().filter(~Exists(later), operator_id=operator)
+        cursor.execute(_HELD, [list(_TIES)])
+        held = cursor.fetchone() == (len(_TIES),)
+    return Numbers(first, last, newest, filed, gaps, held)
 
 
 def _flown(current: Current) -> Flown:

@@ -5,11 +5,11 @@ from dataclasses import dataclass
 from datetime import datetime
 from uuid import UUID
 
-from django.db.models import Exists, OuterRef, Q, QuerySet
+from django.db.models import QuerySet
 
 from fleet.models import Person
-from loads.models import Assessment, Load, Remark, Step
-from loads.queries.current import Current, current_at, steps_with_their_loads
+from loads.models import Assessment, Load, Present, Remark
+from loads.queries.current import Current, current_of, loads_present
 
 REJECTED = ("outside", "unresolved")
 MOST_REJECTS = 100
@@ -43,8 +43,8 @@ def open_rejects(operator: str, *, most: int = MOST_REJECTS) -> tuple[Reject, ..
     """This function will return the loads on the desk, the next departure first; they stay until superseded
     or withdrawn.
     """
-    rows = _last_steps(operator).filter(after="open", assessment__verdict__in=REJECTED)
-    found = [current_at(row) for row in rows.order_by("load__departure", "load_id")[:most]]
+    rows = _present(operator).filter(state="open", verdict__in=REJECTED)
+    found = [current_of(row) for row in rows.order_by("departure", "load_id")[:most]]
     remarks = _remarks({one.load.id for one in found})
     return tuple(
         Reject(one, _holder(one, remarks.get(one.load.id, ())), remarks.get(one.load.id, ())) for one in found
@@ -63,13 +63,12 @@ def settled_rejects(
     """This function will return the loads departing from `since` to `until` that were rejected and are no
     longer on the desk, the latest departure first.
     """
-    rejected = Assessment.objects.filter(load_id=OuterRef("load_id"), verdict__in=REJECTED)
     rows = (
-        _last_steps(operator)
-        .filter(Exists(rejected), load__departure__gte=since, load__departure__lt=until)
-        .exclude(after="open", assessment__verdict__in=REJECTED)
+        _present(operator)
+        .filter(rejected=True, departure__gte=since, departure__lt=until)
+        .exclude(state="open", verdict__in=REJECTED)
     )
-    found = [current_at(row) for row in rows.order_by("-load__departure", "-load_id")[:most]]
+    found = [current_of(row) for row in rows.order_by("-departure", "-load_id")[:most]]
     loads = {one.load.id for one in found}
     verdicts = Assessment.objects.filter(load_id__in=loads, verdict__in=REJECTED).order_by(
         "load_id", "number"
@@ -86,10 +85,8 @@ def people_who_may_hold(operator: str) -> tuple[Person, ...]:
     return tuple(Person.objects.filter(operator_id=operator, is_active=True).order_by("name", "login"))
 
 
-def _last_steps(operator: str) -> "QuerySet[Step]":
-    later = Step.objects.filter(load_id=OuterRef("load_id"), number__gt=OuterRef("number"))
-    rows = steps_with_their_loads().select_related("load__pilot")
-    return rows.filter(~Exists(later), operator_id=operator)
+def _present(operator: str) -> "QuerySet[Present]":
+    return loads_present().select_related("load__pilot").filter(operator_id=operator)
 
 
 def _remarks(loads: Iterable[UUID]) -> dict[UUID, tuple[Remark, ...]]:
@@ -117,7 +114,5 @@ def _ends(found: list[Current]) -> dict[UUID, Current]:
         last = {first: after.get(end, end) for first, end in last.items()}
     standing = {one.load.id: one for one in found}
     missing = set(last.values()) - standing.keys()
-    later = Step.objects.filter(load_id=OuterRef("load_id"), number__gt=OuterRef("number"))
-    rows_of_ends = steps_with_their_loads().filter(Q(load_id__in=missing), ~Exists(later))
-    standing |= {row.load_id: current_at(row) for row in rows_of_ends}
+    standing |= {row.load_id: current_of(row) for row in loads_present().filter(load_id__in=missing)}
     return {first: standing[end] for first, end in last.items()}

@@ -9,20 +9,20 @@ from django.db import connection
 # Of a load assessed several times the first rejected assessment counts, once for each limit that was broken
 # or could not be checked.
 _REJECTED: Final = """
-SELECT c.registration, r.load_id, l.departure, broken ->> 'code', broken ->> 'title', broken ->> 'result'
-FROM loads_load l
-JOIN fleet_aircraft c ON c.id = l.aircraft_id
-JOIN LATERAL (SELECT a.load_id, a.result FROM loads_assessment a
-              WHERE a.load_id = l.id AND a.verdict IN ('outside', 'unresolved')
+SELECT c.registration, p.load_id, p.departure, broken ->> 'code', broken ->> 'title', broken ->> 'result'
+FROM loads_present p
+JOIN fleet_aircraft c ON c.id = p.aircraft_id
+JOIN LATERAL (SELECT a.result FROM loads_assessment a
+              WHERE a.load_id = p.load_id AND a.verdict IN ('outside', 'unresolved')
               ORDER BY a.number LIMIT 1) r ON true
 LEFT JOIN LATERAL jsonb_path_query(
     r.result::jsonb, '$.checks[*] ? (@.result == "fail" || @.result == "unresolved")') broken ON true
-WHERE l.operator_id = %s AND l.departure >= %s AND l.departure < %s
-ORDER BY l.departure, l.id
+WHERE p.operator_id = %s AND p.rejected AND p.departure >= %s AND p.departure < %s
+ORDER BY p.departure, p.load_id
 """
 _SUBMITTED: Final = """
-SELECT c.registration, count(*) FROM loads_load l JOIN fleet_aircraft c ON c.id = l.aircraft_id
-WHERE l.operator_id = %s AND l.departure >= %s AND l.departure < %s GROUP BY c.registration
+SELECT c.registration, count(*) FROM loads_present p JOIN fleet_aircraft c ON c.id = p.aircraft_id
+WHERE p.operator_id = %s AND p.departure >= %s AND p.departure < %s GROUP BY c.registration
 """
 WEEK: Final = timedelta(days=7)
 

@@ -22,6 +22,7 @@ _RIGHTS_OF_MODE = {
     "close-once": {"SELECT", "INSERT"},
     "edit": {"SELECT", "INSERT", "UPDATE"},
     "trail": {"SELECT"},
+    "derived": {"SELECT"},
 }
 # The register is written by guard_table() as the owner only; nobody but the sealing functions has the
 # closing table.

@@ -5,7 +5,9 @@ from django.db import models
 
 
 class GuardedTable(models.Model):
-    """One table. Written by guard_table() and exempt_table() in migrations, and itself under guard."""
+    """One table. Written by guard_table(), exempt_table() and derive_table() in migrations, and itself under
+    guard.
+    """
 
     name = models.TextField(primary_key=True)
     mode = models.TextField()
@@ -18,12 +20,14 @@ class GuardedTable(models.Model):
     reason = models.TextField(blank=True)
     triggers = ArrayField(models.TextField())
     chain = models.TextField()
+    # Of a derived table: the query that says what must stand there. Reconciliation asks it.
+    derived_by = models.TextField(blank=True, db_default="")
 
     class Meta:
         db_table = "records_guarded_table"
         constraints = [
             models.CheckConstraint(
-                condition=models.Q(mode__in=["append", "close-once", "edit", "exempt", "trail"]),
+                condition=models.Q(mode__in=["append", "close-once", "edit", "exempt", "trail", "derived"]),
                 name="guarded_table_mode_is_known",
             )
         ]

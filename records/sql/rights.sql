@@ -7,7 +7,7 @@ BEGIN
     FOR ours IN SELECT p.oid::regprocedure FROM pg_proc p WHERE p.pronamespace = 'public'::regnamespace AND p.proname = ANY ('{
         act_open,name_kept,salted_digest,refuse_write,row_key,row_image,hidden_words,closed_once,refuse_without_act,
         check_operator,witness_insert,witness_update,act_closes,closing_seals,entry_digest,entry_text,
-        guard_table,exempt_table,column_type,check_definition,put_trigger,put_refusals,grant_rights,keep_definition,
+        guard_table,exempt_table,derive_table,column_type,check_definition,put_trigger,put_refusals,grant_rights,keep_definition,
         trigger_definitions,access_note,access_kept_as,access_digest}'::text[]) LOOP
         EXECUTE format('REVOKE ALL ON FUNCTION %s FROM PUBLIC, tarebook_service', ours);
     END LOOP;

@@ -115,8 +115,8 @@ def test_numbers_are_counted_and_found_unbroken(people) -> None:
 
     found = numbers_of(people.operator.code)
 
-    assert (empty.count, empty.unbroken) == (0, True)
-    assert (found.count, found.first, found.last, found.filed) == (2, 1, 2, 1)
+    assert (empty.newest, empty.unbroken) == (0, True)
+    assert (found.newest, found.first, found.last, found.filed) == (2, 1, 2, 1)
     assert found.unbroken
     assert Paper.objects.count() == 2
 
