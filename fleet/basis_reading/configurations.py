@@ -2,12 +2,14 @@
 
 from typing import Any
 
-from fleet.basis import Configuration, FixedItem, Limits
+from fleet.basis import Configuration, FixedItem
 from fleet.basis_reading.findings import Findings, exact
 from fleet.basis_reading.limits import tightened
+from fleet.basis_reading.performance import read_performance
+from fleet.basis_reading.variants import Variants
 
 
-def read_configurations(findings: Findings, limits: Limits) -> tuple[Configuration, ...]:
+def read_configurations(findings: Findings, variants: Variants) -> tuple[Configuration, ...]:
     """Return the configurations; unknown seats or places, and too few seats for the crew, are faults."""
     findings.once(("configurations",))
     configurations = []
@@ -25,7 +27,14 @@ def read_configurations(findings: Findings, limits: Limits) -> tuple[Configurati
                 minimum_crew=entry["minimum_crew"],
                 equipment=_items(findings, f"{at}/equipment", entry.get("equipment", [])),
                 operating_items=_items(findings, f"{at}/operating_items", entry.get("operating_items", [])),
-                limits=tightened(findings, entry.get("limits"), f"{at}/limits", limits),
+                limits=tightened(
+                    findings,
+                    entry.get("limits"),
+                    f"{at}/limits",
+                    variants.of_configuration(findings, at, entry),
+                ),
+                modifications=tuple(entry.get("modifications", ())),
+                performance=read_performance(findings, entry.get("performance"), f"{at}/performance"),
             )
         )
     return tuple(configurations)

@@ -4,7 +4,9 @@ from fractions import Fraction
 from typing import Any
 
 from fleet.basis import Envelope, Limits, Phase
+from fleet.basis_reading.applicability import combinations, everything, in_words, read_applicability
 from fleet.basis_reading.findings import Findings, number
+from fleet.basis_reading.variants import Variants
 from fleet.conversion import converted
 from fleet.envelope import NotAnEnvelope
 from fleet.quantities import DIMENSION_OF, Dimension, Unit
@@ -25,6 +27,7 @@ _LIMIT_OF: dict[str, str] = {
 # Above the greatest weight limit by more than this an envelope is taken for one in another unit, or of
 # another type.
 _MOST_ABOVE = Fraction(5, 4)
+Served = tuple[str, str, str, str]  # axis, phase, configuration, category
 
 
 def phases_of(words: list[str]) -> tuple[Phase, ...]:
@@ -32,47 +35,65 @@ def phases_of(words: list[str]) -> tuple[Phase, ...]:
     return tuple(phase for word in words for phase in _PHASES[word])
 
 
-def read_envelopes(findings: Findings, limits: Limits) -> tuple[Envelope, ...]:
+def read_envelopes(findings: Findings, variants: Variants) -> tuple[Envelope, ...]:
     """Return the envelopes.
 
     One that is no polygon, or contradicts a limit or another envelope, is a fault.
     """
     findings.once(("envelopes",))
     envelopes = []
-    seen: set[tuple[str, str]] = set()
+    taken: set[Served] = set()
     for at, entry in findings.entries("envelopes"):
+        pairs = combinations(findings, entry)
         for row, word in enumerate(entry["phases"]):
-            if (entry["axis"], word) in seen:
+            mine = {(entry["axis"], word, *pair) for pair in pairs}
+            if mine & taken:
+                where = _where(findings, mine & taken)
                 findings.fault(
                     f"{at}/phases/{row}",
                     "envelope-twice",
-                    f"another {entry['axis']} envelope already serves {word}; keep the one that holds",
+                    f"another {entry['axis']} envelope already serves {word}{where}; keep the one that holds",
                 )
-            seen.add((entry["axis"], word))
+            taken |= mine
         envelope = _envelope(findings, at, entry)
         if envelope is not None:
-            _demand_reach(findings, at, entry["phases"], envelope, limits)
+            for limits in variants.served(findings, entry):
+                _demand_reach(findings, at, entry["phases"], envelope, limits)
             envelopes.append(envelope)
     if findings.sound("/envelopes"):
-        for word in ("take-off", "landing"):
-            if ("longitudinal", word) not in seen:
-                findings.fault(
-                    "/envelopes",
-                    "envelope-missing",
-                    f"no longitudinal envelope serves {word}; enter the manual's",
-                )
+        _demand_all(findings, taken)
     return tuple(envelopes)
+
+
+def _demand_all(findings: Findings, taken: set[Served]) -> None:
+    """Add a fault where a configuration, in a category, has no longitudinal envelope it is flown with."""
+    for word in ("take-off", "landing"):
+        wanted = {("longitudinal", word, *pair) for pair in everything(findings)}
+        missing = wanted - taken
+        if missing:
+            where = "" if missing == wanted else _where(findings, missing)
+            findings.fault(
+                "/envelopes",
+                "envelope-missing",
+                f"no longitudinal envelope serves {word}{where}; enter the manual's",
+            )
+
+
+def _where(findings: Findings, served: set[Served]) -> str:
+    """Return the first pair a fault is about, in words; nothing where it is about all there are."""
+    pairs = {(configuration, category) for _, _, configuration, category in served}
+    return "" if pairs == everything(findings) else f" in {in_words(min(pairs))}"
 
 
 def lateral_limits_entered(findings: Findings, envelopes: tuple[Envelope, ...]) -> bool:
     """Return whether lateral limits are known: by an envelope, or by a page that shows there are none."""
-    lateral = any(envelope.axis == "lateral" for envelope in envelopes)
+    lateral = "lateral_by_cg" in findings.document or any(one.axis == "lateral" for one in envelopes)
     stated_none = "lateral_limits" in findings.document
     if lateral and stated_none:
         findings.fault(
             "/lateral_limits",
             "limits-contradict",
-            "there is a lateral envelope, so there are limits; remove one",
+            "there are lateral limits; remove one of the two",
         )
     return lateral or stated_none
 
@@ -102,6 +123,7 @@ def _envelope(findings: Findings, at: str, entry: dict[str, Any]) -> Envelope | 
                 for weight, value in entry["points"]
             ),
             source=findings.source(entry["source"]),
+            **read_applicability(findings, at, entry),
         )
     except NotAnEnvelope as refused:
         findings.fault(f"{at}/points", refused.code, str(refused))

@@ -19,7 +19,7 @@ _NOT_ABOVE = (
 
 def read_limits(findings: Findings) -> Limits:
     """Return the limits of the basis; what was not entered is None."""
-    limits = _limits(findings, findings.document.get("limits"), "/limits")
+    limits = given_limits(findings, findings.document.get("limits"), "/limits")
     demand_consistent(findings, limits, "/limits")
     return limits
 
@@ -30,7 +30,7 @@ def tightened(findings: Findings, own: dict[str, Any] | None, at: str, of_basis:
     """
     if own is None:
         return of_basis
-    given = _limits(findings, own, at)
+    given = given_limits(findings, own, at)
     tighter = {}
     for field in FIELDS:
         mine: Limit | None = getattr(given, field)
@@ -69,7 +69,7 @@ def demand_consistent(findings: Findings, limits: Limits, at: str) -> None:
             )
 
 
-def _limits(findings: Findings, given: Any, at: str) -> Limits:
+def given_limits(findings: Findings, given: Any, at: str) -> Limits:
     """Return the limits that are sound.
 
     One with a fault of form counts as not entered while the rest is read.
