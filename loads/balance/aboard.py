@@ -10,6 +10,12 @@ from fractions import Fraction
 from typing import Literal
 
 from fleet.basis import Configuration, Place, Seat, Tank
+from fleet.flight_rules import CertificationCategory, PerformanceKind
+from fleet.stations import Condition
+from loads.balance.circumstances import PLAIN, Circumstances
+from loads.balance.events import Event
+from loads.balance.footing import Contact, Rigging
+from loads.balance.standard_use import StandardUse
 
 How = Literal["weighed", "declared", "standard", "estimated"]
 HOWS: tuple[How, ...] = ("weighed", "declared", "standard", "estimated")
@@ -21,7 +27,9 @@ PILOT_IN_COMMAND = "pilot in command"
 
 @dataclass(frozen=True, slots=True)
 class Flight:
-    """Which flight it is; `departure` carries its offset from UTC."""
+    """Which flight it is; `departure` carries its offset from UTC. `follows` is the id of the load of the leg
+    before.
+    """
 
     reference: str
     leg: int
@@ -29,6 +37,7 @@ class Flight:
     origin: str
     destination: str
     operation: str
+    follows: str | None = None
 
 
 @dataclass(frozen=True, slots=True)
@@ -68,12 +77,17 @@ class Person:
     how: How
     lap_infant: LapInfant | None
     pointer: str
+    restraint: Fraction | None = None  # what a child's or infant's restraint weighs, where one is aboard
+    added: Fraction | None = None  # of the weight, what a table adds to a declared one
 
 
 @dataclass(frozen=True, slots=True)
 class Item:
     """A thing in a place. `removed`: equipment of the empty weight that is not aboard; its weight is then
     negative.
+
+    `weight` counts `rigging`, too: the pallet, net and spreader that go with it. `contact` is what touches
+    the floor (None: not stated).
     """
 
     kind: Kind
@@ -83,6 +97,8 @@ class Item:
     how: How
     removed: bool
     pointer: str
+    rigging: tuple[Rigging, ...] = ()
+    contact: Contact | None = None
 
 
 @dataclass(frozen=True, slots=True)
@@ -115,6 +131,7 @@ class StatedLimit:
     at: LimitedPhase
     weight: Fraction
     source: str
+    kind: PerformanceKind | None = None  # what of the performance it comes from, where that is said
 
 
 @dataclass(frozen=True, slots=True)
@@ -129,3 +146,9 @@ class Declared:
     items: tuple[Item, ...]
     fuel: FuelPlan
     limits: tuple[StatedLimit, ...]
+    conditions: tuple[Condition, ...] = ()  # those declared to hold
+    settings: tuple[tuple[Seat, str], ...] = ()  # seats on rails as they stand, each with its setting's name
+    sequence: tuple[Event, ...] = ()
+    standards: StandardUse | None = None  # what was taken from a table of standard weights
+    circumstances: Circumstances = PLAIN
+    category: CertificationCategory | None = None  # of certification: normal, utility, ...

@@ -2,12 +2,15 @@
 versions give the same bytes, always.
 """
 
+from collections.abc import Callable, Mapping
 from functools import cache
 
+from fleet.applicable import applicable
 from fleet.basis import PHASES, Basis, Phase
 from fleet.weighing import EmptyFigures
 from loads.balance.aboard import Declared, Outline
 from loads.balance.checks_balance import balance_checks
+from loads.balance.checks_floor import floor_checks
 from loads.balance.checks_known import (
     empty_weight_check,
     no_basis,
@@ -17,16 +20,22 @@ from loads.balance.checks_known import (
     weight_knowledge,
 )
 from loads.balance.checks_path import path_checks
-from loads.balance.checks_places import held_by, place_checks, tank_checks
+from loads.balance.checks_places import Held, held_by, place_checks, tank_checks
+from loads.balance.checks_running import running_checks
+from loads.balance.checks_seats import seat_checks
+from loads.balance.checks_standard import standard_checks
 from loads.balance.checks_weight import landing_fuel_check, weight_checks
-from loads.balance.fuel import FuelOffTable, FuelState, fuel_states
+from loads.balance.checks_whole import whole_aircraft_checks
+from loads.balance.flown import Flown, at_ends_of_rails, fly, path_of, states_aboard, worst_of_each
+from loads.balance.fuel import FuelOffTable, FuelState
 from loads.balance.moves import cg_advice
-from loads.balance.path import burn_path
 from loads.balance.path_worst import Burn, burn_of
 from loads.balance.prepared import Prepared, prepared
+from loads.balance.rails import Flight, RailEnd, at_rail_end, rail_ends, worse_of
 from loads.balance.report import Assessed, report, report_without_basis
 from loads.balance.result import Check, Result, State, verdict_of
-from loads.balance.sumsheet import Aboard, all_lines, lines_without_fuel
+from loads.balance.sections import dry_at_phases
+from loads.balance.sumsheet import Aboard, Sums, all_lines, lines_without_fuel
 
 
 def assess(
@@ -45,17 +54,22 @@ def assess(
         return Result(verdict_of(unknown), unknown, (), (), report_without_basis())
     if isinstance(declared, Outline):
         raise TypeError("with a basis the whole declaration is needed, not its outline")
-    ready = prepared(basis)
+    category = None if declared.category is None else declared.category.id
+    ready = prepared(applicable(basis, declared.configuration.id, category))
     standing = empty_weight_check(empty, basis, declared.configuration.fit)
-    aboard = lines_without_fuel(declared, empty if standing.outcome == "pass" else None)
-    fuel, off_table = _fuel(declared, ready)
-    states, nothing_left = _states(aboard, fuel, ready)
-    burn = burn_of(burn_path(declared.fuel, fuel, states), ready) if fuel and states else None
+    known = empty if standing.outcome == "pass" else None
+    aboard = lines_without_fuel(declared, known)
+    flown, off_table = _flown(declared, known, ready)
+    fuel = None if flown is None else flown.fuel
+    states, nothing_left = _states_of(declared, aboard, flown, ready)
+    burn = burn_of(path_of(declared, flown, states, ready), ready) if flown and states else None
     checks = (
         standing,
         *weight_knowledge(declared),
+        *standard_checks(declared.standards),
         persons_check(declared),
-        *_checks(declared, states, burn, ready, advised=advised),
+        *_checks(declared, states, burn, known, ready, advised=advised),
+        *whole_aircraft_checks(declared, states, fuel, ready),
         *off_table,
         *nothing_left,
     )
@@ -65,17 +79,34 @@ def assess(
     return Result(verdict, checks, tuple(states.values()), lines, document, burn)
 
 
-def _fuel(declared: Declared, ready: Prepared) -> tuple[dict[Phase, FuelState] | None, tuple[Check, ...]]:
+def _flown(
+    declared: Declared, empty: EmptyFigures | None, ready: Prepared
+) -> tuple[Flown | None, tuple[Check, ...]]:
     try:
-        return fuel_states(declared.fuel, ready), ()
+        return fly(declared, empty, ready), ()
     except FuelOffTable as off:
         return None, (off_table_check(off, ready),)
 
 
-def _states(
-    aboard: Aboard, fuel: dict[Phase, FuelState] | None, ready: Prepared
+def _states_of(
+    declared: Declared, aboard: Aboard, flown: Flown | None, ready: Prepared
 ) -> tuple[dict[Phase, State], tuple[Check, ...]]:
-    """Return the aircraft at each phase in order; nothing at all where a part of it is not known."""
+    if flown is None:
+        return {}, ()
+    dry_at = dry_at_phases(declared, flown.dry) if flown.dry is not None else None
+    return _states(aboard, flown.fuel, ready, dry_at)
+
+
+def _states(
+    aboard: Aboard,
+    fuel: Mapping[Phase, FuelState] | None,
+    ready: Prepared,
+    dry_at: Mapping[Phase, Sums] | None = None,
+) -> tuple[dict[Phase, State], tuple[Check, ...]]:
+    """Return the aircraft at each phase in order; nothing at all where a part of it is not known.
+
+    `dry_at` is the aircraft without fuel at each phase where a sequence changes it.
+    """
     dry = aboard.without_fuel
     if dry is None or fuel is None:
         return {}, ()
@@ -83,6 +114,8 @@ def _states(
     staying = fuel["zero fuel"].usable_weight
     for phase in PHASES:
         held = fuel[phase]
+        if dry_at is not None:
+            dry = dry_at[phase]
         weight, moment = dry.weight + held.weight, dry.moment + held.moment
         if weight.numerator <= 0:
             return {}, (nothing_left_check(weight, ready),)
@@ -94,14 +127,53 @@ def _states(
 
 
 def _checks(
-    declared: Declared, states: dict[Phase, State], burn: Burn | None, ready: Prepared, *, advised: bool
+    declared: Declared,
+    states: dict[Phase, State],
+    burn: Burn | None,
+    empty: EmptyFigures | None,
+    ready: Prepared,
+    *,
+    advised: bool,
 ) -> list[Check]:
     held = held_by(declared)
     found: list[Check] = []
     if states and burn is not None:
-        advice = cache(lambda: cg_advice(declared, states, burn, held, ready) if advised else "")
+        ends = [
+            (end, _at_rail_end(declared, (states, burn), end, empty, ready)) for end in rail_ends(declared)
+        ]
+        flights = [flight for _, flight in ends] or [(states, burn)]
+        advice = cache(lambda: cg_advice(declared, flights, held, ready) if advised else "")
         found += weight_checks(declared, states, ready)
-        found += balance_checks(states, ready, advice)
-        found += path_checks(burn, states, ready, advice)
+        told = _centre_checks((states, burn), ready, advice)
+        if ends:
+            told = worse_of(told, [(end, _centre_checks(flight, ready, advice)) for end, flight in ends])
+        found += told
         found.append(landing_fuel_check(declared.fuel, states["landing"], ready))
-    return found + place_checks(held, ready) + tank_checks(declared, ready)
+    if declared.sequence:
+        runs = [(when, _aboard_checks(each, held_by(each), ready)) for when, each in states_aboard(declared)]
+        return found + worst_of_each(runs) + tank_checks(declared, ready)
+    return found + _aboard_checks(declared, held, ready) + tank_checks(declared, ready)
+
+
+def _aboard_checks(declared: Declared, held: Held, ready: Prepared) -> list[Check]:
+    """Return the checks of what is aboard, seat by seat and place by place."""
+    found = place_checks(held, ready, declared.conditions) + running_checks(held, ready)
+    return found + floor_checks(declared, ready) + seat_checks(declared, ready)
+
+
+def _at_rail_end(
+    declared: Declared, flight: Flight, end: RailEnd, empty: EmptyFigures | None, ready: Prepared
+) -> Flight:
+    """Return the phases and the path with all open seats at one end; people may leave such a seat."""
+    if not declared.sequence:
+        return at_rail_end(flight[0], flight[1], end, ready)
+    moved = at_ends_of_rails(declared, "forward" if end.words == "forward" else "aft")
+    flown = fly(moved, empty, ready)
+    states, _ = _states_of(moved, lines_without_fuel(moved, empty), flown, ready)
+    return states, burn_of(path_of(moved, flown, states, ready), ready)
+
+
+def _centre_checks(flight: Flight, ready: Prepared, advice: Callable[[], str]) -> list[Check]:
+    """Return the checks of the centre of gravity, at each phase and along the burn."""
+    states, burn = flight
+    return balance_checks(states, ready, advice) + path_checks(burn, states, ready, advice)

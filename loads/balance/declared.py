@@ -1,9 +1,11 @@
 """Reading a load document `tarebook.load/1` against the loading basis it will be assessed with.
 
 Nothing is assumed: what is missing, doubled, out of place or beyond belief is a fault, and all faults of a
-document are returned at once. What may be left out: `limits`, `fuel/not_usable`, a crew member's `person` and
-`category`, and of a passenger `category` and `lap_infant`. Equipment of the empty weight that is not aboard
-is an item of kind `equipment` with `removed: true`; its weight is typed positive and counts as negative.
+document are returned at once. What may be left out: `limits`, `certification_category`, `conditions`,
+`seat_settings`, `sequence`, `fuel/not_usable`, a crew member's `person` and `category`, of a passenger
+`category`, `lap_infant` and `restraint`, and of an item what it stands on. Equipment of the empty weight that
+is not aboard is an item of kind `equipment` with `removed: true`; its weight is typed positive and counts as
+negative.
 """
 
 from fractions import Fraction
@@ -11,19 +13,29 @@ from typing import cast
 
 from fleet.basis import Basis, Configuration, Place
 from fleet.conversion import in_unit
+from fleet.flight_rules import PERFORMANCE_KINDS, PerformanceKind
 from fleet.quantities import Dimension
+from fleet.standard_weights import StandardWeights
 from loads.balance.aboard import HOWS, KINDS, Declared, How, Item, Kind, LimitedPhase, StatedLimit
+from loads.balance.category import in_category, read_category
+from loads.balance.events import Event
+from loads.balance.exact import added
 from loads.balance.fields import Faults, Fields
+from loads.balance.fitted import read_conditions, read_settings
+from loads.balance.footing import FOOTING_FIELDS, read_footing
 from loads.balance.fuelling import read_fuel
 from loads.balance.outline import OPTIONAL, REQUIRED, outline_in, read_outline
 from loads.balance.people import Seating, read_crew, read_passengers
+from loads.balance.sequencing import Loaded, read_sequence
+from loads.balance.standard import with_standards
 from records.refusal import Invalid
 
 __all__ = ["read_load", "read_outline"]
 
 ITEM_FIELDS = ("kind", "what", "place", "how")
-ITEM_OPTIONAL = ("weight", "removed")
+ITEM_OPTIONAL = ("weight", "removed", *FOOTING_FIELDS)
 LIMIT_FIELDS = ("at", "weight", "source")
+LIMIT_OPTIONAL = ("kind",)
 LONGEST_WHAT = 120
 LONGEST_ID = 64
 LONGEST_SOURCE = 200
@@ -32,8 +44,10 @@ MOST_LIMITS = 20
 MOST_PERSONS = 1000
 
 
-def read_load(document: object, basis: Basis) -> Declared:
+def read_load(document: object, basis: Basis, table: StandardWeights | None = None) -> Declared:
     """Return the load a document declares, converted once and exactly into the units of the basis.
+
+    Standard weights come from the `table` in force; without one they are not known.
 
     Raises `Invalid` with every fault (at most 100), each naming its field by JSON pointer.
     """
@@ -42,18 +56,30 @@ def read_load(document: object, basis: Basis) -> Declared:
     outline = outline_in(fields)
     configuration = _configuration(fields, basis)
     # Without a configuration seats are still read, against the whole basis: no fault waits for another.
-    seating = Seating(basis, configuration or _everything(basis))
+    conditions, settings = read_conditions(fields, basis), read_settings(fields, basis)
+    seating = Seating(basis, configuration or _everything(basis), settings)
     crew = read_crew(fields, seating)
     passengers = read_passengers(fields, seating)
+    standards = None
+    if table is not None and outline is not None:
+        crew, passengers, standards = with_standards(
+            (crew, passengers), table, outline.flight, basis, faults
+        )
     items = _items(fields, basis, seating.configuration)
     fuel = read_fuel(fields, basis)
     limits = _limits(fields, basis)
+    category = read_category(fields, basis)
+    events: tuple[Event, ...] = ()
+    if "sequence" in fields:
+        events = read_sequence(fields, basis, seating, Loaded(crew, passengers, items, fuel))
     persons = _persons_on_board(fields)
     if faults.all():
         raise Invalid(*faults.all())
     if outline is None or configuration is None or fuel is None or persons is None:
         raise AssertionError("a part of the load is missing and no fault was noted")
-    return Declared(outline, configuration, persons, crew, passengers, items, fuel, limits)
+    aboard = (persons, crew, passengers, items, fuel, limits)
+    besides = (conditions, settings, events, standards)
+    return Declared(outline, in_category(configuration, category), *aboard, *besides, category=category)
 
 
 def _configuration(fields: Fields, basis: Basis) -> Configuration | None:
@@ -89,10 +115,14 @@ def _item(line: Fields, known: dict[str, Place], configuration: Configuration, b
             "removed", "removed-not-equipment", "only equipment of the empty weight can be removed; drop it"
         )
     weight = _item_weight(line, how, basis)
+    footing = read_footing(line, basis) if any(name in line for name in FOOTING_FIELDS) else None
     if kind is None or what is None or place is None or how is None:
         return None
     signed = -weight if removed and weight is not None else weight
-    return Item(kind, what, place, signed, how, removed, line.pointer)
+    if footing is None:
+        return Item(kind, what, place, signed, how, removed, line.pointer)
+    whole = None if signed is None else added((signed, *(part.weight for part in footing.rigging)))
+    return Item(kind, what, place, whole, how, removed, line.pointer, footing.rigging, footing.contact)
 
 
 def _place(line: Fields, known: dict[str, Place], configuration: Configuration) -> Place | None:
@@ -127,13 +157,14 @@ def _item_weight(line: Fields, how: How | None, basis: Basis) -> Fraction | None
 
 def _limits(fields: Fields, basis: Basis) -> tuple[StatedLimit, ...]:
     found = []
-    for line in fields.objects("limits", MOST_LIMITS, LIMIT_FIELDS):
+    for line in fields.objects("limits", MOST_LIMITS, LIMIT_FIELDS, LIMIT_OPTIONAL):
         at = line.choice("at", ("take-off", "landing"))
         weight = line.quantity("weight", Dimension.WEIGHT, zero=False)
         source = line.text("source", LONGEST_SOURCE)
+        kind = cast("PerformanceKind | None", line.choice("kind", PERFORMANCE_KINDS))
         if at is not None and weight is not None and source is not None:
             phase: LimitedPhase = "take-off" if at == "take-off" else "landing"
-            found.append(StatedLimit(phase, in_unit(weight, basis.weight_unit), source))
+            found.append(StatedLimit(phase, in_unit(weight, basis.weight_unit), source, kind))
     return tuple(found)
 
 

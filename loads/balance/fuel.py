@@ -27,10 +27,14 @@ class Draw(NamedTuple):
     each: Fraction
 
 
+Filled = tuple[tuple[Phase, Contents, tuple[Draw, ...]], ...]  # each phase with what leads there
+
+
 @dataclass(frozen=True, slots=True)
 class FuelState:
     """Fuel in the tanks at one phase. `usable` and `moments` are by tank; weight and moments count trapped
-    fuel, too. `draws` lead here from the phase before it in flight; () at the ramp and at zero fuel.
+    fuel, too. `draws` lead here from the phase before it in flight; () at the ramp and at zero fuel, and where
+    something happens in between: `loads.balance.sections` has them then.
     """
 
     phase: Phase
@@ -104,13 +108,18 @@ def fuel_states(plan: FuelPlan, ready: Prepared) -> dict[Phase, FuelState]:
     least, _, holding = drawn(landing, basis.burn_order, spare)
     fed = {tank for stage in basis.burn_order for tank in stage.tanks}
     empty = {tank: NOTHING if tank in fed else held for tank, held in take_off.items()}
-    contents: tuple[tuple[Phase, Contents, tuple[Draw, ...]], ...] = (
+    contents: Filled = (
         ("ramp", ramp, ()),
         ("take-off", take_off, taxiing),
         ("zero fuel", empty, ()),
         ("landing", landing, flying),
         ("minimum at landing", least, holding),
     )
+    return states_of(plan, contents, ready)
+
+
+def states_of(plan: FuelPlan, contents: Filled, ready: Prepared) -> dict[Phase, FuelState]:
+    """Return the fuel at each phase from what the tanks hold there. Raises `FuelOffTable`."""
     known: dict[tuple[str, int, int], Fraction] = {}
     return {phase: _state(phase, plan, held, ready, known, draws=draws) for phase, held, draws in contents}
 

@@ -19,12 +19,14 @@ REQUIRED = (
     "items",
     "fuel",
 )
-OPTIONAL = ("limits",)
+OPTIONAL = ("limits", "certification_category", "conditions", "seat_settings", "sequence")
 FLIGHT_FIELDS = ("reference", "leg", "departure", "origin", "destination", "operation")
+FLIGHT_OPTIONAL = ("follows",)
 LONGEST_ID = 64
 LONGEST_WORD = 80
 MOST_LEGS = 99
 EARLIEST_YEAR, LATEST_YEAR = 1950, 2150
+_UUID = re.compile(r"[0-9a-fA-F]{8}(-[0-9a-fA-F]{4}){3}-[0-9a-fA-F]{12}", re.ASCII)
 _RFC_3339 = re.compile(
     r"\d{4}-\d{2}-\d{2}T\d{2}:\d{2}(?::\d{2}(?:\.\d{1,6})?)?(?P<offset>Z|[+-]\d{2}:\d{2})?", re.ASCII
 )
@@ -47,7 +49,7 @@ def outline_in(fields: Fields) -> Outline | None:
     fields.choice("schema", (SCHEMA,))
     aircraft = fields.text("aircraft", LONGEST_ID)
     configuration = fields.text("configuration", LONGEST_ID)
-    flight = _flight(fields.inner("flight", FLIGHT_FIELDS))
+    flight = _flight(fields.inner("flight", FLIGHT_FIELDS, FLIGHT_OPTIONAL))
     if aircraft is None or configuration is None or flight is None:
         return None
     return Outline(aircraft, configuration, flight)
@@ -62,11 +64,23 @@ def _flight(fields: Fields | None) -> Flight | None:
     origin = fields.text("origin", LONGEST_WORD)
     destination = fields.text("destination", LONGEST_WORD)
     operation = fields.text("operation", LONGEST_WORD)
+    follows = _follows(fields)
     if reference is None or leg is None or departure is None:
         return None
     if origin is None or destination is None or operation is None:
         return None
-    return Flight(reference, leg, departure, origin, destination, operation)
+    return Flight(reference, leg, departure, origin, destination, operation, follows)
+
+
+def _follows(fields: Fields) -> str | None:
+    """Return the id of the load of the leg before, as it is written: a UUID."""
+    typed = fields.text("follows", LONGEST_ID)
+    if typed is None:
+        return None
+    if _UUID.fullmatch(typed) is None:
+        fields.note("follows", "id-form", "not the id of a load; write the id its answer gave")
+        return None
+    return typed.lower()
 
 
 def _departure(fields: Fields) -> datetime | None:

@@ -46,13 +46,21 @@ class Knot(NamedTuple):
 
 
 class Stretch(NamedTuple):
-    """The path between two kinks; `bend` is the square part of moment over weight, in length / weight."""
+    """The path between two kinks; `bend` is the square part of moment over weight, in length / weight.
+
+    `held` is what the tanks hold where the draw begins, with what each feeding one has given before `start`.
+    `dry` is the aircraft without usable fuel, None where that is the same all along; `setting` is in words the
+    positions it is flown in, "" where they are as the sequence or the weighing has them.
+    """
 
     leg: Leg
     feeding: tuple[str, ...]
     start: Knot
     end: Knot
     bend: Fraction
+    held: tuple[Contents, Fraction] = ({}, NOTHING)
+    dry: Fraction | None = None
+    setting: str = ""
 
     def at(self, weight: Fraction) -> Knot:
         """Return the aircraft at a weight of this stretch."""
@@ -78,50 +86,87 @@ class Gap(NamedTuple):
     first: Fraction
 
 
+class Turn(NamedTuple):
+    """A moment of the flight at which nothing is burned: one side of an event, or a transfer.
+
+    Its knots have one weight, each with what the tanks hold. Where it is `swept` the moments run from the
+    first knot to the last through all between their least and their greatest.
+    """
+
+    leg: Leg
+    where: str
+    knots: tuple[tuple[Knot, Contents], ...]
+    swept: bool
+    dry: Fraction
+    setting: str = ""
+
+
 @dataclass(frozen=True, slots=True)
 class Path:
-    """The path in the order of flight, and what of it is not known."""
+    """The path in the order of flight, and what of it is not known. `density` is that of the fuel.
+
+    `turns` are the events. `settings` are the same stretches once more, for every setting of gear and flaps
+    that may hold there beside the one they are flown in; nothing of these is across the aircraft.
+    """
 
     stretches: tuple[Stretch, ...]
     gaps: tuple[Gap, ...]
+    density: Fraction
+    turns: tuple[Turn, ...] = ()
+    settings: tuple[Stretch, ...] = ()
 
 
 def burn_path(plan: FuelPlan, fuel: Mapping[Phase, FuelState], states: Mapping[Phase, State]) -> Path:
     """Return the path of a load whose phases are known; a leg that burns nothing has no stretch."""
-    tanks = _Tanks(plan, fuel["ramp"], states["ramp"])
+    tanks = FlownTanks(plan, fuel["ramp"], knot_of(states["ramp"]))
     stretches: list[Stretch] = []
     gaps: list[Gap] = []
     for leg, before, after in LEGS:
-        draws, contents = fuel[after].draws, fuel[before].usable
-        here: Knot | None = _knot(states[before])
+        start, end = knot_of(states[before]), knot_of(states[after])
+        tanks.fly(leg, fuel[before].usable, fuel[after].draws, (start, end), stretches, gaps)
+    return Path(tuple(stretches), tuple(gaps), plan.density)
+
+
+class FlownTanks:
+    """The tanks of one load with the aircraft around them: a state of the fuel, and the aircraft there."""
+
+    __slots__ = ("density", "held", "loaded")
+
+    def __init__(self, plan: FuelPlan, fuel: FuelState, loaded: Knot) -> None:
+        self.density = plan.density
+        self.held: dict[str, TankFuel] = {held.tank.id: held for held in plan.tanks}
+        self.loaded = (fuel, loaded)
+
+    def fly(
+        self,
+        leg: Leg,
+        contents: Contents,
+        draws: Sequence[Draw],
+        ends: tuple[Knot | None, Knot | None],
+        stretches: list[Stretch],
+        gaps: list[Gap],
+    ) -> None:
+        """Add the path through draws that follow each other; the aircraft at both ends is known, or in a
+        gap.
+        """
+        here, landed = ends
         for number, draw in enumerate(draws, 1):
             last = number == len(draws)
             left = contents if last else _less(contents, draw)
-            if here is not None and tanks.of_one_arm(draw.feeding):
-                there = _knot(states[after]) if last else tanks.burned(here, draw)
-                stretches.append(Stretch(leg, draw.feeding, here, there, NOTHING))
+            if here is not None and self.of_one_arm(draw.feeding) and not (last and landed is None):
+                there = landed if last else self.burned(here, draw)
+                if there is not None:
+                    stretches.append(Stretch(leg, draw.feeding, here, there, NOTHING, (contents, NOTHING)))
                 here = there
             else:
-                there_or_gap = _knot(states[after]) if last else tanks.knot(left)
-                for part in tanks.parts(leg, draw, contents, here, there_or_gap):
+                there = landed if last else self.knot(left)
+                for part in self.parts(leg, draw, contents, here, there):
                     if isinstance(part, Stretch):
                         stretches.append(part)
                     else:
                         gaps.append(part)
-                here = there_or_gap
+                here = there
             contents = left
-    return Path(tuple(stretches), tuple(gaps))
-
-
-class _Tanks:
-    """The tanks of one load with the aircraft around them."""
-
-    __slots__ = ("density", "held", "loaded")
-
-    def __init__(self, plan: FuelPlan, fuel: FuelState, state: State) -> None:
-        self.density = plan.density
-        self.held: dict[str, TankFuel] = {held.tank.id: held for held in plan.tanks}
-        self.loaded = (fuel, state)
 
     def of_one_arm(self, feeding: Sequence[str]) -> bool:
         """Return whether each of these tanks has one arm at every quantity down to nothing."""
@@ -157,6 +202,14 @@ class _Tanks:
             across += held.tank.lateral_moment(volume, self.density)
         return Knot(weight, moment, state.lateral_moment - fuel.lateral_moment + across)
 
+    def gap(self, leg: Leg, contents: Contents) -> Gap:
+        """Return the gap these usable volumes lie in."""
+        for tank, held in self.held.items():
+            volume, first = contents[tank] + held.trapped, held.tank.table.curve.first
+            if volume and volume < first:
+                return Gap(leg, tank, first)
+        raise ValueError("every tank's table tells its moment")
+
     def parts(
         self, leg: Leg, draw: Draw, contents: Contents, start: Knot | None, end: Knot | None
     ) -> Iterator[Stretch | Gap]:
@@ -178,7 +231,7 @@ class _Tanks:
             else:
                 square = added(piece.bend for piece in pieces.values() if piece is not None)
                 bend = square / (len(pieces) ** 2 * self.density)
-                yield Stretch(leg, draw.feeding, here, there, bend)
+                yield Stretch(leg, draw.feeding, here, there, bend, (contents, drawn))
             here = there
 
     def _piece(self, tank: str, above: Fraction, below: Fraction) -> TankPiece | None:
@@ -187,7 +240,8 @@ class _Tanks:
         return next((piece for piece in pieces if piece.first <= below and above <= piece.last), None)
 
 
-def _knot(state: State) -> Knot:
+def knot_of(state: State) -> Knot:
+    """Return the aircraft at a phase as a kink of the path."""
     return Knot(state.weight, state.moment, state.lateral_moment, state.phase)
 
 

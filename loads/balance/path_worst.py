@@ -18,13 +18,15 @@ from dataclasses import replace
 from fractions import Fraction
 from typing import NamedTuple
 
-from fleet.basis import Axis
-from loads.balance.path import Knot, Path, Stretch
+from fleet.basis import Axis, Phase
+from loads.balance.path import NOTHING, Knot, Leg, Path, Stretch, Turn
 from loads.balance.path_curve import curves_of
 from loads.balance.path_margin import Beyond, least_margin
 from loads.balance.path_outside import Nearest
+from loads.balance.path_turns import moment_of, turn_points
 from loads.balance.prepared import Bound, Prepared
 
+FLOWN: tuple[Phase, ...] = ("ramp", "take-off", "landing")
 AXES: tuple[Axis, ...] = ("longitudinal", "lateral")
 BITS = 80  # how finely an irrational weight or margin is bounded: 2**-80 of the unit
 
@@ -56,6 +58,8 @@ def burn_of(path: Path, ready: Prepared) -> Burn:
     worst: dict[Axis, Worst] = {}
     for axis in AXES:
         found = [_settled(bound, point, axis) for bound, point in _points(path, axis, ready)]
+        if path.turns:  # of equals an event is named rather than a point beside it
+            found = [*_turns(path, axis, ready), *found]
         if found:
             worst[axis] = min(found, key=lambda each: (each.room is not None, each.room or Fraction(0)))
     return Burn(path, worst)
@@ -68,6 +72,8 @@ def stays_inside(path: Path, ready: Prepared, along: Fraction, across: Fraction)
         isinstance(point, Nearest) and point.margin.sign() >= 0
         for axis in AXES
         for _, point in _points(beside, axis, ready)
+    ) and all(
+        worst.room is not None and worst.room >= 0 for axis in AXES for worst in _turns(beside, axis, ready)
     )
 
 
@@ -91,18 +97,57 @@ def _points(path: Path, axis: Axis, ready: Prepared) -> list[tuple[Bound, Neares
     landing = ready.bounds(axis, "landing")
     if not path.stretches or not (ramp or flight or landing):
         return []
-    curves = curves_of(path.stretches, axis)
+    stretches = path.stretches
+    if path.settings and axis == "longitudinal":
+        stretches += path.settings
+    curves = curves_of(stretches, axis)
     found = []
     for bound in _each_once((*flight, *ramp, *landing)):
-        legs = {
-            "taxi": any(bound is each for each in ramp),
-            "flight": any(bound is each for each in flight),
-            "reserve": any(bound is each for each in (*flight, *landing)),
-        }
+        legs = _legs(bound, ramp, flight, landing)
         held = [curve for curve in curves if legs[curve.stretch.leg]]
         if held:
             found.append((bound, least_margin(held, bound[1])))
     return found
+
+
+def _legs(
+    bound: Bound, ramp: Sequence[Bound], flight: Sequence[Bound], landing: Sequence[Bound]
+) -> Mapping[Leg, bool]:
+    """Return on which legs an envelope holds."""
+    return {
+        "taxi": any(bound is each for each in ramp),
+        "flight": any(bound is each for each in flight),
+        "reserve": any(bound is each for each in (*flight, *landing)),
+    }
+
+
+def _turns(path: Path, axis: Axis, ready: Prepared) -> list[Worst]:
+    """Return the worst point of each event against each envelope that holds there."""
+    if not path.turns:
+        return []
+    ramp, flight, landing = (ready.bounds(axis, phase) for phase in FLOWN)
+    found = []
+    for bound in _each_once((*flight, *ramp, *landing)):
+        legs = _legs(bound, ramp, flight, landing)
+        found += [worst_turn(bound, turn, axis) for turn in path.turns if legs[turn.leg]]
+    return found
+
+
+def worst_turn(bound: Bound, turn: Turn, axis: Axis) -> Worst:
+    """Return the worst point of one event against one envelope."""
+    _, shape = bound
+    weight = turn.knots[0][0].weight
+    pieces = shape.arms_at(weight)
+    found = []
+    for knot, held in turn_points(turn, pieces, axis):
+        arm = moment_of(knot, axis) / weight
+        here = Stretch(turn.leg, (), knot, knot, NOTHING, (held, NOTHING), turn.dry, turn.where)
+        margins = [(min(arm - low, high - arm), low, high) for low, high in pieces]
+        if not margins:
+            return Worst(bound, here, knot, arm, None, None, None, False)
+        room, low, high = max(margins, key=lambda each: each[0])
+        found.append(Worst(bound, here, knot, arm, low, high, room, high - arm < arm - low))
+    return min(found, key=lambda each: each.room or NOTHING)
 
 
 def _each_once(bounds: Sequence[Bound]) -> list[Bound]:
@@ -124,13 +169,13 @@ def _settled(bound: Bound, point: Nearest | Beyond, axis: Axis) -> Worst:
     stretch = point.stretch
     if isinstance(point, Beyond):
         knot = stretch.at(point.weight)
-        return Worst(bound, stretch, knot, _moment(knot, axis) / knot.weight, None, None, None, False)
+        return Worst(bound, stretch, knot, moment_of(knot, axis) / knot.weight, None, None, None, False)
     outside, bits = point.margin.sign() < 0, BITS
     while True:
         weight = point.weight.floor(bits)
         if weight >= point.floor:
             knot = stretch.at(weight)
-            moment = _moment(knot, axis)
+            moment = moment_of(knot, axis)
             if not outside or not point.weight.factor or not shape.holds(weight, moment):
                 break
         bits *= 2
@@ -140,7 +185,3 @@ def _settled(bound: Bound, point: Nearest | Beyond, axis: Axis) -> Worst:
     if low > high:  # the very tip of an envelope, which an operator's margins have cut off
         return Worst(bound, stretch, knot, moment / weight, None, None, None, False)
     return Worst(bound, stretch, knot, moment / weight, low, high, point.margin.floor(BITS), point.aft)
-
-
-def _moment(knot: Knot, axis: Axis) -> Fraction:
-    return knot.moment if axis == "longitudinal" else knot.lateral_moment

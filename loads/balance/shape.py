@@ -5,18 +5,23 @@ What only a basis can tell (which seats, places and tanks there are, and how muc
 here. A load kept on its shape alone is unresolved, and is read again in full when it is assessed again.
 """
 
+from fleet.flight_rules import PERFORMANCE_KINDS
 from fleet.quantities import Dimension
 from loads.balance.aboard import HOWS, KINDS
+from loads.balance.category import FIELD as CATEGORY
 from loads.balance.declared import (
     ITEM_FIELDS,
     ITEM_OPTIONAL,
     LIMIT_FIELDS,
+    LIMIT_OPTIONAL,
     LONGEST_WHAT,
     MOST_ITEMS,
     MOST_LIMITS,
     MOST_PERSONS,
 )
 from loads.balance.fields import Faults, Fields
+from loads.balance.fitted import settings_form
+from loads.balance.footing import footing_form
 from loads.balance.fuelling import FUEL_FIELDS, FUEL_OPTIONAL, LONGEST_SOURCE, WEIGHT_OR_VOLUME
 from loads.balance.outline import LONGEST_ID, OPTIONAL, REQUIRED, outline_in
 from loads.balance.people import (
@@ -30,6 +35,7 @@ from loads.balance.people import (
     PASSENGER_FIELDS,
     PASSENGER_OPTIONAL,
 )
+from loads.balance.sequencing import check_sequence_shape
 from records.refusal import Invalid
 
 MOST_TANKS = 100
@@ -50,10 +56,14 @@ def check_shape(document: object) -> None:
         _infant(line)
     for line in fields.objects("items", MOST_ITEMS, ITEM_FIELDS, ITEM_OPTIONAL):
         _item(line)
-    for line in fields.objects("limits", MOST_LIMITS, LIMIT_FIELDS):
+    for line in fields.objects("limits", MOST_LIMITS, LIMIT_FIELDS, LIMIT_OPTIONAL):
         line.choice("at", ("take-off", "landing"))
         line.quantity("weight", Dimension.WEIGHT, zero=False)
         line.text("source", LONGEST_SOURCE)
+        line.choice("kind", PERFORMANCE_KINDS)
+    fields.text(CATEGORY, LONGEST_ID)
+    settings_form(fields)
+    check_sequence_shape(fields)
     _fuel(fields, faults)
     if faults.all():
         raise Invalid(*faults.all())
@@ -68,6 +78,7 @@ def _person(line: Fields) -> None:
 
 
 def _infant(line: Fields) -> None:
+    line.quantity("restraint", Dimension.WEIGHT, zero=False)
     infant = line.inner("lap_infant", INFANT_FIELDS, INFANT_OPTIONAL)
     if infant is not None:
         infant.text("name", LONGEST_NAME)
@@ -81,6 +92,7 @@ def _item(line: Fields) -> None:
     line.text("place", LONGEST_ID)
     line.choice("how", HOWS)
     line.flag("removed")
+    footing_form(line)
     line.quantity("weight", Dimension.WEIGHT, zero=False)
 
 

@@ -1,0 +1,92 @@
+"""One load flown: fuel and aircraft at each phase, the path between them, and what the sequence makes of it."""
+
+from collections.abc import Mapping, Sequence
+from dataclasses import replace
+from fractions import Fraction
+from typing import Literal, NamedTuple
+
+from fleet.basis import Phase
+from fleet.weighing import EmptyFigures
+from loads.balance.aboard import Declared, Person
+from loads.balance.fuel import FuelState, fuel_states
+from loads.balance.over_flight import over_flight
+from loads.balance.path import Path, burn_path
+from loads.balance.path_events import sequence_path, with_settings
+from loads.balance.prepared import Prepared
+from loads.balance.result import Check, State
+from loads.balance.sections import Dry, Sections, dry_over_flight, sections_of
+
+ORDER = {"fail": 0, "unresolved": 1, "pass": 2, "advisory": 3}
+
+
+class Flown(NamedTuple):
+    """The fuel at each phase; for a load with a sequence its sections, and the aircraft without fuel after
+    each event (None: something of it is not known).
+    """
+
+    fuel: Mapping[Phase, FuelState]
+    sections: Sections | None = None
+    dry: tuple[Dry, ...] | None = None
+
+
+def fly(declared: Declared, empty: EmptyFigures | None, ready: Prepared) -> Flown:
+    """Return the fuel of a load along its flight. Raises `fuel.FuelOffTable`."""
+    if not declared.sequence:
+        return Flown(fuel_states(declared.fuel, ready))
+    sections = sections_of(declared, ready)
+    return Flown(sections.fuel, sections, dry_over_flight(declared, empty))
+
+
+def path_of(declared: Declared, flown: Flown, states: Mapping[Phase, State], ready: Prepared) -> Path:
+    """Return the path of a load whose phases are known, in every setting of gear and flaps."""
+    if flown.sections is not None and flown.dry is not None:
+        path = sequence_path(declared, flown.sections, flown.dry, states)
+    else:
+        path = burn_path(declared.fuel, flown.fuel, states)
+    return with_settings(path, declared, ready) if ready.basis.positions else path
+
+
+def at_ends_of_rails(declared: Declared, end: Literal["forward", "aft"]) -> Declared:
+    """Return the load with every seat whose setting is open at one end of its rail."""
+
+    def moved(person: Person) -> Person:
+        rail = person.seat.rail
+        if rail is None:
+            return person
+        arm = rail.forward if end == "forward" else rail.aft
+        return replace(person, seat=replace(person.seat, arm=arm))
+
+    return replace(
+        declared,
+        crew=tuple(moved(person) for person in declared.crew),
+        passengers=tuple(moved(person) for person in declared.passengers),
+    )
+
+
+def states_aboard(declared: Declared) -> list[tuple[str, Declared]]:
+    """Return the load as it is aboard over the flight, each different state once, with the words for when."""
+    found: list[tuple[str, Declared]] = []
+    for number, aboard in enumerate(over_flight(declared)):
+        if not found or aboard is not found[-1][1]:
+            found.append((f"after event {number}" if number else "", aboard))
+    return found
+
+
+def worst_of_each(runs: Sequence[tuple[str, Sequence[Check]]]) -> list[Check]:
+    """Return the worst check of each code, in the order in which the codes come; of equals the first."""
+    found: dict[str, tuple[str, Check]] = {}
+    for when, checks in runs:
+        for check in checks:
+            held = found.get(check.code)
+            if held is None or _rank(check) < _rank(held[1]):
+                found[check.code] = when, check
+    return [
+        check._replace(margin_text=", ".join(filter(None, (check.margin_text, when))))
+        for when, check in found.values()
+    ]
+
+
+def _rank(check: Check) -> tuple[int, bool, Fraction]:
+    """Return how bad a check is, the worst least; one that fails without a figure is the worst."""
+    known = check.room is not None if check.outcome == "fail" else check.room is None
+    return ORDER[check.outcome], known, check.room or Fraction(0)
