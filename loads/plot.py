@@ -5,6 +5,8 @@ r"""The plot of a load: envelopes, weight limits, the phases and the burn betwee
            |  /      M L   Z  |----  normal envelope   phases: a shape and a letter each
            +------------------------> arm, or moment where the envelope's edges are straight in it
 
+Where an operator's margins move edges in, what is left is a row of round dots inside the certified line.
+
 Black on white; nothing depends on colour. It draws and decides nothing: binary floats are used here and
 nowhere near a verdict.
 """
@@ -15,7 +17,9 @@ from fractions import Fraction
 from typing import Any
 
 from fleet.basis import Axis, Envelope
+from fleet.curtailment import Curtailment
 from loads.plot_marks import MARKS, Mark, drawn_marks
+from loads.plot_operational import Outline, drawn_outline, operational
 from loads.plot_path import burn_line, worst_mark
 from loads.plot_scale import Scale, ticks
 from loads.svg import corners, element, label, line, short
@@ -53,10 +57,12 @@ def plot(
     axis: Axis = "longitudinal",
     weight_word: str = "weight",
     frame: Frame = STANDARD,
+    curtailments: Sequence[Curtailment] = (),
 ) -> str:
     """This function will return an SVG text of the result document against the envelopes of one axis.
 
-    `envelopes` are in the units of the result (`result["units"]`); those of the other axis are left out.
+    `envelopes` are in the units of the result (`result["units"]`); those of the other axis are left out, and
+    so are `curtailments` that move no edge of theirs.
     Returns "" when there is nothing to draw: no phases, or no envelope of that axis. Aft and right: positive.
     """
     shown = [envelope for envelope in envelopes if envelope.axis == axis]
@@ -64,6 +70,7 @@ def plot(
         return ""
     plane = shown[0].plane
     shown = [envelope for envelope in shown if envelope.plane == plane]
+    inside = operational(shown, curtailments) if curtailments else []
     marks = [
         Mark(
             MARKS[phase["phase"]],
@@ -84,8 +91,9 @@ def plot(
         *_grid(x, y, frame, sided=axis == "lateral"),
         *_titles(frame, f"{NAMES[axis, plane]}, {unit}", f"{weight_word}, {units['weight']}"),
         *(_curve(envelope, number, x, y) for number, envelope in enumerate(shown)),
+        *(drawn_outline(outline, x, y) for outline in inside),
         *(line((frame.left, y.at(v)), (frame.right, y.at(v)), stroke_dasharray="4 2") for v in limits),
-        *_names(_wanted(shown, limits, x, y, frame.right), frame),
+        *_names(_wanted(shown, inside, limits, x, y, right=frame.right), frame),
         *burn_line(result, axis, plane, x, y),
         *drawn_marks(marks, x, y, frame.right),
     ]
@@ -185,9 +193,16 @@ class Name:
 
 
 def _wanted(
-    envelopes: Sequence[Envelope], limits: Mapping[float, tuple[str, ...]], x: Scale, y: Scale, right: float
+    envelopes: Sequence[Envelope],
+    inside: Sequence[Outline],
+    limits: Mapping[float, tuple[str, ...]],
+    x: Scale,
+    y: Scale,
+    *,
+    right: float,
 ) -> list[Name]:
-    names = [Name((right, y.at(value)), words) for value, words in limits.items()]
+    names = [Name((x.at(outline.far[0]), y.at(outline.far[1])), broken(outline.name)) for outline in inside]
+    names += [Name((right, y.at(value)), words) for value, words in limits.items()]
     for envelope in envelopes:
         far = max(envelope.points, key=lambda point: (point[0], -point[1]))
         words = f"{envelope.id} envelope: {', '.join(envelope.phases)}"

@@ -79,15 +79,22 @@ def _demand_envelopes(
 ) -> None:
     """Add a fault for every side and phase no envelope serves: a margin to nothing would be forgotten."""
     served = {(envelope.axis, phase) for envelope in envelopes for phase in envelope.phases}
+    axes: tuple[Axis, ...] = ("longitudinal", "lateral")
     for at, each in entered:
-        for axis in ("longitudinal", "lateral"):
-            for phase in each.phases:
-                if holding((each,), phase, axis) and (axis, phase) not in served:
-                    findings.fault(
-                        f"{at}/phases",
-                        "curtails-nothing",
-                        f"no {axis} envelope serves {phase}; enter it, or leave the phase or side out",
-                    )
+        moved = [(axis, phase) for axis in axes for phase in each.phases if holding((each,), phase, axis)]
+        for axis, phase in moved:
+            if (axis, phase) not in served:
+                findings.fault(
+                    f"{at}/phases",
+                    "curtails-nothing",
+                    f"no {axis} envelope serves {phase}; enter it, or leave the phase or side out",
+                )
+        if "lateral_by_cg" in findings.document and any(axis == "lateral" for axis, _ in moved):
+            findings.fault(
+                f"{at}/amounts",
+                "curtails-not-all",
+                "a lateral margin cannot move limits that vary with the CG yet; enter those already moved in",
+            )
 
 
 def _demand_something_left(

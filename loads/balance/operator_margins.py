@@ -102,8 +102,8 @@ def _margins_words(
 ) -> str:
     parts = ", ".join(f"{each.purpose} {printed(amount, places)}" for each, amount, _ in binding)
     if len(binding) == 1:
-        return f"operator's {edge} margin {parts} {length}"
-    return f"operator's {edge} margins {parts}, together {printed(total, places)} {length}"
+        return f"operator's {edge} margin: {parts} {length}"
+    return f"operator's {edge} margins: {parts}, together {printed(total, places)} {length}"
 
 
 def _stated(inset: Inset, ready: Prepared) -> str:

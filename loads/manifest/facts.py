@@ -8,6 +8,7 @@ from datetime import datetime
 from typing import Any, Literal, Protocol
 
 from fleet.basis import Chord, Envelope
+from fleet.curtailment import Curtailment
 
 RuleSet = Literal["US", "EU-UK"]
 
@@ -63,6 +64,7 @@ class BasisFacts:
     document: Mapping[str, Any]
     envelopes: tuple[Envelope, ...]
     chord: Chord | None
+    curtailments: tuple[Curtailment, ...] = ()
 
 
 @dataclass(frozen=True, slots=True)

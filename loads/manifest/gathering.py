@@ -110,7 +110,15 @@ def _aircraft(row: Aircraft) -> AircraftFacts:
 def _basis(row: LoadingBasis) -> BasisFacts:
     figures = basis_of(row)
     document = json.loads(row.document)
-    return BasisFacts(row.revision, row.digest, _known_from(row), document, figures.envelopes, figures.chord)
+    return BasisFacts(
+        row.revision,
+        row.digest,
+        _known_from(row),
+        document,
+        figures.envelopes,
+        figures.chord,
+        figures.curtailments,
+    )
 
 
 def _empty_weight(row: EmptyWeight) -> EmptyWeightFacts:

@@ -83,7 +83,14 @@ def _plots(facts: Facts, words: Words) -> list[str]:
     frame = Frame(height=height, bottom=height - 34.0)
     axes: tuple[Axis, ...] = ("longitudinal", "lateral") if lateral else ("longitudinal",)
     drawn = [
-        plot(facts.result, facts.basis.envelopes, axis=axis, weight_word=words.weight, frame=frame)
+        plot(
+            facts.result,
+            facts.basis.envelopes,
+            axis=axis,
+            weight_word=words.weight,
+            frame=frame,
+            curtailments=facts.basis.curtailments,
+        )
         for axis in axes
     ]
     return [one for one in drawn if one]

@@ -176,8 +176,17 @@ def _plots(current: Current, result: Mapping[str, Any], words: Words) -> list[st
     basis = current.assessment.loading_basis
     if basis is None or not result.get("phases"):
         return []
-    envelopes = basis_of(basis).envelopes
-    drawn = (plot(result, envelopes, axis=axis, weight_word=words.weight) for axis in AXES)
+    figures = basis_of(basis)
+    drawn = (
+        plot(
+            result,
+            figures.envelopes,
+            axis=axis,
+            weight_word=words.weight,
+            curtailments=figures.curtailments,
+        )
+        for axis in AXES
+    )
     return [mark_safe(svg) for svg in drawn if svg]  # noqa: S308  # drawn by our own code, its texts are escaped there
 
 

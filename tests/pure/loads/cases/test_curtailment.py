@@ -46,7 +46,7 @@ def test_a_load_inside_the_operational_envelope_is_within_and_the_room_is_to_the
     assert (check.outcome, check.edge, check.margin) == ("pass", "aft", "5.23")
     assert check.room == 128 - F("23041.9") / state.weight - state.arm
     assert check.margin_text.endswith(
-        "certified aft limit 9.23 in away; operator's aft margin seating variation 4 in"
+        "certified aft limit 9.23 in away; operator's aft margin: seating variation 4 in"
     )
 
 
@@ -62,7 +62,7 @@ def test_a_load_between_the_two_envelopes_is_outside_and_is_told_to_be_inside_th
     assert result.verdict == "outside"
     assert (check.outcome, check.edge, check.room) == ("fail", "aft", F("-0.5"))
     assert "outside the operator's margin, inside the certified envelope by 0.5 in" in check.margin_text
-    assert "operator's aft margin seating variation 1 in" in check.margin_text
+    assert "operator's aft margin: seating variation 1 in" in check.margin_text
     assert check.source == "VP2-FM rev B p. 6-4; OM-A rev 4 p. 8-12"
     assert check.curtailed["certified"]["within"] is True
     assert check.curtailed["certified"]["margin"] == "0.5"
@@ -95,7 +95,7 @@ def test_several_margins_add_up_and_their_sum_is_told():
 
     assert check.outcome == "fail"
     assert check.room == F("-0.1")
-    assert "operator's aft margins seating variation 0.4, fuel 0.6, together 1 in" in check.margin_text
+    assert "operator's aft margins: seating variation 0.4, fuel 0.6, together 1 in" in check.margin_text
     assert [each["id"] for each in check.curtailed["margins"]] == ["SEATING", "FUEL"]
     assert check.curtailed["together"] == "1"
 
