@@ -20,6 +20,16 @@ APPROVE_LOADING_BASIS = Kind("approve-loading-basis", "approved a loading basis"
 ENTER_EMPTY_WEIGHT = Kind("enter-empty-weight", "entered an empty weight")
 APPROVE_EMPTY_WEIGHT = Kind("approve-empty-weight", "approved an empty weight")
 CHANGE_SETTINGS = Kind("change-settings", "changed the operator's settings")
+ENTER_STANDARD_WEIGHTS = Kind("enter-standard-weights", "entered a table of standard weights")
+APPROVE_STANDARD_WEIGHTS = Kind("approve-standard-weights", "approved a table of standard weights")
+ENTER_RULES = Kind("enter-rules", "entered a set of rules")
+APPROVE_RULES = Kind("approve-rules", "approved a set of rules")
+ENTER_RESTRICTION = Kind("enter-restriction", "entered a restriction")
+LIFT_RESTRICTION = Kind("lift-restriction", "lifted a restriction")
+ENTER_PERMIT = Kind("enter-permit", "entered a permit")
+APPROVE_PERMIT = Kind("approve-permit", "approved a permit")
+END_PERMIT = Kind("end-permit", "ended a permit")
+TELL_FALLING_DUE = Kind("tell-falling-due", "told that something falls due")
 
 KINDS = (
     ENTER_OPERATOR,
@@ -40,4 +50,14 @@ KINDS = (
     ENTER_EMPTY_WEIGHT,
     APPROVE_EMPTY_WEIGHT,
     CHANGE_SETTINGS,
+    ENTER_STANDARD_WEIGHTS,
+    APPROVE_STANDARD_WEIGHTS,
+    ENTER_RULES,
+    APPROVE_RULES,
+    ENTER_RESTRICTION,
+    LIFT_RESTRICTION,
+    ENTER_PERMIT,
+    APPROVE_PERMIT,
+    END_PERMIT,
+    TELL_FALLING_DUE,
 )

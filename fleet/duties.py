@@ -37,8 +37,27 @@ _OWN = frozenset(
         acts.REVOKE_TOKEN.name,
     }
 )
-_ENTERS = frozenset({acts.ENTER_AIRCRAFT.name, acts.ENTER_LOADING_BASIS.name, acts.ENTER_EMPTY_WEIGHT.name})
-_APPROVES = frozenset({acts.APPROVE_LOADING_BASIS.name, acts.APPROVE_EMPTY_WEIGHT.name})
+_ENTERS = frozenset(
+    {
+        acts.ENTER_AIRCRAFT.name,
+        acts.ENTER_LOADING_BASIS.name,
+        acts.ENTER_EMPTY_WEIGHT.name,
+        acts.ENTER_RESTRICTION.name,
+        acts.ENTER_PERMIT.name,
+        acts.END_PERMIT.name,
+    }
+)
+# Lifting a restriction widens what is allowed, so it is an approver's.
+_APPROVES = frozenset(
+    {
+        acts.APPROVE_LOADING_BASIS.name,
+        acts.APPROVE_EMPTY_WEIGHT.name,
+        acts.APPROVE_STANDARD_WEIGHTS.name,
+        acts.APPROVE_RULES.name,
+        acts.APPROVE_PERMIT.name,
+        acts.LIFT_RESTRICTION.name,
+    }
+)
 _PEOPLE = frozenset(
     {
         acts.ENTER_PERSON.name,
@@ -48,7 +67,7 @@ _PEOPLE = frozenset(
         acts.LET_CHOOSE_PASSWORD.name,
     }
 )
-_SETTLES = frozenset({acts.CHANGE_SETTINGS.name})
+_SETTLES = frozenset({acts.CHANGE_SETTINGS.name, acts.ENTER_STANDARD_WEIGHTS.name, acts.ENTER_RULES.name})
 # Who is told of events: a manager decides it, and an integration that was given the scope may for itself.
 _WEBHOOKS = frozenset(kind.name for kind in WEBHOOK_KINDS)
 

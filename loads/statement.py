@@ -131,14 +131,20 @@ def _not_assessed(result: Document) -> str:
 
 
 def _versions(stated: Document) -> list[str]:
-    versions = cast("Mapping[str, Document | None]", stated["versions"])
+    versions = cast("Mapping[str, object]", stated["versions"])
     found = [
-        f"{name.replace('_', ' ').capitalize()}: {version['id']}, digest {version['digest']}."
-        if version is not None
-        else f"{name.replace('_', ' ').capitalize()}: none."
+        f"{name.replace('_', ' ').capitalize()}: {_which(version)}."
         for name, version in sorted(versions.items())
     ]
     return [*found, f"Computed by engine version {stated['engine']}."]
+
+
+def _which(version: object) -> str:
+    """Return one version, or several of a kind, by id and digest."""
+    if version is None:
+        return "none"
+    listed = _objects(version) if isinstance(version, list | tuple) else (cast("Document", version),)
+    return "; ".join(f"{one['id']}, digest {one['digest']}" for one in listed)
 
 
 def _objects(value: object) -> "Sequence[Document]":

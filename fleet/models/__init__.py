@@ -8,6 +8,7 @@ from fleet.models.loading_basis import LoadingBasis
 from fleet.models.operator import Operator
 from fleet.models.operator_settings import OperatorSettings
 from fleet.models.person import Person
+from fleet.models.provision import Provision, ProvisionApproval, ProvisionEnd
 from fleet.models.standing import Standing
 from fleet.models.token import Rotation, Token
 
@@ -20,6 +21,9 @@ __all__ = [
     "Operator",
     "OperatorSettings",
     "Person",
+    "Provision",
+    "ProvisionApproval",
+    "ProvisionEnd",
     "Rotation",
     "Standing",
     "Token",

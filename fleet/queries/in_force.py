@@ -8,19 +8,26 @@ from uuid import UUID
 from fleet.models import Aircraft, EmptyWeight, LoadingBasis, Standing
 from fleet.models.standing import EMPTY_WEIGHT, LOADING_BASIS
 from fleet.queries.figures import basis_of, fit_of
+from fleet.queries.provisions import HOLDING, NO_PROVISIONS, Provisions, holding_values, provisions_of
 from records.prepared import rows
 
 _STANDING = (
-    "SELECT kind, fit, version FROM fleet_standing WHERE aircraft_id = %s AND valid @> %s AND known @> %s"
+    "SELECT kind, fit, version, 0 AS turn FROM fleet_standing"  # noqa: S608  # our own texts only
+    " WHERE aircraft_id = %s AND valid @> %s AND known @> %s"
+    f" UNION ALL SELECT kind, '', id, turn FROM ({HOLDING}) holding ORDER BY turn"
 )
 
 
 @dataclass(frozen=True, slots=True)
 class InForce:
-    """The two versions a load rests on; None where none was in force, which leaves a verdict unresolved."""
+    """The two versions a load rests on; None where none was in force, which leaves a verdict unresolved.
+
+    Besides them what the operator laid down for that time.
+    """
 
     basis: LoadingBasis | None
     empty_weight: EmptyWeight | None
+    provisions: Provisions = NO_PROVISIONS
 
 
 def in_force(aircraft: Aircraft, at: datetime, known: datetime, fit: str) -> InForce:
@@ -35,12 +42,16 @@ def in_force_for(aircraft: Aircraft, at: datetime, known: datetime, configuratio
     weight is.
     """
     # Asked for every load, so: one query for what stands, and rows that never change are read once.
-    versions = {(kind, fit): version for kind, fit, version in rows(_STANDING, [aircraft.pk, at, known])}
+    found = rows(
+        _STANDING, [aircraft.pk, at, known, *holding_values(aircraft.operator_id, aircraft.pk, at, known)]
+    )
+    versions = {(kind, fit): version for kind, fit, version, _ in found}
     if (LOADING_BASIS, "") not in versions:
         return InForce(None, None)
     basis = _loading_basis(versions[LOADING_BASIS, ""])
     weight = versions.get((EMPTY_WEIGHT, fit_of(basis_of(basis), configuration) or ""))
-    return InForce(basis, _empty_weight(weight) if weight else None)
+    provisions = provisions_of([(kind, version) for kind, _, version, _ in found])
+    return InForce(basis, _empty_weight(weight) if weight else None, provisions)
 
 
 def basis_in_force(aircraft: Aircraft, at: datetime, known: datetime) -> LoadingBasis | None:

@@ -74,6 +74,7 @@ def assessment_of(entry: Entry, load: Load, computation: Computation, *, number:
         digest=computation.digest,
         loading_basis=computation.basis,
         empty_weight=computation.empty_weight,
+        provisions=[one.id for one in computation.provisions],
         engine=ENGINE_VERSION,
         assessed_at=entry.at,
     )

@@ -66,6 +66,7 @@ def _tell(operator: str, load: UUID, caused_by: UUID | None) -> StaleNotice:
             assessment=current.assessment,
             loading_basis=found.loading_basis,
             empty_weight=found.empty_weight,
+            provisions=found.provisions.ids(),
             changed=", ".join(found.changed),
             mail_addresses=len(addresses),
             told_at=entry.at,

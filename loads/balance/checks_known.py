@@ -41,10 +41,10 @@ def empty_weight_check(empty: EmptyFigures | None, basis: Basis, fit: str) -> Ch
 
 
 def weight_knowledge(declared: Declared) -> list[Check]:
-    """Return the checks that every weight is known, and that no person's is only an estimate.
+    """Return the checks that every weight is known, and that no person's is only an estimate, unless the
+    operator's procedure allows that.
 
-    Standard weights need an approved table, and none can be entered yet, so each one leaves a load
-    unresolved.
+    Standard weights need an approved table; without one each leaves a load unresolved.
     """
     people = (*declared.crew, *declared.passengers)
     unknown = [person.seat.name for person in people if person.weight is None]
@@ -58,16 +58,22 @@ def weight_knowledge(declared: Declared) -> list[Check]:
     found = [Check("weights.unknown", "every weight is known", "pass", margin_text="all weights are known")]
     if unknown:
         where = ", ".join(unknown)
+        use = declared.standards
         found[0] = Check(
             "weights.unknown",
             "every weight is known",
             "unresolved",
             actual=str(len(unknown)),
-            margin_text=f"standard weights without an approved table: {where}",
-            what_next=f"Weigh or declare: {where}.",
+            margin_text=f"standard weights without an approved table: {where}"
+            if use is None
+            else f"not known from the table in force: {where}",
+            what_next=f"Weigh or declare: {where}. Or have a table of standard weights approved.",
         )
     if estimated:
         where = ", ".join(estimated)
+        if allowed := declared.circumstances.estimates:
+            found.append(_estimates_allowed(estimated, allowed))
+            return found
         found.append(
             Check(
                 "weights.estimated",
@@ -79,6 +85,17 @@ def weight_knowledge(declared: Declared) -> list[Check]:
             )
         )
     return found
+
+
+def _estimates_allowed(where: list[str], by: str) -> Check:
+    return Check(
+        "weights.estimated",
+        "estimates of people's weights are in the procedure",
+        "pass",
+        actual=str(len(where)),
+        margin_text=f"estimated: {', '.join(where)}; the operator's procedure allows it",
+        source=by,
+    )
 
 
 def nothing_left_check(least: Fraction, ready: Prepared) -> Check:

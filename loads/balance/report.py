@@ -13,6 +13,7 @@ from fleet.basis import Phase
 from loads.balance.aboard import Declared
 from loads.balance.allowable import Allowable, allowable_take_off
 from loads.balance.checks_path import path_document
+from loads.balance.fitted import fitted_lines
 from loads.balance.fuel import FuelState
 from loads.balance.governing import NOT_KNOWN, cg_line, return_advisory, weight_line
 from loads.balance.path_worst import Burn
@@ -20,6 +21,8 @@ from loads.balance.prepared import Prepared
 from loads.balance.result import Check, Json, Line, State
 from loads.balance.rounding import CHORD_PLACES, VOLUME_PLACES, WEIGHT_PLACES, printed
 from loads.balance.sumsheet import Aboard, Sums, as_rows
+from loads.balance.told_besides import told_besides
+from loads.balance.trim_setting import trim_document
 
 DENSITY_PLACES = 4
 
@@ -49,10 +52,22 @@ def report(assessed: Assessed, ready: Prepared) -> Json:
         "fuel": None if fuel is None else _fuel(declared, fuel, ready),
         "sumsheet": as_rows(lines, ready),
         "operating_weight": _operating(aboard.operating_weight, ready),
+        **_whole_aircraft(declared, states, ready),
         "persons": _persons(declared),
         "advisories": _advisories(declared, states, ready),
         "not_assessed": _not_assessed(checks, bool(states)),
+        **told_besides(declared),
     }
+
+
+def _whole_aircraft(declared: Declared, states: Mapping[Phase, State], ready: Prepared) -> Json:
+    """Return what only some bases have: the certification category, and the take-off trim setting."""
+    found: Json = {}
+    if declared.category is not None:
+        found["certification_category"] = {"id": declared.category.id, "name": declared.category.name}
+    if ready.basis.trim is not None:
+        found["trim"] = trim_document(states.get("take-off"), ready)
+    return found
 
 
 def report_without_basis() -> Json:
@@ -160,6 +175,7 @@ def _persons(declared: Declared) -> Json:
 def _advisories(declared: Declared, states: Mapping[Phase, State], ready: Prepared) -> list[str]:
     """Return the few lines that are told without a verdict, each with a figure."""
     found = return_advisory(declared, states, ready) if states else []
+    found += fitted_lines(declared)
     estimated = sum(item.how == "estimated" for item in declared.items)
     if estimated:
         found.append(f"{estimated} of {len(declared.items)} item weights are estimates")

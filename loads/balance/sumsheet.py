@@ -10,6 +10,7 @@ from fleet.basis import FixedItem, Phase
 from fleet.weighing import EmptyFigures
 from loads.balance.aboard import Declared, FuelPlan, Item, Person
 from loads.balance.exact import added, times
+from loads.balance.footing import Rigging
 from loads.balance.fuel import FuelState
 from loads.balance.prepared import Prepared
 from loads.balance.result import Json, Line, State
@@ -45,7 +46,8 @@ def lines_without_fuel(declared: Declared, empty: EmptyFigures | None) -> Aboard
     payload: list[Line] = []
     for person in declared.passengers:
         payload += _people("passengers", person)
-    payload += [_item(item) for item in declared.items]
+    for item in declared.items:
+        payload += _item(item)
     operating_weight = _sums(operating)
     aboard = _sums(payload)
     whole = None if operating_weight is None or aboard is None else _together(operating_weight, aboard)
@@ -120,21 +122,43 @@ def _fixed(group: str, item: FixedItem) -> Line:
 def _people(group: str, person: Person) -> list[Line]:
     seat = person.seat
     what = f"{seat.name}, {person.position or person.category or 'passenger'}"
-    line = Line(group, what, person.how, person.weight, seat.arm, None, None, False, person.pointer)
+    weight = person.weight
+    if weight is not None and person.added is not None:
+        weight -= person.added
+    line = Line(group, what, person.how, weight, seat.arm, None, None, False, person.pointer)
     lines = [_placed(line, seat.lateral_arm)]
+    if person.added is not None:
+        what = f"{seat.name}, added to the declared weight"
+        line = Line(group, what, "standard", person.added, seat.arm, None, None, False, None)
+        lines.append(_placed(line, seat.lateral_arm))
     infant = person.lap_infant
     if infant is not None and infant.weight is not None:
         what = f"{seat.name}, lap infant"
         line = Line(group, what, infant.how, infant.weight, seat.arm, None, None, False, infant.pointer)
         lines.append(_placed(line, seat.lateral_arm))
+    if person.restraint is not None:
+        what, pointer = f"{seat.name}, restraint", f"{person.pointer}/restraint"
+        line = Line(group, what, "declared", person.restraint, seat.arm, None, None, False, pointer)
+        lines.append(_placed(line, seat.lateral_arm))
     return lines
 
 
-def _item(item: Item) -> Line:
+def _item(item: Item) -> list[Line]:
+    """Return the line of an item, and after it those of the pallet, net or spreader that go with it."""
     place = item.place
+    rigged = [_rigging(item, part) for part in item.rigging]
+    weight = item.weight
+    if weight is not None and rigged:
+        weight -= added(part.weight for part in item.rigging)
     # What it is called is typed freely and may name somebody: it is joined where it is shown, by its pointer.
     what = f"{place.name}, {item.kind}{', removed' if item.removed else ''}"
-    line = Line("items", what, item.how, item.weight, place.arm, None, None, False, item.pointer)
+    line = Line("items", what, item.how, weight, place.arm, None, None, False, item.pointer)
+    return [_placed(line, place.lateral_arm), *rigged]
+
+
+def _rigging(item: Item, part: Rigging) -> Line:
+    place, what = item.place, f"{item.place.name}, {part.part} of {item.kind}"
+    line = Line("items", what, "declared", part.weight, place.arm, None, None, False, part.pointer)
     return _placed(line, place.lateral_arm)
 
 

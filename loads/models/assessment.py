@@ -1,5 +1,6 @@
 """One computation of a load against the versions in force."""
 
+from django.contrib.postgres.fields import ArrayField
 from django.db import models
 
 from fleet.models import EmptyWeight, LoadingBasis, Operator
@@ -15,8 +16,9 @@ class Assessment(models.Model):
     """
 
     id = models.UUIDField(primary_key=True, db_default=Uuid7(), editable=False)
-    operator = models.ForeignKey(Operator, on_delete=models.PROTECT)
-    load = models.ForeignKey(Load, on_delete=models.PROTECT, related_name="assessments")
+    operator = models.ForeignKey(Operator, on_delete=models.PROTECT, db_index=False)
+    # The key of load and number finds these, too.
+    load = models.ForeignKey(Load, on_delete=models.PROTECT, related_name="assessments", db_index=False)
     number = models.PositiveIntegerField()
     verdict = models.CharField(max_length=12)
     # Long, and covered by `digest`: the trail holds a salted digest of it, which keeps its entries short.
@@ -25,6 +27,9 @@ class Assessment(models.Model):
     digest = models.CharField(max_length=64)
     loading_basis = models.ForeignKey(LoadingBasis, on_delete=models.PROTECT, null=True)
     empty_weight = models.ForeignKey(EmptyWeight, on_delete=models.PROTECT, null=True)
+    # Of the operator's tables, rules, restrictions and permits those that were used, in the order of the
+    # statement; in the database besides: each is of this operator, and of the load's aircraft or of none.
+    provisions = ArrayField(models.UUIDField(), default=list, blank=True)
     engine = models.CharField(max_length=20)
     assessed_at = models.DateTimeField()  # also the instant on the "known" clock that was used
 
@@ -47,14 +52,6 @@ class Assessment(models.Model):
             ),
             models.CheckConstraint(
                 condition=models.Q(digest__regex=r"^[0-9a-f]{64}$"), name="assessment_digest_is_a_digest"
-            ),
-        ]
-        indexes = [
-            # The rejects desk asks for these few among all.
-            models.Index(
-                fields=["operator", "load"],
-                condition=models.Q(verdict__in=["outside", "unresolved"]),
-                name="assessment_rejected",
             ),
         ]
 

@@ -1,5 +1,6 @@
 """That an accepted load went stale before its departure, told once for each pair of versions."""
 
+from django.contrib.postgres.fields import ArrayField
 from django.db import models
 
 from fleet.models import EmptyWeight, LoadingBasis, Operator
@@ -21,7 +22,8 @@ class StaleNotice(models.Model):
     assessment = models.ForeignKey(Assessment, on_delete=models.PROTECT, related_name="+")
     loading_basis = models.ForeignKey(LoadingBasis, on_delete=models.PROTECT, null=True, related_name="+")
     empty_weight = models.ForeignKey(EmptyWeight, on_delete=models.PROTECT, null=True, related_name="+")
-    changed = models.CharField(max_length=60)  # "loading basis", "empty weight", or both, with a comma
+    provisions = ArrayField(models.UUIDField(), default=list, blank=True)  # those that hold now
+    changed = models.CharField(max_length=120)  # "loading basis", "empty weight" ..., with a comma between
     mail_addresses = models.PositiveSmallIntegerField()
     told_at = models.DateTimeField()
     act = models.UUIDField()
@@ -29,7 +31,7 @@ class StaleNotice(models.Model):
     class Meta:
         constraints = [
             models.UniqueConstraint(
-                fields=["load", "loading_basis", "empty_weight"],
+                fields=["load", "loading_basis", "empty_weight", "provisions"],
                 name="stale_notice_is_given_once",
                 nulls_distinct=False,
             ),

@@ -3,6 +3,7 @@
 from collections.abc import Mapping
 from datetime import datetime
 
+from fleet.queries.provisions import used_provisions
 from loads.balance.engine import ENGINE_VERSION
 from loads.balance.late_change import said
 from loads.cautions import CAUTIONS, INVENTED
@@ -46,7 +47,7 @@ def answer_parts(current: Current) -> tuple[Answer, str, Answer]:
     begun = current.step.number > 1  # a first step can have neither signature nor manifest
     after = {
         "basis": {
-            **versions_of(used.loading_basis, used.empty_weight),
+            **versions_of(used.loading_basis, used.empty_weight, used_provisions(used.provisions)),
             "configuration": load.configuration,
             "engine": used.engine,
         },
@@ -106,7 +107,7 @@ def computed_answer(computation: Computation) -> Answer:
         },
         **computation.result,
         "basis": {
-            **versions_of(computation.basis, computation.empty_weight),
+            **versions_of(computation.basis, computation.empty_weight, computation.provisions),
             "configuration": outline.configuration,
             "engine": ENGINE_VERSION,
         },

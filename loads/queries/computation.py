@@ -1,19 +1,21 @@
 """Computing a load against what is in force: nothing is stored here, so the same sum serves every way in."""
 
+from collections.abc import Sequence
 from dataclasses import dataclass
 from datetime import datetime
 
-from fleet.models import Aircraft, EmptyWeight, LoadingBasis
+from fleet.models import Aircraft, EmptyWeight, LoadingBasis, Provision
 from fleet.queries.aircraft import aircraft_of
 from fleet.queries.figures import basis_of
 from fleet.queries.in_force import in_force_for
-from loads.balance.aboard import Outline
+from loads.balance.aboard import Declared, Outline
 from loads.balance.assess import assess
-from loads.balance.declared import read_load, read_outline
+from loads.balance.declared import read_outline
 from loads.balance.engine import ENGINE_VERSION
 from loads.balance.shape import check_shape
 from loads.queries.crew import pilot_in
 from loads.queries.figures import empty_figures
+from loads.queries.provided import declared_under, provided_versions, used_of
 from loads.statement import digest_from
 from records.canonical import canonical_of_exact
 from records.refusal import Fault, Invalid, NotKnown
@@ -34,6 +36,7 @@ class Computation:
     pilot: int | None
     basis: LoadingBasis | None
     empty_weight: EmptyWeight | None
+    provisions: tuple[Provision, ...]  # those that were used
     result: dict[str, object]
     result_text: bytes  # the result, canonical
     digest: str
@@ -56,7 +59,7 @@ def compute(operator: str, document: dict[str, JSON], known: datetime) -> Comput
     basis = basis_of(used.basis) if used.basis else None
     if basis is None:
         check_shape(document)
-    declared = read_load(document, basis) if basis else outline
+    declared = declared_under(document, used, basis, known) if basis else outline
     pilot = pilot_in(operator, document)
     empty = (
         empty_figures(used.empty_weight.document, used.basis.document)
@@ -64,7 +67,8 @@ def compute(operator: str, document: dict[str, JSON], known: datetime) -> Comput
         else None
     )
     result = assess(declared, basis, empty).as_document()
-    versions = versions_of(used.basis, used.empty_weight)
+    provisions = used_of(used.provisions, declared) if isinstance(declared, Declared) else ()
+    versions = versions_of(used.basis, used.empty_weight, provisions)
     inputs, result_text = canonical_of_exact(document), canonical_of_exact(result)
     return Computation(
         document=document,
@@ -74,6 +78,7 @@ def compute(operator: str, document: dict[str, JSON], known: datetime) -> Comput
         pilot=pilot,
         basis=used.basis,
         empty_weight=used.empty_weight,
+        provisions=provisions,
         result=result,
         result_text=result_text,
         digest=digest_from(inputs, versions, ENGINE_VERSION, result_text),
@@ -88,11 +93,14 @@ def _aircraft_in(operator: str, outline: Outline) -> Aircraft:
         raise Invalid(Fault("/aircraft", "unknown-aircraft", detail)) from None
 
 
-def versions_of(basis: LoadingBasis | None, empty_weight: EmptyWeight | None) -> dict[str, object]:
+def versions_of(
+    basis: LoadingBasis | None, empty_weight: EmptyWeight | None, provisions: Sequence[Provision] = ()
+) -> dict[str, object]:
     """This function will return ids and digests of the versions used, as the statement holds them; None if
-    none was.
+    none was. What the operator laid down stands there only where some of it was used.
     """
     return {
         "loading_basis": {"id": str(basis.id), "digest": basis.digest} if basis else None,
         "empty_weight": {"id": str(empty_weight.id), "digest": empty_weight.digest} if empty_weight else None,
+        **(provided_versions(provisions) if provisions else {}),
     }

@@ -166,7 +166,10 @@ def words_to_sign_late(current: Current, proposal: Proposal, number: int) -> str
     """
     made = proposal.computation
     stated = statement(
-        _object(made.inputs), versions_of(made.basis, made.empty_weight), ENGINE_VERSION, made.result
+        _object(made.inputs),
+        versions_of(made.basis, made.empty_weight, made.provisions),
+        ENGINE_VERSION,
+        made.result,
     )
     lines = [f"{place}. {said(line, named=False)}." for place, line in enumerate(proposal.lines, 1)]
     words = signing_text(

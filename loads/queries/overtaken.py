@@ -6,12 +6,13 @@ from typing import Final
 from uuid import UUID
 
 from django.db import connection
-from django.db.models import Exists, OuterRef
 
 from fleet.models import Aircraft, EmptyWeight, LoadingBasis
 from fleet.queries.in_force import in_force_for
-from loads.models import StaleNotice, Step
-from loads.queries.current import Current, current_at, steps_with_their_loads
+from fleet.queries.provisions import Provisions
+from loads.models import StaleNotice
+from loads.queries.current import Current, current_of, loads_present
+from loads.queries.provided import provisions_changed
 
 # A load whose departure was planned longer ago and never reported is not on the ground any more.
 LATEST_DEPARTURE: Final = timedelta(days=2)
@@ -23,6 +24,7 @@ class Overtaken:
 
     loading_basis: LoadingBasis | None
     empty_weight: EmptyWeight | None
+    provisions: Provisions
     changed: tuple[str, ...]
 
 
@@ -40,29 +42,30 @@ def overtaken(current: Current, known: datetime) -> Overtaken | None:
         ("empty weight", now.empty_weight, used.empty_weight_id),
     )
     changed = tuple(name for name, version, before in pairs if (version.id if version else None) != before)
-    return Overtaken(now.basis, now.empty_weight, changed) if changed else None
+    changed += provisions_changed(current, now.provisions)
+    return Overtaken(now.basis, now.empty_weight, now.provisions, changed) if changed else None
 
 
 def is_told(load: UUID, found: Overtaken) -> bool:
     """This function will say whether it was told already that these versions overtook the load."""
     told = StaleNotice.objects.filter(
-        load_id=load, loading_basis=found.loading_basis, empty_weight=found.empty_weight
+        load_id=load,
+        loading_basis=found.loading_basis,
+        empty_weight=found.empty_weight,
+        provisions=found.provisions.ids(),
     )
     return told.exists()
 
 
 def accepted_loads(aircraft: Aircraft, now: datetime) -> tuple[Current, ...]:
     """This function will return the accepted loads of an aircraft that may still be on the ground."""
-    later = Step.objects.filter(load_id=OuterRef("load_id"), number__gt=OuterRef("number"))
-    last = steps_with_their_loads().filter(
-        ~Exists(later),
+    standing = loads_present().filter(
         operator_id=aircraft.operator_id,
-        load__operator_id=aircraft.operator_id,
-        load__aircraft=aircraft,
-        load__departure__gte=now - LATEST_DEPARTURE,
-        after="accepted",
+        aircraft=aircraft,
+        departure__gte=now - LATEST_DEPARTURE,
+        state="accepted",
     )
-    return tuple(current_at(one) for one in last.order_by("load__departure", "load_id"))
+    return tuple(current_of(one) for one in standing.order_by("departure", "load_id"))
 
 
 def database_time() -> datetime:

@@ -2,6 +2,7 @@
 
 from collections.abc import Mapping
 
+from fleet.queries.provisions import used_provisions
 from loads import lifecycle
 from loads.queries.computation import versions_of
 from loads.queries.current import Current
@@ -17,7 +18,7 @@ def statement_of(current: Current, declared: Mapping[str, object]) -> dict[str, 
     one.
     """
     used = current.assessment
-    versions = versions_of(used.loading_basis, used.empty_weight)
+    versions = versions_of(used.loading_basis, used.empty_weight, used_provisions(used.provisions))
     return statement(declared, versions, used.engine, current.result())
 
 

@@ -7,6 +7,7 @@ are compared with the figure the arithmetic gives, and the printed one is named 
 
 import json
 from collections.abc import Callable
+from dataclasses import replace
 from fractions import Fraction
 from pathlib import Path
 from typing import Any
@@ -15,8 +16,10 @@ import pytest
 
 from fleet.conversion import FACTOR, in_unit
 from fleet.quantities import Quantity, Unit
+from fleet.standard_weights_reading import read_standard_weights
 from loads.balance.declared import read_load
 from tests.pure.loads.making import load, twin
+from tests.pure.loads.standards import document_with, eu_document, passenger, standard
 from tests.reference.plain_aircraft import FuelTank, PlainAircraft
 
 EXAMPLES: list[dict[str, Any]] = json.loads(
@@ -33,8 +36,6 @@ NOT_YET = {
     "WBH-TAIL-DATUM-FWD": "weighing worksheets are not entered yet",
     "WBH-TAIL-DATUM-AFT": "weighing worksheets are not entered yet",
     "PALLET-TARE": "unit loads with their tare are not entered yet",
-    "STD-SMALL": "tables of standard weights are not entered yet",
-    "STD-DECLARED": "additions to declared weights are not entered yet",
     "NEGLIGIBLE": "changes between weighings are not entered yet",
     "REVISE-05": "changes between weighings are not entered yet",
 }
@@ -307,6 +308,47 @@ def constants(_inputs, _expected):
         "kg.mm per lb.in": FACTOR[Unit.LB_IN] / FACTOR[Unit.KG_MM],
         "US gal in cubic inches": FACTOR[Unit.US_GAL] * 100**3 / FACTOR[Unit.IN] ** 3,
     }
+
+
+def seated(seats: int, passengers: list[dict[str, Any]], **table: Any) -> Fraction:
+    """What these passengers weigh in kg in the twin, with so many passenger seats installed."""
+    basis = replace(twin(), passenger_seats_installed=seats)
+    document = document_with(passengers)
+    declared = read_load(document, basis, read_standard_weights(eu_document(**table)))
+    return sum(in_kilograms(one.weight) for one in declared.passengers)
+
+
+def in_kilograms(pounds: Fraction) -> Fraction:
+    return pounds * FACTOR[Unit.LB] / FACTOR[Unit.KG]
+
+
+@example("STD-SMALL")
+def standard_masses(inputs, _):
+    """The table of the example, entered as a table, and its party seated."""
+    rows = []
+    for seats, weights in inputs["table"].items():
+        first, last = (int(end) for end in seats.split("-"))
+        listed = [{"category": name, "value": value, "unit": "kg"} for name, value in weights.items()]
+        rows.append({"from_seats": first, "to_seats": last, "weights": listed, "source": {"page": "table 2"}})
+    party = [name for name, count in inputs["load"].items() for _ in range(count)]
+    places = ("ROW1-L", "ROW1-R", "ROW2-L", "ROW2-R")
+    people = [
+        standard(f"P{number}", seat, name)
+        for number, (seat, name) in enumerate(zip(places, party, strict=True))
+    ]
+    return {seats: seated(int(seats.split("-")[0]), people, rows=rows) for seats in inputs["table"]}
+
+
+@example("STD-DECLARED")
+def declared_mass(inputs, _):
+    additions = [
+        {"what": what, "weight": {"value": inputs[name], "unit": "kg"}}
+        for what, name in (("clothing", "clothing_kg_min"), ("hand baggage", "hand_baggage_kg_min"))
+    ]
+    rule = {"below_seats": 10, "additions": additions, "source": {"page": "(e)(a)"}}
+    weight = {"value": inputs["declared_kg"], "unit": "kg"}
+    declared = [passenger("A", "ROW1-L", how="declared", weight=weight)]
+    return {"mass_kg": seated(inputs["seats"], declared, declared=rule)}
 
 
 def tolerance_of(given: Any, name: str) -> Fraction:
