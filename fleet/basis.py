@@ -15,6 +15,7 @@ from fleet.flight_rules import CertificationCategory, Modification, PerformanceR
 from fleet.fuel_balance import FuelBalance
 from fleet.lateral import LateralByCg
 from fleet.positions import MovingPart
+from fleet.presentation import Presentation
 from fleet.quantities import Unit
 from fleet.sourced import Limit, Source
 from fleet.stations import Condition, Conditional, Cumulative, Floor, Rail
@@ -259,3 +260,4 @@ class Basis:
     fuel_balance: tuple[FuelBalance, ...] = ()
     trim: Trim | None = None
     curtailments: tuple[Curtailment, ...] = ()  # the operator's own margins inside the envelopes
+    presentation: Presentation | None = None  # how moments are shown, never an input to a decision

@@ -6,10 +6,11 @@ from typing import Any
 from fleet.basis import Envelope, Limits, Phase
 from fleet.basis_reading.applicability import combinations, everything, in_words, read_applicability
 from fleet.basis_reading.findings import Findings, number
+from fleet.basis_reading.presentation import across_of
 from fleet.basis_reading.variants import Variants
 from fleet.conversion import converted
 from fleet.envelope import NotAnEnvelope
-from fleet.quantities import DIMENSION_OF, Dimension, Unit
+from fleet.quantities import Unit
 
 # An envelope that holds at landing holds on down to the minimum at landing, which is flown through to reach.
 _PHASES: dict[str, tuple[Phase, ...]] = {
@@ -99,16 +100,10 @@ def lateral_limits_entered(findings: Findings, envelopes: tuple[Envelope, ...]) 
 
 
 def _envelope(findings: Findings, at: str, entry: dict[str, Any]) -> Envelope | None:
-    unit, weight_unit = Unit(entry["unit"]), Unit(entry["weight_unit"])
-    moments = entry["plane"] == "moment"
-    if DIMENSION_OF[unit] is not (Dimension.MOMENT if moments else Dimension.LENGTH):
-        findings.fault(
-            f"{at}/unit",
-            "unit-dimension",
-            f"{unit.value} is no unit of {entry['plane']}; correct plane or unit",
-        )
+    across, weight_unit = across_of(findings, at, entry), Unit(entry["weight_unit"])
+    if across is None:
         return None
-    across = findings.moment if moments else findings.length
+    weights = [converted(number(weight), weight_unit, findings.weight) for weight, _ in entry["points"]]
     try:
         return Envelope(
             id=entry["id"],
@@ -116,11 +111,8 @@ def _envelope(findings: Findings, at: str, entry: dict[str, Any]) -> Envelope | 
             phases=phases_of(entry["phases"]),
             plane=entry["plane"],
             points=tuple(
-                (
-                    converted(number(value), unit, across),
-                    converted(number(weight), weight_unit, findings.weight),
-                )
-                for weight, value in entry["points"]
+                (across(weight, number(value)), weight)
+                for weight, (_, value) in zip(weights, entry["points"], strict=True)
             ),
             source=findings.source(entry["source"]),
             **read_applicability(findings, at, entry),

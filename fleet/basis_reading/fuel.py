@@ -4,6 +4,7 @@ from typing import Any
 
 from fleet.basis import BurnStage, Tank, TankTable
 from fleet.basis_reading.findings import Findings, exact, number
+from fleet.basis_reading.presentation import divided_by
 from fleet.conversion import converted
 from fleet.quantities import DIMENSION_OF, Unit
 from fleet.tanks import NotATable
@@ -86,6 +87,9 @@ def _table(findings: Findings, at: str, entry: dict[str, Any]) -> TankTable | No
             )
     if not fits:
         return None
+    factor = divided_by(findings, at, entry, moments=entry["gives"] == "moment")
+    if factor is None:
+        return None
     quantity_unit = findings.volume if entry["against"] == "volume" else findings.weight
     value_unit = findings.length if entry["gives"] == "arm" else findings.moment
     try:
@@ -97,7 +101,7 @@ def _table(findings: Findings, at: str, entry: dict[str, Any]) -> TankTable | No
             points=tuple(
                 (
                     converted(number(quantity), against, quantity_unit),
-                    converted(number(value), gives, value_unit),
+                    converted(number(value) * factor, gives, value_unit),
                 )
                 for quantity, value in entry["points"]
             ),

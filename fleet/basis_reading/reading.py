@@ -15,6 +15,7 @@ from fleet.basis_reading.lateral import read_lateral_by_cg
 from fleet.basis_reading.limits import read_limits
 from fleet.basis_reading.performance import read_performance
 from fleet.basis_reading.positions import read_positions
+from fleet.basis_reading.presentation import read_presentation
 from fleet.basis_reading.running_sums import read_conditions, read_cumulative
 from fleet.basis_reading.samples import read_sample_loads
 from fleet.basis_reading.stations import read_places, read_seats, read_zones
@@ -85,6 +86,7 @@ def _parts(findings: Findings) -> dict[str, Any]:
         "conditions": read_conditions(findings),
         "cumulative": read_cumulative(findings),
         "curtailments": read_curtailments(findings, envelopes),
+        "presentation": read_presentation(findings),
     }
 
 

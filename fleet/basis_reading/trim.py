@@ -2,10 +2,12 @@
 
 from fractions import Fraction
 from itertools import pairwise
-from typing import Any
+from typing import Any, Literal
 
 from fleet.basis_reading.findings import Findings, exact, number
+from fleet.basis_reading.presentation import index_of
 from fleet.conversion import converted
+from fleet.presentation import IndexUnits
 from fleet.quantities import Unit
 from fleet.trim import Trim, TrimLine, TrimTable
 
@@ -27,7 +29,8 @@ def read_trim(findings: Findings) -> Trim | None:
         findings.fault("/trim/step", "not-above-zero", "must be above zero; enter how finely it is printed")
         return None
     low, high, source = _range(findings, given)
-    return Trim(given["against"], given["unit"], step, low, high, source, tables)
+    against: Literal["arm", "chord"] = "chord" if given["against"] == "chord" else "arm"
+    return Trim(against, given["unit"], step, low, high, source, tables)
 
 
 def _lines(findings: Findings, given: dict[str, Any]) -> list[tuple[str | None, TrimLine, str]]:
@@ -43,16 +46,24 @@ def _lines(findings: Findings, given: dict[str, Any]) -> list[tuple[str | None, 
                 "the unit of the arms is missing, and none is inferred; state it",
             )
     elif "against_unit" in given:
-        findings.fault("/trim/against_unit", "unit-dimension", "percent has no unit; leave it out")
-    elif "none" in findings.document.get("chord", {}):
+        findings.fault(
+            "/trim/against_unit", "unit-dimension", "percent and index units have no other; leave it out"
+        )
+    elif given["against"] == "chord" and "none" in findings.document.get("chord", {}):
         findings.fault(
             "/trim/against", "no-chord", "the basis has no chord to reckon percent with; enter the chord"
         )
+    index = index_of(findings, "/trim/against") if given["against"] == "index" else None
     found = []
     for row, entry in enumerate(given["tables"]):
         at = f"/trim/tables/{row}"
+        weight = exact(entry["weight"], findings.weight) if "weight" in entry else None
+        if index is not None and (weight is None or weight <= 0):
+            findings.fault(
+                f"{at}/weight", "weight-missing", "an index has an arm at one weight only; state the weight"
+            )
         points = tuple(
-            (converted(number(cg), unit, findings.length) if unit else number(cg), number(setting))
+            (_cg(findings, number(cg), weight, unit, index), number(setting))
             for cg, setting in entry["points"]
         )
         for place, (before, after) in enumerate(pairwise(points), 1):
@@ -60,9 +71,19 @@ def _lines(findings: Findings, given: dict[str, Any]) -> list[tuple[str | None, 
                 findings.fault(
                     f"{at}/points/{place}", "not-rising", "the CG does not rise here; correct point or order"
                 )
-        weight = exact(entry["weight"], findings.weight) if "weight" in entry else None
         found.append((entry.get("flap"), TrimLine(weight, points, findings.source(entry["source"])), at))
     return found
+
+
+def _cg(
+    findings: Findings, given: Fraction, weight: Fraction | None, unit: Unit | None, index: IndexUnits | None
+) -> Fraction:
+    """Return a CG as the tables keep it: an arm in the unit of the basis, or percent of the chord."""
+    if unit is not None:
+        return converted(given, unit, findings.length)
+    if index is not None and weight is not None and weight > 0:
+        return index.arm(weight, given)
+    return given
 
 
 def _table(findings: Findings, flap: str | None, lines: list[tuple[str | None, TrimLine, str]]) -> TrimTable:
