@@ -28,14 +28,15 @@ from loads.balance.checks_weight import landing_fuel_check, weight_checks
 from loads.balance.checks_whole import whole_aircraft_checks
 from loads.balance.flown import Flown, at_ends_of_rails, fly, path_of, states_aboard, worst_of_each
 from loads.balance.fuel import FuelOffTable, FuelState
-from loads.balance.moves import cg_advice
+from loads.balance.moves import Flight, cg_advice
 from loads.balance.path_worst import Burn, burn_of
 from loads.balance.prepared import Prepared, prepared
-from loads.balance.rails import Flight, RailEnd, at_rail_end, rail_ends, worse_of
+from loads.balance.rails import RailEnd, at_rail_end, rail_ends, worse_of
 from loads.balance.report import Assessed, report, report_without_basis
 from loads.balance.result import Check, Result, State, verdict_of
 from loads.balance.sections import dry_at_phases
 from loads.balance.sumsheet import Aboard, Sums, all_lines, lines_without_fuel
+from loads.balance.sumsheet_events import flight_lines
 
 
 def assess(
@@ -69,11 +70,12 @@ def assess(
         *standard_checks(declared.standards),
         persons_check(declared),
         *_checks(declared, states, burn, known, ready, advised=advised),
-        *whole_aircraft_checks(declared, states, fuel, ready),
+        *whole_aircraft_checks(declared, states, flown, ready),
         *off_table,
         *nothing_left,
     )
-    lines = all_lines(aboard, declared.fuel, fuel, states, ready)
+    after_ramp = flight_lines(declared, flown.sections, states, ready) if flown and flown.sections else ()
+    lines = all_lines(aboard, declared.fuel, fuel, states, ready, flight=after_ramp)
     verdict = verdict_of(checks)
     document = report(Assessed(declared, aboard, lines, states, fuel, burn, checks), ready)
     return Result(verdict, checks, tuple(states.values()), lines, document, burn)

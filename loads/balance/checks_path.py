@@ -7,16 +7,21 @@ from fleet.basis import Axis, Phase
 from loads.balance.checks_balance import SIDES
 from loads.balance.checks_lateral import AT, PATH_CODE, lateral_by_cg_path
 from loads.balance.operator_margins import told
-from loads.balance.path import Gap, Knot, Leg, Path
+from loads.balance.path import Gap, Knot, Leg, Path, Stretch
 from loads.balance.path_across import WorstAcross
-from loads.balance.path_worst import AXES, Burn, Worst
+from loads.balance.path_worst import AXES, Burn, Worst, worst_at_zero_fuel
 from loads.balance.prepared import Prepared
+from loads.balance.presented import presented
 from loads.balance.result import Check, Json, State
 from loads.balance.rounding import CHORD_PLACES, VOLUME_PLACES, WEIGHT_PLACES, between, printed, room
 
 TITLES: dict[Axis, str] = {
     "longitudinal": "centre of gravity along the burn",
     "lateral": "lateral centre of gravity along the burn",
+}
+ZERO_FUEL: dict[Axis, tuple[str, str]] = {
+    "longitudinal": ("path.zero-fuel", "centre of gravity at zero fuel over the flight"),
+    "lateral": ("path.zero-fuel-lateral", "lateral centre of gravity at zero fuel over the flight"),
 }
 WHERE: dict[Leg, str] = {
     "taxi": "while taxiing",
@@ -34,11 +39,13 @@ def path_checks(burn: Burn, states: Mapping[Phase, State], ready: Prepared, fix:
         for axis in AXES
         if axis == "longitudinal" or axis in burn.worst or ready.bounds(axis, "take-off")
     ]
+    if burn.path.zero_fuel:
+        found += _zero_fuel_checks(burn, states, ready, fix)
     if not ready.basis.lateral_by_cg:
         return found
 
     def where(worst: WorstAcross) -> tuple[Json, str]:
-        at = _at(worst, states, ready)
+        at = _at(worst, burn.path, states, ready)
         return at, _place(worst, at, ready)
 
     return found + [
@@ -57,11 +64,7 @@ def path_document(burn: Burn, checks: Iterable[Check], ready: Prepared) -> Json:
         if stretch.end.phase is None:
             kinks.append(stretch.end)
     at = {check.code: check.at for check in checks if check.at is not None}
-    worst: list[Json] = [
-        {"axis": axis, **at[f"path.{axis}"], "feeding": list(found.stretch.feeding)}
-        for axis, found in burn.worst.items()
-        if f"path.{axis}" in at
-    ]
+    worst: list[Json] = [{"axis": axis, **at[f"path.{axis}"]} for axis in burn.worst if f"path.{axis}" in at]
     if PATH_CODE in at:
         worst.append({"axis": "lateral by CG", **at[PATH_CODE]})
     return {"points": [_figures(knot, _arms(knot), ready) for knot in kinks], "worst": worst}
@@ -78,7 +81,24 @@ def _check(burn: Burn, axis: Axis, states: Mapping[Phase, State], ready: Prepare
             return Check(code, title, "unresolved", margin_text=text, what_next=what_next)
     if worst is None:
         return Check(code, title, "pass", margin_text="nothing is burned in flight")
-    places, at = ready.length_places, _at(worst, states, ready)
+    return worst_check((code, title), axis, worst, _at(worst, burn.path, states, ready), ready, fix=fix)
+
+
+def _zero_fuel_checks(burn: Burn, states: Mapping[Phase, State], ready: Prepared, fix: Fix) -> list[Check]:
+    """Return the check of zero fuel over the flight, for each axis that has an envelope for it."""
+    return [
+        worst_check(ZERO_FUEL[axis], axis, worst, _at(worst, burn.path, states, ready), ready, fix=fix)
+        for axis in AXES
+        for worst in worst_at_zero_fuel(burn.path, axis, ready)
+    ]
+
+
+def worst_check(
+    named: tuple[str, str], axis: Axis, worst: Worst, at: Json, ready: Prepared, *, fix: Fix
+) -> Check:
+    """Return the check of a worst point, which is `at`; `named` are its code and title."""
+    broken = worst.room is None or worst.room.numerator < 0
+    places = ready.length_places
     if worst.low is None or worst.high is None or worst.room is None:
         actual, low, high, margin, edge = printed(worst.arm, places), None, None, None, None
         words = "no part of the envelope lies at this weight"
@@ -89,8 +109,7 @@ def _check(burn: Burn, axis: Axis, states: Mapping[Phase, State], ready: Prepare
         side = "beyond" if broken else "from"
         words = f"on the {edge} limit" if not worst.room else f"{figure} {side} the {edge} limit"
     check = Check(
-        code,
-        title,
+        *named,
         "fail" if broken else "pass",
         worst.knot.phase,
         actual,
@@ -142,18 +161,43 @@ def _place(worst: Worst | WorstAcross, at: Json, ready: Prepared) -> str:
     return f"{at['point']}, at {at['weight']} {ready.weight} with {at['fuel']} {ready.weight} of fuel"
 
 
-def _at(worst: Worst | WorstAcross, states: Mapping[Phase, State], ready: Prepared) -> Json:
-    """Return where the worst point is, as it stands in the document."""
-    knot, phase = worst.knot, worst.knot.phase
+def _at(worst: Worst | WorstAcross, path: Path, states: Mapping[Phase, State], ready: Prepared) -> Json:
+    """Return where the worst point is, as it stands in the document: in words, in figures, and with what
+    each tank holds.
+    """
+    knot, phase, stretch = worst.knot, worst.knot.phase, worst.stretch
+    dry = states["zero fuel"].weight if stretch.dry is None else stretch.dry
     arms = (states[phase].arm, states[phase].lateral_arm) if phase is not None else _arms(knot)
     percent = ready.chord_percent(arms[0])
     return {
-        "point": phase or WHERE[worst.stretch.leg],
+        "point": phase or where_words(stretch),
         **_figures(knot, arms, ready),
+        **presented(knot.weight, knot.moment, ready),
         "percent_chord": None if percent is None else printed(percent, CHORD_PLACES),
-        "fuel": printed(knot.weight - states["zero fuel"].weight, WEIGHT_PLACES),
-        "feeding": list(worst.stretch.feeding),
+        "fuel": printed(knot.weight - dry, WEIGHT_PLACES),
+        "feeding": list(stretch.feeding),
+        "tanks": {
+            tank: printed(held, VOLUME_PLACES) for tank, held in held_at(stretch, knot, path.density).items()
+        },
     }
+
+
+def where_words(stretch: Stretch) -> str:
+    """Return where on the flight a point of a stretch is; an event and its side, or the leg and what gear and
+    flaps are in.
+    """
+    if not stretch.feeding and stretch.setting:
+        return stretch.setting
+    return f"{WHERE[stretch.leg]}, with {stretch.setting}" if stretch.setting else WHERE[stretch.leg]
+
+
+def held_at(stretch: Stretch, knot: Knot, density: Fraction) -> Mapping[str, Fraction]:
+    """Return the usable volume in each tank at a point of a stretch; {} where it is not told."""
+    contents, before = stretch.held
+    if not stretch.feeding:
+        return contents
+    each = before + (stretch.start.weight - knot.weight) / density / len(stretch.feeding)
+    return {tank: held - each if tank in stretch.feeding else held for tank, held in contents.items()}
 
 
 def _arms(knot: Knot) -> tuple[Fraction, Fraction]:

@@ -1,4 +1,4 @@
-"""One load flown: fuel and aircraft at each phase, the path between them, and what the sequence makes of it."""
+"""One load flown: the fuel along its flight, its path, and who and what is aboard over it."""
 
 from collections.abc import Mapping, Sequence
 from dataclasses import replace
@@ -8,13 +8,14 @@ from typing import Literal, NamedTuple
 from fleet.basis import Phase
 from fleet.weighing import EmptyFigures
 from loads.balance.aboard import Declared, Person
-from loads.balance.fuel import FuelState, fuel_states
+from loads.balance.fuel import NOTHING, FuelState, fuel_states
 from loads.balance.over_flight import over_flight
 from loads.balance.path import Path, burn_path
-from loads.balance.path_events import sequence_path, with_settings
+from loads.balance.path_events import sequence_path, with_settings, zero_fuel_turns
 from loads.balance.prepared import Prepared
 from loads.balance.result import Check, State
 from loads.balance.sections import Dry, Sections, dry_over_flight, sections_of
+from loads.balance.sumsheet import Sums
 
 ORDER = {"fail": 0, "unresolved": 1, "pass": 2, "advisory": 3}
 
@@ -43,7 +44,12 @@ def path_of(declared: Declared, flown: Flown, states: Mapping[Phase, State], rea
         path = sequence_path(declared, flown.sections, flown.dry, states)
     else:
         path = burn_path(declared.fuel, flown.fuel, states)
-    return with_settings(path, declared, ready) if ready.basis.positions else path
+    if ready.basis.positions:
+        path = with_settings(path, declared, ready)
+    if ready.basis.positions or declared.sequence:
+        dry = flown.dry or (Dry(Sums(NOTHING, NOTHING, NOTHING), NOTHING),)
+        path = replace(path, zero_fuel=zero_fuel_turns(declared, dry, states["zero fuel"], ready))
+    return path
 
 
 def at_ends_of_rails(declared: Declared, end: Literal["forward", "aft"]) -> Declared:

@@ -7,13 +7,14 @@ one that shifts the least weight is named, after it was tried at every phase, al
 every limit of seat, place and zone it touches.
 """
 
-from collections.abc import Iterator, Mapping
+from collections.abc import Iterator, Mapping, Sequence
 from fractions import Fraction
 from math import ceil
 from typing import NamedTuple
 
 from fleet.basis import Phase, Place, Seat
 from loads.balance.aboard import Declared
+from loads.balance.checks_lateral import stays_within_lateral
 from loads.balance.checks_places import Held
 from loads.balance.path_worst import Burn, stays_inside
 from loads.balance.prepared import Prepared
@@ -33,13 +34,16 @@ class Move(NamedTuple):
     whole: bool
 
 
-def cg_advice(
-    declared: Declared, states: Mapping[Phase, State], burn: Burn, held: Held, ready: Prepared
-) -> str:
+Flight = tuple[Mapping[Phase, State], Burn]  # the phases and the burn between them
+
+
+def cg_advice(declared: Declared, flights: Sequence[Flight], held: Held, ready: Prepared) -> str:
     """Return what brings the CG within all along the flight, in words and figures; verified before it is
     named.
+
+    Several flights are one whose moment is not known better: what is named holds for each of them.
     """
-    wanted = _moment_wanted(states, burn, ready)
+    wanted = _moment_wanted(flights, ready)
     if wanted is None:
         return "Bring the weight within the envelope first, then assess again."
     low, high = wanted
@@ -50,11 +54,13 @@ def cg_advice(
     change = low if low > 0 else high
     side = "aft" if change > 0 else "forward"
     figure = f"{printed(abs(change), ready.moment_places, 'up')} {ready.moment}"
+    if declared.sequence:
+        return f"Change the moment by at least {figure}, {side}; no single move is tried with a sequence."
     working = (
         move
         for move in _possible(declared, ready)
         if (weight := _enough(move, low, high)) is not None
-        and _holds(move, weight, states, burn, held=held, ready=ready)
+        and all(_holds(move, weight, *flight, held=held, ready=ready) for flight in flights)
     )
     best = min(working, key=lambda move: _enough(move, low, high) or move.weight, default=None)
     if best is None:
@@ -65,9 +71,16 @@ def cg_advice(
     return f"{verb} from {best.start.name} to {best.end.name}: a moment of at least {figure}, {side}."
 
 
-def _moment_wanted(
-    states: Mapping[Phase, State], burn: Burn, ready: Prepared
-) -> tuple[Fraction, Fraction] | None:
+def _moment_wanted(flights: Sequence[Flight], ready: Prepared) -> tuple[Fraction, Fraction] | None:
+    """Return the least and the greatest change of moment that put every flight inside."""
+    each = [_of_one(states, burn, ready) for states, burn in flights]
+    found = [ends for ends in each if ends is not None]
+    if len(found) < len(each) or not found:
+        return None
+    return max(low for low, _ in found), min(high for _, high in found)
+
+
+def _of_one(states: Mapping[Phase, State], burn: Burn, ready: Prepared) -> tuple[Fraction, Fraction] | None:
     """Return the least and the greatest change of moment that put every judged phase and the worst point of
     the path inside, weights unchanged. The rest of the path is only tried with a move.
     """
@@ -100,17 +113,24 @@ def _enough(move: Move, low: Fraction, high: Fraction) -> Fraction | None:
 
 def _possible(declared: Declared, ready: Prepared) -> Iterator[Move]:
     places = [place for place in ready.basis.places if place.id in declared.configuration.places]
-    seats = [seat for seat in ready.basis.seats if seat.id in declared.configuration.seats]
+    set_on_rails = {seat.id: seat for seat, _ in declared.settings}
+    seats = [
+        set_on_rails.get(seat.id, seat)
+        for seat in ready.basis.seats
+        if seat.id in declared.configuration.seats
+    ]
     taken = {person.seat.id for person in (*declared.crew, *declared.passengers)}
     for item in declared.items:
         if item.weight is not None and not item.removed:
             for place in places:
                 yield Move(item.kind, item.weight, item.place, place, False)
     for person in declared.passengers:
-        if person.weight is not None and person.lap_infant is None:
+        # Where a seat stands on its rail is not known: no moment to it or from it is.
+        if person.weight is not None and person.lap_infant is None and person.seat.rail is None:
             for seat in seats:
-                if seat.id not in taken and seat.serves in ("passenger", "either"):
-                    yield Move("the passenger", person.weight, person.seat, seat, True)
+                if seat.id not in taken and seat.serves in ("passenger", "either") and seat.rail is None:
+                    weight = person.weight + (person.restraint or 0)
+                    yield Move("the passenger", weight, person.seat, seat, True)
 
 
 def _holds(
@@ -136,7 +156,9 @@ def _holds(
         for zone in ready.basis.zones
         if move.end.id in zone.members and move.start.id not in zone.members
     )
-    return zones and stays_inside(burn.path, ready, along, across)
+    if not zones or not stays_inside(burn.path, ready, along, across):
+        return False
+    return not ready.basis.lateral_by_cg or stays_within_lateral(states, burn.path, ready, (along, across))
 
 
 def _in_zone(members: tuple[str, ...], held: Held) -> Fraction:

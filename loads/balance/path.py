@@ -49,8 +49,8 @@ class Stretch(NamedTuple):
     """The path between two kinks; `bend` is the square part of moment over weight, in length / weight.
 
     `held` is what the tanks hold where the draw begins, with what each feeding one has given before `start`.
-    `dry` is the aircraft without usable fuel, None where that is the same all along; `setting` is in words the
-    positions it is flown in, "" where they are as the sequence or the weighing has them.
+    `dry` is the aircraft without usable fuel, None where that is the same all along; `setting` is in words
+    what gear and flaps are in, "" where they are as the sequence or the weighing has them.
     """
 
     leg: Leg
@@ -86,6 +86,13 @@ class Gap(NamedTuple):
     first: Fraction
 
 
+class Found(NamedTuple):
+    """What was found of a path so far, in the order of flight."""
+
+    stretches: list[Stretch]
+    gaps: list[Gap]
+
+
 class Turn(NamedTuple):
     """A moment of the flight at which nothing is burned: one side of an event, or a transfer.
 
@@ -106,7 +113,8 @@ class Path:
     """The path in the order of flight, and what of it is not known. `density` is that of the fuel.
 
     `turns` are the events. `settings` are the same stretches once more, for every setting of gear and flaps
-    that may hold there beside the one they are flown in; nothing of these is across the aircraft.
+    that may hold there beside the one they are flown in; nothing of these is across the aircraft. `zero_fuel`
+    is the aircraft without usable fuel after each event and in each setting, where there is more than one.
     """
 
     stretches: tuple[Stretch, ...]
@@ -114,17 +122,17 @@ class Path:
     density: Fraction
     turns: tuple[Turn, ...] = ()
     settings: tuple[Stretch, ...] = ()
+    zero_fuel: tuple[Turn, ...] = ()
 
 
 def burn_path(plan: FuelPlan, fuel: Mapping[Phase, FuelState], states: Mapping[Phase, State]) -> Path:
     """Return the path of a load whose phases are known; a leg that burns nothing has no stretch."""
     tanks = FlownTanks(plan, fuel["ramp"], knot_of(states["ramp"]))
-    stretches: list[Stretch] = []
-    gaps: list[Gap] = []
+    found = Found([], [])
     for leg, before, after in LEGS:
         start, end = knot_of(states[before]), knot_of(states[after])
-        tanks.fly(leg, fuel[before].usable, fuel[after].draws, (start, end), stretches, gaps)
-    return Path(tuple(stretches), tuple(gaps), plan.density)
+        tanks.fly(leg, fuel[before].usable, fuel[after].draws, (start, end), found)
+    return Path(tuple(found.stretches), tuple(found.gaps), plan.density)
 
 
 class FlownTanks:
@@ -143,8 +151,7 @@ class FlownTanks:
         contents: Contents,
         draws: Sequence[Draw],
         ends: tuple[Knot | None, Knot | None],
-        stretches: list[Stretch],
-        gaps: list[Gap],
+        found: Found,
     ) -> None:
         """Add the path through draws that follow each other; the aircraft at both ends is known, or in a
         gap.
@@ -156,15 +163,16 @@ class FlownTanks:
             if here is not None and self.of_one_arm(draw.feeding) and not (last and landed is None):
                 there = landed if last else self.burned(here, draw)
                 if there is not None:
-                    stretches.append(Stretch(leg, draw.feeding, here, there, NOTHING, (contents, NOTHING)))
+                    held = (contents, NOTHING)
+                    found.stretches.append(Stretch(leg, draw.feeding, here, there, NOTHING, held))
                 here = there
             else:
                 there = landed if last else self.knot(left)
                 for part in self.parts(leg, draw, contents, here, there):
                     if isinstance(part, Stretch):
-                        stretches.append(part)
+                        found.stretches.append(part)
                     else:
-                        gaps.append(part)
+                        found.gaps.append(part)
                 here = there
             contents = left
 

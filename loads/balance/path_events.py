@@ -8,6 +8,7 @@ extremes are at such points or where its slope is nothing, which is a rational v
 from collections.abc import Mapping, Sequence
 from dataclasses import replace
 from fractions import Fraction
+from itertools import pairwise
 
 from fleet.basis import Phase
 from fleet.positions import settings
@@ -15,7 +16,7 @@ from fleet.tanks import TankPiece
 from loads.balance.aboard import Declared
 from loads.balance.events import Event, Transfer
 from loads.balance.fuel import NOTHING, Contents, FuelState
-from loads.balance.path import FlownTanks, Gap, Knot, Leg, Path, Stretch, Turn, knot_of
+from loads.balance.path import FlownTanks, Found, Gap, Knot, Leg, Path, Stretch, Turn, knot_of
 from loads.balance.prepared import Prepared
 from loads.balance.result import State
 from loads.balance.sections import Dry, Section, Sections, after_transfer
@@ -28,8 +29,7 @@ def sequence_path(
     states: Mapping[Phase, State],
 ) -> Path:
     """Return the path of a load with a sequence whose phases are known."""
-    stretches: list[Stretch] = []
-    gaps: list[Gap] = []
+    found = Found([], [])
     turns: list[Turn] = []
     ramp, staying = flight.fuel["ramp"], flight.fuel["zero fuel"].weight
     flown = [FlownTanks(declared.fuel, ramp, _loaded(each, ramp)) for each in dry]
@@ -39,15 +39,15 @@ def sequence_path(
         end = _end(section.ends, section.end, tanks, states)
         for knot, held in ((start, section.start), (end, section.end)):
             if knot is None:
-                gaps.append(tanks.gap(section.leg, held))
-        first = len(stretches)
-        tanks.fly(section.leg, section.start, section.draws, (start, end), stretches, gaps)
+                found.gaps.append(tanks.gap(section.leg, held))
+        first = len(found.stretches)
+        tanks.fly(section.leg, section.start, section.draws, (start, end), found)
         without_fuel = sums.weight + staying
-        stretches[first:] = [each._replace(dry=without_fuel) for each in stretches[first:]]
+        found.stretches[first:] = [each._replace(dry=without_fuel) for each in found.stretches[first:]]
         if section.event is not None:
             later = dry[section.aboard + 1].sums.weight + staying
-            turns += _turns(section, end, flown, (without_fuel, later), gaps)
-    return Path(tuple(stretches), tuple(gaps), declared.fuel.density, tuple(turns))
+            turns += _turns(section, end, flown, (without_fuel, later), found.gaps)
+    return Path(tuple(found.stretches), tuple(found.gaps), declared.fuel.density, tuple(turns))
 
 
 def with_settings(path: Path, declared: Declared, ready: Prepared) -> Path:
@@ -127,7 +127,7 @@ def _turns(
             Turn(section.leg, f"just after event {event.number}", ((after, contents),), False, dry[1])
         )
     if event.transfer is not None:
-        swept = _swept(section.leg, event, event.transfer, section.end, tanks, gaps)
+        swept = _swept(section, event, event.transfer, tanks, gaps)
         if swept:
             where = f"during the transfer of event {event.number}"
             found.append(Turn(section.leg, where, swept, True, dry[0]))
@@ -135,9 +135,10 @@ def _turns(
 
 
 def _swept(
-    leg: Leg, event: Event, moved: Transfer, contents: Contents, tanks: FlownTanks, gaps: list[Gap]
+    section: Section, event: Event, moved: Transfer, tanks: FlownTanks, gaps: list[Gap]
 ) -> tuple[tuple[Knot, Contents], ...]:
     """Return the knots of a transfer: its ends, the points of both tables, and every extreme in between."""
+    leg, contents = section.leg, section.end
     source, target = tanks.held[moved.source], tanks.held[moved.target]
     out, into = contents[moved.source] + source.trapped, contents[moved.target] + target.trapped
     pieces = source.tank.table.curve.pieces, target.tank.table.curve.pieces
@@ -146,9 +147,10 @@ def _swept(
         marks.add(out - low)
     for piece in pieces[1]:
         marks.update((piece.first - into, piece.last - into))
-    marks |= {_level(one, other, out, into) for one in pieces[0] for other in pieces[1]} - {None}
+    levels = (_level(one, other, out, into) for one in pieces[0] for other in pieces[1])
+    marks.update(level for level in levels if level is not None)
     knots = []
-    for volume in sorted(mark for mark in marks if mark is not None and NOTHING <= mark <= moved.volume):
+    for volume in sorted(mark for mark in marks if NOTHING <= mark <= moved.volume):
         held = after_transfer(contents, replace(event, transfer=replace(moved, volume=volume)))
         knot = tanks.knot(held)
         if knot is None:

@@ -73,20 +73,20 @@ def stays_inside(path: Path, ready: Prepared, along: Fraction, across: Fraction)
         for axis in AXES
         for _, point in _points(beside, axis, ready)
     ) and all(
-        worst.room is not None and worst.room >= 0 for axis in AXES for worst in _turns(beside, axis, ready)
+        worst.room is not None and worst.room >= 0
+        for axis in AXES
+        for worst in (*_turns(beside, axis, ready), *worst_at_zero_fuel(beside, axis, ready))
     )
 
 
 def shifted(path: Path, along: Fraction, across: Fraction) -> Path:
     """Return the path with these moments added to every point of it."""
-    turns = (
-        turn._replace(knots=tuple((_moved(knot, along, across), held) for knot, held in turn.knots))
-        for turn in path.turns
-    )
+    turns = (_moved_turn(turn, along, across) for turn in path.turns)
     return replace(
         path,
         stretches=tuple(_shifted(stretch, along, across) for stretch in path.stretches),
         turns=tuple(turns),
+        zero_fuel=tuple(_moved_turn(turn, along, across) for turn in path.zero_fuel),
         settings=tuple(_shifted(stretch, along, across) for stretch in path.settings),
     )
 
@@ -133,6 +133,18 @@ def _turns(path: Path, axis: Axis, ready: Prepared) -> list[Worst]:
     return found
 
 
+def worst_at_zero_fuel(path: Path, axis: Axis, ready: Prepared) -> list[Worst]:
+    """Return the worst point at zero fuel, after whatever event and in whatever setting; [] where the manual
+    gives no envelope for it, or there is one such point alone, which is a phase.
+    """
+    if not path.zero_fuel:
+        return []
+    found = [
+        worst_turn(bound, turn, axis) for bound in ready.bounds(axis, "zero fuel") for turn in path.zero_fuel
+    ]
+    return [min(found, key=lambda each: (each.room is not None, each.room or NOTHING))] if found else []
+
+
 def worst_turn(bound: Bound, turn: Turn, axis: Axis) -> Worst:
     """Return the worst point of one event against one envelope."""
     _, shape = bound
@@ -157,6 +169,10 @@ def _each_once(bounds: Sequence[Bound]) -> list[Bound]:
 def _shifted(stretch: Stretch, along: Fraction, across: Fraction) -> Stretch:
     start, end = (_moved(knot, along, across) for knot in (stretch.start, stretch.end))
     return stretch._replace(start=start, end=end)
+
+
+def _moved_turn(turn: Turn, along: Fraction, across: Fraction) -> Turn:
+    return turn._replace(knots=tuple((_moved(knot, along, across), held) for knot, held in turn.knots))
 
 
 def _moved(knot: Knot, along: Fraction, across: Fraction) -> Knot:

@@ -58,7 +58,7 @@ def worse_of(told: list[Check], at_ends: list[tuple[RailEnd, list[Check]]]) -> l
     found = []
     for number, check in enumerate(told):
         ends = [(end, checks[number]) for end, checks in at_ends]
-        if not check.code.startswith(("cg.", "path.longitudinal")) or check.outcome == "advisory":
+        if not check.code.startswith(("cg.", "path.longitudinal", "path.zero-fuel")) or check.outcome == "advisory":
             found.append(check)
             continue
         end, worse = min(ends, key=lambda each: _badness(each[1]))

@@ -1,8 +1,9 @@
 """The printed parts of a result, as the API answers them, the pages show them and the paper prints them.
 
 Beyond the checks and the verdict: `units`, `phases`, `path`, `allowable_take_off`, `governing`, `fuel`,
-`sumsheet`, `operating_weight`, `persons`, `advisories`, `not_assessed`. Figures are decimal texts; what is
-not known is null, and the phases of a load that could not be computed are an empty list.
+`sumsheet`, `operating_weight`, `persons`, `advisories`, `not_assessed`, and of a load with one its
+`sequence`. Figures are decimal texts; what is not known is null, and the phases of a load that could not be
+computed are an empty list.
 """
 
 from collections.abc import Mapping
@@ -18,9 +19,11 @@ from loads.balance.fuel import FuelState
 from loads.balance.governing import NOT_KNOWN, cg_line, return_advisory, weight_line
 from loads.balance.path_worst import Burn
 from loads.balance.prepared import Prepared
+from loads.balance.presented import presentation_document, presented
 from loads.balance.result import Check, Json, Line, State
 from loads.balance.rounding import CHORD_PLACES, VOLUME_PLACES, WEIGHT_PLACES, printed
 from loads.balance.sumsheet import Aboard, Sums, as_rows
+from loads.balance.sumsheet_events import sequence_document
 from loads.balance.told_besides import told_besides
 from loads.balance.trim_setting import trim_document
 
@@ -56,7 +59,9 @@ def report(assessed: Assessed, ready: Prepared) -> Json:
         "persons": _persons(declared),
         "advisories": _advisories(declared, states, ready),
         "not_assessed": _not_assessed(checks, bool(states)),
+        **({"sequence": sequence_document(declared, ready)} if declared.sequence else {}),
         **told_besides(declared),
+        **presentation_document(ready),
     }
 
 
@@ -99,6 +104,7 @@ def _phase(state: State, ready: Prepared) -> Json:
         "lateral_arm": lateral,
         "lateral_text": _side(lateral, ready.length),
         "fuel": printed(state.fuel, WEIGHT_PLACES),
+        **presented(state.weight, state.moment, ready),
     }
 
 
@@ -158,6 +164,7 @@ def _operating(sums: Sums | None, ready: Prepared) -> Json | None:
         "arm": printed(arm, ready.length_places),
         "moment": printed(sums.moment, ready.moment_places),
         "percent_chord": None if percent is None else printed(percent, CHORD_PLACES),
+        **presented(sums.weight, sums.moment, ready),
     }
 
 

@@ -2,7 +2,7 @@
 arms.
 """
 
-from collections.abc import Mapping
+from collections.abc import Mapping, Sequence
 from fractions import Fraction
 from typing import NamedTuple
 
@@ -13,6 +13,7 @@ from loads.balance.exact import added, times
 from loads.balance.footing import Rigging
 from loads.balance.fuel import FuelState
 from loads.balance.prepared import Prepared
+from loads.balance.presented import presented
 from loads.balance.result import Json, Line, State
 from loads.balance.rounding import VOLUME_PLACES, WEIGHT_PLACES, printed
 
@@ -42,10 +43,10 @@ def lines_without_fuel(declared: Declared, empty: EmptyFigures | None) -> Aboard
     operating += [_fixed("equipment", item) for item in declared.configuration.equipment]
     operating += [_fixed("operating items", item) for item in declared.configuration.operating_items]
     for person in declared.crew:
-        operating += _people("crew", person)
+        operating += people_lines("crew", person)
     payload: list[Line] = []
     for person in declared.passengers:
-        payload += _people("passengers", person)
+        payload += people_lines("passengers", person)
     for item in declared.items:
         payload += _item(item)
     operating_weight = _sums(operating)
@@ -60,8 +61,13 @@ def all_lines(
     fuel: Mapping[Phase, FuelState] | None,
     states: Mapping[Phase, State],
     ready: Prepared,
+    *,
+    flight: Sequence[Line] = (),
 ) -> tuple[Line, ...]:
-    """Return every line in order: operating weight, zero fuel, ramp, take-off and landing are totals."""
+    """Return every line in order: operating weight, zero fuel, ramp, take-off and landing are totals.
+
+    `flight` are the lines after the ramp of a load with a sequence.
+    """
     lines = [*aboard.operating, _operating_total(aboard.operating_weight), *aboard.payload]
     if fuel is None:
         return tuple(lines)
@@ -73,7 +79,7 @@ def all_lines(
             what = f"{tank.name}, {_volume(stays, ready)} that cannot be used"
             weight, moment = times(stays, plan.density), zero.moments[tank.id]
             lines.append(_plain("fuel not usable", what, weight, moment, tank.lateral_arm))
-    lines.append(_total("zero fuel", states))
+    lines.append(total_line("zero fuel", states))
     for held in plan.tanks:
         tank = held.tank
         burnable = ramp.usable[tank.id] - zero.usable[tank.id]
@@ -81,9 +87,11 @@ def all_lines(
             what = f"{tank.name}, {_volume(burnable, ready)}"
             weight, moment = times(burnable, plan.density), ramp.moments[tank.id] - zero.moments[tank.id]
             lines.append(_plain("fuel", what, weight, moment, tank.lateral_arm))
-    lines += [_total("ramp", states), _burned("taxi", "taxi fuel", ramp, take_off)]
-    lines += [_total("take-off", states), _burned("trip", "trip fuel", take_off, landing)]
-    lines.append(_total("landing", states))
+    if flight:
+        return (*lines, total_line("ramp", states), *flight)
+    lines += [total_line("ramp", states), _burned("taxi", "taxi fuel", ramp, take_off)]
+    lines += [total_line("take-off", states), _burned("trip", "trip fuel", take_off, landing)]
+    lines.append(total_line("landing", states))
     return tuple(lines)
 
 
@@ -102,6 +110,7 @@ def as_rows(lines: tuple[Line, ...], ready: Prepared) -> list[Json]:
             "lateral_moment": None if line.lateral_moment is None else printed(line.lateral_moment, moments),
             "total": line.total,
             "pointer": line.pointer,
+            **presented(line.weight, line.moment, ready, total=line.total or line.group == "empty weight"),
         }
         for number, line in enumerate(lines, 1)
     ]
@@ -119,7 +128,8 @@ def _fixed(group: str, item: FixedItem) -> Line:
     return _placed(Line(group, item.what, FROM_RECORD, item.weight, item.arm, None, None), item.lateral_arm)
 
 
-def _people(group: str, person: Person) -> list[Line]:
+def people_lines(group: str, person: Person) -> list[Line]:
+    """Return the lines of somebody in a seat: the person, an infant on the lap, a restraint."""
     seat = person.seat
     what = f"{seat.name}, {person.position or person.category or 'passenger'}"
     weight = person.weight
@@ -190,7 +200,7 @@ def _operating_total(sums: Sums | None) -> Line:
     return Line(name, name, None, sums.weight, arm, sums.moment, sums.lateral_moment, True)
 
 
-def _total(phase: Phase, states: Mapping[Phase, State]) -> Line:
+def total_line(phase: Phase, states: Mapping[Phase, State]) -> Line:
     """Return the total at a phase; without an empty weight, or with an unknown line, it is not known."""
     state = states.get(phase)
     if state is None:
