@@ -68,6 +68,34 @@ class Passenger(serializers.Serializer[object]):
     category = serializers.CharField(required=False)
     weight = Quantity(required=False)
     lap_infant = LapInfant(required=False)
+    restraint = Quantity(required=False, help_text="what a child's or infant's restraint weighs")
+
+
+class Footprint(serializers.Serializer[object]):
+    """What touches the floor as the item stands, not its outline: one area, and how many there are."""
+
+    length = Quantity()
+    width = Quantity()
+    lies = serializers.ChoiceField(("along", "across"), help_text="which way the length lies in the aircraft")
+    feet_lengthwise = serializers.IntegerField(min_value=1, max_value=100, required=False)
+    feet_widthwise = serializers.IntegerField(min_value=1, max_value=100, required=False)
+
+
+class Spreader(serializers.Serializer[object]):
+    """A pallet or spreader: it weighs, and with a size of its own it stands on the floor in the item's
+    stead.
+    """
+
+    weight = Quantity()
+    length = Quantity(required=False)
+    width = Quantity(required=False)
+    lies = serializers.ChoiceField(("along", "across"), required=False)
+
+
+class Net(serializers.Serializer[object]):
+    """A net over an item: it weighs."""
+
+    weight = Quantity()
 
 
 class Item(serializers.Serializer[object]):
@@ -79,6 +107,10 @@ class Item(serializers.Serializer[object]):
     how = serializers.ChoiceField(("weighed", "declared", "standard", "estimated"))
     weight = Quantity(required=False)
     removed = serializers.BooleanField(required=False)
+    footprint = Footprint(required=False)
+    pallet = Spreader(required=False)
+    net = Net(required=False)
+    spreader = Spreader(required=False)
 
 
 class Fuel(serializers.Serializer[object]):
@@ -100,6 +132,14 @@ class StatedLimit(serializers.Serializer[object]):
     source = serializers.CharField()  # type: ignore[assignment]  # DRF takes fields out of the class
 
 
+class SeatSetting(serializers.Serializer[object]):
+    """Where a seat, or every seat on a rail in a row, stands on its rail: one of seat and row."""
+
+    setting = serializers.CharField()
+    seat = serializers.CharField(required=False)
+    row = serializers.CharField(required=False)
+
+
 class LoadDocument(serializers.Serializer[object]):
     """A load as submitted: `tarebook.load/1`."""
 
@@ -113,6 +153,12 @@ class LoadDocument(serializers.Serializer[object]):
     items = Item(many=True)
     fuel = Fuel()
     limits = StatedLimit(many=True, required=False)
+    conditions = serializers.ListField(
+        child=serializers.CharField(),
+        required=False,
+        help_text="conditions of the basis that hold: what is fitted",
+    )
+    seat_settings = SeatSetting(many=True, required=False)
 
 
 class RevisionDocument(LoadDocument):

@@ -2,16 +2,16 @@
 
 from rest_framework import serializers
 
-from loads.api.shapes_in import LapInfant, Quantity
+from loads.api.shapes_in import Footprint, LapInfant, Quantity
 from loads.balance.late_reading import FORMS, HOWS_AT_THE_DOOR, KINDS_AT_THE_DOOR
 
 
 class LateLine(serializers.Serializer[object]):
     """One thing that goes on or off. Which fields it takes depends on `change`:
 
-    passenger-on: name, seat, weight, how, and category, lap_infant if any; passenger-off: seat; item-on:
-    kind, what, place, weight, how; item-off: what, place, and weight if only a part of it; fuel-on, fuel-off:
-    tank, quantity.
+    passenger-on: name, seat, weight, how, and category, lap_infant, restraint if any; passenger-off: seat;
+    item-on: kind, what, place, weight, how, and footprint if its place needs one; item-off: what, place, and
+    weight if only a part of it; fuel-on, fuel-off: tank, quantity.
     """
 
     change = serializers.ChoiceField(tuple(FORMS))
@@ -21,9 +21,11 @@ class LateLine(serializers.Serializer[object]):
     how = serializers.ChoiceField(HOWS_AT_THE_DOOR, required=False)
     category = serializers.CharField(required=False)
     lap_infant = LapInfant(required=False)
+    restraint = Quantity(required=False)
     kind = serializers.ChoiceField(KINDS_AT_THE_DOOR, required=False)
     what = serializers.CharField(required=False)
     place = serializers.CharField(required=False)
+    footprint = Footprint(required=False)
     tank = serializers.CharField(required=False)
     quantity = Quantity(required=False)
 

@@ -2,10 +2,11 @@
 test.
 """
 
-from collections.abc import Iterable
+from collections.abc import Iterable, Sequence
 from fractions import Fraction
 
-from fleet.sourced import Limit
+from fleet.basis import Place, Seat, Zone
+from fleet.stations import Condition, maximum_under
 from loads.balance.aboard import Declared
 from loads.balance.exact import added
 from loads.balance.margins import Figure, Fix, at_most, below, not_entered
@@ -13,6 +14,7 @@ from loads.balance.prepared import Prepared
 from loads.balance.result import Check
 from loads.balance.rounding import VOLUME_PLACES, WEIGHT_PLACES, printed
 
+Conditions = Sequence[Condition]
 Held = dict[str, Fraction | None]  # weight by seat or place id; None: not known
 
 
@@ -26,6 +28,8 @@ def held_by(declared: Declared) -> Held:
     for person in (*declared.crew, *declared.passengers):
         infant = person.lap_infant
         weights = [person.weight, *([infant.weight] if infant and infant.weight is not None else [])]
+        if person.restraint is not None:
+            weights.append(person.restraint)
         _put(person.seat.id, weights, known, unknown)
     for item in declared.items:
         if not item.removed:
@@ -33,20 +37,24 @@ def held_by(declared: Declared) -> Held:
     return {where: None if where in unknown else added(weights) for where, weights in known.items()}
 
 
-def place_checks(held: Held, ready: Prepared) -> list[Check]:
-    """Return the checks of every seat, place and zone that holds something."""
+def place_checks(held: Held, ready: Prepared, conditions: Conditions = ()) -> list[Check]:
+    """Return the checks of every seat, place and zone that holds something.
+
+    `conditions` are those declared to hold: where one makes another maximum count, the check says so.
+    """
     found = []
     for kind, spots in (("seat", ready.basis.seats), ("place", ready.basis.places)):
         for spot in spots:
             if spot.id in held:
                 weight = held[spot.id]
-                found.append(_spot(f"{kind}.{spot.id}", spot.name, weight, spot.maximum, ready))
+                code = f"{kind}.{spot.id}"
+                found.append(_spot(code, spot, weight, conditions, ready))
     for zone in ready.basis.zones:
         parts = [held[member] for member in zone.members if member in held]
         if parts:
             known = [part for part in parts if part is not None]
             weight = added(known) if len(known) == len(parts) else None
-            found.append(_spot(f"zone.{zone.id}", zone.name, weight, zone.maximum, ready))
+            found.append(_spot(f"zone.{zone.id}", zone, weight, conditions, ready))
     return found
 
 
@@ -76,12 +84,19 @@ def _put(
             here.append(weight)
 
 
-def _spot(code: str, name: str, weight: Fraction | None, maximum: Limit | None, ready: Prepared) -> Check:
-    unit = ready.weight
+def _spot(
+    code: str, spot: Seat | Place | Zone, weight: Fraction | None, conditions: Conditions, ready: Prepared
+) -> Check:
+    unit, name, maximum = ready.weight, spot.name, spot.maximum
+    if spot.conditional and conditions:
+        maximum, when = maximum_under(
+            maximum, spot.conditional, frozenset(condition.id for condition in conditions)
+        )
+        name = ", ".join((name, *(condition.name for condition in conditions if condition.id in when)))
     if weight is not None:
 
         def fix(over: Fraction) -> str:
-            return f"Move or take off at least {printed(over, WEIGHT_PLACES, 'up')} {unit} from {name}."
+            return f"Move or take off at least {printed(over, WEIGHT_PLACES, 'up')} {unit} from {spot.name}."
 
         return at_most(Figure(code, name, weight, unit, WEIGHT_PLACES), maximum, fix)
     if maximum is None:
@@ -96,5 +111,5 @@ def _spot(code: str, name: str, weight: Fraction | None, maximum: Limit | None, 
         unit=unit,
         margin_text="a weight here is not known",
         source=source,
-        what_next=f"Enter the weight of what is in {name}.",
+        what_next=f"Enter the weight of what is in {spot.name}.",
     )

@@ -195,6 +195,30 @@ class Fields:
             value, self.at(name), self._faults, known if all_needed else (), () if all_needed else known
         )
 
+    def words(self, name: str, most: int, longest: int) -> "tuple[tuple[str, str], ...]":
+        """Return the texts of a list, each with its pointer; one that stands twice gets `duplicate`."""
+        value = self._values.get(name, ())
+        if not isinstance(value, list | tuple):
+            self.note(name, "list-form", "a list is needed here; write [...], or leave it out")
+            return ()
+        if len(value) > most:
+            self.note(name, "too-many", f"{len(value)} lines; at most {most} are read")
+            return ()
+        numbered = {str(place): each for place, each in enumerate(value)}
+        entries = Fields(numbered, self.at(name), self._faults, (), tuple(numbered))
+        found: list[tuple[str, str]] = []
+        for place in numbered:
+            word = entries.text(place, longest)
+            if word is not None and word in {earlier for _, earlier in found}:
+                entries.note(place, "duplicate", "stands here twice; remove one")
+            elif word is not None:
+                found.append((entries.at(place), word))
+        return tuple(found)
+
+    def note_at(self, pointer: str, code: str, detail: str) -> None:
+        """Note a fault at a pointer that another method gave."""
+        self._faults.note(pointer, code, detail)
+
     def objects(
         self, name: str, most: int, required: tuple[str, ...], optional: tuple[str, ...] = ()
     ) -> "tuple[Fields, ...]":

@@ -15,6 +15,7 @@ from typing import Any
 from fleet.conversion import in_unit, weight_of_volume
 from fleet.quantities import DIMENSION_OF, Dimension, Quantity, Unit, read_quantity
 from loads.balance.fields import Faults
+from loads.balance.footing import PARTS
 from loads.balance.fuelling import WEIGHT_OR_VOLUME
 from loads.balance.late_reading import LateChange
 from records.canonical import decimal_text
@@ -47,6 +48,7 @@ class Moved:
 
 
 NOTHING = Moved(Fraction(0), 0)
+PASSENGER_PARTS = ("name", "weight", "how", "lap_infant", "restraint")  # kept of one who leaves
 
 
 def settle(declared: Mapping[str, Any], change: LateChange) -> Settled:
@@ -76,6 +78,8 @@ def measured(lines: Iterable[Line], density: Mapping[str, Any]) -> Moved:
         infant = line.get("lap_infant")
         if infant is not None:
             moved += Moved(_kilograms(infant["weight"]), 1)
+        if "restraint" in line:
+            moved += Moved(_kilograms(line["restraint"]), 0)
     return moved
 
 
@@ -95,6 +99,8 @@ def said(line: Line, *, named: bool) -> str:
     if infant is not None:
         called = f" {infant['name']}" if named else ""
         beside = f", with lap infant{called}, {infant['weight']['value']} {infant['weight']['unit']}"
+    if "restraint" in line:
+        beside += f", with restraint, {line['restraint']['value']} {line['restraint']['unit']}"
     return f"passenger{name} {to}, {line['seat']}, {weight}{beside}"
 
 
@@ -115,7 +121,7 @@ def _passenger_off(document: dict[str, Any], line: dict[str, Any], at: str, faul
         faults.note(f"{at}/seat", "weight-unknown", detail)
         return line
     passengers.remove(found)
-    kept = {name: found[name] for name in ("name", "weight", "how", "lap_infant") if name in found}
+    kept = {name: found[name] for name in PASSENGER_PARTS if name in found}
     return line | kept
 
 
@@ -137,6 +143,10 @@ def _item_off(document: dict[str, Any], line: dict[str, Any], at: str, faults: F
         faults.note(f"{at}/what", "no-such-item" if not found else "several-such-items", detail)
         return line
     item = found[0]
+    if any(part in item for part in PARTS):
+        detail = "it stands on a pallet or spreader, or under a net, which leaves or stays; revise the load"
+        faults.note(f"{at}/what", "item-rigged", detail)
+        return line
     if "weight" not in item:
         faults.note(f"{at}/what", "weight-unknown", "its weight was not declared; revise the load")
         return line

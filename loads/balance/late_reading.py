@@ -11,6 +11,7 @@ from typing import Final, Literal
 
 from fleet.quantities import Dimension
 from loads.balance.fields import Faults, Fields
+from loads.balance.footing import footing_form
 from loads.balance.fuelling import WEIGHT_OR_VOLUME
 from records.refusal import Invalid
 
@@ -25,9 +26,9 @@ KINDS_AT_THE_DOOR: Final = ("baggage", "cargo", "ballast", "consumable")
 HOWS_AT_THE_DOOR: Final = ("weighed", "declared", "estimated")
 # By kind of line: the fields it needs, and those it may have.
 FORMS: Final[Mapping[str, tuple[tuple[str, ...], tuple[str, ...]]]] = {
-    "passenger-on": (("name", "seat", "weight", "how"), ("category", "lap_infant")),
+    "passenger-on": (("name", "seat", "weight", "how"), ("category", "lap_infant", "restraint")),
     "passenger-off": (("seat",), ()),
-    "item-on": (("kind", "what", "place", "weight", "how"), ()),
+    "item-on": (("kind", "what", "place", "weight", "how"), ("footprint",)),
     "item-off": (("what", "place"), ("weight",)),
     "fuel-on": (("tank", "quantity"), ()),
     "fuel-off": (("tank", "quantity"), ()),
@@ -84,6 +85,8 @@ def _line(given: object, pointer: str, faults: Faults) -> Mapping[str, object]:
     line.choice("kind", KINDS_AT_THE_DOOR)
     line.choice("how", HOWS_AT_THE_DOOR)
     line.quantity("weight", Dimension.WEIGHT, zero=False)
+    line.quantity("restraint", Dimension.WEIGHT, zero=False)
+    footing_form(line)
     line.quantity("quantity", WEIGHT_OR_VOLUME, zero=False)
     infant = line.inner("lap_infant", ("name", "weight", "how"))
     if infant is not None:

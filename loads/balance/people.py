@@ -14,7 +14,7 @@ from loads.balance.plausible import LAP_INFANT_KG, Band, person_band, within_ban
 CREW_FIELDS = ("name", "position", "seat", "how")
 CREW_OPTIONAL = ("person", "category", "weight")
 PASSENGER_FIELDS = ("name", "seat", "how")
-PASSENGER_OPTIONAL = ("category", "weight", "lap_infant")
+PASSENGER_OPTIONAL = ("category", "weight", "lap_infant", "restraint")
 INFANT_FIELDS = ("name",)
 INFANT_OPTIONAL = ("weight", "how")
 INFANT_HOWS: tuple[How, ...] = ("weighed", "declared", "estimated")
@@ -28,10 +28,14 @@ Role = Literal["crew", "passenger"]
 
 @dataclass
 class Seating:
-    """What is taken so far: seats, names and logins, each with the pointer of the line that took it."""
+    """What is taken so far: seats, names and logins, each with the pointer of the line that took it.
+
+    `settings` are the seats on rails whose setting is stated, as they stand.
+    """
 
     basis: Basis
     configuration: Configuration
+    settings: tuple[tuple[Seat, str], ...] = ()
     seats: dict[str, str] = field(default_factory=dict)
     names: dict[str, str] = field(default_factory=dict)
     logins: dict[str, str] = field(default_factory=dict)
@@ -39,6 +43,7 @@ class Seating:
 
     def __post_init__(self) -> None:
         self.known = {seat.id: seat for seat in self.basis.seats}
+        self.known |= {seat.id: seat for seat, _ in self.settings}
 
 
 def read_crew(document: Fields, seating: Seating) -> tuple[Person, ...]:
@@ -78,9 +83,11 @@ def _person(line: Fields, role: Role, seating: Seating) -> Person | None:
     if how == "standard" and role == "passenger" and "category" not in line:
         line.note("category", "missing", "a standard weight needs a category; state adult, child or infant")
     infant = _lap_infant(line, how, seating) if role == "passenger" else None
+    restraint = line.quantity("restraint", Dimension.WEIGHT, zero=False)
     if name is None or seat is None or how is None:
         return None
-    return Person(name, role, position, login, category, seat, weight, how, infant, line.pointer)
+    strapped = None if restraint is None else in_unit(restraint, seating.basis.weight_unit)
+    return Person(name, role, position, login, category, seat, weight, how, infant, line.pointer, strapped)
 
 
 def _name(line: Fields, seating: Seating) -> str | None:

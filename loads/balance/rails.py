@@ -16,6 +16,7 @@ from loads.balance.path_worst import Burn, burn_of, shifted
 from loads.balance.prepared import Prepared
 from loads.balance.result import Check, State
 
+BY_MOMENT = ("cg.", "path.longitudinal", "path.zero-fuel", "lateral-by-cg", "path.lateral-by-cg")
 ORDER = {"fail": 0, "unresolved": 1, "pass": 2, "advisory": 3}
 
 
@@ -58,7 +59,7 @@ def worse_of(told: list[Check], at_ends: list[tuple[RailEnd, list[Check]]]) -> l
     found = []
     for number, check in enumerate(told):
         ends = [(end, checks[number]) for end, checks in at_ends]
-        if not check.code.startswith(("cg.", "path.longitudinal", "path.zero-fuel")) or check.outcome == "advisory":
+        if not check.code.startswith(BY_MOMENT) or check.outcome == "advisory":
             found.append(check)
             continue
         end, worse = min(ends, key=lambda each: _badness(each[1]))
