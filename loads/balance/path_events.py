@@ -8,7 +8,6 @@ extremes are at such points or where its slope is nothing, which is a rational v
 from collections.abc import Mapping, Sequence
 from dataclasses import replace
 from fractions import Fraction
-from itertools import pairwise
 
 from fleet.basis import Phase
 from fleet.positions import settings
@@ -16,7 +15,7 @@ from fleet.tanks import TankPiece
 from loads.balance.aboard import Declared
 from loads.balance.events import Event, Transfer
 from loads.balance.fuel import NOTHING, Contents, FuelState
-from loads.balance.path import FlownTanks, Found, Gap, Knot, Leg, Path, Stretch, Turn, knot_of
+from loads.balance.path import FlownTanks, Found, Gap, Knot, Path, Stretch, Turn, knot_of
 from loads.balance.prepared import Prepared
 from loads.balance.result import State
 from loads.balance.sections import Dry, Section, Sections, after_transfer
@@ -74,16 +73,15 @@ def zero_fuel_turns(
     """
     stated = {part.id for event in declared.sequence for part, _ in event.positions}
     free = [part for part in ready.basis.positions if part.id not in stated]
-    at_take_off = sum(event.leg == "taxi" for event in declared.sequence)
-    base = dry[at_take_off]
+    base = dry[0]
     turns = []
-    for number, each in enumerate(dry[at_take_off:], at_take_off):
+    for number, each in enumerate(dry):
         knot = Knot(
             state.weight + each.sums.weight - base.sums.weight,
             state.moment + each.sums.moment + each.shift - base.sums.moment - base.shift,
             state.lateral_moment + each.sums.lateral_moment - base.sums.lateral_moment,
         )
-        where = "at zero fuel" if number == at_take_off else f"at zero fuel after event {number}"
+        where = f"at zero fuel after event {number}" if number else "at zero fuel"
         turn = Turn("flight", where, ((knot, {}),), False, knot.weight)
         turns += [turn, *(_turn_set(turn, words, moment) for words, moment in settings(free, "flight"))]
     return tuple(turns)

@@ -4,7 +4,8 @@
 
 Within a section fuel is burned in the manual's order and nothing else happens. At an event nothing is burned.
 What happens at the very fuel of the take-off or the landing happens before it: a phase is what follows all
-events up to it. At zero fuel everything that is aboard at take-off is aboard.
+events up to it. At zero fuel everything that is aboard at take-off is aboard, since nothing leaves before,
+where it was at engine start; `path_events.zero_fuel_turns` has it after each event.
 """
 
 from collections.abc import Mapping, Sequence
@@ -99,10 +100,10 @@ def dry_over_flight(declared: Declared, empty: EmptyFigures | None) -> tuple[Dry
 
 
 def events_before(declared: Declared, phase: Phase) -> int:
-    """Return how many events of a load lie before a phase; zero fuel is as at take-off."""
-    if phase == "ramp":
+    """Return how many events of a load lie before a phase; zero fuel is as at engine start."""
+    if phase in ("ramp", "zero fuel"):
         return 0
-    if phase in ("take-off", "zero fuel"):
+    if phase == "take-off":
         return sum(event.leg == "taxi" for event in declared.sequence)
     return len(declared.sequence)
 
