@@ -15,6 +15,8 @@ WRITE_NOTE = Kind("write-note", "wrote a note after flight")
 TELL_STALE = Kind("tell-stale-load", "told that an accepted load is stale")
 FILE_MANIFEST = Kind("file-manifest", "filed a manifest")
 RUN_SELF_CHECK = Kind("run-self-check", "had the computer prove itself")
+RECHECK_LOADS = Kind("recheck-loads", "had loads computed again against a later figure")
+FINISH_RECHECK = Kind("finish-recheck", "filed what loads computed again came to")
 
 KINDS = (
     SUBMIT_LOAD,
@@ -30,4 +32,6 @@ KINDS = (
     TELL_STALE,
     FILE_MANIFEST,
     RUN_SELF_CHECK,
+    RECHECK_LOADS,
+    FINISH_RECHECK,
 )

@@ -29,7 +29,7 @@ _NOTES = frozenset({acts.WRITE_NOTE.name})
 _REMARKS = frozenset({acts.REMARK_REJECT.name})
 
 # Who looks after the computing itself.
-_PROVES = frozenset({acts.RUN_SELF_CHECK.name})
+_PROVES = frozenset({acts.RUN_SELF_CHECK.name, acts.RECHECK_LOADS.name})
 
 ACTS_OF: Mapping[Role, frozenset[str]] = MappingProxyType(
     {
@@ -44,8 +44,8 @@ ACTS_OF: Mapping[Role, frozenset[str]] = MappingProxyType(
     }
 )
 
-# What the worker may do that prints and files manifests and tells of stale loads.
-ACTS_OF_THE_WORKER = frozenset({acts.FILE_MANIFEST.name, acts.TELL_STALE.name})
+# What the worker may do that prints and files manifests, tells of stale loads, and computes loads again.
+ACTS_OF_THE_WORKER = frozenset({acts.FILE_MANIFEST.name, acts.TELL_STALE.name, acts.FINISH_RECHECK.name})
 
 
 def service_at_work(operator: str, caused_by: UUID | None) -> Actor:

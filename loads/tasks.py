@@ -12,7 +12,9 @@ from loads.actions.file_manifest import file_manifest as file_one
 from loads.actions.mail_stale import mail_stale_notice
 from loads.actions.self_check import run_self_check
 from loads.actions.tell_stale import MAILING, tell_after_approval
+from loads.actions.work_recheck import work_recheck
 from loads.models import LateChange, Paper
+from loads.queries.rechecks import RECHECKING
 from records import outbox
 
 
@@ -49,6 +51,22 @@ def mail_stale(notice: str) -> None:
 def self_check() -> None:
     """This function will have the computer prove itself, as it does every day."""
     run_self_check("daily")
+
+
+@shared_task(name=RECHECKING, ignore_result=True)
+def recheck(number: str) -> None:
+    """This function will do one part of a recheck and have the next one done after it, behind whatever else
+    is waiting: a long recheck keeps no manifest from being filed.
+    """
+    try:
+        worked = work_recheck(UUID(number))
+    except Exception as problem:
+        outbox.failed(RECHECKING, number, problem)
+        raise
+    if worked == "more":
+        outbox.wake(RECHECKING, number)
+    elif worked == "finished":
+        outbox.done(RECHECKING, number)
 
 
 def _work(task: str, key: str, work: Callable[[], object]) -> None:

@@ -7,7 +7,7 @@ from loads.models.load import Load
 from loads.models.note import Note
 from loads.models.paper import FiledPaper, Paper
 from loads.models.present import Present
-from loads.models.present import Present
+from loads.models.recheck import LoadFlag, Recheck, RecheckedLoad, RecheckPart, RecheckResult
 from loads.models.remark import Remark
 from loads.models.self_check import SelfCheck
 from loads.models.signature import Signature
@@ -22,10 +22,14 @@ __all__ = [
     "FiledPaper",
     "LateChange",
     "Load",
+    "LoadFlag",
     "Note",
     "Paper",
     "Present",
-    "Present",
+    "Recheck",
+    "RecheckPart",
+    "RecheckResult",
+    "RecheckedLoad",
     "Remark",
     "SelfCheck",
     "Signature",

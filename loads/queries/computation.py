@@ -7,15 +7,16 @@ from datetime import datetime
 from fleet.models import Aircraft, EmptyWeight, LoadingBasis, Provision
 from fleet.queries.aircraft import aircraft_of
 from fleet.queries.figures import basis_of
-from fleet.queries.in_force import in_force_for
+from fleet.queries.in_force import InForce, in_force_for
 from loads.balance.aboard import Declared, Outline
 from loads.balance.assess import assess
 from loads.balance.declared import read_outline
 from loads.balance.engine import ENGINE_VERSION
+from loads.balance.result import Result
 from loads.balance.shape import check_shape
 from loads.queries.crew import pilot_in
 from loads.queries.figures import empty_figures
-from loads.queries.provided import declared_under, provided_versions, used_of
+from loads.queries.provided import declared_under, provided_versions, ruled_for, used_of
 from loads.statement import digest_from
 from records.canonical import canonical_of_exact
 from records.refusal import Fault, Invalid, NotKnown
@@ -56,17 +57,9 @@ def compute(operator: str, document: dict[str, JSON], known: datetime) -> Comput
     outline = read_outline(document)
     aircraft = _aircraft_in(operator, outline)
     used = in_force_for(aircraft, outline.flight.departure, known, outline.configuration)
-    basis = basis_of(used.basis) if used.basis else None
-    if basis is None:
-        check_shape(document)
-    declared = declared_under(document, used, basis, known) if basis else outline
+    declared, assessed = assessed_with(document, outline, used, known)
     pilot = pilot_in(operator, document)
-    empty = (
-        empty_figures(used.empty_weight.document, used.basis.document)
-        if used.empty_weight and used.basis
-        else None
-    )
-    result = assess(declared, basis, empty).as_document()
+    result = assessed.as_document()
     provisions = used_of(used.provisions, declared) if isinstance(declared, Declared) else ()
     versions = versions_of(used.basis, used.empty_weight, provisions)
     inputs, result_text = canonical_of_exact(document), canonical_of_exact(result)
@@ -83,6 +76,25 @@ def compute(operator: str, document: dict[str, JSON], known: datetime) -> Comput
         result_text=result_text,
         digest=digest_from(inputs, versions, ENGINE_VERSION, result_text),
     )
+
+
+def assessed_with(
+    document: dict[str, JSON], outline: Outline, used: InForce, known: datetime, *, advised: bool = True
+) -> tuple[Declared | Outline, Result]:
+    """This function will return a load document as read against these versions, and its result; without a
+    basis its outline is all that is read. Raises Invalid with every fault.
+    """
+    basis = basis_of(used.basis) if used.basis else None
+    if basis is None:
+        check_shape(document)
+    ruled = ruled_for(basis, used.provisions, outline) if basis else None
+    declared = declared_under(document, used, ruled, known) if ruled else outline
+    empty = (
+        empty_figures(used.empty_weight.document, used.basis.document)
+        if used.empty_weight and used.basis
+        else None
+    )
+    return declared, assess(declared, ruled.basis if ruled else None, empty, advised=advised)
 
 
 def _aircraft_in(operator: str, outline: Outline) -> Aircraft:

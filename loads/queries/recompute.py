@@ -1,0 +1,144 @@
+"""Stored loads computed again: each with its verdict now, the first limit it breaks, or why it has none.
+
+Nothing is stored here and nothing filed is touched. No load is left out: one that cannot be computed comes
+out as such, with its reason.
+"""
+
+import logging
+from collections.abc import Iterable, Iterator
+from dataclasses import dataclass
+from typing import Any, Final, Literal
+from uuid import UUID
+
+from django.db import connection
+
+from loads.balance.declared import read_outline
+from loads.balance.result import Check, Result
+from loads.models import Recheck
+from loads.queries.computation import assessed_with
+from loads.queries.recheck_versions import Assessed, OtherFit, Versions
+from records.refusal import Refused
+from records.strict_json import read
+
+log = logging.getLogger(__name__)
+
+Now = Literal["within", "outside", "unresolved", "not computed", "other fit"]
+GONE: Final = ("superseded", "withdrawn")
+_BATCH: Final = 500
+# What a last-minute change made of a load is what was assessed, so its body counts.
+_ROWS: Final = """
+SELECT p.load_id, p.assessment_id, p.verdict, p.aircraft_id, l.configuration, p.departure, s.loading_basis_id,
+       s.empty_weight_id, s.provisions, s.assessed_at, s.engine, coalesce(c.body, d.body)
+FROM unnest(%s::uuid[]) WITH ORDINALITY AS asked (id, turn)
+JOIN loads_present p ON p.load_id = asked.id
+JOIN loads_load l ON l.id = p.load_id
+JOIN loads_assessment s ON s.id = p.assessment_id
+JOIN loads_declaration d ON d.load_id = p.load_id
+LEFT JOIN loads_latechange c ON s.number > 1 AND c.assessment_id = s.id
+WHERE p.state NOT IN ('superseded', 'withdrawn')
+ORDER BY asked.turn
+"""
+LONGEST_LIMIT, LONGEST_EXCESS = 300, 500
+
+
+@dataclass(frozen=True, slots=True)
+class Stored:
+    """A load as it is stored: what was declared, and the verdict of the assessment in use."""
+
+    load: UUID
+    assessment: UUID
+    verdict: str
+    engine: str
+    assessed: Assessed
+    body: bytes
+
+
+@dataclass(frozen=True, slots=True)
+class Outcome:
+    """What came out for a load now. `code`, `limit` and `excess` tell of the first limit that is broken or
+    could not be checked; of a load that could not be computed `excess` tells why.
+    """
+
+    stored: Stored
+    now: Now
+    code: str = ""
+    limit: str = ""
+    excess: str = ""
+    exactly: bool = True
+
+
+def stored_loads(loads: list[UUID]) -> Iterator[Stored]:
+    """This function will yield the loads of these numbers, in this order, but for those that were replaced or
+    withdrawn. They are read through a cursor of the server, a few hundred at a time.
+    """
+    with connection.chunked_cursor() as cursor:
+        cursor.execute(_ROWS, [loads])
+        while rows := cursor.fetchmany(_BATCH):
+            for row in rows:
+                yield _stored(row)
+
+
+def recompute(recheck: Recheck, loads: Iterable[Stored]) -> Iterator[Outcome]:
+    """This function will yield what comes out for each load."""
+    versions = Versions(recheck)
+    for one in loads:
+        yield exact_outcome(one, versions)
+
+
+def exact_outcome(one: Stored, versions: Versions) -> Outcome:
+    """This function will return what the whole assessment says of a load."""
+    try:
+        return _outcome(one, _assessed(one, versions))
+    except OtherFit:
+        return Outcome(one, "other fit")
+    except Refused as refusal:
+        return Outcome(one, "not computed", refusal.code, "not computed", refusal.detail[:LONGEST_EXCESS])
+    except Exception as problem:  # noqa: BLE001  # one load must not keep the others from being computed
+        log.error("load %s could not be computed again: %s", one.load, type(problem).__name__)
+        words = f"the computation failed: {type(problem).__name__}"
+        return Outcome(one, "not computed", "failed", "not computed", words)
+
+
+def _assessed(one: Stored, versions: Versions) -> Result:
+    document: Any = read(one.body)
+    used, known = versions.of(one.assessed), versions.known(one.assessed)
+    return assessed_with(document, read_outline(document), used, known, advised=False)[1]
+
+
+def _outcome(one: Stored, result: Result) -> Outcome:
+    wanted = {"outside": "fail", "unresolved": "unresolved"}.get(result.verdict)
+    broken = [check for check in result.checks if check.outcome == wanted]
+    if not broken:
+        return Outcome(one, result.verdict)
+    first = broken[0]
+    more = f" (and {len(broken) - 1} more)" if broken[1:] else ""
+    limit = f"{first.title}{more}"[:LONGEST_LIMIT]
+    return Outcome(one, result.verdict, first.code, limit, _excess(first)[:LONGEST_EXCESS])
+
+
+def _excess(check: Check) -> str:
+    limits = [
+        f"{bound} {check.unit or ''}".strip() for bound in (check.low, check.limit) if bound is not None
+    ]
+    if check.actual is None or not limits:
+        return check.margin_text
+    return f"{check.margin_text} ({check.actual} against {' to '.join(limits)})"
+
+
+def _stored(row: tuple[Any, ...]) -> Stored:
+    (
+        load,
+        assessment,
+        verdict,
+        aircraft,
+        configuration,
+        departure,
+        basis,
+        weight,
+        provisions,
+        known,
+        engine,
+        body,
+    ) = row
+    assessed = Assessed(aircraft, configuration, departure, basis, weight, tuple(provisions), known)
+    return Stored(load, assessment, verdict, engine, assessed, bytes(body))
