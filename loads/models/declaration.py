@@ -10,7 +10,7 @@ class Declaration(models.Model):
     """The document `tarebook.load/1` as canonical JSON bytes. Witnessed by salted digest only."""
 
     load = models.OneToOneField(Load, primary_key=True, on_delete=models.PROTECT, related_name="declaration")
-    operator = models.ForeignKey(Operator, on_delete=models.PROTECT)
+    operator = models.ForeignKey(Operator, on_delete=models.PROTECT, db_index=False)
     body = models.BinaryField()
     salt = models.BinaryField()
 

@@ -14,7 +14,7 @@ class Load(models.Model):
     """
 
     id = models.UUIDField(primary_key=True, db_default=Uuid7(), editable=False)
-    operator = models.ForeignKey(Operator, on_delete=models.PROTECT)
+    operator = models.ForeignKey(Operator, on_delete=models.PROTECT, db_index=False)
     aircraft = models.ForeignKey(Aircraft, on_delete=models.PROTECT, related_name="loads")
     configuration = models.CharField(max_length=64)
     reference = models.CharField(max_length=64)
@@ -26,7 +26,9 @@ class Load(models.Model):
     destination = models.CharField(max_length=80)
     operation = models.CharField(max_length=80)
     # The login of the pilot in command is in the declaration; here stands the person's number, or nothing.
-    pilot = models.ForeignKey("fleet.Person", on_delete=models.PROTECT, null=True, related_name="+")
+    pilot = models.ForeignKey(
+        "fleet.Person", on_delete=models.PROTECT, null=True, related_name="+", db_index=False
+    )
     replaces = models.OneToOneField("self", on_delete=models.PROTECT, null=True, related_name="replaced_by")
     submitted_at = models.DateTimeField()
 

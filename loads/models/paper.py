@@ -14,7 +14,7 @@ class Paper(models.Model):
     """
 
     load = models.OneToOneField(Load, primary_key=True, on_delete=models.PROTECT, related_name="paper")
-    operator = models.ForeignKey(Operator, on_delete=models.PROTECT)
+    operator = models.ForeignKey(Operator, on_delete=models.PROTECT, db_index=False)
     number = models.PositiveIntegerField()
     previous = models.PositiveIntegerField(null=True)
     act = models.UUIDField()  # the act of acceptance; its seal is what the paper prints
@@ -38,7 +38,7 @@ class FiledPaper(models.Model):
     """The one filed document of a manifest: the archive knows it by its digest."""
 
     paper = models.OneToOneField(Paper, primary_key=True, on_delete=models.PROTECT, related_name="filed")
-    operator = models.ForeignKey(Operator, on_delete=models.PROTECT)
+    operator = models.ForeignKey(Operator, on_delete=models.PROTECT, db_index=False)
     document = models.ForeignKey("records.Document", on_delete=models.PROTECT)
     filed_at = models.DateTimeField()
 

@@ -18,11 +18,11 @@ class Signature(models.Model):
     """
 
     id = models.UUIDField(primary_key=True, db_default=Uuid7(), editable=False)
-    operator = models.ForeignKey(Operator, on_delete=models.PROTECT)
+    operator = models.ForeignKey(Operator, on_delete=models.PROTECT, db_index=False)
     load = models.ForeignKey(Load, on_delete=models.PROTECT, related_name="signatures")
     assessment = models.ForeignKey(Assessment, on_delete=models.PROTECT)
     step = models.OneToOneField(Step, on_delete=models.PROTECT)
-    person = models.ForeignKey(Person, on_delete=models.PROTECT)
+    person = models.ForeignKey(Person, on_delete=models.PROTECT, db_index=False)
     meaning = models.CharField(max_length=20)  # "prepared", "loaded", "accepted"
     capacity = models.CharField(max_length=60)
     statement = models.TextField()  # the words that were shown and signed, no names in them

@@ -34,15 +34,16 @@ class Step(models.Model):
     """
 
     id = models.BigAutoField(primary_key=True)
-    operator = models.ForeignKey(Operator, on_delete=models.PROTECT)
-    load = models.ForeignKey(Load, on_delete=models.PROTECT, related_name="steps")
+    operator = models.ForeignKey(Operator, on_delete=models.PROTECT, db_index=False)
+    # The key of load and number finds these, too.
+    load = models.ForeignKey(Load, on_delete=models.PROTECT, related_name="steps", db_index=False)
     number = models.PositiveIntegerField()
     before = models.CharField(max_length=12, blank=True)
     after = models.CharField(max_length=12)
     # The number of the step before; null for the first. A column of its own so that a foreign key can use it.
     previous = models.PositiveIntegerField(null=True)
     assessment = models.ForeignKey(Assessment, on_delete=models.PROTECT)
-    person = models.ForeignKey(Person, on_delete=models.PROTECT, null=True)
+    person = models.ForeignKey(Person, on_delete=models.PROTECT, null=True, db_index=False)
     reason = models.CharField(max_length=500, blank=True)
     at = models.DateTimeField()
     # When the aircraft left, as reported; only with the step to "departed".

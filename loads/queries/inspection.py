@@ -13,8 +13,9 @@ from records.models import Seal
 from records.queries import seal_of
 
 MOST_FLIGHTS = 200
-# States of a load that never will need a manifest.
-_GONE = ("superseded", "withdrawn")
+# What has no manifest: the database lets no load be accepted, and so none depart, without its number, and the
+# others were replaced or withdrawn.
+_WITHOUT = ("open", "prepared", "loaded")
 # Looked through one by one; that the older ones have no gap is held by the database (see `_HELD`).
 NEWEST = 1000
 _NUMBERS = """
@@ -85,10 +86,8 @@ def flights_without_manifest(operator: str, since: datetime, until: datetime) ->
     """This function will return the loads planned to depart from `since` to `until` that have no manifest and
     were neither replaced nor withdrawn, the latest first.
     """
-    rows = (
-        loads_present()
-        .filter(operator_id=operator, departure__gte=since, departure__lt=until, load__paper__isnull=True)
-        .exclude(state__in=_GONE)
+    rows = loads_present().filter(
+        operator_id=operator, state__in=_WITHOUT, departure__gte=since, departure__lt=until
     )
     return tuple(current_of(row) for row in rows.order_by("-departure", "-load_id")[:MOST_FLIGHTS])
 

@@ -26,9 +26,9 @@ FROM made m, loads_load t WHERE t.id = %(within)s;
 INSERT INTO loads_declaration (load_id, body, salt, operator_id)
 SELECT m.id, t.body, t.salt, t.operator_id FROM made m, loads_declaration t WHERE t.load_id = %(within)s;
 INSERT INTO loads_assessment (id, number, verdict, result, salt, digest, engine, assessed_at, empty_weight_id,
-    loading_basis_id, operator_id, load_id)
+    loading_basis_id, operator_id, load_id, provisions)
 SELECT m.assessment, 1, t.verdict, t.result, t.salt, t.digest, t.engine, m.departure - interval '1 day',
-    t.empty_weight_id, t.loading_basis_id, t.operator_id, m.id
+    t.empty_weight_id, t.loading_basis_id, t.operator_id, m.id, t.provisions
 FROM made m, loads_assessment t
 WHERE t.load_id = CASE WHEN m.kind IN ('reject', 'withdrawn') THEN %(outside)s ELSE %(within)s END::uuid;
 """
@@ -89,6 +89,13 @@ def copy_loads(people: Any, count: int) -> None:
         for statements in (_MADE, _LOADS, _STEPS, _TRAIL):
             for statement in filter(str.strip, statements.split(";\n")):
                 cursor.execute(statement, values)
+        # The triggers that keep it were off: what must stand there is asked of the register.
+        cursor.execute("SELECT derived_by FROM records_guarded_table WHERE name = 'loads_present'")
+        ((derived_by,),) = cursor.fetchall()
+        cursor.execute(
+            "INSERT INTO loads_present (load_id, operator_id, aircraft_id, departure, step_id, number, "
+            f"state, assessment_id, verdict, rejected) {derived_by} ON CONFLICT DO NOTHING"
+        )
         for table, trigger in always:
             cursor.execute(f'ALTER TABLE {table} ENABLE ALWAYS TRIGGER "{trigger}"')
         cursor.execute("VACUUM ANALYZE")
