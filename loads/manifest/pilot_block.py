@@ -87,7 +87,7 @@ def fuel_block(facts: Computed) -> Block:
     figures = iter(column([tank[key] for key in keys for tank in fuel["tanks"]]))
     columns = {key: [next(figures) for _ in fuel["tanks"]] for key in keys}
     tanks = [
-        {"name": tank["name"], **{key: values[place] for key, values in columns.items()}}
+        {"name": _as_typed(facts, tank), **{key: values[place] for key, values in columns.items()}}
         for place, tank in enumerate(fuel["tanks"])
     ]
     totals = {key: figure(fuel[key]) for key in _FUEL_TOTALS}
@@ -99,6 +99,15 @@ def fuel_block(facts: Computed) -> Block:
         "density": fuel["density"],
         "density_source": fuel["density_source"],
     }
+
+
+def _as_typed(facts: Computed, tank: Mapping[str, Any]) -> str:
+    """The name of a tank, and what was typed at engine start where that was in another unit."""
+    typed = facts.inputs["fuel"]["at_engine_start"].get(tank["tank"])
+    name = str(tank["name"])
+    if typed is None or typed["unit"] == tank["unit"]:
+        return name
+    return f"{name} ({typed['value']} {typed['unit']} typed)"
 
 
 _FUEL_TOTALS = ("engine_start", "taxi", "take_off", "trip", "landing", "minimum_at_landing")

@@ -47,6 +47,7 @@ def sheet(facts: Facts) -> dict[str, object]:
         "figures": pilot_block.figures_block(facts, words),
         "fuel": pilot_block.fuel_block(facts),
         "open": pilot_block.open_points(facts, words),
+        "presented": tables.presented(facts),
         "phases": tables.phases(facts),
         "plots": _plots(facts, words),
         "computation": tables.computation(facts, words),

@@ -21,17 +21,42 @@ def computation(facts: Computed, words: Words) -> list[Row]:
     lines = facts.result["sumsheet"]
     columns = {key: column([line[key] for line in lines]) for key in ("weight", "arm", "moment")}
     columns["lateral_moment"] = sided([line["lateral_moment"] for line in lines])
+    cells = _presented_cells(facts, lines)
     return [
         {
             "line": str(line["line"]),
             "what": line["what"] if line["pointer"] else words.said(line["what"]),
             "name": _name_at(facts.inputs, line["pointer"]),
-            "how": line["how"] or "",
+            "how": _how(facts, line),
             "total": line["total"],
             **{key: values[place] for key, values in columns.items()},
+            "presented": cells[place],
         }
         for place, line in enumerate(lines)
     ]
+
+
+def presented(facts: Computed) -> dict[str, list[str]]:
+    """This function will return how moments are shown beside themselves: titles of columns, and the words."""
+    given = facts.result.get("presentation") or {}
+    found: dict[str, list[str]] = {"titles": [], "keys": [], "words": []}
+    if "index" in given:
+        found["titles"].append("index")
+        found["keys"].append("index")
+        found["words"].append(f"{given['index']['text']}, {given['index']['source']}")
+    if "moment_divided" in given:
+        divided = given["moment_divided"]
+        found["titles"].append(f"moment / {divided['divisor']}")
+        found["keys"].append("moment_divided")
+        found["words"].append(f"moments divided by {divided['divisor']}, {divided['source']}")
+    return found
+
+
+def _presented_cells(facts: Computed, rows: Iterable[Mapping[str, Any]]) -> list[list[str]]:
+    """The cells of the further columns, row by row; no columns, no cells."""
+    held = list(rows)
+    columns = [column([row.get(key) for row in held]) for key in presented(facts)["keys"]]
+    return [[each[place] for each in columns] for place in range(len(held))]
 
 
 def phases(facts: Computed) -> list[Row]:
@@ -45,12 +70,14 @@ def phases(facts: Computed) -> list[Row]:
         for key in ("weight", "moment", "arm", "percent_chord", "fuel")
     }
     columns["lateral_arm"] = sided([row["lateral_arm"] for row in rows])
+    cells = _presented_cells(facts, rows)
     return [
         {
             "letter": row["letter"],
             "shape": element("svg", shape(row["letter"], (6, 6)), viewBox="0 0 12 12"),
             "phase": row["phase"],
             **{key: values[place] for key, values in columns.items()},
+            "presented": cells[place],
         }
         for place, row in enumerate(rows)
     ]
@@ -175,9 +202,7 @@ def _name_at(inputs: Mapping[str, Any], pointer: str | None) -> str:
     """Look up the name behind a line, or what an item is; a lap infant stands beside its adult."""
     if not pointer:
         return ""
-    found: Any = inputs
-    for step in pointer.strip("/").split("/"):
-        found = found[int(step)] if isinstance(found, list | tuple) else found[step]
+    found = _at(inputs, pointer)
     if not isinstance(found, Mapping):
         return ""
     infant = found.get("lap_infant")
@@ -188,3 +213,20 @@ def _name_at(inputs: Mapping[str, Any], pointer: str | None) -> str:
 def crew(facts: Facts) -> Iterable[str]:
     """This function will return each crew member with name, position and seat."""
     return [f"{line['name']}, {line['position']} ({line['seat']})" for line in facts.inputs["crew"]]
+
+
+def _at(inputs: Mapping[str, Any], pointer: str) -> Any:
+    found: Any = inputs
+    for step in pointer.strip("/").split("/"):
+        found = found[int(step)] if isinstance(found, list | tuple) else found[step]
+    return found
+
+
+def _how(facts: Computed, line: Mapping[str, Any]) -> str:
+    """How a weight was got, and as what it was typed where that was in another unit."""
+    how = line["how"] or ""
+    typed = _at(facts.inputs, line["pointer"]) if line["pointer"] else None
+    weight = typed.get("weight") if isinstance(typed, Mapping) else None
+    if not isinstance(weight, Mapping) or weight["unit"] == facts.result["units"]["weight"]:
+        return how
+    return f"{how}, {weight['value']} {weight['unit']}"

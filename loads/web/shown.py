@@ -15,7 +15,7 @@ from loads import acts
 from loads.lifecycle import ways_out
 from loads.manifest.figures import figure
 from loads.manifest.pilot_block import VERDICTS, fuel_block, open_points
-from loads.manifest.tables import computation, limits
+from loads.manifest.tables import computation, limits, presented
 from loads.manifest.words import Words
 from loads.models import Load
 from loads.plot import plot
@@ -65,6 +65,7 @@ def load_page(current: Current, zone: ZoneInfo, now: datetime, actor: Actor) -> 
         "limits": _limits(page, words),
         "plots": _plots(current, page.result, words),
         "computation": computation(page, words) if page.result.get("sumsheet") else [],
+        "presented": presented(page),
         "steps": _steps(load),
         "versions": _versions(current),
         "can": _can(current, page.inputs, actor, stale=bool(stale)),
@@ -137,6 +138,8 @@ def _figures(page: Page, words: Words) -> list[dict[str, Any]]:
         arm = f"CG {at[phase]['arm']} {units['length']}"
         if at[phase]["percent_chord"]:
             arm += f", {at[phase]['percent_chord']} % MAC"
+        if at[phase].get("index"):
+            arm += f", index {at[phase]['index']}"
         small = [margins.get(f"weight.{code}", ""), arm, margins.get(f"cg.{code}", "")]
         value = f"{figure(at[phase]['weight'])} {units['weight']}"
         shown.append(
