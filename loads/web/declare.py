@@ -24,8 +24,9 @@ from loads.queries.computation import compute
 from loads.queries.current import load_of
 from loads.queries.declaration import declared_now
 from loads.web.asking import typed_in, zone_of, zone_words
+from loads.web.copied import can_carry, typed_of
 from loads.web.desk import lay_desk, wrong_inputs
-from loads.web.form import can_carry, document_of, field_of, typed_of
+from loads.web.form import document_of, field_of
 from loads.web.shown import stops, verdict_words
 from loads.web.wording import words_at
 from records.refusal import Fault, Invalid, NotKnown, Refused

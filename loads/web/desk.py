@@ -1,13 +1,12 @@
 """The table of inputs on which a load is declared, as plain values for the page; no Django here."""
 
 from collections.abc import Mapping, Sequence
-from dataclasses import dataclass
 from typing import Any
 
 from fleet.basis import Basis, Configuration
+from loads.web.desk_fitted import condition_inputs, floor_inputs, restraints_asked, setting_inputs
 from loads.web.form import ITEM_PARTS, LIMIT_PARTS, MOST_ROWS, SEAT_PARTS
-
-Choices = tuple[tuple[str, str], ...]
+from loads.web.inputs import Choices, Field, Maker
 
 WEIGHT_UNITS: Choices = (("lb", "lb"), ("kg", "kg"))
 VOLUME_UNITS: Choices = (("US gal", "US gal"), ("imp gal", "imp gal"), ("l", "l"))
@@ -50,72 +49,6 @@ EMPTY_ITEM_ROWS = 4
 FEWEST_ITEM_ROWS = 6
 
 
-@dataclass(frozen=True, slots=True)
-class Field:
-    """One input: its name, what it holds now and what was wrong with it."""
-
-    name: str
-    label: str
-    value: str
-    fault: str = ""
-    choices: Choices = ()
-    title: str = ""
-    hint: str = ""
-    type: str = "text"
-    figure: bool = False
-    maximum: int = 0
-
-
-@dataclass(frozen=True, slots=True)
-class Maker:
-    """Makes inputs from what was typed and the faults found, by input name."""
-
-    typed: Mapping[str, str]
-    faults: Mapping[str, str]
-
-    def text(
-        self, name: str, label: str, *, maximum: int = 80, title: str = "", hint: str = "", kind: str = "text"
-    ) -> Field:
-        """This function will return an input for words."""
-        return Field(
-            name,
-            label,
-            self.typed.get(name, ""),
-            self.faults.get(name, ""),
-            (),
-            title or label,
-            hint,
-            kind,
-            False,
-            maximum,
-        )
-
-    def figure(self, name: str, label: str, *, title: str = "", hint: str = "") -> Field:
-        """This function will return an input for one figure."""
-        return Field(
-            name,
-            label,
-            self.typed.get(name, ""),
-            self.faults.get(name, ""),
-            (),
-            title or label,
-            hint,
-            "text",
-            True,
-            20,
-        )
-
-    def choice(self, name: str, label: str, choices: Choices, *, first: str = "", title: str = "") -> Field:
-        """This function will return a list to choose from; `first` is chosen while nothing was typed.
-
-        A word typed elsewhere that is in no list is added: left out, the browser would choose another for it.
-        """
-        value = self.typed.get(name, first)
-        if value and value not in {word for word, _ in choices}:
-            choices = (*choices, (value, value))
-        return Field(name, label, value, self.faults.get(name, ""), choices, title or label)
-
-
 def _own_unit_first(choices: Choices, unit: str) -> Choices:
     return tuple(sorted(choices, key=lambda choice: choice[0] != unit))
 
@@ -132,7 +65,9 @@ def _flight(make: Maker, zone: str) -> list[Field]:
     ]
 
 
-def _seat(make: Maker, seat_id: str, serves: str, weights: Choices) -> list[Field | None]:
+def _seat(
+    make: Maker, seat_id: str, serves: str, weights: Choices, *, restraints: bool
+) -> list[Field | None]:
     """This function will return the inputs of one seat; None where the seat has no use for one and none was
     typed.
     """
@@ -140,6 +75,9 @@ def _seat(make: Maker, seat_id: str, serves: str, weights: Choices) -> list[Fiel
     typed = {part for part in SEAT_PARTS if make.typed.get(f"{prefix}:{part}")}
     crew = serves != "passenger" or bool(typed & {"position", "person"})
     passenger = serves != "crew" or bool(typed & {"infant", "infant_weight", "infant_how"})
+    strapped = [
+        make.figure(f"{prefix}:restraint", f"Weight of a restraint in {seat_id}") if passenger else None
+    ]
     positions = POSITIONS if passenger else (("", "nobody"), *POSITIONS[1:])
     return [
         make.text(f"{prefix}:name", f"Name in {seat_id}", maximum=80),
@@ -154,6 +92,7 @@ def _seat(make: Maker, seat_id: str, serves: str, weights: Choices) -> list[Fiel
         make.choice(f"{prefix}:infant_how", f"How the infant's weight in {seat_id} was got", INFANT_HOW)
         if passenger
         else None,
+        *(strapped if restraints else ()),
     ]
 
 
@@ -234,19 +173,27 @@ def lay_desk(
         *((place.id, place.name) for place in basis.places if place.id in configuration.places),
     )
     item_rows = min(MOST_ROWS, max(FEWEST_ITEM_ROWS, _rows_typed(typed, "item") + EMPTY_ITEM_ROWS))
+    restraints = restraints_asked(make, basis)
     limit_rows = min(MOST_ROWS, max(1, _rows_typed(typed, "limit")) + 1)
     return {
         "type": basis.aircraft_type,
         "configuration_name": configuration.name,
         "flight": _flight(make, zone),
         "seats": [
-            {"id": seat.id, "name": seat.name, "fields": _seat(make, seat.id, seat.serves, weights)}
+            {
+                "id": seat.id,
+                "name": seat.name,
+                "fields": _seat(make, seat.id, seat.serves, weights, restraints=restraints),
+            }
             for seat in seats
         ],
         "persons": make.figure(
             "persons_on_board", "Persons on board", hint="counted at the aircraft, infants too"
         ),
+        "restraints": restraints,
         "items": [_item(make, row, places, weights) for row in range(item_rows)],
+        "floor": floor_inputs(make, basis, configuration, item_rows),
+        "fitted": [*condition_inputs(make, basis), *setting_inputs(make, basis)],
         "tanks": [_tank(make, basis, number, volumes + weights) for number in range(len(basis.tanks))],
         "fuel": _fuel(make, weights, volumes, densities),
         "limits": [_limit(make, row, weights) for row in range(limit_rows)],

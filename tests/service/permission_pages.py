@@ -6,7 +6,7 @@ from typing import Any, Final
 from django.contrib.auth.tokens import default_token_generator
 
 from loads.queries.declaration import declared_now
-from loads.web.form import typed_of
+from loads.web.copied import typed_of
 from tests.cast import PASSWORD
 from tests.loads.making import signing
 from tests.service.permission_table import (

@@ -8,8 +8,9 @@ import pytest
 from fleet.quantities import Unit
 from loads.balance.aboard import HOWS, KINDS
 from loads.web import desk as desk_module
+from loads.web.copied import typed_of
 from loads.web.desk import Field, lay_desk, wrong_inputs
-from loads.web.form import MOST_ROWS, typed_of
+from loads.web.form import MOST_ROWS
 from tests.pure.loads.making import load, twin
 
 METRIC = replace(twin(), weight_unit=Unit.KG, volume_unit=Unit.L)

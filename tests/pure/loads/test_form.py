@@ -8,8 +8,9 @@ from hypothesis import given, settings
 from hypothesis import strategies as st
 
 from loads.balance.declared import read_load
+from loads.web.copied import can_carry, typed_of
 from loads.web.desk import lay_desk
-from loads.web.form import MOST_ROWS, can_carry, document_of, field_of, typed_of
+from loads.web.form import MOST_ROWS, document_of, field_of
 from records.refusal import Fault, Invalid
 from tests.pure.loads.load_documents import DEPARTURE, SEATS, TANKS, documents
 from tests.pure.loads.making import load, twin
