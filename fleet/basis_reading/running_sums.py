@@ -32,7 +32,7 @@ def read_conditions(findings: Findings) -> tuple[Condition, ...]:
 def read_conditional(findings: Findings, at: str, given: list[dict[str, Any]]) -> tuple[Conditional, ...]:
     """Return the conditional maxima of a seat, place or zone; a condition nobody named is a fault."""
     known = findings.named("conditions")
-    found = []
+    found: list[Conditional] = []
     for number, each in enumerate(given):
         here = f"{at}/conditional/{number}"
         findings.known(each["when"], known, f"{here}/when", "condition")

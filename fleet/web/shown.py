@@ -11,6 +11,7 @@ from fleet import acts
 from fleet.models import Aircraft, EmptyWeight, LoadingBasis
 from fleet.queries.history import VersionHistory, empty_weight_history, loading_basis_history
 from fleet.queries.in_force import basis_in_force, empty_weights_in_force
+from fleet.web.stations_shown import limit_row, station_rows
 from records.actor import Actor
 
 LIMIT_TITLES = (
@@ -59,6 +60,7 @@ def aircraft_page(aircraft: Aircraft, now: datetime, actor: Actor) -> dict[str, 
         "aircraft": aircraft,
         "figures": figures,
         "limits": _limits(basis),
+        "stations": _stations(basis),
         "kinds": [
             {
                 "anchor": "empty-weights",
@@ -117,22 +119,11 @@ def _limits(basis: LoadingBasis | None) -> list[dict[str, str]]:
     if basis is None:
         return []
     document = json.loads(basis.document)
-    shown = []
-    for name, title in LIMIT_TITLES:
-        limit = document["limits"].get(name)
-        if limit is None:
-            value, source = "not entered: loads stay unresolved", ""
-        else:
-            value = "none" if limit.get("none") else _quantity(limit)
-            page = limit["source"]
-            own = document["document"]
-            number, revision = (
-                page.get("document", own["number"]),
-                page.get("revision", own["revision"]),
-            )
-            source = f"{number} rev {revision} p. {page['page']}"
-        shown.append({"title": title, "value": value, "source": source})
-    return shown
+    return [limit_row(document, title, document["limits"].get(name)) for name, title in LIMIT_TITLES]
+
+
+def _stations(basis: LoadingBasis | None) -> list[dict[str, str]]:
+    return [] if basis is None else station_rows(json.loads(basis.document))
 
 
 def _version(

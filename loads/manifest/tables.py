@@ -13,6 +13,18 @@ from loads.svg import element
 Row = dict[str, Any]
 # How the checks are laid out: those of the whole aircraft first, then the small ones, two beside each other.
 WHOLE = ("weight", "performance", "cg", "lateral", "fuel", "persons", "standing", "weights", "path")
+# Checks whose title holds what was typed into the basis, where nothing is put into other words.
+TYPED = {
+    "seat",
+    "place",
+    "zone",
+    "tank",
+    "tank-table",
+    "performance",
+    "cumulative",
+    "floor-area",
+    "floor-run",
+}
 OUTCOMES = {"pass": "kept", "fail": "BROKEN", "unresolved": "NOT CHECKED", "advisory": "told, not judged"}
 
 
@@ -102,7 +114,7 @@ def limits(facts: Computed, words: Words) -> dict[str, Any]:
 
 def _limit(check: Mapping[str, Any], words: Words) -> Row:
     family = check["code"].partition(".")[0]
-    typed = family in {"seat", "place", "zone", "tank", "tank-table", "performance"}
+    typed = family in TYPED
     kept = check["result"] == "pass"
     low, actual, high = check["low"], check["actual"], check["limit"]
     lateral = family == "lateral" or check["code"] == "path.lateral"
@@ -152,6 +164,7 @@ def versions(facts: Facts, words: Words) -> list[tuple[str, str, str]]:
     stated = f"{weight['value']} {weight['unit']} by {how}{dated}{report}, true from {utc(empty.true_from)}"
     return [
         ("Loading basis", f"revision {basis.revision} ({manual}){_since(basis.known_from)}", basis.digest),
+        *((one.what, one.words, one.digest) for one in facts.provisions),
         (words.said("Empty weight"), f"{stated}{_since(empty.known_from)}", empty.digest),
     ]
 
