@@ -261,4 +261,4 @@ class Basis:
     trim: Trim | None = None
     curtailments: tuple[Curtailment, ...] = ()  # the operator's own margins inside the envelopes
     presentation: Presentation | None = None  # how moments are shown, never an input to a decision
-    closed: tuple[tuple[str, str], ...] = ()  # seats and places that a restriction closes, each with its number
+    closed: tuple[tuple[str, str], ...] = ()  # seats and places not to be used, each with the restriction

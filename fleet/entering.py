@@ -26,7 +26,9 @@ class NewAircraft:
 
 @dataclass(frozen=True, slots=True)
 class Approving:
-    """What an approval says: from when the version holds (None: as it says itself, or from now), and why."""
+    """What an approval or an ending says: from when (None: as the version says itself, or from now), and
+    why.
+    """
 
     true_from: datetime | None
     reason: str
@@ -47,6 +49,14 @@ def read_approval(document: object) -> Approving:
     given = entry.get("true_from")
     true_from = None if given is None else plausible(datetime.fromisoformat(given), "/true_from")
     return Approving(true_from, entry.get("reason", ""))
+
+
+def read_ending(document: object) -> Approving:
+    """This function will return from when something ends, and why; raises Invalid with all faults."""
+    entry = _sound("ending-1", document)
+    given = entry.get("true_from")
+    true_from = None if given is None else plausible(datetime.fromisoformat(given), "/true_from")
+    return Approving(true_from, entry["reason"])
 
 
 def plausible(instant: datetime, pointer: str) -> datetime:

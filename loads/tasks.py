@@ -5,13 +5,13 @@ from uuid import UUID
 
 from celery import shared_task
 
-from fleet.events import VERSIONS_CHANGED
+from fleet.events import PROVISIONS_CHANGED, VERSIONS_CHANGED
 from loads.actions.file_manifest import FILING, FILING_ISSUE
 from loads.actions.file_manifest import file_issue as file_one_issue
 from loads.actions.file_manifest import file_manifest as file_one
 from loads.actions.mail_stale import mail_stale_notice
 from loads.actions.self_check import run_self_check
-from loads.actions.tell_stale import MAILING, tell_after_approval
+from loads.actions.tell_stale import MAILING, tell_after_approval, tell_after_provision
 from loads.actions.work_recheck import work_recheck
 from loads.models import LateChange, Paper
 from loads.queries.rechecks import RECHECKING
@@ -39,6 +39,14 @@ def file_issue(key: str) -> None:
 def tell_of_stale_loads(approval: str) -> None:
     """This function will tell at once of the accepted loads that an approval made stale."""
     _work(VERSIONS_CHANGED, approval, lambda: tell_after_approval(UUID(approval)))
+
+
+@shared_task(name=PROVISIONS_CHANGED, ignore_result=True)
+def tell_of_loads_under_provisions(key: str) -> None:
+    """This function will tell of the accepted loads that a table, rule, restriction or permit made stale;
+    `key` is "its number/held" or "its number/ended".
+    """
+    _work(PROVISIONS_CHANGED, key, lambda: tell_after_provision(key))
 
 
 @shared_task(name=MAILING, ignore_result=True)

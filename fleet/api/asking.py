@@ -6,9 +6,12 @@ from django.utils import timezone
 from drf_spectacular.utils import OpenApiParameter
 from rest_framework.request import Request
 
+from fleet.entering import Approving, read_approval
 from fleet.models import Aircraft
 from fleet.queries.aircraft import aircraft_of
 from records.api.asking import instant, operator_of, parameters_of
+from records.refusal import Fault, Invalid
+from records.strict_json import JSON
 
 AT = OpenApiParameter("at", str, description="True at this instant, with its offset; now unless given.")
 AS_KNOWN_AT = OpenApiParameter(
@@ -28,3 +31,13 @@ def clocks_asked(request: Request) -> tuple[datetime, datetime]:
     at = instant(given["at"], where="?at") if "at" in given else now
     known = instant(given["as-known-at"], where="?as-known-at") if "as-known-at" in given else now
     return at, known
+
+
+def approval_asked(document: JSON) -> Approving:
+    """This function will return the approval in a document, of a version that says itself from when it holds;
+    raises Invalid.
+    """
+    approving = read_approval(document)
+    if approving.true_from is not None:
+        raise Invalid(Fault("/true_from", "unknown-field", "the version says itself from when it holds"))
+    return approving

@@ -2,7 +2,18 @@
 
 from django.urls import path
 
-from fleet.api import aircraft, empty_weights, loading_bases, own, people, settings, tokens
+from fleet.api import (
+    aircraft,
+    empty_weights,
+    loading_bases,
+    own,
+    people,
+    permits,
+    restrictions,
+    settings,
+    standard_weights,
+    tokens,
+)
 
 _ONE = "aircraft/<str:registration>"
 
@@ -33,4 +44,16 @@ urlpatterns = [
         f"{_ONE}/empty-weights/<uuid:version>/approval", empty_weights.EmptyWeightApprovalEndpoint.as_view()
     ),
     path(f"{_ONE}/weighings", empty_weights.WeighingsEndpoint.as_view()),
+    path("standard-weights", standard_weights.StandardWeightsEndpoint.as_view()),
+    path("standard-weights/<uuid:version>", standard_weights.OneStandardWeightsEndpoint.as_view()),
+    path(
+        "standard-weights/<uuid:version>/approval", standard_weights.StandardWeightsApprovalEndpoint.as_view()
+    ),
+    path(f"{_ONE}/restrictions", restrictions.RestrictionsEndpoint.as_view()),
+    path(f"{_ONE}/restrictions/<uuid:version>", restrictions.OneRestrictionEndpoint.as_view()),
+    path(f"{_ONE}/restrictions/<uuid:version>/lifting", restrictions.RestrictionLiftingEndpoint.as_view()),
+    path(f"{_ONE}/permits", permits.PermitsEndpoint.as_view()),
+    path(f"{_ONE}/permits/<uuid:version>", permits.OnePermitEndpoint.as_view()),
+    path(f"{_ONE}/permits/<uuid:version>/approval", permits.PermitApprovalEndpoint.as_view()),
+    path(f"{_ONE}/permits/<uuid:version>/ending", permits.PermitEndingEndpoint.as_view()),
 ]

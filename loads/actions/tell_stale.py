@@ -10,8 +10,9 @@ from uuid import UUID
 from django.conf import settings
 
 from fleet.actions.constraint_refusals import refused_as
-from fleet.events import VERSIONS_CHANGED
-from fleet.models import Approval
+from fleet.events import PROVISIONS_CHANGED, VERSIONS_CHANGED
+from fleet.models import Aircraft, Approval, Provision
+from fleet.queries.aircraft import all_aircraft
 from fleet.queries.settings import settings_at
 from loads.actions.announcing import announce_stale
 from loads.acts import TELL_STALE
@@ -32,11 +33,26 @@ def tell_after_approval(approval: UUID) -> int:
     was. Run twice, it tells nothing twice.
     """
     approved = Approval.objects.select_related("aircraft").get(id=approval)
-    cause = Outbox.objects.filter(task=VERSIONS_CHANGED, key=str(approval)).values_list("act", flat=True)
-    caused_by = cause.first()
+    return _tell_of(approved.operator_id, (approved.aircraft,), _cause(VERSIONS_CHANGED, str(approval)))
+
+
+def tell_after_provision(key: str) -> int:
+    """This function will tell of every accepted load that a table, rule, restriction or permit made stale,
+    and return how many that was; `key` is that of the promised work. Run twice, it tells nothing twice.
+    """
+    laid = Provision.objects.select_related("aircraft").get(id=key.partition("/")[0])
+    fleet = (laid.aircraft,) if laid.aircraft is not None else all_aircraft(laid.operator_id)
+    return _tell_of(laid.operator_id, fleet, _cause(PROVISIONS_CHANGED, key))
+
+
+def _cause(task: str, key: str) -> UUID | None:
+    return Outbox.objects.filter(task=task, key=key).values_list("act", flat=True).first()
+
+
+def _tell_of(operator: str, fleet: tuple[Aircraft, ...], caused_by: UUID | None) -> int:
     now = database_time()
-    loads = accepted_loads(approved.aircraft, now)
-    told = [tell_if_stale(approved.operator_id, one.load.id, caused_by) for one in loads]
+    loads = [one for aircraft in fleet for one in accepted_loads(aircraft, now)]
+    told = [tell_if_stale(operator, one.load.id, caused_by) for one in loads]
     return sum(notice is not None for notice in told)
 
 

@@ -17,10 +17,16 @@ class Version(serializers.Serializer[object]):
 
 
 class BasisUsed(serializers.Serializer[object]):
-    """What the computation rests on; null where nothing was in force."""
+    """What the computation rests on; null where nothing was in force. Tables, rules, restrictions and permits
+    stand there where they were used.
+    """
 
     loading_basis = Version(allow_null=True)
     empty_weight = Version(allow_null=True)
+    standard_weights = Version(required=False)
+    rules = Version(required=False)
+    restrictions = Version(many=True, required=False)
+    permits = Version(many=True, required=False)
     configuration = serializers.CharField()
     engine = serializers.CharField()
 
@@ -43,6 +49,11 @@ class Check(serializers.Serializer[object]):
     margin_weight = serializers.CharField(allow_null=True, required=False)
     edge = serializers.CharField(allow_null=True, required=False)
     at = serializers.DictField(allow_null=True, required=False)
+    curtailed = serializers.DictField(
+        required=False,
+        help_text="the operator's margins at the nearest edge, their sum, and whether the certified envelope "
+        "holds; only where an envelope is curtailed",
+    )
 
 
 class ComputedAnswer(serializers.Serializer[object]):
@@ -60,10 +71,29 @@ class ComputedAnswer(serializers.Serializer[object]):
     governing = serializers.DictField(child=serializers.CharField())
     fuel = serializers.DictField(allow_null=True)
     sumsheet = serializers.ListField(child=serializers.DictField())
+    sequence = serializers.ListField(
+        child=serializers.DictField(),
+        required=False,
+        help_text="the events of a load that states some: number, when, and what happens in words",
+    )
     operating_weight = serializers.DictField(allow_null=True)
     persons = serializers.DictField(allow_null=True)
     advisories = serializers.ListField(child=serializers.CharField())
     not_assessed = serializers.ListField(child=serializers.CharField())
+    standard_weights = serializers.DictField(
+        required=False, help_text="The table used, its row and season, and how many people count how."
+    )
+    restrictions_and_permits = serializers.ListField(
+        child=serializers.DictField(), required=False, help_text="Those that hold at the departure, in words."
+    )
+    weighing = serializers.DictField(
+        required=False, help_text="When the last weighing lapses by the rule that binds this operation."
+    )
+    presentation = serializers.DictField(
+        required=False,
+        help_text="How moments are shown beside themselves: index units, divided moments. Only where the basis "
+        "says so; phases and lines then hold `index` and `moment_divided`.",
+    )
     basis = BasisUsed()
     digest = serializers.CharField()
     cautions = serializers.ListField(child=serializers.CharField())
@@ -147,6 +177,23 @@ class StepTaken(serializers.Serializer[object]):
     reason = serializers.CharField(allow_blank=True)
 
 
+class LinkedLeg(serializers.Serializer[object]):
+    """Another leg: its load, its flight in words, where it stands."""
+
+    load = serializers.UUIDField()
+    flight = serializers.CharField()
+    state = serializers.ChoiceField(STATES)
+    href = serializers.CharField()
+
+
+class Legs(serializers.Serializer[object]):
+    """The leg before, those after, and in words the fuel planned to be taken on since the leg before."""
+
+    follows = LinkedLeg(allow_null=True)
+    followed_by = LinkedLeg(many=True)
+    uplift = serializers.CharField(allow_blank=True)
+
+
 class FullLoadAnswer(LoadAnswer):
     """All there is to read about a load. `stale` names what changed since it was assessed."""
 
@@ -158,6 +205,7 @@ class FullLoadAnswer(LoadAnswer):
         help_text="what may be signed next, by meaning: exactly the words signed",
     )
     declared = LoadDocument()
+    legs = Legs()
     stale_notices = StaleTold(many=True)
     notes = NoteAnswer(many=True)
 

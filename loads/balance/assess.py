@@ -10,6 +10,7 @@ from fleet.basis import PHASES, Basis, Phase
 from fleet.weighing import EmptyFigures
 from loads.balance.aboard import Declared, Outline
 from loads.balance.checks_balance import balance_checks
+from loads.balance.checks_circumstances import circumstance_checks
 from loads.balance.checks_floor import floor_checks
 from loads.balance.checks_known import (
     empty_weight_check,
@@ -68,6 +69,7 @@ def assess(
         standing,
         *weight_knowledge(declared),
         *standard_checks(declared.standards),
+        *circumstance_checks(declared.circumstances),
         persons_check(declared),
         *_checks(declared, states, burn, known, ready, advised=advised),
         *whole_aircraft_checks(declared, states, flown, ready),

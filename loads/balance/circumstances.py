@@ -54,10 +54,14 @@ class WeighingDue:
 
 @dataclass(frozen=True, slots=True)
 class Circumstances:
-    """`estimates` names the settings by which estimated weights of people may be signed; "" : none does."""
+    """`estimates` names the settings by which estimated weights of people may be signed; "": none does.
+
+    `unmet` is what restrictions or permits name and the loading basis does not have.
+    """
 
     estimates: str = ""
     applied: tuple[Applied, ...] = ()
+    unmet: tuple[str, ...] = ()
     weighing: WeighingDue | None = None
 
 

@@ -62,9 +62,7 @@ def read_load(document: object, basis: Basis, table: StandardWeights | None = No
     passengers = read_passengers(fields, seating)
     standards = None
     if table is not None and outline is not None:
-        crew, passengers, standards = with_standards(
-            (crew, passengers), table, outline.flight, basis, faults
-        )
+        crew, passengers, standards = with_standards((crew, passengers), table, outline.flight, basis, faults)
     items = _items(fields, basis, seating.configuration)
     fuel = read_fuel(fields, basis)
     limits = _limits(fields, basis)
@@ -107,7 +105,8 @@ def _items(fields: Fields, basis: Basis, configuration: Configuration) -> tuple[
 def _item(line: Fields, known: dict[str, Place], configuration: Configuration, basis: Basis) -> Item | None:
     kind = cast("Kind | None", line.choice("kind", KINDS))
     what = line.text("what", LONGEST_WHAT)
-    place = _place(line, known, configuration)
+    closed = dict(basis.closed) if basis.closed else None
+    place = _place(line, known, configuration, closed)
     how = cast("How | None", line.choice("how", HOWS))
     removed = line.flag("removed") or False
     if removed and kind is not None and kind != "equipment":
@@ -125,7 +124,9 @@ def _item(line: Fields, known: dict[str, Place], configuration: Configuration, b
     return Item(kind, what, place, whole, how, removed, line.pointer, footing.rigging, footing.contact)
 
 
-def _place(line: Fields, known: dict[str, Place], configuration: Configuration) -> Place | None:
+def _place(
+    line: Fields, known: dict[str, Place], configuration: Configuration, closed: dict[str, str] | None
+) -> Place | None:
     wanted = line.text("place", LONGEST_ID)
     if wanted is None:
         return None
@@ -133,6 +134,11 @@ def _place(line: Fields, known: dict[str, Place], configuration: Configuration) 
     place = known.get(wanted)
     if place is None:
         line.note("place", "unknown-place", f"no such place; configuration {configuration.id} has {has}")
+        return None
+    if closed is not None and wanted in closed:
+        line.note(
+            "place", "place-closed", f"{place.name} is closed by {closed[wanted]}; choose another place"
+        )
         return None
     if wanted not in configuration.places:
         detail = f"not in configuration {configuration.id}, which has {has}; choose one of these"

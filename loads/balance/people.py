@@ -121,9 +121,7 @@ def _seat(line: Fields, role: Role, seating: Seating) -> Seat | None:
         )
         return None
     if wanted not in seating.configuration.seats:
-        known = ", ".join(seating.configuration.seats)
-        detail = f"not in configuration {seating.configuration.id}, which has {known}; choose one of these"
-        line.note("seat", "seat-not-in-configuration", detail)
+        line.note("seat", *_not_to_be_used(seat, seating))
         return None
     if seat.serves not in (role, "either"):
         line.note("seat", "seat-serves-others", f"{seat.name} is for {seat.serves} only; choose another seat")
@@ -133,6 +131,16 @@ def _seat(line: Fields, role: Role, seating: Seating) -> Seat | None:
         line.note("seat", "seat-taken", f"{seat.name} is taken by {taken}; choose another seat")
         return None
     return seat
+
+
+def _not_to_be_used(seat: Seat, seating: Seating) -> tuple[str, str]:
+    """Return code and detail of a seat that a restriction blocks, or the configuration does not have."""
+    restriction = dict(seating.basis.closed).get(seat.id)
+    if restriction is not None:
+        return "seat-blocked", f"{seat.name} is blocked by {restriction}; choose another seat"
+    known = ", ".join(seating.configuration.seats)
+    detail = f"not in configuration {seating.configuration.id}, which has {known}; choose one of these"
+    return "seat-not-in-configuration", detail
 
 
 def _weight(line: Fields, how: How | None, band: Band, unit: Unit) -> Fraction | None:

@@ -113,6 +113,15 @@ class ChangeFacts:
 
 
 @dataclass(frozen=True, slots=True)
+class ProvisionFacts:
+    """One version of what the operator laid down that the load used: what it is, in words."""
+
+    what: str
+    words: str
+    digest: str
+
+
+@dataclass(frozen=True, slots=True)
 class Facts:
     """One accepted load. `inputs` is the document `tarebook.load/1` as typed, `result` the result document.
 
@@ -137,6 +146,8 @@ class Facts:
     digest: str
     changes: tuple[ChangeFacts, ...] = ()
     earlier: tuple[SignatureFacts, ...] = ()
+    provisions: tuple[ProvisionFacts, ...] = ()
+    legs: tuple[str, ...] = ()
 
     @property
     def issue(self) -> int:

@@ -4,8 +4,9 @@ import json
 from datetime import datetime
 from uuid import UUID
 
-from fleet.models import Aircraft, EmptyWeight, LoadingBasis, Operator
+from fleet.models import Aircraft, EmptyWeight, LoadingBasis, Operator, Provision
 from fleet.queries.figures import basis_of
+from fleet.queries.provisions import used_provisions
 from fleet.queries.settings import Settings, settings_at
 from loads.balance.late_change import said
 from loads.manifest.facts import (
@@ -15,13 +16,16 @@ from loads.manifest.facts import (
     EmptyWeightFacts,
     Facts,
     OperatorFacts,
+    ProvisionFacts,
     SealFacts,
     SignatureFacts,
 )
+from loads.manifest.figures import utc
 from loads.models import Assessment, LateChange, Load, Paper, Signature, Step
 from loads.queries.current import Current
 from loads.queries.declaration import declared_now
 from loads.queries.late_change import bound_of, changes_of, lines_of, moved_by
+from loads.queries.legs import followed_by, follows
 from loads.queries.signable import statement_of
 from loads.statement import MEANINGS
 from records.canonical import canonical
@@ -71,6 +75,8 @@ def facts_of(paper: Paper, change: LateChange | None = None) -> Facts:
         digest=used.digest,
         changes=_changes(load, change, declared),
         earlier=_signatures(load, used, before=step.number) if change else (),
+        provisions=tuple(_provision(one) for one in used_provisions(used.provisions)),
+        legs=_legs(load, step.at),
     )
 
 
@@ -125,6 +131,13 @@ def _empty_weight(row: EmptyWeight) -> EmptyWeightFacts:
     return EmptyWeightFacts(row.digest, row.true_from, _known_from(row), json.loads(row.document))
 
 
+def _provision(row: Provision) -> ProvisionFacts:
+    document = json.loads(row.document)
+    title = document.get("title") or document.get("what")
+    own = f" {document['number']}" if "number" in document else f", version {row.number}"
+    return ProvisionFacts(row.kind.capitalize(), f"{title}{own}, true from {utc(row.true_from)}", row.digest)
+
+
 def _known_from(row: LoadingBasis | EmptyWeight) -> datetime | None:
     approval = getattr(row, "approval", None)
     return approval.known_from if approval else None
@@ -149,6 +162,14 @@ def _changes(load: Load, last: LateChange | None, declared: dict[str, JSON]) -> 
                 bound=bound.words(),
             )
         )
+    return tuple(told)
+
+
+def _legs(load: Load, then: datetime) -> tuple[str, ...]:
+    """Tell the linked legs as they were at the acceptance."""
+    before = follows(load)
+    told = [] if before is None else [f"follows {before.words} (load {before.load})"]
+    told += [f"followed by {one.words} (load {one.load})" for one in followed_by(load, then)]
     return tuple(told)
 
 

@@ -119,7 +119,24 @@ def open_points(facts: Computed, words: Words) -> Block:
         "not_assessed": [words.said(text) for text in facts.result["not_assessed"]],
         "by_how": list(_by_how(facts)),
         "advisories": [words.said(text) for text in facts.result["advisories"]],
+        "papers": [_paper(one, words) for one in facts.result.get("restrictions_and_permits", ())],
     }
+
+
+def _paper(one: Mapping[str, Any], words: Words) -> dict[str, str]:
+    """Tell a restriction or permit that held at the departure: what it does, from when until when."""
+    by = f", by {one['authority']}" if one["authority"] else ""
+    until = f"until {_moment(one['until'])}" if one["until"] else "until lifted"
+    does = "; ".join(words.said(line) for line in one["lines"])
+    return {
+        "kind": one["kind"],
+        "title": f"{one['kind']} {one['number']}{by}",
+        "text": f"{one['what']}: {does}. From {_moment(one['from'])}, {until}. {one['source']}",
+    }
+
+
+def _moment(text: str) -> str:
+    return f"{datetime.fromisoformat(text).astimezone(UTC):%Y-%m-%d %H:%M} UTC"
 
 
 def figure_sided(text: str) -> str:

@@ -13,11 +13,14 @@ from fleet.provisions import PERMIT, RESTRICTION, RULES, STANDARD_WEIGHTS
 from fleet.queries.in_force import InForce
 from fleet.queries.provisions import Provisions, used_provisions
 from fleet.queries.settings import settings_at
+from fleet.restriction_reading import paper_from_text
+from fleet.restrictions import Paper, Ruled, apply
 from fleet.standard_weights import StandardWeights
 from fleet.standard_weights_reading import standard_weights_from_text
-from loads.balance.aboard import Declared
-from loads.balance.circumstances import PLAIN
+from loads.balance.aboard import Declared, Outline
+from loads.balance.circumstances import PLAIN, Applied
 from loads.balance.declared import read_load
+from loads.balance.trapped import with_trapped
 from loads.queries.current import Current
 from records.strict_json import JSON
 
@@ -26,19 +29,58 @@ _ONE: Final = {STANDARD_WEIGHTS: "standard_weights", RULES: "rules"}
 _MANY: Final = {RESTRICTION: "restrictions", PERMIT: "permits"}
 
 
-def declared_under(document: dict[str, JSON], used: InForce, basis: Basis, known: datetime) -> Declared:
+def ruled_for(basis: Basis, held: Provisions, outline: Outline) -> Ruled:
+    """This function will return the basis with the restrictions and permits that hold for a flight."""
+    if not held.restrictions and not held.permits:
+        return Ruled(basis)
+    return apply(basis, tuple(paper for _, paper in _papers(held, outline.flight.operation)))
+
+
+def declared_under(document: dict[str, JSON], used: InForce, ruled: Ruled, known: datetime) -> Declared:
     """This function will read a load document against a basis, with what the operator laid down for the time
     of its departure. Raises Invalid with every fault.
     """
-    declared = read_load(document, basis, table_of(used.provisions))
-    about = replace(PLAIN, estimates=_estimates(used, declared, known)) if _estimated(declared) else PLAIN
+    declared = read_load(document, ruled.basis, table_of(used.provisions))
+    if ruled.trapped:
+        declared = with_trapped(declared, ruled)
+    about = PLAIN
+    if _estimated(declared):
+        about = replace(about, estimates=_estimates(used, declared, known))
+    if ruled.lines:
+        papers = _papers(used.provisions, declared.outline.flight.operation)
+        applied = (_applied(paper, lines) for (_, paper), lines in zip(papers, ruled.lines, strict=True))
+        about = replace(about, applied=tuple(applied), unmet=ruled.unmet)
     return declared if about == PLAIN else replace(declared, circumstances=about)
 
 
 def used_of(held: Provisions, declared: Declared) -> tuple[Provision, ...]:
     """This function will return what a load used of what held, in the order of the statement."""
     table = held.standard_weights if declared.standards is not None else None
-    return (*((table,) if table is not None else ()), *held.restrictions, *held.permits)
+    papers = _papers(held, declared.outline.flight.operation)
+    return (*((table,) if table is not None else ()), *(row for row, _ in papers))
+
+
+def _papers(held: Provisions, operation: str) -> list[tuple[Provision, Paper]]:
+    """Return the restrictions, then the permits that are for an operation, each with its row."""
+    rows = (*held.restrictions, *held.permits)
+    found = [
+        (row, paper_from_text(row.document, "permit" if row.kind == PERMIT else "restriction"))
+        for row in rows
+    ]
+    return [(row, paper) for row, paper in found if not paper.operations or operation in paper.operations]
+
+
+def _applied(paper: Paper, lines: tuple[str, ...]) -> Applied:
+    return Applied(
+        kind=paper.kind,
+        number=paper.number,
+        what=paper.what,
+        authority=paper.authority,
+        lines=(*lines, *paper.conditions),
+        since=paper.since,
+        until=paper.until,
+        source=str(paper.source),
+    )
 
 
 def provided_versions(used: Sequence[Provision]) -> dict[str, object]:
@@ -59,11 +101,10 @@ def provisions_changed(current: Current, now: Provisions) -> tuple[str, ...]:
     changed = []
     if _table_changed(current, used, now):
         changed.append(STANDARD_WEIGHTS)
-    for kind, name, holds in (
-        (RESTRICTION, "restrictions", now.restrictions),
-        (PERMIT, "permits", now.permits),
-    ):
-        if {one.id for one in used if one.kind == kind} != {one.id for one in holds}:
+    holds = {row.id: row.kind for row, _ in _papers(now, current.load.operation)}
+    for kind, name in _MANY.items():
+        before = {one.id for one in used if one.kind == kind}
+        if before != {version for version, of in holds.items() if of == kind}:
             changed.append(name)
     return tuple(changed)
 

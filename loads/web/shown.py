@@ -10,7 +10,9 @@ from zoneinfo import ZoneInfo
 from django.utils.safestring import mark_safe
 
 from fleet.basis import Axis
+from fleet.models import EmptyWeight, LoadingBasis, Provision
 from fleet.queries.figures import basis_of
+from fleet.queries.provisions import used_provisions
 from loads import acts
 from loads.lifecycle import ways_out
 from loads.manifest.figures import figure
@@ -22,6 +24,7 @@ from loads.plot import plot
 from loads.queries.answer import signatures_of
 from loads.queries.current import Current
 from loads.queries.declaration import declared_now
+from loads.queries.legs import legs_answer
 from loads.queries.signable import signatures_due
 from loads.queries.stale import stale_parts
 from loads.web.wording import words_at
@@ -68,6 +71,7 @@ def load_page(current: Current, zone: ZoneInfo, now: datetime, actor: Actor) -> 
         "presented": presented(page),
         "steps": _steps(load),
         "versions": _versions(current),
+        "legs": legs_answer(current),
         "can": _can(current, page.inputs, actor, stale=bool(stale)),
     }
 
@@ -211,7 +215,11 @@ def _steps(load: Load) -> Iterable[dict[str, Any]]:
 
 def _versions(current: Current) -> Sequence[dict[str, str]]:
     used = current.assessment
-    found = [("Loading basis", used.loading_basis), ("Empty weight", used.empty_weight)]
+    found: list[tuple[str, LoadingBasis | EmptyWeight | Provision | None]] = [
+        ("Loading basis", used.loading_basis),
+        ("Empty weight", used.empty_weight),
+        *((one.kind.capitalize(), one) for one in used_provisions(used.provisions)),
+    ]
     return [
         {"title": title, "digest": version.digest}
         if version

@@ -1,0 +1,94 @@
+"""Permits of an aircraft: entered, listed by both clocks, approved, ended."""
+
+from uuid import UUID
+
+from django.http import HttpResponse
+from drf_spectacular.utils import extend_schema
+from rest_framework.request import Request
+from rest_framework.views import APIView
+
+from fleet.actions.approve_permit import approve_permit
+from fleet.actions.end_permit import end_permit
+from fleet.actions.enter_permit import enter_permit
+from fleet.api.answers import shown
+from fleet.api.answers_provisions import created, now_as_it_is, provision_line, provisions_answer
+from fleet.api.asking import AS_KNOWN_AT, AT, aircraft_asked, approval_asked
+from fleet.api.documents import described
+from fleet.api.shapes_provisions import ProvisionAnswer, ProvisionList
+from fleet.entering import read_ending
+from fleet.provisions import PERMIT
+from fleet.queries.provisions import provision_of
+from records.api.asking import actor_of, document_of, operator_of, parameters_of
+from records.api.once import Answer, once
+
+
+class PermitsEndpoint(APIView):
+    """The permits of one aircraft."""
+
+    @extend_schema(operation_id="list_permits", parameters=[AT, AS_KNOWN_AT], responses=ProvisionList)
+    def get(self, request: Request, registration: str) -> HttpResponse:
+        """Which held at `at`, as known at `as-known-at`, and every one ever entered."""
+        return provisions_answer(request, PERMIT, aircraft_asked(request, registration))
+
+    @extend_schema(
+        operation_id="enter_permit", request=described("permit-1"), responses={201: ProvisionAnswer}
+    )
+    def post(self, request: Request, registration: str) -> HttpResponse:
+        """Enters a permit. It widens nothing until a second person approves it, and lapses by itself."""
+        document = document_of(request)
+
+        def work() -> Answer:
+            aircraft = aircraft_asked(request, registration)
+            entered = enter_permit(actor_of(request), aircraft, document)
+            return created(entered, f"/api/v1/aircraft/{aircraft.registration}/permits", aircraft)
+
+        return once(request, work)
+
+
+class OnePermitEndpoint(APIView):
+    """One permit."""
+
+    @extend_schema(operation_id="show_permit", responses=ProvisionAnswer)
+    def get(self, request: Request, registration: str, version: UUID) -> HttpResponse:
+        """The permit with its document, numbers as typed."""
+        parameters_of(request, allowed=())
+        aircraft = aircraft_asked(request, registration)
+        found = provision_of(operator_of(request), PERMIT, version, aircraft)
+        return shown(provision_line(found, aircraft))
+
+
+class PermitApprovalEndpoint(APIView):
+    """The approval of one permit."""
+
+    @extend_schema(
+        operation_id="approve_permit", request=described("approval-1"), responses={201: ProvisionAnswer}
+    )
+    def post(self, request: Request, registration: str, version: UUID) -> HttpResponse:
+        """Approves the permit, by another person than entered it; it holds between its own dates."""
+        document = document_of(request)
+
+        def work() -> Answer:
+            aircraft = aircraft_asked(request, registration)
+            permit = provision_of(operator_of(request), PERMIT, version, aircraft)
+            approve_permit(actor_of(request), aircraft, permit, reason=approval_asked(document).reason)
+            return now_as_it_is(permit, aircraft)
+
+        return once(request, work)
+
+
+class PermitEndingEndpoint(APIView):
+    """The ending of one permit before it lapses."""
+
+    @extend_schema(operation_id="end_permit", request=described("ending-1"), responses={201: ProvisionAnswer})
+    def post(self, request: Request, registration: str, version: UUID) -> HttpResponse:
+        """Ends the permit at `true_from`, with a reason."""
+        document = document_of(request)
+
+        def work() -> Answer:
+            aircraft = aircraft_asked(request, registration)
+            permit = provision_of(operator_of(request), PERMIT, version, aircraft)
+            ending = read_ending(document)
+            end_permit(actor_of(request), aircraft, permit, true_from=ending.true_from, reason=ending.reason)
+            return now_as_it_is(permit, aircraft)
+
+        return once(request, work)
