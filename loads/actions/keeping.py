@@ -11,7 +11,7 @@ from loads.actions.announcing import announce_rejected
 from loads.actions.identifier import new_load_id
 from loads.actions.together import insert_together
 from loads.balance.engine import ENGINE_VERSION
-from loads.models import Assessment, Declaration, Load, Step
+from loads.models import Assessment, Declaration, Leg, Load, Step
 from loads.queries.answer import departure_text
 from loads.queries.computation import Computation
 from loads.queries.current import Current
@@ -49,7 +49,10 @@ def keep_load(
         body=computation.inputs,
         salt=secrets.token_bytes(SALT_BYTES),
     )
-    return _keep_opening(entry, load, computation, (load, declaration), after=None, by=by)
+    rows: tuple[models.Model, ...] = (load, declaration)
+    if computation.before is not None:
+        rows += (Leg(load=load, operator_id=entry.chain, follows=computation.before.load),)
+    return _keep_opening(entry, load, computation, rows, after=None, by=by)
 
 
 def keep_assessment(

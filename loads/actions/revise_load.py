@@ -8,6 +8,7 @@ from loads.actions.stepping import load_as_seen, one_of_two_racers, take_step
 from loads.acts import REVISE_LOAD
 from loads.queries.computation import compute
 from loads.queries.current import Current
+from loads.queries.legs import demand_standing
 from records.act import act
 from records.actor import Actor
 from records.strict_json import JSON
@@ -24,5 +25,6 @@ def revise_load(load: UUID, document: dict[str, JSON], *, reason: str, seen: str
     with one_of_two_racers(), act(REVISE_LOAD, by=by, about=f"load:{number}", reason=reason) as entry:
         replaced = load_as_seen(entry, load, seen, "superseded")
         computation = compute(entry.chain, document, entry.at)
+        demand_standing(computation.before)
         take_step(entry, replaced, "superseded", by=by, reason=reason)
         return keep_load(entry, number, computation, by=by.person, replaces=replaced.load)

@@ -2,6 +2,8 @@
 `loads.balance`.
 """
 
+from typing import Any
+
 from drf_spectacular.utils import extend_schema_field
 from rest_framework import serializers
 
@@ -35,6 +37,10 @@ class Flight(serializers.Serializer[object]):
     origin = serializers.CharField()
     destination = serializers.CharField()
     operation = serializers.CharField()
+    follows = serializers.UUIDField(
+        required=False,
+        help_text="the id of the load of the leg before: same aircraft, it ends where this one begins",
+    )
 
 
 class LapInfant(serializers.Serializer[object]):
@@ -140,6 +146,52 @@ class SeatSetting(serializers.Serializer[object]):
     row = serializers.CharField(required=False)
 
 
+class Departing(serializers.Serializer[object]):
+    """Who or what leaves: a person by the `seat`, an item by `place` and `what`, in which the load declares
+    them. `weight` is of an item of which only some leaves.
+    """
+
+    seat = serializers.CharField(required=False)
+    place = serializers.CharField(required=False)
+    what = serializers.CharField(required=False)
+    weight = Quantity(required=False)
+
+
+class Shifting(serializers.Serializer[object]):
+    """Who or what moves, named as in what leaves, and the seat or place it moves `to`."""
+
+    seat = serializers.CharField(required=False)
+    place = serializers.CharField(required=False)
+    what = serializers.CharField(required=False)
+    to = serializers.CharField()
+
+
+class FuelTransfer(serializers.Serializer[object]):
+    """Fuel that goes from one tank to another; nothing is burned meanwhile."""
+
+    def get_fields(self) -> dict[str, serializers.Field[Any, Any, Any, Any]]:
+        """Name the tanks; `from` is no name that Python takes."""
+        return {"from": serializers.CharField(), "to": serializers.CharField(), "quantity": Quantity()}
+
+
+class FlightEvent(serializers.Serializer[object]):
+    """What happens on the flight at one moment: exactly one of `leave`, `move`, `transfer`, `position`.
+
+    Events are in order. All who move in one event move at once.
+    """
+
+    after_burning = Quantity(help_text="usable fuel burned by then, by weight or volume; 0: straight after")
+    since = serializers.ChoiceField(
+        ("engine start", "take-off"), required=False, help_text="since when; take-off when left out"
+    )
+    leave = Departing(many=True, required=False)
+    move = Shifting(many=True, required=False)
+    transfer = FuelTransfer(required=False)
+    position = serializers.DictField(
+        child=serializers.CharField(), required=False, help_text="moving part to its state: gear, flaps"
+    )
+
+
 class LoadDocument(serializers.Serializer[object]):
     """A load as submitted: `tarebook.load/1`."""
 
@@ -153,6 +205,7 @@ class LoadDocument(serializers.Serializer[object]):
     items = Item(many=True)
     fuel = Fuel()
     limits = StatedLimit(many=True, required=False)
+    sequence = FlightEvent(many=True, required=False)
     conditions = serializers.ListField(
         child=serializers.CharField(),
         required=False,

@@ -41,6 +41,7 @@ def sheet(facts: Facts) -> dict[str, object]:
         "earlier": tables.signatures_under_earlier_issues(facts),
         "load": facts.load,
         "replaces": facts.replaces,
+        "legs": facts.legs,
         "units": facts.result["units"],
         "flight": pilot_block.flight_block(facts),
         "verdict": pilot_block.verdict_block(facts, words),

@@ -3,6 +3,7 @@
 from loads.models.assessment import Assessment
 from loads.models.declaration import Declaration
 from loads.models.late_change import FiledIssue, LateChange
+from loads.models.leg import Leg
 from loads.models.load import Load
 from loads.models.note import Note
 from loads.models.paper import FiledPaper, Paper
@@ -21,6 +22,7 @@ __all__ = [
     "FiledIssue",
     "FiledPaper",
     "LateChange",
+    "Leg",
     "Load",
     "LoadFlag",
     "Note",

@@ -21,6 +21,7 @@ from loads.queries.late_change import (
     lines_of,
     words_to_sign_late,
 )
+from loads.queries.legs import legs_answer
 from loads.queries.signable import signatures_due
 from loads.queries.stale import stale_parts
 from records.canonical import decimal_text
@@ -82,6 +83,7 @@ def full_answer_of(current: Current, *, known: datetime) -> Answer:
             for one in load.steps.order_by("number")
         ],
         "to_sign": signatures_due(current, declared),
+        "legs": legs_answer(current),
         "stale_notices": [
             {"told_at": one.told_at, "changed": one.changed.split(", "), "mail_addresses": one.mail_addresses}
             for one in StaleNotice.objects.filter(load=load).order_by("told_at", "id")

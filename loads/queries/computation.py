@@ -15,7 +15,9 @@ from loads.balance.engine import ENGINE_VERSION
 from loads.balance.result import Result
 from loads.balance.shape import check_shape
 from loads.queries.crew import pilot_in
+from loads.queries.current import Current
 from loads.queries.figures import empty_figures
+from loads.queries.legs import leg_before
 from loads.queries.provided import declared_under, provided_versions, ruled_for, used_of
 from loads.statement import digest_from
 from records.canonical import canonical_of_exact
@@ -41,6 +43,7 @@ class Computation:
     result: dict[str, object]
     result_text: bytes  # the result, canonical
     digest: str
+    before: Current | None = None  # the load of the leg before, where the flight names it
 
     @property
     def verdict(self) -> str:
@@ -56,6 +59,7 @@ def compute(operator: str, document: dict[str, JSON], known: datetime) -> Comput
     """
     outline = read_outline(document)
     aircraft = _aircraft_in(operator, outline)
+    before = leg_before(operator, aircraft, outline.flight)
     used = in_force_for(aircraft, outline.flight.departure, known, outline.configuration)
     declared, assessed = assessed_with(document, outline, used, known)
     pilot = pilot_in(operator, document)
@@ -75,6 +79,7 @@ def compute(operator: str, document: dict[str, JSON], known: datetime) -> Comput
         result=result,
         result_text=result_text,
         digest=digest_from(inputs, versions, ENGINE_VERSION, result_text),
+        before=before,
     )
 
 
