@@ -6,6 +6,7 @@ from loads.api.assessments import AssessmentsView
 from loads.api.late_changes import LateChangesView, LatePreviewView, NotesView
 from loads.api.loads import LoadsView, LoadView
 from loads.api.manifests import ManifestView
+from loads.api.remedies import RemediesView
 from loads.api.signatures import SignaturesView
 from loads.api.steps import AssessmentView, DepartureView, RevisionsView, WithdrawalView
 from loads.api.trail import ActView, TrailView
@@ -17,6 +18,7 @@ urlpatterns = [
     path("loads/<uuid:load>/revisions", RevisionsView.as_view(), name="api-load-revisions"),
     path("loads/<uuid:load>/assessment", AssessmentView.as_view(), name="api-load-assessment"),
     path("loads/<uuid:load>/signatures", SignaturesView.as_view(), name="api-load-signatures"),
+    path("loads/<uuid:load>/remedies", RemediesView.as_view(), name="api-load-remedies"),
     path("loads/<uuid:load>/manifest", ManifestView.as_view(), name="api-load-manifest"),
     path("loads/<uuid:load>/last-minute-changes", LateChangesView.as_view(), name="api-load-late-changes"),
     path(

@@ -294,6 +294,7 @@ API: tuple[Row, ...] = (
         404,
         "accepted",
     ),
+    Row("GET", f"{LOAD}/remedies", EVERY, 200, _load("open", step=False), foreign=404),
     Row("GET", f"{LOAD}/manifest", EVERY, 200, _load("accepted", step=False), foreign=404),
     Row("POST", f"{LOAD}/last-minute-changes", ACCEPT, 200, _load("accepted", _late), "person", 404),
     Row(
