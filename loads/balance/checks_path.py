@@ -55,7 +55,8 @@ def path_checks(burn: Burn, states: Mapping[Phase, State], ready: Prepared, fix:
 
 def path_document(burn: Burn, checks: Iterable[Check], ready: Prepared) -> Json:
     """Return the path for the plot and the paper: its kinks between phases, and its worst points as the
-    checks name them. In a stretch that is bent its middle is told, too.
+    checks name them. In a stretch that is bent its middle is told, too. With a sequence `runs` has the kinks
+    in the order of flight, from jump to jump.
     """
     kinks = []
     for stretch in burn.path.stretches:
@@ -67,7 +68,24 @@ def path_document(burn: Burn, checks: Iterable[Check], ready: Prepared) -> Json:
     worst: list[Json] = [{"axis": axis, **at[f"path.{axis}"]} for axis in burn.worst if f"path.{axis}" in at]
     if PATH_CODE in at:
         worst.append({"axis": "lateral by CG", **at[PATH_CODE]})
-    return {"points": [_figures(knot, _arms(knot), ready) for knot in kinks], "worst": worst}
+    told: Json = {"points": [_figures(knot, _arms(knot), ready) for knot in kinks], "worst": worst}
+    if burn.path.turns:
+        told["runs"] = [
+            [_figures(knot, _arms(knot), ready) for knot in run] for run in _runs(burn.path.stretches)
+        ]
+    return told
+
+
+def _runs(stretches: Iterable[Stretch]) -> list[list[Knot]]:
+    """Return the kinks of a path that jumps at events, in the order of flight: a list from jump to jump."""
+    runs: list[list[Knot]] = []
+    for stretch in stretches:
+        if not runs or runs[-1][-1][:3] != stretch.start[:3]:
+            runs.append([stretch.start])
+        if stretch.bend:
+            runs[-1].append(stretch.at((stretch.start.weight + stretch.end.weight) / 2))
+        runs[-1].append(stretch.end)
+    return runs
 
 
 def _check(burn: Burn, axis: Axis, states: Mapping[Phase, State], ready: Prepared, fix: Fix) -> Check:

@@ -183,6 +183,10 @@ def _advisories(declared: Declared, states: Mapping[Phase, State], ready: Prepar
     """Return the few lines that are told without a verdict, each with a figure."""
     found = return_advisory(declared, states, ready) if states else []
     found += fitted_lines(declared)
+    if declared.sequence:
+        count = len(declared.sequence)
+        events = "1 event" if count == 1 else f"{count} events"
+        found.append(f"{events} on the flight: landing is as after all of them, zero fuel as before any")
     estimated = sum(item.how == "estimated" for item in declared.items)
     if estimated:
         found.append(f"{estimated} of {len(declared.items)} item weights are estimates")

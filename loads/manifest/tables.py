@@ -117,7 +117,7 @@ def _limit(check: Mapping[str, Any], words: Words) -> Row:
     typed = family in TYPED
     kept = check["result"] == "pass"
     low, actual, high = check["low"], check["actual"], check["limit"]
-    lateral = family == "lateral" or check["code"] == "path.lateral"
+    lateral = family == "lateral" or check["code"] in {"path.lateral", "path.zero-fuel-lateral"}
     low, actual, high = sided([low, actual, high]) if lateral else column([low, actual, high])
     return {
         "title": check["title"] if typed else words.said(check["title"]),
