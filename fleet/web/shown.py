@@ -11,6 +11,7 @@ from fleet import acts
 from fleet.models import Aircraft, EmptyWeight, LoadingBasis
 from fleet.queries.history import VersionHistory, empty_weight_history, loading_basis_history
 from fleet.queries.in_force import basis_in_force, empty_weights_in_force
+from fleet.web.positions_shown import position_rows
 from fleet.web.stations_shown import limit_row, station_rows
 from records.actor import Actor
 
@@ -119,7 +120,8 @@ def _limits(basis: LoadingBasis | None) -> list[dict[str, str]]:
     if basis is None:
         return []
     document = json.loads(basis.document)
-    return [limit_row(document, title, document["limits"].get(name)) for name, title in LIMIT_TITLES]
+    rows = [limit_row(document, title, document["limits"].get(name)) for name, title in LIMIT_TITLES]
+    return [*rows, *position_rows(document)]
 
 
 def _stations(basis: LoadingBasis | None) -> list[dict[str, str]]:

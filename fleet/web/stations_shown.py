@@ -12,7 +12,7 @@ def limit_row(document: Mapping[str, Any], title: str, limit: Mapping[str, Any] 
     if limit is None:
         return {"title": title, "value": NOT_ENTERED, "source": ""}
     value = "none" if limit.get("none") else f"{limit['value']} {limit['unit']}"
-    return {"title": title, "value": value, "source": _source(document, limit["source"])}
+    return {"title": title, "value": value, "source": source_words(document, limit["source"])}
 
 
 def station_rows(document: Mapping[str, Any]) -> list[Row]:
@@ -42,7 +42,8 @@ def _titled(spot: Mapping[str, Any]) -> str:
     return name[:1].upper() + name[1:]
 
 
-def _source(document: Mapping[str, Any], source: Mapping[str, Any]) -> str:
+def source_words(document: Mapping[str, Any], source: Mapping[str, Any]) -> str:
+    """This function will return where a figure stands: document, revision and page."""
     own = document["document"]
     number = source.get("document", own["number"])
     revision = source.get("revision", "" if "document" in source else own["revision"])
@@ -69,7 +70,7 @@ def _floor(document: Mapping[str, Any], place: Mapping[str, Any]) -> Iterator[Ro
         parts = [*free.get("kinds", ())]
         if "up_to" in free:
             parts.insert(0, f"up to {free['up_to']['value']} {free['up_to']['unit']} each")
-        source = _source(document, free["source"])
+        source = source_words(document, free["source"])
         yield {"title": f"{_titled(place)}, no footprint asked", "value": ", ".join(parts), "source": source}
 
 
@@ -82,7 +83,11 @@ def _rail(document: Mapping[str, Any], seat: Mapping[str, Any]) -> Iterator[Row]
         f"{one['setting']} at {one['arm']['value']} {one['arm']['unit']}" for one in rail.get("settings", ())
     )
     value = f"{ends}{f'; settings {settings}' if settings else '; no named settings'}"
-    yield {"title": f"{_titled(seat)}, rail", "value": value, "source": _source(document, rail["source"])}
+    yield {
+        "title": f"{_titled(seat)}, rail",
+        "value": value,
+        "source": source_words(document, rail["source"]),
+    }
 
 
 def _marks(document: Mapping[str, Any]) -> Iterator[Row]:
