@@ -18,7 +18,13 @@ from service.problems import MEDIA_TYPE
 
 COMMITTED: Final = Path(__file__).with_name("openapi.json")
 # The same sum with nothing stored: repeating it needs no key.
-STORES_NOTHING: Final = frozenset({"/api/v1/assessments", "/api/v1/loads/{load}/last-minute-changes/preview"})
+STORES_NOTHING: Final = frozenset(
+    {
+        "/api/v1/assessments",
+        "/api/v1/aircraft/{registration}/seating-variations",
+        "/api/v1/loads/{load}/last-minute-changes/preview",
+    }
+)
 UNLIMITED: Final = frozenset({"health"})
 _KEY: Final = {
     "name": IDEMPOTENCY_KEY.name,

@@ -91,8 +91,8 @@ class ComputedAnswer(serializers.Serializer[object]):
     )
     presentation = serializers.DictField(
         required=False,
-        help_text="How moments are shown beside themselves: index units, divided moments. Only where the basis "
-        "says so; phases and lines then hold `index` and `moment_divided`.",
+        help_text="How moments are shown beside themselves: index units, divided moments. Only where the "
+        "basis says so; phases and lines then hold `index` and `moment_divided`.",
     )
     basis = BasisUsed()
     digest = serializers.CharField()
@@ -194,6 +194,16 @@ class Legs(serializers.Serializer[object]):
     uplift = serializers.CharField(allow_blank=True)
 
 
+class LoadFlagged(serializers.Serializer[object]):
+    """That a later figure puts a flight outside that was within; the filed record stays as it is."""
+
+    flagged_at = serializers.DateTimeField()
+    recheck = serializers.UUIDField()
+    verdict_now = serializers.ChoiceField(choices=["outside", "unresolved"])
+    limit = serializers.CharField(allow_blank=True)
+    excess = serializers.CharField(allow_blank=True)
+
+
 class FullLoadAnswer(LoadAnswer):
     """All there is to read about a load. `stale` names what changed since it was assessed."""
 
@@ -207,6 +217,7 @@ class FullLoadAnswer(LoadAnswer):
     declared = LoadDocument()
     legs = Legs()
     stale_notices = StaleTold(many=True)
+    flags = LoadFlagged(many=True)
     notes = NoteAnswer(many=True)
 
 

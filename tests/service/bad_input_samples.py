@@ -11,6 +11,7 @@ from tests.cast import PASSWORD
 from tests.loads.late import change_of, proposed
 from tests.loads.making import load_document, signing
 from tests.makers import basis_document, empty_weight_document, q
+from tests.pure.fleet.cabins import cabin
 from tests.service.permission_world import World
 
 Documents = tuple[dict[str, Any], ...]
@@ -135,6 +136,7 @@ SAMPLES: Final[Mapping[str, Callable[[World], Documents]]] = {
     f"{_AIRCRAFT}/loading-bases/{{version}}/approval": _one(true_from="2026-01-02T00:00:00Z", reason="read"),
     f"{_AIRCRAFT}/empty-weights/{{version}}/approval": _one(reason="read"),
     f"{_AIRCRAFT}/weighings": _empty_weights,
+    f"{_AIRCRAFT}/seating-variations": lambda _world: (cabin(),),
     "/api/v1/assessments": lambda world: (load_with_everything(world),),
     "/api/v1/loads": lambda world: (load_with_everything(world),),
     f"{_LOAD}/revisions": lambda world: ({**load_with_everything(world), "reason": "one bag more"},),

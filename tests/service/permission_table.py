@@ -15,6 +15,7 @@ from tests.cast import PASSWORD
 from tests.loads.late import BAG, change_of
 from tests.loads.making import load_document, signing
 from tests.makers import basis_document, empty_weight_document
+from tests.pure.fleet.cabins import cabin
 from tests.service.permission_world import ADDRESS, World
 
 EVERYBODY: Final = frozenset({"everybody, signed in or not"})
@@ -114,6 +115,10 @@ def _load(state: str, body: Any = None, *, step: bool = True) -> Send:
 
 def _document(world: World, _role: str) -> dict[str, Any]:
     return load_document(world.people, aircraft=world.aircraft)
+
+
+def _recheck(world: World, _role: str) -> Sent:
+    return Sent(body={"aircraft": world.aircraft, "reason": "scale was off"})
 
 
 def _sent_document(world: World, role: str) -> Sent:
@@ -261,6 +266,14 @@ API: tuple[Row, ...] = (
         lambda w, _r: Sent(at={"registration": w.aircraft}, body=empty_weight_document(report="W-2026-9")),
         foreign=404,
     ),
+    Row(
+        "POST",
+        f"{ONE}/seating-variations",
+        EVERY,
+        200,
+        lambda w, _r: Sent(at={"registration": w.aircraft}, body=cabin()),
+        foreign=404,
+    ),
     Row("POST", "/api/v1/assessments", EVERY, 200, _sent_document, foreign=422),
     Row("GET", "/api/v1/loads", EVERY, 200, _asked(aircraft=_aircraft)),
     Row("POST", "/api/v1/loads", DECLARE, 201, _sent_document, foreign=422),
@@ -316,6 +329,9 @@ API: tuple[Row, ...] = (
     ),
     Row("POST", f"{LOAD}/withdrawal", DECLARE, 200, _load("open", WHY), foreign=404),
     Row("POST", f"{LOAD}/departure", DECLARE, 200, _load("accepted", _departure), foreign=404),
+    Row("POST", "/api/v1/rechecks", MANAGE, 202, _recheck, foreign=422),
+    Row("GET", "/api/v1/rechecks/{recheck}", EVERY, 200, named("recheck"), foreign=404),
+    Row("GET", "/api/v1/rechecks/{recheck}.csv", EVERY, 200, named("recheck"), foreign=404),
     Row("GET", "/api/v1/trail", EVERY, 200, _asked(about=_open)),
     Row("GET", "/api/v1/trail/{act}", EVERY, 200, named("act"), foreign=404),
     Row("GET", "/api/v1/documents/{digest}", EVERY, 200, named("digest"), foreign=404),
