@@ -95,7 +95,7 @@ def _categories(given: Sequence[Mapping[str, Any]], faults: list[Fault]) -> Iter
 
 
 def _seasons(given: Sequence[Mapping[str, Any]], faults: list[Fault]) -> Iterator[Season]:
-    found = []
+    found: list[Season] = []
     for place, each in enumerate(given):
         where = f"/seasons/{place}"
         if any(season.id == each["id"] for season in found):

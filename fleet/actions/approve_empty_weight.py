@@ -5,6 +5,7 @@ from fleet.actions.authorship import approver_acting, own
 from fleet.actions.basis_fit import refuse_unfit
 from fleet.actions.constraint_refusals import refused_as
 from fleet.actions.standing_projection import APPROVAL_REFUSALS, stand
+from fleet.actions.unexplained_jump import refuse_unexplained_jump
 from fleet.events import VERSIONS_CHANGED
 from fleet.models import Aircraft, Approval, EmptyWeight
 from records import outbox
@@ -19,8 +20,9 @@ def approve_empty_weight(
 ) -> Approval:
     """This function will approve the empty weight and let it stand from its own `true_from`.
 
-    Raises StepRefused when it is approved already, or no longer goes with the loading basis in force
-    then; NotAllowed for the person who entered it, or anybody who is no person.
+    Raises StepRefused when it is approved already, no longer goes with the loading basis in force then, or
+    is further from the figure it follows than the operator's settings let pass without a cause, which is the
+    `reason`; NotAllowed for the person who entered it, or anybody who is no person.
     """
     own(actor, aircraft)
     if empty_weight.aircraft_id != aircraft.id:
@@ -40,6 +42,8 @@ def approve_empty_weight(
                 faults=unfit.faults,
                 next_step="Enter the empty weight again as the basis in force asks for it.",
             ) from unfit
+        if not reason.strip():
+            refuse_unexplained_jump(aircraft, empty_weight, entry.at)
         approval = Approval.objects.create(
             operator_id=aircraft.operator_id,
             aircraft=aircraft,

@@ -9,6 +9,7 @@ from django.views.decorators.http import require_POST, require_safe
 
 from fleet.actions.approve_empty_weight import approve_empty_weight
 from fleet.actions.approve_loading_basis import approve_loading_basis
+from fleet.entering import read_approval
 from fleet.queries.aircraft import aircraft_of, all_aircraft, empty_weight_of, loading_basis_of
 from fleet.web.shown import aircraft_page, list_line
 from records.refusal import Refused
@@ -37,7 +38,9 @@ def approve_basis(request: HttpRequest, registration: str, version: UUID) -> Htt
     """This function will approve a loading basis on behalf of the person signed in."""
     try:
         aircraft = aircraft_of(operator_of(request), registration)
-        approve_loading_basis(actor_of(request), aircraft, loading_basis_of(aircraft, version))
+        approve_loading_basis(
+            actor_of(request), aircraft, loading_basis_of(aircraft, version), reason=_reason(request)
+        )
     except Refused as refusal:
         return _page(request, registration, refusal)
     return HttpResponseRedirect(resolve_url("aircraft", registration))
@@ -49,10 +52,18 @@ def approve_weight(request: HttpRequest, registration: str, version: UUID) -> Ht
     """This function will approve an empty weight on behalf of the person signed in."""
     try:
         aircraft = aircraft_of(operator_of(request), registration)
-        approve_empty_weight(actor_of(request), aircraft, empty_weight_of(aircraft, version))
+        approve_empty_weight(
+            actor_of(request), aircraft, empty_weight_of(aircraft, version), reason=_reason(request)
+        )
     except Refused as refusal:
         return _page(request, registration, refusal)
     return HttpResponseRedirect(resolve_url("aircraft", registration))
+
+
+def _reason(request: HttpRequest) -> str:
+    """Return the remark typed beside an approval, read as the API reads it; "" without one."""
+    typed = request.POST.get("reason", "").strip()
+    return read_approval({"reason": typed}).reason if typed else ""
 
 
 def _page(request: HttpRequest, registration: str, refusal: Refused | None = None) -> HttpResponse:

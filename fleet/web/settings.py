@@ -140,7 +140,7 @@ def _lines(held: Settings, zone: ZoneInfo) -> list[dict[str, Any]]:
         )
     threshold = "not set"
     if held.weighing_threshold_percent is not None:
-        threshold = f"{held.weighing_threshold_percent} % of the landing weight limit; not in effect yet"
+        threshold = f"{held.weighing_threshold_percent} % of the landing weight limit"
     since = f"since {_local(held.true_from, zone)}" if held.true_from else "as entered with the operator"
     return [
         {"title": "Most that may change at the last minute", "value": bound},
@@ -163,7 +163,7 @@ def _by_one(held: Settings) -> str:
 
 def _estimates(held: Settings) -> str:
     if held.estimates_may_be_signed:
-        return "may be signed by the procedure; not in effect yet: loads with an estimate stay unresolved"
+        return "may be signed by the procedure"
     return "cannot be signed"
 
 

@@ -70,19 +70,48 @@ def test_a_change_that_begins_later_asks_nobody_now(people) -> None:
     assert by_the_pilot_alone(people).state == "accepted"
 
 
-def test_an_estimated_weight_of_a_person_is_not_signed_whatever_the_settings_say(people) -> None:
-    """The computation leaves such a load unresolved; the page of settings says so."""
-    settle(people, estimates_may_be_signed=True)
+def estimated(people):
     document = load_document(people)
     document["passengers"][0]["how"] = "estimated"
-    current = submit_load(document, by=actor(people.preparer))
+    return submit_load(document, by=actor(people.preparer))
+
+
+def signed(people, current):
+    return prepare_load(current.load.id, signing(current), seen="1", by=actor(people.preparer))
+
+
+def test_an_estimated_weight_of_a_person_is_signed_where_the_procedure_allows_it_and_only_there(
+    people,
+) -> None:
+    before = estimated(people)
+    assert before.assessment.verdict == "unresolved"
+    with pytest.raises(StepRefused) as refused:
+        signed(people, before)
+    assert refused.value.code == "not-within"
+
+    settle(people, estimates_may_be_signed=True, true_from="2026-01-01T00:00:00Z")
+    allowed = estimated(people)
+
+    check = next(one for one in allowed.result()["checks"] if one["code"] == "weights.estimated")
+    assert (allowed.assessment.verdict, check["result"], check["source"]) == (
+        "within",
+        "pass",
+        "settings No. 1",
+    )
+    assert check["margin_text"] == "estimated: row1 l; the operator's procedure allows it"
+    assert signed(people, allowed).state == "prepared"
+    assert "may be signed by the procedure" in Page(browser(people.manager).get("/settings")).words
+
+
+def test_an_estimate_that_was_allowed_is_not_signed_any_more_once_the_procedure_forbids_it(people) -> None:
+    settle(people, estimates_may_be_signed=True, true_from="2026-01-01T00:00:00Z")
+    allowed = estimated(people)
+    settle(people, estimates_may_be_signed=False)
 
     with pytest.raises(StepRefused) as refused:
-        prepare_load(current.load.id, signing(current), seen="1", by=actor(people.preparer))
+        signed(people, allowed)
 
-    assert current.assessment.verdict == "unresolved"
-    assert refused.value.code == "not-within"
-    assert "loads with an estimate stay unresolved" in Page(browser(people.manager).get("/settings")).words
+    assert refused.value.code == "estimated-weights"
 
 
 def test_a_manifest_names_the_procedure_of_its_acceptance_whatever_is_entered_afterwards(people) -> None:
