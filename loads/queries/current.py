@@ -62,16 +62,12 @@ def current_at(last: Step) -> Current:
 
 
 def loads_present() -> "QuerySet[Present]":
-    """This function will return where loads stand, with what is shown beside it, in one query; long
-    documents stay behind. For questions about many loads: filters and orders go by its own columns.
+    """This function will return where loads stand, with load, aircraft, step and assessment, in one query.
+
+    For questions about many loads: filters and orders go by its own columns. No more is joined, since the
+    database would take longer to plan the query than to answer it.
     """
-    return Present.objects.select_related(
-        "step",
-        "load__aircraft",
-        "load__operator",
-        "assessment__loading_basis",
-        "assessment__empty_weight",
-    ).defer("assessment__loading_basis__document", "assessment__empty_weight__document")
+    return Present.objects.select_related("step", "load__aircraft", "assessment")
 
 
 def current_of(present: Present) -> Current:

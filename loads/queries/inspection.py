@@ -76,8 +76,13 @@ def loads_of_day(aircraft: Aircraft, since: datetime, until: datetime) -> tuple[
     """This function will return every load of the aircraft planned to depart from `since` to `until`, also
     those that were replaced or withdrawn.
     """
-    rows = loads_present().filter(
-        operator_id=aircraft.operator_id, aircraft=aircraft, departure__gte=since, departure__lt=until
+    rows = (
+        loads_present()
+        .select_related("assessment__loading_basis", "assessment__empty_weight")
+        .defer("assessment__loading_basis__document", "assessment__empty_weight__document")
+        .filter(
+            operator_id=aircraft.operator_id, aircraft=aircraft, departure__gte=since, departure__lt=until
+        )
     )
     return tuple(_flown(current_of(row)) for row in rows.order_by("departure", "load_id")[:MOST_FLIGHTS])
 
