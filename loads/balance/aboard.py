@@ -133,6 +133,11 @@ class StatedLimit:
     source: str
     kind: PerformanceKind | None = None  # what of the performance it comes from, where that is said
 
+    @property
+    def named(self) -> str:
+        """Return how it is named: its source, after what it comes from where that is said."""
+        return self.source if self.kind is None else f"{self.kind}, {self.source}"
+
 
 @dataclass(frozen=True, slots=True)
 class Declared:

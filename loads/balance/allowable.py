@@ -63,8 +63,8 @@ def allowable_take_off(declared: Declared, states: Mapping[Phase, State]) -> All
     ]
     for stated in declared.limits:
         if stated.at == "take-off":
-            found.append(Candidate(stated.source, stated.weight))
+            found.append(Candidate(stated.named, stated.weight))
         else:
-            found.append(Candidate(f"{stated.source} + trip fuel", stated.weight + take_off - at["landing"]))
+            found.append(Candidate(f"{stated.named} + trip fuel", stated.weight + take_off - at["landing"]))
     missing = tuple(name for name, limit, _ in entered if limit is None)
     return Allowable(tuple(found), min(found, key=lambda one: one.weight, default=None), missing)

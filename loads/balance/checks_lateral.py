@@ -13,8 +13,17 @@ from typing import NamedTuple
 
 from fleet.basis import Phase
 from fleet.lateral import LateralByCg
-from loads.balance.path import Path, Stretch
-from loads.balance.path_across import WorstAcross, lateral_figure, worst_across
+from loads.balance.path import Leg, Path
+from loads.balance.path_across import (
+    WorstAcross,
+    courses_of,
+    lateral_figure,
+    moved,
+    stays_across,
+    worst_across,
+)
+from loads.balance.path_course import Course
+from loads.balance.path_worst import shifted
 from loads.balance.prepared import Prepared
 from loads.balance.result import Check, Json, State
 from loads.balance.rounding import between, printed, room
@@ -25,6 +34,11 @@ AT: dict[Phase, str] = {
     "zero fuel": " at zero fuel",
     "landing": " at landing",
     "minimum at landing": " with the least fuel at landing",
+}
+HOLDS: dict[Leg, tuple[Phase, ...]] = {
+    "taxi": ("ramp",),
+    "flight": ("take-off",),
+    "reserve": ("take-off", "landing"),
 }
 CODE, PATH_CODE = "lateral-by-cg", "path.lateral-by-cg"
 TITLE = "lateral CG for its longitudinal CG"
@@ -82,17 +96,31 @@ def lateral_by_cg_path(path: Path, ready: Prepared, fix: Fix, told: Told) -> lis
     ]
 
 
-def held_along(path: Path, ready: Prepared) -> Iterable[tuple[LateralByCg, Sequence[Stretch]]]:
-    """Yield each limit with the stretches it holds on: as envelopes do, from engine start to take-off those
-    of the ramp, in flight those of take-off, from the planned landing on those of landing, too.
+def stays_within_lateral(
+    states: Mapping[Phase, State], path: Path, ready: Prepared, added: tuple[Fraction, Fraction]
+) -> bool:
+    """Return whether every phase and the whole path stay inside once moments along and across are added."""
+    along, across = added
+    return all(
+        limit.shape.holds(
+            (state.moment + along) / state.weight,
+            lateral_figure(limit, state.weight, state.lateral_moment + across),
+        )
+        for state in states.values()
+        for limit in ready.across(state.phase)
+    ) and all(stays_across(held, limit) for limit, held in held_along(shifted(path, along, across), ready))
+
+
+def held_along(path: Path, ready: Prepared) -> Iterable[tuple[LateralByCg, Sequence[Course]]]:
+    """Yield each limit with the parts of the flight it holds on: as envelopes do, from engine start to
+    take-off those of the ramp, in flight those of take-off, from the planned landing on those of landing
+    as well.
     """
     for limit in ready.basis.lateral_by_cg:
-        legs = {
-            "taxi": "ramp" in limit.phases,
-            "flight": "take-off" in limit.phases,
-            "reserve": "take-off" in limit.phases or "landing" in limit.phases,
-        }
-        held = [stretch for stretch in path.stretches if legs[stretch.leg]]
+        held = courses_of(path, [leg for leg, phases in HOLDS.items() if set(phases) & set(limit.phases)])
+        if "zero fuel" in limit.phases:
+            for turn in path.zero_fuel:
+                held += moved(turn)
         if held:
             yield limit, held
 

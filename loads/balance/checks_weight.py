@@ -39,7 +39,7 @@ def weight_checks(declared: Declared, states: Mapping[Phase, State], ready: Prep
     found.append(_minimum_flying(limits, states, ready))
     for number, stated in enumerate(declared.limits, 1):
         at = stated.at
-        code, title = f"performance.{at}.{number}", f"{at} weight, {stated.source}"
+        code, title = f"performance.{at}.{number}", f"{at} weight, {stated.named}"
         figure = Figure(code, title, states[at].weight, unit, WEIGHT_PLACES, at)
         found.append(below(figure, stated.weight, stated.source, fixes[at]))
     return found

@@ -7,28 +7,28 @@ lateral arm L / W, or the lateral moment L. In either case the margin to it, in 
     A / W + B + C * W
 
 so its least value is at an end, or at W = sqrt(A / C), and two of them are equal at the root of a quadratic.
-A stretch is cut where x passes a corner: the root of u0 + (u1 - x)*W + u2*W**2. All are numbers with one
-square root, compared exactly; nothing is sampled.
+A stretch is cut where x passes a corner: the root of u0 + (u1 - x)*W + u2*W**2. A transfer is a quadratic of
+what has moved. All are numbers with one square root, compared exactly; nothing is sampled.
 """
 
-from collections.abc import Iterator, Sequence
+from collections.abc import Collection, Iterator, Sequence
 from fractions import Fraction
 from functools import cmp_to_key
 from itertools import pairwise
 from typing import NamedTuple
 
 from fleet.lateral import Across, LateralByCg, Side
-from loads.balance.path import Knot, Stretch
+from loads.balance.path import Knot, Leg, Path, Stretch, Turn
 from loads.balance.path_course import (
     Course,
     Margin,
-    course_of,
+    Moved,
+    burned,
     rational_between,
     roots,
     strictly_within,
-    value,
 )
-from loads.balance.surd import Surd, rational, root
+from loads.balance.surd import Surd, rational
 
 ZERO, ONE, MINUS = Fraction(0), Fraction(1), Fraction(-1)
 BITS = 80  # how finely an irrational weight or margin is bounded: 2**-80 of the unit
@@ -70,25 +70,61 @@ def lateral_figure(limit: LateralByCg, weight: Fraction, lateral_moment: Fractio
     return lateral_moment if limit.gives == "moment" else lateral_moment / weight
 
 
-def worst_across(stretches: Sequence[Stretch], limit: LateralByCg) -> WorstAcross | None:
-    """Return the worst point of these stretches against a limit, of equals the first; None without any.
+def courses_of(path: Path, legs: Collection[Leg]) -> list[Course]:
+    """Return the parts of a path on some legs: stretches in every setting of gear and flaps, events."""
+    found: list[Course] = [burned(each) for each in (*path.stretches, *path.settings) if each.leg in legs]
+    for turn in path.turns:
+        if turn.leg in legs:
+            found += moved(turn)
+    return found
+
+
+def moved(turn: Turn) -> list[Course]:
+    """Return an event as points, or as what a transfer goes through.
+
+    A transfer tells the half of each of its parts, so that a part is known as a quadratic of what has moved.
+    """
+    knots = [knot for knot, _ in turn.knots]
+    if not turn.swept or len(knots) % 2 == 0:
+        return [_part(turn, knot, knot, knot) for knot in knots]
+    return [_part(turn, *knots[at : at + 3]) for at in range(0, len(knots) - 2, 2)]
+
+
+def _part(turn: Turn, start: Knot, half: Knot, end: Knot) -> Moved:
+    bent = 2 * (start.moment + end.moment - 2 * half.moment)
+    straight, across = end.moment - start.moment - bent, end.lateral_moment - start.lateral_moment
+    return Moved(
+        turn.leg,
+        turn.where,
+        start.weight,
+        start.moment,
+        straight,
+        bent,
+        start.lateral_moment,
+        across,
+        turn.dry,
+    )
+
+
+def worst_across(courses: Sequence[Course], limit: LateralByCg) -> WorstAcross | None:
+    """Return the worst point of these parts against a limit, of equals the first; None without any.
 
     A point whose longitudinal arm lies off the whole limit is worse than any other; of such the farthest.
     """
     worst: _Found | None = None
-    for stretch in stretches:
-        for found in _points(course_of(stretch), limit):
+    for course in courses:
+        for found in _points(course, limit):
             if worst is None or _worse(found, worst):
                 worst = found
     return None if worst is None else _settled(worst, limit)
 
 
-def stays_across(stretches: Sequence[Stretch], limit: LateralByCg) -> bool:
-    """Return whether all of these stretches lie inside a limit."""
+def stays_across(courses: Sequence[Course], limit: LateralByCg) -> bool:
+    """Return whether all of these parts lie inside a limit."""
     return all(
         found.sides is not None and found.margin.sign() >= 0
-        for stretch in stretches
-        for found in _points(course_of(stretch), limit)
+        for course in courses
+        for found in _points(course, limit)
     )
 
 
@@ -97,8 +133,8 @@ def _points(course: Course, limit: LateralByCg) -> Iterator[_Found]:
     shape = limit.shape
     for top, bottom in pairwise(_cuts(course, shape)):
         middle = rational_between(bottom, top)
-        knot = course.stretch.at(middle)
-        pieces = _pieces(shape, knot.moment / middle)
+        knot = course.knot(middle)
+        pieces = _pieces(shape, knot.moment / knot.weight)
         if pieces:
             yield _worst_of(course, pieces, top, bottom, moments=limit.gives == "moment")
         else:
@@ -107,14 +143,12 @@ def _points(course: Course, limit: LateralByCg) -> Iterator[_Found]:
 
 def _cuts(course: Course, shape: Across) -> list[Surd]:
     """Return the weights at which a stretch is cut, from the top down, its ends among them."""
-    high, low = rational(course.stretch.start.weight), rational(course.stretch.end.weight)
+    high, low = rational(course.high), rational(course.low)
+    a, b, c = course.arm()
     found: list[Surd] = []
     for level in shape.levels:
-        found += [
-            each
-            for each in roots(course.u0, course.u1 - level, course.u2)
-            if strictly_within(each, low, high)
-        ]
+        passed = roots(*course.less(a, b, c, level))
+        found += [each for each in passed if strictly_within(each, low, high)]
     found.sort(key=cmp_to_key(_downwards))
     cuts = [high]
     for each in found:
@@ -147,10 +181,10 @@ def _worst_of(
         for left, right in pieces
     ]
     worst: _Found | None = None
-    for weight in (top, *_inside(margins, top, bottom), bottom):
+    for weight in (top, *_inside(course, margins, top, bottom), bottom):
         best: _Found | None = None
         for sides, (left, right) in zip(pieces, margins, strict=True):
-            to_left, to_right = value(left, weight), value(right, weight)
+            to_left, to_right = course.value(left, weight), course.value(right, weight)
             nearer = to_right.below(to_left)
             margin = to_right if nearer else to_left
             if best is None or best.margin.below(margin):
@@ -162,13 +196,14 @@ def _worst_of(
     return worst
 
 
-def _inside(margins: Sequence[tuple[Margin, Margin]], top: Surd, bottom: Surd) -> Iterator[Surd]:
+def _inside(
+    course: Course, margins: Sequence[tuple[Margin, Margin]], top: Surd, bottom: Surd
+) -> Iterator[Surd]:
     """Yield the weights between two others at which a margin, or the nearest piece, can turn."""
-    for a, _, c in (margin for pair in margins for margin in pair):
-        if a > 0 and c > 0:
-            dip = root(ZERO, ONE, a / c)
-            if strictly_within(dip, bottom, top):
-                yield dip
+    for margin in (margin for pair in margins for margin in pair):
+        dip = course.turn(margin)
+        if dip is not None and strictly_within(dip, bottom, top):
+            yield dip
     for (_, right), (left, _) in pairwise(margins):
         a, b, c = (one - other for one, other in zip(right, left, strict=True))
         yield from (each for each in roots(a, b, c) if strictly_within(each, bottom, top))
@@ -177,15 +212,17 @@ def _inside(margins: Sequence[tuple[Margin, Margin]], top: Surd, bottom: Surd) -
 def _off(course: Course, shape: Across, top: Surd, bottom: Surd) -> _Found:
     """Return the point of a part that lies off the whole limit farthest from it along the aircraft."""
     first, last = shape.levels[0], shape.levels[-1]
-    a, b, c = course.arm()
+    arm = course.arm()
     weights = [top, bottom]
-    if a * c > 0 and strictly_within(turn := root(ZERO, ONE, a / c), bottom, top):
+    turn = course.turn(arm)
+    if turn is not None and strictly_within(turn, bottom, top):
         weights.append(turn)
-    ahead = value(course.arm(), rational(rational_between(bottom, top))).below(rational(first))
+    ahead = course.value(arm, rational(rational_between(bottom, top))).below(rational(first))
+    a, b, c = course.less(*arm, first if ahead else last)
+    gap = (-a, -b, -c) if ahead else (a, b, c)
     best: _Found | None = None
     for weight in weights:
-        gap = (-a, first - b, -c) if ahead else (a, b - last, c)
-        found = _Found(course, weight, value(gap, weight), None, False, bottom, top)
+        found = _Found(course, weight, course.value(gap, weight), None, False, bottom, top)
         if best is None or best.margin.below(found.margin):
             best = found
     if best is None:
@@ -205,17 +242,18 @@ def _settled(found: _Found, limit: LateralByCg) -> WorstAcross:
     """Return the worst point in rationals: itself, or a point of the path as near as makes no difference,
     which is outside where the worst point is.
     """
-    stretch, outside = found.course.stretch, found.sides is None or found.margin.sign() < 0
+    outside = found.sides is None or found.margin.sign() < 0
     bits = BITS
     knot: Knot | None = None
     while knot is None:
         for weight in _near(found, bits):
-            here = stretch.at(weight)
-            figure = lateral_figure(limit, weight, here.lateral_moment)
-            if not outside or not limit.shape.holds(here.moment / weight, figure):
+            here = found.course.knot(weight)
+            figure = lateral_figure(limit, here.weight, here.lateral_moment)
+            if not outside or not limit.shape.holds(here.moment / here.weight, figure):
                 knot = here
                 break
         bits *= 2
+    stretch = found.course.stretch
     if found.sides is None:
         return WorstAcross(limit, stretch, knot, None, None, None, False)
     along = knot.moment / knot.weight

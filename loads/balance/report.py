@@ -182,7 +182,7 @@ def _persons(declared: Declared) -> Json:
 def _advisories(declared: Declared, states: Mapping[Phase, State], ready: Prepared) -> list[str]:
     """Return the few lines that are told without a verdict, each with a figure."""
     found = return_advisory(declared, states, ready) if states else []
-    found += fitted_lines(declared)
+    found += fitted_lines(declared, ready)
     if declared.sequence:
         count = len(declared.sequence)
         events = "1 event" if count == 1 else f"{count} events"
