@@ -65,12 +65,13 @@ class Remedy(serializers.Serializer[object]):
 
 
 class More(serializers.Serializer[object]):
-    """How much more can go into a place, a row with a free seat, or a tank; rounded down.
+    """How much more can go into a place, a free seat (of a row, where rows are stated), or a tank; rounded
+    down.
 
     `stopped_by` is the limit that breaks with the next last digit; null: none was found.
     """
 
-    kind = serializers.ChoiceField(("place", "row", "tank"))
+    kind = serializers.ChoiceField(("place", "seat", "tank"))
     id = serializers.CharField()
     name = serializers.CharField()
     amount = serializers.CharField()

@@ -55,7 +55,9 @@ def remedies_answer(current: Current, known: datetime) -> Answer:
     }
 
 
-def remedies_for(operator: str, document: dict[str, JSON], known: datetime) -> Answer:
+def remedies_for(
+    operator: str, document: dict[str, JSON], known: datetime, *, seconds: float = SECONDS
+) -> Answer:
     """This function will return what would bring a load document within, or the room in it, with the versions
     in force at its departure, as known at `known`. Raises Invalid for a document that cannot be read.
 
@@ -64,7 +66,7 @@ def remedies_for(operator: str, document: dict[str, JSON], known: datetime) -> A
     outline = read_outline(document)
     aircraft = aircraft_of(operator, outline.aircraft)
     used = in_force_for(aircraft, outline.flight.departure, known, outline.configuration)
-    question = _question(document, outline, used, known)
+    question = _question(document, outline, used, known, seconds)
     if question is None:
         return _answer("unresolved", said=NO_BASIS)
     key = _key(document, used, question.result)
@@ -81,7 +83,9 @@ def remedies_for(operator: str, document: dict[str, JSON], known: datetime) -> A
     return found
 
 
-def _question(document: dict[str, JSON], outline: Outline, used: InForce, known: datetime) -> Question | None:
+def _question(
+    document: dict[str, JSON], outline: Outline, used: InForce, known: datetime, seconds: float
+) -> Question | None:
     if used.basis is None:
         return None
     ruled = ruled_for(basis_of(used.basis), used.provisions, outline)
@@ -97,7 +101,7 @@ def _question(document: dict[str, JSON], outline: Outline, used: InForce, known:
 
     category = None if declared.category is None else declared.category.id
     ready = prepared(applicable(ruled.basis, declared.configuration.id, category))
-    until = time.monotonic() + SECONDS
+    until = time.monotonic() + seconds
     return Question(declared, judge(declared), ready, judge, time.monotonic, until)
 
 

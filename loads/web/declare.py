@@ -21,12 +21,13 @@ from loads.actions.revise_load import revise_load
 from loads.actions.stepping import reason_in
 from loads.actions.submit_load import submit_load
 from loads.queries.computation import compute
-from loads.queries.current import load_of
+from loads.queries.current import Current, load_of
 from loads.queries.declaration import declared_now
 from loads.web.asking import typed_in, zone_of, zone_words
 from loads.web.copied import can_carry, typed_of
 from loads.web.desk import lay_desk, wrong_inputs
 from loads.web.form import document_of, field_of
+from loads.web.remedies import remedied
 from loads.web.shown import stops, verdict_words
 from loads.web.wording import words_at
 from records.refusal import Fault, Invalid, NotKnown, Refused
@@ -73,7 +74,7 @@ def revise(request: HttpRequest, load: UUID) -> HttpResponse:
     load.
     """
     current, zone = load_of(operator_of(request), load), zone_of(request)
-    declared = declared_now(current)
+    declared = _begun_from(request, current)
     local = current.load.departure.astimezone(zone)
     copied = typed_of(declared) | {
         "date": f"{local:%Y-%m-%d}",
@@ -106,6 +107,15 @@ def revise(request: HttpRequest, load: UUID) -> HttpResponse:
         fields |= {"/checked": "checked", "/reason": "reason"}
         return _desk_page(request, table, typed, zone, refusal=_refused(refusal, fields), revised=load)
     return HttpResponseRedirect(resolve_url("load", revision.load.id))
+
+
+def _begun_from(request: HttpRequest, current: Current) -> dict[str, Any]:
+    """This function will return what a revision begins from: what was declared, with a remedy of the load's
+    page put in where one was chosen.
+    """
+    number = request.GET.get("remedy", "")
+    changed = remedied(current, number, timezone.now()) if number else None
+    return declared_now(current) if changed is None else changed
 
 
 def _departure(typed: Mapping[str, str], zone: ZoneInfo) -> datetime | None:

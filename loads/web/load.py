@@ -12,7 +12,9 @@ from loads.queries.current import load_of
 from loads.queries.declaration import declared_now
 from loads.web.asking import zone_of
 from loads.web.beside import beside
+from loads.web.remedies import remedies_shown
 from loads.web.shown import load_page
+from loads.web.wording import words_at
 from records.refusal import Refused
 from records.web.asking import actor_of, operator_of, signed_in
 
@@ -37,6 +39,8 @@ def load_answer(
     current = load_of(operator_of(request), load)
     context = load_page(current, zone_of(request), timezone.now(), actor_of(request))
     context |= beside(current, declared_now(current), actor_of(request))
+    now = timezone.now()
+    context |= remedies_shown(current, words_at(operator_of(request), now), now, actor_of(request))
     if refusal is not None:
         context["refusal"] = {
             "title": refusal.title,

@@ -1,6 +1,7 @@
 """The rejects desk: what cannot depart, why, who has it, what was said, what became of it, and the trend."""
 
 from datetime import UTC, date, datetime, time, timedelta
+from time import monotonic
 from typing import Any
 from uuid import UUID
 from zoneinfo import ZoneInfo
@@ -24,9 +25,11 @@ from loads.queries.rejects import (
     people_who_may_hold,
     settled_rejects,
 )
+from loads.queries.remedies import SECONDS
 from loads.queries.trend import WEEK, Trend, reject_trend
 from loads.trend_chart import Series, trend_chart
 from loads.web.asking import zone_of, zone_words
+from loads.web.remedies import first_sentence
 from loads.web.shown import stops
 from loads.web.wording import words_at
 from records.refusal import Refused
@@ -68,6 +71,9 @@ def _page(
     found = open_rejects(operator)
     words = words_at(operator, now)
     lines = [_reject(one, zone, now, words) for one in found]
+    by = monotonic() + SECONDS  # in all; what is left is told on the page of each load
+    for line, one in zip(lines, found, strict=True):
+        line["remedy"] = first_sentence(one.current, words, now, by - monotonic())
     if about is not None:
         for line in lines:
             line["typed"] = typed if line["id"] == about else None

@@ -61,7 +61,9 @@ def fewest_left(question: Question) -> Left | None:
 
 
 def rows_of(seats: Sequence[Seat]) -> dict[str, str]:
-    """Return the row of each seat: as the basis names it, or counted from the front by the arms."""
+    """Return the row of each seat: as the basis names it, or counted from the front by the arms of the seats
+    passengers may have.
+    """
     named = {seat.id: seat.row for seat in seats if seat.row is not None}
     arms = sorted({seat.arm for seat in seats if seat.serves != "crew"})
     counted = {seat.id: str(arms.index(seat.arm) + 1) for seat in seats if seat.arm in arms}

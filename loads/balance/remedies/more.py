@@ -8,7 +8,6 @@ from math import floor
 from fleet.basis import Place, Seat, Tank
 from loads.balance.aboard import Declared, Item, Person
 from loads.balance.checks_places import Held, held_by
-from loads.balance.remedies.leaving import rows_of
 from loads.balance.remedies.question import TENTH, Question
 from loads.balance.remedies.reaching import Reach, bound_of, reached
 from loads.balance.remedies.steps import Refuel, taken
@@ -42,9 +41,10 @@ def _in_places(question: Question, held: Held) -> Iterator[Json]:
 
 
 def _in_seats(question: Question, held: Held) -> Iterator[Json]:
-    """Yield a line a row with a free seat: one more passenger, as heavy as any free seat of it takes."""
+    """Yield a line a row with a free seat, or a free seat where rows are not stated: one more passenger, as
+    heavy as any free seat of it takes.
+    """
     declared = question.declared
-    rows = rows_of(question.ready.basis.seats)
     least: dict[str, Reach] = {}
     for seat in free_seats(declared, question.ready.basis.seats):
         if seat.id in held or seat.serves == "crew" or seat.attendant or seat.maximum is None:
@@ -59,11 +59,11 @@ def _in_seats(question: Question, held: Held) -> Iterator[Json]:
             )
 
         found = reached(question, changed, bound_of(question, seat.maximum.value))
-        row = rows[seat.id]
+        row = f"row {seat.row}" if seat.row is not None else seat.name
         if row not in least or found.count < least[row].count:
             least[row] = found
     for row, found in least.items():
-        yield _more(question, "row", row, f"one more passenger, row {row}", found)
+        yield _more(question, "seat", row, f"one more passenger, {row}", found)
 
 
 def _in_tanks(question: Question) -> Iterator[Json]:
