@@ -69,9 +69,9 @@ def _told(checks: Sequence[Check], kind: str, items: Sequence[Item]) -> list[Che
 
 
 def _item(item: Item, kind: str, floor: Floor, limit: FloorLimit | None, ready: Prepared) -> Check:
-    place, number = item.place, _number(item)
-    code = f"{kind}.{place.id}.{number}"
-    title = f"{place.name}, {WORDS[kind]}, item {number} ({item.kind})"
+    place, called = item.place, _called(item)
+    code = f"{kind}.{place.id}.{called.rpartition(' ')[2] if item.pointer else 'added'}"
+    title = f"{place.name}, {WORDS[kind]}, {called} ({item.kind})"
     if limit is None:
         return not_entered(code, title, None, "", None)._replace(unit=None)
     source = str(limit.source)
@@ -85,11 +85,11 @@ def _item(item: Item, kind: str, floor: Floor, limit: FloorLimit | None, ready: 
             title,
             "unresolved",
             unit=unit.value,
-            margin_text=f"the {what} of item {number} is not known",
+            margin_text=f"the {what} of {called} is not known",
             source=source,
-            what_next=f"Enter the {what} of item {number}: what touches the floor, not its outline."
+            what_next=f"Enter the {what} of {called}: what touches the floor, not its outline."
             if what == "footprint"
-            else f"Enter the weight of item {number}.",
+            else f"Enter the weight of {called}.",
         )
     size = item.contact.area if kind == AREA else item.contact.run(floor.runs)
     shown = _shown(item.weight / size, limit.value, unit, kind, ready)
@@ -134,7 +134,7 @@ def _spread(
     item: Item, contact: Contact, limit: Fraction, unit: Unit, *, kind: str, floor: Floor, ready: Prepared
 ) -> str:
     """Return what would make an item bearable: the least area or length under it, rounded up."""
-    number, weight, length = _number(item), item.weight or Fraction(0), ready.basis.length_unit
+    called, weight, length = _called(item), item.weight or Fraction(0), ready.basis.length_unit
     own = length_under(unit)
     lies = any(part.part == "spreader" for part in item.rigging)
     least = weight / limit
@@ -144,10 +144,10 @@ def _spread(
     if kind == AREA:
         area = printed(converted(Fraction(1), length, own) ** 2 * least, _places(own), "up")
         under = f"at least {area} {own.value}2 {what}"
-        return f"Stand item {number} on {needs}: {under}; or put part of it elsewhere."
+        return f"Stand {called} on {needs}: {under}; or put part of it elsewhere."
     way = "along the aircraft" if floor.runs == "along" else "across the aircraft"
     turned = contact.across if floor.runs == "along" else contact.along
-    turn = f"Turn item {number}, or stand it" if turned >= least else f"Stand item {number}"
+    turn = f"Turn {called}, or stand it" if turned >= least else f"Stand {called}"
     return (
         f"{turn} on {needs}: at least {_size(least, length, 'up', own)} {way} {what}; "
         f"or put part of it elsewhere."
@@ -173,6 +173,9 @@ def _places(unit: Unit) -> int:
     return METRE_PLACES if unit is Unit.M else SIZE_PLACES
 
 
-def _number(item: Item) -> int:
-    """Return which item of the load it is, counted from 1: what it is called may name somebody."""
-    return int(item.pointer.rpartition("/")[2]) + 1
+def _called(item: Item) -> str:
+    """Return which item of the load it is, counted from 1: what it is called may name somebody. One that is
+    only thought of, to see what would be if, stands on no line.
+    """
+    number = item.pointer.rpartition("/")[2]
+    return f"item {int(number) + 1}" if number else "an added item"

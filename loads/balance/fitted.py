@@ -1,11 +1,14 @@
 """Reading what is fitted on the day: the conditions that hold, and where seats stand on their rails."""
 
 from dataclasses import replace
+from fractions import Fraction
 
 from fleet.basis import Basis, Seat
 from fleet.stations import Condition
 from loads.balance.aboard import Declared
 from loads.balance.fields import Fields
+from loads.balance.prepared import Prepared
+from loads.balance.rounding import printed
 
 FITTED_FIELDS = ("conditions", "seat_settings")
 SETTING_FIELDS = ("setting",)
@@ -55,17 +58,28 @@ def read_settings(fields: Fields, basis: Basis) -> tuple[tuple[Seat, str], ...]:
     return tuple(found.values())
 
 
-def fitted_lines(declared: Declared) -> list[str]:
-    """Return in words what was declared to be fitted, and which seats on rails nobody stated."""
+def fitted_lines(declared: Declared, ready: Prepared) -> list[str]:
+    """Return in words what was declared to be fitted, and which seats on rails nobody stated, with the ends
+    of the rail, so that both can be redone by hand.
+    """
     found = [f"declared as fitted: {condition.name}" for condition in declared.conditions]
     if declared.settings:
         stated = ", ".join(f"{seat.name} at {setting}" for seat, setting in declared.settings)
         found.append(f"seats on rails: {stated}")
     people = (*declared.crew, *declared.passengers)
-    ends = ", ".join(person.seat.name for person in people if person.seat.rail is not None)
-    if ends:
-        found.append(f"both ends of the rail checked, no setting stated: {ends}")
+    open_ended = [
+        f"{person.seat.name} {_arm(person.seat.rail.forward, ready)} to {_arm(person.seat.rail.aft, ready)}"
+        for person in people
+        if person.seat.rail is not None
+    ]
+    if open_ended:
+        ends = ", ".join(open_ended)
+        found.append(f"both ends of the rail checked, no setting stated: {ends} {ready.length}")
     return found
+
+
+def _arm(arm: Fraction, ready: Prepared) -> str:
+    return printed(arm, ready.length_places)
 
 
 def settings_form(fields: Fields) -> None:

@@ -164,7 +164,9 @@ def test_an_open_seat_on_rails_says_on_the_page_which_end_was_worse(people: Cast
     words = Page(browser(people.pilot).get(f"/loads/{current.load.id}")).words
 
     assert re.search(r"seats on rails (forward|aft)", words)
-    assert "Both ends of the rail checked, no setting stated: row1 l, row1 r" in words
+    assert (
+        "Both ends of the rail checked, no setting stated: row1 l 135 to 142, row1 r 135 to 142 in" in words
+    )
 
 
 def test_the_paper_prints_them_all(people: Cast) -> None:

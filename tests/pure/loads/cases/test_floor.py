@@ -319,3 +319,13 @@ def test_a_footing_that_makes_no_sense_is_refused_with_its_field(
 
     assert (pointer, code) in {(fault.pointer, fault.code) for fault in refused.value.faults}
     assert (pointer, code) in {(fault.pointer, fault.code) for fault in unseen.value.faults}
+
+
+def test_an_item_only_thought_of_is_judged_too_and_called_so() -> None:
+    declared = read_load(loaded(crate(80)), hold(per_area(50), NONE))
+    thought = replace(declared, items=(replace(declared.items[0], pointer=""),))
+
+    check = checks_floor.floor_checks(thought, prepared(hold(per_area(50), NONE)))[0]
+
+    assert (check.code, check.outcome) == ("floor-area.AFT-HOLD.added", "unresolved")
+    assert check.margin_text == "the footprint of an added item is not known"

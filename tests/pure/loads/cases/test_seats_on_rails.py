@@ -106,7 +106,10 @@ def test_the_answer_says_which_end_was_worse() -> None:
     assert forward.margin_text.endswith("seats on rails forward")
     assert forward.edge == "forward"
     told = result_of(two(), railed()).as_document()
-    assert "both ends of the rail checked, no setting stated: row1 l, row1 r" in told["advisories"]
+    assert (
+        "both ends of the rail checked, no setting stated: row1 l 118 to 130, row1 r 118 to 130 in"
+        in told["advisories"]
+    )
 
 
 def test_a_load_that_is_within_where_the_seats_are_entered_and_outside_at_an_end_is_outside() -> None:
