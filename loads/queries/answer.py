@@ -8,7 +8,7 @@ from loads.balance.engine import ENGINE_VERSION
 from loads.balance.late_change import said
 from loads.cautions import CAUTIONS, INVENTED
 from loads.lifecycle import ways_out
-from loads.models import LateChange, Load, Note, Paper, Signature, StaleNotice
+from loads.models import LateChange, Load, LoadFlag, Note, Paper, Signature, StaleNotice
 from loads.queries.computation import Computation, versions_of
 from loads.queries.current import Current
 from loads.queries.declaration import declared_now
@@ -22,6 +22,7 @@ from loads.queries.late_change import (
     words_to_sign_late,
 )
 from loads.queries.legs import legs_answer
+from loads.queries.rechecks import flags_of
 from loads.queries.signable import signatures_due
 from loads.queries.stale import stale_parts
 from records.canonical import decimal_text
@@ -88,6 +89,7 @@ def full_answer_of(current: Current, *, known: datetime) -> Answer:
             {"told_at": one.told_at, "changed": one.changed.split(", "), "mail_addresses": one.mail_addresses}
             for one in StaleNotice.objects.filter(load=load).order_by("told_at", "id")
         ],
+        "flags": [flag_answer(one) for one in flags_of(load.id)],
         "notes": [note_answer(one) for one in notes_of(load)],
         "declared": declared,
     }
@@ -224,6 +226,19 @@ def note_answer(note: Note) -> Answer:
         "person": note.person_id,
         "name": note.person.name,
         "text": note.text,
+    }
+
+
+def flag_answer(flag: LoadFlag) -> Answer:
+    """This function will return one flag: that a later figure puts the flight outside, and which recheck
+    found it.
+    """
+    return {
+        "flagged_at": flag.flagged_at,
+        "recheck": flag.recheck_id,
+        "verdict_now": flag.now,
+        "limit": flag.limit,
+        "excess": flag.excess,
     }
 
 

@@ -145,11 +145,11 @@ def _flags() -> "QuerySet[LoadFlag]":
 
 
 def _rechecks(operator: str) -> "QuerySet[Recheck]":
-    against = ("empty_weight", "loading_basis", "standard_weights")
+    against = ("empty_weight__aircraft", "loading_basis__aircraft", "standard_weights")
     return (
         Recheck.objects.filter(operator_id=operator)
         .select_related("aircraft", "operator", "asked_by", *against)
-        .defer(*(f"{name}__document" for name in against))
+        .defer("loading_basis__document", "standard_weights__document")
     )
 
 

@@ -94,7 +94,7 @@ def exact_outcome(one: Stored, versions: Versions) -> Outcome:
     except Refused as refusal:
         return Outcome(one, "not computed", refusal.code, "not computed", refusal.detail[:LONGEST_EXCESS])
     except Exception as problem:  # noqa: BLE001  # one load must not keep the others from being computed
-        log.error("load %s could not be computed again: %s", one.load, type(problem).__name__)
+        log.warning("load %s could not be computed again: %s", one.load, type(problem).__name__)
         words = f"the computation failed: {type(problem).__name__}"
         return Outcome(one, "not computed", "failed", "not computed", words)
 

@@ -7,12 +7,13 @@ from fleet.queries.settings import settings_at
 from loads import acts
 from loads.actions.write_note import LONGEST_NOTE
 from loads.balance.late_change import said
-from loads.models import Signature, StaleNotice
+from loads.models import LoadFlag, Signature, StaleNotice
 from loads.queries.answer import notes_of
 from loads.queries.current import Current
 from loads.queries.doubles import doubles_of
 from loads.queries.late_change import bound_of, changes_of, lines_of, moved_by
 from loads.queries.overtaken import database_time
+from loads.queries.rechecks import flags_of
 from records.actor import Actor
 
 
@@ -27,6 +28,7 @@ def beside(current: Current, declared: dict[str, Any], actor: Actor) -> dict[str
             {"at": one.told_at.astimezone(UTC), "changed": one.changed, "mail": one.mail_addresses}
             for one in StaleNotice.objects.filter(load=load).order_by("told_at", "id")
         ],
+        "flags": [flag_shown(one) for one in flags_of(load.id)],
         "notes": [
             {"at": one.written_at.astimezone(UTC), "who": one.person.name, "text": one.text}
             for one in (notes_of(load) if state == "departed" else ())
@@ -34,6 +36,17 @@ def beside(current: Current, declared: dict[str, Any], actor: Actor) -> dict[str
         "longest_note": LONGEST_NOTE,
         "can_change_late": state == "accepted" and may_change and _bounded(load.operator_id),
         "can_note": state == "departed" and acts.WRITE_NOTE.name in actor.may,
+    }
+
+
+def flag_shown(flag: LoadFlag) -> dict[str, Any]:
+    """This function will return one flag as pages show it."""
+    return {
+        "at": flag.flagged_at.astimezone(UTC),
+        "recheck": flag.recheck_id,
+        "now": flag.now,
+        "limit": flag.limit,
+        "excess": flag.excess,
     }
 
 

@@ -11,6 +11,7 @@ from django.views.decorators.http import require_safe
 
 from fleet.queries.aircraft import all_aircraft
 from loads.queries.documents import Filed, Search, search_documents
+from loads.queries.rechecks import flagged_among
 from loads.web.asking import zone_of
 from loads.web.looking import Look, begins, ends
 from records.web.asking import operator_of, signed_in
@@ -39,7 +40,10 @@ def documents(request: HttpRequest) -> HttpResponse:
     }
     if not look.faults:
         found = search_documents(operator, search, after=after, most=ROWS)
-        context["manifests"] = [_line(one, zone) for one in found.manifests]
+        flags = flagged_among({one.paper.load_id for one in found.manifests})
+        context["manifests"] = [
+            _line(one, zone) | {"flag": flags.get(one.paper.load_id)} for one in found.manifests
+        ]
         if found.after is not None:
             typed = {name: value for name, value in look.typed.items() if value}
             context["next"] = f"?{urlencode(typed | {'after': str(found.after)})}"

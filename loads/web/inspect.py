@@ -16,7 +16,9 @@ from fleet.queries.in_force import in_force_for
 from fleet.queries.settings import settings_at
 from loads.queries.current import Current
 from loads.queries.inspection import Flown, flights_without_manifest, loads_of_day, numbers_of
+from loads.queries.rechecks import flags_of
 from loads.web.asking import zone_of, zone_words
+from loads.web.beside import flag_shown
 from loads.web.inspect_versions import basis_shown, equipment_shown, weight_shown
 from loads.web.looking import Look, begins, ends
 from loads.web.shown import verdict_words
@@ -112,6 +114,7 @@ def _load(one: Flown, zone: ZoneInfo, now: datetime) -> dict[str, Any]:
         "assessed": used.assessed_at.astimezone(zone).strftime("%Y-%m-%d %H:%M"),
         "weight": weight_shown(used.empty_weight, held_now.empty_weight, zone),
         "basis": basis_shown(used.loading_basis, held_now.basis, zone),
+        "flags": [flag_shown(flag) for flag in flags_of(load.id)],
         "equipment": equipment_shown(used.loading_basis, load.configuration),
         "configuration": load.configuration,
         "signatures": [

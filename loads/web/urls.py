@@ -2,7 +2,7 @@
 
 from django.urls import path
 
-from loads.web import day, declare, documents, inspect, late, load, rejects, self_check, steps, trail
+from loads.web import day, declare, documents, inspect, late, load, rechecks, rejects, self_check, steps, trail
 
 urlpatterns = [
     path("", day.day, name="day"),
@@ -20,6 +20,8 @@ urlpatterns = [
     path("rejects/<uuid:load>/remarks", rejects.remark, name="remark-reject"),
     path("documents", documents.documents, name="documents"),
     path("inspect", inspect.inspect, name="inspect"),
+    path("rechecks", rechecks.rechecks, name="rechecks"),
+    path("rechecks/<uuid:recheck>", rechecks.recheck, name="recheck"),
     path("self-check", self_check.self_check, name="self-check"),
     path("trail", trail.trail, name="trail"),
     path("trail/<uuid:act>", trail.one_act, name="act"),

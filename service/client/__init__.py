@@ -30,6 +30,7 @@ from service.client.problems import (
     Unanswered,
     Unreadable,
 )
+from service.client.rechecks import Recheck, RecheckedFlight
 from service.client.shapes import (
     Aircraft,
     Assessment,
@@ -71,6 +72,8 @@ __all__ = (
     "Paper",
     "Patience",
     "Person",
+    "Recheck",
+    "RecheckedFlight",
     "Refused",
     "ServerFailed",
     "Settings",

@@ -13,8 +13,10 @@ from fleet.actions.enter_person import enter_person
 from fleet.actions.grant_duty import grant_duty
 from fleet.actions.issue_token import issue_token
 from fleet.models import EmptyWeight, Person
+from loads.actions.ask_recheck import ask_recheck
 from loads.actions.depart_load import depart_load
 from loads.actions.file_manifest import manifest_of
+from loads.actions.self_check import run_self_check
 from loads.actions.submit_load import submit_load
 from loads.queries.current import Current
 from records.models import Act, WebhookDelivery
@@ -52,6 +54,7 @@ class World:
 
 def make_world(code: str, aircraft: str) -> World:
     """This function will enter an operator with all its people, aircraft, loads in every state and tokens."""
+    run_self_check("start")  # as every start of the service does: none is overdue when somebody signs
     people = cast(code)
     by_role = _roles(people, code)
     # A stale load has an aircraft of its own, so that the others stay fresh.
@@ -67,6 +70,7 @@ def make_world(code: str, aircraft: str) -> World:
     names |= _waiting_versions(loads["open"])
     names["digest"] = manifest_of(people.operator.code, loads["accepted"].load.id)[0]
     names["act"] = str(Act.objects.get(about=f"load:{loads['open'].load.id}").pk)
+    names["recheck"] = str(ask_recheck({"aircraft": aircraft}, by=actor(people.manager)).id)
     late = proposed(loads["accepted"], change_of(BAG))
     names["late digest"] = late.computation.digest
     secrets = _tokens(by_role, names)

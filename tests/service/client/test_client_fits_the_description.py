@@ -21,6 +21,7 @@ from service.client import (
     Load,
     Note,
     Person,
+    RecheckedFlight,
     Settings,
     Tarebook,
     Token,
@@ -55,6 +56,7 @@ def test_a_document_has_the_fields_described(document: Any) -> None:
         (Version, "LoadingBasisLine"),
         (Version, "EmptyWeightLine"),
         (Delivery, "DeliveryAnswer"),
+        (RecheckedFlight, "RecheckedFlight"),
         (LatePreview, "LatePreview"),
         (Note, "NoteAnswer"),
         (Act, "ActLine"),
@@ -118,6 +120,10 @@ CALLS: dict[str, Callable[[Tarebook], object]] = {
     "preview_late_change": lambda made: made.preview_late_change(SEEN, {}),
     "change_late": lambda made: made.change_late(SEEN, {}, PREVIEW, "pw"),
     "write_note": lambda made: made.write_note(SEEN, "a bag too many"),
+    "ask_recheck": lambda made: made.ask_recheck("Q9-KTB", empty_weight=NUMBER, since=AT, reason="scale"),
+    "recheck": lambda made: made.recheck(NUMBER),
+    "rechecked_flights": lambda made: list(made.rechecked_flights(NUMBER)),
+    "recheck_table": lambda made: made.recheck_table(NUMBER),
     "trail": lambda made: list(
         made.trail(about="load:1", actor="person:7", kind="accept-load", since=AT, before=AT)
     ),
@@ -158,7 +164,7 @@ def test_a_method_asks_for_what_is_described_with_all_that_is_required(name: str
     (operation,) = [
         operations[asked.method.lower()]
         for form, operations in DESCRIBED["paths"].items()
-        if re.fullmatch(re.sub(r"\{\w+\}", "[^/]+", form), path) and asked.method.lower() in operations
+        if re.fullmatch(re.sub(r"\{\w+\}", "[^/.]+", form), path) and asked.method.lower() in operations
     ]
     parameters = operation.get("parameters", ())
     headers = {one["name"] for one in parameters if one["in"] == "header" and one.get("required")}
