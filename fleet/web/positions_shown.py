@@ -1,4 +1,4 @@
-"""What gear and flaps change, as the loading basis in force states it: rows for its page, figures as typed."""
+"""What gear and flaps change, as the loading basis in force states it: rows for its page, as typed."""
 
 from collections.abc import Mapping
 from typing import Any

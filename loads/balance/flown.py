@@ -48,7 +48,8 @@ def path_of(declared: Declared, flown: Flown, states: Mapping[Phase, State], rea
         path = with_settings(path, declared, ready)
     if ready.basis.positions or declared.sequence:
         dry = flown.dry or (Dry(Sums(NOTHING, NOTHING, NOTHING), NOTHING),)
-        path = replace(path, zero_fuel=zero_fuel_turns(declared, dry, states["zero fuel"], ready))
+        turns = zero_fuel_turns(declared, dry, states["zero fuel"], ready)
+        path = replace(path, zero_fuel=turns if turns[1:] else ())
     return path
 
 
