@@ -140,7 +140,7 @@ def test_loaded_at_random_both_give_the_same_weight_and_cg(name):
     assert len(weights) == RANDOM_LOADS
 
 
-@pytest.mark.parametrize("name", ["c310", "Concorde"])
+@pytest.mark.parametrize("name", MODELS)
 def test_draining_the_tanks_step_by_step_both_follow_the_same_path(name):
     """Filled unevenly, so that the tanks run dry one after another. The library is given what each holds."""
     flown = model(name)
