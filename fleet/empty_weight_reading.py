@@ -39,6 +39,7 @@ class EmptyWeightParticulars:
     true_from: datetime
     report: str
     signed_by: str
+    weighed_on: date
 
 
 def read_particulars(document: object) -> EmptyWeightParticulars:
@@ -92,6 +93,14 @@ def _sound(document: object) -> Mapping[str, Any]:
     particulars = _particulars(document)
     # A day is a day somewhere: offsets differ by up to a day and two hours. The first day of the calendar has
     # none before it, so days are counted, not subtracted.
+    if particulars.weighed_on > particulars.date:
+        faults.append(
+            Fault(
+                "/weighed_on",
+                "weighed-after-date",
+                "the weighing a figure rests on is not after the figure; correct one of the two dates",
+            )
+        )
     early = particulars.date - particulars.true_from.date() > timedelta(days=1)
     if particulars.how == "weighing" and early:
         faults.append(
@@ -115,6 +124,7 @@ def _particulars(entry: Mapping[str, Any]) -> EmptyWeightParticulars:
         true_from=datetime.fromisoformat(entry["true_from"]),
         report=entry["report"],
         signed_by=entry["signed_by"],
+        weighed_on=date.fromisoformat(entry.get("weighed_on", entry["date"])),
     )
 
 

@@ -6,6 +6,7 @@ SUBMIT_LOAD = Kind("submit-load", "submitted a load")
 REVISE_LOAD = Kind("revise-load", "replaced a load by a revision")
 ASSESS_LOAD = Kind("assess-load", "assessed a load again")
 PREPARE_LOAD = Kind("prepare-load", "signed a load as prepared")
+CONFIRM_LOADING = Kind("confirm-loading", "confirmed a load as loaded")
 ACCEPT_LOAD = Kind("accept-load", "accepted a load")
 CHANGE_LATE = Kind("change-load-late", "changed an accepted load at the last minute")
 WITHDRAW_LOAD = Kind("withdraw-load", "withdrew a load")
@@ -23,6 +24,7 @@ KINDS = (
     REVISE_LOAD,
     ASSESS_LOAD,
     PREPARE_LOAD,
+    CONFIRM_LOADING,
     ACCEPT_LOAD,
     CHANGE_LATE,
     WITHDRAW_LOAD,

@@ -21,6 +21,8 @@ _DECLARES = frozenset(
         acts.DEPART_LOAD.name,
     }
 )
+# Who supervised the loading says so, where the operator's rules ask for it.
+_CONFIRMS = frozenset({acts.CONFIRM_LOADING.name})
 _PREPARES = frozenset({acts.PREPARE_LOAD.name})
 # A last-minute change is accepted in the step that makes it, so it is the pilot's.
 _ACCEPTS = frozenset({acts.ACCEPT_LOAD.name, acts.CHANGE_LATE.name})
@@ -35,7 +37,7 @@ ACTS_OF: Mapping[Role, frozenset[str]] = MappingProxyType(
     {
         "pilot": _DECLARES | _PREPARES | _ACCEPTS | _REMARKS | _NOTES,
         "load preparer": _DECLARES | _PREPARES | _REMARKS | _NOTES,
-        "loading supervisor": _REMARKS,
+        "loading supervisor": _REMARKS | _CONFIRMS,
         "maintenance": _REMARKS,
         "records approver": _REMARKS,
         "operations manager": _DECLARES | _PREPARES | _REMARKS | _NOTES | _PROVES,

@@ -16,7 +16,12 @@ READS: Final = frozenset({READ, fleet.duties.READ_PEOPLE, records.acts.READ_ACCE
 # The scope a person's token needs, besides the password, to sign. It is no act either.
 SIGN: Final = "sign"
 SIGNATURES: Final = frozenset(
-    {loads.acts.PREPARE_LOAD.name, loads.acts.ACCEPT_LOAD.name, loads.acts.CHANGE_LATE.name}
+    {
+        loads.acts.PREPARE_LOAD.name,
+        loads.acts.CONFIRM_LOADING.name,
+        loads.acts.ACCEPT_LOAD.name,
+        loads.acts.CHANGE_LATE.name,
+    }
 )
 # Whatever moves a limit or says who may do what needs a person: an integration never does it, whoever owns
 # it.
@@ -24,6 +29,12 @@ _NEEDS_A_PERSON: Final = SIGNATURES | {
     fleet.acts.APPROVE_LOADING_BASIS.name,
     fleet.acts.APPROVE_EMPTY_WEIGHT.name,
     fleet.acts.CHANGE_SETTINGS.name,
+    fleet.acts.ENTER_STANDARD_WEIGHTS.name,
+    fleet.acts.APPROVE_STANDARD_WEIGHTS.name,
+    fleet.acts.ENTER_RULES.name,
+    fleet.acts.APPROVE_RULES.name,
+    fleet.acts.APPROVE_PERMIT.name,
+    fleet.acts.LIFT_RESTRICTION.name,
     loads.acts.REMARK_REJECT.name,
     loads.acts.WRITE_NOTE.name,
     fleet.acts.ENTER_PERSON.name,

@@ -10,6 +10,7 @@ from fleet.api import (
     people,
     permits,
     restrictions,
+    rules,
     settings,
     standard_weights,
     tokens,
@@ -49,6 +50,9 @@ urlpatterns = [
     path(
         "standard-weights/<uuid:version>/approval", standard_weights.StandardWeightsApprovalEndpoint.as_view()
     ),
+    path("rules", rules.RulesEndpoint.as_view()),
+    path("rules/<uuid:version>", rules.OneRulesEndpoint.as_view()),
+    path("rules/<uuid:version>/approval", rules.RulesApprovalEndpoint.as_view()),
     path(f"{_ONE}/restrictions", restrictions.RestrictionsEndpoint.as_view()),
     path(f"{_ONE}/restrictions/<uuid:version>", restrictions.OneRestrictionEndpoint.as_view()),
     path(f"{_ONE}/restrictions/<uuid:version>/lifting", restrictions.RestrictionLiftingEndpoint.as_view()),

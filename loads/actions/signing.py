@@ -13,7 +13,7 @@ from loads.actions.stepping import load_as_seen, take_step
 from loads.models import Load, Signature, Step
 from loads.queries.current import Current
 from loads.queries.declaration import declared_now
-from loads.queries.signable import capacity_of, statement_of, words_to_sign
+from loads.queries.signable import capacity_of, loading_signature_asked, statement_of, words_to_sign
 from loads.queries.stale import stale_parts
 from loads.statement import digest_of
 from records.act import Entry
@@ -22,7 +22,7 @@ from records.kind import Kind
 from records.refusal import NotAllowed, StepRefused
 from records.strict_json import JSON
 
-Meaning = Literal["prepared", "accepted"]
+Meaning = Literal["prepared", "loaded", "accepted"]
 LONGEST_ADDRESS = 60
 
 
@@ -74,6 +74,7 @@ def sign(
     signer = person_signing(by)
     current = load_as_seen(entry, load, seen, meaning)
     declared = declared_now(current)
+    _refuse_against_the_rules(entry, current, meaning)
     if meaning == "accepted":
         refuse_all_but_the_pilot(current.load, by)
         _refuse_the_same_hand_twice(entry, current, signer)
@@ -120,6 +121,25 @@ def refuse_all_but_the_pilot(load: Load, by: Actor) -> None:
             "not-pilot-in-command",
             "Only the pilot in command of this load accepts it.",
             next_step="Let that pilot sign, or revise the load if another pilot flies.",
+        )
+
+
+def _refuse_against_the_rules(entry: Entry, current: Current, meaning: Meaning) -> None:
+    """The loading supervisor signs where the rules in force at the departure ask for it, and only there."""
+    if current.state != "prepared":
+        return
+    asked = loading_signature_asked(current.load, entry.at)
+    if asked and meaning == "accepted":
+        raise StepRefused(
+            "loading-signature-needed",
+            "The operator's rules ask that the loading supervisor signs before the pilot accepts.",
+            next_step="Let the loading supervisor confirm that the aircraft is loaded as listed.",
+        )
+    if not asked and meaning == "loaded":
+        raise StepRefused(
+            "loading-signature-not-asked",
+            "No rule of the operator asks the loading supervisor to sign this load.",
+            next_step="The pilot in command accepts it as it is.",
         )
 
 

@@ -7,6 +7,8 @@ from typing import Any
 from drf_spectacular.utils import extend_schema_field
 from rest_framework import serializers
 
+from fleet.flight_rules import PERFORMANCE_KINDS
+
 NUMBER = {"oneOf": [{"type": "number"}, {"type": "string", "pattern": r"^-?\d+(\.\d+)?$"}]}
 
 
@@ -136,6 +138,11 @@ class StatedLimit(serializers.Serializer[object]):
     at = serializers.ChoiceField(("take-off", "landing"))
     weight = Quantity()
     source = serializers.CharField()  # type: ignore[assignment]  # DRF takes fields out of the class
+    kind = serializers.ChoiceField(
+        PERFORMANCE_KINDS,
+        required=False,
+        help_text="what of the performance it comes from; the loading basis may ask for some of them",
+    )
 
 
 class SeatSetting(serializers.Serializer[object]):
@@ -205,6 +212,10 @@ class LoadDocument(serializers.Serializer[object]):
     items = Item(many=True)
     fuel = Fuel()
     limits = StatedLimit(many=True, required=False)
+    certification_category = serializers.CharField(
+        required=False,
+        help_text="normal, utility, ...: one of the loading basis, needed where it has several",
+    )
     sequence = FlightEvent(many=True, required=False)
     conditions = serializers.ListField(
         child=serializers.CharField(),
@@ -223,7 +234,7 @@ class RevisionDocument(LoadDocument):
 class SignatureRequest(serializers.Serializer[object]):
     """A signature: what it means, the digest that was shown, and the signer's password."""
 
-    meaning = serializers.ChoiceField(("prepared", "accepted"))
+    meaning = serializers.ChoiceField(("prepared", "loaded", "accepted"))
     digest = serializers.RegexField(r"^[0-9a-f]{64}$")
     password = serializers.CharField(write_only=True)
 

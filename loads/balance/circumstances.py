@@ -41,8 +41,8 @@ class Applied:
 class WeighingDue:
     """When the aircraft's last weighing lapses by the rule that binds this operation.
 
-    `lapses` is the first instant at which it is too old, None where no weighing is known; `rule` names the
-    rule and its source; `overdue` is told at the departure.
+    `lapses` is the last day on which it still serves, None where no weighing is known; `rule` says what the
+    rule asks; `overdue` is told at the local date of the departure.
     """
 
     weighed_on: str

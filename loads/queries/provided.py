@@ -22,6 +22,7 @@ from loads.balance.circumstances import PLAIN, Applied
 from loads.balance.declared import read_load
 from loads.balance.trapped import with_trapped
 from loads.queries.current import Current
+from loads.queries.weighing_due import asks_for_weighing, weighing_due
 from records.strict_json import JSON
 
 # What each kind is called in the statement, one version of it or a list.
@@ -50,14 +51,18 @@ def declared_under(document: dict[str, JSON], used: InForce, ruled: Ruled, known
         papers = _papers(used.provisions, declared.outline.flight.operation)
         applied = (_applied(paper, lines) for (_, paper), lines in zip(papers, ruled.lines, strict=True))
         about = replace(about, applied=tuple(applied), unmet=ruled.unmet)
+    if used.provisions.rules is not None:
+        about = replace(about, weighing=weighing_due(used, ruled.basis, declared.outline.flight))
     return declared if about == PLAIN else replace(declared, circumstances=about)
 
 
 def used_of(held: Provisions, declared: Declared) -> tuple[Provision, ...]:
     """This function will return what a load used of what held, in the order of the statement."""
     table = held.standard_weights if declared.standards is not None else None
+    rules = held.rules if declared.circumstances.weighing is not None else None
     papers = _papers(held, declared.outline.flight.operation)
-    return (*((table,) if table is not None else ()), *(row for row, _ in papers))
+    first = tuple(one for one in (table, rules) if one is not None)
+    return (*first, *(row for row, _ in papers))
 
 
 def _papers(held: Provisions, operation: str) -> list[tuple[Provision, Paper]]:
@@ -101,6 +106,8 @@ def provisions_changed(current: Current, now: Provisions) -> tuple[str, ...]:
     changed = []
     if _table_changed(current, used, now):
         changed.append(STANDARD_WEIGHTS)
+    if _rules_changed(current, used, now):
+        changed.append(RULES)
     holds = {row.id: row.kind for row, _ in _papers(now, current.load.operation)}
     for kind, name in _MANY.items():
         before = {one.id for one in used if one.kind == kind}
@@ -136,6 +143,16 @@ def _table_changed(current: Current, used: Sequence[Provision], now: Provisions)
         line["how"] == "standard" or (adds and line["how"] == "declared" and line["group"] == "passengers")
         for line in people
     )
+
+
+def _rules_changed(current: Current, used: Sequence[Provision], now: Provisions) -> bool:
+    """This function will say whether other rules bind this load: those it used were replaced, or there are
+    some now that ask for a weighing.
+    """
+    before = next((one.id for one in used if one.kind == RULES), None)
+    if now.rules is None or now.rules.id == before:
+        return before is not None and now.rules is None
+    return before is not None or asks_for_weighing(now.rules, current.load)
 
 
 def _estimated(declared: Declared) -> bool:

@@ -9,6 +9,7 @@ from zoneinfo import ZoneInfo
 
 from django.utils.safestring import mark_safe
 
+from fleet.applicable import applicable
 from fleet.basis import Axis
 from fleet.models import EmptyWeight, LoadingBasis, Provision
 from fleet.queries.figures import basis_of
@@ -16,11 +17,12 @@ from fleet.queries.provisions import used_provisions
 from loads import acts
 from loads.lifecycle import ways_out
 from loads.manifest.figures import figure
-from loads.manifest.pilot_block import VERDICTS, fuel_block, open_points
+from loads.manifest.pilot_block import VERDICTS, fuel_block, open_points, trim_lines
 from loads.manifest.tables import computation, limits, presented
 from loads.manifest.words import Words
 from loads.models import Load
 from loads.plot import plot
+from loads.plot_across import plot_across
 from loads.queries.answer import signatures_of
 from loads.queries.current import Current
 from loads.queries.declaration import declared_now
@@ -40,7 +42,11 @@ STEP_WORDS = {
     "superseded": "replaced by a revision",
     "withdrawn": "withdrawn",
 }
-SIGNING_ACTS = {"prepared": acts.PREPARE_LOAD.name, "accepted": acts.ACCEPT_LOAD.name}
+SIGNING_ACTS = {
+    "prepared": acts.PREPARE_LOAD.name,
+    "loaded": acts.CONFIRM_LOADING.name,
+    "accepted": acts.ACCEPT_LOAD.name,
+}
 FIGURES = (("take-off", "Take-off"), ("zero fuel", "Zero fuel"), ("landing", "Landing"))
 
 
@@ -117,6 +123,7 @@ def _head(current: Current, zone: ZoneInfo) -> dict[str, Any]:
         "destination": load.destination,
         "operation": load.operation.replace("-", " "),
         "configuration": load.configuration,
+        "category": (current.result().get("certification_category") or {}).get("name", ""),
         "verdict": used.verdict,
         "verdict_words": verdict_words(used.verdict),
         "state": current.state,
@@ -154,6 +161,9 @@ def _figures(page: Page, words: Words) -> list[dict[str, Any]]:
         value = f"{figure(allowable['weight'])} {units['weight']}"
         governed = [f"governed by {words.said(allowable['governed_by'])}"]
         shown.insert(1, {"title": f"Allowable take-off {words.weight}", "value": value, "small": governed})
+    if result.get("trim"):
+        lines = trim_lines(result["trim"])
+        shown.insert(2, {"title": "Take-off trim", "value": lines[0], "small": lines[1:]})
     return [*shown, _fuel(page), _persons(page)]
 
 
@@ -183,8 +193,9 @@ def _plots(current: Current, result: Mapping[str, Any], words: Words) -> list[st
     basis = current.assessment.loading_basis
     if basis is None or not result.get("phases"):
         return []
-    figures = basis_of(basis)
-    drawn = (
+    category = (result.get("certification_category") or {}).get("id")
+    figures = applicable(basis_of(basis), current.load.configuration, category)
+    drawn = [
         plot(
             result,
             figures.envelopes,
@@ -193,7 +204,8 @@ def _plots(current: Current, result: Mapping[str, Any], words: Words) -> list[st
             curtailments=figures.curtailments,
         )
         for axis in AXES
-    )
+    ]
+    drawn.append(plot_across(result, figures.lateral_by_cg))
     return [mark_safe(svg) for svg in drawn if svg]  # noqa: S308  # drawn by our own code, its texts are escaped there
 
 

@@ -13,20 +13,21 @@ from fleet.actions.confirm_password import confirm_password
 from fleet.models import Person
 from loads.actions.accept_load import accept_load
 from loads.actions.assess_again import assess_again
+from loads.actions.confirm_loading import confirm_loading
 from loads.actions.depart_load import depart_load
 from loads.actions.prepare_load import prepare_load
 from loads.actions.self_check import check_when_overdue
 from loads.actions.signing import Signing, refuse_unless_signer
 from loads.actions.stepping import reason_in
 from loads.actions.withdraw_load import withdraw_load
-from loads.acts import ACCEPT_LOAD, PREPARE_LOAD
+from loads.acts import ACCEPT_LOAD, CONFIRM_LOADING, PREPARE_LOAD
 from loads.queries.current import Current
 from loads.web.load import load_answer
 from records.refusal import Fault, Invalid, NotSignedIn, Refused
 from records.web.asking import actor_of, signed_in
 
-_KINDS = {"prepared": PREPARE_LOAD, "accepted": ACCEPT_LOAD}
-_ACTIONS = {"prepared": prepare_load, "accepted": accept_load}
+_KINDS = {"prepared": PREPARE_LOAD, "loaded": CONFIRM_LOADING, "accepted": ACCEPT_LOAD}
+_ACTIONS = {"prepared": prepare_load, "loaded": confirm_loading, "accepted": accept_load}
 
 
 @sensitive_post_parameters("password")
@@ -40,7 +41,7 @@ def sign(request: HttpRequest, load: UUID) -> HttpResponse:
 def _sign(request: HttpRequest, load: UUID) -> Current:
     meaning, actor = request.POST.get("meaning", ""), actor_of(request)
     if meaning not in _ACTIONS:
-        raise Invalid(Fault("/meaning", "choice", "sign as prepared or as accepted"))
+        raise Invalid(Fault("/meaning", "choice", "sign as prepared, as loaded or as accepted"))
     refuse_unless_signer(_KINDS[meaning], actor)
     if not isinstance(request.user, Person):
         raise NotSignedIn("not-signed-in", "Only a person signs.")

@@ -45,7 +45,12 @@ class Loads:
         return self._moved(load, "assessment", None, key)
 
     def sign(
-        self, load: Load | LoadLine, meaning: Literal["prepared", "accepted"], password: str, *, key: str = ""
+        self,
+        load: Load | LoadLine,
+        meaning: Literal["prepared", "loaded", "accepted"],
+        password: str,
+        *,
+        key: str = "",
     ) -> Load:
         """This function will sign the digest that `load` showed. Only a person's token signs, with their
         password; only the pilot in command accepts.
