@@ -43,7 +43,7 @@ def test_take_off_and_landing_are_inside_and_the_moment_the_front_tank_runs_dry_
 
 @pytest.mark.parametrize(("least", "outcome"), [(60, "pass"), (59, "fail")])
 def test_the_path_runs_on_to_the_least_fuel_at_landing(least: int, outcome: str) -> None:
-    # Landing with 240 lb at 2440 lb. On to 60 lb, all from the rear by then: 2260 lb at 226400, that is 100.18
+    # Landing with 240 lb at 2440 lb. On to 60 lb, all from the rear by then: 2260 lb at 226400, so 100.18
     # in. One pound less: 2259 lb at 226260, 100.16 in.
     edge = F(226_400, 2260)
     sloping = envelope((90, 9000), (110, 9000), (110, 2200), (edge, 2200), (edge, 2300), (90, 2300))
