@@ -1,17 +1,19 @@
 """The part of a loading basis that holds for one configuration, in one certification category.
 
-Envelopes and lateral limits may name the configurations and categories they are for. What is left out here
-does not hold; everything else of the basis stays as it is.
+Envelopes, lateral limits and an operator's margins may name the configurations and categories they are for.
+What is left out here does not hold; everything else of the basis stays as it is.
 """
 
 from collections import OrderedDict
 from dataclasses import replace
 
 from fleet.basis import Basis, Envelope, Limits
+from fleet.curtailment import Curtailment
 from fleet.flight_rules import NamedLimits
 from fleet.lateral import LateralByCg
 
 MOST_KEPT = 128
+Applies = Envelope | LateralByCg | Curtailment
 _KEPT: "OrderedDict[tuple[int, str, str], tuple[Basis, Basis]]" = OrderedDict()
 
 
@@ -20,7 +22,7 @@ def applicable(basis: Basis, configuration: str, category: str | None) -> Basis:
 
     The latest ones are kept, so that the same arguments give the very same object.
     """
-    limits: tuple[Envelope | LateralByCg, ...] = (*basis.envelopes, *basis.lateral_by_cg)
+    limits: tuple[Applies, ...] = (*basis.envelopes, *basis.lateral_by_cg, *basis.curtailments)
     if not any(one.configurations or one.categories for one in limits):
         return basis
     key = (id(basis), configuration, category or "")
@@ -31,6 +33,7 @@ def applicable(basis: Basis, configuration: str, category: str | None) -> Basis:
         basis,
         envelopes=tuple(one for one in basis.envelopes if holds_for(one, configuration, category)),
         lateral_by_cg=tuple(one for one in basis.lateral_by_cg if holds_for(one, configuration, category)),
+        curtailments=tuple(one for one in basis.curtailments if holds_for(one, configuration, category)),
     )
     if _lateral(basis) and not _lateral(found):  # limits for others are no page that shows there are none
         found = replace(found, lateral_limits_entered=False)
@@ -44,7 +47,7 @@ def _lateral(basis: Basis) -> bool:
     return bool(basis.lateral_by_cg) or any(one.axis == "lateral" for one in basis.envelopes)
 
 
-def holds_for(limit: Envelope | LateralByCg, configuration: str, category: str | None) -> bool:
+def holds_for(limit: Applies, configuration: str, category: str | None) -> bool:
     """Return whether a limit is for a configuration in a category; without any named it is for all."""
     if limit.configurations and configuration not in limit.configurations:
         return False

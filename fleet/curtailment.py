@@ -72,7 +72,7 @@ class Amounts:
 @dataclass(frozen=True, slots=True)
 class Curtailment:
     """One margin of the operator: what for, at which phases, how much, and its page in the operator's
-    manual.
+    manual. `configurations` and `categories` (of certification) are those it holds for, () for all.
     """
 
     id: str
@@ -80,6 +80,8 @@ class Curtailment:
     phases: tuple[str, ...]
     rows: tuple[Amounts, ...]
     source: Source
+    configurations: tuple[str, ...] = ()
+    categories: tuple[str, ...] = ()
 
     def insets(self, axis: Axis, weight: Fraction) -> tuple[Inset, Inset]:
         """Return what the low and the high edge move by at a weight; where two rows meet, the greater."""

@@ -1,9 +1,12 @@
 """Reads the operator's own margins inside the certified envelopes, and refuses those that leave nothing."""
 
 from collections.abc import Iterable
+from fractions import Fraction
 from typing import Any
 
-from fleet.basis import Axis, Envelope
+from fleet.applicable import holds_for
+from fleet.basis import Axis, Envelope, Phase
+from fleet.basis_reading.applicability import combinations, read_applicability
 from fleet.basis_reading.envelopes import phases_of
 from fleet.basis_reading.findings import Findings
 from fleet.curtailment import Amounts, CurtailedShape, Curtailment, Inset, holding
@@ -46,6 +49,7 @@ def _curtailment(findings: Findings, at: str, entry: dict[str, Any]) -> Curtailm
         phases=phases_of(entry["phases"]),
         rows=tuple(rows),
         source=findings.source(entry["source"]),
+        **read_applicability(findings, at, entry),
     )
 
 
@@ -104,24 +108,39 @@ def _demand_something_left(
     told: set[tuple[str, str]] = set()
     for envelope in envelopes:
         for phase in envelope.phases:
-            held = holding((each for _, each in entered), phase, envelope.axis)
-            if not held:
-                continue
-            shape = CurtailedShape(envelope.shape, held, envelope.axis)
-            for weights in shape.used_up():
-                largest = max(held, key=lambda each: _amount(each, envelope.axis, weights))
-                at = pointers[largest.id]
-                if (at, envelope.id) not in told:
-                    told.add((at, envelope.id))
-                    findings.fault(
-                        f"{at}/amounts", "curtailment-too-large", _words(findings, envelope, phase, weights)
-                    )
+            for held in _held_together(findings, entered, envelope, phase):
+                for weights in CurtailedShape(envelope.shape, held, envelope.axis).used_up():
+                    at = pointers[_largest(held, envelope.axis, weights).id]
+                    if (at, envelope.id) not in told:
+                        told.add((at, envelope.id))
+                        words = _words(findings, envelope, phase, weights)
+                        findings.fault(f"{at}/amounts", "curtailment-too-large", words)
 
 
-def _amount(each: Curtailment, axis: Axis, weights: Stretch) -> Any:
+def _held_together(
+    findings: Findings, entered: list[Entered], envelope: Envelope, phase: Phase
+) -> list[tuple[Curtailment, ...]]:
+    """Return what holds at once in each configuration and category the envelope is for, without repeats."""
+    own = {"configurations": envelope.configurations, "categories": envelope.categories}
+    found = {}
+    for configuration, category in sorted(combinations(findings, own)):
+        held = holding(
+            (each for _, each in entered if holds_for(each, configuration, category or None)),
+            phase,
+            envelope.axis,
+        )
+        found[tuple(each.id for each in held)] = held
+    return [held for held in found.values() if held]
+
+
+def _largest(held: tuple[Curtailment, ...], axis: Axis, weights: Stretch) -> Curtailment:
     middle = (weights[0] + weights[1]) / 2
-    low, high = each.insets(axis, middle)
-    return low.at(middle) + high.at(middle)
+
+    def amount(each: Curtailment) -> Fraction:
+        low, high = each.insets(axis, middle)
+        return low.at(middle) + high.at(middle)
+
+    return max(held, key=amount)
 
 
 def _words(findings: Findings, envelope: Envelope, phase: str, weights: Stretch) -> str:

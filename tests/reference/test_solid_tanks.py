@@ -20,7 +20,7 @@ trimesh: Any = pytest.importorskip("trimesh", reason="the geometry library is a 
 GALLON = 231
 F = Fraction
 DOUBLES = 1e-9  # relative: what surface integrals in doubles may be off
-# Inches of arm, at its share of the full tank: what twelve points leave between two of them (0.010 and 0.031).
+# Inches of arm, at their share of the full tank: what twelve points leave between two (0.010 and 0.031).
 BETWEEN_POINTS = {"arm": 0.02, "moment": 0.04}
 QUADS = {
     "bottom": (0, 3, 2, 1),

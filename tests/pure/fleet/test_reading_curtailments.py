@@ -126,6 +126,19 @@ def test_form_is_judged_before_anything_is_read():
     }
 
 
+def test_margins_of_different_configurations_are_not_counted_together():
+    """Each leaves something; both at once would not, but they never hold at once."""
+    first, second = (entry["id"] for entry in basis_document("twin")["configurations"][:2])
+    wide = [{"forward": {"value": "6", "unit": "in"}}]
+    one = margin(amounts=wide, configurations=[first])
+    other = margin(id="FREIGHT", amounts=wide, configurations=[second])
+
+    assert len(read_basis(twin(one, other)).curtailments) == 2
+    assert refused(one, other | {"configurations": ["attic"]}) >= {
+        ("/curtailments/1/configurations/0", "unknown-id")
+    }
+
+
 def test_rows_may_meet_at_one_weight_and_an_id_is_used_once():
     rows = [
         {"to": {"value": 6000, "unit": "lb"}, "aft": {"value": 1, "unit": "in"}},

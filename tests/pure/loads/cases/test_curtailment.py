@@ -14,7 +14,7 @@ from hypothesis import strategies as st
 from fleet.curtailment import Amounts, Curtailment, Inset
 from fleet.sourced import Source
 from loads.balance.assess import assess
-from tests.pure.loads.making import envelope, result_of, twin, twin_empty
+from tests.pure.loads.making import envelope, load, result_of, twin, twin_empty
 from tests.pure.loads.naive_path import points_along
 from tests.pure.loads.test_path_against_sampling import DECLARED, DRY, envelopes, flights
 
@@ -119,6 +119,15 @@ def test_a_margin_for_landing_does_not_bind_at_take_off():
 
     assert result.check("cg.take-off").curtailed is None
     assert result.check("cg.landing").curtailed is not None
+
+
+def test_a_margin_for_seating_holds_only_in_the_configurations_it_names():
+    """The freight fit carries nobody in the cabin, so the operator keeps no margin for seats there."""
+    seating = replace(margin(aft=Inset(arm=F(1))), configurations=("six-seat",))
+    freight = load(configuration="freight", passengers=[], persons_on_board=1)
+
+    assert result_of(basis=curtailed(seating)).check("cg.take-off").curtailed is not None
+    assert result_of(freight, curtailed(seating)).check("cg.take-off").curtailed is None
 
 
 def test_a_basis_without_curtailments_answers_as_before():
