@@ -11,11 +11,13 @@ import hashlib
 import json
 from collections.abc import Iterable
 from dataclasses import dataclass
+from operator import ne
 
 SCHEMA = "tarebook.entry/1"
 # RFC 6962 section 2.1: MTH({d(0)}) = SHA-256(0x00 || d(0)). The prefix keeps an entry from passing for a
 # node.
 _LEAF = b"\x00"
+_CHANGES = ',"changes":['
 
 
 @dataclass(frozen=True, slots=True)
@@ -95,6 +97,64 @@ def follow_one(link: Link, head: Head) -> Head:
     return Head(link.chain, link.position, link.digest)
 
 
+def follow_rows(rows: Iterable[tuple[int, str | None, str, str]], head: Head) -> tuple[Head, Finding | None]:
+    """This function will follow a chain from `head` on through rows of (position, previous, digest, entry),
+    and return how far it holds and what does not, None when all of it does.
+
+    It finds what `follow` finds, in half the time: of an entry in the very form of the seal the first values
+    are compared as text and the rest is read in two pieces. Any other is followed step by step.
+    """
+    chain, place, before, form = head.chain, head.position, head.digest, _SealsForm(head.chain)
+    for position, previous, digest, entry in rows:
+        if not (
+            position == place + 1
+            and previous == before
+            and digest == hashlib.sha256(_LEAF + entry.encode()).hexdigest()
+            and form.has(entry, position, previous)
+        ):
+            try:
+                follow_one(Link(chain, position, previous, digest, entry), Head(chain, place, before))
+            except ChainBroken as at:
+                where = f"chain {at.chain}, entry {at.position}"
+                finding = Finding(where, at.what, str(at.expected), str(at.found))
+                return Head(chain, place, before), finding
+        place, before = position, digest
+    return Head(chain, place, before), None
+
+
+class _SealsForm:
+    """Judges whether entries of one chain stand in the form in which the seal writes them: six names in their
+    order, nothing between them, the first four with the wanted values.
+
+    The reader hands over each object inside as its pairs, so that a name that stands twice is seen; what is
+    done with them takes no step of ours for each.
+    """
+
+    def __init__(self, chain: str) -> None:
+        self._opening = f'{{"schema":"{SCHEMA}","chain":{json.dumps(chain, ensure_ascii=False)},"position":'
+        self._objects: list[list[tuple[str, object]]] = []
+        self._read = json.JSONDecoder(object_pairs_hook=self._objects.append).scan_once
+
+    def has(self, entry: str, position: int, previous: str | None) -> bool:
+        """This function will say whether the entry is of that form and reads as sound JSON in which no name
+        stands twice in one object; of one that is not it says nothing more.
+        """
+        link = f'"{previous}"' if previous is not None else "null"
+        beginning = f'{self._opening}{position},"previous":{link},"act":'
+        if not entry.startswith(beginning):
+            return False
+        objects = self._objects
+        objects.clear()
+        try:
+            end = self._read(entry, len(beginning))[1]
+            if not entry.startswith(_CHANGES, end):
+                return False
+            end = self._read(entry, end + len(_CHANGES) - 1)[1]
+        except (ValueError, StopIteration, RecursionError):
+            return False
+        return entry[end:] == "}" and not any(map(ne, map(len, map(dict, objects)), map(len, objects)))
+
+
 def _same(chain: str, position: int, what: str, expected: object, found: object) -> None:
     # A whole number is not a true or false, whatever Python says.
     if expected != found or type(expected) is not type(found):
@@ -104,7 +164,7 @@ def _same(chain: str, position: int, what: str, expected: object, found: object)
 def _read(link: Link, place: int) -> dict[str, object]:
     try:
         inside = _READER.decode(link.entry)
-    except ValueError as problem:
+    except (ValueError, RecursionError) as problem:
         raise ChainBroken(link.chain, place, "the entry", "a JSON object", str(problem)) from problem
     if not isinstance(inside, dict):
         raise ChainBroken(link.chain, place, "the entry", "a JSON object", type(inside).__name__)

@@ -27,19 +27,46 @@ def entries(count: int) -> Iterator[tuple[str, int, str, str | None, str, str]]:
     previous = None
     for position in range(1, count + 1):
         act = f"01a20000-0000-7000-8000-{position:012x}"
-        text = json.dumps(
-            {
-                "schema": SCHEMA,
-                "chain": CHAIN,
-                "position": position,
-                "previous": previous,
-                "act": {"id": act, "kind": "submit-load", "actor": "person:7", "about": f"load:{act}"},
-                "changes": [{"table": "loads_load", "row": act, "digest": "0" * 64, "operation": "insert"}],
-            }
-        )
+        head = {"schema": SCHEMA, "chain": CHAIN, "position": position, "previous": previous}
+        text = _written(head | {"act": _act(act), "changes": []}).removesuffix("]}") + _change(act) + "]}"
         digest = entry_digest(text)
         yield CHAIN, position, act, previous, digest, text
         previous = digest
+
+
+def _act(number: str) -> dict[str, object]:
+    return {
+        "id": number,
+        "at": "2026-12-01T12:00:00.000000Z",
+        "kind": "withdraw-load",
+        "actor": {"kind": "person", "key": "person:7", "name": f"sha256:{'0' * 64}", "capacity": "pilot"},
+        "about": f"load:{number}",
+        "reason": "not flown",
+        "caused_by": None,
+        "request": number,
+    }
+
+
+def _change(number: str) -> str:
+    """This function will write the change of one step, its image spaced as the database spaces it."""
+    image = {
+        "id": 7,
+        "at": "2026-12-01T12:00:00+00:00",
+        "act": number,
+        "after": "withdrawn",
+        "before": "open",
+        "number": 2,
+        "reason": "not flown",
+        "load_id": number,
+        "operator_id": CHAIN,
+        "assessment_id": number,
+    }
+    change = {"table": "loads_step", "key": number, "operation": "insert"}
+    return f'{_written(change)[:-1]},"image":{json.dumps(image)}}}'
+
+
+def _written(document: dict[str, object]) -> str:
+    return json.dumps(document, separators=(",", ":"))
 
 
 def put_in(count: int) -> None:

@@ -1,0 +1,164 @@
+"""Following rows finds what following links finds: the quick way is held to the plain one, entry by entry."""
+
+import json
+
+import pytest
+from hypothesis import given
+from hypothesis import strategies as st
+
+import records.chain
+from records.chain import ChainBroken, Finding, Head, Link, entry_digest, follow, follow_rows
+
+ACT = (
+    '{"id":"1","at":"2026-12-01T12:00:00.000000Z","kind":"x","actor":{"kind":"person","key":"person:7"},'
+    '"reason":"a \\"word\\": {}"}'
+)
+CHANGE = (
+    '{"table":"t","key":"1","operation":"insert","image":{"id": 1, "what": "a, \\\\\\": b", "n": [{"a": 1}]}}'
+)
+Row = tuple[int, str | None, str, str]
+
+
+def sealed(position: int, previous: str | None, *, act: str = ACT, changes: str = CHANGE) -> Row:
+    """An entry in the seal's own form, with its digest."""
+    link = f'"{previous}"' if previous else "null"
+    entry = (
+        f'{{"schema":"tarebook.entry/1","chain":"kt","position":{position},"previous":{link},'
+        f'"act":{act},"changes":[{changes}]}}'
+    )
+    return position, previous, entry_digest(entry), entry
+
+
+def rows_of(length: int) -> list[Row]:
+    rows: list[Row] = []
+    for position in range(1, length + 1):
+        rows.append(sealed(position, rows[-1][2] if rows else None))
+    return rows
+
+
+def with_entry(row: Row, entry: str) -> Row:
+    """The row with another entry and a digest that fits it."""
+    return row[0], row[1], entry_digest(entry), entry
+
+
+def plainly(rows: list[Row]) -> tuple[int, Finding | None]:
+    """What the plain way finds: how many links hold, and what does not."""
+    links = [Link("kt", *row) for row in rows]
+    try:
+        return follow(links, Head("kt")).position, None
+    except ChainBroken as at:
+        where = f"chain {at.chain}, entry {at.position}"
+        return at.position - 1, Finding(where, at.what, str(at.expected), str(at.found))
+
+
+def both(rows: list[Row]) -> tuple[int, Finding | None]:
+    head, finding = follow_rows(rows, Head("kt"))
+    assert (head.position, finding) == plainly(rows)
+    return head.position, finding
+
+
+def test_rows_that_hold_are_followed_to_their_end() -> None:
+    rows = rows_of(5)
+
+    assert both(rows) == (5, None)
+    assert follow_rows(rows[3:], Head("kt", 3, rows[2][2])) == (Head("kt", 5, rows[4][2]), None)
+    assert follow_rows([], Head("kt")) == (Head("kt"), None)
+
+
+def test_entries_in_the_seals_form_are_not_followed_step_by_step(monkeypatch) -> None:
+    def never(*_: object) -> None:
+        raise AssertionError("the plain way was taken")
+
+    monkeypatch.setattr(records.chain, "follow_one", never)
+
+    assert follow_rows(rows_of(4), Head("kt"))[0].position == 4
+
+
+ENTRY = rows_of(3)[1][3]
+REST = ENTRY.partition(',"act":')[2]
+CHANGES = f'"changes":[{CHANGE}]'
+BENT = {
+    "a name twice in the act": ENTRY.replace('"kind":"x"', '"kind":"x","kind":"y"'),
+    "a name twice in an image": ENTRY.replace('"id": 1,', '"id": 1, "id": 2,'),
+    "a name twice deep inside": ENTRY.replace('{"a": 1}', '{"a": 1, "a": 1}'),
+    "the place once more at the end": ENTRY[:-1] + ',"position":9}',
+    "the place once more in front of the act": ENTRY.replace('"act":', '"position":2,"act":', 1),
+    "another place": ENTRY.replace('"position":2', '"position":3'),
+    "the place as a text": ENTRY.replace('"position":2', '"position":"2"'),
+    "the place as a fraction": ENTRY.replace('"position":2', '"position":2.0'),
+    "another chain": ENTRY.replace('"chain":"kt"', '"chain":"zz"'),
+    "another schema": ENTRY.replace("entry/1", "entry/2"),
+    "no act": ENTRY.partition('"act":')[0] + CHANGES + "}",
+    "an act and nothing": ENTRY.partition('"act":')[0][:-1] + ",}",
+    "cut short": ENTRY[:-1],
+    "something behind": ENTRY + " ",
+    "something else behind": ENTRY + "x",
+    "an object behind": ENTRY + "{}",
+    "a bracket too many": ENTRY[:-1] + "]}",
+    "spaces": json.dumps(json.loads(ENTRY)),
+    "spaces before colons": json.dumps(json.loads(ENTRY), separators=(", ", " : ")),
+    "other names in another order": json.dumps(dict(reversed(json.loads(ENTRY).items()))),
+    "a raw line break in a text": ENTRY.replace('"kind":"x"', '"kind":"\n"'),
+    "a list": "[]",
+    "nothing": "",
+    "nested beyond all sense": ENTRY.replace('{"a": 1}', "[" * 100_000 + "]" * 100_000),
+    "changes that are none": ENTRY.replace(CHANGES, '"changes":[1,2]'),
+    "the changes once more": ENTRY[:-1] + f",{CHANGES}}}",
+}
+
+
+@pytest.mark.parametrize("entry", BENT.values(), ids=BENT.keys())
+def test_a_bent_entry_is_found_as_the_plain_way_finds_it(entry: str) -> None:
+    rows = rows_of(3)
+    rows[1] = with_entry(rows[1], entry)
+    rows[2] = sealed(3, rows[1][2])
+
+    both(rows)
+
+
+def test_what_is_bent_beyond_reading_is_named() -> None:
+    rows = rows_of(3)
+    rows[1] = with_entry(rows[1], BENT["a name twice in an image"])
+
+    position, finding = both(rows)
+
+    assert position == 1
+    assert finding is not None
+    assert finding.where == "chain kt, entry 2"
+    assert "twice" in finding.found
+
+
+@pytest.mark.parametrize(
+    ("bend", "what"),
+    [
+        (lambda rows: rows.pop(2), "the place in the chain"),
+        (lambda rows: rows.insert(2, rows[2]), "the place in the chain"),
+        (lambda rows: rows.__setitem__(2, (3, "0" * 64, *rows[2][2:])), "the link to the entry before"),
+        (lambda rows: rows.__setitem__(2, (3, None, *rows[2][2:])), "the link to the entry before"),
+        (lambda rows: rows.__setitem__(2, (*rows[2][:2], "0" * 64, rows[2][3])), "the digest of the stored"),
+        (lambda rows: rows.__setitem__(2, (*rows[2][:3], rows[2][3] + " ")), "the digest of the stored"),
+        (lambda rows: rows.__setitem__(2, sealed(3, "0" * 64)), "the link to the entry before"),
+    ],
+)
+def test_rows_out_of_place_are_named_where_they_stand(bend, what: str) -> None:
+    rows = rows_of(5)
+    bend(rows)
+
+    position, finding = both(rows)
+
+    assert position == 2 or what == "the place in the chain"
+    assert finding is not None
+    assert finding.what.startswith(what)
+
+
+@given(st.data())
+def test_any_entry_altered_anywhere_is_judged_alike(data: st.DataObject) -> None:
+    rows = rows_of(3)
+    entry = rows[1][3]
+    place = data.draw(st.integers(0, len(entry)))
+    cut = data.draw(st.integers(0, 12))
+    put = data.draw(st.text(alphabet='"{}[],: \\1a\n', max_size=12) | st.sampled_from([entry, ACT, CHANGE]))
+    rows[1] = with_entry(rows[1], entry[:place] + put + entry[place + cut :])
+    rows[2] = sealed(3, rows[1][2])
+
+    both(rows)
