@@ -133,7 +133,7 @@ class _SealsForm:
     def __init__(self, chain: str) -> None:
         self._opening = f'{{"schema":"{SCHEMA}","chain":{json.dumps(chain, ensure_ascii=False)},"position":'
         self._objects: list[list[tuple[str, object]]] = []
-        self._read = json.JSONDecoder(object_pairs_hook=self._objects.append).scan_once
+        self._read = json.JSONDecoder(object_pairs_hook=self._objects.append).raw_decode
 
     def has(self, entry: str, position: int, previous: str | None) -> bool:
         """This function will say whether the entry is of that form and reads as sound JSON in which no name
@@ -150,7 +150,7 @@ class _SealsForm:
             if not entry.startswith(_CHANGES, end):
                 return False
             end = self._read(entry, end + len(_CHANGES) - 1)[1]
-        except (ValueError, StopIteration, RecursionError):
+        except (ValueError, RecursionError):
             return False
         return entry[end:] == "}" and not any(map(ne, map(len, map(dict, objects)), map(len, objects)))
 

@@ -99,7 +99,7 @@ def flights_without_manifest(operator: str, since: datetime, until: datetime) ->
 
 def numbers_of(operator: str) -> Numbers:
     """This function will return the manifest numbers of the operator and look for gaps in the newest."""
-    asked = {"operator": operator, "most": NEWEST}
+    asked: dict[str, str | int] = {"operator": operator, "most": NEWEST}
     with connection.cursor() as cursor:
         cursor.execute(_NUMBERS, asked)
         first, last, newest, filed = cursor.fetchone()

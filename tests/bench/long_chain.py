@@ -11,7 +11,7 @@ import hashlib
 import json
 import sys
 import time
-from collections.abc import Iterator
+from collections.abc import Iterator, Mapping
 
 from tests.bench.ground import database
 
@@ -65,7 +65,7 @@ def _change(number: str) -> str:
     return f'{_written(change)[:-1]},"image":{json.dumps(image)}}}'
 
 
-def _written(document: dict[str, object]) -> str:
+def _written(document: Mapping[str, object]) -> str:
     return json.dumps(document, separators=(",", ":"))
 
 
