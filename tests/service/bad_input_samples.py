@@ -49,6 +49,7 @@ def _loading_bases(_world: World) -> Documents:
     }
     full["tanks"][0] |= {"table": by_weight, "source": _source("6-14")}
     full["envelopes"][0]["source"] = _source("2-5")
+    _state_stations(full)
     cabin = {"weight": q("31", "lb"), "arm": q("150", "in"), "lateral_arm": q("0", "in")}
     full["configurations"][0] |= {
         "equipment": [{"what": "cabin divider", **cabin}],
@@ -72,11 +73,58 @@ def _loading_bases(_world: World) -> Documents:
     return full, spare
 
 
+def _state_stations(basis: dict[str, Any]) -> None:
+    """Put all that may be stated of seats and places into a basis."""
+
+    def most(value: str, unit: str) -> dict[str, Any]:
+        return {**q(value, unit), "source": _source("6-11")}
+
+    conditional = [{"when": ["NET"], "maximum": most("150", "lb")}]
+    basis["seats"][2] |= {
+        "row": "1",
+        "exit_row": False,
+        "infant_restraint": True,
+        "attendant": False,
+        "conditional": conditional,
+        "rail": {
+            "forward": q("135", "in"),
+            "aft": q("142", "in"),
+            "settings": [{"setting": "A", "arm": q("136", "in")}],
+            "source": _source("6-9"),
+        },
+    }
+    basis["places"][1] |= {
+        "conditional": conditional,
+        "floor": {
+            "runs": "along",
+            "per_area": most("50", "lb/ft2"),
+            "per_length": most("100", "lb/ft"),
+            "length": q("48", "in"),
+            "no_footprint": {"up_to": q("25", "lb"), "kinds": ["baggage"], "source": _source("6-11")},
+        },
+    }
+    basis["zones"][0]["conditional"] = conditional
+    basis["conditions"] = [{"id": "NET", "name": "net fitted", "source": _source("6-11")}]
+    step = {"name": "aft hold", "members": ["AFT-HOLD"], "maximum": most("300", "lb")}
+    basis["cumulative"] = [{"id": "TAIL", "name": "cabin floor", "from": "tail", "steps": [step]}]
+
+
 def _empty_weights(_world: World) -> Documents:
     arms = empty_weight_document(arm=q("122.94", "in"), lateral_arm=q("-0.17", "in"))
     for part in ("moment", "lateral_moment"):
         del arms[part]
     return empty_weight_document(), arms
+
+
+def _standing() -> dict[str, Any]:
+    """What an item may stand on, all of it."""
+    sides = {"length": q("24", "in"), "width": q("18", "in"), "lies": "along"}
+    return {
+        "footprint": {**sides, "feet_lengthwise": 1, "feet_widthwise": 1},
+        "pallet": {"weight": q("12", "lb"), **sides},
+        "net": {"weight": q("3", "lb")},
+        "spreader": {"weight": q("9", "lb"), **sides},
+    }
 
 
 def load_with_everything(world: World) -> dict[str, Any]:
@@ -85,7 +133,9 @@ def load_with_everything(world: World) -> dict[str, Any]:
     document["crew"][0]["category"] = "adult"
     infant = {"name": "B. Osei", "weight": q("18", "lb"), "how": "declared"}
     document["passengers"][0] |= {"category": "adult", "lap_infant": infant}
-    document["items"][0]["removed"] = False
+    document["passengers"][0]["restraint"] = q("9", "lb")
+    document["items"][0] |= {"removed": False, **_standing()}
+    document |= {"conditions": [], "seat_settings": []}  # the ready twin has none to name
     document["fuel"]["not_usable"] = {"LEFT": q("1", "US gal")}
     return document
 
@@ -96,7 +146,13 @@ def late_lines() -> dict[str, Any]:
     on = {"name": "U. Pell", "seat": "ROW2-L", "weight": q("90", "lb"), "how": "declared"}
     return change_of(
         {"change": "passenger-off", "seat": "ROW1-L"},
-        {"change": "passenger-on", **on, "category": "adult", "lap_infant": infant},
+        {
+            "change": "passenger-on",
+            **on,
+            "category": "adult",
+            "lap_infant": infant,
+            "restraint": q("9", "lb"),
+        },
         {"change": "item-off", "what": "checked bags", "place": "AFT-HOLD", "weight": q("10", "lb")},
         {
             "change": "item-on",
@@ -105,6 +161,7 @@ def late_lines() -> dict[str, Any]:
             "place": "NOSE-HOLD",
             "weight": q("12", "lb"),
             "how": "weighed",
+            "footprint": _standing()["footprint"],
         },
         {"change": "fuel-on", "tank": "LEFT", "quantity": q("1", "US gal")},
         {"change": "fuel-off", "tank": "RIGHT", "quantity": q("1", "US gal")},
