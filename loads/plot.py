@@ -88,8 +88,8 @@ def plot(
     x, y = Scale.around(across, frame.left, frame.right), Scale.around(up, frame.bottom, frame.top)
     unit = units["moment" if plane == "moment" else "length"]
     parts = [
-        *_grid(x, y, frame, sided=axis == "lateral"),
-        *_titles(frame, f"{NAMES[axis, plane]}, {unit}", f"{weight_word}, {units['weight']}"),
+        *grid(x, y, frame, sided=axis == "lateral"),
+        *titles(frame, f"{NAMES[axis, plane]}, {unit}", f"{weight_word}, {units['weight']}"),
         *(_curve(envelope, number, x, y) for number, envelope in enumerate(shown)),
         *(drawn_outline(outline, x, y) for outline in inside),
         *(line((frame.left, y.at(v)), (frame.right, y.at(v)), stroke_dasharray="4 2") for v in limits),
@@ -131,7 +131,8 @@ def _weight_limits(checks: Iterable[Mapping[str, Any]], unit: str) -> dict[float
     return {v: broken(f"{', '.join(phases)} limit {short(v)} {unit}") for v, phases in named.items()}
 
 
-def _grid(x: Scale, y: Scale, frame: Frame, *, sided: bool) -> list[str]:
+def grid(x: Scale, y: Scale, frame: Frame, *, sided: bool, sided_up: bool = False) -> list[str]:
+    """This function will return the frame with its lines; figures of a sided axis are written L and R."""
     parts = []
     for value in ticks(x):
         at = x.at(value)
@@ -143,7 +144,7 @@ def _grid(x: Scale, y: Scale, frame: Frame, *, sided: bool) -> list[str]:
         at = y.at(value)
         parts += [
             line((frame.left, at), (frame.right, at), stroke="#ccc"),
-            label(_tick(value), (frame.left - 4, at + 3), text_anchor="end"),
+            label(_tick(value, sided=sided_up), (frame.left - 4, at + 3), text_anchor="end"),
         ]
     edge = element(
         "rect",
@@ -167,7 +168,8 @@ def _tick(value: float, *, sided: bool = False) -> str:
     return f"{side}{whole}.{part}" if part else f"{side}{whole}"
 
 
-def _titles(frame: Frame, across: str, up: str) -> list[str]:
+def titles(frame: Frame, across: str, up: str) -> list[str]:
+    """This function will return the titles of both axes."""
     middle, height = (frame.left + frame.right) / 2, (frame.top + frame.bottom) / 2
     turned = f"translate(10 {short(height)}) rotate(-90)"
     return [

@@ -9,9 +9,13 @@ from django.urls import reverse
 
 from fleet import acts
 from fleet.models import Aircraft, EmptyWeight, LoadingBasis
+from fleet.queries.falling_due import Due, falling_due
 from fleet.queries.history import VersionHistory, empty_weight_history, loading_basis_history
 from fleet.queries.in_force import basis_in_force, empty_weights_in_force
+from fleet.queries.provisions import provisions_at
 from fleet.web.positions_shown import position_rows
+from fleet.web.rules_shown import rule_rows
+from fleet.web.shown_provisions import paper_shown
 from fleet.web.stations_shown import limit_row, station_rows
 from records.actor import Actor
 
@@ -61,6 +65,8 @@ def aircraft_page(aircraft: Aircraft, now: datetime, actor: Actor) -> dict[str, 
         "aircraft": aircraft,
         "figures": figures,
         "limits": _limits(basis),
+        "papers": _papers(aircraft, now),
+        "due": [_due(one, zone, now) for one in falling_due(aircraft, now)],
         "stations": _stations(basis),
         "kinds": [
             {
@@ -80,6 +86,24 @@ def aircraft_page(aircraft: Aircraft, now: datetime, actor: Actor) -> dict[str, 
                 ],
             },
         ],
+    }
+
+
+def _papers(aircraft: Aircraft, now: datetime) -> list[dict[str, str]]:
+    held = provisions_at(aircraft.operator_id, aircraft, now, now)
+    return [paper_shown(one) for one in (*held.permits, *held.restrictions)]
+
+
+def _due(one: Due, zone: ZoneInfo, now: datetime) -> dict[str, Any]:
+    """This function will say what lapses when, and how long that still is; half a day is not rounded up."""
+    days = (one.lapses - now).days
+    left = "past due" if one.lapses <= now else f"{days} day{'' if days == 1 else 's'}"
+    return {
+        "what": one.what,
+        "good_until": _local(one.lapses, zone),
+        "left": left,
+        "past": one.lapses <= now,
+        "source": one.source,
     }
 
 
@@ -121,7 +145,7 @@ def _limits(basis: LoadingBasis | None) -> list[dict[str, str]]:
         return []
     document = json.loads(basis.document)
     rows = [limit_row(document, title, document["limits"].get(name)) for name, title in LIMIT_TITLES]
-    return [*rows, *position_rows(document)]
+    return [*rows, *rule_rows(document), *position_rows(document)]
 
 
 def _stations(basis: LoadingBasis | None) -> list[dict[str, str]]:

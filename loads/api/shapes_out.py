@@ -56,6 +56,29 @@ class Check(serializers.Serializer[object]):
     )
 
 
+class CategoryFlown(serializers.Serializer[object]):
+    """The certification category of the load, where the basis has any."""
+
+    id = serializers.CharField()
+    name = serializers.CharField()
+
+
+class TrimSetting(serializers.Serializer[object]):
+    """The take-off trim setting for one flap setting (null: for any); a setting of null is off the table."""
+
+    flap = serializers.CharField(allow_null=True)
+    setting = serializers.CharField(allow_null=True)
+    why = serializers.CharField(allow_blank=True)
+    source = serializers.CharField()  # type: ignore[assignment]  # DRF takes fields out of the class
+
+
+class TrimFound(serializers.Serializer[object]):
+    """The take-off trim setting from the table of the basis, rounded to the manual's step."""
+
+    unit = serializers.CharField()
+    settings = TrimSetting(many=True)
+
+
 class ComputedAnswer(serializers.Serializer[object]):
     """A load computed: every phase, every limit with its margin, and the sum line by line."""
 
@@ -77,6 +100,8 @@ class ComputedAnswer(serializers.Serializer[object]):
         help_text="the events of a load that states some: number, when, and what happens in words",
     )
     operating_weight = serializers.DictField(allow_null=True)
+    certification_category = CategoryFlown(required=False)
+    trim = TrimFound(allow_null=True, required=False, help_text="only where the basis has a trim table")
     persons = serializers.DictField(allow_null=True)
     advisories = serializers.ListField(child=serializers.CharField())
     not_assessed = serializers.ListField(child=serializers.CharField())

@@ -9,6 +9,7 @@ from typing import Any, Literal, Protocol
 
 from fleet.basis import Chord, Envelope
 from fleet.curtailment import Curtailment
+from fleet.lateral import LateralByCg
 
 RuleSet = Literal["US", "EU-UK"]
 
@@ -62,9 +63,10 @@ class BasisFacts:
     digest: str
     known_from: datetime | None
     document: Mapping[str, Any]
-    envelopes: tuple[Envelope, ...]
+    envelopes: tuple[Envelope, ...]  # those that hold for the load's configuration and category
     chord: Chord | None
     curtailments: tuple[Curtailment, ...] = ()
+    lateral_by_cg: tuple[LateralByCg, ...] = ()
 
 
 @dataclass(frozen=True, slots=True)

@@ -1,9 +1,12 @@
 """Gathers what a manifest says from the rows of an accepted load. Nothing that can still change is read."""
 
 import json
+from collections.abc import Mapping
 from datetime import datetime
+from typing import Any
 from uuid import UUID
 
+from fleet.applicable import applicable
 from fleet.models import Aircraft, EmptyWeight, LoadingBasis, Operator, Provision
 from fleet.queries.figures import basis_of
 from fleet.queries.provisions import used_provisions
@@ -66,7 +69,7 @@ def facts_of(paper: Paper, change: LateChange | None = None) -> Facts:
         number=paper.number,
         inputs=json.loads(canonical(declared)),
         result=current.result(),
-        basis=_basis(used.loading_basis),
+        basis=_basis(used.loading_basis, current.result(), load.configuration),
         empty_weight=_empty_weight(used.empty_weight),
         engine=used.engine,
         signatures=_signatures(load, used),
@@ -113,8 +116,9 @@ def _aircraft(row: Aircraft) -> AircraftFacts:
     return AircraftFacts(row.registration, row.serial_number, row.type, row.category, row.engines)
 
 
-def _basis(row: LoadingBasis) -> BasisFacts:
-    figures = basis_of(row)
+def _basis(row: LoadingBasis, result: Mapping[str, Any], configuration: str) -> BasisFacts:
+    category = (result.get("certification_category") or {}).get("id")
+    figures = applicable(basis_of(row), configuration, category)
     document = json.loads(row.document)
     return BasisFacts(
         row.revision,
@@ -124,6 +128,7 @@ def _basis(row: LoadingBasis) -> BasisFacts:
         figures.envelopes,
         figures.chord,
         figures.curtailments,
+        figures.lateral_by_cg,
     )
 
 

@@ -36,6 +36,7 @@ def flight_block(facts: Facts) -> Block:
         "operation": flight["operation"],
         "pilot": _pilot(facts.inputs),
         "configuration": facts.inputs["configuration"],
+        "category": (facts.result.get("certification_category") or {}).get("name", ""),
     }
 
 
@@ -167,11 +168,23 @@ def _chord_limits(facts: Facts, cg: Mapping[str, Any]) -> str:
 
 
 def _trim(facts: Facts) -> str:
+    found = facts.result.get("trim")
+    if found is not None:
+        return "; ".join(trim_lines(found))
     trim = facts.basis.document.get("trim")
     if isinstance(trim, Mapping) and trim.get("none"):
         page = trim.get("source", {}).get("page", "")
         return f"none in the approved data{f' (p. {page})' if page else ''}"
     return "not in the loading basis"
+
+
+def trim_lines(trim: Mapping[str, Any]) -> list[str]:
+    """This function will return the trim setting, a line for each flap setting: `flaps 10: 4.5 units`."""
+    found = []
+    for one in trim["settings"]:
+        said = f"{figure(one['setting'])} {trim['unit']}" if one["setting"] else one["why"]
+        found.append(f"flaps {one['flap']}: {said}" if one["flap"] else said)
+    return found
 
 
 def _beside(weight: str, check: Mapping[str, Any]) -> Block:

@@ -9,6 +9,7 @@ from loads.manifest.facts import Facts
 from loads.manifest.figures import both_clocks
 from loads.manifest.words import SINGLE_ENGINE_US, WORDS, Words
 from loads.plot import Frame, plot
+from loads.plot_across import plot_across
 
 # Height of one plot, by paper and by whether there are two of them, so that the first page holds them.
 HEIGHTS = {("Letter", False): 300.0, ("A4", False): 340.0, ("Letter", True): 183.0, ("A4", True): 215.0}
@@ -79,22 +80,27 @@ def title_of(facts: Facts) -> str:
 
 
 def _plots(facts: Facts, words: Words) -> list[str]:
-    """The longitudinal plot, and a lateral one beside it where the basis has a lateral envelope."""
-    lateral = any(envelope.axis == "lateral" for envelope in facts.basis.envelopes)
-    height = HEIGHTS[words.paper, lateral] - _height_of_changes(facts)
+    """The longitudinal plot, and beside it one for each kind of lateral limit the basis has."""
+    basis = facts.basis
+    lateral = any(envelope.axis == "lateral" for envelope in basis.envelopes)
+    beside = lateral or bool(basis.lateral_by_cg)
+    height = HEIGHTS[words.paper, beside] - _height_of_changes(facts)
+    if lateral and basis.lateral_by_cg:
+        height *= 2 / 3  # three of them in the room of two
     frame = Frame(height=height, bottom=height - 34.0)
     axes: tuple[Axis, ...] = ("longitudinal", "lateral") if lateral else ("longitudinal",)
     drawn = [
         plot(
             facts.result,
-            facts.basis.envelopes,
+            basis.envelopes,
             axis=axis,
             weight_word=words.weight,
             frame=frame,
-            curtailments=facts.basis.curtailments,
+            curtailments=basis.curtailments,
         )
         for axis in axes
     ]
+    drawn.append(plot_across(facts.result, basis.lateral_by_cg, frame=frame))
     return [one for one in drawn if one]
 
 

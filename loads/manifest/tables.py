@@ -12,7 +12,20 @@ from loads.svg import element
 
 Row = dict[str, Any]
 # How the checks are laid out: those of the whole aircraft first, then the small ones, two beside each other.
-WHOLE = ("weight", "performance", "cg", "lateral", "fuel", "persons", "standing", "weights", "path")
+WHOLE = (
+    "weight",
+    "performance",
+    "cg",
+    "lateral",
+    "lateral-by-cg",
+    "trim",
+    "fuel",
+    "fuel-balance",
+    "persons",
+    "standing",
+    "weights",
+    "path",
+)
 # Checks whose title holds what was typed into the basis, where nothing is put into other words.
 TYPED = {
     "seat",
@@ -21,10 +34,12 @@ TYPED = {
     "tank",
     "tank-table",
     "performance",
+    "fuel-balance",
     "cumulative",
     "floor-area",
     "floor-run",
 }
+LATERAL_PATH = {"path.lateral", "path.zero-fuel-lateral", "path.lateral-by-cg"}
 OUTCOMES = {"pass": "kept", "fail": "BROKEN", "unresolved": "NOT CHECKED", "advisory": "told, not judged"}
 
 
@@ -97,7 +112,7 @@ def phases(facts: Computed) -> list[Row]:
 
 def _worst_row(worst: Mapping[str, Any]) -> Row:
     """The worst point of the burn as a row beside the phases."""
-    side = "lateral CG" if worst["axis"] == "lateral" else "CG"
+    side = "CG" if worst["axis"] == "longitudinal" else "lateral CG"
     return {**worst, "letter": WORST, "phase": f"{side} worst, {worst['point']}"}
 
 
@@ -117,7 +132,7 @@ def _limit(check: Mapping[str, Any], words: Words) -> Row:
     typed = family in TYPED
     kept = check["result"] == "pass"
     low, actual, high = check["low"], check["actual"], check["limit"]
-    lateral = family == "lateral" or check["code"] in {"path.lateral", "path.zero-fuel-lateral"}
+    lateral = family in {"lateral", "lateral-by-cg"} or check["code"] in LATERAL_PATH
     low, actual, high = sided([low, actual, high]) if lateral else column([low, actual, high])
     return {
         "title": check["title"] if typed else words.said(check["title"]),

@@ -51,6 +51,10 @@ def typed_of(document: Mapping[str, Any]) -> dict[str, str]:
     for row, limit in enumerate(document.get("limits", ())):
         typed |= {f"limit:{row}:at": str(limit["at"]), f"limit:{row}:source": str(limit["source"])}
         type_quantity(typed, f"limit:{row}:weight", f"limit:{row}:unit", limit["weight"])
+        if "kind" in limit:
+            typed[f"limit:{row}:kind"] = str(limit["kind"])
+    if "certification_category" in document:
+        typed["certification_category"] = str(document["certification_category"])
     return typed
 
 

@@ -5,6 +5,7 @@ from typing import Any
 
 from fleet.basis import Basis, Configuration
 from loads.web.desk_fitted import condition_inputs, floor_inputs, restraints_asked, setting_inputs
+from loads.web.desk_rules import category_inputs, kind_input
 from loads.web.form import ITEM_PARTS, LIMIT_PARTS, MOST_ROWS, SEAT_PARTS
 from loads.web.inputs import Choices, Field, Maker
 
@@ -135,6 +136,7 @@ def _limit(make: Maker, row: int, weights: Choices) -> list[Field]:
         make.figure(f"{prefix}:weight", f"Weight of limit {number}"),
         make.choice(f"{prefix}:unit", f"Unit of limit {number}", weights),
         make.text(f"{prefix}:source", f"Source of limit {number}", maximum=120),
+        kind_input(make, row),
     ]
 
 
@@ -178,7 +180,7 @@ def lay_desk(
     return {
         "type": basis.aircraft_type,
         "configuration_name": configuration.name,
-        "flight": _flight(make, zone),
+        "flight": [*_flight(make, zone), *category_inputs(make, basis)],
         "seats": [
             {
                 "id": seat.id,

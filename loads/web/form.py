@@ -28,7 +28,7 @@ SEAT_PARTS = (
     "restraint",
 )
 ITEM_PARTS = ("kind", "what", "place", "how", "weight", *FLOOR_PARTS)
-LIMIT_PARTS = ("weight", "source")
+LIMIT_PARTS = ("weight", "source", "kind")
 
 
 class _Builder:
@@ -142,6 +142,8 @@ class _Builder:
             limit: dict[str, Any] = {part: clean(self.typed, f"{prefix}:{part}") for part in ("at", "source")}
             if clean(self.typed, f"{prefix}:weight"):
                 limit["weight"] = quantity_of(self.typed, f"{prefix}:weight", f"{prefix}:unit")
+            if kind := clean(self.typed, f"{prefix}:kind"):
+                limit["kind"] = kind
             found.append(limit)
         return found
 
@@ -178,6 +180,9 @@ def document_of(
         "limits": builder.limits(),
         **fitted_in(typed, builder.field_of),
     }
+    builder.field_of["/certification_category"] = "certification_category"
+    if category := clean(typed, "certification_category"):
+        document["certification_category"] = category
     return document, builder.field_of
 
 

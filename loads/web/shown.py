@@ -123,7 +123,7 @@ def _head(current: Current, zone: ZoneInfo) -> dict[str, Any]:
         "destination": load.destination,
         "operation": load.operation.replace("-", " "),
         "configuration": load.configuration,
-        "category": (current.result().get("certification_category") or {}).get("name", ""),
+        "category": _category(current.result()).get("name", ""),
         "verdict": used.verdict,
         "verdict_words": verdict_words(used.verdict),
         "state": current.state,
@@ -189,11 +189,16 @@ def _limits(page: Page, words: Words) -> list[dict[str, Any]]:
     return [row | {"ruler": mark_safe(row["ruler"])} for row in rows]  # noqa: S308  # see above
 
 
+def _category(result: Mapping[str, Any]) -> Mapping[str, Any]:
+    """This function will return the certification category of the load; nothing where it has none."""
+    return result.get("certification_category") or {}
+
+
 def _plots(current: Current, result: Mapping[str, Any], words: Words) -> list[str]:
     basis = current.assessment.loading_basis
     if basis is None or not result.get("phases"):
         return []
-    category = (result.get("certification_category") or {}).get("id")
+    category = _category(result).get("id")
     figures = applicable(basis_of(basis), current.load.configuration, category)
     drawn = [
         plot(
