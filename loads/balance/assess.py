@@ -32,7 +32,7 @@ from loads.balance.fuel import FuelOffTable, FuelState
 from loads.balance.moves import Flight, cg_advice
 from loads.balance.path_worst import Burn, burn_of
 from loads.balance.prepared import Prepared, prepared
-from loads.balance.rails import RailEnd, at_rail_end, rail_ends, worse_of
+from loads.balance.rails import RailEnd, at_rail_end, parts_lie_apart, rail_ends, worse_of
 from loads.balance.report import Assessed, report, report_without_basis
 from loads.balance.result import Check, Result, State, verdict_of
 from loads.balance.sections import dry_at_phases
@@ -150,7 +150,8 @@ def _checks(
         found += weight_checks(declared, states, ready)
         told = _centre_checks((states, burn), ready, advice)
         if ends:
-            told = worse_of(told, [(end, _centre_checks(flight, ready, advice)) for end, flight in ends])
+            at_ends = [(end, _centre_checks(flight, ready, advice)) for end, flight in ends]
+            told = worse_of(told, at_ends, apart=parts_lie_apart(flights, ready))
         found += told
         found.append(landing_fuel_check(declared.fuel, states["landing"], ready))
     if declared.sequence:

@@ -110,6 +110,13 @@ def _points(path: Path, axis: Axis, ready: Prepared) -> list[tuple[Bound, Neares
     return found
 
 
+def bounds_on(leg: Leg, ready: Prepared) -> list[Bound]:
+    """Return the longitudinal envelopes that hold on a leg."""
+    ramp, flight, landing = (ready.bounds("longitudinal", phase) for phase in FLOWN)
+    bounds = _each_once((*flight, *ramp, *landing))
+    return [bound for bound in bounds if _legs(bound, ramp, flight, landing)[leg]]
+
+
 def _legs(
     bound: Bound, ramp: Sequence[Bound], flight: Sequence[Bound], landing: Sequence[Bound]
 ) -> Mapping[Leg, bool]:

@@ -4,7 +4,7 @@ All such seats forward, and all of them aft, are the least and the greatest mome
 added to every phase and to the whole path, and of each check the worse one counts and says which end it was.
 """
 
-from collections.abc import Mapping
+from collections.abc import Mapping, Sequence
 from fractions import Fraction
 from typing import NamedTuple
 
@@ -12,7 +12,8 @@ from fleet.basis import Phase
 from loads.balance.aboard import Declared, Person
 from loads.balance.exact import added
 from loads.balance.moves import Flight
-from loads.balance.path_worst import Burn, burn_of, shifted
+from loads.balance.path import Knot
+from loads.balance.path_worst import Burn, bounds_on, burn_of, shifted
 from loads.balance.prepared import Prepared
 from loads.balance.result import Check, State
 
@@ -51,10 +52,35 @@ def at_rail_end(states: Mapping[Phase, State], burn: Burn, end: RailEnd, ready: 
     return moved, burn_of(shifted(burn.path, end.along, Fraction(0)), ready)
 
 
-def worse_of(told: list[Check], at_ends: list[tuple[RailEnd, list[Check]]]) -> list[Check]:
+def parts_lie_apart(flights: Sequence[Flight], ready: Prepared) -> bool:
+    """Return whether both ends lie inside an envelope, but in different parts of it at one weight: then the
+    way between leads outside.
+
+    It is asked at the ends of every stretch. As an envelope has no hole, what is inside at both ends of the
+    rail, and all the way between them where a stretch begins and ends, is inside all over.
+    """
+    (_, forward), (_, aft) = flights
+    for one, other in zip(forward.path.stretches, aft.path.stretches, strict=True):
+        for _, shape in bounds_on(one.leg, ready):
+            for fore, rear in ((one.start, other.start), (one.end, other.end)):
+                parts = shape.arms_at(fore.weight)
+                if len(parts) > 1 and _part(parts, fore) != _part(parts, rear):
+                    return True
+    return False
+
+
+def _part(parts: Sequence[tuple[Fraction, Fraction]], knot: Knot) -> int | None:
+    arm = knot.moment / knot.weight
+    return next((number for number, (low, high) in enumerate(parts) if low <= arm <= high), None)
+
+
+def worse_of(
+    told: list[Check], at_ends: list[tuple[RailEnd, list[Check]]], *, apart: bool = False
+) -> list[Check]:
     """Return the checks with each that depends on the moment replaced by the worse of both ends.
 
-    Inside one part of an envelope at one end and inside another at the other, the way between leads outside.
+    Inside one part of an envelope at one end and inside another at the other, the way between leads outside;
+    `apart` says that this is so somewhere along the burn.
     """
     found = []
     for number, check in enumerate(told):
@@ -63,7 +89,8 @@ def worse_of(told: list[Check], at_ends: list[tuple[RailEnd, list[Check]]]) -> l
             found.append(check)
             continue
         end, worse = min(ends, key=lambda each: _badness(each[1]))
-        if worse.outcome == "pass" and check.code.startswith("cg.") and _apart(ends):
+        parted = apart if check.code == "path.longitudinal" else check.code.startswith("cg.") and _apart(ends)
+        if worse.outcome == "pass" and parted:
             fix = "State where the seats on rails stand."
             text = "forward and aft lie in different parts of the envelope"
             worse = worse._replace(outcome="unresolved", what_next=fix, margin_text=text)

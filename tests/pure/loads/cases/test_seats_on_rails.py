@@ -191,6 +191,24 @@ def test_different_parts_of_a_notched_envelope_at_both_ends_are_not_taken_for_wi
     assert check.what_next == "State where the seats on rails stand."
 
 
+@pytest.mark.parametrize(("half", "outcome"), [("0.3", "unresolved"), (None, "pass")])
+def test_a_notch_between_the_two_paths_is_noticed_though_no_phase_lies_beside_it(
+    half: str | None, outcome: str
+) -> None:
+    # An envelope for take-off alone, split from below up to half way between take-off and landing, where the
+    # envelope for landing is wide. 2400 lb in, so some 0.45 in of arm, lie between the notch and each path.
+    take_off, landing = (result_of(two()).state(phase) for phase in ("take-off", "landing"))
+    tip = (landing.arm, (take_off.weight + landing.weight) / 2)
+    notch = [(landing.arm + F(half), 4000), tip, (landing.arm - F(half), 4000)] if half else []
+    box = ((100, 4000), (100, 7000), (140, 7000), (140, 4000))
+    split = envelope(*box, *notch, phases=("take-off",))
+    wide = envelope((90, 3000), (90, 7500), (150, 7500), (150, 3000), phases=("ramp", "landing", "zero fuel"))
+    result = result_of(two(), railed(replace(twin(), envelopes=(split, replace(wide, id="wide")))))
+
+    assert result.check("path.longitudinal").outcome == outcome
+    assert all(one.outcome == "pass" for one in result.checks if one.code.startswith("cg."))
+
+
 @given(
     weights=st.tuples(st.integers(60, 280), st.integers(60, 280)),
     places=st.tuples(st.integers(118, 130), st.integers(118, 130)),
