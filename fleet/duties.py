@@ -9,6 +9,7 @@ from types import MappingProxyType
 from typing import Final, Literal, get_args
 
 from fleet import acts
+from records.actor import Actor
 from records.acts import READ_ACCESS_LOG, WEBHOOK_KINDS
 
 # Looking at the people, and at who signed in when, is no act; it needs leave all the same.
@@ -96,3 +97,15 @@ READS_OF: Mapping[Role, frozenset[str]] = MappingProxyType(
 def is_role(word: str) -> bool:
     """This function will say whether the word names a role."""
     return word in ACTS_OF
+
+
+def scheduler_at_work(operator: str) -> Actor:
+    """This function will return the scheduler, acting for an operator by the calendar."""
+    return Actor(
+        operator=operator,
+        kind="service",
+        key="service:scheduler",
+        name="",
+        capacity="scheduler",
+        may=frozenset({acts.TELL_FALLING_DUE.name}),
+    )

@@ -143,7 +143,10 @@ def _ruled(basis: Basis, papers: tuple[Paper, ...]) -> Ruled:
                 found = _PUT[effect.effect](found, basis, paper, effect)
             except NotAnEnvelope:
                 unmet.append(f"the envelope of {paper.title} is none in the units of the loading basis")
-    lines = tuple(tuple(_sentence(basis, paper, effect) for effect in paper.effects) for paper in papers)
+    names = {
+        one.id: one.name for part in (basis.seats, basis.places, basis.zones, basis.tanks) for one in part
+    }
+    lines = tuple(sentences(paper, names) for paper in papers)
     return Ruled(found, trapped, lines, tuple(unmet))
 
 
@@ -255,12 +258,13 @@ def _source(paper: Paper) -> Source:
     return replace(paper.source, document=f"{paper.title}, {paper.source.document}")
 
 
-def _sentence(basis: Basis, paper: Paper, effect: Effect) -> str:
-    """Return what an effect does, as people read it; the amount as typed."""
-    named = {
-        one.id: one.name for part in (basis.seats, basis.places, basis.zones, basis.tanks) for one in part
-    }
-    names = ", ".join(named.get(name, name) for name in effect.names)
+def sentences(paper: Paper, names: Mapping[str, str]) -> tuple[str, ...]:
+    """Return what each effect does, as people read it: amounts as typed, ids by name where one is known."""
+    return tuple(_sentence(paper, effect, names) for effect in paper.effects)
+
+
+def _sentence(paper: Paper, effect: Effect, known: Mapping[str, str]) -> str:
+    names = ", ".join(known.get(name, name) for name in effect.names)
     amount = "" if effect.amount is None else f"{effect.amount.value:f} {effect.amount.unit.value}"
     permitted = " permitted" if paper.kind == "permit" else ""
     match effect.effect:

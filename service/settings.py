@@ -111,6 +111,7 @@ CELERY_BEAT_SCHEDULE = {
         "task": "records.tasks.verify_everything",
         "schedule": crontab(hour="2", minute="30"),
     },
+    "falling-due": {"task": "fleet.tasks.tell_falling_due", "schedule": crontab(hour="4", minute="0")},
     "self-check": {"task": "loads.tasks.self_check", "schedule": crontab(hour="3", minute="15")},
     "forget-old-answers": {"task": "records.tasks.forget_old_answers", "schedule": 3600.0},
 }

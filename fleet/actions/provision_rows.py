@@ -86,11 +86,12 @@ def approve(entry: Entry, actor: Actor, provision: Provision) -> ProvisionApprov
 
 
 def end(entry: Entry, actor: Actor, provision: Provision, at: datetime | None, reason: str) -> ProvisionEnd:
-    """This function will write that a restriction or permit ends at `at` (None: now).
+    """This function will write that a restriction or permit ends at `at` (None: now, or at its beginning
+    where that is later).
 
     Raises Invalid when that lies before its beginning, StepRefused for a permit that had lapsed by then.
     """
-    ends = at or entry.at
+    ends = at or max(entry.at, provision.true_from)
     if ends < provision.true_from:
         raise Invalid(Fault("/true_from", "out-of-order", "ends before it begins; correct the time"))
     if provision.true_until is not None and ends >= provision.true_until:

@@ -8,6 +8,7 @@ from typing import Any
 from django.http import HttpResponse
 
 from fleet.models import Aircraft, Approval, EmptyWeight, LoadingBasis
+from fleet.queries.falling_due import falling_due
 from fleet.queries.figures import basis_of
 from fleet.queries.history import VersionHistory
 from fleet.queries.in_force import basis_in_force, empty_weights_in_force
@@ -33,6 +34,10 @@ def aircraft_answer(aircraft: Aircraft, now: datetime) -> dict[str, Any]:
     return aircraft_line(aircraft) | {
         "loading_basis": basis_named(basis_in_force(aircraft, now, now)),
         "empty_weights": [weight_named(each) for each in empty_weights_in_force(aircraft, now, now)],
+        "falling_due": [
+            {"what": one.what, "lapses": one.lapses, "past_due": one.lapses <= now, "source": one.source}
+            for one in falling_due(aircraft, now)
+        ],
     }
 
 

@@ -91,11 +91,21 @@ class AircraftLine(serializers.Serializer[object]):
     passenger_seats = serializers.IntegerField()
 
 
+class FallingDue(serializers.Serializer[object]):
+    """What lapses: a weighing by the operator's rules, a permit by its own date."""
+
+    what = serializers.CharField()
+    lapses = serializers.DateTimeField(help_text="the first instant at which it serves no more")
+    past_due = serializers.BooleanField()
+    source = serializers.CharField()  # type: ignore[assignment]  # DRF takes fields out of the class
+
+
 class AircraftAnswer(AircraftLine):
-    """One aircraft with what is in force now."""
+    """One aircraft with what is in force now, and what falls due."""
 
     loading_basis = BasisInForce(allow_null=True)
     empty_weights = WeightInForce(many=True)
+    falling_due = FallingDue(many=True)
 
 
 class AircraftList(serializers.Serializer[object]):

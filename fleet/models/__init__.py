@@ -2,6 +2,7 @@
 
 from fleet.models.aircraft import Aircraft
 from fleet.models.approval import Approval
+from fleet.models.due_notice import DueNotice
 from fleet.models.duty import Duty
 from fleet.models.empty_weight import EmptyWeight
 from fleet.models.loading_basis import LoadingBasis
@@ -15,6 +16,7 @@ from fleet.models.token import Rotation, Token
 __all__ = [
     "Aircraft",
     "Approval",
+    "DueNotice",
     "Duty",
     "EmptyWeight",
     "LoadingBasis",

@@ -2,7 +2,7 @@
 
 from django.urls import path
 
-from fleet.web import access_log, aircraft, own, password_links, people, settings, tokens
+from fleet.web import access_log, aircraft, own, password_links, people, provisions, settings, tokens
 
 urlpatterns = [
     path("aircraft", aircraft.aircraft_list, name="aircraft-list"),
@@ -17,6 +17,31 @@ urlpatterns = [
         aircraft.approve_weight,
         name="approve-empty-weight",
     ),
+    path("aircraft/<str:registration>/restrictions", provisions.restrictions, name="restrictions"),
+    path(
+        "aircraft/<str:registration>/restrictions/<uuid:version>/lifting",
+        provisions.lift,
+        name="lift-restriction",
+    ),
+    path("aircraft/<str:registration>/permits", provisions.permits, name="permits"),
+    path(
+        "aircraft/<str:registration>/permits/<uuid:version>/approval",
+        provisions.approve_a_permit,
+        name="approve-permit",
+    ),
+    path(
+        "aircraft/<str:registration>/permits/<uuid:version>/ending",
+        provisions.end_a_permit,
+        name="end-permit",
+    ),
+    path("standard-weights", provisions.standard_weights, name="standard-weights"),
+    path(
+        "standard-weights/<uuid:version>/approval",
+        provisions.approve_weights,
+        name="approve-standard-weights",
+    ),
+    path("rules", provisions.rules, name="rules"),
+    path("rules/<uuid:version>/approval", provisions.approve_the_rules, name="approve-rules"),
     path("people", people.people, name="people"),
     path("people/<int:person>", people.one_person, name="person"),
     path("people/<int:person>/duties", people.change_duty, name="person-duties"),

@@ -30,6 +30,7 @@ from service.client.problems import (
     Unanswered,
     Unreadable,
 )
+from service.client.provisions import Provision, Provisions
 from service.client.rechecks import Recheck, RecheckedFlight
 from service.client.shapes import (
     Aircraft,
@@ -72,6 +73,8 @@ __all__ = (
     "Paper",
     "Patience",
     "Person",
+    "Provision",
+    "Provisions",
     "Recheck",
     "RecheckedFlight",
     "Refused",

@@ -9,12 +9,13 @@ from service.client.exchange import Exchange, Patience
 from service.client.late import LateChanges
 from service.client.loads import Loads
 from service.client.people import People
+from service.client.provisions import ProvisionRecords
 from service.client.rechecks import Rechecks
 from service.client.trail import Trail
 from service.client.webhooks import Webhooks
 
 
-class Tarebook(Loads, LateChanges, AircraftRecords, Rechecks, People, Trail, Webhooks):
+class Tarebook(Loads, LateChanges, AircraftRecords, ProvisionRecords, Rechecks, People, Trail, Webhooks):
     """Talks to one Tarebook with one bearer token. Threads may share it.
 
     What stores something is sent with an Idempotency-Key that is made once a call, and sent again with the

@@ -9,7 +9,7 @@ from loads.queries.declaration import declared_now
 from loads.web.copied import typed_of
 from tests.cast import PASSWORD
 from tests.loads.making import signing
-from tests.service.permission_table import (
+from tests.service.permission_rows import (
     ACCEPT,
     APPROVE,
     DECLARE,

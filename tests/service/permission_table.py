@@ -6,8 +6,7 @@ token, too). Where what is sent decides, an operation has several rows, told apa
 """
 
 from collections.abc import Callable
-from dataclasses import dataclass, field
-from typing import Any, Final, Literal
+from typing import Any, Final
 
 from django.utils import timezone
 
@@ -16,89 +15,29 @@ from tests.loads.late import BAG, change_of
 from tests.loads.making import load_document, signing
 from tests.makers import basis_document, empty_weight_document
 from tests.pure.fleet.cabins import cabin
-from tests.service.permission_world import ADDRESS, World
-
-EVERYBODY: Final = frozenset({"everybody, signed in or not"})
-EVERY: Final = frozenset(
-    {
-        "pilot",
-        "load preparer",
-        "loading supervisor",
-        "maintenance",
-        "records approver",
-        "operations manager",
-        "auditor",
-        "integration",
-    }
+from tests.service.permission_provisions import PROVISIONS
+from tests.service.permission_rows import (
+    ACCEPT,
+    APPROVE,
+    CONFIRM,
+    DECLARE,
+    ENTER,
+    EVERY,
+    EVERYBODY,
+    LOOK_AT_PEOPLE,
+    MANAGE,
+    NOTE,
+    OWN,
+    PREPARE,
+    SUBSCRIBE,
+    Row,
+    Send,
+    Sent,
+    name_of,
+    named,
+    version,
 )
-OWN: Final = EVERY - {"integration"}
-DECLARE: Final = frozenset({"pilot", "load preparer", "operations manager", "integration"})
-PREPARE: Final = frozenset({"pilot", "load preparer", "operations manager"})
-ACCEPT: Final = frozenset({"pilot"})
-REMARK: Final = EVERY - {"auditor", "integration"}
-NOTE: Final = PREPARE
-ENTER: Final = frozenset({"maintenance", "operations manager"})
-APPROVE: Final = frozenset({"records approver", "operations manager"})
-MANAGE: Final = frozenset({"operations manager"})
-SUBSCRIBE: Final = frozenset({"operations manager", "integration"})
-LOOK_AT_PEOPLE: Final = frozenset({"operations manager", "auditor"})
-
-
-@dataclass(frozen=True, slots=True)
-class Sent:
-    """A valid request: what stands in the address, the query, the body (a form for a page) and headers."""
-
-    at: dict[str, str] = field(default_factory=dict)
-    query: dict[str, str] = field(default_factory=dict)
-    body: Any = None
-    headers: dict[str, str] = field(default_factory=dict)
-
-
-Send = Callable[[World, str], Sent]
-Way = Literal["any", "person", "session"]
-
-
-@dataclass(frozen=True, slots=True)
-class Row:
-    """One operation, or one case of it. `foreign` is what another operator's people get who may do it at
-    home; None where nothing of an operator is named.
-    """
-
-    method: str
-    path: str
-    may: frozenset[str]
-    then: int
-    send: Send = lambda _world, _role: Sent()
-    way: Way = "any"
-    foreign: int | None = None
-    case: str = ""
-
-    @property
-    def name(self) -> str:
-        return f"{self.method} {self.path}{f' ({self.case})' if self.case else ''}"
-
-
-def named(*names: str, **more: Any) -> Send:
-    """This function will return what sends a request whose address names these."""
-
-    def send(world: World, role: str) -> Sent:
-        return Sent(at={name: _name(world, role, name) for name in names}, **more)
-
-    return send
-
-
-def _name(world: World, role: str, name: str) -> str:
-    match name:
-        case "registration":
-            return world.aircraft
-        case "person":
-            return str(world.by_role["idle"].pk)
-        case "token":
-            return world.names.get(f"token of {role}", world.names["token of pilot"])
-        case "load":
-            return str(world.loads["open"].load.id)
-        case _:
-            return world.names[name]
+from tests.service.permission_world import ADDRESS, World
 
 
 def _load(state: str, body: Any = None, *, step: bool = True) -> Send:
@@ -138,13 +77,6 @@ def _signature(meaning: str, state: str) -> Send:
 
 def _late(world: World, _role: str) -> dict[str, Any]:
     return {**change_of(BAG), "digest": world.names["late digest"], "password": PASSWORD}
-
-
-def version(kind: str) -> Send:
-    def send(world: World, _role: str) -> Sent:
-        return Sent(at={"registration": world.aircraft, "version": world.names[kind]}, body={})
-
-    return send
 
 
 def _asked(**query: Callable[[World], str]) -> Send:
@@ -199,7 +131,7 @@ def _of_settings(_world: World, _role: str) -> Sent:
 
 def _hook(name: str, *more: str, body: Any = None) -> Send:
     def send(world: World, role: str) -> Sent:
-        at = {"webhook": world.names[name]} | {one: _name(world, role, one) for one in more}
+        at = {"webhook": world.names[name]} | {one: name_of(world, role, one) for one in more}
         return Sent(at=at, body=body)
 
     return send
@@ -244,6 +176,7 @@ API: tuple[Row, ...] = (
     Row("POST", "/api/v1/aircraft", ENTER, 201, _new_aircraft),
     Row("GET", ONE, EVERY, 200, named("registration"), foreign=404),
     Row("GET", f"{ONE}/configurations", EVERY, 200, named("registration"), foreign=404),
+    *PROVISIONS,
     Row("GET", f"{ONE}/loading-bases", EVERY, 200, named("registration"), foreign=404),
     Row(
         "POST",
@@ -308,6 +241,16 @@ API: tuple[Row, ...] = (
         "accepted",
     ),
     Row("GET", f"{LOAD}/remedies", EVERY, 200, _load("open", step=False), foreign=404),
+    Row(
+        "POST",
+        f"{LOAD}/signatures",
+        CONFIRM,
+        200,
+        _signature("loaded", "supervised"),
+        "person",
+        404,
+        "loaded",
+    ),
     Row("GET", f"{LOAD}/manifest", EVERY, 200, _load("accepted", step=False), foreign=404),
     Row("POST", f"{LOAD}/last-minute-changes", ACCEPT, 200, _load("accepted", _late), "person", 404),
     Row(

@@ -7,9 +7,14 @@ from typing import Any
 from django.test import Client
 from django.utils import timezone
 
+from fleet.actions.approve_rules import approve_rules
 from fleet.actions.enter_empty_weight import enter_empty_weight
 from fleet.actions.enter_loading_basis import enter_loading_basis
+from fleet.actions.enter_permit import enter_permit
 from fleet.actions.enter_person import enter_person
+from fleet.actions.enter_restriction import enter_restriction
+from fleet.actions.enter_rules import enter_rules
+from fleet.actions.enter_standard_weights import enter_standard_weights
 from fleet.actions.grant_duty import grant_duty
 from fleet.actions.issue_token import issue_token
 from fleet.models import EmptyWeight, Person
@@ -28,6 +33,9 @@ from tests.cast import PASSWORD, Cast, actor, cast
 from tests.loads.late import BAG, bounded, change_of, proposed
 from tests.loads.making import accepted, load_document, outside_document, prepared, submitted
 from tests.makers import basis_document, empty_weight_document, make_empty_weight, q, ready_aircraft
+from tests.pure.fleet.test_rules import rule, rules_document
+from tests.pure.loads.papers import permit_document, restriction_document
+from tests.pure.loads.standards import seasonal_document
 from tests.records.webhooks.making import make_due
 
 ADDRESS = "https://hooks.example.org/"
@@ -66,8 +74,9 @@ def make_world(code: str, aircraft: str) -> World:
     bounded(people, "500", persons=3)
     names = _subscriptions(people, aircraft)
     loads = {"stale": stale, **_loads(people, aircraft)}
+    loads["supervised"] = _supervised(people, aircraft)
     _park(names)
-    names |= _waiting_versions(loads["open"])
+    names |= _waiting_versions(loads["open"]) | _provisions(people, loads["open"])
     names["digest"] = manifest_of(people.operator.code, loads["accepted"].load.id)[0]
     names["act"] = str(Act.objects.get(about=f"load:{loads['open'].load.id}").pk)
     names["recheck"] = str(ask_recheck({"aircraft": aircraft}, by=actor(people.manager)).id)
@@ -159,6 +168,29 @@ def _waiting_versions(current: Current) -> dict[str, str]:
     weight = enter_empty_weight(actor(mechanic), aircraft, _heavier())
     assert EmptyWeight.objects.filter(aircraft=aircraft).count() == 2
     return {"basis": str(basis.id), "weight": str(weight.id)}
+
+
+def _provisions(people: Cast, current: Current) -> dict[str, str]:
+    """This function will enter a table, rules and a permit that nobody approved yet, a restriction of later
+    years, and a rule that asks the loading supervisor to sign what is chartered under supervision.
+    """
+    aircraft, mechanic, manager = current.load.aircraft, actor(people.maintenance), actor(people.manager)
+    later = {"true_from": "2031-01-01T00:00:00Z"}
+    lower = {"effect": "limit", "limit": "take_off", "weight": q("8000", "lb")}
+    return {
+        "table": str(enter_standard_weights(manager, seasonal_document()).id),
+        "rules": str(enter_rules(manager, rules_document(rule(none=True))).id),
+        "restriction": str(enter_restriction(mechanic, aircraft, restriction_document(lower, **later)).id),
+        "permit": str(enter_permit(mechanic, aircraft, permit_document(lower)).id),
+    }
+
+
+def _supervised(people: Cast, aircraft: str) -> Current:
+    """This function will make a prepared load that the loading supervisor has to sign."""
+    asks = rule("loading-signature", demanded=True, applies_to={"operations": ["supervised"]})
+    entered = enter_rules(actor(people.manager), rules_document(asks))
+    approve_rules(actor(people.approver), entered)
+    return prepared(people, _submitted(people, aircraft, reference="SUPERVISED", operation="supervised"))
 
 
 def _tokens(by_role: dict[str, Person], names: dict[str, str]) -> dict[tuple[str, bool], str]:

@@ -21,6 +21,7 @@ from service.client import (
     Load,
     Note,
     Person,
+    Provision,
     RecheckedFlight,
     Settings,
     Tarebook,
@@ -85,6 +86,7 @@ NUMBER = "01a23107-3d72-7a66-8157-3ea0a197a14a"
 SEEN = Load("within", "d", {}, (), {}, NUMBER, "open", '"1"', None, None, False)
 VERSION = Version(NUMBER, "d", {})
 HOOK = Subscription(NUMBER, "https://x.example", ("load.rejected",), "live")
+LAID = Provision(NUMBER, "permit", 1, "2026-01-01T00:00:00Z", None, False, False, "d", {})
 PREVIEW = LatePreview("within", "d", 2, (), "", {})
 PERSON = Person(7, "r.amani", "R. Amani", True, ())
 TOKEN = Token(3, "planner", "person:7", True, (), {})
@@ -117,6 +119,10 @@ CALLS: dict[str, Callable[[Tarebook], object]] = {
     "approve_loading_basis": lambda made: made.approve_loading_basis("Q9-KTB", VERSION, "seen", true_from=AT),
     "enter_empty_weight": lambda made: made.enter_empty_weight("Q9-KTB", {}),
     "approve_empty_weight": lambda made: made.approve_empty_weight("Q9-KTB", VERSION, "seen"),
+    "provisions": lambda made: made.provisions("restrictions", "Q9-KTB", at=AT, as_known_at=AT),
+    "enter_provision": lambda made: made.enter_provision("standard-weights", {}),
+    "approve_provision": lambda made: made.approve_provision("permits", LAID, "seen", "Q9-KTB"),
+    "end_provision": lambda made: made.end_provision("restrictions", LAID, "fixed", "Q9-KTB", true_from=AT),
     "preview_late_change": lambda made: made.preview_late_change(SEEN, {}),
     "change_late": lambda made: made.change_late(SEEN, {}, PREVIEW, "pw"),
     "write_note": lambda made: made.write_note(SEEN, "a bag too many"),
