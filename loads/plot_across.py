@@ -24,7 +24,7 @@ from loads.svg import corners, element, label, short
 
 Knot = tuple[float, float, float]  # weight, moment, lateral moment
 AXIS = "lateral by CG"  # of a worst point in the result document
-UP = {"arm": "lateral centre of gravity, arm", "moment": "lateral moment"}
+UP = {"arm": "lateral arm", "moment": "lateral moment"}
 
 
 def plot_across(result: Mapping[str, Any], limits: Sequence[LateralByCg], *, frame: Frame = STANDARD) -> str:

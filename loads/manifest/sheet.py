@@ -86,7 +86,7 @@ def _plots(facts: Facts, words: Words) -> list[str]:
     beside = lateral or bool(basis.lateral_by_cg)
     height = HEIGHTS[words.paper, beside] - _height_of_changes(facts)
     if lateral and basis.lateral_by_cg:
-        height *= 2 / 3  # three of them in the room of two
+        height *= 0.56  # three of them in the room of two
     frame = Frame(height=height, bottom=height - 34.0)
     axes: tuple[Axis, ...] = ("longitudinal", "lateral") if lateral else ("longitudinal",)
     drawn = [

@@ -2,6 +2,7 @@
 
 import hashlib
 import json
+from collections.abc import Callable
 from dataclasses import replace
 from datetime import UTC, datetime
 from pathlib import Path
@@ -154,10 +155,19 @@ def helicopter_load(**changes: Any) -> dict[str, Any]:
     }  # fmt: skip
 
 
-def accepted(load: dict[str, Any], kind: str, *, rule_set: str = "US", invented: bool = True) -> Facts:
-    """Facts of the load as accepted, with what the real engine finds."""
+def accepted(
+    load: dict[str, Any],
+    kind: str,
+    *,
+    rule_set: str = "US",
+    invented: bool = True,
+    change: Callable[[dict[str, Any]], dict[str, Any]] | None = None,
+) -> Facts:
+    """Facts of the load as accepted, with what the real engine finds; `change` makes another basis of it."""
     inputs = json.loads(canonical(read(json.dumps(load).encode())))
     text = (DATA / f"{kind}.loading-basis.json").read_text()
+    if change is not None:
+        text = json.dumps(change(json.loads(text, parse_float=str)))
     empty_document = json.loads((DATA / f"{kind}.empty-weight.json").read_bytes())
     basis = basis_from_text(text)
     result = assess(read_load(inputs, basis), basis, read_empty_weight(empty_document, basis)).as_document()
@@ -176,7 +186,15 @@ def accepted(load: dict[str, Any], kind: str, *, rule_set: str = "US", invented:
         number=14,
         inputs=inputs,
         result=result,
-        basis=BasisFacts(3, digests["loading_basis"], began, json.loads(text), basis.envelopes, basis.chord),
+        basis=BasisFacts(
+            3,
+            digests["loading_basis"],
+            began,
+            json.loads(text),
+            basis.envelopes,
+            basis.chord,
+            lateral_by_cg=basis.lateral_by_cg,
+        ),
         empty_weight=EmptyWeightFacts(digests["empty_weight"], began, began, empty_document),
         engine=ENGINE_VERSION,
         signatures=tuple(
