@@ -6,7 +6,7 @@ leaves the part as it was, and another takes it.
 
 from collections import Counter
 from hashlib import sha256
-from typing import Final, Literal
+from typing import Any, Final, Literal
 from uuid import UUID
 
 from django.db import connection, transaction
@@ -78,7 +78,7 @@ def _plan(recheck: Recheck) -> None:
         cursor.execute("SELECT pg_advisory_xact_lock(hashtextextended(%s, %s))", [str(recheck.id), _PLANNING])
         if recheck.parts.exists():
             return
-        values = {
+        values: dict[str, Any] = {
             "recheck": recheck.id,
             "size": LOADS_A_PART,
             "asked": recheck.asked_at,

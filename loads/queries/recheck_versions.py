@@ -86,7 +86,7 @@ class Versions:
     def _now(self, one: Assessed) -> InForce:
         if one.aircraft not in self._aircraft:
             aircraft = Aircraft.objects.get(id=one.aircraft)
-            values = {
+            values: dict[str, UUID | str | datetime] = {
                 "aircraft": one.aircraft,
                 "operator": aircraft.operator_id,
                 "known": self._recheck.asked_at,
