@@ -13,6 +13,7 @@ from fleet.queries.falling_due import Due, falling_due
 from fleet.queries.history import VersionHistory, empty_weight_history, loading_basis_history
 from fleet.queries.in_force import basis_in_force, empty_weights_in_force
 from fleet.queries.provisions import provisions_at
+from fleet.web.margins import margin_rows, presentation_rows
 from fleet.web.positions_shown import position_rows
 from fleet.web.rules_shown import rule_rows
 from fleet.web.shown_provisions import paper_shown
@@ -145,7 +146,13 @@ def _limits(basis: LoadingBasis | None) -> list[dict[str, str]]:
         return []
     document = json.loads(basis.document)
     rows = [limit_row(document, title, document["limits"].get(name)) for name, title in LIMIT_TITLES]
-    return [*rows, *rule_rows(document), *position_rows(document)]
+    return [
+        *rows,
+        *rule_rows(document),
+        *position_rows(document),
+        *margin_rows(document),
+        *presentation_rows(document),
+    ]
 
 
 def _stations(basis: LoadingBasis | None) -> list[dict[str, str]]:
