@@ -4,19 +4,21 @@ Sources: common practice for what people mistype, and what cannot be: nobody lea
 that is not aboard.
 """
 
+from copy import deepcopy
 from dataclasses import replace
 from typing import Any
 
 import pytest
 
 from fleet.positions import MovingPart, PartState
+from loads.balance.assess import assess
 from loads.balance.declared import read_load
 from loads.balance.over_flight import held_over_flight, over_flight
 from loads.balance.shape import check_shape
 from loads.web.copied import can_carry
 from records.refusal import Invalid
 from tests.pure.loads.load_documents import SEATS, TANKS
-from tests.pure.loads.making import SOURCE, F, load, twin
+from tests.pure.loads.making import SOURCE, F, load, twin, twin_empty
 
 
 def q(value: Any, unit: str = "lb") -> dict[str, Any]:
@@ -177,3 +179,47 @@ def test_the_page_does_not_carry_a_sequence_so_it_refuses_to_revise_such_a_load(
     assert not can_carry(load(sequence=[leaving(OFF)]), **ways)
     flight = load()["flight"] | {"follows": "01980a11-2222-7333-8444-555566667777"}
     assert not can_carry(load(flight=flight), **ways)
+
+
+JUNK: tuple[Any, ...] = (
+    None, True, 0, -1, 10**16, "", " ", "x", "ROW1-R", "1e3", "NaN", [], [None], {}, {"value": 1}, {"a": {}},
+)  # fmt: skip
+
+
+def places_in(node: Any, path: tuple[Any, ...] = ()) -> list[tuple[Any, ...]]:
+    """The path of every node of a document."""
+    inner = node.items() if isinstance(node, dict) else enumerate(node) if isinstance(node, list) else ()
+    return [path, *(each for key, value in inner for each in places_in(value, (*path, key)))]
+
+
+def spoiled(document: Any, path: tuple[Any, ...], junk: Any) -> Any:
+    """A copy with another value at a path."""
+    copied = deepcopy(document)
+    inner = copied
+    for key in path[:-1]:
+        inner = inner[key]
+    inner[path[-1]] = junk
+    return copied
+
+
+def test_whatever_is_written_in_a_sequence_is_refused_by_a_field_or_assessed() -> None:
+    events = [
+        moving(OFF | {"to": "ROW2-L"}) | TAXIING | {"after_burning": q(12)},
+        leaving(OFF, SOME, at=30),
+        transfer("LEFT-AUX", "LEFT-MAIN", 2),
+        position("UP", at=90),
+        position("DOWN", at=100),
+    ]
+    sound = load(sequence=events)
+    named: list[str] = []
+    for path in places_in(sound["sequence"])[1:]:
+        for junk in JUNK:
+            document = spoiled(sound, ("sequence", *path), junk)
+            try:
+                declared = read_load(document, TWIN)
+            except Invalid as error:
+                named += [fault.pointer for fault in error.faults]
+            else:
+                assert assess(declared, TWIN, twin_empty(), advised=False).verdict
+    assert len(named) > 500
+    assert all(pointer.startswith("/sequence/") for pointer in named)
