@@ -51,7 +51,7 @@ def lines_of(one: Provision) -> Iterator[str]:
 def paper_shown(one: Provision) -> dict[str, str]:
     """This function will return a restriction or permit in one line."""
     paper = _paper(one)
-    return {"kind": one.kind, "title": paper.title.capitalize(), "text": "; ".join(_paper_lines(paper))}
+    return {"kind": one.kind, "title": paper.title, "text": "; ".join(_paper_lines(paper))}
 
 
 def _paper(one: Provision) -> Paper:

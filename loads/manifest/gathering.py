@@ -29,6 +29,7 @@ from loads.queries.current import Current
 from loads.queries.declaration import declared_now
 from loads.queries.late_change import bound_of, changes_of, lines_of, moved_by
 from loads.queries.legs import followed_by, follows
+from loads.queries.provided import basis_under
 from loads.queries.signable import statement_of
 from loads.statement import MEANINGS
 from records.canonical import canonical
@@ -69,7 +70,7 @@ def facts_of(paper: Paper, change: LateChange | None = None) -> Facts:
         number=paper.number,
         inputs=json.loads(canonical(declared)),
         result=current.result(),
-        basis=_basis(used.loading_basis, current.result(), load.configuration),
+        basis=_basis(used, used.loading_basis, current.result(), load.configuration),
         empty_weight=_empty_weight(used.empty_weight),
         engine=used.engine,
         signatures=_signatures(load, used),
@@ -116,9 +117,11 @@ def _aircraft(row: Aircraft) -> AircraftFacts:
     return AircraftFacts(row.registration, row.serial_number, row.type, row.category, row.engines)
 
 
-def _basis(row: LoadingBasis, result: Mapping[str, Any], configuration: str) -> BasisFacts:
+def _basis(used: Assessment, row: LoadingBasis, result: Mapping[str, Any], configuration: str) -> BasisFacts:
+    """Tell the basis with the envelopes that were judged by: those of restrictions and permits, too."""
     category = (result.get("certification_category") or {}).get("id")
-    figures = applicable(basis_of(row), configuration, category)
+    ruled = basis_under(basis_of(row), used_provisions(used.provisions))
+    figures = applicable(ruled, configuration, category)
     document = json.loads(row.document)
     return BasisFacts(
         row.revision,

@@ -37,6 +37,12 @@ def ruled_for(basis: Basis, held: Provisions, outline: Outline) -> Ruled:
     return apply(basis, tuple(paper for _, paper in _papers(held, outline.flight.operation)))
 
 
+def basis_under(basis: Basis, used: Sequence[Provision]) -> Basis:
+    """This function will return a basis as the restrictions and permits left it that an assessment used."""
+    papers = tuple(_paper(row) for row in used if row.kind in _MANY)
+    return apply(basis, papers).basis
+
+
 def declared_under(document: dict[str, JSON], used: InForce, ruled: Ruled, known: datetime) -> Declared:
     """This function will read a load document against a basis, with what the operator laid down for the time
     of its departure. Raises Invalid with every fault.
@@ -68,11 +74,12 @@ def used_of(held: Provisions, declared: Declared) -> tuple[Provision, ...]:
 def _papers(held: Provisions, operation: str) -> list[tuple[Provision, Paper]]:
     """Return the restrictions, then the permits that are for an operation, each with its row."""
     rows = (*held.restrictions, *held.permits)
-    found = [
-        (row, paper_from_text(row.document, "permit" if row.kind == PERMIT else "restriction"))
-        for row in rows
-    ]
+    found = [(row, _paper(row)) for row in rows]
     return [(row, paper) for row, paper in found if not paper.operations or operation in paper.operations]
+
+
+def _paper(row: Provision) -> Paper:
+    return paper_from_text(row.document, "permit" if row.kind == PERMIT else "restriction")
 
 
 def _applied(paper: Paper, lines: tuple[str, ...]) -> Applied:

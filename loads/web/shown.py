@@ -27,6 +27,7 @@ from loads.queries.answer import signatures_of
 from loads.queries.current import Current
 from loads.queries.declaration import declared_now
 from loads.queries.legs import legs_answer
+from loads.queries.provided import basis_under
 from loads.queries.signable import signatures_due
 from loads.queries.stale import stale_parts
 from loads.web.wording import words_at
@@ -199,7 +200,8 @@ def _plots(current: Current, result: Mapping[str, Any], words: Words) -> list[st
     if basis is None or not result.get("phases"):
         return []
     category = _category(result).get("id")
-    figures = applicable(basis_of(basis), current.load.configuration, category)
+    ruled = basis_under(basis_of(basis), used_provisions(current.assessment.provisions))
+    figures = applicable(ruled, current.load.configuration, category)
     drawn = [
         plot(
             result,

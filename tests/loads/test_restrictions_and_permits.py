@@ -17,6 +17,8 @@ from fleet.models import Aircraft
 from fleet.queries.provisions import provisions_at
 from loads.actions.submit_load import submit_load
 from loads.actions.tell_stale import tell_after_provision
+from loads.manifest.gathering import facts_of, paper_of
+from loads.manifest.printing import html_of
 from loads.models import StaleNotice
 from loads.queries.answer import answer_of
 from loads.queries.current import Current
@@ -208,3 +210,31 @@ def test_trapped_fuel_is_weighed_and_told(people: Cast, aircraft: Aircraft) -> N
 
     assert float(result["phases"][1]["weight"]) - float(was) == pytest.approx(67)
     assert "10 US gal in left tank cannot be used" in result["advisories"]
+
+
+def test_the_paper_tells_what_holds_permits_in_red_and_draws_the_envelope_that_was_judged_by(
+    people: Cast, aircraft: Aircraft
+) -> None:
+    """A permit that replaces the envelope by one to 140 in: its corner stands in the drawing."""
+    corners = [["5000", "116"], ["6800", "116"], ["8800", "122"], ["8800", "140"], ["5000", "140"]]
+    wider = {
+        "effect": "envelope",
+        "of": "normal",
+        "points": [[arm, weight] for weight, arm in corners],
+        "unit": "in",
+        "weight_unit": "lb",
+    }
+    permitted(people, aircraft, wider, conditions=["day VFR"], operations=["ferry"])
+    restrict(people, aircraft, {"effect": "places", "ids": ["NOSE-HOLD"]})
+    flown = accepted(people, prepared(people, submitted(people, operation="ferry")))
+
+    facts = facts_of(paper_of(people.operator.code, flown.load.id))
+    page = html_of(facts)
+
+    assert (140, 8800) in facts.basis.envelopes[0].points
+    assert "Permit SFP-88, by Civil Aviation Office, Nalden." in page
+    assert '<p class="permit">' in page
+    assert "day VFR" in page
+    assert "nose hold closed" in page
+    assert "Restriction</th>" in page
+    assert "item inoperative DD-14, true from 2026-11-30 00:00:00 UTC" in page

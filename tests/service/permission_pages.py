@@ -9,9 +9,11 @@ from loads.queries.declaration import declared_now
 from loads.web.copied import typed_of
 from tests.cast import PASSWORD
 from tests.loads.making import signing
+from tests.service.permission_provisions import PROVISION_PAGES
 from tests.service.permission_rows import (
     ACCEPT,
     APPROVE,
+    CONFIRM,
     DECLARE,
     EVERY,
     EVERYBODY,
@@ -145,6 +147,7 @@ PAGES: tuple[Row, ...] = (
         version("weight"),
         foreign=404,
     ),
+    *PROVISION_PAGES,
     Row("GET", "/people", LOOK_AT_PEOPLE, 200),
     Row("POST", "/people", MANAGE, DONE, _plain(NEW_PERSON)),
     Row("GET", "/people/{person}", LOOK_AT_PEOPLE, 200, named("person"), foreign=404),
@@ -203,6 +206,15 @@ PAGES: tuple[Row, ...] = (
     Row("POST", f"{LOAD}/sign", PREPARE, DONE, _signature("prepared", "open"), foreign=404, case="prepared"),
     Row(
         "POST", f"{LOAD}/sign", ACCEPT, DONE, _signature("accepted", "prepared"), foreign=404, case="accepted"
+    ),
+    Row(
+        "POST",
+        f"{LOAD}/sign",
+        CONFIRM,
+        DONE,
+        _signature("loaded", "supervised"),
+        foreign=404,
+        case="loaded",
     ),
     Row("POST", f"{LOAD}/assess", DECLARE, DONE, _step("stale"), foreign=404),
     Row("POST", f"{LOAD}/depart", DECLARE, DONE, _step("accepted"), foreign=404),

@@ -1,5 +1,6 @@
 """The rows of the permission matrix for tables of standard weights, rules, restrictions and permits."""
 
+import json
 from typing import Any, Final
 
 from tests.pure.fleet.test_rules import rule, rules_document
@@ -80,4 +81,69 @@ PROVISIONS: tuple[Row, ...] = (
     Row("GET", f"{ONE}/permits/{{version}}", EVERY, 200, version("permit"), foreign=404),
     Row("POST", f"{ONE}/permits/{{version}}/approval", APPROVE, 201, version("permit"), "person", 404),
     Row("POST", f"{ONE}/permits/{{version}}/ending", ENTER, 201, _ending("permit"), foreign=404),
+)
+
+
+def _form(document: dict[str, Any]) -> dict[str, str]:
+    return {"document": json.dumps(document)}
+
+
+DONE: Final = 302
+# The same by pages: forms, answered by a redirection.
+PROVISION_PAGES: tuple[Row, ...] = (
+    Row("GET", "/standard-weights", EVERY, 200),
+    Row("POST", "/standard-weights", MANAGE, DONE, _body(_form(seasonal_document()))),
+    Row(
+        "POST",
+        "/standard-weights/{version}/approval",
+        APPROVE - MANAGE,
+        DONE,
+        _version("table", {}),
+        foreign=404,
+    ),
+    Row("GET", "/rules", EVERY, 200),
+    Row("POST", "/rules", MANAGE, DONE, _body(_form(rules_document(rule(none=True))))),
+    Row("POST", "/rules/{version}/approval", APPROVE - MANAGE, DONE, _version("rules", {}), foreign=404),
+    Row("GET", "/aircraft/{registration}/restrictions", EVERY, 200, named("registration"), foreign=404),
+    Row(
+        "POST",
+        "/aircraft/{registration}/restrictions",
+        ENTER,
+        DONE,
+        _of_aircraft(_form(restriction_document(LOWER))),
+        foreign=404,
+    ),
+    Row(
+        "POST",
+        "/aircraft/{registration}/restrictions/{version}/lifting",
+        APPROVE,
+        DONE,
+        _ending("restriction"),
+        foreign=404,
+    ),
+    Row("GET", "/aircraft/{registration}/permits", EVERY, 200, named("registration"), foreign=404),
+    Row(
+        "POST",
+        "/aircraft/{registration}/permits",
+        ENTER,
+        DONE,
+        _of_aircraft(_form(permit_document(LOWER))),
+        foreign=404,
+    ),
+    Row(
+        "POST",
+        "/aircraft/{registration}/permits/{version}/approval",
+        APPROVE,
+        DONE,
+        version("permit"),
+        foreign=404,
+    ),
+    Row(
+        "POST",
+        "/aircraft/{registration}/permits/{version}/ending",
+        ENTER,
+        DONE,
+        _ending("permit"),
+        foreign=404,
+    ),
 )
