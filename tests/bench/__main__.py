@@ -17,6 +17,8 @@ MEASUREMENTS = (
     "act_against_bare_insert",
     "acts_under_load",
     "post_loads_throughput",
+    "post_loads_by_clients",
+    "memory_over_requests",
     "stored_loads",
     "seconds_to_the_summary",
 )
