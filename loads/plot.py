@@ -71,15 +71,7 @@ def plot(
     plane = shown[0].plane
     shown = [envelope for envelope in shown if envelope.plane == plane]
     inside = operational(shown, curtailments) if curtailments else []
-    marks = [
-        Mark(
-            MARKS[phase["phase"]],
-            phase["phase"],
-            _across(phase, axis, plane),
-            float(Fraction(phase["weight"])),
-        )
-        for phase in result["phases"]
-    ] + worst_mark(result, axis, plane)
+    marks = _marks(result, axis, plane)
     units = result["units"]
     limits = _weight_limits(result["checks"], units["weight"])
     corner_points = [point for envelope in shown for point in envelope.points]
@@ -111,6 +103,20 @@ def plot(
         font_size=9,
         fill="#000",
     )
+
+
+def _marks(result: Mapping[str, Any], axis: Axis, plane: str) -> list[Mark]:
+    """The marks of the phases, and of the worst point of the burn."""
+    phases = [
+        Mark(
+            MARKS[phase["phase"]],
+            phase["phase"],
+            _across(phase, axis, plane),
+            float(Fraction(phase["weight"])),
+        )
+        for phase in result["phases"]
+    ]
+    return phases + worst_mark(result, axis, plane)
 
 
 def _across(phase: Mapping[str, Any], axis: Axis, plane: str) -> float:
