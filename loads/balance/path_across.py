@@ -83,6 +83,7 @@ def moved(turn: Turn) -> list[Course]:
     """Return an event as points, or as what a transfer goes through.
 
     A transfer tells the half of each of its parts, so that a part is known as a quadratic of what has moved.
+    Where some of it is not known (a gap) the load is unresolved, and what is known is judged point by point.
     """
     knots = [knot for knot, _ in turn.knots]
     if not turn.swept or len(knots) % 2 == 0:

@@ -8,6 +8,7 @@ extremes are at such points or where its slope is nothing, which is a rational v
 from collections.abc import Mapping, Sequence
 from dataclasses import replace
 from fractions import Fraction
+from itertools import pairwise
 
 from fleet.basis import Phase
 from fleet.positions import settings
@@ -135,7 +136,9 @@ def _turns(
 def _swept(
     section: Section, event: Event, moved: Transfer, tanks: FlownTanks, gaps: list[Gap]
 ) -> tuple[tuple[Knot, Contents], ...]:
-    """Return the knots of a transfer: its ends, the points of both tables, and every extreme in between."""
+    """Return the knots of a transfer: its ends, the points of both tables, and every extreme in between; and
+    halfway between two of these, so that each part is known as the quadratic it is.
+    """
     leg, contents = section.leg, section.end
     source, target = tanks.held[moved.source], tanks.held[moved.target]
     out, into = contents[moved.source] + source.trapped, contents[moved.target] + target.trapped
@@ -147,8 +150,9 @@ def _swept(
         marks.update((piece.first - into, piece.last - into))
     levels = (_level(one, other, out, into) for one in pieces[0] for other in pieces[1])
     marks.update(level for level in levels if level is not None)
+    rising = sorted(mark for mark in marks if NOTHING <= mark <= moved.volume)
     knots = []
-    for volume in sorted(mark for mark in marks if NOTHING <= mark <= moved.volume):
+    for volume in sorted((*rising, *((low + high) / 2 for low, high in pairwise(rising)))):
         held = after_transfer(contents, replace(event, transfer=replace(moved, volume=volume)))
         knot = tanks.knot(held)
         if knot is None:
