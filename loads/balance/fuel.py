@@ -8,6 +8,7 @@ the volume unit of the basis, weights in its weight unit.
 from collections.abc import Mapping
 from dataclasses import dataclass
 from fractions import Fraction
+from math import lcm
 from typing import NamedTuple
 
 from fleet.basis import BurnStage, Phase
@@ -33,8 +34,8 @@ Filled = tuple[tuple[Phase, Contents, tuple[Draw, ...]], ...]  # each phase with
 @dataclass(frozen=True, slots=True)
 class FuelState:
     """Fuel in the tanks at one phase. `usable` and `moments` are by tank; weight and moments count trapped
-    fuel, too. `draws` lead here from the phase before it in flight; () at the ramp and at zero fuel, and where
-    something happens in between: `loads.balance.sections` has them then.
+    fuel, too. `draws` lead here from the phase before it in flight; () at the ramp and at zero fuel, and
+    where something happens in between: `loads.balance.sections` has them then.
     """
 
     phase: Phase
@@ -70,28 +71,38 @@ def burn(contents: Contents, order: tuple[BurnStage, ...], volume: Fraction) -> 
 def drawn(
     contents: Contents, order: tuple[BurnStage, ...], volume: Fraction
 ) -> tuple[Contents, Fraction, tuple[Draw, ...]]:
-    """Return what `burn` returns, and the steps of it in their order; none of them draws nothing."""
+    """Return what `burn` returns, and the steps of it in their order; none of them draws nothing.
+
+    Reckoned in whole numbers of one small part of the volume unit; only a last step is parted among tanks.
+    """
+    if volume.numerator <= 0:
+        return dict(contents), NOTHING, ()
+    ratios = {tank: held.as_integer_ratio() for tank, held in contents.items()}
+    above, below = volume.as_integer_ratio()
+    scale = lcm(below, *[per for _, per in ratios.values()])
+    whole = {tank: held * (scale // per) for tank, (held, per) in ratios.items()}
+    rest = above * (scale // below)
     left = dict(contents)
     draws = []
     for stage in order:
-        if volume <= 0:
+        if not rest:
             break
-        feeding = [tank for tank in stage.tanks if left.get(tank)]
-        while feeding and volume > 0:
-            share = volume / len(feeding) if len(feeding) > 1 else volume
-            least = min(left[tank] for tank in feeding)
-            if share < least:
-                draws.append(Draw(tuple(feeding), share))
+        feeding = [tank for tank in stage.tanks if whole.get(tank)]
+        while feeding and rest:
+            least, count = min([whole[tank] for tank in feeding]), len(feeding)
+            if rest < least * count:
+                draws.append(Draw(tuple(feeding), Fraction(rest, scale * count)))
                 for tank in feeding:
-                    left[tank] -= share
-                volume = NOTHING
+                    left[tank] = Fraction(whole[tank] * count - rest, scale * count)
+                rest = 0
             else:
-                draws.append(Draw(tuple(feeding), least))
+                draws.append(Draw(tuple(feeding), Fraction(least, scale)))
                 for tank in feeding:
-                    left[tank] -= least
-                volume -= least * len(feeding)
-                feeding = [tank for tank in feeding if left[tank]]
-    return left, volume if volume > 0 else NOTHING, tuple(draws)
+                    whole[tank] -= least
+                    left[tank] = Fraction(whole[tank], scale)
+                rest -= least * count
+                feeding = [tank for tank in feeding if whole[tank]]
+    return left, Fraction(rest, scale), tuple(draws)
 
 
 def fuel_states(plan: FuelPlan, ready: Prepared) -> dict[Phase, FuelState]:
@@ -139,14 +150,15 @@ def _state(
     trapped = NOTHING
     for fuel in plan.tanks:
         tank, volume = fuel.tank, usable[fuel.tank.id]
-        if fuel.trapped:
+        if fuel.trapped.numerator:
             volume += fuel.trapped
             trapped += fuel.trapped
         key = (tank.id, *volume.as_integer_ratio())
-        if key not in known:
-            known[key] = _moment(tank.id, volume, phase, density, ready)
-        moments[tank.id] = known[key]
-        if tank.lateral_arm:
+        moment = known.get(key)
+        if moment is None:
+            moment = known[key] = _moment(tank.id, volume, phase, density, ready)
+        moments[tank.id] = moment
+        if tank.lateral_arm.numerator:
             across.append(product(volume, tank.lateral_arm))
     usable_weight = times(added(usable.values()), density)
     return FuelState(
@@ -154,7 +166,7 @@ def _state(
         usable,
         moments,
         usable_weight,
-        usable_weight + trapped * density if trapped else usable_weight,
+        usable_weight + trapped * density if trapped.numerator else usable_weight,
         added(moments.values()),
         times(total(across), density) if across else NOTHING,
         draws,

@@ -3,6 +3,7 @@ its units.
 """
 
 from collections import OrderedDict
+from collections.abc import Iterable
 from fractions import Fraction
 
 from fleet.basis import PHASES, Axis, Basis, Phase, TankTable
@@ -10,7 +11,7 @@ from fleet.conversion import density_unit
 from fleet.envelope import Shape
 from fleet.lateral import LateralByCg
 from fleet.tanks import TankCurve
-from loads.balance.exact import times
+from loads.balance.exact import Ratio, times
 from loads.balance.operational import Bound, Operational
 from loads.balance.rounding import LENGTH_PLACES, MOMENT_PLACES
 
@@ -23,12 +24,14 @@ class Prepared:
     """What is derived from a basis once and used for every load of it. Unchanging once made."""
 
     __slots__ = (
+        "_as_weighed",
         "_across",
         "_bounds",
         "_chord_factor",
         "_curves",
         "_steady",
         "basis",
+        "deciding",
         "density",
         "length",
         "length_places",
@@ -58,7 +61,7 @@ class Prepared:
             for tank in basis.tanks
         }
         self._chord_factor = None if basis.chord is None else 100 / basis.chord.length
-        self._steady = {tank.id: _steady_arm(tank.table) for tank in basis.tanks}
+        self._steady = {tank.id: _steady(tank.table) for tank in basis.tanks}
         shapes = [(envelope, Shape(envelope.plane, envelope.points)) for envelope in basis.envelopes]
         axes: tuple[Axis, ...] = ("longitudinal", "lateral")
         left = Operational(basis.curtailments)
@@ -67,6 +70,11 @@ class Prepared:
             for axis in axes
             for phase in PHASES
         }
+        self._as_weighed = {part.id: part.as_weighed for part in basis.positions}
+        # The moving parts whose state decides which envelope holds.
+        self.deciding = frozenset(
+            part for one in (*basis.envelopes, *basis.lateral_by_cg) for part, _ in one.positions
+        )
         self._across = {
             phase: tuple(limit for limit in basis.lateral_by_cg if phase in limit.phases) for phase in PHASES
         }
@@ -77,16 +85,27 @@ class Prepared:
         """
         return self._bounds[axis, phase]
 
+    def holds_in(self, limit: Envelope | LateralByCg, parts: Iterable[tuple[str, str]]) -> bool:
+        """Return whether a limit holds with these parts in these states, all others as weighed."""
+        if not limit.positions:
+            return True
+        states = self._as_weighed | dict(parts)
+        return all(states[part] in allowed for part, allowed in limit.positions)
+
     def across(self, phase: Phase) -> tuple[LateralByCg, ...]:
         """Return the lateral limits against the longitudinal CG that hold at a phase; () without any."""
         return self._across[phase]
 
     def fuel_moment(self, tank: str, volume: Fraction, density: Fraction) -> Fraction:
         """Return the moment of a volume of fuel in a tank. Raises `fleet.tanks.OutsideTable`."""
-        curve, arm = self._curves[tank], self._steady[tank]
-        if arm is None or not volume.numerator or not curve.first <= volume <= curve.last:
-            return curve.moment(volume, density)
-        return times(times(volume, arm), density)
+        steady = self._steady[tank]
+        if steady is not None:
+            (arm, of), (first, under), (last, over) = steady
+            held, per = volume.as_integer_ratio()
+            if held and first * per <= held * under and held * over <= last * per:
+                weight, each = density.as_integer_ratio()
+                return Fraction(held * arm * weight, per * of * each)
+        return self._curves[tank].moment(volume, density)
 
     def chord_percent(self, arm: Fraction) -> Fraction | None:
         """Return an arm in percent of the mean aerodynamic chord, or None without a chord."""
@@ -94,10 +113,15 @@ class Prepared:
         return None if chord is None or factor is None else times(arm - chord.leading_edge, factor)
 
 
-def _steady_arm(table: TankTable) -> Fraction | None:
-    """Return the arm of a table that gives the same arm at every quantity, where nothing is interpolated."""
+def _steady(table: TankTable) -> tuple[Ratio, Ratio, Ratio] | None:
+    """Return the arm of a table that gives the same arm at every quantity, where nothing is interpolated, and
+    the volumes it begins and ends at.
+    """
     arms = {arm for _, arm in table.points}
-    return arms.pop() if table.gives == "arm" and len(arms) == 1 else None
+    if table.gives != "arm" or len(arms) > 1:
+        return None
+    ends = table.curve.first, table.curve.last
+    return arms.pop().as_integer_ratio(), ends[0].as_integer_ratio(), ends[1].as_integer_ratio()
 
 
 def _covering(shapes: list[Bound], axis: Axis, phase: Phase) -> tuple[Bound, ...]:

@@ -155,15 +155,18 @@ def people_lines(group: str, person: Person) -> list[Line]:
 
 def _item(item: Item) -> list[Line]:
     """Return the line of an item, and after it those of the pallet, net or spreader that go with it."""
-    place = item.place
-    rigged = [_rigging(item, part) for part in item.rigging]
-    weight = item.weight
+    place, weight = item.place, item.weight
+    rigged = [_rigging(item, part) for part in item.rigging] if item.rigging else []
     if weight is not None and rigged:
         weight -= added(part.weight for part in item.rigging)
     # What it is called is typed freely and may name somebody: it is joined where it is shown, by its pointer.
     what = f"{place.name}, {item.kind}{', removed' if item.removed else ''}"
-    line = Line("items", what, item.how, weight, place.arm, None, None, False, item.pointer)
-    return [_placed(line, place.lateral_arm), *rigged]
+    along = across = None
+    if weight is not None:
+        along, lateral_arm = times(weight, place.arm), place.lateral_arm
+        across = times(weight, lateral_arm) if lateral_arm.numerator else lateral_arm
+    line = Line("items", what, item.how, weight, place.arm, along, across, False, item.pointer)
+    return [line, *rigged] if rigged else [line]
 
 
 def _rigging(item: Item, part: Rigging) -> Line:
