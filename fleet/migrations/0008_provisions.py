@@ -291,7 +291,9 @@ class Migration(migrations.Migration):
                         ("true_until__isnull", True),
                     ),
                     models.Q(
-                        ("kind__in", ["restriction", "permit"]), ("true_until__gt", models.F("true_from"))
+                        ("kind__in", ["restriction", "permit"]),
+                        ("true_until__gt", models.F("true_from")),
+                        ("true_until__isnull", False),
                     ),
                     _connector="OR",
                 ),

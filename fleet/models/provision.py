@@ -49,7 +49,11 @@ class Provision(models.Model):
             ),
             models.CheckConstraint(
                 condition=Q(true_until__isnull=True, kind__in=["standard weights", "rules", "restriction"])
-                | Q(true_until__gt=F("true_from"), kind__in=["restriction", "permit"]),
+                | Q(
+                    true_until__isnull=False,
+                    true_until__gt=F("true_from"),
+                    kind__in=["restriction", "permit"],
+                ),
                 name="provision_permit_lapses",
             ),
             models.CheckConstraint(

@@ -105,6 +105,7 @@ def person(scene: Scene, **changes: Any) -> dict[str, Any]:
         "salt": b"0" * 32,
         "is_active": True,
         "session_series": 0,
+        "mail": "",
     }
     return row | changes
 

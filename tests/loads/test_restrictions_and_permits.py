@@ -7,6 +7,7 @@ from datetime import timedelta
 from typing import Any
 
 import pytest
+from django.db import IntegrityError
 from django.utils import timezone
 
 from fleet.actions.approve_permit import approve_permit
@@ -17,14 +18,16 @@ from fleet.models import Aircraft
 from fleet.queries.provisions import provisions_at
 from loads.actions.submit_load import submit_load
 from loads.actions.tell_stale import tell_after_provision
+from loads.acts import ASSESS_LOAD
 from loads.manifest.gathering import facts_of, paper_of
 from loads.manifest.printing import html_of
-from loads.models import StaleNotice
+from loads.models import Assessment, StaleNotice
 from loads.queries.answer import answer_of
 from loads.queries.current import Current
 from loads.queries.overtaken import database_time
 from loads.queries.signable import words_to_sign
 from loads.queries.stale import stale_parts
+from records.act import act
 from records.refusal import Invalid, NotAllowed, StepRefused
 from tests.cast import Cast, actor, cast
 from tests.fleet.papers import permitted, restrict
@@ -238,3 +241,30 @@ def test_the_paper_tells_what_holds_permits_in_red_and_draws_the_envelope_that_w
     assert "nose hold closed" in page
     assert "Restriction</th>" in page
     assert "item inoperative DD-14, true from 2026-11-30 00:00:00 UTC" in page
+
+
+def test_the_database_refuses_an_assessment_by_another_aircrafts_permit(
+    people: Cast, aircraft: Aircraft
+) -> None:
+    other = ready_aircraft(people, "Q9-OTH")
+    permit = permitted(people, other, MORE)
+    current = submitted(people)
+
+    with (
+        pytest.raises(IntegrityError) as refused,
+        act(ASSESS_LOAD, by=actor(people.preparer), about="test:x"),
+    ):
+        Assessment.objects.create(
+            operator_id=people.operator.code,
+            load=current.load,
+            number=2,
+            verdict="unresolved",
+            result="{}",
+            salt=b"0" * 16,
+            digest="0" * 64,
+            provisions=[permit.id],
+            engine="3",
+            assessed_at=timezone.now(),
+        )
+
+    assert refused.value.__cause__.diag.constraint_name == "assessment_uses_versions_of_its_aircraft"
