@@ -64,7 +64,8 @@ def path_document(burn: Burn, checks: Iterable[Check], ready: Prepared) -> Json:
             kinks.append(stretch.at((stretch.start.weight + stretch.end.weight) / 2))
         if stretch.end.phase is None:
             kinks.append(stretch.end)
-    at = {check.code: check.at for check in checks if check.at is not None}
+    # Copied, so that a document holds nothing twice: whoever changes one place of it changes that one alone.
+    at = {check.code: _own(check.at) for check in checks if check.at is not None}
     worst: list[Json] = [{"axis": axis, **at[f"path.{axis}"]} for axis in burn.worst if f"path.{axis}" in at]
     if PATH_CODE in at:
         worst.append({"axis": "lateral by CG", **at[PATH_CODE]})
@@ -74,6 +75,10 @@ def path_document(burn: Burn, checks: Iterable[Check], ready: Prepared) -> Json:
             [_figures(knot, _arms(knot), ready) for knot in run] for run in _runs(burn.path.stretches)
         ]
     return told
+
+
+def _own(at: Json) -> Json:
+    return {name: part.copy() if isinstance(part, dict | list) else part for name, part in at.items()}
 
 
 def _runs(stretches: Iterable[Stretch]) -> list[list[Knot]]:

@@ -84,7 +84,8 @@ def asks_for_more(basis: Basis, configuration: Configuration) -> bool:
         (basis.envelopes, _ENVELOPE),
         ((configuration,), _CONFIGURATION),
     )
-    if configuration.modifications or any(seat.exit_row for seat in basis.seats):
+    marked = any(seat.exit_row or seat.infant_restraint is False for seat in basis.seats)
+    if configuration.modifications or marked:
         return True
     return any(_holds_more(one, names) for ones, names in parts for one in ones)
 
