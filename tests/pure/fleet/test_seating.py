@@ -100,6 +100,20 @@ def test_an_assumed_arm_of_the_operator_takes_the_place_of_the_centroid():
     assert found.aft == 5000
 
 
+def test_a_cabin_of_one_row_needs_no_margin_and_no_line_is_named():
+    found = seating_variation([row("1", 200, 2)], F(190))
+
+    assert (found.forward, found.aft) == (0, 0)
+    assert [(filling.forward, filling.aft) for filling in found.fillings] == [(None, None), (None, None)]
+
+
+def test_a_difference_of_less_than_one_counts_too():
+    """Two rows a tenth of an inch apart, one seat each, of 1 lb: a twentieth of a pound inch either way."""
+    found = seating_variation([row("1", 200, 1), row("2", "200.1", 1)], F(1))
+
+    assert (found.forward, found.aft) == (F(1, 20), F(1, 20))
+
+
 cabins = st.lists(
     st.tuples(st.integers(100, 900), *(st.integers(0, 3) for _ in range(3))).filter(
         lambda each: any(each[1:])

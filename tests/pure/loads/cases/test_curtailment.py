@@ -5,6 +5,7 @@ is the same: the certified envelope is curtailed by the moment each variation ca
 and worked by hand beside each case.
 """
 
+from copy import deepcopy
 from dataclasses import replace
 from fractions import Fraction
 
@@ -14,8 +15,10 @@ from hypothesis import strategies as st
 from fleet.curtailment import Amounts, Curtailment, Inset
 from fleet.sourced import Source
 from loads.balance.assess import assess
+from loads.balance.remedies.finding import find_remedies
 from tests.pure.loads.making import envelope, load, result_of, twin, twin_empty
 from tests.pure.loads.naive_path import points_along
+from tests.pure.loads.remedies.cabins import asked
 from tests.pure.loads.test_path_against_sampling import DECLARED, DRY, envelopes, flights
 
 F = Fraction
@@ -161,6 +164,32 @@ def test_the_burn_is_judged_by_the_operational_envelope_too():
     assert check.room == F(-1, 100)
     assert "inside the certified envelope" in check.margin_text
     assert check.curtailed["certified"]["within"] is True
+
+
+def test_a_remedy_brings_the_load_within_the_operational_envelope_not_only_the_certified_one():
+    """Half an inch too far aft at 5,760.5 lb are 2,880.3 lb in. From the aft hold at 190 in to the nose hold
+    at 30 in each pound makes 160 lb in: 18.1 lb would do at take-off, and the ramp, heavier, asks for more.
+    """
+    arm = take_off().arm
+    certified = envelope((100, 4000), (100, 6800), (arm + F("0.5"), 6800), (arm + F("0.5"), 4000))
+    whole = ("ramp", "take-off", "landing", "minimum at landing")
+    basis = curtailed(margin(phases=whole, aft=Inset(arm=F(1))), envelopes=(certified,))
+    document = load()
+    question = asked(document, basis, twin_empty())
+
+    found = find_remedies(question, document, lambda changed: result_of(changed, basis))
+
+    offered = {offer["kind"]: offer for offer in found.offers}
+    assert offered["move-items"]["sentence"] == "Move 18.5 lb of the baggage from aft hold to nose hold."
+    moved = deepcopy(document)
+    (bags,) = moved["items"]
+    moved["items"] = [
+        bags | {"weight": {"value": "101.5", "unit": "lb"}},
+        bags | {"what": "moved", "place": "NOSE-HOLD", "weight": {"value": "18.5", "unit": "lb"}},
+    ]
+    assert result_of(moved, basis).verdict == "within"
+    moved["items"][0]["weight"]["value"], moved["items"][1]["weight"]["value"] = "101.6", "18.4"
+    assert result_of(moved, basis).verdict == "outside"
 
 
 insets = st.one_of(
