@@ -50,9 +50,11 @@ def allowable_take_off(declared: Declared, states: Mapping[Phase, State]) -> All
     limits = declared.configuration.limits
     at = {phase: state.weight for phase, state in states.items()}
     take_off = at["take-off"]
+    # What leaves in flight is no more aboard at landing than the fuel that burned.
+    trip = "trip fuel and what leaves" if any(e.leaving for e in declared.sequence) else "trip fuel"
     entered: list[tuple[str, Limit | None, Fraction]] = [
         ("structural take-off", limits.take_off, Fraction(0)),
-        ("landing limit + trip fuel", limits.landing, take_off - at["landing"]),
+        (f"landing limit + {trip}", limits.landing, take_off - at["landing"]),
         ("zero-fuel limit + take-off fuel", limits.zero_fuel, take_off - at["zero fuel"]),
         ("ramp limit - taxi fuel", limits.ramp, take_off - at["ramp"]),
     ]
@@ -65,6 +67,6 @@ def allowable_take_off(declared: Declared, states: Mapping[Phase, State]) -> All
         if stated.at == "take-off":
             found.append(Candidate(stated.named, stated.weight))
         else:
-            found.append(Candidate(f"{stated.named} + trip fuel", stated.weight + take_off - at["landing"]))
+            found.append(Candidate(f"{stated.named} + {trip}", stated.weight + take_off - at["landing"]))
     missing = tuple(name for name, limit, _ in entered if limit is None)
     return Allowable(tuple(found), min(found, key=lambda one: one.weight, default=None), missing)

@@ -27,15 +27,24 @@ from loads.balance.checks_seats import seat_checks
 from loads.balance.checks_standard import standard_checks
 from loads.balance.checks_weight import landing_fuel_check, weight_checks
 from loads.balance.checks_whole import whole_aircraft_checks
-from loads.balance.flown import Flown, at_ends_of_rails, fly, path_of, states_aboard, worst_of_each
+from loads.balance.flown import (
+    Flown,
+    at_ends_of_rails,
+    fly,
+    path_of,
+    states_aboard,
+    tanks_over_flight,
+    worst_of_each,
+)
 from loads.balance.fuel import FuelOffTable, FuelState
 from loads.balance.moves import Flight, cg_advice
+from loads.balance.path_events import parts_set
 from loads.balance.path_worst import Burn, burn_of
 from loads.balance.prepared import Prepared, prepared
 from loads.balance.rails import RailEnd, at_rail_end, parts_lie_apart, rail_ends, worse_of
 from loads.balance.report import Assessed, report, report_without_basis
 from loads.balance.result import Check, Result, State, verdict_of
-from loads.balance.sections import dry_at_phases
+from loads.balance.sections import dry_at_phases, events_before
 from loads.balance.sumsheet import Aboard, Sums, all_lines, lines_without_fuel
 from loads.balance.sumsheet_events import flight_lines
 
@@ -98,7 +107,11 @@ def _states_of(
     if flown is None:
         return {}, ()
     dry_at = dry_at_phases(declared, flown.dry) if flown.dry is not None else None
-    return _states(aboard, flown.fuel, ready, dry_at)
+    states, nothing_left = _states(aboard, flown.fuel, ready, dry_at)
+    if declared.sequence and ready.deciding:
+        parts = {phase: parts_set(declared, events_before(declared, phase)) for phase in states}
+        states = {phase: state._replace(parts=parts[phase]) for phase, state in states.items()}
+    return states, nothing_left
 
 
 def _states(
@@ -156,7 +169,7 @@ def _checks(
         found.append(landing_fuel_check(declared.fuel, states["landing"], ready))
     if declared.sequence:
         runs = [(when, _aboard_checks(each, held_by(each), ready)) for when, each in states_aboard(declared)]
-        return found + worst_of_each(runs) + tank_checks(declared, ready)
+        return found + worst_of_each(runs) + tanks_over_flight(declared, ready)
     return found + _aboard_checks(declared, held, ready) + tank_checks(declared, ready)
 
 

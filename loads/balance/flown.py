@@ -8,13 +8,14 @@ from typing import Literal, NamedTuple
 from fleet.basis import Phase
 from fleet.weighing import EmptyFigures
 from loads.balance.aboard import Declared, Person
-from loads.balance.fuel import NOTHING, FuelState, fuel_states
+from loads.balance.checks_places import tank_checks
+from loads.balance.fuel import NOTHING, FuelOffTable, FuelState, fuel_states
 from loads.balance.over_flight import over_flight
 from loads.balance.path import Path, burn_path
 from loads.balance.path_events import sequence_path, with_settings, zero_fuel_turns
 from loads.balance.prepared import Prepared
 from loads.balance.result import Check, State
-from loads.balance.sections import Dry, Sections, dry_over_flight, sections_of
+from loads.balance.sections import Dry, Sections, after_transfer, dry_over_flight, sections_of
 from loads.balance.sumsheet import Sums
 
 ORDER = {"fail": 0, "unresolved": 1, "pass": 2, "advisory": 3}
@@ -77,6 +78,23 @@ def states_aboard(declared: Declared) -> list[tuple[str, Declared]]:
         if not found or aboard is not found[-1][1]:
             found.append((f"after event {number}" if number else "", aboard))
     return found
+
+
+def tanks_over_flight(declared: Declared, ready: Prepared) -> list[Check]:
+    """Return the check of each tank: at engine start, and after every transfer in flight."""
+    runs = [("", tank_checks(declared, ready))]
+    try:
+        sections = sections_of(declared, ready).sections
+    except FuelOffTable:
+        sections = ()
+    for section in sections:
+        if section.event is not None and section.event.transfer is not None:
+            contents = after_transfer(section.end, section.event)
+            tanks = tuple(replace(held, usable=contents[held.tank.id]) for held in declared.fuel.tanks)
+            then = replace(declared, fuel=replace(declared.fuel, tanks=tanks))
+            checks = [check._replace(phase=None) for check in tank_checks(then, ready)]
+            runs.append((f"after event {section.event.number}", checks))
+    return worst_of_each(runs)
 
 
 def worst_of_each(runs: Sequence[tuple[str, Sequence[Check]]]) -> list[Check]:

@@ -4,13 +4,16 @@ is released, a hopper that is emptied, somebody who walks aft, fuel that is pump
 Common practice; every figure is reckoned by hand on the invented aircraft of `round_figures`.
 """
 
+from dataclasses import replace
 from typing import Any
 
 import pytest
 
 from fleet.basis import BurnStage, Tank, TankTable
+from loads.balance.assess import assess
+from loads.balance.declared import read_load
 from tests.pure.loads.making import SOURCE, F, place, tank
-from tests.pure.loads.round_figures import SEATS, at, box, flown, q, round_basis, round_load
+from tests.pure.loads.round_figures import EMPTY, SEATS, at, box, flown, q, round_basis, round_load
 
 TO_THE_DOOR = [{"seat": name, "to": "DOOR"} for name in SEATS]
 
@@ -179,3 +182,30 @@ def test_a_load_without_a_sequence_is_as_it_was(weight: int | None) -> None:
     assert "sequence" not in document
     assert "runs" not in document["path"]
     assert not [line for line in result.lines if line.group == "sequence"]
+
+
+def test_a_transfer_into_a_tank_that_a_restriction_filled_in_part_is_named_with_the_event() -> None:
+    # 50 US gal at most: 30 usable, 20 pumped in, and 10 that a restriction made unusable are 60
+    tanks = (tank("FRONT", 100, 50), tank("REAR", 100, 70))
+    order = (BurnStage(("FRONT",)), BurnStage(("REAR",)))
+    basis = round_basis(tanks=tanks, burn_order=order, taxi_order=order)
+    small = replace(tanks[1], capacity=F(50))
+    pumped = event(0, transfer={"from": "FRONT", "to": "REAR", "quantity": q(20, "US gal")})
+    start = {"FRONT": q(30, "US gal"), "REAR": q(30, "US gal")}
+    declared = read_load(round_load(start=start, sequence=[pumped]), basis)
+    plan = declared.fuel
+    filled = replace(plan.tanks[1], tank=small, trapped=F(10))
+    restricted = replace(declared, fuel=replace(plan, tanks=(plan.tanks[0], filled)))
+
+    check = assess(restricted, basis, EMPTY).check("tank.REAR")
+    assert (check.outcome, check.actual, check.limit) == ("fail", "60", "50")
+    assert check.margin_text == "10 US gal above the limit, after event 1"
+
+
+def test_the_allowable_take_off_weight_counts_what_leaves_before_the_landing() -> None:
+    # landing limit 2440, 120 lb burned and 800 lb of people gone by then: 3360 lb may take off
+    result = flown(round_load(4, sequence=jump_run(2)), round_basis(weights={"landing": 2440}))
+    allowable = result.as_document()["allowable_take_off"]
+    assert isinstance(allowable, dict)
+    assert allowable["weight"] == "3360"
+    assert allowable["governed_by"] == "landing limit + trip fuel and what leaves"
