@@ -32,6 +32,7 @@ from service.client.problems import (
 )
 from service.client.provisions import Provision, Provisions
 from service.client.rechecks import Recheck, RecheckedFlight
+from service.client.remedies import Remedies, Remedy
 from service.client.shapes import (
     Aircraft,
     Assessment,
@@ -78,6 +79,8 @@ __all__ = (
     "Recheck",
     "RecheckedFlight",
     "Refused",
+    "Remedies",
+    "Remedy",
     "ServerFailed",
     "Settings",
     "StateNotSent",

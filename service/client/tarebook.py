@@ -11,11 +11,22 @@ from service.client.loads import Loads
 from service.client.people import People
 from service.client.provisions import ProvisionRecords
 from service.client.rechecks import Rechecks
+from service.client.remedies import RemediesOfLoads
 from service.client.trail import Trail
 from service.client.webhooks import Webhooks
 
 
-class Tarebook(Loads, LateChanges, AircraftRecords, ProvisionRecords, Rechecks, People, Trail, Webhooks):
+class Tarebook(
+    Loads,
+    RemediesOfLoads,
+    LateChanges,
+    AircraftRecords,
+    ProvisionRecords,
+    Rechecks,
+    People,
+    Trail,
+    Webhooks,
+):
     """Talks to one Tarebook with one bearer token. Threads may share it.
 
     What stores something is sent with an Idempotency-Key that is made once a call, and sent again with the

@@ -13,6 +13,7 @@ MEASUREMENTS = (
     "decision_against_shapely",
     "path_against_shapely",
     "full_answer_cpu",
+    "remedies_against_highs",
     "paper_against_weasyprint",
     "act_against_bare_insert",
     "acts_under_load",
@@ -20,6 +21,8 @@ MEASUREMENTS = (
     "post_loads_by_clients",
     "memory_over_requests",
     "stored_loads",
+    "bulk_against_numpy",
+    "recheck_against_read",
     "seconds_to_the_summary",
 )
 

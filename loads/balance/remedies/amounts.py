@@ -20,7 +20,7 @@ from loads.balance.checks_places import held_by
 from loads.balance.remedies.arranging import Found, can_be_parted, is_movable, tenths_up
 from loads.balance.remedies.points import AXES, Spot, rows_inside, spots_of
 from loads.balance.remedies.program import Number, Program, Solution
-from loads.balance.remedies.question import TENTH, Question
+from loads.balance.remedies.question import BY_PEOPLE_ALONE, NOT_BY_LOADING, TENTH, Question
 from loads.balance.remedies.steps import Ballast, Step, Take, taken
 from loads.balance.remedies.suiting import fixed_lines
 from loads.balance.result import Result
@@ -83,6 +83,8 @@ class _Least:
 
     def found(self) -> Found | None:
         """Return the least amount that holds; None when there is none or the time ran out."""
+        if self.question.breaks(*NOT_BY_LOADING, *BY_PEOPLE_ALONE):
+            return None
         low, high = self.question.weight_range()
         ends = (low, high) if self.sign > 0 else (_minus(high), _minus(low))
         first = max(ends[0] or ZERO, TENTH)

@@ -18,7 +18,7 @@ from fleet.sourced import Limit
 from loads.balance.aboard import Item, Person
 from loads.balance.checks_places import held_by
 from loads.balance.remedies.program import Number, Outcome, Program, Solution
-from loads.balance.remedies.question import TENTH, Question
+from loads.balance.remedies.question import BY_PEOPLE_ALONE, NOT_BY_LOADING, TENTH, Question
 from loads.balance.remedies.reach import Interval, Ways
 from loads.balance.remedies.steps import Reseat, Shift, Step, taken
 from loads.balance.remedies.suiting import fixed_lines, free_seats, suits
@@ -53,10 +53,7 @@ def arranged(question: Question, ways: Ways, *, people: bool, items: bool) -> Fo
     """Return the smallest set of moves of people, of items, or of both, that brings the load within; None
     when there is none, or none was found in time.
     """
-    low, high = question.weight_range()
-    if (low is not None and low > 0) or (high is not None and high < 0):
-        return None  # no weight is mended by moving what is aboard
-    if ways.along == () or ways.across == ():
+    if ways.along == () or ways.across == () or not _mendable(question, people=people):
         return None
     table = table_of(question, ways, people=people, items=items)
     if not table.seats and not table.moves:
@@ -78,6 +75,15 @@ def arranged(question: Question, ways: Ways, *, people: bool, items: bool) -> Fo
         ruled_out: dict[int, Number] = {**dict.fromkeys(chosen, 1), **dict.fromkeys(others, -1)}
         table.program.row(ruled_out, high=len(chosen) - 1)
     return None
+
+
+def _mendable(question: Question, *, people: bool) -> bool:
+    """Return whether moving what is aboard can mend every limit that is broken."""
+    low, high = question.weight_range()
+    if (low is not None and low > 0) or (high is not None and high < 0):
+        return False
+    others = NOT_BY_LOADING if people else (*NOT_BY_LOADING, *BY_PEOPLE_ALONE)
+    return not question.breaks(*others)
 
 
 def table_of(question: Question, ways: Ways, *, people: bool, items: bool) -> _Table:

@@ -10,7 +10,7 @@ excess of weight is proved the smallest; anything else is the best found.
 from collections.abc import Callable, Iterator, Mapping
 from fractions import Fraction
 from itertools import permutations
-from math import ceil, floor
+from math import ceil, floor, lcm
 
 from fleet.basis import Basis
 from loads.balance.aboard import Declared, FuelPlan
@@ -22,14 +22,17 @@ from loads.balance.result import Result
 
 ZERO = Fraction(0)
 RUNGS = 8
+NOT_BY_FUEL = ("seat.", "place.", "zone.", "persons.")
 Group = tuple[str, ...]  # tanks that change alike
-Made = Callable[[int], tuple[Step, ...] | None]  # from whole tenths of a volume to the steps
+Made = Callable[[int], tuple[Step, ...] | None]  # from tenths in each tank to the steps
 
 
 def less_fuel(question: Question) -> Found | None:
     """Return the least fuel to leave out; None without fuel to spare above what is wanted at landing."""
     plan, stops = question.declared.fuel, broken(question.result)
-    if not plan.minimum_at_landing or any(check.phase == "zero fuel" for check in stops):
+    if not plan.minimum_at_landing or question.breaks(*NOT_BY_FUEL):
+        return None
+    if any(check.phase == "zero fuel" for check in stops):
         return None
     spare = question.result.state("landing").fuel - plan.minimum_at_landing
     most = floor(spare / plan.density / TENTH)
@@ -38,9 +41,11 @@ def less_fuel(question: Question) -> Found | None:
     best: tuple[int, Found] | None = None
     for group in _groups(question.declared, question.ready.basis):
         bound = most if best is None else min(most, best[0] - 1)
-        found = _ladder(question, _drawn_from(plan, group), least, bound)
+        step = len(group)  # a tenth in each tank of it
+        found = _ladder(question, _drawn_from(plan, group), ceil(Fraction(least, step)), bound // step)
         if found is not None:
-            amount, steps, result = found
+            count, steps, result = found
+            amount = count * step
             best = amount, Found(steps, result, amount == least)
             if amount == least:
                 break
@@ -49,10 +54,7 @@ def less_fuel(question: Question) -> Found | None:
 
 def fuel_elsewhere(question: Question) -> Found | None:
     """Return the least fuel to carry in other tanks instead; how much is aboard stays the same."""
-    stops = broken(question.result)
-    if not question.declared.fuel.minimum_at_landing or any(
-        check.code.startswith(OWN_WEIGHTS) for check in stops
-    ):
+    if not question.declared.fuel.minimum_at_landing or question.breaks(*OWN_WEIGHTS, *NOT_BY_FUEL):
         return None
     plan = question.declared.fuel
     best: tuple[int, Found] | None = None
@@ -60,10 +62,13 @@ def fuel_elsewhere(question: Question) -> Found | None:
         if set(start) & set(end):
             continue
         made = _carried_over(plan, start, end)
-        bound = _most_carried(plan, start, end) if best is None else best[0] - 1
-        found = _ladder(question, made, 1, bound)
+        step = lcm(len(start), len(end))
+        bound = _most_carried(plan, start, end)
+        bound = bound if best is None else min(bound, best[0] - 1)
+        found = _ladder(question, made, 1, bound // step)
         if found is not None:
-            best = found[0], Found(found[1], found[2], found[0] == 1)
+            amount = found[0] * step
+            best = amount, Found(found[1], found[2], amount == 1)
     return None if best is None else best[1]
 
 
@@ -83,7 +88,7 @@ def _groups(declared: Declared, basis: Basis) -> Iterator[Group]:
 def _ladder(
     question: Question, made: Made, least: int, most: int
 ) -> tuple[int, tuple[Step, ...], Result] | None:
-    """Return the least amount found that holds, with its steps; amounts are whole tenths of a volume."""
+    """Return the least count found that holds, with its steps: of tenths in each tank that changes."""
     if least > most:
         return None
     below = least - 1
@@ -126,7 +131,7 @@ def _drawn_from(plan: FuelPlan, group: Group) -> Made:
     tanks = [held for held in plan.tanks if held.tank.id in group]
 
     def made(tenths: int) -> tuple[Step, ...] | None:
-        each = -(-tenths // len(tanks)) * TENTH if tanks else ZERO
+        each = tenths * TENTH
         if not tanks or any(held.usable < each for held in tanks):
             return None
         return tuple(Refuel(held.tank, -each) for held in tanks)
@@ -139,10 +144,8 @@ def _carried_over(plan: FuelPlan, start: Group, end: Group) -> Made:
     taking = [held for held in plan.tanks if held.tank.id in end]
 
     def made(tenths: int) -> tuple[Step, ...] | None:
-        amount = tenths * TENTH
+        amount = tenths * TENTH * lcm(len(giving), len(taking))
         less, more = amount / len(giving), amount / len(taking)
-        if any((each / TENTH).denominator != 1 for each in (less, more)):
-            return None  # no whole tenths in each tank
         if any(held.usable < less for held in giving):
             return None
         if any(held.usable + held.trapped + more > held.tank.capacity for held in taking):

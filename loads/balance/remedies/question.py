@@ -16,6 +16,9 @@ Judge = Callable[[Declared], Result]
 
 TENTH = Fraction(1, 10)  # amounts are whole tenths of the unit: the last digit that is printed
 OWN_WEIGHTS = ("weight.", "performance.")
+# What no load of people and items mends, and what only people mend.
+NOT_BY_LOADING = ("tank.", "tank-table.", "persons.", "fuel.")
+BY_PEOPLE_ALONE = ("seat.",)
 
 
 @dataclass
@@ -40,6 +43,10 @@ class Question:
     def left(self) -> float:
         """Return the seconds left; 0 when there are none."""
         return max(self.until - self.clock(), 0.0)
+
+    def breaks(self, *kinds: str) -> bool:
+        """Return whether a limit is broken whose code begins like one of these."""
+        return any(check.code.startswith(kinds) for check in broken(self.result))
 
     def weight_range(self) -> tuple[Fraction | None, Fraction | None]:
         """Return by how much every weight of the flight may change, from and to, as the checks of weights

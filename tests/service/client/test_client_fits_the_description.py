@@ -23,6 +23,8 @@ from service.client import (
     Person,
     Provision,
     RecheckedFlight,
+    Remedies,
+    Remedy,
     Settings,
     Tarebook,
     Token,
@@ -58,6 +60,8 @@ def test_a_document_has_the_fields_described(document: Any) -> None:
         (Version, "EmptyWeightLine"),
         (Delivery, "DeliveryAnswer"),
         (RecheckedFlight, "RecheckedFlight"),
+        (Remedies, "LoadRemedies"),
+        (Remedy, "Remedy"),
         (LatePreview, "LatePreview"),
         (Note, "NoteAnswer"),
         (Act, "ActLine"),
@@ -74,7 +78,7 @@ def test_what_is_read_is_always_answered(shape: Any, name: str) -> None:
 
 def test_a_load_and_a_line_of_the_list_are_always_answered_with_what_is_read() -> None:
     computed = {"verdict", "digest", "governing", "checks"}
-    assert computed - set(SHAPES["ComputedAnswer"]["required"]) == set()
+    assert computed - set(SHAPES["AssessedAnswer"]["required"]) == set()
     assert computed | {"id", "state", "replaces", "manifest"} <= set(SHAPES["LoadAnswer"]["required"])
     of_flight = {"reference", "leg", "departure"}
     line = {field.name for field in dataclasses.fields(LoadLine)} - NOT_IN_ANSWER - of_flight
@@ -127,6 +131,7 @@ CALLS: dict[str, Callable[[Tarebook], object]] = {
     "change_late": lambda made: made.change_late(SEEN, {}, PREVIEW, "pw"),
     "write_note": lambda made: made.write_note(SEEN, "a bag too many"),
     "ask_recheck": lambda made: made.ask_recheck("Q9-KTB", empty_weight=NUMBER, since=AT, reason="scale"),
+    "remedies": lambda made: made.remedies(NUMBER),
     "recheck": lambda made: made.recheck(NUMBER),
     "rechecked_flights": lambda made: list(made.rechecked_flights(NUMBER)),
     "recheck_table": lambda made: made.recheck_table(NUMBER),
