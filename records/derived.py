@@ -18,7 +18,7 @@ WITH asked AS MATERIALIZED (SELECT to_jsonb(s.*) AS r FROM ({derived_by}) s),
 held AS MATERIALIZED (SELECT to_jsonb(t.*) AS r FROM public.{table} t),
 wrong AS (SELECT r FROM held EXCEPT ALL SELECT r FROM asked),
 lacking AS (SELECT r FROM asked EXCEPT ALL SELECT r FROM held)
-SELECT coalesce(row_key(l.r, %(key)s::text[]), row_key(w.r, %(key)s::text[])), l.r::text, w.r::text,
+SELECT row_key(coalesce(l.r, w.r), %(key)s::text[]), l.r::text, w.r::text,
     (SELECT string_agg(e.key, ', ' ORDER BY e.key) FROM jsonb_each(l.r) e
      WHERE w.r -> e.key IS DISTINCT FROM e.value)
 FROM wrong w FULL JOIN lacking l ON row_key(w.r, %(key)s::text[]) = row_key(l.r, %(key)s::text[])
