@@ -145,7 +145,8 @@ class Envelope:
 
     `plane` says in which plane the edges are straight. `shape` decides: `shape.holds(weight, moment)`,
     exactly, and `shape.arm_section`, `shape.weight_section` for the two margins. `configurations` and
-    `categories` (of certification) are those it holds for, () for all. Making one raises
+    `categories` (of certification) are those it holds for, () for all; `positions` the states of moving parts
+    it holds in, such as the gear up: part by part, one not named may be in any. Making one raises
     `fleet.envelope.NotAnEnvelope`.
     """
 
@@ -157,6 +158,7 @@ class Envelope:
     source: Source
     configurations: tuple[str, ...] = ()
     categories: tuple[str, ...] = ()
+    positions: tuple[tuple[str, tuple[str, ...]], ...] = ()
     shape: Shape = field(init=False, compare=False, repr=False)
 
     def __post_init__(self) -> None:

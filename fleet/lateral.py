@@ -63,8 +63,8 @@ class Across:
 class LateralByCg:
     """A lateral limit against the longitudinal CG, at the phases it serves.
 
-    `gives` says whether its lateral figures are arms or moments; `configurations` and `categories` are those
-    it holds for, () for all. `shape` decides.
+    `gives` says whether its lateral figures are arms or moments; `configurations`, `categories` and
+    `positions` are those it holds for, as with an envelope. `shape` decides.
     """
 
     id: str
@@ -74,6 +74,7 @@ class LateralByCg:
     source: Source
     configurations: tuple[str, ...] = ()
     categories: tuple[str, ...] = ()
+    positions: tuple[tuple[str, tuple[str, ...]], ...] = ()
     shape: Across = field(init=False, compare=False, repr=False)
 
     def __post_init__(self) -> None:

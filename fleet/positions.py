@@ -7,7 +7,7 @@ Nothing gets heavier by it, and nothing shifts across the aircraft. Moments in t
 length unit of the basis; aft positive.
 """
 
-from collections.abc import Iterable
+from collections.abc import Container, Iterable
 from dataclasses import dataclass
 from fractions import Fraction
 from itertools import product
@@ -53,13 +53,16 @@ class Setting(NamedTuple):
 
     words: str
     moment: Fraction
+    parts: tuple[tuple[str, str], ...] = ()  # (part, state) of those that decide which envelope holds
 
 
-def settings(parts: Iterable[MovingPart], where: Where) -> tuple[Setting, ...]:
-    """Return the settings that may hold on the ground or in flight and change the moment,
-    one for each change of moment; () when there is none.
+def settings(
+    parts: Iterable[MovingPart], where: Where, told: Container[str] = ()
+) -> tuple[Setting, ...]:
+    """Return the settings that may hold on the ground or in flight and change the moment, one for each
+    change of moment; () when there is none. Of the parts in `told` each state counts as another setting.
     """
-    found: dict[Fraction, str] = {}
+    found: dict[tuple[Fraction, tuple[tuple[str, str], ...]], str] = {}
     choices = [
         [(part, state) for state in part.states if where in state.holds or state.id == part.as_weighed]
         for part in parts
@@ -67,9 +70,12 @@ def settings(parts: Iterable[MovingPart], where: Where) -> tuple[Setting, ...]:
     for combined in product(*choices):
         moment = sum((state.moment_change for _, state in combined), Fraction(0))
         moved = [f"{part.name} {state.name}" for part, state in combined if state.id != part.as_weighed]
-        if moment and moment not in found:
-            found[moment] = ", ".join(moved)
-    return tuple(Setting(words, moment) for moment, words in found.items())
+        deciding = tuple((part.id, state.id) for part, state in combined if part.id in told)
+        if not moment and all(state.id == part.as_weighed for part, state in combined if part.id in told):
+            continue
+        if (moment, deciding) not in found:
+            found[moment, deciding] = ", ".join(moved)
+    return tuple(Setting(words, moment, deciding) for (moment, deciding), words in found.items())
 
 
 def count_of_settings(parts: Iterable[MovingPart]) -> int:

@@ -123,7 +123,7 @@ def _held_together(
     """Return what holds at once in each configuration and category the envelope is for, without repeats."""
     own = {"configurations": envelope.configurations, "categories": envelope.categories}
     found = {}
-    for configuration, category in sorted(combinations(findings, own)):
+    for configuration, category, *_ in sorted(combinations(findings, own)):
         held = holding(
             (each for _, each in entered if holds_for(each, configuration, category or None)),
             phase,

@@ -4,7 +4,7 @@ from fractions import Fraction
 from typing import Any
 
 from fleet.basis import Envelope, Limits, Phase
-from fleet.basis_reading.applicability import combinations, everything, in_words, read_applicability
+from fleet.basis_reading.applicability import combinations, everything, in_words, read_held
 from fleet.basis_reading.findings import Findings, number
 from fleet.basis_reading.presentation import across_of
 from fleet.basis_reading.variants import Variants
@@ -28,7 +28,7 @@ _LIMIT_OF: dict[str, str] = {
 # Above the greatest weight limit by more than this an envelope is taken for one in another unit, or of
 # another type.
 _MOST_ABOVE = Fraction(5, 4)
-Served = tuple[str, str, str, str]  # axis, phase, configuration, category
+Served = tuple[str, ...]  # axis, phase, then the case
 
 
 def phases_of(words: list[str]) -> tuple[Phase, ...]:
@@ -82,8 +82,8 @@ def _demand_all(findings: Findings, taken: set[Served]) -> None:
 
 def _where(findings: Findings, served: set[Served]) -> str:
     """Return the first pair a fault is about, in words; nothing where it is about all there are."""
-    pairs = {(configuration, category) for _, _, configuration, category in served}
-    return "" if pairs == everything(findings) else f" in {in_words(min(pairs))}"
+    cases = {tuple(each[2:]) for each in served}
+    return "" if cases == everything(findings) else f" in {in_words(min(cases))}"
 
 
 def lateral_limits_entered(findings: Findings, envelopes: tuple[Envelope, ...]) -> bool:
@@ -115,7 +115,7 @@ def _envelope(findings: Findings, at: str, entry: dict[str, Any]) -> Envelope | 
                 for weight, (_, value) in zip(weights, entry["points"], strict=True)
             ),
             source=findings.source(entry["source"]),
-            **read_applicability(findings, at, entry),
+            **read_held(findings, at, entry),
         )
     except NotAnEnvelope as refused:
         findings.fault(f"{at}/points", refused.code, str(refused))

@@ -2,7 +2,7 @@
 
 from typing import Any
 
-from fleet.basis_reading.applicability import combinations, in_words, read_applicability
+from fleet.basis_reading.applicability import Case, combinations, in_words, read_held
 from fleet.basis_reading.envelopes import phases_of
 from fleet.basis_reading.findings import Findings, number
 from fleet.conversion import converted
@@ -15,7 +15,7 @@ def read_lateral_by_cg(findings: Findings) -> tuple[LateralByCg, ...]:
     """Return the limits. One that is no polygon, or serves what another serves already, is a fault."""
     findings.once(("lateral_by_cg",))
     found = []
-    taken: set[tuple[str, tuple[str, str]]] = set()
+    taken: set[tuple[str, Case]] = set()
     for at, entry in findings.entries("lateral_by_cg"):
         for row, word in enumerate(entry["phases"]):
             mine = {(word, pair) for pair in combinations(findings, entry)}
@@ -53,7 +53,7 @@ def _limit(findings: Findings, at: str, entry: dict[str, Any]) -> LateralByCg | 
             gives=entry["gives"],
             points=corners,
             source=findings.source(entry["source"]),
-            **read_applicability(findings, at, entry),
+            **read_held(findings, at, entry),
         )
     except NotAnEnvelope as refused:
         findings.fault(f"{at}/points", refused.code, str(refused))

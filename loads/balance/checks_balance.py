@@ -50,6 +50,8 @@ def balance_checks(states: Mapping[Phase, State], ready: Prepared, fix: CgFix) -
 def _at(state: State, axis: Axis, ready: Prepared, fix: CgFix) -> Check:
     """Return the check at one phase: of several envelopes the one with the least room stands for all."""
     bounds = ready.bounds(axis, state.phase)
+    if ready.deciding:
+        bounds = tuple(bound for bound in bounds if ready.holds_in(bound[0], state.parts))
     if not bounds:
         return _without_envelope(state, axis, ready)
     checks = [_within(state, axis, bound, ready, fix) for bound in bounds]

@@ -8,6 +8,7 @@ lateral ^   _______
 """
 
 from collections.abc import Callable, Iterable, Mapping, Sequence
+from dataclasses import replace
 from fractions import Fraction
 from typing import NamedTuple
 
@@ -61,7 +62,12 @@ class Figures(NamedTuple):
 
 def lateral_by_cg_checks(states: Mapping[Phase, State], ready: Prepared, fix: Fix) -> list[Check]:
     """Return the check of each phase that has such a limit; `fix` is asked only when one fails."""
-    return [_at(state, limit, ready, fix) for state in states.values() for limit in ready.across(state.phase)]
+    return [
+        _at(state, limit, ready, fix)
+        for state in states.values()
+        for limit in ready.across(state.phase)
+        if ready.holds_in(limit, state.parts)
+    ]
 
 
 def lateral_by_cg_path(path: Path, ready: Prepared, fix: Fix, told: Told) -> list[Check]:
@@ -117,10 +123,17 @@ def held_along(path: Path, ready: Prepared) -> Iterable[tuple[LateralByCg, Seque
     as well.
     """
     for limit in ready.basis.lateral_by_cg:
-        held = courses_of(path, [leg for leg, phases in HOLDS.items() if set(phases) & set(limit.phases)])
+        part = replace(
+            path,
+            stretches=tuple(each for each in path.stretches if ready.holds_in(limit, each.parts)),
+            settings=tuple(each for each in path.settings if ready.holds_in(limit, each.parts)),
+            turns=tuple(each for each in path.turns if ready.holds_in(limit, each.parts)),
+        )
+        held = courses_of(part, [leg for leg, phases in HOLDS.items() if set(phases) & set(limit.phases)])
         if "zero fuel" in limit.phases:
             for turn in path.zero_fuel:
-                held += moved(turn)
+                if ready.holds_in(limit, turn.parts):
+                    held += moved(turn)
         if held:
             yield limit, held
 

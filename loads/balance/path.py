@@ -50,7 +50,8 @@ class Stretch(NamedTuple):
 
     `held` is what the tanks hold where the draw begins, with what each feeding one has given before `start`.
     `dry` is the aircraft without usable fuel, None where that is the same all along; `setting` is in words
-    what gear and flaps are in, "" where they are as the sequence or the weighing has them.
+    what gear and flaps are in, "" where they are as the sequence or the weighing has them; `parts` are the
+    (part, state) that may differ from the weighing, of those that decide which envelope holds.
     """
 
     leg: Leg
@@ -61,6 +62,7 @@ class Stretch(NamedTuple):
     held: tuple[Contents, Fraction] = ({}, NOTHING)
     dry: Fraction | None = None
     setting: str = ""
+    parts: tuple[tuple[str, str], ...] = ()
 
     def at(self, weight: Fraction) -> Knot:
         """Return the aircraft at a weight of this stretch."""
@@ -106,6 +108,7 @@ class Turn(NamedTuple):
     swept: bool
     dry: Fraction
     setting: str = ""
+    parts: tuple[tuple[str, str], ...] = ()
 
 
 @dataclass(frozen=True, slots=True)

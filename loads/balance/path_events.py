@@ -11,7 +11,7 @@ from fractions import Fraction
 from itertools import pairwise
 
 from fleet.basis import Phase
-from fleet.positions import settings
+from fleet.positions import Setting, settings
 from fleet.tanks import TankPiece
 from loads.balance.aboard import Declared
 from loads.balance.events import Event, Transfer
@@ -43,11 +43,26 @@ def sequence_path(
         first = len(found.stretches)
         tanks.fly(section.leg, section.start, section.draws, (start, end), found)
         without_fuel = sums.weight + staying
-        found.stretches[first:] = [each._replace(dry=without_fuel) for each in found.stretches[first:]]
+        parts = parts_set(declared, section.aboard)
+        found.stretches[first:] = [
+            each._replace(dry=without_fuel, parts=parts) for each in found.stretches[first:]
+        ]
         if section.event is not None:
             later = dry[section.aboard + 1].sums.weight + staying
-            turns += _turns(section, end, flown, (without_fuel, later), found.gaps)
+            both = parts, parts_set(declared, section.aboard + 1)
+            turns += [
+                turn._replace(parts=both[turn.where.startswith("just after")])
+                for turn in _turns(section, end, flown, (without_fuel, later), found.gaps)
+            ]
     return Path(tuple(found.stretches), tuple(found.gaps), declared.fuel.density, tuple(turns))
+
+
+def parts_set(declared: Declared, events: int) -> tuple[tuple[str, str], ...]:
+    """Return the (part, state) of all parts the first so many events of a sequence have set."""
+    held: dict[str, str] = {}
+    for event in declared.sequence[:events]:
+        held |= {part.id: state.id for part, state in event.positions}
+    return tuple(held.items())
 
 
 def with_settings(path: Path, declared: Declared, ready: Prepared) -> Path:
@@ -56,13 +71,14 @@ def with_settings(path: Path, declared: Declared, ready: Prepared) -> Path:
     """
     stated = {part.id for event in declared.sequence for part, _ in event.positions}
     free = [part for part in ready.basis.positions if part.id not in stated]
-    ground, flight = settings(free, "ground"), settings(free, "flight")
+    told = ready.deciding
+    ground, flight = settings(free, "ground", told), settings(free, "flight", told)
     more: list[Stretch] = []
     turns: list[Turn] = []
     for legs, found in ((("taxi",), ground), (("flight", "reserve"), flight)):
-        for words, moment in found:
-            more += [_set(each, words, moment) for each in path.stretches if each.leg in legs]
-            turns += [_turn_set(each, words, moment) for each in path.turns if each.leg in legs]
+        for setting in found:
+            more += [_set(each, setting) for each in path.stretches if each.leg in legs]
+            turns += [_turn_set(each, setting) for each in path.turns if each.leg in legs]
     return replace(path, settings=tuple(more), turns=(*path.turns, *turns))
 
 
@@ -83,8 +99,9 @@ def zero_fuel_turns(
             state.lateral_moment + each.sums.lateral_moment - base.sums.lateral_moment,
         )
         where = f"at zero fuel after event {number}" if number else "at zero fuel"
-        turn = Turn("flight", where, ((knot, {}),), False, knot.weight)
-        turns += [turn, *(_turn_set(turn, words, moment) for words, moment in settings(free, "flight"))]
+        turn = Turn("flight", where, ((knot, {}),), False, knot.weight, parts=parts_set(declared, number))
+        found = settings(free, "flight", ready.deciding)
+        turns += [turn, *(_turn_set(turn, setting) for setting in found)]
     return tuple(turns)
 
 
@@ -174,13 +191,16 @@ def _level(one: TankPiece, other: TankPiece, out: Fraction, into: Fraction) -> F
     return (one.slope + 2 * one.bend * out - other.slope - 2 * other.bend * into) / bends
 
 
-def _set(stretch: Stretch, words: str, moment: Fraction) -> Stretch:
+def _set(stretch: Stretch, setting: Setting) -> Stretch:
     start, end = (
-        knot._replace(moment=knot.moment + moment, phase=None) for knot in (stretch.start, stretch.end)
+        knot._replace(moment=knot.moment + setting.moment, phase=None)
+        for knot in (stretch.start, stretch.end)
     )
-    return stretch._replace(start=start, end=end, setting=words)
+    parts = (*stretch.parts, *setting.parts)
+    return stretch._replace(start=start, end=end, setting=setting.words, parts=parts)
 
 
-def _turn_set(turn: Turn, words: str, moment: Fraction) -> Turn:
-    knots = tuple((knot._replace(moment=knot.moment + moment), held) for knot, held in turn.knots)
-    return turn._replace(knots=knots, setting=words, where=f"{turn.where}, with {words}")
+def _turn_set(turn: Turn, setting: Setting) -> Turn:
+    knots = tuple((knot._replace(moment=knot.moment + setting.moment), held) for knot, held in turn.knots)
+    parts, where = (*turn.parts, *setting.parts), f"{turn.where}, with {setting.words}"
+    return turn._replace(knots=knots, setting=setting.words, where=where, parts=parts)

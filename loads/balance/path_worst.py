@@ -98,13 +98,17 @@ def _points(path: Path, axis: Axis, ready: Prepared) -> list[tuple[Bound, Neares
     if not path.stretches or not (ramp or flight or landing):
         return []
     stretches = path.stretches
-    if path.settings and axis == "longitudinal":
+    if path.settings and (axis == "longitudinal" or ready.deciding):
         stretches += path.settings
     curves = curves_of(stretches, axis)
     found = []
     for bound in _each_once((*flight, *ramp, *landing)):
         legs = _legs(bound, ramp, flight, landing)
-        held = [curve for curve in curves if legs[curve.stretch.leg]]
+        held = [
+            curve
+            for curve in curves
+            if legs[curve.stretch.leg] and ready.holds_in(bound[0], curve.stretch.parts)
+        ]
         if held:
             found.append((bound, least_margin(held, bound[1])))
     return found
@@ -136,7 +140,11 @@ def _turns(path: Path, axis: Axis, ready: Prepared) -> list[Worst]:
     found = []
     for bound in _each_once((*flight, *ramp, *landing)):
         legs = _legs(bound, ramp, flight, landing)
-        found += [worst_turn(bound, turn, axis) for turn in path.turns if legs[turn.leg]]
+        found += [
+            worst_turn(bound, turn, axis)
+            for turn in path.turns
+            if legs[turn.leg] and ready.holds_in(bound[0], turn.parts)
+        ]
     return found
 
 
@@ -147,7 +155,10 @@ def worst_at_zero_fuel(path: Path, axis: Axis, ready: Prepared) -> list[Worst]:
     if not path.zero_fuel:
         return []
     found = [
-        worst_turn(bound, turn, axis) for bound in ready.bounds(axis, "zero fuel") for turn in path.zero_fuel
+        worst_turn(bound, turn, axis)
+        for bound in ready.bounds(axis, "zero fuel")
+        for turn in path.zero_fuel
+        if ready.holds_in(bound[0], turn.parts)
     ]
     return [min(found, key=lambda each: (each.room is not None, each.room or NOTHING))] if found else []
 

@@ -6,7 +6,7 @@ from collections import OrderedDict
 from collections.abc import Iterable
 from fractions import Fraction
 
-from fleet.basis import PHASES, Axis, Basis, Phase, TankTable
+from fleet.basis import PHASES, Axis, Basis, Envelope, Phase, TankTable
 from fleet.conversion import density_unit
 from fleet.envelope import Shape
 from fleet.lateral import LateralByCg
@@ -24,8 +24,8 @@ class Prepared:
     """What is derived from a basis once and used for every load of it. Unchanging once made."""
 
     __slots__ = (
-        "_as_weighed",
         "_across",
+        "_as_weighed",
         "_bounds",
         "_chord_factor",
         "_curves",
@@ -72,9 +72,11 @@ class Prepared:
         }
         self._as_weighed = {part.id: part.as_weighed for part in basis.positions}
         # The moving parts whose state decides which envelope holds.
-        self.deciding = frozenset(
-            part for one in (*basis.envelopes, *basis.lateral_by_cg) for part, _ in one.positions
-        )
+        positions = [
+            *(one.positions for one in basis.envelopes),
+            *(one.positions for one in basis.lateral_by_cg),
+        ]
+        self.deciding = frozenset(part for each in positions for part, _ in each)
         self._across = {
             phase: tuple(limit for limit in basis.lateral_by_cg if phase in limit.phases) for phase in PHASES
         }

@@ -88,6 +88,7 @@ class State(NamedTuple):
     arm: Fraction
     lateral_arm: Fraction
     fuel: Fraction
+    parts: tuple[tuple[str, str], ...] = ()  # (part, state) a sequence has set until then
 
 
 class Line(NamedTuple):
