@@ -35,11 +35,11 @@ class EmptyWeightParticulars:
     how: Literal["weighing", "opening entry"]
     fit: str
     datum: str
+    weighed_on: date
     date: date
     true_from: datetime
     report: str
     signed_by: str
-    weighed_on: date
 
 
 def read_particulars(document: object) -> EmptyWeightParticulars:

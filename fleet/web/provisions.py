@@ -32,7 +32,7 @@ from fleet.web.shown_provisions import version_shown
 from records.actor import Actor
 from records.kind import Kind
 from records.refusal import Refused
-from records.strict_json import read
+from records.strict_json import JSON, read
 from records.web.asking import actor_of, operator_of, signed_in
 
 
@@ -179,7 +179,7 @@ def _of_aircraft(
     return aircraft, provision_of(operator_of(request), kind, version, aircraft)
 
 
-def _document(request: HttpRequest) -> object:
+def _document(request: HttpRequest) -> JSON:
     return read(request.POST.get("document", "").encode())
 
 
