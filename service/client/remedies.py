@@ -6,7 +6,8 @@ from dataclasses import dataclass, field
 from typing import Any
 
 from service.client.exchange import Answer, Exchange
-from service.client.shapes import Load, LoadLine, read
+from service.client.reading import read
+from service.client.shapes import Load, LoadLine
 
 
 @dataclass(frozen=True, slots=True)

@@ -47,7 +47,7 @@ def programs_of(seed: int) -> list[Program]:
     try:
         ours(question_of(seed))
     finally:
-        Program.given = given  # type: ignore[method-assign]
+        Program.given = given  # type: ignore[method-assign]  # put back
     return kept
 
 
