@@ -19,7 +19,7 @@ from loads.queries.inspection import Flown, flights_without_manifest, loads_of_d
 from loads.queries.rechecks import flags_of
 from loads.web.asking import zone_of, zone_words
 from loads.web.beside import flag_shown
-from loads.web.inspect_versions import basis_shown, equipment_shown, weight_shown
+from loads.web.inspect_versions import basis_shown, equipment_shown, provisions_shown, weight_shown
 from loads.web.looking import Look, begins, ends
 from loads.web.shown import verdict_words
 from records.refusal import NotKnown
@@ -114,6 +114,7 @@ def _load(one: Flown, zone: ZoneInfo, now: datetime) -> dict[str, Any]:
         "assessed": used.assessed_at.astimezone(zone).strftime("%Y-%m-%d %H:%M"),
         "weight": weight_shown(used.empty_weight, held_now.empty_weight, zone),
         "basis": basis_shown(used.loading_basis, held_now.basis, zone),
+        "provisions": provisions_shown(used.provisions, zone),
         "flags": [flag_shown(flag) for flag in flags_of(load.id)],
         "equipment": equipment_shown(used.loading_basis, load.configuration),
         "configuration": load.configuration,
@@ -136,6 +137,7 @@ def _signers(operator: str, at: datetime) -> list[dict[str, str]]:
     asked = [
         ("Accept, as pilot in command of the flight", ("pilot",)),
         ("Sign as prepared", ("load preparer", "pilot", "operations manager")),
+        ("Sign as loaded, where the rules ask for it", ("loading supervisor",)),
         ("Approve an empty weight or a loading basis", ("records approver", "operations manager")),
         ("Enter an empty weight or a loading basis", ("maintenance", "operations manager")),
     ]

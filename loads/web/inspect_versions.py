@@ -1,11 +1,13 @@
 """The versions a load used, as the inspector's screen tells them: figures, report, author and approver."""
 
 import json
+from collections.abc import Sequence
 from datetime import datetime
 from typing import Any
+from uuid import UUID
 from zoneinfo import ZoneInfo
 
-from fleet.models import Approval, EmptyWeight, LoadingBasis
+from fleet.models import Approval, EmptyWeight, LoadingBasis, Provision
 from fleet.queries.aircraft import empty_weight_of, loading_basis_of
 
 Shown = dict[str, Any]
@@ -58,6 +60,27 @@ def basis_shown(used: LoadingBasis | None, now: LoadingBasis | None, zone: ZoneI
         "document": f"{document['title']} {document['number']} rev {document['revision']}",
         "digest": version.digest,
         "other_now": f"revision {now.revision}" if now and now.id != version.id else "",
+    }
+
+
+def provisions_shown(used: Sequence[UUID], zone: ZoneInfo) -> list[Shown]:
+    """This function will tell the tables, rules, restrictions and permits a load used, with who entered and
+    approved them.
+    """
+    rows = Provision.objects.filter(id__in=list(used)).select_related("entered_by", "approval__approved_by")
+    found = {row.id: row for row in rows}
+    return [_provision(found[one], zone) for one in used if one in found]
+
+
+def _provision(row: Provision, zone: ZoneInfo) -> Shown:
+    approval = getattr(row, "approval", None)
+    document = json.loads(row.document)
+    return {
+        "kind": row.kind,
+        "title": f"{document.get('number', row.number)}: {document.get('title') or document.get('what')}",
+        "entered": f"{row.entered_by.name}, {_local(row.entered_at, zone)}",
+        "approved": f"{approval.approved_by.name}, {_local(approval.known_from, zone)}" if approval else "",
+        "digest": row.digest,
     }
 
 

@@ -22,10 +22,11 @@ from loads.queries.overtaken import database_time
 from loads.queries.signable import signatures_due
 from loads.queries.stale import stale_parts
 from records.refusal import NotAllowed, StepRefused
-from tests.cast import PASSWORD, Cast, actor, cast
+from tests.cast import PASSWORD, Cast, actor, browser, cast
 from tests.loads.making import load_document, prepared, signing
 from tests.makers import empty_weight_document, make_empty_weight, q, ready_aircraft
 from tests.pure.fleet.test_rules import every, rule, rules_document
+from tests.reading_pages import Page
 
 pytestmark = pytest.mark.django_db
 
@@ -174,3 +175,14 @@ def test_rules_count_for_nothing_before_another_person_approved_them(people: Cas
     assert weighing(submitted(people)) is None
     with pytest.raises(NotAllowed):
         approve_rules(actor(people.manager), entered)
+
+
+def test_the_inspectors_screen_tells_what_the_operator_laid_down_for_a_load(people: Cast) -> None:
+    ruled(people, rule(**every(36, "calendar months")))
+    submitted(people)
+
+    words = Page(browser(people.auditor).get("/inspect?aircraft=Q9-KTB&day=2026-12-01")).words
+
+    assert "Rules 1: Rules of the certificate, entered by M. Keel" in words
+    assert "approved by E. Quill" in words
+    assert "Sign as loaded, where the rules ask for it" in words
