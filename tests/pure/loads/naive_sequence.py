@@ -1,5 +1,5 @@
-"""A second way along a flight with a sequence, slow and plain, beside `naive_path`: it shares nothing with the
-engine but the frozen values a load is read into.
+"""A second way along a flight with a sequence, slow and plain, beside `naive_path`: it shares nothing with
+the engine but the frozen values a load is read into.
 
 Who and what is aboard is a list of (line, weight, arm, lateral arm), changed event by event. Between events
 many points are sampled, during a transfer too, and every point once more for each setting of gear and flaps.
@@ -16,8 +16,8 @@ F = Fraction
 def aboard_at_start(declared, empty):
     """What is aboard without fuel, line by line; the empty aircraft has no line."""
     lines = [("", empty.weight, empty.moment, empty.lateral_moment)]
-    for item in (*declared.configuration.equipment, *declared.configuration.operating_items):
-        lines.append(("", item.weight, item.weight * item.arm, item.weight * item.lateral_arm))
+    fixed = (*declared.configuration.equipment, *declared.configuration.operating_items)
+    lines += [("", item.weight, item.weight * item.arm, item.weight * item.lateral_arm) for item in fixed]
     for person in (*declared.crew, *declared.passengers):
         infant = person.lap_infant.weight if person.lap_infant and person.lap_infant.weight else F(0)
         weight = person.weight + infant
@@ -56,10 +56,9 @@ def points_of_flight(declared, basis, empty, samples):
         ("flight", basis.burn_order, plan.trip / plan.density),
         ("reserve", basis.burn_order, None),
     )
-    for leg, stages, whole in trips:
-        if whole is None:
-            held = sum(contents.values(), F(0))
-            whole = max(F(0), held - plan.minimum_at_landing / plan.density)
+    for leg, stages, planned in trips:
+        spare = sum(contents.values(), F(0)) - plan.minimum_at_landing / plan.density
+        whole = max(F(0), spare) if planned is None else planned
         burned = F(0)
         for event in (*(one for one in declared.sequence if one.leg == leg), None):
             until = whole if event is None else event.burned

@@ -1,7 +1,8 @@
 """The worst point of a flight with a random sequence against many samples: none is worse, one is as bad.
 
 The judge is `naive_sequence`, which shares no code with the engine. Beside tanks, tables and envelopes of
-`test_path_against_sampling`, events are drawn: people and items that leave or move, transfers, gear and flaps.
+`test_path_against_sampling`, events are drawn: people and items that leave or move, transfers, gear and
+flaps.
 """
 
 from dataclasses import replace
@@ -56,7 +57,7 @@ def sequences(draw, basis, plan):
                 if leg == "taxi"
                 else ("leave", "move", "transfer", "position")
             )
-            made = draw(_events(draw(st.sampled_from(kinds)), basis, plan, contents, people, items))
+            made = draw(_events(draw(st.sampled_from(kinds)), basis, plan, (contents, people, items)))
             if made is None:
                 continue
             found.append(Event(len(found) + 1, leg, burned, "", **made))
@@ -67,7 +68,8 @@ def sequences(draw, basis, plan):
 
 
 @st.composite
-def _events(draw, kind, basis, plan, contents, people, items):
+def _events(draw, kind, basis, plan, then):
+    contents, people, items = then
     if kind == "leave":
         lines = draw(st.sets(st.sampled_from([*people, *items]), max_size=2)) if people or items else set()
         leaving = []
