@@ -192,6 +192,23 @@ def test_a_remedy_brings_the_load_within_the_operational_envelope_not_only_the_c
     assert result_of(moved, basis).verdict == "outside"
 
 
+def test_a_load_in_the_tip_that_the_margins_cut_off_is_outside_them_and_inside_the_certified_envelope():
+    """The envelope runs to a point at 118.76 in and 5,800 lb: at 5,760.5 lb 0.45 in of it are left, less than
+    half an inch from either side.
+    """
+    tent = envelope((108, 4000), (F("118.76"), 5800), (129, 4000))
+    half = margin(aft=Inset(arm=F("0.5")), forward=Inset(arm=F("0.5")))
+
+    result = result_of(basis=curtailed(half, envelopes=(tent,)))
+    check = result.check("cg.take-off")
+
+    assert (check.outcome, check.low, check.limit) == ("fail", None, None)
+    assert check.margin_text.startswith("no part of the envelope lies at this weight, 49.8 lb above")
+    assert "outside the operator's margin, inside the certified envelope by 0.21 in" in check.margin_text
+    assert result_of(basis=curtailed(envelopes=(tent,))).check("cg.take-off").outcome == "pass"
+    assert result.check("path.longitudinal").outcome == "fail"
+
+
 insets = st.one_of(
     st.just(Inset()),
     st.integers(1, 120).map(lambda number: Inset(arm=F(number, 100))),
