@@ -37,6 +37,8 @@ _NEEDS_A_PERSON: Final = SIGNATURES | {
     fleet.acts.LIFT_RESTRICTION.name,
     loads.acts.REMARK_REJECT.name,
     loads.acts.WRITE_NOTE.name,
+    loads.acts.RECHECK_LOADS.name,
+    loads.acts.RUN_SELF_CHECK.name,
     fleet.acts.ENTER_PERSON.name,
     fleet.acts.GRANT_DUTY.name,
     fleet.acts.END_DUTY.name,

@@ -4,10 +4,10 @@ names.
 
 from bisect import bisect_right
 from collections.abc import Sequence
-from dataclasses import dataclass, replace
+from dataclasses import replace
 from datetime import datetime
 from functools import lru_cache
-from typing import Final
+from typing import Final, NamedTuple
 from uuid import UUID
 
 from django.db import connection
@@ -31,17 +31,19 @@ SELECT DISTINCT turn FROM (
 """
 
 
-@dataclass(frozen=True, slots=True)
-class Assessed:
-    """What a stored load was assessed with, and what is needed to find what holds for it now."""
+class Assessed(NamedTuple):
+    """What a stored load was assessed with, and what is needed to find what holds for it now.
+
+    The instants are as the database writes them, in UTC: few of many loads need them.
+    """
 
     aircraft: UUID
     configuration: str
-    departure: datetime
+    departure: str
     loading_basis: UUID | None
     empty_weight: UUID | None
     provisions: tuple[UUID, ...]
-    known: datetime  # when it was assessed
+    known: str  # when it was assessed
 
 
 class OtherFit(Exception):
@@ -57,15 +59,26 @@ class Versions:
         self._in_force_now = named == (None, None, None)
         self._aircraft: dict[UUID, tuple[Aircraft, Sequence[datetime]]] = {}
         self._found: dict[tuple[UUID, str, int], InForce] = {}
+        self._named: dict[tuple[object, ...], InForce | OtherFit] = {}
 
     def known(self, one: Assessed) -> datetime:
         """This function will return the instant on the "known" clock that counts for a load."""
-        return self._recheck.asked_at if self._in_force_now else one.known
+        return self._recheck.asked_at if self._in_force_now else datetime.fromisoformat(one.known)
 
     def of(self, one: Assessed) -> InForce:
         """This function will return what a load is computed with; raises OtherFit."""
         if self._in_force_now:
             return self._now(one)
+        # All loads that used the same versions come to the same, so it is worked out once.
+        key = (one.loading_basis, one.empty_weight, one.configuration, *one.provisions)
+        found = self._named.get(key)
+        if found is None:
+            found = self._named[key] = self._replaced(one)
+        if isinstance(found, OtherFit):
+            raise found
+        return found
+
+    def _replaced(self, one: Assessed) -> InForce | OtherFit:
         recheck = self._recheck
         basis_id = recheck.loading_basis_id or one.loading_basis
         weight_id = recheck.empty_weight_id or one.empty_weight
@@ -74,7 +87,7 @@ class Versions:
         if recheck.empty_weight_id and basis is not None and weight is not None:
             fit = fit_of(basis_of(basis), one.configuration)
             if fit is not None and fit != weight.fit:
-                raise OtherFit
+                return OtherFit()
         return InForce(basis, weight, self._provisions(one))
 
     def _provisions(self, one: Assessed) -> Provisions:
@@ -96,10 +109,11 @@ class Versions:
                 self._aircraft[one.aircraft] = aircraft, [turn for (turn,) in cursor.fetchall()]
         aircraft, turns = self._aircraft[one.aircraft]
         # Between two turns nothing begins or ends, so one load stands for all of them.
-        key = (one.aircraft, one.configuration, bisect_right(turns, one.departure))
+        departure = datetime.fromisoformat(one.departure)
+        key = (one.aircraft, one.configuration, bisect_right(turns, departure))
         if key not in self._found:
             known = self._recheck.asked_at
-            self._found[key] = in_force_for(aircraft, one.departure, known, one.configuration)
+            self._found[key] = in_force_for(aircraft, departure, known, one.configuration)
         return self._found[key]
 
 

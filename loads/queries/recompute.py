@@ -9,7 +9,7 @@ import logging
 from collections.abc import Iterable, Iterator
 from dataclasses import dataclass
 from functools import lru_cache
-from typing import Any, Final, Literal
+from typing import Any, Final, Literal, NamedTuple
 from uuid import UUID
 
 from django.db import connection
@@ -37,8 +37,9 @@ GONE: Final = ("superseded", "withdrawn")
 _BATCH: Final = 500
 # What a last-minute change made of a load is what was assessed, so its body counts.
 _ROWS: Final = """
-SELECT p.load_id, p.assessment_id, p.verdict, p.aircraft_id, l.configuration, p.departure, s.loading_basis_id,
-       s.empty_weight_id, s.provisions, s.assessed_at, s.engine, coalesce(c.body, d.body)
+SELECT p.load_id, p.assessment_id, p.verdict, s.engine, convert_from(coalesce(c.body, d.body), 'UTF8'),
+       p.aircraft_id, l.configuration, (p.departure AT TIME ZONE 'UTC')::text || '+00:00', s.loading_basis_id,
+       s.empty_weight_id, s.provisions, (s.assessed_at AT TIME ZONE 'UTC')::text || '+00:00'
 FROM unnest(%s::uuid[]) WITH ORDINALITY AS asked (id, turn)
 JOIN loads_present p ON p.load_id = asked.id
 JOIN loads_load l ON l.id = p.load_id
@@ -53,8 +54,7 @@ _WORDS: Final[dict[int, Literal["within", "outside"]]] = {WITHIN: "within", OUTS
 _Key = tuple[UUID, UUID, str]
 
 
-@dataclass(frozen=True, slots=True)
-class Stored:
+class Stored(NamedTuple):
     """A load as it is stored: what was declared, and the verdict of the assessment in use."""
 
     load: UUID
@@ -62,7 +62,7 @@ class Stored:
     verdict: str
     engine: str
     assessed: Assessed
-    body: bytes
+    body: str
 
 
 @dataclass(frozen=True, slots=True)
@@ -168,7 +168,7 @@ def exact_outcome(one: Stored, versions: Versions) -> Outcome:
 
 
 def _assessed(one: Stored, versions: Versions) -> Result:
-    document: Any = read(one.body)
+    document: Any = read(one.body.encode())
     used, known = versions.of(one.assessed), versions.known(one.assessed)
     return assessed_with(document, read_outline(document), used, known, advised=False)[1]
 
@@ -194,19 +194,6 @@ def _excess(check: Check) -> str:
 
 
 def _stored(row: tuple[Any, ...]) -> Stored:
-    (
-        load,
-        assessment,
-        verdict,
-        aircraft,
-        configuration,
-        departure,
-        basis,
-        weight,
-        provisions,
-        known,
-        engine,
-        body,
-    ) = row
-    assessed = Assessed(aircraft, configuration, departure, basis, weight, tuple(provisions), known)
-    return Stored(load, assessment, verdict, engine, assessed, bytes(body))
+    load, assessment, verdict, engine, body, *used = row
+    used[5] = tuple(used[5])  # a list of the database cannot be a key
+    return Stored(load, assessment, verdict, engine, Assessed._make(used), body)

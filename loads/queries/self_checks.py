@@ -4,9 +4,12 @@ from dataclasses import dataclass
 from datetime import datetime, timedelta
 from typing import Final
 
+from fleet.queries.provisions import provisions_at
+from fleet.rules import Interval
+from fleet.rules_reading import rules_from_text
 from loads.balance.engine import ENGINE_VERSION
 from loads.models import SelfCheck
-from loads.selfcheck.interval import due_after
+from loads.selfcheck.interval import USUAL, interval_in, is_overdue
 from loads.selfcheck.references import reference_set
 from records.actor import HOUSE
 
@@ -18,12 +21,13 @@ _ONE_START: Final = timedelta(minutes=1)
 @dataclass(frozen=True, slots=True)
 class Standing:
     """The last self-check of this engine with this set of references, None without one, and whether it is
-    overdue. `failed`: the last one of any engine failed.
+    overdue by the `interval` of the operator's rules. `failed`: the last one of any engine failed.
     """
 
     last: SelfCheck | None
     overdue: bool
     failed: bool
+    interval: Interval | None
 
 
 def standing_of(operator: str, now: datetime) -> Standing:
@@ -34,8 +38,10 @@ def standing_of(operator: str, now: datetime) -> Standing:
     mine = SelfCheck.objects.filter(chain__in={operator, HOUSE}).order_by("-checked_at", "-id")
     newest = mine.only("passed").first()
     last = mine.filter(engine=ENGINE_VERSION, references=reference_set().digest).defer("document").first()
-    overdue = last is None or now >= due_after(last.checked_at)
-    return Standing(last, overdue, newest is not None and not newest.passed)
+    held = provisions_at(operator, None, now, now).rules
+    interval = interval_in(rules_from_text(held.document) if held is not None else None, now)
+    overdue = last is None or is_overdue(last.checked_at, now, interval)
+    return Standing(last, overdue, newest is not None and not newest.passed, interval)
 
 
 def last_checks(operator: str, most: int = MOST_SHOWN) -> tuple[SelfCheck, ...]:
@@ -60,4 +66,4 @@ def last_word(now: datetime) -> str:
         return "overdue"
     if not newest.passed:
         return "failed"
-    return "overdue" if now >= due_after(newest.checked_at) else "ok"
+    return "overdue" if is_overdue(newest.checked_at, now, USUAL) else "ok"

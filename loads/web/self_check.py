@@ -14,7 +14,6 @@ from loads.actions.self_check import run_self_check
 from loads.acts import RUN_SELF_CHECK
 from loads.models import SelfCheck
 from loads.queries.self_checks import last_checks, standing_of
-from loads.selfcheck.interval import MONTHS
 from loads.web.asking import zone_of
 from records.web.asking import actor_of, operator_of, signed_in
 
@@ -39,7 +38,7 @@ def self_check(request: HttpRequest) -> HttpResponse:
     context = {
         "failed": stands.failed,
         "overdue": stands.overdue,
-        "months": MONTHS,
+        "interval": stands.interval,
         "newest": _shown(checks[0], zone) if checks else None,
         "loads": json.loads(checks[0].document)["loads"] if checks else [],
         "checks": [_shown(one, zone) for one in checks],

@@ -272,7 +272,7 @@ API: tuple[Row, ...] = (
     ),
     Row("POST", f"{LOAD}/withdrawal", DECLARE, 200, _load("open", WHY), foreign=404),
     Row("POST", f"{LOAD}/departure", DECLARE, 200, _load("accepted", _departure), foreign=404),
-    Row("POST", "/api/v1/rechecks", MANAGE, 202, _recheck, foreign=422),
+    Row("POST", "/api/v1/rechecks", MANAGE, 202, _recheck, "person", 422),
     Row("GET", "/api/v1/rechecks/{recheck}", EVERY, 200, named("recheck"), foreign=404),
     Row("GET", "/api/v1/rechecks/{recheck}.csv", EVERY, 200, named("recheck"), foreign=404),
     Row("GET", "/api/v1/trail", EVERY, 200, _asked(about=_open)),

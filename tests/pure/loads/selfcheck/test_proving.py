@@ -2,7 +2,7 @@
 
 import json
 from dataclasses import replace
-from datetime import UTC, datetime
+from datetime import UTC, datetime, timedelta
 from fractions import Fraction
 from pathlib import Path
 
@@ -11,10 +11,11 @@ import pytest
 from fleet import conversion
 from fleet.envelope import Shape
 from fleet.quantities import Unit
+from fleet.rules import Applies, Interval, Rule, Rules
 from loads.balance import checks_weight, fuel
 from loads.balance.assess import assess
 from loads.selfcheck import proving
-from loads.selfcheck.interval import due_after
+from loads.selfcheck.interval import interval_in, is_overdue
 from loads.selfcheck.proving import prove
 from loads.selfcheck.references import reference_set
 
@@ -120,15 +121,25 @@ def test_the_same_engine_gives_the_same_proof():
 
 
 @pytest.mark.parametrize(
-    ("checked", "due"),
-    [
-        ("2026-01-15T10:00", "2026-07-15T10:00"),
-        ("2026-08-31T10:00", "2027-02-28T10:00"),
-        ("2027-08-31T00:00", "2028-02-29T00:00"),
-        ("2026-12-01T08:00", "2027-06-01T08:00"),
-    ],
+    ("checked", "last_good_day"),
+    [("2026-01-15", "2026-07-15"), ("2026-08-31", "2027-02-28"), ("2027-08-31", "2028-02-29")],
 )
-def test_it_is_due_six_months_later(checked, due):
-    assert due_after(datetime.fromisoformat(checked).replace(tzinfo=UTC)) == datetime.fromisoformat(
-        due
-    ).replace(tzinfo=UTC)
+def test_it_counts_six_months_where_the_rules_say_nothing(checked, last_good_day):
+    at = datetime.fromisoformat(f"{checked}T10:00:00+00:00")
+    last = datetime.fromisoformat(f"{last_good_day}T23:59:59+00:00")
+
+    assert not is_overdue(at, last, interval_in(None, at))
+    assert is_overdue(at, last + timedelta(seconds=1), interval_in(None, at))
+
+
+def test_of_several_rules_the_shortest_interval_counts_and_none_is_a_value():
+    now = datetime(2026, 12, 1, tzinfo=UTC)
+
+    def rules(*intervals):
+        made = (Rule("computer-check-interval", one, False, "manual 8.1", Applies()) for one in intervals)
+        return Rules("rules", tuple(made))
+
+    assert interval_in(rules(Interval(1, "years"), Interval(90, "days")), now) == Interval(90, "days")
+    assert interval_in(rules(None), now) is None
+    assert not is_overdue(now - timedelta(days=9000), now, None)
+    assert interval_in(rules(), now) == Interval(6, "months")
