@@ -175,3 +175,18 @@ def test_without_time_nothing_is_called_the_smallest() -> None:
     found = offered(full_cabin(0), nineteen(), AFT, 0.0)
     assert all(one["found"] == "best found" for one in found.offers)
     assert found.said
+
+
+def test_whoever_a_sequence_names_stays_in_the_seat_it_names() -> None:
+    document = full_cabin(1, count=14, aft=300)
+    document["sequence"] = [{"after_burning": {"value": 100, "unit": "lb"}, "leave": [{"seat": "ROW6-A"}]}]
+    basis, empty = nineteen(), empty_of(7600, 199)
+    free = full_cabin(1, count=14, aft=300)
+    moved = str(offered(free, basis, empty).offers[0]["sentence"])
+    found = offered(document, basis, empty).offers
+    assert "row6 a" in moved  # without an event it is this passenger who moves
+    assert found
+    assert "row6 a" not in str(found[0]["sentence"])
+    for offer in found:
+        changed = patched(document, offer["change"])  # type: ignore[arg-type]  # a list of operations
+        assert assess(read_load(changed, basis), basis, empty).verdict == "within"
