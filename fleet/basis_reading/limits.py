@@ -26,12 +26,19 @@ def read_limits(findings: Findings) -> Limits:
 
 def tightened(findings: Findings, own: dict[str, Any] | None, at: str, of_basis: Limits) -> Limits:
     """Return the limits of a configuration: its own where it gives one, which may not be looser than the
-    basis's.
+    basis's, nor contradict another.
     """
     if own is None:
         return of_basis
+    limits = tighter(findings, own, at, of_basis)
+    demand_consistent(findings, limits, at)
+    return limits
+
+
+def tighter(findings: Findings, own: dict[str, Any], at: str, of_basis: Limits) -> Limits:
+    """Return limits with others in their place; one that is looser is a fault."""
     given = given_limits(findings, own, at)
-    tighter = {}
+    found = {}
     for field in FIELDS:
         mine: Limit | None = getattr(given, field)
         theirs: Limit | None = getattr(of_basis, field)
@@ -39,12 +46,10 @@ def tightened(findings: Findings, own: dict[str, Any] | None, at: str, of_basis:
             findings.fault(
                 f"{at}/{field}",
                 "limit-looser",
-                "looser than the limit of the basis; a configuration may only tighten it",
+                "looser than the limit of the basis; a configuration or category may only tighten it",
             )
-        tighter[field] = mine or theirs
-    limits = Limits(**tighter)
-    demand_consistent(findings, limits, at)
-    return limits
+        found[field] = mine or theirs
+    return Limits(**found)
 
 
 def demand_consistent(findings: Findings, limits: Limits, at: str) -> None:

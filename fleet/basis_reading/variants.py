@@ -6,7 +6,7 @@ from typing import Any
 from fleet.applicable import tightest
 from fleet.basis import Limits
 from fleet.basis_reading.findings import Findings
-from fleet.basis_reading.limits import FIELDS, demand_consistent, given_limits, tightened
+from fleet.basis_reading.limits import FIELDS, demand_consistent, given_limits, tighter
 from fleet.flight_rules import CertificationCategory, Modification, NamedLimits
 
 
@@ -87,7 +87,9 @@ def _categories(findings: Findings, limits: Limits) -> tuple[CertificationCatego
     found = []
     for at, entry in findings.entries("certification_categories"):
         own = entry.get("limits")
-        tightened(findings, own, f"{at}/limits", limits)  # for its faults
+        if own is not None:
+            # For its faults. A category may allow less at take-off than another limit allows at landing.
+            tighter(findings, own, f"{at}/limits", limits)
         found.append(
             CertificationCategory(
                 entry["id"],

@@ -12,6 +12,7 @@ from tests.loads.late import change_of, proposed
 from tests.loads.making import load_document, signing
 from tests.makers import basis_document, empty_weight_document, q
 from tests.pure.fleet.cabins import cabin
+from tests.service.bad_input_provisions import PROVISION_NOT_TAKEN, PROVISION_SAMPLES
 from tests.service.permission_world import World
 
 Documents = tuple[dict[str, Any], ...]
@@ -24,7 +25,7 @@ def _source(page: str) -> dict[str, str]:
 
 
 def _loading_bases(_world: World) -> Documents:
-    """Two: figures where the other says there are none."""
+    """Three: figures where the second says there are none, and the rules that only some bases have."""
     full = basis_document(
         burn_order_source=_source("2-11"),
         taxi_order=[{"tanks": ["LEFT", "RIGHT"]}],
@@ -70,7 +71,83 @@ def _loading_bases(_world: World) -> Documents:
     spare["sample_loads"] = {"none": True, "source": _source("6-20")}
     spare["seats"][0]["maximum"] = spare["places"][0]["maximum"] = spare["zones"][0]["maximum"] = none
     spare["configurations"][0]["limits"] = dict.fromkeys(full["limits"], none)
-    return full, spare
+    return full, spare, _ruled()
+
+
+def _ruled() -> dict[str, Any]:
+    """A basis with categories, a modification, performance, fuel balance, trim, limits by gear."""
+    basis = basis_document()
+    del basis["lateral_limits"]
+    source = _source("6-9")
+    raised = {"take_off": {**q("8700", "lb"), "source": source}}
+    tighter = {"take_off": {**q("8000", "lb"), "source": source}}
+    states = [
+        {
+            "id": "DOWN",
+            "name": "down",
+            "moment_change": q("0", "lb in"),
+            "holds": ["ground"],
+            "source": source,
+        },
+        {"id": "UP", "name": "up", "moment_change": q("900", "lb in"), "holds": ["flight"], "source": source},
+    ]
+    held = {
+        "configurations": [one["id"] for one in basis["configurations"]],
+        "categories": ["normal", "utility"],
+        "positions": [{"part": "GEAR", "states": ["DOWN", "UP"]}],
+    }
+    required = {"at": "take-off", "rule": "required", "kinds": ["climb"], "operations": ["air-taxi"]}
+    basis["envelopes"][0] |= held
+    basis["configurations"][0] |= {
+        "modifications": ["KIT"],
+        "performance": [{"at": "landing", "rule": "structural only", "source": source}],
+    }
+    basis |= {
+        "positions": [{"id": "GEAR", "name": "gear", "as_weighed": "DOWN", "states": states}],
+        "certification_categories": [
+            {"id": "normal", "name": "normal category", "source": source},
+            {"id": "utility", "name": "utility category", "limits": tighter, "source": source},
+        ],
+        "modifications": [{"id": "KIT", "name": "weight kit", "limits": raised, "source": source}],
+        "performance": [{**required, "source": source}],
+        "lateral_by_cg": [
+            {
+                "id": "sides",
+                "phases": ["ramp", "take-off", "landing", "zero-fuel"],
+                "gives": "arm",
+                "points": [["110", "-5"], ["110", "5"], ["140", "5"], ["140", "-5"]],
+                "longitudinal_unit": "in",
+                "unit": "in",
+                "source": source,
+                **held,
+            }
+        ],
+        "fuel_balance": [_balance("WINGS", maximum=q("200", "lb")), _balance("BY-FUEL", table=_BY_FUEL)],
+        "trim": {
+            "against": "arm",
+            "against_unit": "in",
+            "unit": "units nose up",
+            "step": "0.1",
+            "range": {"low": "0", "high": "9", "source": source},
+            "tables": [
+                {
+                    "flap": "10",
+                    "weight": q("7000", "lb"),
+                    "points": [["110", "8"], ["140", "1"]],
+                    "source": source,
+                }
+            ],
+        },
+    }
+    return basis
+
+
+_BY_FUEL = {"unit": "US gal", "points": [["0", "60"], ["240", "20"]]}
+
+
+def _balance(name: str, **allowed: Any) -> dict[str, Any]:
+    sides: dict[str, Any] = {"left": ["LEFT"], "right": ["RIGHT"], "phases": ["ramp", "take-off", "landing"]}
+    return {"id": name, "name": "wing tanks", **sides, **allowed, "source": _source("6-9")}
 
 
 def _state_stations(basis: dict[str, Any]) -> None:
@@ -194,6 +271,7 @@ SAMPLES: Final[Mapping[str, Callable[[World], Documents]]] = {
     f"{_AIRCRAFT}/empty-weights/{{version}}/approval": _one(reason="read"),
     f"{_AIRCRAFT}/weighings": _empty_weights,
     f"{_AIRCRAFT}/seating-variations": lambda _world: (cabin(),),
+    **PROVISION_SAMPLES,
     "/api/v1/assessments": lambda world: (load_with_everything(world),),
     "/api/v1/loads": lambda world: (load_with_everything(world),),
     f"{_LOAD}/revisions": lambda world: ({**load_with_everything(world), "reason": "one bag more"},),
@@ -265,5 +343,6 @@ RIGHT: Final[tuple[tuple[str, str, frozenset[str]], ...]] = (
 )
 # What the schema describes and the endpoint refuses: an empty weight says itself from when it holds.
 NOT_TAKEN: Final[Mapping[str, frozenset[str]]] = {
-    f"{_AIRCRAFT}/empty-weights/{{version}}/approval": frozenset({"/true_from"})
+    f"{_AIRCRAFT}/empty-weights/{{version}}/approval": frozenset({"/true_from"}),
+    **PROVISION_NOT_TAKEN,
 }

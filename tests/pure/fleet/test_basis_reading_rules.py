@@ -164,3 +164,11 @@ def test_an_envelope_of_a_category_must_reach_the_limit_of_that_category_only():
         pointer.startswith("/envelopes/0/") and code == "envelope-below-limit"
         for pointer, code in faults_of(swapped)
     )
+
+
+def test_a_category_may_allow_less_at_take_off_than_the_basis_allows_at_landing():
+    """The utility category takes off with 5,000 lb at most; that nothing heavier lands follows by itself."""
+    document = changed(twin(), "/certification_categories/1/limits/take_off/value", 5000)
+    basis = read_basis(document)
+    assert basis.limits.landing.value > 5000
+    assert basis.certification_categories[1].limits[0][1].value == 5000
