@@ -23,4 +23,4 @@ RUN useradd --system --uid 10001 --no-create-home tarebook
 USER 10001
 EXPOSE 8000
 CMD ["python", "-m", "granian", "--interface", "wsgi", "--host", "0.0.0.0", "--port", "8000", "--workers", "2", \
-     "--blocking-threads", "4", "--no-ws", "--respawn-failed-workers", "service.wsgi:application"]
+     "--blocking-threads", "4", "--no-ws", "--respawn-failed-workers", "service.proven:application"]

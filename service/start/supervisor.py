@@ -159,7 +159,7 @@ def _command(name: str, supervisor: Supervisor) -> tuple[str, ...]:
         return (
             here, "-m", "granian", "--interface", "wsgi", "--host", "127.0.0.1",
             "--port", str(supervisor.port), "--workers", "2", "--blocking-threads", "4", "--no-ws",
-            "--respawn-failed-workers", "--workers-kill-timeout", "10s", "service.wsgi:application",
+            "--respawn-failed-workers", "--workers-kill-timeout", "10s", "service.proven:application",
         )  # fmt: skip
     if name == "worker":
         hands = ("--concurrency", str(min(2, os.cpu_count() or 1)))

@@ -46,7 +46,7 @@ ROOT = Path(__file__).resolve().parent.parent.parent
 PORTS = {"loads": 8713, "bare": 8714, "fresh": 8715}
 TITLES = {"loads": "POST /loads", "bare": "bare, same house", "fresh": "bare, fresh project"}
 APPLICATIONS = {
-    "loads": "service.wsgi:application",
+    "loads": "service.proven:application",
     "bare": "tests.bench.bare_in_service:application",
     "fresh": "tests.bench.bare_fresh:application",
 }
