@@ -1,4 +1,4 @@
-"""The WSGI application of a computer that proved itself, as a server is given it: `service.proven:application`."""
+"""The WSGI application of a computer that proved itself; a server is given `service.proven:application`."""
 
 from django.db import connections
 
