@@ -322,7 +322,7 @@ SAMPLES: Final[Mapping[str, Callable[[World], Documents]]] = {
 # Where a spoiled document is right after all: the end of the address, the way ("" for any), the fields.
 RIGHT: Final[tuple[tuple[str, str, frozenset[str]], ...]] = (
     # What there may be two of that are alike.
-    ("", "sent twice", frozenset({"/items/#", "/limits/#", "/lines/#", "/events/#"})),
+    ("", "sent twice", frozenset({"/items/#", "/limits/#", "/lines/#", "/events/#", "/effects/#"})),
     (
         "/loading-bases",
         "sent twice",

@@ -39,7 +39,7 @@ PROVISIONS: tuple[Row, ...] = (
     Row(
         "POST",
         "/api/v1/standard-weights/{version}/approval",
-        APPROVE - MANAGE,
+        APPROVE,
         201,
         _version("table", {}),
         "person",
@@ -51,7 +51,7 @@ PROVISIONS: tuple[Row, ...] = (
     Row(
         "POST",
         "/api/v1/rules/{version}/approval",
-        APPROVE - MANAGE,
+        APPROVE,
         201,
         _version("rules", {}),
         "person",
@@ -96,14 +96,14 @@ PROVISION_PAGES: tuple[Row, ...] = (
     Row(
         "POST",
         "/standard-weights/{version}/approval",
-        APPROVE - MANAGE,
+        APPROVE,
         DONE,
         _version("table", {}),
         foreign=404,
     ),
     Row("GET", "/rules", EVERY, 200),
     Row("POST", "/rules", MANAGE, DONE, _body(_form(rules_document(rule(none=True))))),
-    Row("POST", "/rules/{version}/approval", APPROVE - MANAGE, DONE, _version("rules", {}), foreign=404),
+    Row("POST", "/rules/{version}/approval", APPROVE, DONE, _version("rules", {}), foreign=404),
     Row("GET", "/aircraft/{registration}/restrictions", EVERY, 200, named("registration"), foreign=404),
     Row(
         "POST",

@@ -88,28 +88,29 @@ def make_world(code: str, aircraft: str) -> World:
 
 
 def _roles(people: Cast, code: str) -> dict[str, Person]:
-    def another(login: str, role: str) -> Person:
-        made = enter_person(
-            actor(people.manager),
-            people.operator,
-            login=f"{code}.{login}",
-            name=f"B. {login}",
-            password=PASSWORD,
-        )
-        grant_duty(actor(people.manager), made, role)
-        return made
-
     return {
         "pilot": people.pilot,
         "load preparer": people.preparer,
-        "loading supervisor": another("loading", "loading supervisor"),
+        "loading supervisor": _another(people, code, "loading", "loading supervisor"),
         "maintenance": people.maintenance,
         "records approver": people.approver,
         "operations manager": people.manager,
         "auditor": people.auditor,
-        "integration": another("program", "integration"),
+        "integration": _another(people, code, "program", "integration"),
         "idle": people.idle,
     }
+
+
+def _another(people: Cast, code: str, login: str, role: str) -> Person:
+    made = enter_person(
+        actor(people.manager),
+        people.operator,
+        login=f"{code}.{login}",
+        name=f"B. {login}",
+        password=PASSWORD,
+    )
+    grant_duty(actor(people.manager), made, role)
+    return made
 
 
 def _submitted(people: Cast, aircraft: str, **flight: str) -> Current:
@@ -174,7 +175,9 @@ def _provisions(people: Cast, current: Current) -> dict[str, str]:
     """This function will enter a table, rules and a permit that nobody approved yet, a restriction of later
     years, and a rule that asks the loading supervisor to sign what is chartered under supervision.
     """
-    aircraft, mechanic, manager = current.load.aircraft, actor(people.maintenance), actor(people.manager)
+    aircraft, mechanic = current.load.aircraft, actor(people.maintenance)
+    code = people.operator.code
+    manager = actor(_another(people, code, "second", "operations manager"))
     later = {"true_from": "2031-01-01T00:00:00Z"}
     lower = {"effect": "limit", "limit": "take_off", "weight": q("8000", "lb")}
     return {
