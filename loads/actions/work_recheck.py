@@ -110,6 +110,8 @@ def _one_part(recheck: Recheck) -> bool:
             counts["exactly"] += one.exactly
             if kind in {"changed", "not_computed"}:
                 rows.append(_row(recheck, part, one))
+        turn = {load: place for place, load in enumerate(part.loads)}
+        rows.sort(key=lambda row: turn[row.load_id])
         RecheckedLoad.objects.bulk_create(rows, batch_size=500)
         # Replaced or withdrawn since the loads were parted: such a load never leaves on this declaration.
         counts["gone"] = len(part.loads) - sum(counts[name] for name in COUNTS)

@@ -35,19 +35,17 @@ log = logging.getLogger(__name__)
 Now = Literal["within", "outside", "unresolved", "not computed", "other fit"]
 GONE: Final = ("superseded", "withdrawn")
 _BATCH: Final = 500
-# What a last-minute change made of a load is what was assessed, so its body counts.
+# What a last-minute change made of a load is what was assessed, so its body counts. The configuration stands
+# in the body, too: that saves the row of the load.
 _ROWS: Final = """
 SELECT p.load_id, p.assessment_id, p.verdict, s.engine, convert_from(coalesce(c.body, d.body), 'UTF8'),
-       p.aircraft_id, l.configuration, (p.departure AT TIME ZONE 'UTC')::text || '+00:00', s.loading_basis_id,
+       p.aircraft_id, (p.departure AT TIME ZONE 'UTC')::text || '+00:00', s.loading_basis_id,
        s.empty_weight_id, s.provisions, (s.assessed_at AT TIME ZONE 'UTC')::text || '+00:00'
-FROM unnest(%s::uuid[]) WITH ORDINALITY AS asked (id, turn)
-JOIN loads_present p ON p.load_id = asked.id
-JOIN loads_load l ON l.id = p.load_id
+FROM loads_present p
 JOIN loads_assessment s ON s.id = p.assessment_id
 JOIN loads_declaration d ON d.load_id = p.load_id
 LEFT JOIN loads_latechange c ON s.number > 1 AND c.assessment_id = s.id
-WHERE p.state NOT IN ('superseded', 'withdrawn')
-ORDER BY asked.turn
+WHERE p.load_id = ANY (%s) AND p.state NOT IN ('superseded', 'withdrawn')
 """
 LONGEST_LIMIT, LONGEST_EXCESS = 300, 500
 _WORDS: Final[dict[int, Literal["within", "outside"]]] = {WITHIN: "within", OUTSIDE: "outside"}
@@ -63,6 +61,9 @@ class Stored(NamedTuple):
     engine: str
     assessed: Assessed
     body: str
+
+
+Read = tuple[Stored, Any]  # a stored load, and its document as JSON reads it
 
 
 @dataclass(frozen=True, slots=True)
@@ -88,9 +89,10 @@ class _Group:
     members: list[tuple[int, Stored]]
 
 
-def stored_loads(loads: list[UUID]) -> Iterator[Stored]:
-    """This function will yield the loads of these numbers, in this order, but for those that were replaced or
-    withdrawn. They are read through a cursor of the server, a few hundred at a time.
+def stored_loads(loads: list[UUID]) -> Iterator[Read]:
+    """This function will yield the loads of these numbers, in any order, but for those that were replaced or
+    withdrawn, each with its document as it is read quickly. They are read through a cursor of the server, a
+    few hundred at a time.
     """
     with connection.chunked_cursor() as cursor:
         cursor.execute(_ROWS, [loads])
@@ -99,7 +101,7 @@ def stored_loads(loads: list[UUID]) -> Iterator[Stored]:
                 yield _stored(row)
 
 
-def recompute(recheck: Recheck, loads: Iterable[Stored]) -> list[Outcome]:
+def recompute(recheck: Recheck, loads: Iterable[Read]) -> list[Outcome]:
     """This function will return what comes out for each load, in their order.
 
     Loads that this very engine assessed and whose basis the bulk sums know are decided in bulk; where that
@@ -108,8 +110,8 @@ def recompute(recheck: Recheck, loads: Iterable[Stored]) -> list[Outcome]:
     versions = Versions(recheck)
     found: dict[int, Outcome] = {}
     groups: dict[_Key, _Group] = {}
-    for turn, one in enumerate(loads):
-        if not _added(one, turn, versions, groups):
+    for turn, (one, document) in enumerate(loads):
+        if not _added(one, document, turn, versions, groups):
             found[turn] = exact_outcome(one, versions)
     for group in groups.values():
         decision = decide(group.known, group.reading.batch())
@@ -123,7 +125,7 @@ def recompute(recheck: Recheck, loads: Iterable[Stored]) -> list[Outcome]:
     return [found[turn] for turn in sorted(found)]
 
 
-def _added(one: Stored, turn: int, versions: Versions, groups: dict[_Key, _Group]) -> bool:
+def _added(one: Stored, document: Any, turn: int, versions: Versions, groups: dict[_Key, _Group]) -> bool:
     """This function will add a load to the batch it belongs to; False when it must be computed exactly."""
     if one.engine != ENGINE_VERSION:  # the bulk reading asks less of what this engine has read before
         return False
@@ -140,7 +142,7 @@ def _added(one: Stored, turn: int, versions: Versions, groups: dict[_Key, _Group
         if known is None:
             return False
         group = groups[key] = _Group(known, Reading(known), [])
-    if not group.reading.add(json.loads(one.body)):
+    if not group.reading.add(document):
         return False
     group.members.append((turn, one))
     return True
@@ -193,7 +195,9 @@ def _excess(check: Check) -> str:
     return f"{check.margin_text} ({check.actual} against {' to '.join(limits)})"
 
 
-def _stored(row: tuple[Any, ...]) -> Stored:
-    load, assessment, verdict, engine, body, *used = row
-    used[5] = tuple(used[5])  # a list of the database cannot be a key
-    return Stored(load, assessment, verdict, engine, Assessed._make(used), body)
+def _stored(row: tuple[Any, ...]) -> Read:
+    load, assessment, verdict, engine, body, aircraft, departure, basis, weight, provisions, known = row
+    document = json.loads(body)
+    used = (basis, weight, tuple(provisions), known)
+    assessed = Assessed(aircraft, document["configuration"], departure, *used)
+    return Stored(load, assessment, verdict, engine, assessed, body), document

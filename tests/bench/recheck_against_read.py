@@ -21,9 +21,9 @@ from tests.bench.stored_loads_copies import AIRCRAFT, copy_loads
 AT_MOST = 3.0
 _READ = """
 SELECT p.load_id, p.assessment_id, p.verdict, s.engine, convert_from(d.body, 'UTF8'),
-       p.aircraft_id, l.configuration, (p.departure AT TIME ZONE 'UTC')::text || '+00:00', s.loading_basis_id,
+       p.aircraft_id, (p.departure AT TIME ZONE 'UTC')::text || '+00:00', s.loading_basis_id,
        s.empty_weight_id, s.provisions, (s.assessed_at AT TIME ZONE 'UTC')::text || '+00:00'
-FROM loads_present p JOIN loads_load l ON l.id = p.load_id JOIN loads_assessment s ON s.id = p.assessment_id
+FROM loads_present p JOIN loads_assessment s ON s.id = p.assessment_id
 JOIN loads_declaration d ON d.load_id = p.load_id WHERE p.state NOT IN ('superseded', 'withdrawn')
 """
 # Each copy gets weights and fuel of its own, so that nothing is computed from memory.

@@ -16,8 +16,8 @@ def test_every_act_that_a_role_allows_is_an_act():
 
 
 def test_what_people_do_can_be_done_by_some_role():
-    # Operators are entered at set-up; the worker files manifests and rechecks, tells of stale loads and of what
-    # falls due; people do the rest.
+    # Operators are entered at set-up; the worker files manifests and rechecks, tells of stale loads and
+    # of what falls due; people do the rest.
     somebody = allowed.to_person(fleet.duties.ROLES)
     workers = {"file-manifest", "finish-recheck", "tell-stale-load", "tell-falling-due"}
 
