@@ -156,6 +156,9 @@ def _start(
             say("PostgreSQL was killed and some of its processes are still ending; waiting up to a minute")
             told = True
         time.sleep(0.5)
+        # One of our own that had not quite ended when it was looked for is reaped by being looked for again:
+        # as long as it is not, its number counts as taken, and the server refuses to start beside it.
+        running(cluster.data)
 
 
 def _try(cluster: Cluster, log: Path, programs: Path, to: Account, *, durable: bool) -> str | None:

@@ -115,6 +115,28 @@ def test_a_start_waits_with_a_word_until_the_processes_of_a_killed_server_have_e
         client.close()
 
 
+def test_a_killed_server_that_was_still_ending_when_it_was_looked_for_is_reaped_later(
+    tmp_path: Path, monkeypatch
+):
+    one = postgres.start(tmp_path / "postgres", durable=False, say=lambda _: None)
+    server = postgres.running(one.data)
+    looked = []
+
+    def still_ending(data: Path) -> processes.Identity | None:
+        # As the kernel tells it of a process whose memory is gone and which is no zombie yet.
+        looked.append(data)
+        return None if len(looked) == 1 else found(data)
+
+    found = postgres.running
+    os.kill(server.pid, signal.SIGKILL)
+    monkeypatch.setattr(postgres, "running", still_ending)
+    again = postgres.start(tmp_path / "postgres", durable=False, say=lambda _: None)
+
+    assert len(looked) > 1
+    assert ask(again, "SELECT 1") == 1
+    postgres.stop(again)
+
+
 def test_a_number_in_the_pid_file_that_is_a_strangers_by_now_does_not_count(tmp_path: Path):
     one = postgres.start(tmp_path / "postgres", durable=False, say=lambda _: None)
     postgres.stop(one)
