@@ -44,7 +44,8 @@ def _weighing(due: WeighingDue) -> Check:
             code,
             title,
             "fail",
-            margin_text=f"weighed on {due.weighed_on}, which was good to the end of {due.lapses} ({due.rule})",
+            margin_text=f"weighed on {due.weighed_on}, "
+            f"which was good to the end of {due.lapses} ({due.rule})",
             source=due.source,
             what_next="Weigh the aircraft and have the weighing approved before it flies this operation.",
         )

@@ -20,6 +20,7 @@ from fleet.standard_weights_reading import standard_weights_from_text
 from loads.balance.aboard import Declared, Outline
 from loads.balance.circumstances import PLAIN, Applied
 from loads.balance.declared import read_load
+from loads.balance.over_flight import coming_people
 from loads.balance.trapped import with_trapped
 from loads.queries.current import Current
 from loads.queries.weighing_due import asks_for_weighing, weighing_due
@@ -131,6 +132,10 @@ def table_of(held: Provisions) -> StandardWeights | None:
     return standard_weights_from_text(version.document, version.number)
 
 
+# Whoever comes aboard in flight stands in a line of the sequence. So does what leaves: told once too often.
+CARRIED = ("passengers", "sequence")
+
+
 def _table_changed(current: Current, used: Sequence[Provision], now: Provisions) -> bool:
     """This function will say whether another table counts for this load: one replaced the one it used, or
     there is one now and it has people whom it concerns.
@@ -144,10 +149,10 @@ def _table_changed(current: Current, used: Sequence[Provision], now: Provisions)
     adds = (found := table_of(now)) is not None and found.declared is not None
     lines = current.result().get("sumsheet")
     people = [
-        line for line in (lines if isinstance(lines, list) else []) if line["group"] in {"crew", "passengers"}
+        line for line in (lines if isinstance(lines, list) else []) if line["group"] in {"crew", *CARRIED}
     ]
     return any(
-        line["how"] == "standard" or (adds and line["how"] == "declared" and line["group"] == "passengers")
+        line["how"] == "standard" or (adds and line["how"] == "declared" and line["group"] in CARRIED)
         for line in people
     )
 
@@ -165,7 +170,7 @@ def _rules_changed(current: Current, used: Sequence[Provision], now: Provisions)
 def _estimated(declared: Declared) -> bool:
     return any(
         one.how == "estimated" or (one.lap_infant is not None and one.lap_infant.how == "estimated")
-        for one in (*declared.crew, *declared.passengers)
+        for one in (*declared.crew, *declared.passengers, *coming_people(declared))
     )
 
 
