@@ -25,7 +25,7 @@ from records.canonical import canonical
 from records.refusal import StepRefused
 
 Worked = Literal["more", "busy", "finished"]
-LOADS_A_PART: Final = 2000
+LOADS_A_PART: Final = 4000
 _PLANNING: Final = 4203  # the class of advisory locks under which a recheck is parted
 # What departs first is wanted first: loads to come by departure, then past ones, the latest first.
 _PARTED: Final = """

@@ -95,6 +95,10 @@ def stored_loads(loads: list[UUID]) -> Iterator[Read]:
     few hundred at a time.
     """
     with connection.chunked_cursor() as cursor:
+        with connection.cursor() as setting:
+            # A part is few of many rows, whatever the planner holds of a list of some thousand numbers: to read
+            # whole tables for each part would cost with the square of all that is stored.
+            setting.execute("SET LOCAL enable_seqscan = off")
         cursor.execute(_ROWS, [loads])
         while rows := cursor.fetchmany(_BATCH):
             for row in rows:
