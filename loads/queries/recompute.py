@@ -96,8 +96,8 @@ def stored_loads(loads: list[UUID]) -> Iterator[Read]:
     """
     with connection.chunked_cursor() as cursor:
         with connection.cursor() as setting:
-            # A part is few of many rows, whatever the planner holds of a list of some thousand numbers: to read
-            # whole tables for each part would cost with the square of all that is stored.
+            # A part is few of many rows, whatever the planner holds of a list of some thousand numbers: whole
+            # tables read for each part would cost with the square of all that is stored.
             setting.execute("SET LOCAL enable_seqscan = off")
         cursor.execute(_ROWS, [loads])
         while rows := cursor.fetchmany(_BATCH):
