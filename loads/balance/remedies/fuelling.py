@@ -13,6 +13,7 @@ from itertools import permutations
 from math import ceil, floor, lcm
 
 from fleet.basis import Basis
+from fleet.tanks import OutsideTable
 from loads.balance.aboard import Declared, FuelPlan
 from loads.balance.fuel import burn
 from loads.balance.remedies.arranging import Found
@@ -116,7 +117,10 @@ def _tried(question: Question, made: Made, tenths: int) -> tuple[tuple[Step, ...
     declared = taken(question.declared, steps)
     if not _burns(declared.fuel, question.ready.basis):
         return None
-    result = question.assessed(declared)
+    try:
+        result = question.assessed(declared)
+    except OutsideTable:  # a transfer on the flight would then find a tank too full
+        return None
     return (steps, result) if result.verdict == "within" else None
 
 

@@ -11,6 +11,7 @@ from dataclasses import dataclass
 from fractions import Fraction
 from math import floor
 
+from fleet.tanks import OutsideTable
 from loads.balance.aboard import Declared
 from loads.balance.remedies.question import TENTH, Question, broken
 from loads.balance.result import Check
@@ -58,8 +59,22 @@ def _stops(question: Question, changed: Changed, count: int) -> Check | None:
     """Return the check that breaks with so many more, the worst of a kind first; None when none does."""
     if not count:
         return None
-    stops = broken(question.assessed(changed(count)))
+    more = changed(count)
+    try:
+        stops = broken(question.assessed(more))
+    except OutsideTable:
+        return _overfilled(question, more)
     return next(iter(stops), None)
+
+
+def _overfilled(question: Question, more: Declared) -> Check:
+    """Return the check of the tank that would be asked to take more on the flight than its table knows.
+
+    Raises StopIteration where no tank holds other fuel than before: then the load itself could not be flown.
+    """
+    usable = {held.tank.id: held.usable for held in question.declared.fuel.tanks}
+    fuller = {f"tank.{held.tank.id}" for held in more.fuel.tanks if held.usable != usable[held.tank.id]}
+    return next(check for check in question.result.checks if check.code in fuller)
 
 
 def bound_of(question: Question, room: Fraction | None) -> int:

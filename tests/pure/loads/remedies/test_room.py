@@ -42,6 +42,16 @@ def test_what_more_can_go_where_reckoned_by_hand() -> None:
     assert ("seat", "row 3") not in more  # no seat of it is free
 
 
+def test_a_tank_that_takes_a_transfer_later_has_that_much_less_room() -> None:
+    # Taxi burns 40 / 6.5 US gal, half of it from either tank: 56.92 and 50 more are 106.92 of 180 in the right one.
+    moved = {"from": "LEFT", "to": "RIGHT", "quantity": {"value": 50, "unit": "US gal"}}
+    event = {"after_burning": {"value": 0, "unit": "US gal"}, "transfer": moved}
+    document = seated({"ROW3-A": 200}, {"AFT-HOLD": 100}, gallons=60) | {"sequence": [event]}
+    more = lines(how_much_more(asked(document, roomy().ready.basis, empty_of(7600, 203))))
+    assert (more["tank", "RIGHT"]["amount"], more["tank", "RIGHT"]["stopped_by"]) == ("73", "right")
+    assert float(str(more["tank", "LEFT"]["amount"])) > float("73")
+
+
 def test_how_wrong_the_people_may_be_reckoned_by_hand() -> None:
     # 500 lb of people were declared, crew was weighed; 605 lb are left in all, but no seat takes over 300 lb:
     # 200 lb may be 50 % more, which is as far as is looked, and each may be 100 lb more.
