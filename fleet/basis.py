@@ -53,7 +53,9 @@ class Seat:
 
 @dataclass(frozen=True, slots=True)
 class Place:
-    """Where an item lies (a compartment). Arms in the length unit of the basis."""
+    """Where an item lies (a compartment), or where it hangs outside (`external`: a hook, a hoist). Arms in
+    the length unit of the basis.
+    """
 
     id: str
     name: str
@@ -63,6 +65,7 @@ class Place:
     source: Source
     conditional: tuple[Conditional, ...] = ()
     floor: Floor | None = None
+    external: bool = False
 
 
 @dataclass(frozen=True, slots=True)
@@ -177,13 +180,17 @@ class FixedItem:
 
 @dataclass(frozen=True, slots=True)
 class Limits:
-    """The weight limits, in the weight unit of the basis; None means not entered."""
+    """The weight limits, in the weight unit of the basis; None means not entered.
+
+    `with_external_load` is the maximum weight in all while a jettisonable external load is carried.
+    """
 
     ramp: Limit | None
     take_off: Limit | None
     zero_fuel: Limit | None
     landing: Limit | None
     minimum_flying: Limit | None
+    with_external_load: Limit | None = None
 
 
 @dataclass(frozen=True, slots=True)

@@ -26,8 +26,10 @@ LIMIT_WORDS: Final[Mapping[str, str]] = {
     "zero_fuel": "maximum zero fuel weight",
     "landing": "maximum landing weight",
     "minimum_flying": "minimum flying weight",
+    "with_external_load": "maximum weight with an external load",
 }
 LEAST: Final = "minimum_flying"  # the one limit that tightens upward
+HIGHER: Final = "with_external_load"  # the one limit above the others, which not every manual has
 MOST_KEPT: Final = 64
 _Held = TypeVar("_Held", Seat, Place, Zone)
 
@@ -115,7 +117,8 @@ def _known(basis: Basis) -> dict[str, frozenset[str]]:
         for part in (basis.seats, basis.places, basis.zones, basis.tanks, basis.envelopes)
     )
     return {
-        "limit": frozenset(LIMIT_WORDS),
+        # A lowered maximum with an external load must not make one where the manual gives none.
+        "limit": frozenset(LIMIT_WORDS) - ({HIGHER} if basis.limits.with_external_load is None else set()),
         "maximum": seats | places | zones,
         "seats": seats,
         "places": places,

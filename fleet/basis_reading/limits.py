@@ -6,7 +6,7 @@ from fleet.basis import Limits
 from fleet.basis_reading.findings import Findings
 from fleet.sourced import Limit
 
-FIELDS = ("ramp", "take_off", "zero_fuel", "landing", "minimum_flying")
+FIELDS = ("ramp", "take_off", "zero_fuel", "landing", "minimum_flying", "with_external_load")
 # The first may not lie above the second: nothing loaded to the first could ever be within the second.
 _NOT_ABOVE = (
     ("zero_fuel", "take_off"),
@@ -14,6 +14,7 @@ _NOT_ABOVE = (
     ("landing", "take_off"),
     ("landing", "ramp"),
     ("take_off", "ramp"),
+    ("take_off", "with_external_load"),
 )
 
 

@@ -26,7 +26,11 @@ def read_seats(findings: Findings) -> tuple[Seat, ...]:
 def read_places(findings: Findings) -> tuple[Place, ...]:
     """Return the places."""
     return tuple(
-        Place(**_station(findings, at, entry), floor=read_floor(findings, f"{at}/floor", entry.get("floor")))
+        Place(
+            **_station(findings, at, entry),
+            floor=read_floor(findings, f"{at}/floor", entry.get("floor")),
+            external=entry.get("external", False),
+        )
         for at, entry in findings.entries("places")
     )
 

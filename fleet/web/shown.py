@@ -146,6 +146,8 @@ def _limits(basis: LoadingBasis | None) -> list[dict[str, str]]:
         return []
     document = json.loads(basis.document)
     rows = [limit_row(document, title, document["limits"].get(name)) for name, title in LIMIT_TITLES]
+    if higher := document["limits"].get("with_external_load"):
+        rows.append(limit_row(document, "Maximum weight with a jettisonable external load", higher))
     return [
         *rows,
         *rule_rows(document),

@@ -39,7 +39,8 @@ def station_rows(document: Mapping[str, Any]) -> list[Row]:
 
 def _titled(spot: Mapping[str, Any]) -> str:
     name: str = spot["name"]
-    return name[:1].upper() + name[1:]
+    outside = ", outside the aircraft" if spot.get("external") else ""
+    return f"{name[:1].upper()}{name[1:]}{outside}"
 
 
 def source_words(document: Mapping[str, Any], source: Mapping[str, Any]) -> str:

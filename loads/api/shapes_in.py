@@ -115,6 +115,9 @@ class Item(serializers.Serializer[object]):
     how = serializers.ChoiceField(("weighed", "declared", "standard", "estimated"))
     weight = Quantity(required=False)
     removed = serializers.BooleanField(required=False)
+    jettisonable = serializers.BooleanField(
+        required=False, help_text="it hangs in a place outside the aircraft and can be released in flight"
+    )
     footprint = Footprint(required=False)
     pallet = Spreader(required=False)
     net = Net(required=False)
@@ -173,6 +176,31 @@ class Shifting(serializers.Serializer[object]):
     to = serializers.CharField()
 
 
+class ComingAboard(serializers.Serializer[object]):
+    """Who or what comes aboard, on a line of its own: a person with a `seat`, written like a passenger (with
+    a `position`: crew; with `at`: the place, such as a hoist, where they are first), or an item with a
+    `place`.
+    """
+
+    name = serializers.CharField(required=False)
+    seat = serializers.CharField(required=False)
+    at = serializers.CharField(required=False)
+    position = serializers.CharField(required=False)
+    category = serializers.CharField(required=False)
+    lap_infant = LapInfant(required=False)
+    restraint = Quantity(required=False)
+    kind = serializers.ChoiceField(("baggage", "cargo", "ballast", "equipment", "consumable"), required=False)
+    what = serializers.CharField(required=False)
+    place = serializers.CharField(required=False)
+    jettisonable = serializers.BooleanField(required=False)
+    footprint = Footprint(required=False)
+    pallet = Spreader(required=False)
+    net = Net(required=False)
+    spreader = Spreader(required=False)
+    how = serializers.ChoiceField(("weighed", "declared", "standard", "estimated"))
+    weight = Quantity(required=False)
+
+
 class FuelTransfer(serializers.Serializer[object]):
     """Fuel that goes from one tank to another; nothing is burned meanwhile."""
 
@@ -182,7 +210,8 @@ class FuelTransfer(serializers.Serializer[object]):
 
 
 class FlightEvent(serializers.Serializer[object]):
-    """What happens on the flight at one moment: exactly one of `leave`, `move`, `transfer`, `position`.
+    """What happens on the flight at one moment: exactly one of `leave`, `move`, `transfer`, `position`,
+    `come_aboard`.
 
     Events are in order. All who move in one event move at once.
     """
@@ -193,6 +222,7 @@ class FlightEvent(serializers.Serializer[object]):
     )
     leave = Departing(many=True, required=False)
     move = Shifting(many=True, required=False)
+    come_aboard = ComingAboard(many=True, required=False)
     transfer = FuelTransfer(required=False)
     position = serializers.DictField(
         child=serializers.CharField(), required=False, help_text="moving part to its state: gear, flaps"

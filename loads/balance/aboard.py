@@ -87,7 +87,7 @@ class Item:
     negative.
 
     `weight` counts `rigging`, too: the pallet, net and spreader that go with it. `contact` is what touches
-    the floor (None: not stated).
+    the floor (None: not stated). `jettisonable`: it hangs outside and can be released in flight.
     """
 
     kind: Kind
@@ -99,6 +99,7 @@ class Item:
     pointer: str
     rigging: tuple[Rigging, ...] = ()
     contact: Contact | None = None
+    jettisonable: bool = False
 
 
 @dataclass(frozen=True, slots=True)

@@ -11,6 +11,7 @@ from fleet.weighing import EmptyFigures
 from loads.balance.aboard import Declared, Outline
 from loads.balance.checks_balance import balance_checks
 from loads.balance.checks_circumstances import circumstance_checks
+from loads.balance.checks_flight_weight import greatest_persons_check, with_flight_weights
 from loads.balance.checks_floor import floor_checks
 from loads.balance.checks_known import (
     empty_weight_check,
@@ -27,6 +28,7 @@ from loads.balance.checks_seats import seat_checks
 from loads.balance.checks_standard import standard_checks
 from loads.balance.checks_weight import landing_fuel_check, weight_checks
 from loads.balance.checks_whole import whole_aircraft_checks
+from loads.balance.flight_weights import FlightWeights, flight_weights
 from loads.balance.flown import (
     Flown,
     at_ends_of_rails,
@@ -74,13 +76,15 @@ def assess(
     fuel = None if flown is None else flown.fuel
     states, nothing_left = _states_of(declared, aboard, flown, ready)
     burn = burn_of(path_of(declared, flown, states, ready), ready) if flown and states else None
+    weights = _weights(declared, states, flown, ready)
     checks = (
         standing,
         *weight_knowledge(declared),
         *standard_checks(declared.standards),
         *circumstance_checks(declared.circumstances),
         persons_check(declared),
-        *_checks(declared, states, burn, known, ready, advised=advised),
+        *greatest_persons_check(declared, ready),
+        *_checks(declared, states, burn, known, ready, weights=weights, advised=advised),
         *whole_aircraft_checks(declared, states, flown, ready),
         *off_table,
         *nothing_left,
@@ -88,7 +92,7 @@ def assess(
     after_ramp = flight_lines(declared, flown.sections, states, ready) if flown and flown.sections else ()
     lines = all_lines(aboard, declared.fuel, fuel, states, ready, flight=after_ramp)
     verdict = verdict_of(checks)
-    document = report(Assessed(declared, aboard, lines, states, fuel, burn, checks), ready)
+    document = report(Assessed(declared, aboard, lines, states, fuel, burn, checks, weights), ready)
     return Result(verdict, checks, tuple(states.values()), lines, document, burn)
 
 
@@ -99,6 +103,14 @@ def _flown(
         return fly(declared, empty, ready), ()
     except FuelOffTable as off:
         return None, (off_table_check(off, ready),)
+
+
+def _weights(
+    declared: Declared, states: Mapping[Phase, State], flown: Flown | None, ready: Prepared
+) -> FlightWeights | None:
+    if flown is None or not states or not (declared.sequence or ready.external):
+        return None
+    return flight_weights(declared, states, (flown.sections, flown.dry), ready)
 
 
 def _states_of(
@@ -150,6 +162,7 @@ def _checks(
     empty: EmptyFigures | None,
     ready: Prepared,
     *,
+    weights: FlightWeights | None,
     advised: bool,
 ) -> list[Check]:
     held = held_by(declared)
@@ -161,6 +174,8 @@ def _checks(
         flights = [flight for _, flight in ends] or [(states, burn)]
         advice = cache(lambda: cg_advice(declared, flights, held, ready) if advised else "")
         found += weight_checks(declared, states, ready)
+        if weights is not None:
+            found = with_flight_weights(found, declared, weights, states, ready)
         told = _centre_checks((states, burn), ready, advice)
         if ends:
             at_ends = [(end, _centre_checks(flight, ready, advice)) for end, flight in ends]

@@ -175,7 +175,9 @@ def _places(unit: Unit) -> int:
 
 def _called(item: Item) -> str:
     """Return which item of the load it is, counted from 1: what it is called may name somebody. One that is
-    only thought of, to see what would be if, stands on no line.
+    only thought of, to see what would be if, stands on no line; one that comes aboard stands in its event.
     """
-    number = item.pointer.rpartition("/")[2]
+    before, _, number = item.pointer.rpartition("/")
+    if before.startswith("/sequence/"):
+        return f"coming item {int(before.split('/')[2]) + 1}.{int(number) + 1}"
     return f"item {int(number) + 1}" if number else "an added item"

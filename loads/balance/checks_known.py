@@ -8,6 +8,7 @@ from fleet.basis import Basis
 from fleet.weighing import EmptyFigures
 from loads.balance.aboard import Declared
 from loads.balance.fuel import FuelOffTable
+from loads.balance.over_flight import coming_items, coming_people
 from loads.balance.prepared import Prepared
 from loads.balance.result import Check
 from loads.balance.rounding import VOLUME_PLACES, WEIGHT_PLACES, printed
@@ -46,9 +47,10 @@ def weight_knowledge(declared: Declared) -> list[Check]:
 
     Standard weights need an approved table; without one each leaves a load unresolved.
     """
-    people = (*declared.crew, *declared.passengers)
+    people = (*declared.crew, *declared.passengers, *coming_people(declared))
+    items = (*declared.items, *coming_items(declared))
     unknown = [person.seat.name for person in people if person.weight is None]
-    unknown += [item.place.name for item in declared.items if item.weight is None]
+    unknown += [item.place.name for item in items if item.weight is None]
     estimated = [person.seat.name for person in people if person.how == "estimated"]
     estimated += [
         f"{person.seat.name} (lap infant)"

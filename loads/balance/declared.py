@@ -8,38 +8,32 @@ is not aboard is an item of kind `equipment` with `removed: true`; its weight is
 negative.
 """
 
-from fractions import Fraction
 from typing import cast
 
-from fleet.basis import Basis, Configuration, Place
+from fleet.basis import Basis, Configuration
 from fleet.conversion import in_unit
 from fleet.flight_rules import PERFORMANCE_KINDS, PerformanceKind
 from fleet.quantities import Dimension
 from fleet.standard_weights import StandardWeights
-from loads.balance.aboard import HOWS, KINDS, Declared, How, Item, Kind, LimitedPhase, StatedLimit
+from loads.balance.aboard import Declared, LimitedPhase, StatedLimit
 from loads.balance.category import in_category, read_category
+from loads.balance.coming import parted, read_coming, with_comers
 from loads.balance.events import Event
-from loads.balance.exact import added
 from loads.balance.fields import Faults, Fields
 from loads.balance.fitted import read_conditions, read_settings
-from loads.balance.footing import FOOTING_FIELDS, read_footing
 from loads.balance.fuelling import read_fuel
+from loads.balance.items import read_items
 from loads.balance.outline import OPTIONAL, REQUIRED, outline_in, read_outline
 from loads.balance.people import Seating, read_crew, read_passengers
-from loads.balance.sequencing import Loaded, read_sequence
+from loads.balance.sequencing import Loaded, event_fields, read_sequence
 from loads.balance.standard import with_standards
 from records.refusal import Invalid
 
 __all__ = ["read_load", "read_outline"]
 
-ITEM_FIELDS = ("kind", "what", "place", "how")
-ITEM_OPTIONAL = ("weight", "removed", *FOOTING_FIELDS)
 LIMIT_FIELDS = ("at", "weight", "source")
 LIMIT_OPTIONAL = ("kind",)
-LONGEST_WHAT = 120
-LONGEST_ID = 64
 LONGEST_SOURCE = 200
-MOST_ITEMS = 400
 MOST_LIMITS = 20
 MOST_PERSONS = 1000
 
@@ -60,16 +54,21 @@ def read_load(document: object, basis: Basis, table: StandardWeights | None = No
     seating = Seating(basis, configuration or _everything(basis), settings)
     crew = read_crew(fields, seating)
     passengers = read_passengers(fields, seating)
+    lines = event_fields(fields) if "sequence" in fields else ()
+    coming = read_coming(lines, seating) if lines else {}
     standards = None
     if table is not None and outline is not None:
-        crew, passengers, standards = with_standards((crew, passengers), table, outline.flight, basis, faults)
-    items = _items(fields, basis, seating.configuration)
+        people = with_comers((crew, passengers), coming) if coming else (crew, passengers)
+        crew, passengers, standards = with_standards(people, table, outline.flight, basis, faults)
+        if coming:
+            (crew, passengers), coming = parted((crew, passengers), coming)
+    items = read_items(fields, basis, seating.configuration)
     fuel = read_fuel(fields, basis)
     limits = _limits(fields, basis)
     category = read_category(fields, basis)
     events: tuple[Event, ...] = ()
-    if "sequence" in fields:
-        events = read_sequence(fields, basis, seating, Loaded(crew, passengers, items, fuel))
+    if lines:
+        events = read_sequence(lines, basis, seating, Loaded(crew, passengers, items, fuel, coming))
     persons = _persons_on_board(fields)
     if faults.all():
         raise Invalid(*faults.all())
@@ -93,72 +92,6 @@ def _everything(basis: Basis) -> Configuration:
     seats = tuple(seat.id for seat in basis.seats)
     places = tuple(place.id for place in basis.places)
     return Configuration("unknown", "unknown", seats, places, 0, basis.fits[0], (), (), basis.limits)
-
-
-def _items(fields: Fields, basis: Basis, configuration: Configuration) -> tuple[Item, ...]:
-    known = {place.id: place for place in basis.places}
-    lines = fields.objects("items", MOST_ITEMS, ITEM_FIELDS, ITEM_OPTIONAL)
-    items = (_item(line, known, configuration, basis) for line in lines)
-    return tuple(item for item in items if item is not None)
-
-
-def _item(line: Fields, known: dict[str, Place], configuration: Configuration, basis: Basis) -> Item | None:
-    kind = cast("Kind | None", line.choice("kind", KINDS))
-    what = line.text("what", LONGEST_WHAT)
-    closed = dict(basis.closed) if basis.closed else None
-    place = _place(line, known, configuration, closed)
-    how = cast("How | None", line.choice("how", HOWS))
-    removed = line.flag("removed") or False
-    if removed and kind is not None and kind != "equipment":
-        line.note(
-            "removed", "removed-not-equipment", "only equipment of the empty weight can be removed; drop it"
-        )
-    weight = _item_weight(line, how, basis)
-    footing = read_footing(line, basis) if any(name in line for name in FOOTING_FIELDS) else None
-    if kind is None or what is None or place is None or how is None:
-        return None
-    signed = -weight if removed and weight is not None else weight
-    if footing is None:
-        return Item(kind, what, place, signed, how, removed, line.pointer)
-    whole = None if signed is None else added((signed, *(part.weight for part in footing.rigging)))
-    return Item(kind, what, place, whole, how, removed, line.pointer, footing.rigging, footing.contact)
-
-
-def _place(
-    line: Fields, known: dict[str, Place], configuration: Configuration, closed: dict[str, str] | None
-) -> Place | None:
-    wanted = line.text("place", LONGEST_ID)
-    if wanted is None:
-        return None
-    has = ", ".join(configuration.places) or "no places"
-    place = known.get(wanted)
-    if place is None:
-        line.note("place", "unknown-place", f"no such place; configuration {configuration.id} has {has}")
-        return None
-    if closed is not None and wanted in closed:
-        line.note(
-            "place", "place-closed", f"{place.name} is closed by {closed[wanted]}; choose another place"
-        )
-        return None
-    if wanted not in configuration.places:
-        detail = f"not in configuration {configuration.id}, which has {has}; choose one of these"
-        line.note("place", "place-not-in-configuration", detail)
-        return None
-    return place
-
-
-def _item_weight(line: Fields, how: How | None, basis: Basis) -> Fraction | None:
-    if how == "standard":
-        if "weight" in line:
-            detail = "a standard weight comes from a table; leave the weight out, or say how it is known"
-            line.note("weight", "weight-with-standard", detail)
-        return None
-    if "weight" not in line:
-        if how is not None:
-            line.note("weight", "missing", "the weight is missing and none is assumed; state it")
-        return None
-    quantity = line.quantity("weight", Dimension.WEIGHT, zero=False)
-    return None if quantity is None else in_unit(quantity, basis.weight_unit)
 
 
 def _limits(fields: Fields, basis: Basis) -> tuple[StatedLimit, ...]:

@@ -6,10 +6,13 @@ unit of the basis, weights in its weight unit.
 
 from dataclasses import dataclass
 from fractions import Fraction
-from typing import Literal
+from typing import TYPE_CHECKING, Literal
 
 from fleet.basis import Place, Seat
 from fleet.positions import MovingPart, PartState
+
+if TYPE_CHECKING:  # a load holds its events, so what is aboard cannot be imported before them
+    from loads.balance.aboard import Item, Person
 
 EventLeg = Literal["taxi", "flight"]
 
@@ -53,3 +56,4 @@ class Event:
     moving: tuple[Moving, ...] = ()
     transfer: Transfer | None = None
     positions: tuple[tuple[MovingPart, PartState], ...] = ()
+    coming: "tuple[Person | Item, ...]" = ()  # who and what comes aboard, where they first are

@@ -78,6 +78,10 @@ class Fields:
     def __contains__(self, name: str) -> bool:
         return name in self._values
 
+    def read_as(self, required: tuple[str, ...], optional: tuple[str, ...]) -> "Fields":
+        """Return the same object, its fields held against these."""
+        return Fields(self._values, self.pointer, self._faults, required, optional)
+
     def at(self, name: str) -> str:
         """Return the JSON pointer of a field."""
         return f"{self.pointer}{pointer_step(name)}"

@@ -9,6 +9,7 @@ from fleet.basis import Phase
 from fleet.weighing import EmptyFigures
 from loads.balance.aboard import Declared, Person
 from loads.balance.checks_places import tank_checks
+from loads.balance.events import Event
 from loads.balance.fuel import NOTHING, FuelOffTable, FuelState, fuel_states
 from loads.balance.over_flight import over_flight
 from loads.balance.path import Path, burn_path
@@ -64,10 +65,15 @@ def at_ends_of_rails(declared: Declared, end: Literal["forward", "aft"]) -> Decl
         arm = rail.forward if end == "forward" else rail.aft
         return replace(person, seat=replace(person.seat, arm=arm))
 
+    def came(event: Event) -> Event:
+        coming = (moved(one) if isinstance(one, Person) else one for one in event.coming)
+        return replace(event, coming=tuple(coming)) if event.coming else event
+
     return replace(
         declared,
         crew=tuple(moved(person) for person in declared.crew),
         passengers=tuple(moved(person) for person in declared.passengers),
+        sequence=tuple(came(event) for event in declared.sequence),
     )
 
 

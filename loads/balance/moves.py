@@ -112,7 +112,11 @@ def _enough(move: Move, low: Fraction, high: Fraction) -> Fraction | None:
 
 
 def _possible(declared: Declared, ready: Prepared) -> Iterator[Move]:
-    places = [place for place in ready.basis.places if place.id in declared.configuration.places]
+    places = [
+        place
+        for place in ready.basis.places
+        if place.id in declared.configuration.places and not place.external
+    ]
     set_on_rails = {seat.id: seat for seat, _ in declared.settings}
     seats = [
         set_on_rails.get(seat.id, seat)
@@ -121,7 +125,7 @@ def _possible(declared: Declared, ready: Prepared) -> Iterator[Move]:
     ]
     taken = {person.seat.id for person in (*declared.crew, *declared.passengers)}
     for item in declared.items:
-        if item.weight is not None and not item.removed:
+        if item.weight is not None and not item.removed and not item.place.external:
             for place in places:
                 yield Move(item.kind, item.weight, item.place, place, False)
     for person in declared.passengers:

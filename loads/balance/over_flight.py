@@ -17,6 +17,16 @@ def over_flight(declared: Declared) -> tuple[Declared, ...]:
     return tuple(accumulate(declared.sequence, after, initial=declared))
 
 
+def coming_people(declared: Declared) -> tuple[Person, ...]:
+    """Return everybody who comes aboard in flight, in order."""
+    return tuple(one for event in declared.sequence for one in event.coming if isinstance(one, Person))
+
+
+def coming_items(declared: Declared) -> tuple[Item, ...]:
+    """Return everything that comes aboard in flight, in order."""
+    return tuple(one for event in declared.sequence for one in event.coming if isinstance(one, Item))
+
+
 def held_over_flight(declared: Declared) -> tuple[Held, ...]:
     """Return what each seat and place holds over the flight: every map there is, each once, in order."""
     found: list[Held] = []
@@ -29,13 +39,17 @@ def held_over_flight(declared: Declared) -> tuple[Held, ...]:
 
 def after(declared: Declared, event: Event) -> Declared:
     """Return the load after an event; fuel and positions are not part of it."""
-    if not event.leaving and not event.moving:
+    if not event.leaving and not event.moving and not event.coming:
         return declared
+    people = [one for one in event.coming if isinstance(one, Person)]
     return replace(
         declared,
-        crew=_people(declared.crew, event),
-        passengers=_people(declared.passengers, event),
-        items=_items(declared.items, event),
+        crew=(*_people(declared.crew, event), *(one for one in people if one.role == "crew")),
+        passengers=(
+            *_people(declared.passengers, event),
+            *(one for one in people if one.role == "passenger"),
+        ),
+        items=(*_items(declared.items, event), *(one for one in event.coming if isinstance(one, Item))),
     )
 
 

@@ -51,7 +51,7 @@ def read_crew(document: Fields, seating: Seating) -> tuple[Person, ...]:
     needs.
     """
     lines = document.objects("crew", MOST_CREW, CREW_FIELDS, CREW_OPTIONAL)
-    people = tuple(_person(line, "crew", seating) for line in lines)
+    people = tuple(read_person(line, "crew", seating) for line in lines)
     listed = document.raw("crew")
     if isinstance(listed, list | tuple) and len(listed) <= MOST_CREW:
         commanders = sum(line.raw("position") == PILOT_IN_COMMAND for line in lines)
@@ -68,11 +68,12 @@ def read_crew(document: Fields, seating: Seating) -> tuple[Person, ...]:
 def read_passengers(document: Fields, seating: Seating) -> tuple[Person, ...]:
     """Return the passengers, noting faults."""
     lines = document.objects("passengers", MOST_PASSENGERS, PASSENGER_FIELDS, PASSENGER_OPTIONAL)
-    people = (_person(line, "passenger", seating) for line in lines)
+    people = (read_person(line, "passenger", seating) for line in lines)
     return tuple(person for person in people if person is not None)
 
 
-def _person(line: Fields, role: Role, seating: Seating) -> Person | None:
+def read_person(line: Fields, role: Role, seating: Seating) -> Person | None:
+    """Return the person of a line, noting faults; None where too much of it is missing."""
     name = _name(line, seating)
     position = line.text("position", LONGEST_NAME) if role == "crew" else None
     login = _login(line, seating) if role == "crew" else None

@@ -33,6 +33,7 @@ class Prepared:
         "basis",
         "deciding",
         "density",
+        "external",
         "length",
         "length_places",
         "moment",
@@ -61,6 +62,7 @@ class Prepared:
             for tank in basis.tanks
         }
         self._chord_factor = None if basis.chord is None else 100 / basis.chord.length
+        self.external = any(place.external for place in basis.places)
         self._steady = {tank.id: _steady(tank.table) for tank in basis.tanks}
         shapes = [(envelope, Shape(envelope.plane, envelope.points)) for envelope in basis.envelopes]
         axes: tuple[Axis, ...] = ("longitudinal", "lateral")

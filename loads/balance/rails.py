@@ -12,6 +12,7 @@ from fleet.basis import Phase
 from loads.balance.aboard import Declared, Person
 from loads.balance.exact import added
 from loads.balance.moves import Flight
+from loads.balance.over_flight import coming_people
 from loads.balance.path import Knot
 from loads.balance.path_worst import Burn, bounds_on, burn_of, shifted
 from loads.balance.prepared import Prepared
@@ -32,7 +33,7 @@ def rail_ends(declared: Declared) -> tuple[RailEnd, ...]:
     """Return both ends, or () when somebody sits in no seat whose setting is open."""
     ends = [
         (_weight(person), person.seat.arm, person.seat.rail)
-        for person in (*declared.crew, *declared.passengers)
+        for person in (*declared.crew, *declared.passengers, *coming_people(declared))
         if person.seat.rail is not None
     ]
     if not ends:

@@ -15,8 +15,10 @@ from loads.balance.aboard import Declared
 from loads.balance.allowable import Allowable, allowable_take_off
 from loads.balance.checks_path import path_document
 from loads.balance.fitted import fitted_lines
+from loads.balance.flight_weights import FlightWeights
 from loads.balance.fuel import FuelState
 from loads.balance.governing import NOT_KNOWN, cg_line, return_advisory, weight_line
+from loads.balance.over_flight import over_flight
 from loads.balance.path_worst import Burn
 from loads.balance.prepared import Prepared
 from loads.balance.presented import presentation_document, presented
@@ -40,12 +42,13 @@ class Assessed(NamedTuple):
     fuel: Mapping[Phase, FuelState] | None
     burn: Burn | None
     checks: tuple[Check, ...]
+    weights: FlightWeights | None = None  # only where something comes aboard in flight or hangs outside
 
 
 def report(assessed: Assessed, ready: Prepared) -> Json:
     """Return the printed parts of an assessment with a basis."""
-    declared, aboard, lines, states, fuel, burn, checks = assessed
-    allowable = allowable_take_off(declared, states) if states else None
+    declared, aboard, lines, states, fuel, burn, checks, weights = assessed
+    allowable = allowable_take_off(declared, states, weights) if states else None
     return {
         "units": {"weight": ready.weight, "length": ready.length, "moment": ready.moment},
         "phases": [_phase(state, ready) for state in states.values()],
@@ -171,12 +174,20 @@ def _operating(sums: Sums | None, ready: Prepared) -> Json | None:
 def _persons(declared: Declared) -> Json:
     crew, passengers = len(declared.crew), len(declared.passengers)
     infants = sum(person.lap_infant is not None for person in declared.passengers)
-    return {
+    found: Json = {
         "crew": crew,
         "passengers": passengers,
         "lap_infants": infants,
         "total": crew + passengers + infants,
     }
+    if any(event.coming for event in declared.sequence):
+        found["greatest_in_flight"] = max(map(_heads, over_flight(declared)))
+    return found
+
+
+def _heads(aboard: Declared) -> int:
+    infants = sum(person.lap_infant is not None for person in aboard.passengers)
+    return len(aboard.crew) + len(aboard.passengers) + infants
 
 
 def _advisories(declared: Declared, states: Mapping[Phase, State], ready: Prepared) -> list[str]:
@@ -187,6 +198,8 @@ def _advisories(declared: Declared, states: Mapping[Phase, State], ready: Prepar
         count = len(declared.sequence)
         events = "1 event" if count == 1 else f"{count} events"
         found.append(f"{events} on the flight: landing is as after all of them, zero fuel as before any")
+        if any(event.coming for event in declared.sequence):
+            found.append("who and what comes aboard in flight is in no weight before that, take-off included")
     estimated = sum(item.how == "estimated" for item in declared.items)
     if estimated:
         found.append(f"{estimated} of {len(declared.items)} item weights are estimates")

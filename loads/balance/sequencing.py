@@ -1,12 +1,12 @@
 """Reading the sequence of a load: what happens between engine start and landing, in order.
 
 Each event says when, in usable fuel burned since take-off (or since engine start, while taxiing), and exactly
-one kind of thing: who or what leaves, or moves, a transfer of fuel, or positions of gear and flaps. What an
-event finds aboard is what the events before it left.
+one kind of thing: who or what leaves, moves or comes aboard, a transfer of fuel, or positions of gear and
+flaps. What an event finds aboard is what the events before it left.
 """
 
 from collections.abc import Mapping
-from dataclasses import dataclass
+from dataclasses import dataclass, field
 from fractions import Fraction
 from typing import Literal
 
@@ -15,6 +15,7 @@ from fleet.conversion import in_unit
 from fleet.positions import MovingPart, PartState
 from fleet.quantities import DIMENSION_OF, Dimension, Quantity
 from loads.balance.aboard import FuelPlan, Item, Person
+from loads.balance.coming import COMING, Comers, coming_lines
 from loads.balance.events import Event, EventLeg, Transfer
 from loads.balance.fields import Fields
 from loads.balance.fuel import Contents, drawn
@@ -23,7 +24,7 @@ from loads.balance.rounding import VOLUME_PLACES, WEIGHT_PLACES, printed
 from loads.balance.sequencing_aboard import Cabin
 
 EVENT_FIELDS = ("after_burning",)
-KINDS_OF_EVENT = ("leave", "move", "transfer", "position")
+KINDS_OF_EVENT = ("leave", "move", "transfer", "position", COMING)
 EVENT_OPTIONAL = ("since", *KINDS_OF_EVENT)
 SINCE: tuple[str, str] = ("engine start", "take-off")
 TRANSFER_FIELDS = ("from", "to", "quantity")
@@ -42,18 +43,26 @@ class Loaded:
     passengers: tuple[Person, ...]
     items: tuple[Item, ...]
     fuel: FuelPlan | None
+    coming: Comers = field(default_factory=dict)  # who and what comes aboard in flight
 
 
-def read_sequence(fields: Fields, basis: Basis, seating: Seating, loaded: Loaded) -> tuple[Event, ...]:
+def event_fields(fields: Fields) -> tuple[Fields, ...]:
+    """Return the events of a document, noting what has not their form; read once, so that nothing is noted
+    twice.
+    """
+    return fields.objects("sequence", MOST_EVENTS, EVENT_FIELDS, EVENT_OPTIONAL)
+
+
+def read_sequence(
+    lines: tuple[Fields, ...], basis: Basis, seating: Seating, loaded: Loaded
+) -> tuple[Event, ...]:
     """Return the events in order, noting faults; () where the load has no sequence."""
-    if "sequence" not in fields:
-        return ()
-    cabin = Cabin(seating, (*loaded.crew, *loaded.passengers), loaded.items)
+    cabin = Cabin(seating, (*loaded.crew, *loaded.passengers), loaded.items, loaded.coming)
     clock = _Clock(basis, loaded.fuel) if loaded.fuel is not None else None
     parts = {part.id: part for part in basis.positions}
     found: list[Event] = []
     settled: dict[str, tuple[PartState, Fields]] = {}
-    for number, line in enumerate(fields.objects("sequence", MOST_EVENTS, EVENT_FIELDS, EVENT_OPTIONAL), 1):
+    for number, line in enumerate(lines, 1):
         event = _event(number, line, cabin, clock, parts)
         found.append(event)
         named = line.mapping("position")
@@ -65,12 +74,14 @@ def read_sequence(fields: Fields, basis: Basis, seating: Seating, loaded: Loaded
 
 def check_sequence_shape(fields: Fields) -> None:
     """Note what of a sequence can be seen to be wrong without a loading basis."""
-    for line in fields.objects("sequence", MOST_EVENTS, EVENT_FIELDS, EVENT_OPTIONAL):
+    for line in event_fields(fields):
         line.quantity("after_burning", WEIGHT_OR_VOLUME, zero=True)
         line.choice("since", SINCE)
         _demand_one_kind(line)
         for kind in ("leave", "move"):
             line.objects(kind, MOST_LINES, (), ("seat", "place", "what", "weight", "to"))
+        for comer in coming_lines(line):
+            comer.quantity("weight", Dimension.WEIGHT, zero=False)
         transfer = line.inner("transfer", TRANSFER_FIELDS)
         if transfer is not None:
             transfer.quantity("quantity", WEIGHT_OR_VOLUME, zero=False)
@@ -87,6 +98,10 @@ def _event(
         detail = "who or what is not aboard at take-off is no part of this load; leave it out of the load"
         line.note("leave", "leaves-before-take-off", detail)
         return Event(number, leg, burned, line.pointer)
+    if COMING in line and leg == "taxi":
+        detail = "who or what is aboard at take-off stands among the passengers and items; write it there"
+        line.note(COMING, "comes-before-take-off", detail)
+        return Event(number, leg, burned, line.pointer)
     return Event(
         number,
         leg,
@@ -96,6 +111,7 @@ def _event(
         moving=cabin.moving(line),
         transfer=_transfer(line, cabin.basis, clock),
         positions=_positions(line, leg, parts),
+        coming=cabin.coming(line),
     )
 
 

@@ -1,7 +1,8 @@
-"""Reading who or what leaves or moves in an event, against who and what is then aboard, and where.
+"""Reading who or what leaves, moves or comes aboard in an event, against who and what is then aboard, and
+where.
 
 A person is named by the seat, an item by the place and the words, in which the load declares them, wherever
-they are by then.
+they are by then. Who comes aboard has a seat of its own by then, so that names stay plain.
 """
 
 from fractions import Fraction
@@ -10,6 +11,7 @@ from fleet.basis import Place, Seat
 from fleet.conversion import in_unit
 from fleet.quantities import Dimension
 from loads.balance.aboard import PILOT_IN_COMMAND, Item, Person
+from loads.balance.coming import COMING, Comer, Comers
 from loads.balance.events import Leaving, Moving
 from loads.balance.fields import Fields
 from loads.balance.people import Seating
@@ -25,7 +27,13 @@ LONGEST_WHAT = 120
 class Cabin:
     """Who sits and what lies where, as the events so far left it."""
 
-    def __init__(self, seating: Seating, people: tuple[Person, ...], items: tuple[Item, ...]) -> None:
+    def __init__(
+        self,
+        seating: Seating,
+        people: tuple[Person, ...],
+        items: tuple[Item, ...],
+        comers: Comers | None = None,
+    ) -> None:
         self.basis = seating.basis
         self.configuration = seating.configuration
         self.people = {person.seat.id: person for person in people}
@@ -34,6 +42,8 @@ class Cabin:
         self.where: dict[str, str] = {person.pointer: seat for seat, person in self.people.items()}
         self.left: dict[str, Fraction | None] = {item.pointer: item.weight for item in items}
         self.gone: dict[str, str] = {}  # line of the load: the event it left in
+        self.comers = dict(comers or {})  # those who have not come yet
+        self.names = {name: person.pointer for person in people for name in _names(person)}
         self.known: dict[str, Seat | Place] = {**seating.known}
         self.known |= {place.id: place for place in seating.basis.places}
 
@@ -69,6 +79,51 @@ class Cabin:
                 self._demand_free(line, who, one.to)
         return tuple(one for _, _, one in found)
 
+    def coming(self, event: Fields) -> tuple[Person | Item, ...]:
+        """Return who and what comes aboard in an event, noting faults."""
+        found: list[Person | Item] = []
+        if event.raw(COMING) == []:
+            event.note(COMING, "empty", "the list is empty; name who or what, or drop the event")
+        here = [one for one in self.comers.values() if one.line.pointer.startswith(f"{event.pointer}/")]
+        for comer in here:
+            del self.comers[comer.line.pointer]
+            if isinstance(comer.who, Item):
+                self._item_comes(comer.line, comer.who)
+            else:
+                self._person_comes(comer.line, comer.who, comer)
+            found.append(comer.where)
+        return tuple(found)
+
+    def _person_comes(self, line: Fields, person: Person, comer: Comer) -> None:
+        for name in _names(person):
+            held = self.names.get(name)
+            if held is not None and held not in self.gone:
+                detail = f"the same person is aboard then, from {held}; who comes aboard again left before"
+                line.note("name", "comes-aboard-twice", detail)
+            self.names[name] = person.pointer
+        seat = person.seat
+        belongs = self.people.get(seat.id)
+        if belongs is not None and belongs.pointer not in self.gone:
+            detail = f"{seat.name} is the seat of {belongs.pointer}, who is aboard then; choose another seat"
+            line.note("seat", "seat-taken", detail)
+        else:
+            self._demand_free(line, person, seat, "seat")
+        self.people[seat.id] = person
+        self.where[person.pointer] = seat.id if comer.at is None else comer.at.id
+        self.crew += person.role == "crew"
+
+    def _item_comes(self, line: Fields, item: Item) -> None:
+        named = (item.place.id, item.what)
+        if any((one.place.id, one.what) == named for one in self.items if one.pointer not in self.gone):
+            detail = "something aboard is called so there then; use other words, or let that one leave before"
+            line.note("what", "comes-aboard-twice", detail)
+        self.items = (*self.items, item)
+        self.left[item.pointer] = item.weight
+
+    def _not_yet(self, line: Fields, name: str, pointer: str) -> None:
+        detail = f"comes aboard only later, at {pointer}; put the events in order"
+        line.note(name, "not-aboard-yet", detail)
+
     def _lines(
         self, event: Fields, name: str, needed: tuple[str, ...], optional: tuple[str, ...]
     ) -> tuple[Fields, ...]:
@@ -98,6 +153,10 @@ class Cabin:
             line.note("seat", "unknown-seat", detail)
             return None
         found = self.people.get(wanted)
+        later = next((p for p, one in self.comers.items() if _seat_of(one) == wanted), None)
+        if (found is None or found.pointer in self.gone) and later is not None:
+            self._not_yet(line, "seat", later)
+            return None
         if found is None:
             detail = "nobody is declared in this seat; name the seat somebody has in the load"
             line.note("seat", "nobody-there", detail)
@@ -117,6 +176,12 @@ class Cabin:
             line.note("place", "unknown-place", detail)
             return None
         found = [item for item in self.items if (item.place.id, item.what) == (wanted, what)]
+        present = [item for item in found if item.pointer not in self.gone]
+        found = present or found[-1:]
+        later = next((p for p, one in self.comers.items() if _words_of(one) == (wanted, what)), None)
+        if not present and later is not None:
+            self._not_yet(line, "what", later)
+            return None
         if len(found) != 1 or found[0].removed:
             count = "nothing" if not found or len(found) == 1 else "more than one item"
             detail = f"{count} aboard is called so there; write it as in the load, each item in other words"
@@ -201,8 +266,23 @@ class Cabin:
             return None
         return to
 
-    def _demand_free(self, line: Fields, person: Person, seat: Seat) -> None:
+    def _demand_free(self, line: Fields, person: Person, seat: Seat, name: str = "to") -> None:
         others = [who for who, spot in self.where.items() if spot == seat.id and who != person.pointer]
         if others:
             detail = f"{seat.name} is taken by {others[0]} then; choose another seat or place"
-            line.note("to", "seat-taken", detail)
+            line.note(name, "seat-taken", detail)
+
+
+def _names(person: Person) -> tuple[str, ...]:
+    """Return the names on a line as they are compared, an infant's too."""
+    infant = person.lap_infant
+    names = (person.name,) if infant is None else (person.name, infant.name)
+    return tuple(" ".join(name.split()).casefold() for name in names)
+
+
+def _seat_of(comer: Comer) -> str | None:
+    return comer.who.seat.id if isinstance(comer.who, Person) else None
+
+
+def _words_of(comer: Comer) -> tuple[str, str] | None:
+    return (comer.who.place.id, comer.who.what) if isinstance(comer.who, Item) else None

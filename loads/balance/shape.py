@@ -10,12 +10,8 @@ from fleet.quantities import Dimension
 from loads.balance.aboard import HOWS, KINDS
 from loads.balance.category import FIELD as CATEGORY
 from loads.balance.declared import (
-    ITEM_FIELDS,
-    ITEM_OPTIONAL,
     LIMIT_FIELDS,
     LIMIT_OPTIONAL,
-    LONGEST_WHAT,
-    MOST_ITEMS,
     MOST_LIMITS,
     MOST_PERSONS,
 )
@@ -23,6 +19,7 @@ from loads.balance.fields import Faults, Fields
 from loads.balance.fitted import settings_form
 from loads.balance.footing import footing_form
 from loads.balance.fuelling import FUEL_FIELDS, FUEL_OPTIONAL, LONGEST_SOURCE, WEIGHT_OR_VOLUME
+from loads.balance.items import ITEM_FIELDS, ITEM_OPTIONAL, LONGEST_WHAT, MOST_ITEMS
 from loads.balance.outline import LONGEST_ID, OPTIONAL, REQUIRED, outline_in
 from loads.balance.people import (
     CREW_FIELDS,
@@ -92,6 +89,7 @@ def _item(line: Fields) -> None:
     line.text("place", LONGEST_ID)
     line.choice("how", HOWS)
     line.flag("removed")
+    line.flag("jettisonable")
     footing_form(line)
     line.quantity("weight", Dimension.WEIGHT, zero=False)
 

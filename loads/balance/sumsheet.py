@@ -48,7 +48,7 @@ def lines_without_fuel(declared: Declared, empty: EmptyFigures | None) -> Aboard
     for person in declared.passengers:
         payload += people_lines("passengers", person)
     for item in declared.items:
-        payload += _item(item)
+        payload += item_lines("items", item)
     operating_weight = _sums(operating)
     aboard = _sums(payload)
     whole = None if operating_weight is None or aboard is None else _together(operating_weight, aboard)
@@ -153,25 +153,27 @@ def people_lines(group: str, person: Person) -> list[Line]:
     return lines
 
 
-def _item(item: Item) -> list[Line]:
+def item_lines(group: str, item: Item) -> list[Line]:
     """Return the line of an item, and after it those of the pallet, net or spreader that go with it."""
     place, weight = item.place, item.weight
-    rigged = [_rigging(item, part) for part in item.rigging] if item.rigging else []
+    rigged = [_rigging(group, item, part) for part in item.rigging] if item.rigging else []
     if weight is not None and rigged:
         weight -= added(part.weight for part in item.rigging)
     # What it is called is typed freely and may name somebody: it is joined where it is shown, by its pointer.
     what = f"{place.name}, {item.kind}{', removed' if item.removed else ''}"
+    if item.jettisonable:
+        what = f"{what}, jettisonable"
     along = across = None
     if weight is not None:
         along, lateral_arm = times(weight, place.arm), place.lateral_arm
         across = times(weight, lateral_arm) if lateral_arm.numerator else lateral_arm
-    line = Line("items", what, item.how, weight, place.arm, along, across, False, item.pointer)
+    line = Line(group, what, item.how, weight, place.arm, along, across, False, item.pointer)
     return [line, *rigged] if rigged else [line]
 
 
-def _rigging(item: Item, part: Rigging) -> Line:
+def _rigging(group: str, item: Item, part: Rigging) -> Line:
     place, what = item.place, f"{item.place.name}, {part.part} of {item.kind}"
-    line = Line("items", what, "declared", part.weight, place.arm, None, None, False, part.pointer)
+    line = Line(group, what, "declared", part.weight, place.arm, None, None, False, part.pointer)
     return _placed(line, place.lateral_arm)
 
 

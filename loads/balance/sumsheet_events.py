@@ -16,7 +16,7 @@ from loads.balance.prepared import Prepared
 from loads.balance.result import Json, Line, State
 from loads.balance.rounding import VOLUME_PLACES, WEIGHT_PLACES, printed
 from loads.balance.sections import Section, Sections, after_transfer
-from loads.balance.sumsheet import people_lines, total_line
+from loads.balance.sumsheet import item_lines, people_lines, total_line
 
 FUEL = {"taxi": "taxi fuel", "flight": "trip fuel"}
 
@@ -46,6 +46,8 @@ def event_words(event: Event, before: Declared, ready: Prepared) -> str:
     if event.moving:
         moves = (f"{_of(one.line, before)} to {one.to.name}" for one in event.moving)
         return f"moving: {', '.join(moves)}"
+    if event.coming:
+        return f"coming aboard: {', '.join(_comes(one) for one in event.coming)}"
     if event.transfer is not None:
         names = {tank.id: tank.name for tank in ready.basis.tanks}
         volume = f"{printed(event.transfer.volume, VOLUME_PLACES)} {ready.volume}"
@@ -81,6 +83,13 @@ def _of(line: str, before: Declared) -> str:
     if isinstance(found, Person):
         return found.seat.name
     return f"{found.kind} in {found.place.name}"
+
+
+def _comes(one: Person | Item) -> str:
+    if isinstance(one, Person):
+        return one.seat.name
+    outside = " that can be released" if one.jettisonable else ""
+    return f"{one.kind} in {one.place.name}{outside}"
 
 
 def _found(line: str, before: Declared) -> Person | Item:
@@ -119,9 +128,15 @@ def _moments(contents: Contents, declared: Declared, ready: Prepared) -> tuple[F
 
 
 def _event(event: Event, before: Declared, contents: Contents, ready: Prepared) -> Iterator[Line]:
-    """Yield the lines of an event: what goes off with its weight, what moves with its change of moment."""
+    """Yield the lines of an event: what goes off or comes with its weight, what moves with its change of
+    moment.
+    """
     for gone in event.leaving:
         yield from _leaving(event, gone, before)
+    for one in event.coming:
+        lines = people_lines("sequence", one) if isinstance(one, Person) else item_lines("sequence", one)
+        for line in lines:
+            yield line._replace(what=f"event {event.number}, comes aboard: {line.what}")
     for moved in event.moving:
         yield _moving(event, moved, before)
     if event.transfer is not None:

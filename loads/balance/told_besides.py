@@ -4,6 +4,7 @@ and permits that hold, the weighing that a rule asks for.
 
 from loads.balance.aboard import Declared
 from loads.balance.circumstances import PLAIN
+from loads.balance.over_flight import coming_people
 from loads.balance.result import Json
 
 
@@ -11,7 +12,7 @@ def told_besides(declared: Declared) -> Json:
     """Return these parts by name; nothing at all for a load that has none of them."""
     found: Json = {}
     if declared.standards is not None:
-        people = (*declared.crew, *declared.passengers)
+        people = (*declared.crew, *declared.passengers, *coming_people(declared))
         counts = {how: sum(one.how == how for one in people) for how in ("weighed", "declared", "estimated")}
         found["standard_weights"] = {**declared.standards.as_document(), **counts}
     about = declared.circumstances

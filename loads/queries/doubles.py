@@ -85,8 +85,13 @@ def _people(declared: Mapping[str, Any]) -> Iterator[tuple[str, frozenset[str], 
     for place, line in enumerate(declared.get("crew", ())):
         login = {f"login {line['person'].lower()}"} if line.get("person") else set()
         yield f"/crew/{place}", frozenset({_name(line), *login}), "One of the crew, by login or name,"
-    for place, line in enumerate(declared.get("passengers", ())):
-        pointer, infant = f"/passengers/{place}", line.get("lap_infant")
+    aboard = [(f"/passengers/{place}", line) for place, line in enumerate(declared.get("passengers", ()))]
+    for event, happens in enumerate(declared.get("sequence", ())):
+        for place, line in enumerate(happens.get("come_aboard", ())):
+            if "seat" in line:
+                aboard.append((f"/sequence/{event}/come_aboard/{place}", line))
+    for pointer, line in aboard:
+        infant = line.get("lap_infant")
         yield pointer, frozenset({_name(line)}), "A passenger of the same name"
         if infant:
             yield f"{pointer}/lap_infant", frozenset({_name(infant)}), "A lap infant of the same name"

@@ -62,7 +62,8 @@ def least_ballast(question: Question) -> Found | None:
     _, heavier = question.weight_range()
     sources = []
     for place in question.ready.basis.places:
-        if place.id not in set(question.declared.configuration.places) or place.maximum is None:
+        present = place.id in set(question.declared.configuration.places) and not place.external
+        if not present or place.maximum is None:
             continue
         room = None if place.maximum.value is None else place.maximum.value - (held.get(place.id) or ZERO)
         most = min((each for each in (room, heavier) if each is not None), default=None)

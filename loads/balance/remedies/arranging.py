@@ -156,11 +156,13 @@ def _item_columns(table: _Table, question: Question) -> None:
     """Add what can go where: a switch for each way, and whole tenths of a weight behind it."""
     declared, program = question.declared, table.program
     open_to = [
-        place for place in question.ready.basis.places if place.id in set(declared.configuration.places)
+        place
+        for place in question.ready.basis.places
+        if place.id in set(declared.configuration.places) and not place.external
     ]
     fixed = fixed_lines(declared)
     for item in declared.items:
-        if not is_movable(item) or item.weight is None or item.pointer in fixed:
+        if not is_movable(item) or item.weight is None or item.pointer in fixed or item.place.external:
             continue
         parts: dict[int, Number] = {}
         for place in open_to:

@@ -8,6 +8,7 @@ or whatever a sequence of events names stays where it is.
 
 from fleet.basis import Seat
 from loads.balance.aboard import Declared, Person
+from loads.balance.over_flight import coming_people
 
 YOUNG = frozenset({"child", "infant"})
 
@@ -26,9 +27,12 @@ def suits(seat: Seat, person: Person) -> bool:
 
 
 def free_seats(declared: Declared, seats: tuple[Seat, ...]) -> tuple[Seat, ...]:
-    """Return the seats of the configuration, as they stand, that no crew has."""
+    """Return the seats of the configuration, as they stand, that neither crew nor anybody who comes aboard
+    has.
+    """
     settings = {seat.id: seat for seat, _ in declared.settings}
     crew = {person.seat.id for person in declared.crew}
+    crew |= {person.seat.id for person in coming_people(declared)}  # kept for who comes aboard in flight
     present = set(declared.configuration.seats)
     return tuple(settings.get(seat.id, seat) for seat in seats if seat.id in present and seat.id not in crew)
 
