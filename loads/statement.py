@@ -119,9 +119,10 @@ def _fuel(result: Document) -> list[str]:
 
 def _persons(result: Document) -> str:
     persons = cast("Document", result["persons"])
+    most = f"; at most {persons['greatest_in_flight']} in flight" if "greatest_in_flight" in persons else ""
     return (
         f"Persons on board: {persons['total']} ({persons['crew']} crew, {persons['passengers']} passengers, "
-        f"{persons['lap_infants']} lap infants)."
+        f"{persons['lap_infants']} lap infants){most}."
     )
 
 

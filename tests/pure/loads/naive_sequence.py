@@ -18,14 +18,15 @@ def aboard_at_start(declared, empty):
     lines = [("", empty.weight, empty.moment, empty.lateral_moment)]
     fixed = (*declared.configuration.equipment, *declared.configuration.operating_items)
     lines += [("", item.weight, item.weight * item.arm, item.weight * item.lateral_arm) for item in fixed]
-    for person in (*declared.crew, *declared.passengers):
-        infant = person.lap_infant.weight if person.lap_infant and person.lap_infant.weight else F(0)
-        weight = person.weight + infant
-        lines.append((person.pointer, weight, weight * person.seat.arm, weight * person.seat.lateral_arm))
-    for item in declared.items:
-        weight = item.weight
-        lines.append((item.pointer, weight, weight * item.place.arm, weight * item.place.lateral_arm))
-    return lines
+    return lines + [_line(one) for one in (*declared.crew, *declared.passengers, *declared.items)]
+
+
+def _line(one):
+    """Somebody or something aboard as (line, weight, moment, lateral moment)."""
+    spot = one.seat if hasattr(one, "seat") else one.place
+    infant = getattr(one, "lap_infant", None)
+    weight = one.weight + (infant.weight if infant and infant.weight else F(0))
+    return one.pointer, weight, weight * spot.arm, weight * spot.lateral_arm
 
 
 def after_event(lines, event):
@@ -43,7 +44,7 @@ def after_event(lines, event):
             left.append((line, weight, weight * moved[line].arm, weight * moved[line].lateral_arm))
         else:
             left.append((line, weight, moment, across))
-    return left
+    return left + [_line(one) for one in event.coming]
 
 
 def points_of_flight(declared, basis, empty, samples):

@@ -1,8 +1,8 @@
 """The worst point of a flight with a random sequence against many samples: none is worse, one is as bad.
 
 The judge is `naive_sequence`, which shares no code with the engine. Beside tanks, tables and envelopes of
-`test_path_against_sampling`, events are drawn: people and items that leave or move, transfers, gear and
-flaps.
+`test_path_against_sampling`, events are drawn: people and items that leave, move or come aboard, transfers,
+gear and flaps.
 """
 
 from dataclasses import replace
@@ -15,6 +15,7 @@ from fleet.positions import MovingPart, PartState
 from loads.balance.assess import assess
 from loads.balance.declared import read_load
 from loads.balance.events import Event, Leaving, Moving, Transfer
+from loads.balance.over_flight import as_seat
 from tests.pure.loads.making import SOURCE, load, twin, twin_empty
 from tests.pure.loads.naive_path import assert_as_sampled, drawn_down
 from tests.pure.loads.naive_sequence import points_of_flight, poured, sampled_flight
@@ -55,9 +56,15 @@ def sequences(draw, basis, plan):
             kinds = (
                 ("move", "transfer", "position")
                 if leg == "taxi"
-                else ("leave", "move", "transfer", "position")
+                else ("leave", "move", "transfer", "position", "come")
             )
-            made = draw(_events(draw(st.sampled_from(kinds)), basis, plan, (contents, people, items)))
+            aboard = (contents, people, items)
+            kind = draw(st.sampled_from(kinds))
+            where = f"/sequence/{len(found)}/come_aboard"
+            if kind == "come":
+                made = {"coming": draw(_comers(where, people, items))}
+            else:
+                made = draw(_events(kind, basis, plan, aboard))
             if made is None:
                 continue
             found.append(Event(len(found) + 1, leg, burned, "", **made))
@@ -102,6 +109,22 @@ def _events(draw, kind, basis, plan, then):
         return None
     moved = draw(st.sampled_from(basis.positions))
     return {"positions": ((moved, draw(st.sampled_from(moved.states))),)}
+
+
+@st.composite
+def _comers(draw, where, people, items):
+    """A person to a seat or a place, an item to a place, or both; they may leave and move later."""
+    weights = st.integers(1, 900).map(lambda tenths: F(tenths, 2))
+    found = []
+    if draw(st.booleans()):
+        person = replace(DECLARED.passengers[0], lap_infant=None, weight=draw(weights), pointer=f"{where}/0")
+        found.append(replace(person, seat=as_seat(draw(st.sampled_from(SPOTS)))))
+        people.append(f"{where}/0")
+    if not found or draw(st.booleans()):
+        place, weight = draw(st.sampled_from(TWIN.places)), draw(weights)
+        found.append(replace(DECLARED.items[0], place=place, weight=weight, pointer=f"{where}/1"))
+        items[f"{where}/1"] = weight
+    return tuple(found)
 
 
 @st.composite
@@ -153,3 +176,20 @@ def test_landing_and_the_lines_add_up_to_the_plain_sum_of_all_that_is_left(fligh
         elif line.group != "operating weight":
             state = result.state(line.group)
             assert (weight, moment, across) == (state.weight, state.moment, state.lateral_moment)
+
+
+@settings(max_examples=60, deadline=None, suppress_health_check=list(HealthCheck))
+@given(sequenced())
+def test_the_greatest_and_the_least_weight_in_flight_are_those_of_all_samples(flight):
+    basis, declared = flight
+    if not any(each.coming for each in declared.sequence):
+        return
+    points = [each for each in points_of_flight(declared, basis, twin_empty(), 4) if each.leg != "taxi"]
+
+    result = assess(declared, basis, twin_empty(), advised=False)
+
+    weights = [each.weight for each in points]
+    limits = declared.configuration.limits
+    assert result.check("weight.in-flight").room == limits.take_off.value - max(weights)
+    assert result.check("weight.minimum-flying").room == min(weights) - limits.minimum_flying.value
+    event(f"{result.check('weight.in-flight').title[:30]}")

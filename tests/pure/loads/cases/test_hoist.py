@@ -10,12 +10,16 @@ from typing import Any
 
 import pytest
 
+from fleet.standard_weights_reading import read_standard_weights
+from fleet.stations import Rail
+from loads.balance.assess import assess
 from loads.balance.declared import read_load
 from loads.balance.shape import check_shape
 from records.refusal import Invalid
 from tests.pure.loads.cases.test_loads_that_leave_or_move import event
 from tests.pure.loads.making import F, place, seat
-from tests.pure.loads.round_figures import SEATS, at, box, flown, q, round_basis, round_load
+from tests.pure.loads.round_figures import EMPTY, SEATS, at, box, flown, q, round_basis, round_load
+from tests.pure.loads.standards import seasonal_document
 
 SAVED = {"name": "T. Brisk", "seat": "S2", "weight": q(220), "how": "estimated"}
 FOUND = SAVED | {"how": "declared"}
@@ -56,16 +60,21 @@ def test_persons_on_board_stay_the_count_at_the_start_and_the_greatest_number_is
     assert (persons["total"], persons["greatest_in_flight"]) == (1, 3)
 
 
-def test_more_people_than_seats_is_outside_although_each_had_a_seat_of_their_own() -> None:
-    # all four jumpers stand at the door, one in a fifth seat's stead would be the sixth person of five seats
+def test_a_seat_whose_person_stands_elsewhere_is_no_seat_for_who_comes() -> None:
+    # five seats, five people aboard, four of them at the door: a sixth has none
     stood = [event(20, move=[{"seat": name, "to": "DOOR"} for name in SEATS])]
-    basis = round_basis()
-    five = replace(basis.configurations[0], seats=("P", *SEATS))
-    basis = replace(basis, configurations=(five,))
     came = [event(30, come_aboard=[FOUND | {"seat": "S1"}])]
-    assert refused(round_load(4, sequence=stood + came), basis) == {
-        ("/sequence/1/come_aboard/0/seat", "seat-taken")
-    }
+    assert refused(round_load(4, sequence=stood + came)) == {("/sequence/1/come_aboard/0/seat", "seat-taken")}
+
+
+def test_more_people_than_seats_is_outside() -> None:
+    # S3 and S4 are blocked once everybody is read: three may be aboard, and four are
+    basis = round_basis()
+    declared = read_load(round_load(2, sequence=[event(30, come_aboard=[FOUND | {"seat": "S3"}])]), basis)
+    few = replace(declared, configuration=replace(declared.configuration, seats=("P", "S1", "S2")))
+    check = assess(few, basis, EMPTY).check("persons.greatest")
+    assert (check.outcome, check.actual, check.limit) == ("fail", "4", "3")
+    assert check.margin_text == "1 more than there are seats"
 
 
 def test_on_the_hoist_the_arm_and_the_limit_of_the_hoist_count_then_those_of_the_seat() -> None:
@@ -146,6 +155,26 @@ def test_an_estimated_weight_of_somebody_hoisted_up_is_unresolved_as_for_anybody
     assert result.verdict == "unresolved"
 
 
+def test_a_standard_weight_comes_from_the_table_for_who_comes_aboard_too() -> None:
+    # The invented table: an adult in winter (1 December) 200 lb, a child 90 lb; landing 200 and 90 lb more.
+    table = read_standard_weights(seasonal_document())
+    adult = {"name": "T. Brisk", "seat": "S2", "category": "adult", "how": "standard"}
+    child = {"name": "M. Brisk", "seat": "S3", "category": "child", "how": "standard"}
+    document = round_load(sequence=[event(60, come_aboard=[adult, child])])
+    basis = round_basis()
+
+    result = assess(read_load(document, basis, table), basis, EMPTY)
+
+    assert at(result, "take-off")[0] == 2560
+    assert at(result, "landing")[0] == 2440 + 290
+    told = result.as_document()["standard_weights"]
+    assert isinstance(told, dict)
+    assert told["standard"] == 2
+    # Without a table it is not known, and the load is unresolved.
+    bare = flown(document)
+    assert (bare.check("weights.unknown").outcome, bare.verdict) == ("unresolved", "unresolved")
+
+
 def test_who_comes_aboard_may_leave_again_and_somebody_lowered_may_come_back() -> None:
     # N. S1 is lowered at 30 lb, comes up at 60 with T. Brisk, who is set down at 90: landing as if only S1
     back = {"name": "N. S1", "seat": "S1", "position": "winch operator", "weight": q(200), "how": "weighed"}
@@ -217,8 +246,6 @@ def test_the_form_of_these_lines_is_asked_without_a_basis_too() -> None:
 
 
 def test_a_seat_on_a_rail_is_judged_at_both_ends_for_who_comes_aboard_too() -> None:
-    from fleet.stations import Rail  # noqa: PLC0415  # only here
-
     seats = round_basis().seats
     rail = Rail(F(100), F(130), (), seats[0].source)
     basis = round_basis(

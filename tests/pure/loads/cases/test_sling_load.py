@@ -12,12 +12,14 @@ from typing import Any
 import pytest
 
 from fleet.basis import Basis
+from fleet.restrictions import apply
 from loads.balance.declared import read_load
 from loads.balance.result import Result
 from records.refusal import Invalid
 from tests.pure.loads.cases.test_hoist import FOUND
 from tests.pure.loads.cases.test_loads_that_leave_or_move import event
 from tests.pure.loads.making import F, limit
+from tests.pure.loads.papers import lb, restriction
 from tests.pure.loads.round_figures import at, box, flown, q, round_basis, round_load
 
 DRUM = {"kind": "cargo", "what": "drum", "place": "HOOK", "weight": q(400), "how": "weighed"}
@@ -35,11 +37,9 @@ def hook_basis(*envelopes: Any, external: Any = 3000, hook: Any = 500, **weights
         for one in basis.places
     )
     higher = None if external is None else limit(external)
-    known = replace(
-        basis.configurations[0],
-        limits=replace(basis.configurations[0].limits, with_external_load=higher),
-    )
-    return replace(basis, places=places, configurations=(known,))
+    entered = replace(basis.limits, with_external_load=higher)
+    known = replace(basis.configurations[0], limits=entered)
+    return replace(basis, places=places, limits=entered, configurations=(known,))
 
 
 def slung(*events: Any, item: Any = SLUNG, jumpers: int = 0) -> dict[str, Any]:
@@ -179,3 +179,19 @@ def test_what_cannot_be_released_is_refused_as_such(item: Any, code: str) -> Non
     with pytest.raises(Invalid) as caught:
         read_load(slung(item=item), hook_basis())
     assert [(fault.pointer, fault.code) for fault in caught.value.faults] == [("/items/0/jettisonable", code)]
+
+
+HIGHER = {"effect": "limit", "limit": "with_external_load", "weight": lb("2950")}
+
+
+def test_a_restriction_lowers_the_higher_maximum_and_never_makes_one() -> None:
+    lowered = apply(hook_basis(), (restriction(HIGHER),))
+    result = flown(slung(event(60, leave=[RELEASE])), lowered.basis)
+    assert of(result, "weight.take-off") == ("fail", "2960", "2950", -10)
+    assert result.check("weight.take-off").source.startswith("restriction DD-14")
+
+    none = apply(hook_basis(external=None), (restriction(HIGHER),))
+    assert none.basis.configurations[0].limits.with_external_load is None
+    assert none.unmet == (
+        "restriction DD-14 names with_external_load, which the loading basis does not have",
+    )
