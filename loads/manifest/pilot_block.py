@@ -196,6 +196,8 @@ def _persons(counts: Mapping[str, int]) -> Block:
     parts = [f"{counts['crew']} crew", _counted(counts["passengers"], "passenger")]
     if counts["lap_infants"]:
         parts.append(_counted(counts["lap_infants"], "lap infant"))
+    if "greatest_in_flight" in counts:
+        parts.append(f"at most {counts['greatest_in_flight']} in flight")
     return {"total": str(counts["total"]), "words": ", ".join(parts)}
 
 

@@ -179,6 +179,8 @@ def _persons(page: Page) -> dict[str, Any]:
     small = [f"{counts['crew']} crew", f"{counts['passengers']} in passenger seats"]
     if counts["lap_infants"]:
         small.append(f"{counts['lap_infants']} on a lap")
+    if "greatest_in_flight" in counts:
+        small.append(f"at most {counts['greatest_in_flight']} in flight")
     return {"title": "Persons on board", "value": str(counts["total"]), "small": [", ".join(small)]}
 
 

@@ -62,7 +62,8 @@ def test_a_configuration_may_lower_it_and_not_raise_it() -> None:
 
 def test_the_page_of_the_aircraft_says_which_place_is_outside() -> None:
     document = changed(basis_document("twin"), "/places/0/external", True)
-    found = [row["title"] for row in station_rows(document) if row["title"].endswith(", outside the aircraft")]
+    titles = [row["title"] for row in station_rows(document)]
+    found = [title for title in titles if title.endswith(", outside the aircraft")]
     assert [title.casefold() for title in found] == [
         f"{document['places'][0]['name']}, outside the aircraft".casefold()
     ]
