@@ -9,6 +9,7 @@ The database builds the chain (records/sql/seal.sql); this module only judges it
 
 import hashlib
 import json
+import re
 from collections.abc import Iterable
 from dataclasses import dataclass
 from operator import ne
@@ -17,7 +18,14 @@ SCHEMA = "tarebook.entry/1"
 # RFC 6962 section 2.1: MTH({d(0)}) = SHA-256(0x00 || d(0)). The prefix keeps an entry from passing for a
 # node.
 _LEAF = b"\x00"
-_CHANGES = ',"changes":['
+# How the seal writes act and change, texts without anything to be escaped; others go the plain way.
+_TEXT = r'"[ !#-\[\]-~]*+"'
+_ACT = re.compile(
+    rf'{{"id":{_TEXT},"at":{_TEXT},"kind":{_TEXT},'
+    rf'"actor":{{"kind":{_TEXT},"key":{_TEXT},"name":(?:null|{_TEXT}),"capacity":{_TEXT}}},'
+    rf'"about":{_TEXT},"reason":{_TEXT},"caused_by":(?:null|{_TEXT}),"request":{_TEXT}}},"changes":\['
+)
+_CHANGE = re.compile(rf'{{"table":{_TEXT},"key":{_TEXT},"operation":{_TEXT},"image":')
 
 
 @dataclass(frozen=True, slots=True)
@@ -123,11 +131,11 @@ def follow_rows(rows: Iterable[tuple[int, str | None, str, str]], head: Head) ->
 
 
 class _SealsForm:
-    """Judges whether entries of one chain stand in the form in which the seal writes them: six names in their
-    order, nothing between them, the first four with the wanted values.
+    """Judges whether entries of one chain stand in the form in which the seal writes them: all names of
+    entry, act and change in their order, nothing between them, the first four with the wanted values.
 
-    The reader hands over each object inside as its pairs, so that a name that stands twice is seen; what is
-    done with them takes no step of ours for each.
+    Only the images are read as JSON. The reader hands over each object as its pairs, so that a name that
+    stands twice is seen; what is done with them takes no step of ours for each.
     """
 
     def __init__(self, chain: str) -> None:
@@ -141,18 +149,23 @@ class _SealsForm:
         """
         link = f'"{previous}"' if previous is not None else "null"
         beginning = f'{self._opening}{position},"previous":{link},"act":'
-        if not entry.startswith(beginning):
+        act = _ACT.match(entry, len(beginning)) if entry.startswith(beginning) else None
+        if act is None:
             return False
-        objects = self._objects
+        end, objects = act.end(), self._objects
+        if entry[end:] == "]}":
+            return True  # an act that wrote nothing
         objects.clear()
         try:
-            end = self._read(entry, len(beginning))[1]
-            if not entry.startswith(_CHANGES, end):
-                return False
-            end = self._read(entry, end + len(_CHANGES) - 1)[1]
+            while change := _CHANGE.match(entry, end):
+                end = self._read(entry, change.end())[1]
+                if not entry.startswith("},", end):
+                    twice = any(map(ne, map(len, map(dict, objects)), map(len, objects)))
+                    return entry[end:] == "}]}" and not twice
+                end += 2
         except (ValueError, RecursionError):
-            return False
-        return entry[end:] == "}" and not any(map(ne, map(len, map(dict, objects)), map(len, objects)))
+            pass
+        return False
 
 
 def _same(chain: str, position: int, what: str, expected: object, found: object) -> None:

@@ -6,9 +6,11 @@ import pytest
 from django.core.management import call_command
 from django.db import connections
 
+import records.chain
 from records.act import act
-from records.chain import Finding
+from records.chain import Finding, Head, Link
 from records.reconcile import reconcile
+from records.verify import follow_chains
 from tests import databases
 from tests.records.scratch import AMANI, NOTE, make_tables, put
 
@@ -35,6 +37,22 @@ def test_a_sound_trail_ends_with_zero_and_tells_where_each_chain_ends(three_entr
     assert code == 0
     assert "chain kt: 3 entries hold, head " in said
     assert said.endswith("Sound: chains, filed documents, rows and guards all hold.\n")
+
+
+def test_what_the_database_seals_is_in_the_form_that_is_followed_quickly(three_entries, monkeypatch):
+    plainly: list[str] = []
+    step = records.chain.follow_one
+
+    def counted(link: Link, head: Head) -> Head:
+        plainly.append(link.entry)
+        return step(link, head)
+
+    monkeypatch.setattr(records.chain, "follow_one", counted)
+    chains = follow_chains()
+
+    assert chains.broken == ()
+    assert {head.chain for head in chains.heads} == {"house", "kt"}
+    assert plainly == []
 
 
 def test_acts_that_are_open_or_sealed_meanwhile_raise_no_false_alarm(three_entries, monkeypatch):

@@ -10,8 +10,9 @@ import records.chain
 from records.chain import ChainBroken, Finding, Head, Link, entry_digest, follow, follow_rows
 
 ACT = (
-    '{"id":"1","at":"2026-12-01T12:00:00.000000Z","kind":"x","actor":{"kind":"person","key":"person:7"},'
-    '"reason":"a \\"word\\": {}"}'
+    '{"id":"1","at":"2026-12-01T12:00:00.000000Z","kind":"x",'
+    '"actor":{"kind":"person","key":"person:7","name":null,"capacity":"pilot"},'
+    '"about":"load:1","reason":"a {word}: [1]","caused_by":null,"request":"r"}'
 )
 CHANGE = (
     '{"table":"t","key":"1","operation":"insert","image":{"id": 1, "what": "a, \\\\\\": b", "n": [{"a": 1}]}}'
@@ -102,6 +103,20 @@ BENT = {
     "a list": "[]",
     "nothing": "",
     "nested beyond all sense": ENTRY.replace('{"a": 1}', "[" * 100_000 + "]" * 100_000),
+    "a comma and no change behind it": ENTRY[:-2] + ",]}",
+    "a comma and a bracket behind the change": ENTRY[:-2] + ",}]}",
+    "a comma before the first change": ENTRY.replace('"changes":[', '"changes":[,'),
+    "no change": ENTRY.replace(CHANGE, ""),
+    "two changes": ENTRY.replace(CHANGE, f"{CHANGE},{CHANGE}"),
+    "a name twice in the second": ENTRY.replace(CHANGE, f"{CHANGE},{CHANGE}").replace(
+        '{"id": 1, "what": "a, \\\\\\": b", "n": [{"a": 1}]}}]', '{"id": 1, "id": 1}}]'
+    ),
+    "a change with something behind its image": ENTRY[:-3] + ',"more":1}]}',
+    "a reason with a quote": ENTRY.replace("a {word}", 'a \\"word\\"'),
+    "a reason in other letters": ENTRY.replace("a {word}", "gewöhnlich"),
+    "a name instead of null": ENTRY.replace('"name":null', '"name":"sha256:0"'),
+    "a number for a name": ENTRY.replace('"name":null', '"name":7'),
+    "another name in the act": ENTRY.replace('"about"', '"around"'),
     "changes that are none": ENTRY.replace(CHANGES, '"changes":[1,2]'),
     "the changes once more": ENTRY[:-1] + f",{CHANGES}}}",
 }
