@@ -43,13 +43,23 @@ def flight_block(facts: Facts) -> Block:
 def verdict_block(facts: Computed, words: Words) -> Block:
     """This function will return the verdict in words, with the nearest limit of weight and of balance."""
     head, sentence = VERDICTS[facts.result["verdict"]]
+    under = permits_said(facts.result)
     governing = facts.result["governing"]
     return {
         "head": head,
-        "sentence": sentence,
+        "sentence": f"{sentence} {under[0].upper()}{under[1:]}." if under else sentence,
+        "permits": under,
         "weight": words.said(governing["weight"], typed=typed_sources(facts)),
         "cg": words.said(governing["cg"]),
     }
+
+
+def permits_said(result: Mapping[str, Any]) -> str:
+    """This function will name the permits a load was judged under, for beside its verdict: `under permit
+    SFP-88`; empty without one.
+    """
+    given = [one["number"] for one in result.get("restrictions_and_permits", ()) if one["kind"] == "permit"]
+    return f"under permit{'s' if len(given) > 1 else ''} {', '.join(given)}" if given else ""
 
 
 def figures_block(facts: Facts, words: Words) -> Block:

@@ -11,6 +11,7 @@ from django.utils import timezone
 from django.views.decorators.http import require_safe
 
 from loads.lifecycle import ways_out
+from loads.manifest.pilot_block import permits_said
 from loads.manifest.words import Words
 from loads.queries.current import Current
 from loads.queries.listing import MOST_ROWS, Filters, list_loads
@@ -70,6 +71,7 @@ def _line(current: Current, zone: ZoneInfo, now: datetime, words: Words) -> dict
         "origin": load.origin,
         "destination": load.destination,
         "verdict": current.assessment.verdict,
+        "permits": permits_said(result),
         "lines": _nearest(result, words),
         "state": current.state,
         "gone": current.state in GONE,

@@ -17,7 +17,7 @@ from fleet.queries.provisions import used_provisions
 from loads import acts
 from loads.lifecycle import ways_out
 from loads.manifest.figures import figure
-from loads.manifest.pilot_block import VERDICTS, fuel_block, open_points, trim_lines
+from loads.manifest.pilot_block import VERDICTS, fuel_block, open_points, permits_said, trim_lines
 from loads.manifest.tables import computation, limits, presented
 from loads.manifest.words import Words
 from loads.models import Load
@@ -127,6 +127,7 @@ def _head(current: Current, zone: ZoneInfo) -> dict[str, Any]:
         "category": _category(current.result()).get("name", ""),
         "verdict": used.verdict,
         "verdict_words": verdict_words(used.verdict),
+        "permits": permits_said(current.result()),
         "state": current.state,
         "step": current.step.number,
         "digest": used.digest,
@@ -142,7 +143,8 @@ def _figures(page: Page, words: Words) -> list[dict[str, Any]]:
     if not result.get("phases"):
         return []
     at = {phase["phase"]: phase for phase in result["phases"]}
-    margins = {check["code"]: words.said(check["margin_text"]) for check in result["checks"]}
+    checks = {check["code"]: check for check in result["checks"]}
+    margins = {code: words.said(check["margin_text"]) for code, check in checks.items()}
     units = result["units"]
     shown = []
     for phase, title in FIGURES:
@@ -152,7 +154,12 @@ def _figures(page: Page, words: Words) -> list[dict[str, Any]]:
             arm += f", {at[phase]['percent_chord']} % MAC"
         if at[phase].get("index"):
             arm += f", index {at[phase]['index']}"
-        small = [margins.get(f"weight.{code}", ""), arm, margins.get(f"cg.{code}", "")]
+        small = [
+            margins.get(f"weight.{code}", ""),
+            arm,
+            _between(checks.get(f"cg.{code}")),
+            margins.get(f"cg.{code}", ""),
+        ]
         value = f"{figure(at[phase]['weight'])} {units['weight']}"
         shown.append(
             {"title": f"{title} {words.weight}", "value": value, "small": [one for one in small if one]}
@@ -166,6 +173,13 @@ def _figures(page: Page, words: Words) -> list[dict[str, Any]]:
         lines = trim_lines(result["trim"])
         shown.insert(2, {"title": "Take-off trim", "value": lines[0], "small": lines[1:]})
     return [*shown, _fuel(page), _persons(page)]
+
+
+def _between(check: Mapping[str, Any] | None) -> str:
+    """This function will return the limits of a CG in words; nothing where there are none."""
+    if check is None or not check["low"] or not check["limit"]:
+        return ""
+    return f"limits {figure(check['low'])} to {figure(check['limit'])} {check['unit']}"
 
 
 def _fuel(page: Page) -> dict[str, Any]:
@@ -230,8 +244,8 @@ def _steps(load: Load) -> Iterable[dict[str, Any]]:
             words = "changed at the last minute and accepted again"
         signature = signed.get(step.id)
         name = bytes(signature.name).decode() if signature else step.person.name if step.person else ""
-        why = f"as {signature.capacity}: {signature.statement}" if signature else step.reason
-        yield {"at": step.at.astimezone(UTC), "what": words, "who": name, "why": why}
+        said = {"capacity": signature.capacity, "signed": signature.statement} if signature else {}
+        yield {"at": step.at.astimezone(UTC), "what": words, "who": name, "why": step.reason, **said}
 
 
 def _versions(current: Current) -> Sequence[dict[str, str]]:

@@ -43,7 +43,7 @@ def test_what_more_can_go_where_reckoned_by_hand() -> None:
 
 
 def test_a_tank_that_takes_a_transfer_later_has_that_much_less_room() -> None:
-    # Taxi burns 40 / 6.5 US gal, half of it from either tank: 56.92 and 50 more are 106.92 of 180 in the right one.
+    # Taxi burns 40 / 6.5 US gal, half from either tank: 56.92 and 50 more are 106.92 of 180 in the right.
     moved = {"from": "LEFT", "to": "RIGHT", "quantity": {"value": 50, "unit": "US gal"}}
     event = {"after_burning": {"value": 0, "unit": "US gal"}, "transfer": moved}
     document = seated({"ROW3-A": 200}, {"AFT-HOLD": 100}, gallons=60) | {"sequence": [event]}
