@@ -31,6 +31,7 @@ class Flight(TypedDict):
     origin: str
     destination: str
     operation: str
+    follows: NotRequired[str]
 
 
 class LapInfant(TypedDict):
@@ -62,6 +63,32 @@ class Passenger(TypedDict):
     category: NotRequired[str]
     weight: NotRequired[Quantity]
     lap_infant: NotRequired[LapInfant]
+    restraint: NotRequired[Quantity]
+
+
+class Footprint(TypedDict):
+    """What touches the floor as the item stands: one area, and how many there are."""
+
+    length: Quantity
+    width: Quantity
+    lies: Literal["along", "across"]
+    feet_lengthwise: NotRequired[int]
+    feet_widthwise: NotRequired[int]
+
+
+class Spreader(TypedDict):
+    """A pallet or spreader; with a size of its own it stands on the floor in the item's stead."""
+
+    weight: Quantity
+    length: NotRequired[Quantity]
+    width: NotRequired[Quantity]
+    lies: NotRequired[Literal["along", "across"]]
+
+
+class Net(TypedDict):
+    """A net over an item."""
+
+    weight: Quantity
 
 
 class Item(TypedDict):
@@ -73,6 +100,11 @@ class Item(TypedDict):
     how: How
     weight: NotRequired[Quantity]
     removed: NotRequired[bool]
+    jettisonable: NotRequired[bool]
+    footprint: NotRequired[Footprint]
+    pallet: NotRequired[Spreader]
+    net: NotRequired[Net]
+    spreader: NotRequired[Spreader]
 
 
 class Fuel(TypedDict):
@@ -92,6 +124,71 @@ class StatedLimit(TypedDict):
     at: Literal["take-off", "landing"]
     weight: Quantity
     source: str
+    kind: NotRequired[str]
+
+
+class SeatSetting(TypedDict):
+    """Where a seat, or every seat on a rail in a row, stands on its rail: one of seat and row."""
+
+    setting: str
+    seat: NotRequired[str]
+    row: NotRequired[str]
+
+
+class Departing(TypedDict):
+    """Who or what leaves in flight: a person by the seat, an item by place and what."""
+
+    seat: NotRequired[str]
+    place: NotRequired[str]
+    what: NotRequired[str]
+    weight: NotRequired[Quantity]
+
+
+class Shifting(TypedDict):
+    """Who or what moves in flight, and to which seat or place."""
+
+    to: str
+    seat: NotRequired[str]
+    place: NotRequired[str]
+    what: NotRequired[str]
+
+
+class ComingAboard(TypedDict):
+    """Who or what comes aboard in flight: a person with a seat, or an item with a place."""
+
+    how: How
+    name: NotRequired[str]
+    seat: NotRequired[str]
+    at: NotRequired[str]
+    position: NotRequired[str]
+    category: NotRequired[str]
+    lap_infant: NotRequired[LapInfant]
+    restraint: NotRequired[Quantity]
+    kind: NotRequired[Literal["baggage", "cargo", "ballast", "equipment", "consumable"]]
+    what: NotRequired[str]
+    place: NotRequired[str]
+    jettisonable: NotRequired[bool]
+    footprint: NotRequired[Footprint]
+    pallet: NotRequired[Spreader]
+    net: NotRequired[Net]
+    spreader: NotRequired[Spreader]
+    weight: NotRequired[Quantity]
+
+
+# `from` is no name that Python takes.
+FuelTransfer = TypedDict("FuelTransfer", {"from": str, "to": str, "quantity": Quantity})
+
+
+class FlightEvent(TypedDict):
+    """What happens at one moment of the flight: one of leave, move, come_aboard, transfer, position."""
+
+    after_burning: Quantity
+    since: NotRequired[Literal["engine start", "take-off"]]
+    leave: NotRequired[list[Departing]]
+    move: NotRequired[list[Shifting]]
+    come_aboard: NotRequired[list[ComingAboard]]
+    transfer: NotRequired[FuelTransfer]
+    position: NotRequired[dict[str, str]]
 
 
 class LoadDocument(TypedDict):
@@ -107,3 +204,7 @@ class LoadDocument(TypedDict):
     items: list[Item]
     fuel: Fuel
     limits: NotRequired[list[StatedLimit]]
+    certification_category: NotRequired[str]
+    sequence: NotRequired[list[FlightEvent]]
+    conditions: NotRequired[list[str]]
+    seat_settings: NotRequired[list[SeatSetting]]

@@ -155,7 +155,8 @@ def test_what_may_be_signed_next_is_shown_word_for_word(people) -> None:
         ({"digest": "0" * 64}, 409, "digest-differs"),
         ({"password": "not it"}, 422, "invalid"),
         ({"password": None}, 422, "invalid"),
-        ({"meaning": "loaded"}, 422, "invalid"),
+        ({"meaning": "seen"}, 422, "invalid"),
+        ({"meaning": "loaded"}, 403, "signature-not-allowed"),  # the loading supervisor's alone
         ({"meaning": ["prepared"]}, 422, "invalid"),
         ({"extra": 1}, 422, "invalid"),
     ],
