@@ -132,8 +132,12 @@ def _weight_limits(checks: Iterable[Mapping[str, Any]], unit: str) -> dict[float
     for check in checks:
         family = check["code"].partition(".")[0]
         if family in {"weight", "performance"} and check["limit"]:
-            name = check["phase"] if family == "weight" else check["source"]
-            named.setdefault(float(Fraction(check["limit"])), []).append(name)
+            name = (check["phase"] or "in-flight") if family == "weight" else check["source"]
+            if check["code"].endswith("-internal"):
+                name = "without external load"
+            names = named.setdefault(float(Fraction(check["limit"])), [])
+            if name not in names:
+                names.append(name)
     return {v: broken(f"{', '.join(phases)} limit {short(v)} {unit}") for v, phases in named.items()}
 
 

@@ -102,7 +102,10 @@ class ComputedAnswer(serializers.Serializer[object]):
     operating_weight = serializers.DictField(allow_null=True)
     certification_category = CategoryFlown(required=False)
     trim = TrimFound(allow_null=True, required=False, help_text="only where the basis has a trim table")
-    persons = serializers.DictField(allow_null=True)
+    persons = serializers.DictField(
+        allow_null=True,
+        help_text="at engine start; `greatest_in_flight` where somebody comes aboard in flight",
+    )
     advisories = serializers.ListField(child=serializers.CharField())
     not_assessed = serializers.ListField(child=serializers.CharField())
     standard_weights = serializers.DictField(

@@ -122,7 +122,7 @@ class _Judge:
         limits, higher = self.limits, self.limits.with_external_load
         ordinary = at_most(self._figure(code, title, at.weight, at.phase), limits.take_off, self._off)
         if not at.released:
-            if at.outside and higher is not None:
+            if at.outside and higher is not None and ordinary.outcome == "fail":
                 text = f"{ordinary.margin_text}; somebody hangs outside, so no higher weight holds"
                 ordinary = ordinary._replace(margin_text=text)
             return [ordinary]

@@ -133,3 +133,13 @@ def test_another_operators_loads_are_never_looked_at(people) -> None:
     submitted(made, aircraft="Q9-KTD")
 
     assert _codes(submitted(people)) == []
+
+
+def test_who_comes_aboard_in_flight_is_told_where_the_same_name_flies_elsewhere(people) -> None:
+    submitted(people)
+    comes = {"name": "L. Osei", "seat": "ROW2-L", "weight": {"value": "170", "unit": "lb"}, "how": "declared"}
+    hoisted = [{"after_burning": {"value": "100", "unit": "lb"}, "come_aboard": [comes]}]
+
+    second = _other_people(people, 40, aircraft="Q9-KTC", sequence=hoisted)
+
+    assert ("same-person", "/sequence/0/come_aboard/0") in _codes(second)

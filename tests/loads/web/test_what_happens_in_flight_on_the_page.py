@@ -32,6 +32,21 @@ def test_the_computation_has_a_line_for_every_event_with_the_name_beside_it(peop
     assert 'stroke-dasharray="1.5 1.5"' in answer.content.decode()
 
 
+def test_who_comes_aboard_is_on_the_page_by_name_and_the_greatest_number_is_told(people) -> None:
+    comes = {"name": "V. Lindqvist", "seat": "ROW2-L", "weight": q("170", "lb"), "how": "declared"}
+    hoisted = [{"after_burning": q("100", "lb"), "come_aboard": [comes]}]
+    document = load_document(people, sequence=hoisted)
+    load = submit_load(document, by=actor(people.preparer)).load
+
+    page = Page(browser(people.pilot).get(f"/loads/{load.id}"))
+
+    assert page.status == 200
+    assert "event 1, comes aboard:" in page.words
+    assert "V. Lindqvist" in page.words
+    assert f"at most {document['persons_on_board'] + 1} in flight" in page.words
+    assert "Greatest number of persons in flight" in page.words
+
+
 def test_a_load_with_events_or_a_leg_before_is_not_revised_where_they_would_be_lost(people) -> None:
     first = submitted(people)
     back = load_document(people)
