@@ -4,6 +4,8 @@ done about it.
 
 from collections.abc import Callable
 from dataclasses import dataclass
+from functools import cache
+from pathlib import Path
 from uuid import UUID
 
 from django.http import HttpRequest, HttpResponse, HttpResponseRedirect
@@ -35,6 +37,8 @@ from records.refusal import Refused
 from records.strict_json import JSON, read
 from records.web.asking import actor_of, operator_of, signed_in
 
+SAMPLES = Path(__file__).resolve().parents[1] / "samples"
+
 
 @dataclass(frozen=True, slots=True)
 class Desk:
@@ -45,6 +49,7 @@ class Desk:
     title: str
     lead: str
     schema: str
+    sample: str  # the file in fleet/samples that shows how such a document is written
     enters: Kind
     approves: Kind | None = None
     ends: Kind | None = None
@@ -57,6 +62,7 @@ WEIGHTS = Desk(
     "Tables of standard weights",
     "What a person counts who was not weighed. One table holds at a time; another person approves it.",
     "tarebook.standard-weights/1",
+    "standard-weights-eu.json",
     acts.ENTER_STANDARD_WEIGHTS,
     acts.APPROVE_STANDARD_WEIGHTS,
 )
@@ -66,6 +72,7 @@ RULE_VALUES = Desk(
     "Rule values",
     "How often something is due and which signatures are asked, each with its source; one set at a time.",
     "tarebook.rules/1",
+    "rules.json",
     acts.ENTER_RULES,
     acts.APPROVE_RULES,
 )
@@ -75,6 +82,7 @@ RESTRICTIONS = Desk(
     "Restrictions",
     "What is inoperative, blocked or lowered. Each binds as soon as it is entered; another person lifts it.",
     "tarebook.restriction/1",
+    "restriction.json",
     acts.ENTER_RESTRICTION,
     None,
     acts.LIFT_RESTRICTION,
@@ -86,6 +94,7 @@ PERMITS = Desk(
     "Permits",
     "What an authority widened, for a time. Another person approves it; it lapses by itself.",
     "tarebook.permit/1",
+    "permit.json",
     acts.ENTER_PERMIT,
     acts.APPROVE_PERMIT,
     acts.END_PERMIT,
@@ -210,6 +219,7 @@ def _desk(
         "title": desk.title,
         "lead": desk.lead,
         "schema": desk.schema,
+        "sample": sample_text(desk.sample) if desk.enters.name in actor.may else "",
         "ends": desk.ends is not None,
         "end_word": desk.end_word,
         "aircraft": aircraft,
@@ -219,6 +229,12 @@ def _desk(
         "refusal": refusal,
     }
     return render(request, "fleet/provisions.html", context, status=refusal.status if refusal else 200)
+
+
+@cache
+def sample_text(name: str) -> str:
+    """This function will return a sample document of the folder `fleet/samples`, as it stands there."""
+    return (SAMPLES / name).read_text("utf-8")
 
 
 def _offers(desk: Desk, one: Provision, aircraft: Aircraft | None, actor: Actor) -> dict[str, str]:

@@ -1,5 +1,5 @@
-"""Limits by category, modification and performance, fuel balance, lateral limits and trim, as the loading basis
-in force states them: rows for its page, figures as typed.
+"""Envelopes, limits by category, modification and performance, fuel balance, lateral limits and trim, as the
+loading basis in force states them: rows for its page, figures as typed.
 """
 
 from collections.abc import Iterator, Mapping
@@ -13,6 +13,7 @@ Document = Mapping[str, Any]
 def rule_rows(document: Document) -> list[Row]:
     """This function will return a row for each of them; [] for a basis that has none."""
     return [
+        *_envelopes(document),
         *_changed(document, "certification_categories", "in the {}"),
         *_changed(document, "modifications", "with {} fitted"),
         *_performance(document),
@@ -20,6 +21,22 @@ def rule_rows(document: Document) -> list[Row]:
         *_fuel_balance(document),
         *_trim(document),
     ]
+
+
+def _envelopes(document: Document) -> Iterator[Row]:
+    """Yield the corners of each envelope as typed."""
+    for each in document["envelopes"]:
+        across = "centre of gravity" if each["axis"] == "longitudinal" else "lateral centre of gravity"
+        held = ", ".join(phase.replace("-", " ") for phase in each["phases"])
+        plane = f"{each['plane']} ({each['unit']})"
+        if "divided_by" in each:
+            plane += f" divided by {each['divided_by']}"
+        corners = "; ".join(f"{value} at {weight}" for weight, value in each["points"])
+        yield {
+            "title": f"Envelope {each['id']}, {across}, at {held}",
+            "value": f"{plane} at weight ({each['weight_unit']}): {corners}",
+            "source": source_words(document, each["source"]),
+        }
 
 
 def _changed(document: Document, part: str, when: str) -> Iterator[Row]:

@@ -40,11 +40,17 @@ def self_check(request: HttpRequest) -> HttpResponse:
         "overdue": stands.overdue,
         "interval": stands.interval,
         "newest": _shown(checks[0], zone) if checks else None,
-        "loads": json.loads(checks[0].document)["loads"] if checks else [],
+        "loads": _answers(checks[0]) if checks else [],
         "checks": [_shown(one, zone) for one in checks],
         "may_run": RUN_SELF_CHECK.name in actor_of(request).may,
     }
     return render(request, "loads/self_check.html", context)
+
+
+def _answers(one: SelfCheck) -> list[dict[str, Any]]:
+    """This function will return the reference loads of a self-check, each with how many answers are wrong."""
+    loads: list[dict[str, Any]] = json.loads(one.document)["loads"]
+    return [{**each, "wrong": sum(not found["right"] for found in each["findings"])} for each in loads]
 
 
 def _shown(one: SelfCheck, zone: ZoneInfo) -> dict[str, Any]:

@@ -179,3 +179,12 @@ def test_what_was_entered_is_shown_as_text(people) -> None:
     body = browser(people.auditor).get("/aircraft/Q9-KTB").content.decode()
 
     assert "<b>N. Tarrow" not in body
+
+
+def test_the_envelopes_in_force_are_told_corner_by_corner(people):
+    (first, *_) = basis_document()["envelopes"]
+
+    words = shown(people.pilot).words
+
+    assert f"Envelope {first['id']}, centre of gravity, at " in words
+    assert "; ".join(f"{value} at {weight}" for weight, value in first["points"]) in words

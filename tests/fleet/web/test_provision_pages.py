@@ -7,6 +7,7 @@ import pytest
 from fleet.actions.approve_permit import approve_permit
 from fleet.actions.enter_permit import enter_permit
 from fleet.models import Provision
+from fleet.web.provisions import SAMPLES
 from tests.cast import actor, browser, cast
 from tests.fleet.papers import permitted, restrict
 from tests.makers import ready_aircraft
@@ -153,3 +154,23 @@ def test_another_operators_aircraft_has_no_such_page(people, aircraft) -> None:
     page = browser(other.manager).get(f"/aircraft/{aircraft.registration}/restrictions")
 
     assert page.status_code == 404
+
+
+@pytest.mark.parametrize(
+    ("page", "sample"), [("rules", "rules.json"), ("standard-weights", "standard-weights-eu.json")]
+)
+def test_whoever_may_enter_one_is_shown_a_sample_that_would_be_taken(people, page: str, sample: str) -> None:
+    document = (SAMPLES / sample).read_text("utf-8")
+
+    assert " ".join(document.split()) in words(people.manager, f"/{page}")
+    assert browser(people.manager).post(f"/{page}", {"document": document}).status_code == 302
+    assert "A sample to start from" not in words(people.pilot, f"/{page}")
+
+
+@pytest.mark.parametrize("page", ["restrictions", "permits"])
+def test_the_samples_for_an_aircraft_would_be_taken(people, aircraft, page: str) -> None:
+    document = (SAMPLES / f"{page[:-1]}.json").read_text("utf-8")
+    address = f"/aircraft/{aircraft.registration}/{page}"
+
+    assert " ".join(document.split()) in words(people.maintenance, address)
+    assert browser(people.maintenance).post(address, {"document": document}).status_code == 302
