@@ -113,7 +113,7 @@ def main(count: int) -> int:
 
         put_in(count)
         took: dict[str, list[float]] = {"bare": [], "verify": []}
-        for _ in range(2):
+        for _ in range(3):
             begun = time.perf_counter()
             read = bare(CHAIN)
             took["bare"].append(time.perf_counter() - begun)
