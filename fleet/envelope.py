@@ -11,13 +11,13 @@ Aft and right are positive, so the low edge along the arm is the forward (or lef
 
 from bisect import bisect_right
 from collections.abc import Iterator, Sequence
-from dataclasses import dataclass
 from fractions import Fraction
 from itertools import pairwise
 from math import lcm
-from typing import Literal
+from typing import Literal, NamedTuple
 
 from fleet.polygon import NotAnEnvelope, Point, Slabs, Trapezoid, demand_polygon, slabs_of
+from fleet.rational import rational
 
 __all__ = [
     "NotAnEnvelope",
@@ -34,8 +34,7 @@ __all__ = [
 Stretch = tuple[Fraction, Fraction]
 
 
-@dataclass(frozen=True, slots=True)
-class Section:
+class Section(NamedTuple):
     """A straight stretch of the envelope: the one a point lies in, or else the nearest to it.
 
     `margin` is the distance from the point to `edge`, the nearer end of the stretch; negative when the
@@ -123,8 +122,8 @@ class Shape:
         per, even, square = y * one, one * one, y * y
         return [
             (
-                Fraction(-a * even - b * per - c * square, p * per),
-                Fraction(-a2 * even - b2 * per - c2 * square, p2 * per),
+                rational(-a * even - b * per - c * square, p * per),
+                rational(-a2 * even - b2 * per - c2 * square, p2 * per),
             )
             for p, a, b, c, p2, a2, b2, c2 in self._spans[index]
         ]
@@ -135,23 +134,25 @@ class Shape:
         Empty when there are none.
         """
         over, of = arm.denominator, arm.numerator
+        whole, scale = self._whole, self._whole_scale
         # Which side of the line of this arm each vertex is on, and how far, all in one whole-number measure.
         if self._moment_plane:
-            sides = [x * over - of * y for x, y in self._whole]
+            sides = [x * over - of * y for x, y in whole]
         else:
-            line = of * self._whole_scale
-            sides = [x * over - line for x, _ in self._whole]
-        marks: set[Fraction] = set()
-        for (_, y1), f1, (_, y2), f2 in zip(
-            self._points, sides, self._points[1:] + self._points[:1], sides[1:] + sides[:1], strict=True
-        ):
-            if f1 == 0:
-                marks.add(y1)
+            line = of * scale
+            sides = [x * over - line for x, _ in whole]
+        marks = []
+        (_, y1), f1 = whole[-1], sides[-1]
+        for (_, y2), f2 in zip(whole, sides, strict=True):
+            if f2 == 0:
+                marks.append(rational(y2, scale))
             elif f1 < 0 < f2 or f2 < 0 < f1:
-                marks.add(y1 + (y2 - y1) * Fraction(f1, f1 - f2))
-        rising = sorted(marks)
+                marks.append(rational(y1 * (f1 - f2) + (y2 - y1) * f1, scale * (f1 - f2)))
+            y1, f1 = y2, f2
         if 0 not in sides:  # every mark is a crossing, so inside and outside take turns
+            rising = sorted(marks)
             return tuple(zip(rising[::2], rising[1::2], strict=True))
+        rising = sorted(set(marks))
         found = [(mark, mark) for mark in rising]
         for low, high in pairwise(rising):
             middle = (low + high) / 2
@@ -164,14 +165,14 @@ class Shape:
 
         None where the envelope has none.
         """
-        return _nearest(self.arms_at(weight), moment / weight) if weight > 0 else None
+        return _nearest(self.arms_at(weight), _arm(weight, moment)) if weight.numerator > 0 else None
 
     def weight_section(self, weight: Fraction, moment: Fraction) -> Section | None:
         """Return the stretch of weight at the same arm and the margin in weight.
 
         None where the envelope has none.
         """
-        return _nearest(self.weights_at(moment / weight), weight) if weight > 0 else None
+        return _nearest(self.weights_at(_arm(weight, moment)), weight) if weight.numerator > 0 else None
 
     @property
     def lowest(self) -> Fraction:
@@ -200,9 +201,20 @@ def merged(stretches: list[Stretch]) -> Iterator[Stretch]:
 def _nearest(stretches: tuple[Stretch, ...], at: Fraction) -> Section | None:
     """Return the section with the greatest margin: the stretch that holds the point, or the nearest one."""
     best: Section | None = None
+    here, over = at.as_integer_ratio()
     for low, high in stretches:
-        below, above = at - low, high - at
-        margin, edge = (below, "low") if below <= above else (above, "high")
+        least, of = low.as_integer_ratio()
+        most, per = high.as_integer_ratio()
+        below, above = here * of - least * over, most * over - here * per  # by over * of, over * per
+        aft = above * of < below * per
+        margin = rational(above, over * per) if aft else rational(below, over * of)
         if best is None or margin > best.margin:
-            best = Section(low, high, margin, "low" if edge == "low" else "high")
+            best = Section(low, high, margin, "high" if aft else "low")
     return best
+
+
+def _arm(weight: Fraction, moment: Fraction) -> Fraction:
+    """Return moment / weight; the same as `/`, without asking what else they could be."""
+    above, below = moment.as_integer_ratio()
+    over, under = weight.as_integer_ratio()
+    return rational(above * under, below * over)

@@ -62,7 +62,9 @@ class TankPiece(NamedTuple):
 class TankCurve:
     """A tank table prepared for exact interpolation. Unchanging once made."""
 
-    __slots__ = ("_straight_in_moment", "_values", "_volumes", "pieces")
+    __slots__ = ("_straight_in_moment", "_values", "_volumes", "one_arm", "pieces")
+
+    one_arm: Fraction | None  # where the tank has the same arm at every quantity down to nothing
 
     def __init__(
         self,
@@ -89,6 +91,9 @@ class TankCurve:
             for row, (volume, (_, value)) in enumerate(zip(self._volumes, points, strict=True))
         )
         self.pieces = tuple(self._pieces())
+        lowest = self.pieces[0]
+        straight = not (self.pieces[1:] or lowest.bend or lowest.first)
+        self.one_arm = lowest.slope if straight else None
 
     @property
     def first(self) -> Fraction:

@@ -28,6 +28,7 @@ from loads.balance.checks_seats import seat_checks
 from loads.balance.checks_standard import standard_checks
 from loads.balance.checks_weight import landing_fuel_check, weight_checks
 from loads.balance.checks_whole import whole_aircraft_checks
+from loads.balance.exact import minus, plus, quotient
 from loads.balance.flight_weights import FlightWeights, flight_weights
 from loads.balance.flown import (
     Flown,
@@ -47,7 +48,8 @@ from loads.balance.rails import RailEnd, at_rail_end, parts_lie_apart, rail_ends
 from loads.balance.report import Assessed, report, report_without_basis
 from loads.balance.result import Check, Result, State, verdict_of
 from loads.balance.sections import dry_at_phases, events_before
-from loads.balance.sumsheet import Aboard, Sums, all_lines, lines_without_fuel
+from loads.balance.sums import Sums, sums_without_fuel
+from loads.balance.sumsheet import all_lines, lines_without_fuel
 from loads.balance.sumsheet_events import flight_lines
 
 
@@ -74,7 +76,7 @@ def assess(
     aboard = lines_without_fuel(declared, known)
     flown, off_table = _flown(declared, known, ready)
     fuel = None if flown is None else flown.fuel
-    states, nothing_left = _states_of(declared, aboard, flown, ready)
+    states, nothing_left = _states_of(declared, aboard.without_fuel, flown, ready)
     burn = burn_of(path_of(declared, flown, states, ready), ready) if flown and states else None
     weights = _weights(declared, states, flown, ready)
     checks = (
@@ -114,12 +116,12 @@ def _weights(
 
 
 def _states_of(
-    declared: Declared, aboard: Aboard, flown: Flown | None, ready: Prepared
+    declared: Declared, dry: Sums | None, flown: Flown | None, ready: Prepared
 ) -> tuple[dict[Phase, State], tuple[Check, ...]]:
     if flown is None:
         return {}, ()
     dry_at = dry_at_phases(declared, flown.dry) if flown.dry is not None else None
-    states, nothing_left = _states(aboard, flown.fuel, ready, dry_at)
+    states, nothing_left = _states(dry, flown.fuel, ready, dry_at)
     if declared.sequence and ready.deciding:
         parts = {phase: parts_set(declared, events_before(declared, phase)) for phase in states}
         states = {phase: state._replace(parts=parts[phase]) for phase, state in states.items()}
@@ -127,7 +129,7 @@ def _states_of(
 
 
 def _states(
-    aboard: Aboard,
+    dry: Sums | None,
     fuel: Mapping[Phase, FuelState] | None,
     ready: Prepared,
     dry_at: Mapping[Phase, Sums] | None = None,
@@ -136,7 +138,6 @@ def _states(
 
     `dry_at` is the aircraft without fuel at each phase where a sequence changes it.
     """
-    dry = aboard.without_fuel
     if dry is None or fuel is None:
         return {}, ()
     found: dict[Phase, State] = {}
@@ -145,13 +146,13 @@ def _states(
         held = fuel[phase]
         if dry_at is not None:
             dry = dry_at[phase]
-        weight, moment = dry.weight + held.weight, dry.moment + held.moment
+        weight, moment = plus(dry.weight, held.weight), plus(dry.moment, held.moment)
         if weight.numerator <= 0:
             return {}, (nothing_left_check(weight, ready),)
-        across = dry.lateral_moment + held.lateral_moment
-        lateral_arm = across / weight if across else across
-        usable = held.usable_weight - staying if staying else held.usable_weight
-        found[phase] = State(phase, weight, moment, across, moment / weight, lateral_arm, usable)
+        across = plus(dry.lateral_moment, held.lateral_moment)
+        lateral_arm = quotient(across, weight) if across else across
+        usable = minus(held.usable_weight, staying) if staying else held.usable_weight
+        found[phase] = State(phase, weight, moment, across, quotient(moment, weight), lateral_arm, usable)
     return found, ()
 
 
@@ -202,7 +203,7 @@ def _at_rail_end(
         return at_rail_end(flight[0], flight[1], end, ready)
     moved = at_ends_of_rails(declared, "forward" if end.words == "forward" else "aft")
     flown = fly(moved, empty, ready)
-    states, _ = _states_of(moved, lines_without_fuel(moved, empty), flown, ready)
+    states, _ = _states_of(moved, sums_without_fuel(moved, empty), flown, ready)
     return states, burn_of(path_of(moved, flown, states, ready), ready)
 
 

@@ -6,6 +6,7 @@ from fractions import Fraction
 from fleet.basis import Axis, Phase
 from loads.balance.checks_balance import SIDES
 from loads.balance.checks_lateral import AT, PATH_CODE, lateral_by_cg_path
+from loads.balance.exact import minus, plus, quotient
 from loads.balance.operator_margins import told
 from loads.balance.path import Gap, Knot, Leg, Path, Stretch
 from loads.balance.path_across import WorstAcross
@@ -197,7 +198,7 @@ def _at(worst: Worst | WorstAcross, path: Path, states: Mapping[Phase, State], r
         **_figures(knot, arms, ready),
         **presented(knot.weight, knot.moment, ready),
         "percent_chord": None if percent is None else printed(percent, CHORD_PLACES),
-        "fuel": printed(knot.weight - dry, WEIGHT_PLACES),
+        "fuel": printed(minus(knot.weight, dry), WEIGHT_PLACES),
         "feeding": list(stretch.feeding),
         "tanks": {
             tank: printed(held, VOLUME_PLACES) for tank, held in held_at(stretch, knot, path.density).items()
@@ -219,12 +220,13 @@ def held_at(stretch: Stretch, knot: Knot, density: Fraction) -> Mapping[str, Fra
     contents, before = stretch.held
     if not stretch.feeding:
         return contents
-    each = before + (stretch.start.weight - knot.weight) / density / len(stretch.feeding)
-    return {tank: held - each if tank in stretch.feeding else held for tank, held in contents.items()}
+    burned = quotient(minus(stretch.start.weight, knot.weight), density)
+    each = plus(before, Fraction(burned.numerator, burned.denominator * len(stretch.feeding)))
+    return {tank: minus(held, each) if tank in stretch.feeding else held for tank, held in contents.items()}
 
 
 def _arms(knot: Knot) -> tuple[Fraction, Fraction]:
-    return knot.moment / knot.weight, knot.lateral_moment / knot.weight
+    return quotient(knot.moment, knot.weight), quotient(knot.lateral_moment, knot.weight)
 
 
 def _figures(knot: Knot, arms: tuple[Fraction, Fraction], ready: Prepared) -> dict[str, str]:

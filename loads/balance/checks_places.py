@@ -2,7 +2,7 @@
 test.
 """
 
-from collections.abc import Iterable, Sequence
+from collections.abc import Sequence
 from fractions import Fraction
 
 from fleet.basis import Place, Seat, Zone
@@ -27,13 +27,15 @@ def held_by(declared: Declared) -> Held:
     unknown: set[str] = set()
     for person in (*declared.crew, *declared.passengers):
         infant = person.lap_infant
-        weights = [person.weight, *([infant.weight] if infant and infant.weight is not None else [])]
+        seat = person.seat.id
+        _put(seat, person.weight, known, unknown)
+        if infant is not None and infant.weight is not None:
+            known[seat].append(infant.weight)
         if person.restraint is not None:
-            weights.append(person.restraint)
-        _put(person.seat.id, weights, known, unknown)
+            known[seat].append(person.restraint)
     for item in declared.items:
         if not item.removed:
-            _put(item.place.id, [item.weight], known, unknown)
+            _put(item.place.id, item.weight, known, unknown)
     return {where: None if where in unknown else added(weights) for where, weights in known.items()}
 
 
@@ -73,15 +75,12 @@ def _drain(unit: str) -> Fix:
     return lambda over: f"Take out at least {printed(over, VOLUME_PLACES, 'up')} {unit}."
 
 
-def _put(
-    where: str, weights: Iterable[Fraction | None], known: dict[str, list[Fraction]], unknown: set[str]
-) -> None:
+def _put(where: str, weight: Fraction | None, known: dict[str, list[Fraction]], unknown: set[str]) -> None:
     here = known.setdefault(where, [])
-    for weight in weights:
-        if weight is None:
-            unknown.add(where)
-        else:
-            here.append(weight)
+    if weight is None:
+        unknown.add(where)
+    else:
+        here.append(weight)
 
 
 def _spot(

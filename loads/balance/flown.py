@@ -17,7 +17,7 @@ from loads.balance.path_events import sequence_path, with_settings, zero_fuel_tu
 from loads.balance.prepared import Prepared
 from loads.balance.result import Check, State
 from loads.balance.sections import Dry, Sections, after_transfer, dry_over_flight, sections_of
-from loads.balance.sumsheet import Sums
+from loads.balance.sums import Sums
 
 ORDER = {"fail": 0, "unresolved": 1, "pass": 2, "advisory": 3}
 

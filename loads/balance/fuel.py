@@ -6,15 +6,15 @@ the volume unit of the basis, weights in its weight unit.
 """
 
 from collections.abc import Mapping
-from dataclasses import dataclass
 from fractions import Fraction
 from math import lcm
 from typing import NamedTuple
 
 from fleet.basis import BurnStage, Phase
+from fleet.rational import rational
 from fleet.tanks import OutsideTable
 from loads.balance.aboard import FuelPlan
-from loads.balance.exact import added, product, times, total
+from loads.balance.exact import Ratio, added, minus, plus, product, quotient, times, total
 from loads.balance.prepared import Prepared
 
 Contents = Mapping[str, Fraction]  # usable volume by tank id
@@ -28,19 +28,20 @@ class Draw(NamedTuple):
     each: Fraction
 
 
+Known = dict[str, tuple[Fraction, Ratio, Ratio]]  # by tank: the volume last looked at, and its moments
+NONE: Ratio = (0, 1)
+UNKNOWN: tuple[None, Ratio, Ratio] = (None, NONE, NONE)
 Filled = tuple[tuple[Phase, Contents, tuple[Draw, ...]], ...]  # each phase with what leads there
 
 
-@dataclass(frozen=True, slots=True)
-class FuelState:
-    """Fuel in the tanks at one phase. `usable` and `moments` are by tank; weight and moments count trapped
-    fuel, too. `draws` lead here from the phase before it in flight; () at the ramp and at zero fuel, and
+class FuelState(NamedTuple):
+    """Fuel in the tanks at one phase. `usable` is by tank; weight and moments count trapped fuel, too.
+    `draws` lead here from the phase before it in flight; () at the ramp and at zero fuel, and
     where something happens in between: `loads.balance.sections` has them then.
     """
 
     phase: Phase
     usable: Contents
-    moments: Mapping[str, Fraction]
     usable_weight: Fraction
     weight: Fraction
     moment: Fraction
@@ -91,18 +92,18 @@ def drawn(
         while feeding and rest:
             least, count = min([whole[tank] for tank in feeding]), len(feeding)
             if rest < least * count:
-                draws.append(Draw(tuple(feeding), Fraction(rest, scale * count)))
+                draws.append(Draw(tuple(feeding), rational(rest, scale * count)))
                 for tank in feeding:
-                    left[tank] = Fraction(whole[tank] * count - rest, scale * count)
+                    left[tank] = rational(whole[tank] * count - rest, scale * count)
                 rest = 0
             else:
-                draws.append(Draw(tuple(feeding), Fraction(least, scale)))
+                draws.append(Draw(tuple(feeding), rational(least, scale)))
                 for tank in feeding:
                     whole[tank] -= least
-                    left[tank] = Fraction(whole[tank], scale)
+                    left[tank] = rational(whole[tank], scale)
                 rest -= least * count
                 feeding = [tank for tank in feeding if whole[tank]]
-    return left, Fraction(rest, scale), tuple(draws)
+    return left, rational(rest, scale), tuple(draws)
 
 
 def fuel_states(plan: FuelPlan, ready: Prepared) -> dict[Phase, FuelState]:
@@ -113,12 +114,11 @@ def fuel_states(plan: FuelPlan, ready: Prepared) -> dict[Phase, FuelState]:
     """
     basis, density = ready.basis, plan.density
     ramp: Contents = {fuel.tank.id: fuel.usable for fuel in plan.tanks}
-    take_off, _, taxiing = drawn(ramp, basis.taxi_order, plan.taxi / density)
-    landing, _, flying = drawn(take_off, basis.burn_order, plan.trip / density)
-    spare = added(landing.values()) - plan.minimum_at_landing / density
+    take_off, _, taxiing = drawn(ramp, basis.taxi_order, quotient(plan.taxi, density))
+    landing, _, flying = drawn(take_off, basis.burn_order, quotient(plan.trip, density))
+    spare = minus(added(landing.values()), quotient(plan.minimum_at_landing, density))
     least, _, holding = drawn(landing, basis.burn_order, spare)
-    fed = {tank for stage in basis.burn_order for tank in stage.tanks}
-    empty = {tank: NOTHING if tank in fed else held for tank, held in take_off.items()}
+    empty = {tank: NOTHING if tank in ready.fed else held for tank, held in take_off.items()}
     contents: Filled = (
         ("ramp", ramp, ()),
         ("take-off", take_off, taxiing),
@@ -131,44 +131,43 @@ def fuel_states(plan: FuelPlan, ready: Prepared) -> dict[Phase, FuelState]:
 
 def states_of(plan: FuelPlan, contents: Filled, ready: Prepared) -> dict[Phase, FuelState]:
     """Return the fuel at each phase from what the tanks hold there. Raises `FuelOffTable`."""
-    known: dict[tuple[str, int, int], Fraction] = {}
+    known: Known = {}
     return {phase: _state(phase, plan, held, ready, known, draws=draws) for phase, held, draws in contents}
 
 
 def _state(
-    phase: Phase,
-    plan: FuelPlan,
-    usable: Contents,
-    ready: Prepared,
-    known: dict[tuple[str, int, int], Fraction],
-    *,
-    draws: tuple[Draw, ...],
+    phase: Phase, plan: FuelPlan, usable: Contents, ready: Prepared, known: Known, *, draws: tuple[Draw, ...]
 ) -> FuelState:
     density = plan.density
-    moments: dict[str, Fraction] = {}
-    across = []
+    volumes, along, across = [], [], []
     trapped = NOTHING
     for fuel in plan.tanks:
-        tank, volume = fuel.tank, usable[fuel.tank.id]
+        tank = fuel.tank
+        volume = usable[tank.id]
         if fuel.trapped.numerator:
-            volume += fuel.trapped
-            trapped += fuel.trapped
-        key = (tank.id, *volume.as_integer_ratio())
-        moment = known.get(key)
-        if moment is None:
-            moment = known[key] = _moment(tank.id, volume, phase, density, ready)
-        moments[tank.id] = moment
-        if tank.lateral_arm.numerator:
-            across.append(product(volume, tank.lateral_arm))
-    usable_weight = times(added(usable.values()), density)
+            trapped = plus(trapped, fuel.trapped)
+        elif not volume.numerator:
+            continue
+        volumes.append(volume.as_integer_ratio())
+        held, moment, lateral = known.get(tank.id, UNKNOWN)
+        # What nothing was drawn from has the very figure it had before, and so its moments.
+        if held is not volume:
+            full = plus(volume, fuel.trapped) if fuel.trapped.numerator else volume
+            moment = _moment(tank.id, full, phase, density, ready).as_integer_ratio()
+            lateral = product(full, tank.lateral_arm) if tank.lateral_arm.numerator else NONE
+            known[tank.id] = volume, moment, lateral
+        along.append(moment)
+        if lateral is not NONE:
+            across.append(lateral)
+    each = density.as_integer_ratio()
+    usable_weight = total(volumes, each)
     return FuelState(
         phase,
         usable,
-        moments,
         usable_weight,
-        usable_weight + trapped * density if trapped.numerator else usable_weight,
-        added(moments.values()),
-        times(total(across), density) if across else NOTHING,
+        plus(usable_weight, times(trapped, density)) if trapped.numerator else usable_weight,
+        total(along),
+        total(across, each) if across else NOTHING,
         draws,
     )
 

@@ -5,8 +5,9 @@ from fractions import Fraction
 from typing import NamedTuple
 
 from fleet.sourced import Limit
+from loads.balance.exact import minus
 from loads.balance.result import Check
-from loads.balance.rounding import against_maximum, against_minimum, printed, room
+from loads.balance.rounding import against_maximum, against_minimum, printed, unsigned
 
 Fix = Callable[[Fraction], str]  # from the exact excess to the sentence that says what to do
 
@@ -40,10 +41,10 @@ def below(figure: Figure, limit: Fraction, source: str, fix: Fix) -> Check:
     """Return the check of an upper limit that has a value; on the limit is within."""
     code, title, actual, unit, places, phase = figure
     shown, bound, digits = against_maximum(actual, limit, places)
-    left = limit - actual
+    left = minus(limit, actual)
     margin = printed(left, digits, "down")
     if left.numerator < 0:
-        text = f"{room(left, digits)} {unit} above the limit"
+        text = f"{unsigned(margin)} {unit} above the limit"
         advice = fix(-left)
         return Check(code, title, "fail", phase, shown, bound, None, unit, margin, text, source, advice, left)
     text = _room_in_words(left, margin, unit, "below the limit")
@@ -54,10 +55,10 @@ def above(figure: Figure, limit: Fraction, source: str, fix: Fix) -> Check:
     """Return the check of a lower limit that has a value; on the limit is within."""
     code, title, actual, unit, places, phase = figure
     shown, bound, digits = against_minimum(actual, limit, places)
-    left = actual - limit
+    left = minus(actual, limit)
     margin = printed(left, digits, "down")
     if left.numerator < 0:
-        text = f"{room(left, digits)} {unit} below the minimum"
+        text = f"{unsigned(margin)} {unit} below the minimum"
         advice = fix(-left)
         return Check(code, title, "fail", phase, shown, None, bound, unit, margin, text, source, advice, left)
     text = _room_in_words(left, margin, unit, "above the minimum")

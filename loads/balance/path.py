@@ -23,7 +23,7 @@ from typing import Literal, NamedTuple
 from fleet.basis import Phase
 from fleet.tanks import TankPiece
 from loads.balance.aboard import FuelPlan, TankFuel
-from loads.balance.exact import added, times
+from loads.balance.exact import added, minus, times
 from loads.balance.fuel import Contents, Draw, FuelState
 from loads.balance.result import State
 
@@ -130,11 +130,13 @@ class Path:
 
 def burn_path(plan: FuelPlan, fuel: Mapping[Phase, FuelState], states: Mapping[Phase, State]) -> Path:
     """Return the path of a load whose phases are known; a leg that burns nothing has no stretch."""
-    tanks = FlownTanks(plan, fuel["ramp"], knot_of(states["ramp"]))
+    start = knot_of(states["ramp"])
+    tanks = FlownTanks(plan, fuel["ramp"], start)
     found = Found([], [])
     for leg, before, after in LEGS:
-        start, end = knot_of(states[before]), knot_of(states[after])
+        end = knot_of(states[after])
         tanks.fly(leg, fuel[before].usable, fuel[after].draws, (start, end), found)
+        start = end
     return Path(tuple(found.stretches), tuple(found.gaps), plan.density)
 
 
@@ -163,7 +165,7 @@ class FlownTanks:
         for number, draw in enumerate(draws, 1):
             last = number == len(draws)
             left = contents if last else _less(contents, draw)
-            if here is not None and self.of_one_arm(draw.feeding) and not (last and landed is None):
+            if here is not None and self.of_one_arm(draw) and not (last and landed is None):
                 there = landed if last else self.burned(here, draw)
                 if there is not None:
                     held = (contents, NOTHING)
@@ -179,13 +181,9 @@ class FlownTanks:
                 here = there
             contents = left
 
-    def of_one_arm(self, feeding: Sequence[str]) -> bool:
-        """Return whether each of these tanks has one arm at every quantity down to nothing."""
-        for tank in feeding:
-            pieces = self.held[tank].tank.table.curve.pieces
-            if pieces[1:] or pieces[0].bend or pieces[0].first:
-                return False
-        return True
+    def of_one_arm(self, draw: Draw) -> bool:
+        """Return whether each tank that feeds has one arm at every quantity down to nothing."""
+        return all(self.held[tank].tank.table.curve.one_arm is not None for tank in draw.feeding)
 
     def burned(self, before: Knot, draw: Draw) -> Knot:
         """Return the aircraft after a draw from tanks of one arm."""
@@ -194,9 +192,9 @@ class FlownTanks:
         arm = added(tank.table.curve.pieces[0].slope for tank in tanks)
         across = added(tank.lateral_arm for tank in tanks)
         return Knot(
-            before.weight - weight * len(tanks),
-            before.moment - times(weight, arm),
-            before.lateral_moment - times(weight, across) if across else before.lateral_moment,
+            minus(before.weight, weight * len(tanks)),
+            minus(before.moment, times(weight, arm)),
+            minus(before.lateral_moment, times(weight, across)) if across else before.lateral_moment,
         )
 
     def knot(self, contents: Contents) -> Knot | None:
@@ -260,5 +258,5 @@ def _less(contents: Contents, draw: Draw) -> Contents:
     """Return the contents after a draw."""
     left = dict(contents)
     for tank in draw.feeding:
-        left[tank] -= draw.each
+        left[tank] = minus(left[tank], draw.each)
     return left

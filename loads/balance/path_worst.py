@@ -19,6 +19,9 @@ from fractions import Fraction
 from typing import NamedTuple
 
 from fleet.basis import Axis, Phase
+from fleet.envelope import Trapezoid
+from fleet.rational import rational
+from loads.balance.exact import quotient
 from loads.balance.path import NOTHING, Knot, Leg, Path, Stretch, Turn
 from loads.balance.path_curve import curves_of
 from loads.balance.path_margin import Beyond, least_margin
@@ -213,9 +216,17 @@ def _settled(bound: Bound, point: Nearest | Beyond, axis: Axis) -> Worst:
             if not outside or not point.weight.factor or not shape.holds(weight, moment):
                 break
         bits *= 2
-    low, high = (
-        -(Fraction(a) / weight + b + c * weight) / p for p, a, b, c in (point.sides[:4], point.sides[4:])
-    )
+    low, high = _sides_at(weight, point.sides)
     if low > high:  # the very tip of an envelope, which an operator's margins have cut off
-        return Worst(bound, stretch, knot, moment / weight, None, None, None, False)
-    return Worst(bound, stretch, knot, moment / weight, low, high, point.margin.floor(BITS), point.aft)
+        return Worst(bound, stretch, knot, quotient(moment, weight), None, None, None, False)
+    room = point.margin.floor(BITS)
+    return Worst(bound, stretch, knot, quotient(moment, weight), low, high, room, point.aft)
+
+
+def _sides_at(weight: Fraction, sides: Trapezoid) -> tuple[Fraction, Fraction]:
+    """Return the arms of the sides of a piece at a weight, -(A / W + B + C * W) / P each."""
+    p, a, b, c, p2, a2, b2, c2 = sides
+    above, below = weight.as_integer_ratio()
+    even, per, square = below * below, above * below, above * above
+    left = rational(-(a * even + b * per + c * square), p * per)
+    return left, rational(-(a2 * even + b2 * per + c2 * square), p2 * per)

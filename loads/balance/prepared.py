@@ -10,8 +10,9 @@ from fleet.basis import PHASES, Axis, Basis, Envelope, Phase, TankTable
 from fleet.conversion import density_unit
 from fleet.envelope import Shape
 from fleet.lateral import LateralByCg
+from fleet.rational import rational
 from fleet.tanks import TankCurve
-from loads.balance.exact import Ratio, times
+from loads.balance.exact import Ratio, minus, times
 from loads.balance.operational import Bound, Operational
 from loads.balance.rounding import LENGTH_PLACES, MOMENT_PLACES
 
@@ -34,6 +35,7 @@ class Prepared:
         "deciding",
         "density",
         "external",
+        "fed",
         "length",
         "length_places",
         "moment",
@@ -62,6 +64,7 @@ class Prepared:
             for tank in basis.tanks
         }
         self._chord_factor = None if basis.chord is None else 100 / basis.chord.length
+        self.fed = frozenset(tank for stage in basis.burn_order for tank in stage.tanks)
         self.external = any(place.external for place in basis.places)
         self._steady = {tank.id: _steady(tank.table) for tank in basis.tanks}
         shapes = [(envelope, Shape(envelope.plane, envelope.points)) for envelope in basis.envelopes]
@@ -108,13 +111,13 @@ class Prepared:
             held, per = volume.as_integer_ratio()
             if held and first * per <= held * under and held * over <= last * per:
                 weight, each = density.as_integer_ratio()
-                return Fraction(held * arm * weight, per * of * each)
+                return rational(held * arm * weight, per * of * each)
         return self._curves[tank].moment(volume, density)
 
     def chord_percent(self, arm: Fraction) -> Fraction | None:
         """Return an arm in percent of the mean aerodynamic chord, or None without a chord."""
         chord, factor = self.basis.chord, self._chord_factor
-        return None if chord is None or factor is None else times(arm - chord.leading_edge, factor)
+        return None if chord is None or factor is None else times(minus(arm, chord.leading_edge), factor)
 
 
 def _steady(table: TankTable) -> tuple[Ratio, Ratio, Ratio] | None:

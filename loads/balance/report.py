@@ -24,7 +24,8 @@ from loads.balance.prepared import Prepared
 from loads.balance.presented import presentation_document, presented
 from loads.balance.result import Check, Json, Line, State
 from loads.balance.rounding import CHORD_PLACES, VOLUME_PLACES, WEIGHT_PLACES, printed
-from loads.balance.sumsheet import Aboard, Sums, as_rows
+from loads.balance.sums import Sums
+from loads.balance.sumsheet import Aboard, as_rows
 from loads.balance.sumsheet_events import sequence_document
 from loads.balance.told_besides import told_besides
 from loads.balance.trim_setting import trim_document

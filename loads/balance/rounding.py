@@ -65,12 +65,14 @@ def between(actual: Fraction, low: Fraction, high: Fraction, places: int) -> tup
     Returns actual, low and high, and the number of decimals they needed. The stretch never prints wider than
     it is.
     """
-    inside = low <= actual <= high
     above, below = actual.as_integer_ratio()
+    first, of = low.as_integer_ratio()
+    last, per = high.as_integer_ratio()
+    inside = first * below <= above * of and above * per <= last * below
     for digits in range(places, MOST_PLACES + 1):
         shown = _units(above, below, digits, "nearest")
-        least = _units(*low.as_integer_ratio(), digits, "up")
-        most = _units(*high.as_integer_ratio(), digits, "down")
+        least = _units(first, of, digits, "up")
+        most = _units(last, per, digits, "down")
         if least > most:
             continue
         if inside:
@@ -79,15 +81,18 @@ def between(actual: Fraction, low: Fraction, high: Fraction, places: int) -> tup
             continue
         return _text(shown, digits), _text(least, digits), _text(most, digits), digits
     outward: Direction = "nearest" if inside else "up" if actual > high else "down"
-    last = MOST_PLACES
-    return printed(actual, last, outward), printed(low, last), printed(high, last), last
+    ends = printed(low, MOST_PLACES), printed(high, MOST_PLACES)
+    return printed(actual, MOST_PLACES, outward), *ends, MOST_PLACES
 
 
 def room(margin: Fraction, places: int) -> str:
     """Print a margin of 0 or more rounded down, and one below 0 as an excess, rounded up, unsigned."""
-    if margin.numerator >= 0:
-        return printed(margin, places, "down")
-    return printed(-margin, places, "up")
+    return unsigned(printed(margin, places, "down"))
+
+
+def unsigned(margin: str) -> str:
+    """Return a margin that was printed rounded down as `room` tells it: an excess has no sign."""
+    return margin.removeprefix("-")
 
 
 def _units(above: int, below: int, places: int, direction: Direction) -> int:
@@ -103,15 +108,12 @@ def _units(above: int, below: int, places: int, direction: Direction) -> int:
 
 
 def _text(units: int, places: int) -> str:
-    if not places:
-        return str(units)
-    digits = str(units) if units >= 0 else str(-units)
-    if len(digits) <= places:
-        digits = digits.zfill(places + 1)
-    whole, part = digits[:-places], digits[-places:].rstrip("0")
     if units < 0:
-        whole = f"-{whole}"
-    return f"{whole}.{part}" if part else whole
+        return f"-{_text(-units, places)}"
+    ten = _TENS[places]
+    whole, part = divmod(units, ten)
+    # With a one before it a part keeps its leading zeros.
+    return f"{whole}.{str(ten + part)[1:].rstrip('0')}" if part else str(whole)
 
 
 def _negated(text: str) -> str:

@@ -22,7 +22,7 @@ from loads.balance.exact import added
 from loads.balance.fuel import NOTHING, Contents, Draw, Filled, FuelState, drawn, states_of
 from loads.balance.over_flight import over_flight
 from loads.balance.prepared import Prepared
-from loads.balance.sumsheet import Sums, lines_without_fuel
+from loads.balance.sums import Sums, sums_without_fuel
 
 Leg = Literal["taxi", "flight", "reserve"]
 
@@ -70,8 +70,7 @@ def sections_of(declared: Declared, ready: Prepared) -> Sections:
     landing = walk.contents
     spare = added(landing.values()) - plan.minimum_at_landing / density
     walk.leg("reserve", basis.burn_order, max(spare, NOTHING), "landing", "minimum at landing")
-    fed = {tank for stage in basis.burn_order for tank in stage.tanks}
-    empty = {tank: NOTHING if tank in fed else held for tank, held in take_off.items()}
+    empty = {tank: NOTHING if tank in ready.fed else held for tank, held in take_off.items()}
     filled: Filled = (
         ("ramp", ramp, ()),
         ("take-off", take_off, ()),
@@ -91,7 +90,7 @@ def dry_over_flight(declared: Declared, empty: EmptyFigures | None) -> tuple[Dry
     for number, aboard in enumerate(over_flight(declared)):
         if number:
             held |= {part.id: (part, state) for part, state in declared.sequence[number - 1].positions}
-        sums = lines_without_fuel(aboard, empty).without_fuel
+        sums = sums_without_fuel(aboard, empty)
         if sums is None:
             return None
         shift = added(state.moment_change for _, state in held.values())

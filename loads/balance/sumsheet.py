@@ -9,23 +9,16 @@ from typing import NamedTuple
 from fleet.basis import FixedItem, Phase
 from fleet.weighing import EmptyFigures
 from loads.balance.aboard import Declared, FuelPlan, Item, Person
-from loads.balance.exact import added, times
+from loads.balance.exact import added, minus, plus, quotient, times
 from loads.balance.footing import Rigging
 from loads.balance.fuel import FuelState
 from loads.balance.prepared import Prepared
 from loads.balance.presented import presented
 from loads.balance.result import Json, Line, State
 from loads.balance.rounding import VOLUME_PLACES, WEIGHT_PLACES, printed
+from loads.balance.sums import Sums, operating_sums, with_payload
 
 FROM_RECORD = "from the record"
-
-
-class Sums(NamedTuple):
-    """Weight and moments of a set of lines, exact."""
-
-    weight: Fraction
-    moment: Fraction
-    lateral_moment: Fraction
 
 
 class Aboard(NamedTuple):
@@ -49,10 +42,10 @@ def lines_without_fuel(declared: Declared, empty: EmptyFigures | None) -> Aboard
         payload += people_lines("passengers", person)
     for item in declared.items:
         payload += item_lines("items", item)
-    operating_weight = _sums(operating)
-    aboard = _sums(payload)
-    whole = None if operating_weight is None or aboard is None else _together(operating_weight, aboard)
-    return Aboard(tuple(operating), tuple(payload), operating_weight, whole)
+    operating_weight = operating_sums(declared, empty)
+    return Aboard(
+        tuple(operating), tuple(payload), operating_weight, with_payload(operating_weight, declared)
+    )
 
 
 def all_lines(
@@ -74,18 +67,22 @@ def all_lines(
     zero, ramp, take_off, landing = (fuel[phase] for phase in ("zero fuel", "ramp", "take-off", "landing"))
     for held in plan.tanks:
         tank = held.tank
-        stays = zero.usable[tank.id] + held.trapped
+        stays = plus(zero.usable[tank.id], held.trapped)
         if stays:
             what = f"{tank.name}, {_volume(stays, ready)} that cannot be used"
-            weight, moment = times(stays, plan.density), zero.moments[tank.id]
+            weight = times(stays, plan.density)
+            moment = ready.fuel_moment(tank.id, stays, plan.density)
             lines.append(_plain("fuel not usable", what, weight, moment, tank.lateral_arm))
     lines.append(total_line("zero fuel", states))
     for held in plan.tanks:
         tank = held.tank
-        burnable = ramp.usable[tank.id] - zero.usable[tank.id]
+        full, stays = (plus(at.usable[tank.id], held.trapped) for at in (ramp, zero))
+        burnable = minus(full, stays)
         if burnable:
             what = f"{tank.name}, {_volume(burnable, ready)}"
-            weight, moment = times(burnable, plan.density), ramp.moments[tank.id] - zero.moments[tank.id]
+            weight = times(burnable, plan.density)
+            before, after = (ready.fuel_moment(tank.id, each, plan.density) for each in (full, stays))
+            moment = minus(before, after)
             lines.append(_plain("fuel", what, weight, moment, tank.lateral_arm))
     if flight:
         return (*lines, total_line("ramp", states), *flight)
@@ -98,28 +95,33 @@ def all_lines(
 def as_rows(lines: tuple[Line, ...], ready: Prepared) -> list[Json]:
     """Return the lines as they stand in the result document, numbered from 1."""
     arms, moments = ready.length_places, ready.moment_places
-    return [
-        {
+    shown = ready.basis.presentation is not None
+    rows: list[Json] = []
+    for number, line in enumerate(lines, 1):
+        group, what, how, weight, arm, moment, across, total, pointer = line
+        row: Json = {
             "line": number,
-            "group": line.group,
-            "what": line.what,
-            "how": line.how,
-            "weight": None if line.weight is None else printed(line.weight, WEIGHT_PLACES),
-            "arm": None if line.arm is None else printed(line.arm, arms),
-            "moment": None if line.moment is None else printed(line.moment, moments),
-            "lateral_moment": None if line.lateral_moment is None else printed(line.lateral_moment, moments),
-            "total": line.total,
-            "pointer": line.pointer,
-            **presented(line.weight, line.moment, ready, total=line.total or line.group == "empty weight"),
+            "group": group,
+            "what": what,
+            "how": how,
+            "weight": None if weight is None else printed(weight, WEIGHT_PLACES),
+            "arm": None if arm is None else printed(arm, arms),
+            "moment": None if moment is None else printed(moment, moments),
+            "lateral_moment": None if across is None else printed(across, moments),
+            "total": total,
+            "pointer": pointer,
         }
-        for number, line in enumerate(lines, 1)
-    ]
+        if shown:
+            row |= presented(weight, moment, ready, total=total or group == "empty weight")
+        rows.append(row)
+    return rows
 
 
 def _empty(empty: EmptyFigures | None) -> Line:
     if empty is None:
         return Line("empty weight", "empty weight, none in force", None, None, None, None, None)
-    arm = empty.moment / empty.weight  # the recorded moment stands, whatever arm was printed beside it
+    # The recorded moment stands, whatever arm was printed beside it.
+    arm = quotient(empty.moment, empty.weight)
     what = f"empty weight ({empty.how})"
     return Line("empty weight", what, FROM_RECORD, empty.weight, arm, empty.moment, empty.lateral_moment)
 
@@ -187,14 +189,15 @@ def _placed(line: Line, lateral_arm: Fraction) -> Line:
 
 
 def _plain(group: str, what: str, weight: Fraction, moment: Fraction, lateral_arm: Fraction) -> Line:
-    return Line(group, what, "declared", weight, moment / weight, moment, times(weight, lateral_arm))
+    return Line(group, what, "declared", weight, quotient(moment, weight), moment, times(weight, lateral_arm))
 
 
 def _burned(group: str, what: str, before: FuelState, after: FuelState) -> Line:
-    weight = after.weight - before.weight
-    moment = after.moment - before.moment
-    arm = moment / weight if weight else None
-    return Line(group, what, "declared", weight, arm, moment, after.lateral_moment - before.lateral_moment)
+    weight = minus(after.weight, before.weight)
+    moment = minus(after.moment, before.moment)
+    arm = quotient(moment, weight) if weight else None
+    across = minus(after.lateral_moment, before.lateral_moment)
+    return Line(group, what, "declared", weight, arm, moment, across)
 
 
 def _operating_total(sums: Sums | None) -> Line:
@@ -211,24 +214,6 @@ def total_line(phase: Phase, states: Mapping[Phase, State]) -> Line:
     if state is None:
         return Line(phase, phase, None, None, None, None, None, True)
     return Line(phase, phase, None, state.weight, state.arm, state.moment, state.lateral_moment, True)
-
-
-def _sums(lines: list[Line]) -> Sums | None:
-    """Return the sums of lines, or None when a weight among them is not known."""
-    weights, moments, laterals = [], [], []
-    for line in lines:
-        if line.weight is None or line.moment is None or line.lateral_moment is None:
-            return None
-        weights.append(line.weight)
-        moments.append(line.moment)
-        laterals.append(line.lateral_moment)
-    return Sums(added(weights), added(moments), added(laterals))
-
-
-def _together(one: Sums, other: Sums) -> Sums:
-    return Sums(
-        one.weight + other.weight, one.moment + other.moment, one.lateral_moment + other.lateral_moment
-    )
 
 
 def _volume(volume: Fraction, ready: Prepared) -> str:

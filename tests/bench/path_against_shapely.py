@@ -25,6 +25,7 @@ from loads.balance.path_margin import least_margin
 from loads.balance.path_outside import Nearest
 from loads.balance.prepared import prepared
 from loads.balance.result import State
+from loads.balance.sums import sums_without_fuel
 from loads.balance.sumsheet import lines_without_fuel
 from tests.bench.full_answer_cpu import best_ms, full_load
 from tests.pure.loads.making import twin, twin_empty
@@ -50,8 +51,8 @@ DENSITY = float(DECLARED.fuel.density)
 
 def exact_phases() -> tuple[dict[Phase, FuelState], dict[Phase, State]]:
     """Return the fuel and the aircraft at every phase, exact."""
-    aboard, fuel = lines_without_fuel(DECLARED, EMPTY), fuel_states(DECLARED.fuel, READY)
-    return fuel, _states(aboard, fuel, READY)[0]
+    dry, fuel = sums_without_fuel(DECLARED, EMPTY), fuel_states(DECLARED.fuel, READY)
+    return fuel, _states(dry, fuel, READY)[0]
 
 
 def exact_path(fuel: dict[Phase, FuelState], states: dict[Phase, State]) -> Fraction:
