@@ -1,7 +1,10 @@
 """What stands beside a load on its page: doubles, last-minute changes, what was told, notes after flight."""
 
+from collections import Counter
+from collections.abc import Iterable, Sequence
 from datetime import UTC
 from typing import Any
+from uuid import UUID
 
 from fleet.queries.settings import settings_at
 from loads import acts
@@ -10,7 +13,7 @@ from loads.balance.late_change import said
 from loads.models import LoadFlag, Signature, StaleNotice
 from loads.queries.answer import notes_of
 from loads.queries.current import Current
-from loads.queries.doubles import doubles_of
+from loads.queries.doubles import Double, doubles_of
 from loads.queries.late_change import bound_of, changes_of, lines_of, moved_by
 from loads.queries.overtaken import database_time
 from loads.queries.rechecks import flags_of
@@ -22,7 +25,7 @@ def beside(current: Current, declared: dict[str, Any], actor: Actor) -> dict[str
     load, state = current.load, current.state
     may_change = acts.CHANGE_LATE.name in actor.may and load.pilot_id == actor.person
     return {
-        "doubles": doubles_of(current),
+        "doubles": doubles_shown(doubles_of(current)),
         "late_changes": _changes(current, declared),
         "told": [
             {"at": one.told_at.astimezone(UTC), "changed": one.changed, "mail": one.mail_addresses}
@@ -37,6 +40,24 @@ def beside(current: Current, declared: dict[str, Any], actor: Actor) -> dict[str
         "can_change_late": state == "accepted" and may_change and _bounded(load.operator_id),
         "can_note": state == "departed" and acts.WRITE_NOTE.name in actor.may,
     }
+
+
+def doubles_shown(doubles: Iterable[Double]) -> list[dict[str, Any]]:
+    """This function will return what looks doubled, a line for each other load: the first sight of it whole,
+    of the rest what comes before the words that name the load, with how often.
+    """
+    sights: dict[UUID, list[str]] = {}
+    for one in doubles:
+        sights.setdefault(one.load, []).append(one.detail)
+    return [
+        {"load": load, "detail": details[0], "besides": _counted(details[1:])}
+        for load, details in sights.items()
+    ]
+
+
+def _counted(details: Sequence[str]) -> list[str]:
+    counts = Counter(detail.split(":")[0] for detail in details)
+    return [f"{words} ({count} of them)" if count > 1 else words for words, count in counts.items()]
 
 
 def flag_shown(flag: LoadFlag) -> dict[str, Any]:

@@ -35,8 +35,8 @@ def remedies_shown(current: Current, words: Words, now: datetime, actor: Actor) 
         "remedies": [_remedy(one, number, words) for number, one in enumerate(found["remedies"], 1)],
         "remedies_said": words.said(found["said"]),
         "may_take_remedy": may_revise,
-        "more": [_line(one, words) for one in found["more"]],
-        "error": [_line(one, words) for one in found["error"]],
+        "more": [_line(one, words) for one in found["more"] if one["stopped_by"] or one["amount"] != "0"],
+        "error": [_line(one, words) for one in found["error"] if one["stopped_by"] or one["percent"] != "0"],
     }
 
 
