@@ -29,11 +29,12 @@ from loads.queries.signable import words_to_sign
 from loads.queries.stale import stale_parts
 from records.act import act
 from records.refusal import Invalid, NotAllowed, StepRefused
-from tests.cast import Cast, actor, cast
+from tests.cast import Cast, actor, browser, cast
 from tests.fleet.papers import permitted, restrict
 from tests.loads.making import DEPARTURE_AT, accepted, load_document, prepared
 from tests.makers import q, ready_aircraft
 from tests.pure.loads.papers import lb, permit_document
+from tests.reading_pages import Page
 
 pytestmark = pytest.mark.django_db
 LOWER = {"effect": "limit", "limit": "take_off", "weight": lb("7000")}
@@ -237,6 +238,10 @@ def test_the_paper_tells_what_holds_permits_in_red_and_draws_the_envelope_that_w
     assert (140, 8800) in facts.basis.envelopes[0].points
     assert "Permit SFP-88, by Civil Aviation Office, Nalden." in page
     assert '<p class="permit">' in page
+    assert "Every limit that was checked is kept. Under permit SFP-88." in page
+    shown = Page(browser(people.pilot).get(f"/loads/{flown.load.id}")).words
+    assert "Within limits under permit SFP-88" in shown
+    assert "within under permit SFP-88" in Page(browser(people.pilot).get("/?day=2026-12-01")).words
     assert "day VFR" in page
     assert "nose hold closed" in page
     assert "Restriction</th>" in page
