@@ -58,6 +58,13 @@ def typed_of(document: Mapping[str, Any]) -> dict[str, str]:
     return typed
 
 
+def needs_the_api(document: Mapping[str, Any]) -> bool:
+    """This function will say whether `document` states what the page has no input for: what happens in
+    flight, or which leg it follows.
+    """
+    return bool(document.get("sequence")) or "follows" in document["flight"]
+
+
 def can_carry(document: Mapping[str, Any], *, seats: Sequence[str], tanks: Sequence[str]) -> bool:
     """This function will say whether the page can carry every part of `document`, so that a revision loses
     nothing.

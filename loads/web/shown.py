@@ -30,6 +30,7 @@ from loads.queries.legs import legs_answer
 from loads.queries.provided import basis_under
 from loads.queries.signable import signatures_due
 from loads.queries.stale import stale_parts
+from loads.web.copied import needs_the_api
 from loads.web.wording import words_at
 from records.actor import Actor
 
@@ -65,7 +66,7 @@ def load_page(current: Current, zone: ZoneInfo, now: datetime, actor: Actor) -> 
     words = words_at(load.operator_id, now)
     stale = stale_parts(current, now) if ways_out(current.state) else ()
     return {
-        "load": _head(current, zone),
+        "load": _head(current, zone) | {"by_api": needs_the_api(page.inputs)},
         "units": page.result.get("units"),
         "weight_word": words.weight,
         "figures": _figures(page, words),

@@ -61,6 +61,9 @@ def test_a_load_with_events_or_a_leg_before_is_not_revised_where_they_would_be_l
         answer = browser(people.preparer).get(f"/loads/{current.load.id}/revise")
         assert answer.status_code == 409
         assert "Revise it through the API." in answer.content.decode()
+        itself = Page(browser(people.preparer).get(f"/loads/{current.load.id}"))
+        assert "revise it through the API" in itself.words
+        assert "Revise" not in itself.links
     page = Page(browser(people.pilot).get(f"/loads/{linked.load.id}"))
     assert "Follows KT-214 leg 1, XNAL to XKOR" in page.words
     assert "planned uplift 680 lb" in page.words
