@@ -28,7 +28,7 @@ def standard_checks(use: StandardUse | None) -> list[Check]:
                 "weights.standard",
                 "standard weights are from the table in force",
                 "unresolved" if use.unknown else "pass",
-                actual=str(use.standard),
+                actual=str(use.standard) if use.standard else None,
                 margin_text=use.unknown or _words(use),
                 source=use.source,
                 what_next="Weigh or declare them, or have a table approved that holds for this flight."

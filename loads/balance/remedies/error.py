@@ -51,6 +51,8 @@ def _people(question: Question) -> Iterator[Json]:
     share = MOST_PER_MILLE if heavier is None else min(MOST_PER_MILLE, floor(heavier / whole * PER_MILLE))
     one = reached(question, each, min(most, MOST_EACH))
     found = reached(question, shared, share)
+    if not (one.sought and found.sought):
+        return
     yield {
         "kind": "people",
         "id": "",
@@ -83,6 +85,8 @@ def _compartments(question: Question, held: Held) -> Iterator[Json]:
             room = place.maximum.value - weight
         bound = min(MOST_PER_MILLE, floor(bound_of(question, room) * TENTH / weight * PER_MILLE))
         found = reached(question, changed, bound)
+        if not found.sought:
+            return
         more = weight * found.count / PER_MILLE
         yield {
             "kind": "place",
@@ -104,6 +108,8 @@ def _density(question: Question) -> Iterator[Json]:
         return replace(declared, fuel=replace(plan, density=heavier))
 
     found = reached(question, changed, MOST_PER_MILLE)
+    if not found.sought:
+        return
     yield {
         "kind": "fuel-density",
         "id": "",

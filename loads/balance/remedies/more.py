@@ -35,9 +35,10 @@ def _in_places(question: Question, held: Held) -> Iterator[Json]:
             line = Item("cargo", "more", place, count * TENTH, "weighed", removed=False, pointer="")
             return replace(declared, items=(*declared.items, line))
 
-        yield _more(
-            question, "place", place.id, place.name, reached(question, changed, bound_of(question, room))
-        )
+        found = reached(question, changed, bound_of(question, room))
+        if not found.sought:
+            return
+        yield _more(question, "place", place.id, place.name, found)
 
 
 def _in_seats(question: Question, held: Held) -> Iterator[Json]:
@@ -59,6 +60,8 @@ def _in_seats(question: Question, held: Held) -> Iterator[Json]:
             )
 
         found = reached(question, changed, bound_of(question, seat.maximum.value))
+        if not found.sought:
+            return  # of a row whose other seat was not asked the least is not known
         row = f"row {seat.row}" if seat.row is not None else seat.name
         if row not in least or found.count < least[row].count:
             least[row] = found
@@ -77,6 +80,8 @@ def _in_tanks(question: Question) -> Iterator[Json]:
             return taken(declared, [Refuel(tank, count * TENTH)])
 
         found = reached(question, changed, floor(by_weight / TENTH))
+        if not found.sought:
+            return
         amount = printed(found.count * TENTH, VOLUME_PLACES)
         yield {
             "kind": "tank",

@@ -23,11 +23,13 @@ MOST_TENTHS = 1_000_000
 @dataclass(frozen=True, slots=True)
 class Reach:
     """So many last digits more still hold; `stop` is the check that breaks with the next one (None: none
-    does up to the greatest amount asked).
+    does up to the greatest amount asked). `sought` is False where the time was up before anything was asked:
+    such a figure is not told.
     """
 
     count: int
     stop: Check | None
+    sought: bool = True
 
     @property
     def stopped_by(self) -> str | None:
@@ -37,7 +39,9 @@ class Reach:
 
 def reached(question: Question, changed: Changed, most: int) -> Reach:
     """Return the greatest count up to `most` that is found to hold with every count looked at below it."""
-    if most < 0 or not question.left():
+    if not question.left():
+        return Reach(0, None, sought=False)
+    if most < 0:
         return Reach(0, None)
     low, high = 0, most + 1
     for count in sorted({most // 4, most // 2, 3 * most // 4, most}):

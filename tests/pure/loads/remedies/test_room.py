@@ -110,3 +110,10 @@ def test_a_count_is_the_last_that_holds_before_the_first_that_does_not() -> None
     assert found.stop is not None
     assert found.stop.code == "place.AFT-HOLD"
     assert reached(question, changed, 10).stop is None
+
+
+def test_a_figure_nobody_had_time_to_look_for_is_not_told() -> None:
+    late = replace(roomy(), until=0.0, clock=lambda: 1.0)
+
+    assert how_much_more(late) == []
+    assert room_for_error(late) == []
