@@ -2,7 +2,19 @@
 
 from django.urls import path
 
-from loads.web import day, declare, documents, inspect, late, load, rechecks, rejects, self_check, steps, trail
+from loads.web import (
+    day,
+    declare,
+    documents,
+    inspect,
+    late,
+    load,
+    rechecks,
+    rejects,
+    self_check,
+    steps,
+    trail,
+)
 
 urlpatterns = [
     path("", day.day, name="day"),
