@@ -3,6 +3,8 @@
 from fractions import Fraction
 from math import gcd
 
+_bare = object.__new__
+
 
 def rational(above: int, below: int) -> Fraction:
     """Return above / below as `Fraction(above, below)` does, in a third of the time.
@@ -17,7 +19,7 @@ def rational(above: int, below: int) -> Fraction:
         if not below:
             raise ZeroDivisionError("a rational has no 0 below")
         shared = -shared
-    made: Fraction = object.__new__(Fraction)
+    made = _bare(Fraction)
     # The types know only the properties of the parts, which cannot be set.
     made._numerator = above // shared  # type: ignore[attr-defined] # noqa: SLF001 # see above
     made._denominator = below // shared  # type: ignore[attr-defined] # noqa: SLF001 # see above

@@ -110,10 +110,17 @@ class TankCurve:
 
         Raises `OutsideTable`.
         """
+        return density * self.volume_moment(volume)
+
+    def volume_moment(self, volume: Fraction) -> Fraction:
+        """Return the moment of a volume of fuel for each unit of density.
+
+        Raises `OutsideTable`.
+        """
         if volume == 0:
             return volume
         value = self._at(volume)
-        return density * value if self._straight_in_moment else density * volume * value
+        return value if self._straight_in_moment else volume * value
 
     def arm(self, volume: Fraction) -> Fraction:
         """Return the arm of a volume of fuel, whatever its density.

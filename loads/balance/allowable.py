@@ -12,6 +12,7 @@ from typing import NamedTuple
 from fleet.basis import Limits, Phase
 from fleet.sourced import Limit
 from loads.balance.aboard import Declared
+from loads.balance.exact import minus, plus
 from loads.balance.flight_weights import FlightWeights
 from loads.balance.result import Json, State
 from loads.balance.rounding import WEIGHT_PLACES, printed
@@ -59,14 +60,14 @@ def allowable_take_off(
         trip = f"{trip}, less what comes aboard"
     entered: list[tuple[str, Limit | None, Fraction]] = [
         ("structural take-off", limits.take_off, Fraction(0)),
-        (f"landing limit + {trip}", limits.landing, take_off - at["landing"]),
-        ("zero-fuel limit + take-off fuel", limits.zero_fuel, take_off - at["zero fuel"]),
-        ("ramp limit - taxi fuel", limits.ramp, take_off - at["ramp"]),
+        (f"landing limit + {trip}", limits.landing, minus(take_off, at["landing"])),
+        ("zero-fuel limit + take-off fuel", limits.zero_fuel, minus(take_off, at["zero fuel"])),
+        ("ramp limit - taxi fuel", limits.ramp, minus(take_off, at["ramp"])),
     ]
     if weights is not None:
         entered = _over_flight(entered, limits, weights, take_off)
     found = [
-        Candidate(name, limit.value + added)
+        Candidate(name, plus(limit.value, added))
         for name, limit, added in entered
         if limit is not None and limit.value is not None
     ]

@@ -28,7 +28,7 @@ class Draw(NamedTuple):
     each: Fraction
 
 
-Known = dict[str, tuple[Fraction, Ratio, Ratio]]  # by tank: the volume last looked at, and its moments
+Known = dict[str, tuple[Fraction, Ratio, Ratio]]  # by tank: a volume, its moment along and across per density
 NONE: Ratio = (0, 1)
 UNKNOWN: tuple[None, Ratio, Ratio] = (None, NONE, NONE)
 Filled = tuple[tuple[Phase, Contents, tuple[Draw, ...]], ...]  # each phase with what leads there
@@ -78,10 +78,10 @@ def drawn(
     """
     if volume.numerator <= 0:
         return dict(contents), NOTHING, ()
-    ratios = {tank: held.as_integer_ratio() for tank, held in contents.items()}
     above, below = volume.as_integer_ratio()
-    scale = lcm(below, *[per for _, per in ratios.values()])
-    whole = {tank: held * (scale // per) for tank, (held, per) in ratios.items()}
+    ratios = [held.as_integer_ratio() for held in contents.values()]
+    scale = lcm(below, *[per for _, per in ratios])
+    whole = {tank: held * (scale // per) for tank, (held, per) in zip(contents, ratios, strict=True)}
     rest = above * (scale // below)
     left = dict(contents)
     draws = []
@@ -153,7 +153,7 @@ def _state(
         # What nothing was drawn from has the very figure it had before, and so its moments.
         if held is not volume:
             full = plus(volume, fuel.trapped) if fuel.trapped.numerator else volume
-            moment = _moment(tank.id, full, phase, density, ready).as_integer_ratio()
+            moment = _moment(tank.id, full, phase, ready)
             lateral = product(full, tank.lateral_arm) if tank.lateral_arm.numerator else NONE
             known[tank.id] = volume, moment, lateral
         along.append(moment)
@@ -166,14 +166,14 @@ def _state(
         usable,
         usable_weight,
         plus(usable_weight, times(trapped, density)) if trapped.numerator else usable_weight,
-        total(along),
+        total(along, each),
         total(across, each) if across else NOTHING,
         draws,
     )
 
 
-def _moment(tank: str, volume: Fraction, phase: Phase, density: Fraction, ready: Prepared) -> Fraction:
+def _moment(tank: str, volume: Fraction, phase: Phase, ready: Prepared) -> Ratio:
     try:
-        return ready.fuel_moment(tank, volume, density)
+        return ready.volume_moment(tank, volume)
     except OutsideTable as outside:
         raise FuelOffTable(tank, phase, volume, outside.first, outside.last) from None

@@ -16,6 +16,7 @@ from fractions import Fraction
 from typing import NamedTuple
 
 from fleet.envelope import Shape, Slabs, Trapezoid
+from fleet.rational import rational as ratio
 from loads.balance.path import Stretch
 from loads.balance.path_curve import Curve, Piece, pieces_of, side_of, slab_below
 from loads.balance.path_outside import Nearest, worst_outside
@@ -158,7 +159,5 @@ def _inside(piece: Piece, sides: Trapezoid, between: list[Nearest]) -> Reached |
 
 
 def _exact(ends: Reached) -> Nearest:
-    weight, margin = Fraction(ends.top, ends.over), Fraction(ends.above, ends.below)
-    return Nearest(
-        ends.stretch, rational(weight), rational(margin), ends.sides, ends.aft, Fraction(*ends.floor)
-    )
+    weight, margin = ratio(ends.top, ends.over), ratio(ends.above, ends.below)
+    return Nearest(ends.stretch, rational(weight), rational(margin), ends.sides, ends.aft, ratio(*ends.floor))

@@ -105,14 +105,19 @@ class Prepared:
 
     def fuel_moment(self, tank: str, volume: Fraction, density: Fraction) -> Fraction:
         """Return the moment of a volume of fuel in a tank. Raises `fleet.tanks.OutsideTable`."""
+        above, below = self.volume_moment(tank, volume)
+        weight, each = density.as_integer_ratio()
+        return rational(above * weight, below * each)
+
+    def volume_moment(self, tank: str, volume: Fraction) -> Ratio:
+        """Return that moment for each unit of density. Raises `fleet.tanks.OutsideTable`."""
         steady = self._steady[tank]
         if steady is not None:
             (arm, of), (first, under), (last, over) = steady
             held, per = volume.as_integer_ratio()
             if held and first * per <= held * under and held * over <= last * per:
-                weight, each = density.as_integer_ratio()
-                return rational(held * arm * weight, per * of * each)
-        return self._curves[tank].moment(volume, density)
+                return held * arm, per * of
+        return self._curves[tank].volume_moment(volume).as_integer_ratio()
 
     def chord_percent(self, arm: Fraction) -> Fraction | None:
         """Return an arm in percent of the mean aerodynamic chord, or None without a chord."""

@@ -14,6 +14,7 @@ from fleet.basis import Phase
 from loads.balance.aboard import Declared
 from loads.balance.allowable import Allowable, allowable_take_off
 from loads.balance.checks_path import path_document
+from loads.balance.exact import quotient, times
 from loads.balance.fitted import fitted_lines
 from loads.balance.flight_weights import FlightWeights
 from loads.balance.fuel import FuelState
@@ -144,7 +145,7 @@ def _fuel(declared: Declared, fuel: Mapping[Phase, FuelState], ready: Prepared) 
                 "at_take_off": _volume(take_off.usable[held.tank.id]),
                 "at_landing": _volume(landing.usable[held.tank.id]),
                 "unit": ready.volume,
-                "weight_at_engine_start": _weight(ramp.usable[held.tank.id] * plan.density),
+                "weight_at_engine_start": _weight(times(ramp.usable[held.tank.id], plan.density)),
                 "not_usable": _volume(held.trapped),
             }
             for held in plan.tanks
@@ -161,7 +162,7 @@ def _fuel(declared: Declared, fuel: Mapping[Phase, FuelState], ready: Prepared) 
 def _operating(sums: Sums | None, ready: Prepared) -> Json | None:
     if sums is None or sums.weight <= 0:
         return None
-    arm = sums.moment / sums.weight
+    arm = quotient(sums.moment, sums.weight)
     percent = ready.chord_percent(arm)
     return {
         "weight": _weight(sums.weight),

@@ -62,8 +62,10 @@ def _sums(parts: Iterable[Part]) -> Sums | None:
     for weight, arm, lateral_arm in parts:
         if weight is None:
             return None
-        weights.append(weight.as_integer_ratio())
-        along.append(product(weight, arm))
+        above, below = weight.as_integer_ratio()
+        over, under = arm.as_integer_ratio()
+        weights.append((above, below))
+        along.append((above * over, below * under))
         if lateral_arm.numerator:
             across.append(product(weight, lateral_arm))
     return Sums(total(weights), total(along), total(across))

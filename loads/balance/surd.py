@@ -9,6 +9,8 @@ from fractions import Fraction
 from math import isqrt
 from typing import NamedTuple
 
+NOTHING = Fraction(0)
+
 
 class Surd(NamedTuple):
     """The number whole + factor * sqrt(under). A rational has a factor of 0."""
@@ -41,7 +43,7 @@ class Surd(NamedTuple):
 
 def rational(value: Fraction) -> Surd:
     """Return a rational as a number of this kind."""
-    return Surd(value, Fraction(0), Fraction(0))
+    return Surd(value, NOTHING, NOTHING)
 
 
 def root(whole: Fraction, factor: Fraction, under: Fraction) -> Surd:
