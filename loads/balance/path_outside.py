@@ -2,13 +2,14 @@
 
 The worst point is the least, over the path, of the margin to the nearest piece of the envelope. The margin
 to one side of a piece is A / W + B + C * W at the weight W, so the worst point is at an end of the stretch,
-where one such margin is least (W = sqrt(A / C)), or where two neighbouring pieces are equally near: the root
-of a quadratic. All of them are looked at, and compared exactly.
+where one such margin is least (W = sqrt(A / C)), where two pieces are equally near, or where an operator's
+margins use a piece up, so that another is the nearest from there on: roots of quadratics. All of them are
+looked at and compared exactly; where a piece is just used up, with it and without it.
 """
 
 from collections.abc import Iterator, Sequence
 from fractions import Fraction
-from itertools import pairwise
+from itertools import chain, combinations
 from typing import NamedTuple
 
 from fleet.envelope import Trapezoid
@@ -46,21 +47,36 @@ def worst_outside(piece: Piece, trapezoids: Sequence[Trapezoid]) -> Nearest:
     top, bottom = Fraction(piece.top, piece.over), Fraction(piece.bottom, piece.under)
     worst: Nearest | None = None
     for weight in _candidates(margins, top, bottom):
-        best: tuple[Surd, Trapezoid, bool] | None = None
-        there = False
-        for sides, (low, high) in zip(trapezoids, margins, strict=True):
-            forward, rear = _value(low, weight), _value(high, weight)
-            aft = rear.below(forward)
-            margin = rear if aft else forward
-            # Near its tip a piece may be used up by an operator's margins: one that is there is the nearer.
-            left = Surd(forward.whole + rear.whole, forward.factor + rear.factor, weight.under).sign() >= 0
-            if best is None or (left and not there) or (left == there and best[0].below(margin)):
-                best, there = (margin, sides, aft), left
-        if best is not None and (worst is None or best[0].below(worst.margin)):
-            worst = Nearest(piece.stretch, weight, best[0], best[1], best[2], bottom)
+        for least_width in (0, 1):
+            best = _nearest(trapezoids, margins, weight, least_width)
+            if worst is None or best[0].below(worst.margin):
+                worst = Nearest(piece.stretch, weight, best[0], best[1], best[2], bottom)
     if worst is None:
         raise ValueError("between two weights of corners an envelope has a part")
     return worst
+
+
+def _nearest(
+    trapezoids: Sequence[Trapezoid], margins: Sequence[Sequence[Margin]], weight: Surd, least_width: int
+) -> tuple[Surd, Trapezoid, bool]:
+    """Return the margin to the nearest piece at a weight, its sides and which of them is the nearer.
+
+    Near its tip a piece may be used up by an operator's margins: one that is there is the nearer. With a
+    least width of 1 a piece without any width is not there, with 0 it is.
+    """
+    best: tuple[Surd, Trapezoid, bool] | None = None
+    there = False
+    for sides, (low, high) in zip(trapezoids, margins, strict=True):
+        forward, rear = _value(low, weight), _value(high, weight)
+        aft = rear.below(forward)
+        margin = rear if aft else forward
+        width = Surd(forward.whole + rear.whole, forward.factor + rear.factor, weight.under)
+        left = width.sign() >= least_width
+        if best is None or (left and not there) or (left == there and best[0].below(margin)):
+            best, there = (margin, sides, aft), left
+    if best is None:
+        raise ValueError("between two weights of corners an envelope has a part")
+    return best
 
 
 def _candidates(margins: Sequence[Sequence[Margin]], top: Fraction, bottom: Fraction) -> Iterator[Surd]:
@@ -70,8 +86,12 @@ def _candidates(margins: Sequence[Sequence[Margin]], top: Fraction, bottom: Frac
     for a, _, c in (margin for pair in margins for margin in pair):
         if a > 0 and c > 0:
             found.append(root(ZERO, ONE, a / c))
-    for (_, high), (low, _) in pairwise(margins):
-        a, b, c = (one - other for one, other in zip(high, low, strict=True))
+    equally_near = (
+        tuple(one - other for one, other in zip(high, low, strict=True))
+        for (_, high), (low, _) in combinations(margins, 2)
+    )
+    used_up = (tuple(one + other for one, other in zip(low, high, strict=True)) for low, high in margins)
+    for a, b, c in chain(equally_near, used_up):
         if c:
             square = b * b - 4 * a * c
             if square >= 0:
