@@ -56,9 +56,7 @@ class Setting(NamedTuple):
     parts: tuple[tuple[str, str], ...] = ()  # (part, state) of those that decide which envelope holds
 
 
-def settings(
-    parts: Iterable[MovingPart], where: Where, told: Container[str] = ()
-) -> tuple[Setting, ...]:
+def settings(parts: Iterable[MovingPart], where: Where, told: Container[str] = ()) -> tuple[Setting, ...]:
     """Return the settings that may hold on the ground or in flight and change the moment, one for each
     change of moment; () when there is none. Of the parts in `told` each state counts as another setting.
     """

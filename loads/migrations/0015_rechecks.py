@@ -5,7 +5,6 @@ import django.db.models.deletion
 from django.conf import settings
 from django.db import migrations, models
 
-
 # table, name, columns, target table, target columns
 TIES = [
     (
