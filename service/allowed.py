@@ -23,8 +23,8 @@ SIGNATURES: Final = frozenset(
         loads.acts.CHANGE_LATE.name,
     }
 )
-# Whatever moves a limit or says who may do what needs a person: an integration never does it, whoever owns
-# it.
+# Whatever approves a figure, widens a limit or says who may do what needs a person: an integration never does
+# it, whoever owns it. It may tighten: enter a restriction, end a permit.
 _NEEDS_A_PERSON: Final = SIGNATURES | {
     fleet.acts.APPROVE_LOADING_BASIS.name,
     fleet.acts.APPROVE_EMPTY_WEIGHT.name,

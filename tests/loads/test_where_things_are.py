@@ -152,7 +152,7 @@ def test_the_page_of_the_load_shows_them_all(people: Cast) -> None:
         "Aft hold, floor load on an area, item 1 (cargo)",
         "35 50 lb/ft2",
         "Cabin floor, tail to aft hold",
-        "Seats on rails: row1 l at A, row1 r at A",
+        "seats on rails: row1 l at A, row1 r at A",
         "row1 l, restraint",
     ):
         assert shown in words, shown
@@ -165,7 +165,7 @@ def test_an_open_seat_on_rails_says_on_the_page_which_end_was_worse(people: Cast
 
     assert re.search(r"seats on rails (forward|aft)", words)
     assert (
-        "Both ends of the rail checked, no setting stated: row1 l 135 to 142, row1 r 135 to 142 in" in words
+        "both ends of the rail checked, no setting stated: row1 l 135 to 142, row1 r 135 to 142 in" in words
     )
 
 

@@ -308,7 +308,11 @@ SAMPLES: Final[Mapping[str, Callable[[World], Documents]]] = {
     "/api/v1/me/mail": _one(mail="r.amani@example.org"),
     "/api/v1/me/password": _one(current=PASSWORD, new="slow-copper-meadow-4"),
     "/api/v1/people": _one(
-        login="new.person", name="N. Person", password="slow-copper-meadow-4", reason="joined"
+        login="new.person",
+        name="N. Person",
+        mail="n.person@example.org",
+        password="slow-copper-meadow-4",
+        reason="joined",
     ),
     "/api/v1/people/{person}/deactivation": _one(reason="left"),
     "/api/v1/people/{person}/duties": _one(

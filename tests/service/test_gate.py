@@ -63,7 +63,7 @@ def test_no_exit_code_of_pytest_but_zero_is_green(code: int, tests_end_with, mon
 
 
 def test_a_run_that_finds_no_test_is_red_and_its_closing_line_is_last():
-    words = "import sys; from service.gate import gate; sys.exit(gate(['tests/pure', '-k', 'no_such']))"
+    words = "import sys; from service.gate import gate; sys.exit(gate(['tests/pure', '-k', 'zzzz']))"
 
     done = subprocess.run(
         [sys.executable, "-c", words], cwd=ROOT, capture_output=True, text=True, check=False

@@ -65,8 +65,8 @@ def test_the_words_on_the_page_are_the_words_that_are_signed(people) -> None:
         ({"step": "1; drop"}, 412, "The load has moved on since it was read"),
         ({"digest": "0" * 64}, 409, "What was shown is not what would be signed"),
         ({"digest": ""}, 409, "What was shown is not what would be signed"),
-        ({"meaning": "loaded"}, 422, "sign as prepared or as accepted"),
-        ({"meaning": ""}, 422, "sign as prepared or as accepted"),
+        ({"meaning": "loaded"}, 403, "may not sign here"),
+        ({"meaning": ""}, 422, "sign as prepared, as loaded or as accepted"),
         ({"meaning": "accepted"}, 403, "may not sign here"),
     ],
 )
