@@ -15,6 +15,7 @@ from fleet.models import EmptyWeight, LoadingBasis, Provision
 from fleet.queries.figures import basis_of
 from fleet.queries.provisions import used_provisions
 from loads import acts
+from loads.balance.governing import NOT_KNOWN
 from loads.lifecycle import ways_out
 from loads.manifest.figures import figure
 from loads.manifest.pilot_block import VERDICTS, fuel_block, open_points, permits_said, trim_lines
@@ -99,8 +100,10 @@ def stops(result: Mapping[str, Any], words: Words) -> list[dict[str, str]]:
 
 def _lines(page: Page, words: Words) -> dict[str, Any]:
     governing = page.result.get("governing") or {}
+    # What is not known of them stands under what was not assessed.
+    told = [line for line in (governing.get("weight"), governing.get("cg")) if line and line != NOT_KNOWN]
     return {
-        "governing": [words.said(line) for line in (governing.get("weight"), governing.get("cg")) if line],
+        "governing": [words.said(line) for line in told],
         **open_points(page, words),
     }
 

@@ -87,6 +87,8 @@ def test_an_unresolved_load_names_what_is_missing_and_offers_no_signature(people
 
     assert "empty weight" in page.words
     assert "Empty weight: none in force" in page.words
+    assert "Not known" not in page.words  # said once, under what was not assessed
+    assert "Not assessed: weights and centres of gravity" in page.words
     assert page.actions() == {"withdraw"}
 
 
