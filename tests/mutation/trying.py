@@ -17,7 +17,7 @@ import pytest
 
 KILLED, SURVIVED, TIMEOUT, UNREACHED = 1, 0, 3, 5
 WORDS = {KILLED: "killed", SURVIVED: "survived", TIMEOUT: "timeout", UNREACHED: "no test reaches it"}
-STEP = 15.0  # how much longer than usual the tests of a mutant may take, besides ten seconds
+STEP = 4.0  # how much longer than usual the tests of a mutant may take, besides ten seconds
 
 
 @pytest.hookimpl(tryfirst=True)
@@ -39,9 +39,9 @@ def pytest_runtestloop(session: pytest.Session) -> bool:
             running[_start(name, session.items, reach)] = name
         pid, status = os.wait()
         tries[running.pop(pid)] = WORDS.get(os.waitstatus_to_exitcode(status), "killed")
+        (folder / "tries.json").write_text(json.dumps(tries))  # each time: a run cut short tells what it found
         if len(tries) % 25 == 0:
             print(f"{len(tries)} of {len(drawn)} tried", flush=True)
-    (folder / "tries.json").write_text(json.dumps(tries))
     return True
 
 
