@@ -39,7 +39,8 @@ def pytest_runtestloop(session: pytest.Session) -> bool:
             running[_start(name, session.items, reach)] = name
         pid, status = os.wait()
         tries[running.pop(pid)] = WORDS.get(os.waitstatus_to_exitcode(status), "killed")
-        (folder / "tries.json").write_text(json.dumps(tries))  # each time: a run cut short tells what it found
+        # Each time: a run that is cut short tells what it found.
+        (folder / "tries.json").write_text(json.dumps(tries))
         if len(tries) % 25 == 0:
             print(f"{len(tries)} of {len(drawn)} tried", flush=True)
     return True
