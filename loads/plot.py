@@ -22,7 +22,7 @@ from loads.plot_marks import MARKS, Mark, drawn_marks
 from loads.plot_operational import Outline, drawn_outline, operational
 from loads.plot_path import burn_line, worst_mark
 from loads.plot_scale import Scale, ticks
-from loads.svg import corners, element, label, line, short
+from loads.svg import corners, element, label, line, picture, short
 
 DASHES = ("none", "7 3", "2 2", "9 3 2 3")
 LONGEST_WHOLE = 4  # figures before the point that are not set apart
@@ -92,17 +92,7 @@ def plot(
     told = "; ".join(
         f"{mark.phase}: {short(mark.y)} {units['weight']} at {short(mark.x)} {unit}" for mark in marks
     )
-    return element(
-        "svg",
-        *parts,
-        xmlns="http://www.w3.org/2000/svg",
-        viewBox=f"0 0 {short(frame.width)} {short(frame.height)}",
-        role="img",
-        aria_label=told,
-        font_family="IBM Plex Sans, sans-serif",
-        font_size=9,
-        fill="#000",
-    )
+    return picture(parts, frame.width, frame.height, told)
 
 
 def _marks(result: Mapping[str, Any], axis: Axis, plane: str) -> list[Mark]:

@@ -20,7 +20,7 @@ from loads.plot import DASHES, ROW, STANDARD, Frame, broken, grid, titles
 from loads.plot_marks import MARKS, WORST, Mark, drawn_marks
 from loads.plot_path import BETWEEN
 from loads.plot_scale import Scale
-from loads.svg import corners, element, label, short
+from loads.svg import corners, element, label, picture, short
 
 Knot = tuple[float, float, float]  # weight, moment, lateral moment
 AXIS = "lateral by CG"  # of a worst point in the result document
@@ -54,17 +54,7 @@ def plot_across(result: Mapping[str, Any], limits: Sequence[LateralByCg], *, fra
     told = "; ".join(
         f"{mark.phase}: {_sided(mark.y)} {unit} at {short(mark.x)} {units['length']}" for mark in marks
     )
-    return element(
-        "svg",
-        *parts,
-        xmlns="http://www.w3.org/2000/svg",
-        viewBox=f"0 0 {short(frame.width)} {short(frame.height)}",
-        role="img",
-        aria_label=told,
-        font_family="IBM Plex Sans, sans-serif",
-        font_size=9,
-        fill="#000",
-    )
+    return picture(parts, frame.width, frame.height, told)
 
 
 def _place(row: Mapping[str, Any], gives: str) -> tuple[float, float]:

@@ -3,13 +3,9 @@
 from fleet import acts
 from fleet.actions.authorship import own, person_acting
 from fleet.actions.constraint_refusals import refused_as
-from fleet.actions.provision_rows import REFUSALS, Laid, enter
-from fleet.entering import plausible
+from fleet.actions.provision_rows import REFUSALS, Laid, enter, paper_for
 from fleet.models import Aircraft, Provision
 from fleet.provisions import PERMIT
-from fleet.queries.figures import basis_of
-from fleet.queries.in_force import basis_in_force
-from fleet.restriction_reading import read_paper
 from records.act import act
 from records.actor import Actor
 from records.strict_json import JSON
@@ -27,8 +23,5 @@ def enter_permit(actor: Actor, aircraft: Aircraft, document: JSON, *, reason: st
         refused_as(REFUSALS),
         act(acts.ENTER_PERMIT, by=actor, about=about, reason=reason) as entry,
     ):
-        paper = read_paper(document, "permit")
-        basis = basis_in_force(aircraft, plausible(paper.since, "/true_from"), entry.at)
-        if basis is not None:
-            read_paper(document, "permit", basis_of(basis))
+        paper = paper_for(aircraft, document, "permit", known=entry.at)
         return enter(entry, actor, Laid(PERMIT, document, paper.since, paper.until), aircraft)

@@ -3,13 +3,9 @@
 from fleet import acts
 from fleet.actions.authorship import own, person_acting
 from fleet.actions.constraint_refusals import refused_as
-from fleet.actions.provision_rows import REFUSALS, Laid, enter, promise_to_tell
-from fleet.entering import plausible
+from fleet.actions.provision_rows import REFUSALS, Laid, enter, paper_for, promise_to_tell
 from fleet.models import Aircraft, Provision
 from fleet.provisions import RESTRICTION
-from fleet.queries.figures import basis_of
-from fleet.queries.in_force import basis_in_force
-from fleet.restriction_reading import read_paper
 from records.act import act
 from records.actor import Actor
 from records.strict_json import JSON
@@ -28,10 +24,7 @@ def enter_restriction(actor: Actor, aircraft: Aircraft, document: JSON, *, reaso
         refused_as(REFUSALS),
         act(acts.ENTER_RESTRICTION, by=actor, about=about, reason=reason) as entry,
     ):
-        paper = read_paper(document, "restriction")
-        basis = basis_in_force(aircraft, plausible(paper.since, "/true_from"), entry.at)
-        if basis is not None:
-            read_paper(document, "restriction", basis_of(basis))
+        paper = paper_for(aircraft, document, "restriction", known=entry.at)
         entered = enter(entry, actor, Laid(RESTRICTION, document, paper.since, paper.until), aircraft)
         promise_to_tell(entry, entered, "held")
         return entered

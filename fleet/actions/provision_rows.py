@@ -9,8 +9,13 @@ from typing import Final
 from django.db.models import Max
 
 from fleet.actions.authorship import approver_acting, person_acting
+from fleet.entering import plausible
 from fleet.events import PROVISIONS_CHANGED
 from fleet.models import Aircraft, Provision, ProvisionApproval, ProvisionEnd
+from fleet.queries.figures import basis_of
+from fleet.queries.in_force import basis_in_force
+from fleet.restriction_reading import Kind, read_paper
+from fleet.restrictions import Paper
 from records import outbox
 from records.act import Entry
 from records.actor import Actor
@@ -49,6 +54,15 @@ class Laid:
     document: JSON
     true_from: datetime
     true_until: datetime | None = None
+
+
+def paper_for(aircraft: Aircraft, document: JSON, kind: Kind, *, known: datetime) -> Paper:
+    """This function will read a restriction or permit of an aircraft; raises Invalid with every fault, among
+    them what the loading basis in force when it begins, as known at `known`, does not have.
+    """
+    paper = read_paper(document, kind)
+    basis = basis_in_force(aircraft, plausible(paper.since, "/true_from"), known)
+    return paper if basis is None else read_paper(document, kind, basis_of(basis))
 
 
 def enter(entry: Entry, actor: Actor, laid: Laid, aircraft: Aircraft | None = None) -> Provision:

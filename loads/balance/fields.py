@@ -165,6 +165,21 @@ class Fields:
             return None
         return found
 
+    def weight_got(self, how: str | None) -> Quantity | None:
+        """Return the weight of a line that says how it was got: a standard one is not typed, any other must
+        be.
+        """
+        if how == "standard":
+            if "weight" in self:
+                detail = "a standard weight comes from a table; leave the weight out, or say how it is known"
+                self.note("weight", "weight-with-standard", detail)
+            return None
+        if "weight" not in self:
+            if how is not None:
+                self.note("weight", "missing", "the weight is missing and none is assumed; state it")
+            return None
+        return self.quantity("weight", Dimension.WEIGHT, zero=False)
+
     def inner(self, name: str, required: tuple[str, ...], optional: tuple[str, ...] = ()) -> "Fields | None":
         """Return an object inside this one, or None when the field is absent."""
         if name not in self._values:

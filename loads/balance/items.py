@@ -6,7 +6,6 @@ from typing import cast
 
 from fleet.basis import Basis, Configuration, Place
 from fleet.conversion import in_unit
-from fleet.quantities import Dimension
 from loads.balance.aboard import HOWS, KINDS, How, Item, Kind
 from loads.balance.exact import added
 from loads.balance.fields import Fields
@@ -90,14 +89,5 @@ def _jettisonable(line: Fields, place: Place | None) -> bool:
 
 
 def _item_weight(line: Fields, how: How | None, basis: Basis) -> Fraction | None:
-    if how == "standard":
-        if "weight" in line:
-            detail = "a standard weight comes from a table; leave the weight out, or say how it is known"
-            line.note("weight", "weight-with-standard", detail)
-        return None
-    if "weight" not in line:
-        if how is not None:
-            line.note("weight", "missing", "the weight is missing and none is assumed; state it")
-        return None
-    quantity = line.quantity("weight", Dimension.WEIGHT, zero=False)
+    quantity = line.weight_got(how)
     return None if quantity is None else in_unit(quantity, basis.weight_unit)

@@ -146,16 +146,7 @@ def _not_to_be_used(seat: Seat, seating: Seating) -> tuple[str, str]:
 
 def _weight(line: Fields, how: How | None, band: Band, unit: Unit) -> Fraction | None:
     """Return a person's weight; a standard one is not typed, any other must be."""
-    if how == "standard":
-        if "weight" in line:
-            detail = "a standard weight comes from a table; leave the weight out, or say how it is known"
-            line.note("weight", "weight-with-standard", detail)
-        return None
-    if "weight" not in line:
-        if how is not None:
-            line.note("weight", "missing", "the weight is missing and none is assumed; state it")
-        return None
-    quantity = line.quantity("weight", Dimension.WEIGHT, zero=False)
+    quantity = line.weight_got(how)
     if quantity is None:
         return None
     if not within_band(quantity, band, Unit.KG):
