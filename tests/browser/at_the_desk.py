@@ -34,6 +34,9 @@ def come_to_the_desk(visit: Visit) -> None:
     page.click("text=Go on")
     page.select_option("#configuration", label="four seat")
     page.click("text=Go on")
+    # A click does not wait for the page it leads to: what is only on that page, then the whole of it.
+    page.wait_for_selector(named("seat:COCKPIT-L:name"))
+    page.wait_for_load_state()
 
 
 def fill_in(visit: Visit, **changes: str) -> None:

@@ -44,6 +44,7 @@ def every_page(visit: Visit) -> list[str]:
     wrong += wrong_on(visit)
     visit.page.click("text=Submit the load")
     visit.page.wait_for_selector("[role=alert]")
+    visit.page.wait_for_load_state()
     wrong += wrong_on(visit)
     visit.open("/loads/00000000-0000-7000-8000-000000000000")
     return wrong + wrong_on(visit)
