@@ -4,6 +4,7 @@ from http import HTTPStatus
 
 from loads.queries.answer import answer_parts
 from loads.queries.current import Current
+from records.actor import Actor
 from records.api.asking import etag
 from records.api.once import Answer
 from records.api.render import rendered
@@ -11,22 +12,22 @@ from records.refusal import Fault, Invalid
 from records.strict_json import JSON
 
 
-def moved(current: Current, status: HTTPStatus = HTTPStatus.OK) -> Answer:
-    """This function will return the answer about a load that was just moved."""
-    return status, {"ETag": etag(current.step.number)}, written(current)
+def moved(current: Current, by: Actor, status: HTTPStatus = HTTPStatus.OK) -> Answer:
+    """This function will return the answer to the actor who just moved this load."""
+    return status, {"ETag": etag(current.step.number)}, written(current, reach=by.reach)
 
 
-def created(current: Current) -> Answer:
-    """This function will return the answer about a load that was just submitted, with its address."""
-    status, headers, body = moved(current, HTTPStatus.CREATED)
+def created(current: Current, by: Actor) -> Answer:
+    """This function will return the answer to the actor who just submitted this load, with its address."""
+    status, headers, body = moved(current, by, HTTPStatus.CREATED)
     return status, {**headers, "Location": f"/api/v1/loads/{current.load.id}"}, body
 
 
-def written(current: Current) -> bytes:
+def written(current: Current, *, reach: frozenset[str] | None) -> bytes:
     """This function will return the bytes of `answer_of`, with the result put in as the text that is stored:
     that is canonical, so reading it and writing it again gives the same.
     """
-    before, result, after = answer_parts(current)
+    before, result, after = answer_parts(current, reach=reach)
     return b",".join((rendered(before)[:-1], result[1:-1].encode(), rendered(after)[1:]))
 
 

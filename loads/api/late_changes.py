@@ -64,7 +64,7 @@ class LateChangesView(APIView):
         confirm_password(request, request.user, document.get("password"))
         change = _change_in(document)
         check_when_overdue(actor.chain)
-        return once(request, lambda: moved(change_late(load, change, signing, seen=seen, by=actor)))
+        return once(request, lambda: moved(change_late(load, change, signing, seen=seen, by=actor), actor))
 
 
 class LatePreviewView(APIView):

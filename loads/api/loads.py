@@ -52,7 +52,7 @@ class LoadsView(APIView):
     def post(self, request: Request) -> HttpResponse:
         """Compute a load and keep it, whatever its verdict; the answer holds all checks and the whole sum."""
         document, actor = document_of(request), actor_of(request)
-        return once(request, lambda: created(submit_load(document, by=actor)))
+        return once(request, lambda: created(submit_load(document, by=actor), actor))
 
     @extend_schema(
         operation_id="list_loads",
@@ -64,12 +64,14 @@ class LoadsView(APIView):
         """List loads by planned departure, the earliest first, a page at a time."""
         asked = parameters_of(request, allowed=PARAMETERS)
         after, most = page_asked(asked)
-        filters = replace(filters_in(asked), reach=actor_of(request).reach)
+        reach = actor_of(request).reach
+        filters = replace(filters_in(asked), reach=reach)
         page = list_loads(operator_of(request), filters, after=after, most=most)
         following = next_address(request, page.after) if page.after else None
         headers = {"Link": f'<{following}>; rel="next"'} if following else {}
         return Response(
-            {"loads": [summary_of(one) for one in page.loads], "next": following}, headers=headers
+            {"loads": [summary_of(one, reach=reach) for one in page.loads], "next": following},
+            headers=headers,
         )
 
 
@@ -85,5 +87,5 @@ class LoadView(APIView):
         """Read a load as it stands: what was declared, computed and signed. Its ETag is needed to move it."""
         parameters_of(request, allowed=())
         current = load_of(operator_of(request), load)
-        answer = full_answer_of(current, known=timezone.now())
+        answer = full_answer_of(current, known=timezone.now(), reach=actor_of(request).reach)
         return Response(answer, headers={"ETag": etag(current.step.number)})

@@ -150,14 +150,15 @@ class ManifestNumber(serializers.Serializer[object]):
 class LoadWarning(serializers.Serializer[object]):
     """What looks doubled: one aircraft, or one person, on two standing loads less than an hour apart.
 
-    `pointer` is the part of this load it is about; `load` is the other one. It refuses nothing.
+    `pointer` is the part of this load it is about; `load` is the other one, null to a token limited to
+    aircraft that does not reach it. It refuses nothing.
     """
 
     code = serializers.ChoiceField(("same-aircraft", "same-person"))
     detail = serializers.CharField()
     pointer = serializers.CharField()
-    load = serializers.UUIDField()
-    href = serializers.CharField()
+    load = serializers.UUIDField(allow_null=True)
+    href = serializers.CharField(allow_null=True)
 
 
 class LoadAnswer(ComputedAnswer):

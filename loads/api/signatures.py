@@ -53,4 +53,4 @@ class SignaturesView(APIView):
         # Before the transaction: a wrong password must stay counted although nothing else is kept.
         confirm_password(request, request.user, document.get("password"))
         check_when_overdue(actor.chain)
-        return once(request, lambda: moved(_ACTIONS[meaning](load, signing, seen=seen, by=actor)))
+        return once(request, lambda: moved(_ACTIONS[meaning](load, signing, seen=seen, by=actor), actor))

@@ -37,7 +37,9 @@ class RevisionsView(APIView):
         seen, actor = state_seen(request), actor_of(request)
         reason = reason_in(document_of(request))
         document = {name: value for name, value in document_of(request).items() if name != "reason"}
-        return once(request, lambda: created(revise_load(load, document, reason=reason, seen=seen, by=actor)))
+        return once(
+            request, lambda: created(revise_load(load, document, reason=reason, seen=seen, by=actor), actor)
+        )
 
 
 class AssessmentView(APIView):
@@ -55,7 +57,7 @@ class AssessmentView(APIView):
         seen, actor = state_seen(request), actor_of(request)
         if request.body.strip():
             refuse_other_fields(document_of(request))
-        return once(request, lambda: moved(assess_again(load, seen=seen, by=actor)))
+        return once(request, lambda: moved(assess_again(load, seen=seen, by=actor), actor))
 
 
 class WithdrawalView(APIView):
@@ -73,7 +75,7 @@ class WithdrawalView(APIView):
         seen, actor, document = state_seen(request), actor_of(request), document_of(request)
         refuse_other_fields(document, "reason")
         reason = reason_in(document)
-        return once(request, lambda: moved(withdraw_load(load, reason=reason, seen=seen, by=actor)))
+        return once(request, lambda: moved(withdraw_load(load, reason=reason, seen=seen, by=actor), actor))
 
 
 class DepartureView(APIView):
@@ -91,4 +93,4 @@ class DepartureView(APIView):
         seen, actor, document = state_seen(request), actor_of(request), document_of(request)
         refuse_other_fields(document, "at")
         at = instant(text_in(document, "at"), where="/at")
-        return once(request, lambda: moved(depart_load(load, at=at, seen=seen, by=actor)))
+        return once(request, lambda: moved(depart_load(load, at=at, seen=seen, by=actor), actor))

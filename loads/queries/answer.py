@@ -2,6 +2,9 @@
 
 from collections.abc import Mapping
 from datetime import datetime
+from uuid import UUID
+
+from django.db.models import QuerySet
 
 from fleet.queries.provisions import used_provisions
 from loads.balance.engine import ENGINE_VERSION
@@ -30,18 +33,20 @@ from records.canonical import decimal_text
 LOAD_PATH = "/api/v1/loads/{}"
 MANIFEST_PATH = "/api/v1/loads/{}/manifest"
 Answer = dict[str, object]
+Reach = frozenset[str] | None
 
 
-def answer_of(current: Current) -> Answer:
-    """This function will return the answer about a stored load, without the name of any person.
+def answer_of(current: Current, *, reach: Reach) -> Answer:
+    """This function will return the answer about a stored load, without the name of any person, for somebody
+    limited to the aircraft of `reach` (None: to none), to whom no load of another one is named.
 
     It is what a change of state answers, and such answers are kept a while for repeated requests.
     """
-    before, _, after = answer_parts(current)
+    before, _, after = answer_parts(current, reach=reach)
     return {**before, **current.result(), **after}
 
 
-def answer_parts(current: Current) -> tuple[Answer, str, Answer]:
+def answer_parts(current: Current, *, reach: Reach) -> tuple[Answer, str, Answer]:
     """This function will return what stands before the result document in the answer, the result as the text
     that is stored, and what stands behind it.
     """
@@ -59,15 +64,16 @@ def answer_parts(current: Current) -> tuple[Answer, str, Answer]:
         "signatures": [_signature(one) for one in signatures_of(load)] if begun else [],
         "manifest": _manifest(load) if begun else None,
         "late_changes": [late_answer(one) for one in changes_of(load)] if begun else [],
-        "warnings": [_warning(one) for one in doubles_of(current)],
+        "warnings": [_warning(one) for one in doubles_of(current, reach=reach)],
         "cautions": cautions(invented=load.operator.invented),
     }
-    return _standing(current), used.result, after
+    return _standing(current, reach), used.result, after
 
 
-def full_answer_of(current: Current, *, known: datetime) -> Answer:
-    """This function will return all there is to read about a load: also what was declared, the names of the
-    signers, every step, and whether the assessment still rests on what is in force as known at `known`.
+def full_answer_of(current: Current, *, known: datetime, reach: Reach) -> Answer:
+    """This function will return all there is to read about a load: `answer_of`, and what was declared, the
+    names of the signers, every step, and whether the assessment still rests on what is in force as known at
+    `known`.
     """
     load, declared = current.load, declared_now(current)
     signatures = [
@@ -75,10 +81,10 @@ def full_answer_of(current: Current, *, known: datetime) -> Answer:
         for one in signatures_of(load)
     ]
     return {
-        **answer_of(current),
+        **answer_of(current, reach=reach),
         "signatures": signatures,
         "stale": list(stale_parts(current, known)) if ways_out(current.state) else [],
-        "replaced_by": Load.objects.filter(replaces=load).values_list("id", flat=True).first(),
+        "replaced_by": _seen(Load.objects.filter(replaces=load), reach),
         "steps": [
             {"number": one.number, "state": one.after, "at": one.at, "reason": one.reason}
             for one in load.steps.order_by("number")
@@ -120,11 +126,11 @@ def computed_answer(computation: Computation) -> Answer:
     }
 
 
-def summary_of(current: Current) -> Answer:
-    """This function will return one line of the list of loads."""
+def summary_of(current: Current, *, reach: Reach) -> Answer:
+    """This function will return one line of the list of loads, as `answer_of` has it."""
     result = current.result()
     return {
-        **_standing(current),
+        **_standing(current, reach),
         "verdict": current.assessment.verdict,
         "governing": result.get("governing"),
         "digest": current.assessment.digest,
@@ -147,13 +153,16 @@ def departure_text(document: Mapping[str, object]) -> str:
     return str(flight["departure"]) if isinstance(flight, dict) else ""
 
 
-def _standing(current: Current) -> Answer:
+def _standing(current: Current, reach: Reach) -> Answer:
     load = current.load
+    replaces = load.replaces_id
+    if replaces is not None and reach is not None:
+        replaces = _seen(Load.objects.filter(id=replaces), reach)
     return {
         "id": load.id,
         "state": current.state,
         "step": current.step.number,
-        "replaces": load.replaces_id,
+        "replaces": replaces,
         "aircraft": load.aircraft.registration,
         "configuration": load.configuration,
         "flight": {
@@ -165,6 +174,12 @@ def _standing(current: Current) -> Answer:
             "operation": load.operation,
         },
     }
+
+
+def _seen(loads: "QuerySet[Load]", reach: Reach) -> UUID | None:
+    if reach is not None:
+        loads = loads.filter(aircraft__registration__in=reach)
+    return loads.values_list("id", flat=True).first()
 
 
 def _signature(one: Signature) -> Answer:
@@ -253,7 +268,7 @@ def _warning(one: Double) -> Answer:
         "detail": one.detail,
         "pointer": one.pointer,
         "load": one.load,
-        "href": LOAD_PATH.format(one.load),
+        "href": None if one.load is None else LOAD_PATH.format(one.load),
     }
 
 

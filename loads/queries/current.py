@@ -75,6 +75,13 @@ def current_of(present: Present) -> Current:
     return Current(present.load, present.step, present.assessment)
 
 
+def within(reach: frozenset[str] | None, load: Load) -> bool:
+    """This function will tell whether a load is of an aircraft somebody is limited to (registrations); None
+    limits to none.
+    """
+    return reach is None or load.aircraft.registration in reach
+
+
 def declared_in(load: Load) -> dict[str, strict_json.JSON]:
     """This function will return the document that was declared, numbers as texts."""
     document = strict_json.read(bytes(load.declaration.body))

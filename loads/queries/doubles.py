@@ -11,7 +11,7 @@ from datetime import timedelta
 from typing import Any, Final
 from uuid import UUID
 
-from loads.queries.current import Current, current_of, loads_present
+from loads.queries.current import Current, current_of, loads_present, within
 from loads.queries.declaration import declared_now
 from records import prepared
 
@@ -27,18 +27,22 @@ _NEAR: Final = (
 
 @dataclass(frozen=True, slots=True)
 class Double:
-    """One warning: a stable code, a sentence without the name of a person, the other load, and the part of
-    this load it is about, as a JSON pointer.
+    """One warning: a stable code, a sentence without the name of a person, the other load (None where who
+    asks may not see it), and the part of this load it is about, as a JSON pointer.
     """
 
     code: str
     detail: str
-    load: UUID
+    load: UUID | None
     pointer: str
 
 
-def doubles_of(current: Current) -> tuple[Double, ...]:
-    """This function will return what of a standing load stands on another one too; () for an ended load."""
+def doubles_of(current: Current, *, reach: frozenset[str] | None) -> tuple[Double, ...]:
+    """This function will return what of a standing load stands on another one too; () for an ended load.
+
+    `reach` has the registrations somebody is limited to, None: to none. Of loads beyond it only is told that
+    there is one.
+    """
     if current.state not in STANDING:
         return ()
     others = _beside(current)
@@ -47,17 +51,19 @@ def doubles_of(current: Current) -> tuple[Double, ...]:
     own = tuple(_people(declared_now(current)))
     found: list[Double] = []
     for other in others:
-        which = _words(other)
+        seen = within(reach, other.load)
+        which = f"another load: {_words(other)}" if seen else "another load, which this token may not see"
+        number = other.load.id if seen else None
         if other.load.aircraft_id == current.load.aircraft_id:
-            detail = f"The same aircraft stands on another load: {which}."
-            found.append(Double("same-aircraft", detail, other.load.id, "/aircraft"))
+            detail = f"The same aircraft stands on {which}."
+            found.append(Double("same-aircraft", detail, number, "/aircraft"))
         there = frozenset().union(*(marks for _, marks, _ in _people(declared_now(other))))
         found += [
-            Double("same-person", f"{who} is on another load: {which}.", other.load.id, pointer)
+            Double("same-person", f"{who} is on {which}.", number, pointer)
             for pointer, marks, who in own
             if marks & there
         ]
-    return tuple(found)
+    return tuple(dict.fromkeys(found))  # how many loads there are beyond the reach is not told either
 
 
 def _beside(current: Current) -> list[Current]:

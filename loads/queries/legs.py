@@ -45,7 +45,7 @@ def leg_before(operator: str, aircraft: Aircraft, flight: Flight) -> Current | N
         raise _refused("unknown-load", "no load has this id; write the id of the leg before") from None
     before = found.load
     if before.aircraft_id != aircraft.id:
-        detail = f"that load is of {before.aircraft.registration}; a leg follows one of the same aircraft"
+        detail = "that load is of another aircraft; a leg follows one of the same aircraft"
         raise _refused("leg-of-another-aircraft", detail)
     if before.destination != flight.origin:
         detail = f"that leg ends at {before.destination}, this one begins at {flight.origin}; correct one"

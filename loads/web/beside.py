@@ -25,7 +25,7 @@ def beside(current: Current, declared: dict[str, Any], actor: Actor) -> dict[str
     load, state = current.load, current.state
     may_change = acts.CHANGE_LATE.name in actor.may and load.pilot_id == actor.person
     return {
-        "doubles": doubles_shown(doubles_of(current)),
+        "doubles": doubles_shown(doubles_of(current, reach=actor.reach)),
         "late_changes": _changes(current, declared),
         "told": [
             {"at": one.told_at.astimezone(UTC), "changed": one.changed, "mail": one.mail_addresses}
@@ -46,7 +46,7 @@ def doubles_shown(doubles: Iterable[Double]) -> list[dict[str, Any]]:
     """This function will return what looks doubled, a line for each other load: the first sight of it whole,
     of the rest what comes before the words that name the load, with how often.
     """
-    sights: dict[UUID, list[str]] = {}
+    sights: dict[UUID | None, list[str]] = {}
     for one in doubles:
         sights.setdefault(one.load, []).append(one.detail)
     return [

@@ -46,7 +46,7 @@ def _other_people(people, minutes, **changes):
 
 
 def _codes(current):
-    return [(one.code, one.pointer) for one in doubles_of(current)]
+    return [(one.code, one.pointer) for one in doubles_of(current, reach=None)]
 
 
 def test_one_aircraft_on_two_loads_of_the_same_hour_is_told_at_submission(people) -> None:
@@ -54,7 +54,7 @@ def test_one_aircraft_on_two_loads_of_the_same_hour_is_told_at_submission(people
 
     second = _other_people(people, 40)
 
-    (told,) = answer_of(second)["warnings"]
+    (told,) = answer_of(second, reach=None)["warnings"]
     assert (told["code"], told["load"], told["href"]) == (
         "same-aircraft",
         first.load.id,
@@ -69,7 +69,7 @@ def test_the_first_load_tells_it_too_when_it_is_read(people) -> None:
 
     second = _other_people(people, 40)
 
-    assert [one.load for one in doubles_of(again(first))] == [second.load.id]
+    assert [one.load for one in doubles_of(again(first), reach=None)] == [second.load.id]
 
 
 @pytest.mark.parametrize(("minutes", "told"), [(59, True), (60, False), (-59, True), (-60, False)])
@@ -86,7 +86,7 @@ def test_one_person_on_two_loads_is_told_by_where_the_line_stands_not_by_name(pe
     second = _at(people, 20, aircraft="Q9-KTC", crew=OTHER_CREW, passengers=passengers, persons_on_board=3)
 
     assert _codes(second) == [("same-person", "/passengers/1")]
-    assert "Dravo" not in str(answer_of(second))
+    assert "Dravo" not in str(answer_of(second, reach=None))
 
 
 def test_a_login_marks_one_of_the_crew_whatever_name_was_typed(people) -> None:

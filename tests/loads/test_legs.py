@@ -56,7 +56,7 @@ def cast_error(error: DatabaseError) -> psycopg.Error:
 
 
 def _legs(current: Current) -> dict[str, Any]:
-    found = full_answer_of(current, known=timezone.now())["legs"]
+    found = full_answer_of(current, known=timezone.now(), reach=None)["legs"]
     assert isinstance(found, dict)
     return found
 

@@ -68,7 +68,7 @@ def test_a_weighing_serves_to_the_end_of_the_month_at_the_local_date(people: Cas
         "weighed on 2025-12-30, which was good to the end of 2026-12-31 (every 12 calendar months)"
     )
     assert weighing(first)["source"] == "135.185, 14 CFR p. a"
-    answer = answer_of(last)
+    answer = answer_of(last, reach=None)
     assert answer["basis"]["rules"] == {"id": str(used.id), "digest": used.digest}
     assert answer["weighing"]["lapses"] == "2026-12-31"
 
@@ -80,7 +80,7 @@ def test_past_due_stops_only_the_operations_the_rule_binds(people: Cast) -> None
 
     assert (charter.assessment.verdict, private.assessment.verdict) == ("outside", "within")
     assert weighing(private) is None
-    assert "rules" not in answer_of(private)["basis"]
+    assert "rules" not in answer_of(private, reach=None)["basis"]
 
 
 def test_a_rule_that_says_none_stops_nothing(people: Cast) -> None:
@@ -150,7 +150,7 @@ def test_the_loading_supervisor_signs_between_preparer_and_pilot_where_the_rules
     assert set(signatures_due(loaded, declared_now(loaded))) == {"accepted"}
     flown = accept_load(loaded.load.id, signing(loaded), seen="3", by=actor(people.pilot))
     assert flown.state == "accepted"
-    given = [(one["meaning"], one["capacity"]) for one in answer_of(flown)["signatures"]]
+    given = [(one["meaning"], one["capacity"]) for one in answer_of(flown, reach=None)["signatures"]]
     assert given == [
         ("prepared", "load preparer"),
         ("loaded", "loading supervisor"),

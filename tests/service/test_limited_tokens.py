@@ -110,6 +110,41 @@ def test_it_moves_no_load_of_another_aircraft_and_none_onto_one(people):
     assert (elsewhere.status_code, moved.status_code, withdrawn.status_code) == (404, 422, 200)
 
 
+def test_it_is_told_that_a_person_stands_on_a_load_it_may_not_see_and_not_on_which(people):
+    hidden = body(submitted(people, api(people.pilot), OUTSIDE))["id"]
+    client = limited(people)
+
+    answers = [submitted(people, client, INSIDE)]
+    answers.append(client.get(f"/api/v1/loads/{body(answers[0])['id']}"))
+    whole = body(api(people.pilot).get(f"/api/v1/loads/{body(answers[0])['id']}"))
+
+    for answer in answers:
+        told = body(answer)["warnings"]
+        assert [(one["code"], one["pointer"], one["load"], one["href"]) for one in told] == [
+            ("same-person", pointer, None, None) for pointer in ("/crew/0", "/passengers/0", "/passengers/1")
+        ]
+        assert "another load" in told[0]["detail"]
+        assert OUTSIDE not in answer.content.decode()
+        assert hidden not in answer.content.decode()
+    assert {one["load"] for one in whole["warnings"]} == {hidden}
+
+
+def test_it_is_not_told_which_load_of_another_aircraft_replaces_its_own_or_was_replaced_by_it(people):
+    client, pilot = limited(people), api(people.pilot)
+    first = body(submitted(people, client, INSIDE))["id"]
+    revision = load_document(people, aircraft=OUTSIDE) | {"reason": "swap"}
+    away = body(send(pilot, f"/loads/{first}/revisions", revision, **{"If-Match": '"1"'}))["id"]
+    revision = load_document(people, aircraft=INSIDE) | {"reason": "swap"}
+    back = body(send(pilot, f"/loads/{away}/revisions", revision, **{"If-Match": '"1"'}))["id"]
+
+    answers = [client.get(f"/api/v1/loads{path}") for path in (f"/{first}", f"/{back}", "")]
+
+    assert body(answers[0])["replaced_by"] is body(answers[1])["replaces"] is None
+    assert all(away not in answer.content.decode() for answer in answers)
+    assert body(pilot.get(f"/api/v1/loads/{first}"))["replaced_by"] == away
+    assert body(pilot.get(f"/api/v1/loads/{back}"))["replaces"] == away
+
+
 def test_what_is_about_no_aircraft_is_refused_unless_it_limits_its_own_answer(people):
     client = limited(people)
 
