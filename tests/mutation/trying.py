@@ -1,94 +1,140 @@
 """A pytest plugin that tries mutants: each in a process of its own, forked once everything is imported.
 
 First the tests run once, in a process of their own too, to see which of them reach which function and how
-long each takes. Then each mutant meets those tests, the quick ones first, until one fails. Nothing is kept
-from one mutant to the next, for a value some cache remembers would hide a fault.
+long each takes; the few that take longest are left out. Then each mutant, put in the place of the code of its
+function, meets the tests that reach it, until one fails: first those that found other mutants of the same
+function, then the quick ones. Nothing is kept from one mutant to the next, for a value some cache remembers
+would hide a fault.
 """
 
 import contextlib
+import cProfile
+import gc
 import json
 import os
+import resource
 import signal
 import time
-from collections.abc import Sequence
+from collections.abc import Callable, Sequence
 from pathlib import Path
+from typing import Any, Final
 
 import pytest
+from hypothesis import Phase, settings
+
+from tests.mutation.placing import is_ours, key_of, put_in_place
 
 KILLED, SURVIVED, TIMEOUT, UNREACHED = 1, 0, 3, 5
-WORDS = {KILLED: "killed", SURVIVED: "survived", TIMEOUT: "timeout", UNREACHED: "no test reaches it"}
-STEP = 4.0  # how much longer than usual the tests of a mutant may take, besides ten seconds
+WORDS: Final = {KILLED: "killed", SURVIVED: "survived", TIMEOUT: "timeout", UNREACHED: "no test reaches it"}
+LONGEST: Final = 5.0  # seconds: a test that takes longer is left out
+PATIENCE, STEP = 5.0, 10.0  # seconds, and how much longer than usual a test may take
+MOST_MEMORY: Final = 4 << 30  # bytes: a fault may fill the memory, too
+
+# A failure is enough: nothing is shrunk or explained, and a run can be repeated.
+settings.register_profile(
+    "mutants", phases=(Phase.explicit, Phase.generate), database=None, deadline=None, derandomize=True
+)
+settings.load_profile("mutants")
+
+Mutant = dict[str, Any]
+Reach = dict[str, dict[str, float]]
 
 
 @pytest.hookimpl(tryfirst=True)
 def pytest_runtestloop(session: pytest.Session) -> bool:
     """This function will try every mutant drawn instead of running the tests."""
-    folder = Path.cwd()
+    folder = Path(os.environ["TAREBOOK_MUTANTS"])
     asked = json.loads((folder / "asked.json").read_text())
-    drawn: list[str] = asked["drawn"]
-    if _forked(lambda: _reach(session.items, folder / "reach.json")) != SURVIVED:
-        failed = (folder / "reach.failed").read_text()
-        raise pytest.UsageError(f"the tests do not pass without a mutant: {failed}")
-    reach = json.loads((folder / "reach.json").read_text())
+    reach = _reached(session.items, folder)
+    drawn: list[Mutant] = asked["drawn"]
     tries: dict[str, str] = {}
-    running: dict[int, str] = {}
+    finders: dict[str, list[str]] = {}
+    running: dict[int, Mutant] = {}
     waiting = list(drawn)
+    gc.freeze()
     while waiting or running:
         while waiting and len(running) < asked["jobs"]:
-            name = waiting.pop()
-            running[_start(name, session.items, reach)] = name
+            mutant = waiting.pop()
+            tests = _in_order(session.items, reach, key_of(mutant), finders)
+            running[_forked(lambda m=mutant, t=tests: _try(m, t, folder))] = mutant  # type: ignore[misc]  # bound here
         pid, status = os.wait()
-        tries[running.pop(pid)] = WORDS.get(os.waitstatus_to_exitcode(status), "killed")
+        mutant = running.pop(pid)
+        tries[mutant["name"]] = WORDS.get(os.waitstatus_to_exitcode(status), "killed")
+        with contextlib.suppress(FileNotFoundError):
+            finders.setdefault(key_of(mutant), []).insert(0, (folder / f"{pid}.finder").read_text())
         # Each time: a run that is cut short tells what it found.
         (folder / "tries.json").write_text(json.dumps(tries))
-        if len(tries) % 25 == 0:
+        if len(tries) % 50 == 0:
             print(f"{len(tries)} of {len(drawn)} tried", flush=True)
     return True
 
 
-def _start(name: str, items: Sequence[pytest.Item], reach: dict[str, dict[str, float]]) -> int:
+def _reached(items: Sequence[pytest.Item], folder: Path) -> Reach:
+    """Return which tests reach each function and how long each takes (seconds)."""
+    kept = folder / "reach.json"
+    if not kept.exists():
+        failed = folder / "reach.failed"
+        os.waitpid(_forked(lambda: _reach(items, kept, failed)), 0)
+        if not kept.exists():
+            raise pytest.UsageError(f"the tests do not pass without a mutant: {failed.read_text()}")
+    reach: Reach = json.loads(kept.read_text())
+    return reach
+
+
+def _in_order(
+    items: Sequence[pytest.Item], reach: Reach, key: str, finders: dict[str, list[str]]
+) -> list[tuple[pytest.Item, float]]:
+    """Return the tests that reach a function with their times. A test not known yet might reach all."""
+    times, known = reach.get(key, {}), reach[""]
+    found = {name: place for place, name in enumerate(reversed(finders.get(key, ())))}
+    mine = [(item, times.get(item.nodeid, 0.0)) for item in items]
+    mine = [
+        (item, took)
+        for item, took in mine
+        if (item.nodeid in times or item.nodeid not in known) and took <= LONGEST
+    ]
+    return sorted(mine, key=lambda one: (-found.get(one[0].nodeid, -1), one[1]))
+
+
+def _forked(work: Callable[[], int]) -> int:
     pid = os.fork()
     if pid == 0:
-        _quiet()
-        os._exit(_try(name, items, reach))
+        with contextlib.suppress(OSError), Path(os.devnull).open("w") as nowhere:
+            os.dup2(nowhere.fileno(), 1)
+            os.dup2(nowhere.fileno(), 2)
+        os._exit(work())
     return pid
 
 
-def _forked(work: object) -> int:
-    pid = os.fork()
-    if pid == 0:
-        _quiet()
-        os._exit(work())  # type: ignore[operator]  # a function without arguments
-    return os.waitstatus_to_exitcode(os.waitpid(pid, 0)[1])
-
-
-def _try(name: str, items: Sequence[pytest.Item], reach: dict[str, dict[str, float]]) -> int:
-    times = reach.get(name.rpartition("__mutmut_")[0], {})
-    mine = sorted((item for item in items if item.nodeid in times), key=lambda item: times[item.nodeid])
-    if not mine:
+def _try(mutant: Mutant, tests: Sequence[tuple[pytest.Item, float]], folder: Path) -> int:
+    if not tests:
         return UNREACHED
-    from mutmut.mutation.trampoline import set_mutant_under_test  # noqa: PLC0415  # only in the copy
-
-    set_mutant_under_test(name)
+    resource.setrlimit(resource.RLIMIT_AS, (MOST_MEMORY, MOST_MEMORY))
+    put_in_place(mutant)
     signal.signal(signal.SIGALRM, lambda *_: os._exit(TIMEOUT))
-    signal.alarm(int(10 + STEP * sum(times.values())))
-    return KILLED if any(_fails(item) for item in mine) else SURVIVED
-
-
-def _reach(items: Sequence[pytest.Item], into: Path) -> int:
-    from mutmut.mutation.trampoline import set_mutant_under_test  # noqa: PLC0415  # only in the copy
-    from mutmut.state import state  # noqa: PLC0415  # only in the copy
-
-    set_mutant_under_test("stats")
-    reach: dict[str, dict[str, float]] = {}
-    for item in items:
-        state()._stats.clear()
-        begun = time.perf_counter()
-        if failure := _fails(item):
-            into.with_suffix(".failed").write_text(f"{item.nodeid}\n{failure}")
+    for item, took in tests:
+        signal.setitimer(signal.ITIMER_REAL, PATIENCE + STEP * took)
+        if _fails(item):
+            (folder / f"{os.getpid()}.finder").write_text(item.nodeid)
             return KILLED
-        for function in state()._stats:
-            reach.setdefault(function, {})[item.nodeid] = time.perf_counter() - begun
+    return SURVIVED
+
+
+def _reach(items: Sequence[pytest.Item], into: Path, failed: Path) -> int:
+    reach: Reach = {"": {}}
+    for item in items:
+        seen = cProfile.Profile(builtins=False)
+        begun = time.perf_counter()
+        seen.enable()
+        failure = _fails(item)
+        seen.disable()
+        if failure:
+            failed.write_text(f"{item.nodeid}\n{failure}")
+            return KILLED
+        took = reach[""][item.nodeid] = time.perf_counter() - begun
+        for entry in seen.getstats():
+            if not isinstance(entry.code, str) and is_ours(entry.code):
+                reach.setdefault(key_of(entry.code), {})[item.nodeid] = took
     into.write_text(json.dumps(reach))
     return SURVIVED
 
@@ -99,9 +145,3 @@ def _fails(item: pytest.Item) -> str:
 
     reports = runtestprotocol(item, log=False, nextitem=None)
     return "\n".join(report.longreprtext or "failed" for report in reports if report.failed)
-
-
-def _quiet() -> None:
-    with contextlib.suppress(OSError), Path(os.devnull).open("w") as nowhere:
-        os.dup2(nowhere.fileno(), 1)
-        os.dup2(nowhere.fileno(), 2)
