@@ -27,7 +27,7 @@ from tests.mutation.placing import is_ours, key_of, put_in_place
 KILLED, SURVIVED, TIMEOUT, UNREACHED = 1, 0, 3, 5
 WORDS: Final = {KILLED: "killed", SURVIVED: "survived", TIMEOUT: "timeout", UNREACHED: "no test reaches it"}
 LONGEST: Final = 5.0  # seconds: a test that takes longer is left out
-PATIENCE, STEP = 5.0, 10.0  # seconds, and how much longer than usual a test may take
+PATIENCE, STEP = 5.0, 10.0  # seconds of processor time, and how much longer than usual a test may take
 MOST_MEMORY: Final = 4 << 30  # bytes: a fault may fill the memory, too
 
 # A failure is enough: nothing is shrunk or explained, and a run can be repeated.
@@ -55,7 +55,8 @@ def pytest_runtestloop(session: pytest.Session) -> bool:
     while waiting or running:
         while waiting and len(running) < asked["jobs"]:
             mutant = waiting.pop()
-            tests = _in_order(session.items, reach, key_of(mutant), finders)
+            key = key_of(mutant)
+            tests = _in_order(session.items, reach.get(key, {}), finders.get(key, ()))
             running[_forked(lambda m=mutant, t=tests: _try(m, t, folder))] = mutant  # type: ignore[misc]  # bound here
         pid, status = os.wait()
         mutant = running.pop(pid)
@@ -70,30 +71,26 @@ def pytest_runtestloop(session: pytest.Session) -> bool:
 
 
 def _reached(items: Sequence[pytest.Item], folder: Path) -> Reach:
-    """Return which tests reach each function and how long each takes (seconds)."""
-    kept = folder / "reach.json"
-    if not kept.exists():
-        failed = folder / "reach.failed"
-        os.waitpid(_forked(lambda: _reach(items, kept, failed)), 0)
-        if not kept.exists():
+    """Return which tests reach each function and how long each takes (seconds); what is known is not run."""
+    kept, failed = folder / "reach.json", folder / "reach.failed"
+    reach: Reach = json.loads(kept.read_text()) if kept.exists() else {"": {}}
+    new = [item for item in items if item.nodeid not in reach[""]]
+    if new:
+        failed.unlink(missing_ok=True)
+        os.waitpid(_forked(lambda: _reach(new, reach, kept, failed)), 0)
+        if failed.exists():
             raise pytest.UsageError(f"the tests do not pass without a mutant: {failed.read_text()}")
-    reach: Reach = json.loads(kept.read_text())
+        reach = json.loads(kept.read_text())
     return reach
 
 
 def _in_order(
-    items: Sequence[pytest.Item], reach: Reach, key: str, finders: dict[str, list[str]]
+    items: Sequence[pytest.Item], times: dict[str, float], finders: Sequence[str]
 ) -> list[tuple[pytest.Item, float]]:
-    """Return the tests that reach a function with their times. A test not known yet might reach all."""
-    times, known = reach.get(key, {}), reach[""]
-    found = {name: place for place, name in enumerate(reversed(finders.get(key, ())))}
-    mine = [(item, times.get(item.nodeid, 0.0)) for item in items]
-    mine = [
-        (item, took)
-        for item, took in mine
-        if (item.nodeid in times or item.nodeid not in known) and took <= LONGEST
-    ]
-    return sorted(mine, key=lambda one: (-found.get(one[0].nodeid, -1), one[1]))
+    """Return the tests that reach a function with their times: the finders, the last first, then the quick."""
+    last = {name: place for place, name in enumerate(reversed(finders))}
+    mine = [(item, times[item.nodeid]) for item in items if times.get(item.nodeid, LONGEST) < LONGEST]
+    return sorted(mine, key=lambda one: (-last.get(one[0].nodeid, -1), one[1]))
 
 
 def _forked(work: Callable[[], int]) -> int:
@@ -111,17 +108,16 @@ def _try(mutant: Mutant, tests: Sequence[tuple[pytest.Item, float]], folder: Pat
         return UNREACHED
     resource.setrlimit(resource.RLIMIT_AS, (MOST_MEMORY, MOST_MEMORY))
     put_in_place(mutant)
-    signal.signal(signal.SIGALRM, lambda *_: os._exit(TIMEOUT))
+    signal.signal(signal.SIGPROF, lambda *_: os._exit(TIMEOUT))
     for item, took in tests:
-        signal.setitimer(signal.ITIMER_REAL, PATIENCE + STEP * took)
+        signal.setitimer(signal.ITIMER_PROF, PATIENCE + STEP * took)
         if _fails(item):
             (folder / f"{os.getpid()}.finder").write_text(item.nodeid)
             return KILLED
     return SURVIVED
 
 
-def _reach(items: Sequence[pytest.Item], into: Path, failed: Path) -> int:
-    reach: Reach = {"": {}}
+def _reach(items: Sequence[pytest.Item], reach: Reach, into: Path, failed: Path) -> int:
     for item in items:
         seen = cProfile.Profile(builtins=False)
         begun = time.perf_counter()
