@@ -87,7 +87,7 @@ def _reached(items: Sequence[pytest.Item], folder: Path) -> Reach:
 def _in_order(
     items: Sequence[pytest.Item], times: dict[str, float], finders: Sequence[str]
 ) -> list[tuple[pytest.Item, float]]:
-    """Return the tests that reach a function with their times: the finders, the last first, then the quick."""
+    """Return the tests that reach a function with their times: finders first, then the quick."""
     last = {name: place for place, name in enumerate(reversed(finders))}
     mine = [(item, times[item.nodeid]) for item in items if times.get(item.nodeid, LONGEST) < LONGEST]
     return sorted(mine, key=lambda one: (-last.get(one[0].nodeid, -1), one[1]))
