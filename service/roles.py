@@ -42,7 +42,11 @@ def make(superuser: str, *, database: str = DATABASE, passwords: Passwords | Non
 
 
 def make_roles(superuser: str, passwords: Passwords) -> None:
-    """Make the two roles, or take from them whatever they should not have."""
+    """Make the two roles, or take from them whatever they should not have.
+
+    No request has the database start helper processes for itself: pages are short, and what starting them
+    takes was most of the time of a page far into a million loads (`tests/bench/stored_loads.py`).
+    """
     with psycopg.connect(superuser, autocommit=True) as connection:
         for role, password in ((OWNER, passwords.owner), (SERVICE, passwords.service)):
             known = connection.execute("SELECT 1 FROM pg_roles WHERE rolname = %s", [role]).fetchone()
@@ -55,6 +59,9 @@ def make_roles(superuser: str, passwords: Passwords) -> None:
                 connection.execute(
                     sql.SQL("REVOKE {} FROM {}").format(sql.Identifier(group), sql.Identifier(role))
                 )
+        connection.execute(
+            sql.SQL("ALTER ROLE {} SET max_parallel_workers_per_gather = 0").format(sql.Identifier(SERVICE))
+        )
 
 
 def make_database(superuser: str, database: str) -> None:

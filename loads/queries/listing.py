@@ -5,6 +5,7 @@ from datetime import datetime
 from uuid import UUID
 
 from django.db.models import Q
+from django.db.models.fields.tuple_lookups import Tuple, TupleGreaterThan
 
 from loads.queries.current import Current, current_of, loads_present
 
@@ -53,7 +54,7 @@ def list_loads(operator: str, filters: Filters, *, after: Place | None = None, m
 
 def _wanted(operator: str, filters: Filters, after: Place | None) -> Q:
     wanted = Q(operator_id=operator)
-    if filters.since is not None:
+    if filters.since is not None and (after is None or after.departure < filters.since):
         wanted &= Q(departure__gte=filters.since)
     if filters.until is not None:
         wanted &= Q(departure__lt=filters.until)
@@ -69,7 +70,8 @@ def _wanted(operator: str, filters: Filters, after: Place | None) -> Q:
         # The operator of the load is that of its line here; named, so that one index answers.
         wanted &= Q(load__operator_id=operator, load__reference=filters.reference)
     if after is not None:
-        # The departure is named once for itself, so that an index is entered there.
-        wanted &= Q(departure__gte=after.departure)
-        wanted &= Q(departure__gt=after.departure) | Q(load_id__gt=after.load)
+        # Compared as one row, an index is entered there, and the database knows how much follows: said with
+        # OR, and beside a beginning, it took what follows for a handful and looked for it another way.
+        place = Tuple("departure", "load_id")
+        wanted &= Q(TupleGreaterThan(place, (after.departure, after.load)))
     return wanted

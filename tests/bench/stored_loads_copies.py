@@ -94,7 +94,8 @@ def copy_loads(people: Any, count: int) -> None:
         ((derived_by,),) = cursor.fetchall()
         cursor.execute(
             "INSERT INTO loads_present (load_id, operator_id, aircraft_id, departure, step_id, number, "
-            f"state, assessment_id, verdict, rejected) {derived_by} ON CONFLICT DO NOTHING"
+            f"state, assessment_id, verdict, rejected) SELECT * FROM ({derived_by}) one ORDER BY departure "
+            "ON CONFLICT DO NOTHING"  # in the order in which loads come in
         )
         for table, trigger in always:
             cursor.execute(f'ALTER TABLE {table} ENABLE ALWAYS TRIGGER "{trigger}"')

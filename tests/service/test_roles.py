@@ -28,6 +28,11 @@ def test_the_service_does_what_it_was_granted(cluster):
     as_service(cluster, "INSERT INTO trail VALUES ('one')")
 
 
+def test_no_request_starts_helpers_of_the_database(cluster):
+    with psycopg.connect(cluster.url(roles.SERVICE, roles.DATABASE)) as service:
+        assert service.execute("SHOW max_parallel_workers_per_gather").fetchone() == ("0",)
+
+
 @pytest.mark.parametrize(
     "words",
     [

@@ -217,6 +217,22 @@ def test_the_list_goes_by_departure_a_page_at_a_time(people) -> None:
     assert seen == ["09", "09", "10", "11"]
 
 
+def test_a_later_beginning_counts_for_the_place_a_list_goes_on_from_and_an_earlier_one_does_not(
+    people,
+) -> None:
+    flight = load_document(people)["flight"]
+    for hour in (9, 10, 11, 12):
+        submitted(people, flight=flight | {"departure": f"2026-12-01T{hour:02}:00:00-06:00"})
+    client = api(people.auditor)
+    on = answer(client.get("/api/v1/loads?limit=2"))["next"]
+
+    def hours(begin):
+        lines = answer(client.get(f"{on}&from=2026-12-01T{begin}:00:00-06:00".replace("limit=2", "limit=9")))
+        return [line["flight"]["departure"][11:13] for line in lines["loads"]]
+
+    assert (hours("08"), hours("12")) == (["11", "12"], ["12"])
+
+
 def test_the_list_is_filtered(people) -> None:
     ready_aircraft(people, "Q9-KTC")
     done = accepted(people)
