@@ -1,10 +1,10 @@
 """A pytest plugin that tries mutants: each in a process of its own, forked once everything is imported.
 
 First the tests run once, in a process of their own too, to see which of them reach which function and how
-long each takes; the few that take longest are left out. Then each mutant, put in the place of the code of its
-function, meets the tests that reach it, until one fails: first those that found other mutants of the same
-function, then the quick ones. Nothing is kept from one mutant to the next, for a value some cache remembers
-would hide a fault.
+long each takes; those that take longest are left out. Then each mutant, put in the place of the code of its
+function, meets the tests that reach it until one fails or they have taken enough: first those that found
+other mutants of the same function, then the quick ones. Nothing is kept from one mutant to the next, for a
+value some cache remembers would hide a fault.
 """
 
 import contextlib
@@ -26,7 +26,8 @@ from tests.mutation.placing import is_ours, key_of, put_in_place
 
 KILLED, SURVIVED, TIMEOUT, UNREACHED = 1, 0, 3, 5
 WORDS: Final = {KILLED: "killed", SURVIVED: "survived", TIMEOUT: "timeout", UNREACHED: "no test reaches it"}
-LONGEST: Final = 5.0  # seconds: a test that takes longer is left out
+LONGEST: Final = 2.0  # seconds: a test that takes longer is left out
+ENOUGH: Final = 15.0  # seconds of tests: a mutant that stands that long has survived
 PATIENCE, STEP = 5.0, 10.0  # seconds of processor time, and how much longer than usual a test may take
 MOST_MEMORY: Final = 4 << 30  # bytes: a fault may fill the memory, too
 
@@ -109,7 +110,11 @@ def _try(mutant: Mutant, tests: Sequence[tuple[pytest.Item, float]], folder: Pat
     resource.setrlimit(resource.RLIMIT_AS, (MOST_MEMORY, MOST_MEMORY))
     put_in_place(mutant)
     signal.signal(signal.SIGPROF, lambda *_: os._exit(TIMEOUT))
+    left = ENOUGH
     for item, took in tests:
+        left -= took
+        if left < 0:
+            break
         signal.setitimer(signal.ITIMER_PROF, PATIENCE + STEP * took)
         if _fails(item):
             (folder / f"{os.getpid()}.finder").write_text(item.nodeid)
