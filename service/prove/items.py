@@ -44,6 +44,15 @@ ITEMS: Final[tuple[Item, ...]] = (
     _measured(
         "edges", "100,000 points on edges and beside them: none judged wrong", "points_on_edges", "100000"
     ),
+    _tests(
+        "whole-path",
+        "hundreds of drawn flights sampled densely: no sample is worse than the worst point named",
+        "tests/pure/loads/test_path_against_sampling.py",
+        "tests/pure/loads/test_path_across.py",
+        "tests/pure/loads/test_path_across_events.py",
+        "tests/pure/loads/test_sequence_against_sampling.py",
+        "tests/pure/loads/cases/test_curtailment.py",
+    ),
     _measured(
         "documents",
         "500 manifests of one process: the same bytes, memory that does not grow",

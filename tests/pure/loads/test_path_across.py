@@ -8,7 +8,7 @@ and as moments.
 from dataclasses import replace
 from fractions import Fraction
 
-from hypothesis import HealthCheck, assume, event, given, settings
+from hypothesis import assume, event, given
 from hypothesis import strategies as st
 
 from fleet.envelope import NotAnEnvelope
@@ -18,6 +18,7 @@ from loads.balance.fuel import fuel_states
 from loads.balance.path import burn_path
 from loads.balance.path_across import courses_of, stays_across, worst_across
 from loads.balance.prepared import prepared
+from tests.drawing import drawn
 from tests.pure.loads.making import SOURCE, envelope, twin_empty
 from tests.pure.loads.naive_lateral import sampled_lateral
 from tests.pure.loads.naive_path import assert_as_sampled
@@ -54,7 +55,7 @@ def lateral_limits(draw, centre, spread):
         raise
 
 
-@settings(max_examples=150, deadline=None, suppress_health_check=list(HealthCheck))
+@drawn(60, 600)
 @given(flights(), st.data())
 def test_no_sample_is_worse_one_is_as_bad_and_outside_is_outside(flight, data):
     basis, plan = flight
@@ -78,7 +79,7 @@ def test_no_sample_is_worse_one_is_as_bad_and_outside_is_outside(flight, data):
     assert_as_sampled(check, runs)
 
 
-@settings(max_examples=60, deadline=None, suppress_health_check=list(HealthCheck))
+@drawn(40, 300)
 @given(flights(), st.data())
 def test_a_move_is_tried_by_the_same_decision(flight, data):
     """`stays_across`, by which a suggested move is tried, agrees with the worst point."""

@@ -8,11 +8,12 @@ from dataclasses import replace
 from fractions import Fraction
 from itertools import product
 
-from hypothesis import HealthCheck, assume, event, given, settings
+from hypothesis import assume, event, given
 from hypothesis import strategies as st
 
 from loads.balance.assess import assess
 from loads.balance.events import Event, Transfer
+from tests.drawing import drawn
 from tests.pure.loads.making import twin_empty
 from tests.pure.loads.naive_lateral import margin, place_of
 from tests.pure.loads.naive_path import PHASES_OF, assert_as_sampled, drawn_down
@@ -45,7 +46,7 @@ def sampled(declared, basis, limit):
     return runs
 
 
-@settings(max_examples=80, deadline=None, suppress_health_check=list(HealthCheck))
+@drawn(40, 400)
 @given(flights(), st.data())
 def test_no_sample_of_a_flight_with_events_is_worse_and_outside_is_outside(flight, data):
     basis, plan = flight
@@ -65,7 +66,7 @@ def test_no_sample_of_a_flight_with_events_is_worse_and_outside_is_outside(fligh
     assert_as_sampled(check, sampled(declared, basis, limit))
 
 
-@settings(max_examples=80, deadline=None, suppress_health_check=list(HealthCheck))
+@drawn(40, 400)
 @given(flights(), st.data())
 def test_a_transfer_is_judged_all_the_way_and_not_at_its_ends_alone(flight, data):
     basis, plan = flight

@@ -7,7 +7,7 @@ envelopes (notched from above and below, sloping, in both planes) are drawn at r
 from dataclasses import replace
 from fractions import Fraction
 
-from hypothesis import HealthCheck, assume, event, given, settings
+from hypothesis import assume, event, given
 from hypothesis import strategies as st
 
 from fleet.basis import BurnStage, Envelope, Tank, TankTable
@@ -18,6 +18,7 @@ from loads.balance.declared import read_load
 from loads.balance.fuel import fuel_states
 from loads.balance.path import burn_path
 from loads.balance.prepared import prepared
+from tests.drawing import drawn
 from tests.pure.loads.making import SOURCE, load, twin, twin_empty
 from tests.pure.loads.naive_path import assert_as_sampled, points_along, sampled
 
@@ -109,7 +110,7 @@ def _notch(draw, start, end, way):
     return [(xs[0], y), (xs[1], y + way * depth), (xs[2], y)]
 
 
-@settings(max_examples=120, deadline=None, suppress_health_check=list(HealthCheck))
+@drawn(50, 600)
 @given(flights(), st.data())
 def test_no_sample_is_worse_one_is_as_bad_and_outside_is_outside(flight, data):
     basis, plan = flight
@@ -133,7 +134,7 @@ def test_no_sample_is_worse_one_is_as_bad_and_outside_is_outside(flight, data):
         event(f"{axis} {found[0].outcome}")
 
 
-@settings(max_examples=120, deadline=None, suppress_health_check=list(HealthCheck))
+@drawn(50, 600)
 @given(flights())
 def test_every_sample_lies_exactly_on_the_path(flight):
     basis, plan = flight

@@ -8,7 +8,7 @@ gear and flaps.
 from dataclasses import replace
 from fractions import Fraction
 
-from hypothesis import HealthCheck, event, given, settings
+from hypothesis import event, given
 from hypothesis import strategies as st
 
 from fleet.positions import MovingPart, PartState
@@ -16,6 +16,7 @@ from loads.balance.assess import assess
 from loads.balance.declared import read_load
 from loads.balance.events import Event, Leaving, Moving, Transfer
 from loads.balance.over_flight import as_seat
+from tests.drawing import drawn
 from tests.pure.loads.making import SOURCE, load, twin, twin_empty
 from tests.pure.loads.naive_path import assert_as_sampled, drawn_down
 from tests.pure.loads.naive_sequence import points_of_flight, poured, sampled_flight
@@ -135,7 +136,7 @@ def sequenced(draw):
     return basis, replace(DECLARED, fuel=plan, sequence=draw(sequences(basis, plan)))
 
 
-@settings(max_examples=80, deadline=None, suppress_health_check=list(HealthCheck))
+@drawn(35, 400)
 @given(sequenced(), st.data())
 def test_no_sample_is_worse_one_is_as_bad_and_outside_is_outside(flight, data):
     basis, declared = flight
@@ -156,7 +157,7 @@ def test_no_sample_is_worse_one_is_as_bad_and_outside_is_outside(flight, data):
         event(f"{axis} {found[0].outcome}, {len(declared.sequence)} events, {found[0].margin_text[-25:]}")
 
 
-@settings(max_examples=80, deadline=None, suppress_health_check=list(HealthCheck))
+@drawn(35, 400)
 @given(sequenced())
 def test_landing_and_the_lines_add_up_to_the_plain_sum_of_all_that_is_left(flight):
     basis, declared = flight
@@ -178,7 +179,7 @@ def test_landing_and_the_lines_add_up_to_the_plain_sum_of_all_that_is_left(fligh
             assert (weight, moment, across) == (state.weight, state.moment, state.lateral_moment)
 
 
-@settings(max_examples=60, deadline=None, suppress_health_check=list(HealthCheck))
+@drawn(30, 300)
 @given(sequenced())
 def test_the_greatest_and_the_least_weight_in_flight_are_those_of_all_samples(flight):
     basis, declared = flight

@@ -9,13 +9,14 @@ from copy import deepcopy
 from dataclasses import replace
 from fractions import Fraction
 
-from hypothesis import HealthCheck, given, settings
+from hypothesis import given
 from hypothesis import strategies as st
 
 from fleet.curtailment import Amounts, Curtailment, Inset
 from fleet.sourced import Source
 from loads.balance.assess import assess
 from loads.balance.remedies.finding import find_remedies
+from tests.drawing import drawn
 from tests.pure.loads.making import envelope, load, result_of, twin, twin_empty
 from tests.pure.loads.naive_path import points_along
 from tests.pure.loads.remedies.cabins import asked
@@ -253,11 +254,11 @@ def rooms_by_hand(declared, basis, axis, samples):
         moment = point.moment if axis == "longitudinal" else point.lateral_moment
         if moment is None:
             continue
-        for drawn in basis.envelopes:
+        for outline in basis.envelopes:
             for phase in PHASES_OF[point.leg]:
-                if drawn.axis != axis or phase not in drawn.phases:
+                if outline.axis != axis or phase not in outline.phases:
                     continue
-                if any(y == point.weight for _, y in drawn.points):
+                if any(y == point.weight for _, y in outline.points):
                     continue
                 low = high = F(0)
                 for each in basis.curtailments:
@@ -266,13 +267,13 @@ def rooms_by_hand(declared, basis, axis, samples):
                             one, two = getattr(row, low_side), getattr(row, high_side)
                             low += one.arm + one.moment / point.weight
                             high += two.arm + two.moment / point.weight
-                ends = cut_by_hand(drawn.points, drawn.plane, point.weight)
+                ends = cut_by_hand(outline.points, outline.plane, point.weight)
                 left = [(start + low, end - high) for start, end in ends if start + low <= end - high]
                 arm = moment / point.weight
                 yield max((min(arm - start, end - arm) for start, end in left), default=None)
 
 
-@settings(max_examples=150, deadline=None, suppress_health_check=list(HealthCheck))
+@drawn(50, 600)
 @given(flights(), st.data())
 def test_no_sample_of_the_flight_is_worse_than_the_worst_point_named(flight, data):
     basis, plan = flight
