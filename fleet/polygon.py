@@ -82,6 +82,15 @@ def demand_polygon(points: Sequence[Point]) -> None:
         raise _crossing(explain_validity(polygon).split("[")[0].lower())
 
 
+def overlap(one: Sequence[Point], other: Sequence[Point]) -> bool:
+    """Return whether two polygons have an area in common; as near as doubles tell, so for a slip only."""
+    return bool(_doubles(one).intersection(_doubles(other)).area > 0)
+
+
+def _doubles(points: Sequence[Point]) -> Polygon:
+    return Polygon([(float(x), float(y)) for x, y in points])
+
+
 def _crossing(why: str) -> NotAnEnvelope:
     return NotAnEnvelope(
         "envelope-crosses-itself",

@@ -16,6 +16,7 @@ from typing import Final, Literal, TypeVar
 from fleet.basis import Basis, Configuration, Envelope, Limits, Place, Seat, Zone
 from fleet.conversion import in_unit
 from fleet.envelope import NotAnEnvelope
+from fleet.polygon import Point
 from fleet.quantities import LENGTHS, MOMENT_OF, Quantity, Unit
 from fleet.sourced import Limit, Source
 from fleet.stations import Conditional
@@ -223,23 +224,27 @@ def _closed(found: Basis, _before: Basis, paper: Paper, effect: Effect) -> Basis
 def _envelope(found: Basis, before: Basis, paper: Paper, effect: Effect) -> Basis:
     name = effect.names[0]
     own = next(one for one in before.envelopes if one.id == name)
-    if effect.units is None:
-        raise TypeError("the reader gives an envelope its units")
-    unit = before.length_unit if own.plane == "arm" else MOMENT_OF[before.weight_unit, before.length_unit]
-    points = tuple(
-        (
-            in_unit(Quantity(across, effect.units[0]), unit),
-            in_unit(Quantity(up, effect.units[1]), before.weight_unit),
-        )
-        for across, up in effect.points
-    )
-    made = replace(own, points=points, source=_source(paper))
+    made = replace(own, points=corners_of(effect, own, before), source=_source(paper))
     if paper.kind == "restriction":
         return replace(found, envelopes=(*found.envelopes, replace(made, id=f"{name} {paper.number}")))
     kept: list[Envelope] = [made if one == own else one for one in found.envelopes]
     if own not in found.envelopes:  # two permits replace the same envelope: both hold
         kept.append(replace(made, id=f"{name} {paper.number}"))
     return replace(found, envelopes=tuple(kept))
+
+
+def corners_of(effect: Effect, own: Envelope, basis: Basis) -> tuple[Point, ...]:
+    """Return the corners an effect gives for an envelope of the basis, exactly, in the units of the basis."""
+    if effect.units is None:
+        raise TypeError("the reader gives an envelope its units")
+    unit = basis.length_unit if own.plane == "arm" else MOMENT_OF[basis.weight_unit, basis.length_unit]
+    return tuple(
+        (
+            in_unit(Quantity(across, effect.units[0]), unit),
+            in_unit(Quantity(up, effect.units[1]), basis.weight_unit),
+        )
+        for across, up in effect.points
+    )
 
 
 _PUT: Final[Mapping[str, Callable[[Basis, Basis, Paper, Effect], Basis]]] = {

@@ -14,7 +14,7 @@ from fleet.events import PROVISIONS_CHANGED
 from fleet.models import Aircraft, Provision, ProvisionApproval, ProvisionEnd
 from fleet.queries.figures import basis_of
 from fleet.queries.in_force import basis_in_force
-from fleet.restriction_reading import Kind, read_paper
+from fleet.restriction_reading import Kind, read_entered, read_paper
 from fleet.restrictions import Paper
 from records import outbox
 from records.act import Entry
@@ -62,7 +62,7 @@ def paper_for(aircraft: Aircraft, document: JSON, kind: Kind, *, known: datetime
     """
     paper = read_paper(document, kind)
     basis = basis_in_force(aircraft, plausible(paper.since, "/true_from"), known)
-    return paper if basis is None else read_paper(document, kind, basis_of(basis))
+    return read_entered(document, kind, None if basis is None else basis_of(basis))
 
 
 def enter(entry: Entry, actor: Actor, laid: Laid, aircraft: Aircraft | None = None) -> Provision:

@@ -132,7 +132,9 @@ def fields(value: Any, pointer: str = "") -> Iterator[tuple[str, Any]]:
             yield f"{pointer}/{key}", inner
             yield from fields(inner, f"{pointer}/{key}")
     elif isinstance(value, list):
-        for place, inner in enumerate(value if pointer.endswith(("/lines", "/weights")) else value[:1]):
+        for place, inner in enumerate(value):
+            if place and not isinstance(inner, dict):
+                break
             yield f"{pointer}/{place}", inner
             yield from fields(inner, f"{pointer}/{place}")
 

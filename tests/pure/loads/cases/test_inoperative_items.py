@@ -7,7 +7,7 @@ from fractions import Fraction
 
 import pytest
 
-from fleet.restriction_reading import read_paper
+from fleet.restriction_reading import read_entered
 from loads.balance.declared import read_load
 from loads.balance.trapped import with_trapped
 from records.refusal import Invalid
@@ -138,7 +138,7 @@ def test_what_the_basis_does_not_have_leaves_the_load_unresolved_and_is_refused_
 
     assert under.unmet == ("restriction DD-14 names ROW9-L, which the loading basis does not have",)
     with pytest.raises(Invalid) as refused:
-        read_paper(restriction_document(effect), "restriction", twin())
+        read_entered(restriction_document(effect), "restriction", twin())
     assert [(fault.pointer, fault.code) for fault in refused.value.faults] == [
         ("/effects/0/ids", "unknown-id")
     ]
