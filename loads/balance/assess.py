@@ -32,7 +32,7 @@ from loads.balance.exact import minus, plus, quotient
 from loads.balance.flight_weights import FlightWeights, flight_weights
 from loads.balance.flown import (
     Flown,
-    at_ends_of_rails,
+    along_rails,
     fly,
     path_of,
     states_aboard,
@@ -44,7 +44,7 @@ from loads.balance.moves import Flight, cg_advice
 from loads.balance.path_events import parts_set
 from loads.balance.path_worst import Burn, burn_of
 from loads.balance.prepared import Prepared, prepared
-from loads.balance.rails import RailEnd, at_rail_end, parts_lie_apart, rail_ends, worse_of
+from loads.balance.rails import RailEnd, at_rail_end, between_ends, parts_lie_apart, rail_ends, worse_of
 from loads.balance.report import Assessed, report, report_without_basis
 from loads.balance.result import Check, Result, State, verdict_of
 from loads.balance.sections import dry_at_phases, events_before
@@ -180,7 +180,10 @@ def _checks(
         told = _centre_checks((states, burn), ready, advice)
         if ends:
             at_ends = [(end, _centre_checks(flight, ready, advice)) for end, flight in ends]
-            told = worse_of(told, at_ends, apart=parts_lie_apart(flights, ready))
+            inside = between_ends([end for end, _ in ends], flights, ready)
+            there = [(end, _at_rail_end(declared, (states, burn), end, empty, ready)) for end in inside]
+            between = [(end, _centre_checks(flight, ready, advice)) for end, flight in there]
+            told = worse_of(told, at_ends, between, apart=parts_lie_apart(flights, ready))
         found += told
         found.append(landing_fuel_check(declared.fuel, states["landing"], ready))
     if declared.sequence:
@@ -201,7 +204,7 @@ def _at_rail_end(
     """Return the phases and the path with all open seats at one end; people may leave such a seat."""
     if not declared.sequence:
         return at_rail_end(flight[0], flight[1], end, ready)
-    moved = at_ends_of_rails(declared, "forward" if end.words == "forward" else "aft")
+    moved = along_rails(declared, end.share)
     flown = fly(moved, empty, ready)
     states, _ = _states_of(moved, sums_without_fuel(moved, empty), flown, ready)
     return states, burn_of(path_of(moved, flown, states, ready), ready)

@@ -57,12 +57,17 @@ def path_of(declared: Declared, flown: Flown, states: Mapping[Phase, State], rea
 
 def at_ends_of_rails(declared: Declared, end: Literal["forward", "aft"]) -> Declared:
     """Return the load with every seat whose setting is open at one end of its rail."""
+    return along_rails(declared, NOTHING if end == "forward" else Fraction(1))
+
+
+def along_rails(declared: Declared, share: Fraction) -> Declared:
+    """Return the load with every seat whose setting is open at a share of its rail: 0 forward, 1 aft."""
 
     def moved(person: Person) -> Person:
         rail = person.seat.rail
         if rail is None:
             return person
-        arm = rail.forward if end == "forward" else rail.aft
+        arm = rail.forward + share * (rail.aft - rail.forward)
         return replace(person, seat=replace(person.seat, arm=arm))
 
     def came(event: Event) -> Event:

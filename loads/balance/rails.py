@@ -2,10 +2,14 @@
 
 All such seats forward, and all of them aft, are the least and the greatest moment there can be; both are
 added to every phase and to the whole path, and of each check the worse one counts and says which end it was.
+
+A lateral limit against the longitudinal CG may be kept at both ends and broken between them. Every place
+between at which that may turn is known (`loads.balance.touching`), so one look between each two proves it.
 """
 
-from collections.abc import Mapping, Sequence
+from collections.abc import Iterator, Mapping, Sequence
 from fractions import Fraction
+from itertools import pairwise
 from typing import NamedTuple
 
 from fleet.basis import Phase
@@ -15,18 +19,28 @@ from loads.balance.moves import Flight
 from loads.balance.over_flight import coming_people
 from loads.balance.path import Knot
 from loads.balance.path_worst import Burn, bounds_on, burn_of, shifted
+from loads.balance.polynomial import Root
 from loads.balance.prepared import Prepared
 from loads.balance.result import Check, State
+from loads.balance.touching import each_once
+from loads.balance.varied_flights import Fit, Flights, Sample
 
 BY_MOMENT = ("cg.", "path.longitudinal", "path.zero-fuel", "lateral-by-cg", "path.lateral-by-cg")
 ORDER = {"fail": 0, "unresolved": 1, "pass": 2, "advisory": 3}
 
 
+BY_CG = ("lateral-by-cg", "path.lateral-by-cg")
+STATE_THEM = "State where the seats on rails stand."
+
+
 class RailEnd(NamedTuple):
-    """All seats without a setting at one end: in words, and what that adds to the moment."""
+    """All seats without a setting at one end: in words, what that adds to the moment, and the share of the
+    way aft.
+    """
 
     words: str
     along: Fraction
+    share: Fraction
 
 
 def rail_ends(declared: Declared) -> tuple[RailEnd, ...]:
@@ -38,10 +52,25 @@ def rail_ends(declared: Declared) -> tuple[RailEnd, ...]:
     ]
     if not ends:
         return ()
-    return (
-        RailEnd("forward", added(w * (rail.forward - arm) for w, arm, rail in ends if rail is not None)),
-        RailEnd("aft", added(w * (rail.aft - arm) for w, arm, rail in ends if rail is not None)),
-    )
+    fore = added(w * (rail.forward - arm) for w, arm, rail in ends if rail is not None)
+    rear = added(w * (rail.aft - arm) for w, arm, rail in ends if rail is not None)
+    return RailEnd("forward", fore, Fraction(0)), RailEnd("aft", rear, Fraction(1))
+
+
+def between_ends(ends: Sequence[RailEnd], flights: Sequence[Flight], ready: Prepared) -> Iterator[RailEnd]:
+    """Yield positions between both ends, one between each two at which a lateral limit against the
+    longitudinal CG may turn from kept to broken; none where the ends alone decide.
+    """
+    if not ready.basis.lateral_by_cg:
+        return
+    fore, rear = ends
+    samples = [Sample(tuple(states.values()), burn.path) for states, burn in flights]
+    found = Flights(ready, (Fraction(1),), Fit((fore.share, rear.share)), samples)
+    whole = fore.share, rear.share
+    turns = each_once([*(Root(end, end) for end in whole), *found.touches_across(whole)])
+    for turn, following in pairwise(turns):
+        share = (turn.high + following.low) / 2
+        yield RailEnd("between forward and aft", fore.along + share * (rear.along - fore.along), share)
 
 
 def at_rail_end(states: Mapping[Phase, State], burn: Burn, end: RailEnd, ready: Prepared) -> Flight:
@@ -76,9 +105,14 @@ def _part(parts: Sequence[tuple[Fraction, Fraction]], knot: Knot) -> int | None:
 
 
 def worse_of(
-    told: list[Check], at_ends: list[tuple[RailEnd, list[Check]]], *, apart: bool = False
+    told: list[Check],
+    at_ends: list[tuple[RailEnd, list[Check]]],
+    between: Sequence[tuple[RailEnd, list[Check]]] = (),
+    *,
+    apart: bool = False,
 ) -> list[Check]:
-    """Return the checks with each that depends on the moment replaced by the worse of both ends.
+    """Return the checks with each that depends on the moment replaced by the worse of both ends, or what is
+    broken `between` them where both ends keep it.
 
     Inside one part of an envelope at one end and inside another at the other, the way between leads outside;
     `apart` says that this is so somewhere along the burn.
@@ -90,11 +124,13 @@ def worse_of(
             found.append(check)
             continue
         end, worse = min(ends, key=lambda each: _badness(each[1]))
+        if worse.outcome == "pass" and check.code.startswith(BY_CG):
+            inside = [(each, checks[number]._replace(what_next=STATE_THEM)) for each, checks in between]
+            end, worse = min([(end, worse), *inside], key=lambda each: ORDER[each[1].outcome])
         parted = apart if check.code == "path.longitudinal" else check.code.startswith("cg.") and _apart(ends)
         if worse.outcome == "pass" and parted:
-            fix = "State where the seats on rails stand."
             text = "forward and aft lie in different parts of the envelope"
-            worse = worse._replace(outcome="unresolved", what_next=fix, margin_text=text)
+            worse = worse._replace(outcome="unresolved", what_next=STATE_THEM, margin_text=text)
         words = f"{worse.margin_text}, seats on rails {end.words}"
         found.append(worse._replace(margin_text=words))
     return found

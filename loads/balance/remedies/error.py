@@ -12,6 +12,7 @@ from loads.balance.aboard import Declared, Person
 from loads.balance.checks_places import Held, held_by
 from loads.balance.remedies.question import TENTH, Question
 from loads.balance.remedies.reaching import MOST_TENTHS, Reach, bound_of, reached
+from loads.balance.remedies.varying import Change
 from loads.balance.result import Json
 from loads.balance.rounding import WEIGHT_PLACES, printed
 
@@ -39,18 +40,18 @@ def _people(question: Question) -> Iterator[Json]:
     if not guessed:
         return
 
-    def shared(count: int) -> Declared:
+    def shared(count: Fraction) -> Declared:
         return _heavier(declared, lambda weight: weight + weight * count / PER_MILLE)
 
-    def each(count: int) -> Declared:
+    def each(count: Fraction) -> Declared:
         return _heavier(declared, lambda weight: weight + count * TENTH)
 
     _, heavier = question.weight_range()
     most = MOST_TENTHS if heavier is None else floor(heavier / len(guessed) / TENTH)
     whole = sum((one.weight or ZERO for one in guessed), ZERO)
     share = MOST_PER_MILLE if heavier is None else min(MOST_PER_MILLE, floor(heavier / whole * PER_MILLE))
-    one = reached(question, each, min(most, MOST_EACH))
-    found = reached(question, shared, share)
+    one = reached(question, Change(each), min(most, MOST_EACH))
+    found = reached(question, Change(shared), share)
     if not (one.sought and found.sought):
         return
     yield {
@@ -71,7 +72,7 @@ def _compartments(question: Question, held: Held) -> Iterator[Json]:
         if not weight:
             continue
 
-        def changed(count: int, place: str = place.id) -> Declared:
+        def changed(count: Fraction, place: str = place.id) -> Declared:
             items = [
                 replace(one, weight=one.weight + one.weight * count / PER_MILLE)
                 if one.place.id == place and not one.removed and one.weight is not None
@@ -84,7 +85,7 @@ def _compartments(question: Question, held: Held) -> Iterator[Json]:
         if place.maximum is not None and place.maximum.value is not None:
             room = place.maximum.value - weight
         bound = min(MOST_PER_MILLE, floor(bound_of(question, room) * TENTH / weight * PER_MILLE))
-        found = reached(question, changed, bound)
+        found = reached(question, Change(changed), bound)
         if not found.sought:
             return
         more = weight * found.count / PER_MILLE
@@ -103,11 +104,12 @@ def _density(question: Question) -> Iterator[Json]:
     declared = question.declared
     plan = declared.fuel
 
-    def changed(count: int) -> Declared:
+    def changed(count: Fraction) -> Declared:
         heavier = plan.density + plan.density * count / PER_MILLE
         return replace(declared, fuel=replace(plan, density=heavier))
 
-    found = reached(question, changed, MOST_PER_MILLE)
+    change = Change(changed, over=(Fraction(1), Fraction(1, PER_MILLE)), refuels=True)
+    found = reached(question, change, MOST_PER_MILLE)
     if not found.sought:
         return
     yield {

@@ -12,6 +12,7 @@ from loads.balance.remedies.question import TENTH, Question
 from loads.balance.remedies.reaching import Reach, bound_of, reached
 from loads.balance.remedies.steps import Refuel, taken
 from loads.balance.remedies.suiting import free_seats
+from loads.balance.remedies.varying import Change, table_points
 from loads.balance.result import Json
 from loads.balance.rounding import VOLUME_PLACES, WEIGHT_PLACES, printed
 
@@ -31,11 +32,11 @@ def _in_places(question: Question, held: Held) -> Iterator[Json]:
             continue
         room = None if place.maximum.value is None else place.maximum.value - (held.get(place.id) or ZERO)
 
-        def changed(count: int, place: Place = place) -> Declared:
+        def changed(count: Fraction, place: Place = place) -> Declared:
             line = Item("cargo", "more", place, count * TENTH, "weighed", removed=False, pointer="")
             return replace(declared, items=(*declared.items, line))
 
-        found = reached(question, changed, bound_of(question, room))
+        found = reached(question, Change(changed), bound_of(question, room))
         if not found.sought:
             return
         yield _more(question, "place", place.id, place.name, found)
@@ -51,7 +52,7 @@ def _in_seats(question: Question, held: Held) -> Iterator[Json]:
         if seat.id in held or seat.serves == "crew" or seat.attendant or seat.maximum is None:
             continue
 
-        def changed(count: int, seat: Seat = seat) -> Declared:
+        def changed(count: Fraction, seat: Seat = seat) -> Declared:
             person = Person("", "passenger", None, None, "adult", seat, count * TENTH, "declared", None, "")
             return replace(
                 declared,
@@ -59,7 +60,7 @@ def _in_seats(question: Question, held: Held) -> Iterator[Json]:
                 persons_on_board=declared.persons_on_board + 1,
             )
 
-        found = reached(question, changed, bound_of(question, seat.maximum.value))
+        found = reached(question, Change(changed), bound_of(question, seat.maximum.value))
         if not found.sought:
             return  # of a row whose other seat was not asked the least is not known
         row = f"row {seat.row}" if seat.row is not None else seat.name
@@ -76,10 +77,11 @@ def _in_tanks(question: Question) -> Iterator[Json]:
         room = held.tank.capacity - held.usable - held.trapped
         by_weight = room if heavier is None else min(room, heavier / declared.fuel.density)
 
-        def changed(count: int, tank: Tank = held.tank) -> Declared:
+        def changed(count: Fraction, tank: Tank = held.tank) -> Declared:
             return taken(declared, [Refuel(tank, count * TENTH)])
 
-        found = reached(question, changed, floor(by_weight / TENTH))
+        marks = table_points(held, TENTH)
+        found = reached(question, Change(changed, refuels=True, marks=marks), floor(by_weight / TENTH))
         if not found.sought:
             return
         amount = printed(found.count * TENTH, VOLUME_PLACES)

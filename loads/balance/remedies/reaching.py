@@ -1,30 +1,34 @@
-"""How far a load can change before the first limit breaks: the greatest whole last digit that still holds.
+"""How far a load can change before the first limit breaks: the greatest whole last digit below that, exact.
 
-It was assessed and found within, and the next one was not, so the figure is exact and rounded down. It is
-looked for between nothing and a bound that some limit sets in any case: first at four points up to the bound,
-which is all there is to do where nothing else binds; otherwise by halving. An envelope that is left and
-entered again between two points looked at could be passed over.
+Some limits can only break once as a load grows: weights, what a seat, a place, a zone or a tank holds. The
+greatest amount that keeps them is found by halving. Up to there the centre of gravity, the trim and the
+balance of the fuel may break and be kept again; every amount at which they may turn is known
+(`remedies.varying`), and nothing turns between two of them: so one look between each two proves all of it.
 """
 
-from collections.abc import Callable
+from collections.abc import Sequence
 from dataclasses import dataclass
 from fractions import Fraction
+from itertools import pairwise
 from math import floor
 
-from fleet.tanks import OutsideTable
 from loads.balance.aboard import Declared
+from loads.balance.polynomial import Root
 from loads.balance.remedies.question import TENTH, Question, broken
+from loads.balance.remedies.varying import Change, Varying
 from loads.balance.result import Check
 
-Changed = Callable[[int], Declared]  # the load with so many last digits more
+ZERO = Fraction(0)
 MOST_TENTHS = 1_000_000
+# Checks that may be broken and kept again as a load grows. What a table does not know is looked at with both.
+COMES_BACK = ("cg.", "lateral.", "lateral-by-cg.", "path.", "trim.", "fuel-balance.")
 
 
 @dataclass(frozen=True, slots=True)
 class Reach:
-    """So many last digits more still hold; `stop` is the check that breaks with the next one (None: none
-    does up to the greatest amount asked). `sought` is False where the time was up before anything was asked:
-    such a figure is not told.
+    """So many last digits more still hold; `stop` is the check that breaks first beyond (None: none does up
+    to the greatest amount asked). `sought` is False where the time was up before all was asked: such a figure
+    is not told.
     """
 
     count: int
@@ -37,48 +41,26 @@ class Reach:
         return None if self.stop is None else self.stop.title
 
 
-def reached(question: Question, changed: Changed, most: int) -> Reach:
-    """Return the greatest count up to `most` that is found to hold with every count looked at below it."""
+NOT_SOUGHT = Reach(0, None, sought=False)
+
+
+def reached(question: Question, change: Change, most: int) -> Reach:
+    """Return the greatest count up to `most` up to which everything holds, every amount between counts too.
+
+    `change` makes the load with so many last digits more.
+    """
     if not question.left():
-        return Reach(0, None, sought=False)
+        return NOT_SOUGHT
     if most < 0:
         return Reach(0, None)
-    low, high = 0, most + 1
-    for count in sorted({most // 4, most // 2, 3 * most // 4, most}):
-        if count > low:
-            if _stops(question, changed, count) is not None:
-                high = count
-                break
-            low = count
-    while high - low > 1 and question.left():
-        middle = (low + high) // 2
-        if _stops(question, changed, middle) is None:
-            low = middle
-        else:
-            high = middle
-    return Reach(low, _stops(question, changed, low + 1))
-
-
-def _stops(question: Question, changed: Changed, count: int) -> Check | None:
-    """Return the check that breaks with so many more, the worst of a kind first; None when none does."""
-    if not count:
-        return None
-    more = changed(count)
-    try:
-        stops = broken(question.assessed(more))
-    except OutsideTable:
-        return _overfilled(question, more)
-    return next(iter(stops), None)
-
-
-def _overfilled(question: Question, more: Declared) -> Check:
-    """Return the check of the tank that would be asked to take more on the flight than its table knows.
-
-    Raises StopIteration where no tank holds other fuel than before: then the load itself could not be flown.
-    """
-    usable = {held.tank.id: held.usable for held in question.declared.fuel.tanks}
-    fuller = {f"tank.{held.tank.id}" for held in more.fuel.tanks if held.usable != usable[held.tank.id]}
-    return next(check for check in question.result.checks if check.code in fuller)
+    varying = Varying(question, change)
+    last = _last_that_keeps(varying, most)
+    if not question.left():
+        return NOT_SOUGHT
+    left = _first_left(varying, last)
+    if not question.left():
+        return NOT_SOUGHT
+    return left or Reach(last, next(iter(_stops(varying, Fraction(last + 1))), None))
 
 
 def bound_of(question: Question, room: Fraction | None) -> int:
@@ -86,3 +68,57 @@ def bound_of(question: Question, room: Fraction | None) -> int:
     _, heavier = question.weight_range()
     known = [each for each in (room, heavier) if each is not None]
     return floor(min(known) / TENTH) if known else MOST_TENTHS
+
+
+def _last_that_keeps(varying: Varying, most: int) -> int:
+    """Return the greatest count that breaks no limit of those that break once and for all."""
+    low, high = 0, most + 1
+    middle = most
+    while high - low > 1 and varying.question.left():
+        if any(not check.code.startswith(COMES_BACK) for check in _stops(varying, Fraction(middle))):
+            high = middle
+        else:
+            low = middle
+        middle = (low + high) // 2
+    return low
+
+
+def _first_left(varying: Varying, last: int) -> Reach | None:
+    """Return how far it is to the first turn beyond which something breaks; None when nothing does."""
+    end = Root(Fraction(last), Fraction(last))
+    turns = [Root(ZERO, ZERO), *varying.turns(ZERO, end.low), end]
+    for turn, following in pairwise(turns):
+        if turn.high < following.low:
+            stops = _stops(varying, (turn.high + following.low) / 2)
+            if stops:
+                return Reach(_whole_below(varying, turn), stops[0])
+    return None
+
+
+def _whole_below(varying: Varying, turn: Root) -> int:
+    """Return the greatest whole count not beyond a turn; where floats of it could not tell, that count is
+    asked.
+    """
+    low, high = floor(turn.low), floor(turn.high)
+    if low != high and not _stops(varying, Fraction(high)):
+        return high
+    return low
+
+
+def _stops(varying: Varying, count: Fraction) -> Sequence[Check]:
+    """Return the checks that break with so many more; () when none does."""
+    if not count:
+        return ()
+    result = varying.result(count)
+    return (_overfilled(varying, varying.change.at(count)),) if result is None else broken(result)
+
+
+def _overfilled(varying: Varying, more: Declared) -> Check:
+    """Return the check of the tank that would be asked to take more on the flight than its table knows.
+
+    Raises StopIteration where no tank holds other fuel than before: then the load itself could not be flown.
+    """
+    question = varying.question
+    usable = {held.tank.id: held.usable for held in question.declared.fuel.tanks}
+    fuller = {f"tank.{held.tank.id}" for held in more.fuel.tanks if held.usable != usable[held.tank.id]}
+    return next(check for check in question.result.checks if check.code in fuller)

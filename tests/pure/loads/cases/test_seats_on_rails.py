@@ -7,10 +7,11 @@ from dataclasses import replace
 from typing import Any
 
 import pytest
-from hypothesis import given
+from hypothesis import given, settings
 from hypothesis import strategies as st
 
 from fleet.basis import Basis, Seat
+from fleet.lateral import LateralByCg
 from fleet.stations import Rail, Setting
 from loads.balance.declared import read_load
 from loads.balance.result import Result
@@ -227,6 +228,71 @@ def test_no_position_between_the_ends_is_worse_than_the_worse_end(
     worst, somewhere = cg(result_of(document, railed(basis))), cg(result_of(document, bolted))
 
     assert all(worst[code][2] <= somewhere[code][2] for code in worst)
+
+
+SHORT = (("trip", 60), ("minimum_at_landing", 690))  # so that the CG stays where it is
+
+
+def notched_by_cg(tip: Any, half: Any, middle: Any) -> Basis:
+    """The twin with a lateral limit of 3 in either way, but for a notch down to a tip."""
+    corners = [
+        (100, -3),
+        (140, -3),
+        (140, 3),
+        (middle + half, 3),
+        (middle, tip),
+        (middle - half, 3),
+        (100, 3),
+    ]
+    exact = tuple((F(x), F(y)) for x, y in corners)
+    limit = LateralByCg("NOTCH", ("ramp", "take-off", "landing"), "arm", exact, SOURCE)
+    return replace(
+        twin(),
+        envelopes=(envelope((100, 4000), (100, 7000), (140, 7000), (140, 4000)),),
+        lateral_by_cg=(limit,),
+    )
+
+
+@pytest.mark.parametrize(("tip", "outcome"), [("-1", "fail"), ("2.9", "pass")])
+def test_a_lateral_limit_kept_at_both_ends_of_the_rail_and_broken_between_is_found(
+    tip: str, outcome: str
+) -> None:
+    # 2 x 200 lb x 12 in of rail are 4800 lb in, so 0.8 in of arm at some 5900 lb. The notch is 0.02 in wide
+    # either way and lies half way between both ends at take-off; the limit holds for take-off alone.
+    document = two()
+    document["fuel"] |= {name: {"value": weight, "unit": "lb"} for name, weight in SHORT}
+    take_off = result_of(document).state("take-off")
+    basis = notched_by_cg(tip, F("0.02"), take_off.arm)
+    basis = replace(basis, lateral_by_cg=(replace(basis.lateral_by_cg[0], phases=("take-off",)),))
+    for arm in (118, 130):
+        at_end = result_of(document, fixed(arm, basis))
+        assert all(one.outcome != "fail" for one in at_end.checks if "lateral-by-cg" in one.code), (
+            "at the ends"
+        )
+    half_way = result_of(document, fixed(124, basis))
+    assert half_way.check("lateral-by-cg.take-off").outcome == outcome
+
+    found = result_of(document, railed(basis))
+
+    assert found.check("lateral-by-cg.take-off").outcome == outcome
+    assert found.check("path.lateral-by-cg").outcome == outcome
+    if outcome == "fail":
+        check = found.check("lateral-by-cg.take-off")
+        assert check.margin_text.endswith("seats on rails between forward and aft")
+        assert check.what_next == "State where the seats on rails stand."
+
+
+@settings(max_examples=25, deadline=None)
+@given(st.integers(-30, 30), st.integers(1, 12), st.integers(-29, 20), st.integers(0, 24))
+def test_no_place_between_the_ends_is_outside_a_lateral_limit_unless_it_is_told(
+    shift: int, half: int, tip: int, place: int
+) -> None:
+    arm = result_of(two()).state("take-off").arm + F(shift, 60)
+    basis = notched_by_cg(F(tip, 10), F(half, 50), arm)
+    open_, stated_ = result_of(two(), railed(basis)), result_of(two(), fixed(F(118) + F(place, 2), basis))
+
+    broken = {one.code for one in stated_.checks if "lateral-by-cg" in one.code and one.outcome == "fail"}
+    assert broken <= {one.code for one in open_.checks if one.outcome == "fail"}
 
 
 @pytest.mark.parametrize(

@@ -11,6 +11,7 @@ from loads.balance.remedies.more import how_much_more
 from loads.balance.remedies.question import TENTH, Question
 from loads.balance.remedies.reaching import reached
 from loads.balance.remedies.steps import Ballast, taken
+from loads.balance.remedies.varying import Change
 from tests.pure.loads.making import F, limit
 from tests.pure.loads.remedies.brute import small
 from tests.pure.loads.remedies.cabins import asked, empty_of, nineteen, seated
@@ -102,14 +103,14 @@ def test_a_count_is_the_last_that_holds_before_the_first_that_does_not() -> None
     question = roomy()
     place = question.ready.basis.places[1]
 
-    def changed(count: int) -> Declared:
-        return taken(question.declared, [Ballast(place, Fraction(count))])
+    def changed(count: Fraction) -> Declared:
+        return taken(question.declared, [Ballast(place, count)])
 
-    found = reached(question, changed, 5000)
+    found = reached(question, Change(changed), 5000)
     assert found.count == 500
     assert found.stop is not None
     assert found.stop.code == "place.AFT-HOLD"
-    assert reached(question, changed, 10).stop is None
+    assert reached(question, Change(changed), 10).stop is None
 
 
 def test_a_figure_nobody_had_time_to_look_for_is_not_told() -> None:
