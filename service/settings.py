@@ -205,8 +205,8 @@ USE_TZ = True
 TIME_ZONE = "UTC"
 
 DATA_UPLOAD_MAX_MEMORY_SIZE = 1024 * 1024
-# The page of a load with all its rows (200 items, 60 seats) is one form.
-DATA_UPLOAD_MAX_NUMBER_FIELDS = 3000
+# The page of a load with all its rows (400 items and what they stand on, seats, events) is one form.
+DATA_UPLOAD_MAX_NUMBER_FIELDS = 12_000
 REST_FRAMEWORK = {
     "DEFAULT_AUTHENTICATION_CLASSES": [
         "service.actors.TokenAuthentication",

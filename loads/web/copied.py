@@ -4,22 +4,10 @@ from collections.abc import Mapping, Sequence
 from typing import Any
 
 from loads.web.form import FUEL_FIGURES, document_of
-from loads.web.form_fitted import type_fitted, type_footing
-from loads.web.typed import type_quantity
-
-
-def _typed_people(typed: dict[str, str], document: Mapping[str, Any]) -> None:
-    for person in (*document.get("crew", ()), *document.get("passengers", ())):
-        prefix = f"seat:{person['seat']}"
-        for part in ("name", "how", "position", "person", "category"):
-            if person.get(part):
-                typed[f"{prefix}:{part}"] = str(person[part])
-        type_quantity(typed, f"{prefix}:weight", f"{prefix}:unit", person.get("weight"))
-        type_quantity(typed, f"{prefix}:restraint", f"{prefix}:unit", person.get("restraint"))
-        if infant := person.get("lap_infant"):
-            typed[f"{prefix}:infant"] = str(infant["name"])
-            typed[f"{prefix}:infant_how"] = str(infant.get("how", ""))
-            type_quantity(typed, f"{prefix}:infant_weight", f"{prefix}:unit", infant.get("weight"))
+from loads.web.form_events import type_events
+from loads.web.form_fitted import type_fitted
+from loads.web.form_lines import type_item, type_person
+from loads.web.typed import type_quantity, type_shared
 
 
 def typed_of(document: Mapping[str, Any]) -> dict[str, str]:
@@ -33,19 +21,19 @@ def typed_of(document: Mapping[str, Any]) -> dict[str, str]:
         "persons_on_board": str(document["persons_on_board"]),
     }
     typed |= {part: str(value) for part, value in document["flight"].items() if part != "departure"}
-    _typed_people(typed, document)
+    for person in (*document.get("crew", ()), *document.get("passengers", ())):
+        type_person(typed, f"seat:{person['seat']}", person)
     for row, item in enumerate(document.get("items", ())):
-        typed |= {f"item:{row}:{part}": str(item.get(part, "")) for part in ("kind", "what", "place", "how")}
-        type_quantity(typed, f"item:{row}:weight", f"item:{row}:unit", item.get("weight"))
-        type_footing(typed, f"item:{row}", item)
+        type_item(typed, f"item:{row}", item)
     type_fitted(typed, document)
+    type_events(typed, document)
     fuel = document.get("fuel", {})
     type_quantity(typed, "density", "density:unit", fuel.get("density"))
     typed["density:source"] = str(fuel.get("density", {}).get("source", ""))
     for tank, quantity in fuel.get("at_engine_start", {}).items():
         type_quantity(typed, f"tank:{tank}:quantity", f"tank:{tank}:unit", quantity)
     for tank, quantity in fuel.get("not_usable", {}).items():
-        type_quantity(typed, f"tank:{tank}:not_usable", f"tank:{tank}:unit", quantity)
+        type_shared(typed, f"tank:{tank}:not_usable", f"tank:{tank}:unit", quantity)
     for figure in FUEL_FIGURES:
         type_quantity(typed, figure, f"{figure}:unit", fuel.get(figure))
     for row, limit in enumerate(document.get("limits", ())):
@@ -56,13 +44,6 @@ def typed_of(document: Mapping[str, Any]) -> dict[str, str]:
     if "certification_category" in document:
         typed["certification_category"] = str(document["certification_category"])
     return typed
-
-
-def needs_the_api(document: Mapping[str, Any]) -> bool:
-    """This function will say whether `document` states what the page has no input for: what happens in
-    flight, or which leg it follows.
-    """
-    return bool(document.get("sequence")) or "follows" in document["flight"]
 
 
 def can_carry(document: Mapping[str, Any], *, seats: Sequence[str], tanks: Sequence[str]) -> bool:
@@ -76,8 +57,8 @@ def can_carry(document: Mapping[str, Any], *, seats: Sequence[str], tanks: Seque
 
 
 def _comparable(document: Mapping[str, Any]) -> dict[str, Any]:
-    """This function will return the document with its people and items in a fixed order and empty parts
-    left out.
+    """This function will return the document with its people and items in a fixed order; empty parts and
+    what says no more than leaving it out are left out.
     """
     parts = dict(document)
     fuel = {name: part for name, part in parts.pop("fuel", {}).items() if part != {}}
@@ -87,7 +68,7 @@ def _comparable(document: Mapping[str, Any]) -> dict[str, Any]:
         for kind in ("crew", "passengers", "items", "limits", "conditions", "seat_settings")
     }
     return (
-        {name: part for name, part in parts.items() if part}
+        {name: _sorted(part) for name, part in parts.items() if part}
         | people
         | {
             "fuel": _sorted(fuel),
@@ -96,8 +77,14 @@ def _comparable(document: Mapping[str, Any]) -> dict[str, Any]:
     )
 
 
+SAID_BY_SILENCE = {"removed": False, "jettisonable": False, "since": "take-off"}
+
+
 def _sorted(part: Any) -> Any:
-    """This function will return nested mappings as sorted pairs, with every leaf as text."""
+    """This function will return nested mappings as sorted pairs and lists in their order, with every leaf
+    as text.
+    """
     if isinstance(part, Mapping):
-        return tuple(sorted((name, _sorted(value)) for name, value in part.items()))
-    return str(part)
+        said = [(name, value) for name, value in part.items() if SAID_BY_SILENCE.get(name, ...) != value]
+        return tuple(sorted((name, _sorted(value)) for name, value in said))
+    return tuple(map(_sorted, part)) if isinstance(part, list | tuple) else str(part)

@@ -23,10 +23,12 @@ from loads.actions.submit_load import submit_load
 from loads.queries.computation import compute
 from loads.queries.current import Current, load_of
 from loads.queries.declaration import declared_now
+from loads.web.arranging import ARRANGE, arranged
 from loads.web.asking import typed_in, zone_of, zone_words
 from loads.web.copied import can_carry, typed_of
 from loads.web.desk import lay_desk, wrong_inputs
 from loads.web.form import document_of, field_of
+from loads.web.next_leg import CARRIED
 from loads.web.remedies import remedied
 from loads.web.shown import stops, verdict_words
 from loads.web.wording import words_at
@@ -55,8 +57,8 @@ def declare(request: HttpRequest) -> HttpResponse:
     table = _table(request, typed, departure)
     if table is None or (departure is None and request.method != "POST"):
         return _first_page(request, typed, departure)
-    if request.method != "POST":
-        return _desk_page(request, table, typed, zone)
+    if request.method != "POST" or ARRANGE in typed:
+        return _desk_page(request, table, arranged(typed) if ARRANGE in typed else typed, zone)
     document, fields = _document(table, typed, departure)
     try:
         if typed.get("do") != "submit":
@@ -91,7 +93,8 @@ def revise(request: HttpRequest, load: UUID) -> HttpResponse:
             {"heading": "Revise", "typed": typed, "refusal": _not_here(), "back": load},
             status=409,
         )
-    if request.method != "POST":
+    if request.method != "POST" or ARRANGE in typed:
+        typed = arranged(typed) if ARRANGE in typed else typed
         return _desk_page(request, table, typed, zone, revised=load)
     document, fields = _document(table, typed, departure)
     try:
@@ -159,6 +162,7 @@ def _first_page(request: HttpRequest, typed: Mapping[str, str], departure: datet
         "no_basis": NEXT_STEP if aircraft is not None and basis is None else "",
         "typed": typed,
         "zone": zone_words(zone_of(request), timezone.now()),
+        "carried": [(name, typed[name]) for name in CARRIED if typed.get(name)],
     }
     return render(request, "loads/declare.html", context)
 

@@ -3,55 +3,31 @@
 from collections.abc import Mapping, Sequence
 from typing import Any
 
-from fleet.basis import Basis, Configuration
+from fleet.basis import Basis, Configuration, Seat, Tank
+from loads.web.arranging import FOCUS
+from loads.web.choices import (
+    CATEGORIES,
+    DENSITY_UNITS,
+    HOW,
+    INFANT_HOW,
+    KINDS,
+    LIMITS_AT,
+    OPERATIONS,
+    POSITIONS,
+    RELEASED,
+    VOLUME_UNITS,
+    WEIGHT_UNITS,
+    own_unit_first,
+)
+from loads.web.desk_events import Aboard, lay_events
 from loads.web.desk_fitted import condition_inputs, floor_inputs, restraints_asked, setting_inputs
 from loads.web.desk_rules import category_inputs, kind_input
-from loads.web.form import ITEM_PARTS, LIMIT_PARTS, MOST_ROWS, SEAT_PARTS
+from loads.web.form import LIMIT_PARTS, MOST_ROWS, also_typed
+from loads.web.form_lines import ITEM_PARTS, PERSON_PARTS
 from loads.web.inputs import Choices, Field, Maker
 
-WEIGHT_UNITS: Choices = (("lb", "lb"), ("kg", "kg"))
-VOLUME_UNITS: Choices = (("US gal", "US gal"), ("imp gal", "imp gal"), ("l", "l"))
-DENSITY_UNITS: Choices = (("lb/US gal", "lb/US gal"), ("lb/imp gal", "lb/imp gal"), ("kg/l", "kg/l"))
-HOW: Choices = (
-    ("", "choose"),
-    ("weighed", "weighed"),
-    ("declared", "declared"),
-    ("standard", "standard"),
-    ("estimated", "estimated"),
-)
-INFANT_HOW: Choices = tuple(choice for choice in HOW if choice[0] != "standard")
-POSITIONS: Choices = (
-    ("", "passenger"),
-    ("pilot in command", "pilot in command"),
-    ("second pilot", "second pilot"),
-    ("cabin attendant", "cabin attendant"),
-    ("other crew", "other crew"),
-)
-CATEGORIES: Choices = (("", "none"), ("adult", "adult"), ("child", "child"), ("infant", "infant"))
-KINDS: Choices = (
-    ("", "choose"),
-    ("baggage", "baggage"),
-    ("cargo", "cargo"),
-    ("ballast", "ballast"),
-    ("equipment", "equipment"),
-    ("consumable", "consumable"),
-)
-OPERATIONS: Choices = (
-    ("", "choose"),
-    ("passenger-charter", "passenger charter"),
-    ("cargo-charter", "cargo charter"),
-    ("air-taxi", "air taxi"),
-    ("aerial-work", "aerial work"),
-    ("positioning", "positioning"),
-    ("training", "training"),
-)
-LIMITS_AT: Choices = (("take-off", "take-off"), ("landing", "landing"))
 EMPTY_ITEM_ROWS = 4
 FEWEST_ITEM_ROWS = 6
-
-
-def _own_unit_first(choices: Choices, unit: str) -> Choices:
-    return tuple(sorted(choices, key=lambda choice: choice[0] != unit))
 
 
 def _flight(make: Maker, zone: str) -> list[Field]:
@@ -63,6 +39,7 @@ def _flight(make: Maker, zone: str) -> list[Field]:
         make.text("origin", "From", maximum=12),
         make.text("destination", "To", maximum=12),
         make.choice("operation", "Operation", OPERATIONS),
+        *([make.text("follows", "Follows the load", hint="its number")] if make.typed.get("follows") else ()),
     ]
 
 
@@ -73,7 +50,7 @@ def _seat(
     typed.
     """
     prefix = f"seat:{seat_id}"
-    typed = {part for part in SEAT_PARTS if make.typed.get(f"{prefix}:{part}")}
+    typed = {part for part in PERSON_PARTS if make.typed.get(f"{prefix}:{part}")}
     crew = serves != "passenger" or bool(typed & {"position", "person"})
     passenger = serves != "crew" or bool(typed & {"infant", "infant_weight", "infant_how"})
     strapped = [
@@ -97,7 +74,7 @@ def _seat(
     ]
 
 
-def _item(make: Maker, row: int, places: Choices, weights: Choices) -> list[Field]:
+def _item(make: Maker, row: int, places: Choices, weights: Choices, *, released: bool) -> list[Field]:
     prefix, number = f"item:{row}", row + 1
     return [
         make.choice(f"{prefix}:place", f"Place of item {number}", places),
@@ -106,6 +83,11 @@ def _item(make: Maker, row: int, places: Choices, weights: Choices) -> list[Fiel
         make.figure(f"{prefix}:weight", f"Weight of item {number}"),
         make.choice(f"{prefix}:unit", f"Unit of item {number}", weights),
         make.choice(f"{prefix}:how", f"How the weight of item {number} was got", HOW),
+        *(
+            [make.choice(f"{prefix}:jettisonable", f"Item {number} can be released", RELEASED)]
+            if released
+            else ()
+        ),
     ]
 
 
@@ -164,55 +146,72 @@ def lay_desk(
 
     Units stand first in the basis's own; no weight and no figure is ever proposed.
     """
-    make = Maker(typed, faults)
-    weights = _own_unit_first(WEIGHT_UNITS, basis.weight_unit.value)
-    volumes = _own_unit_first(VOLUME_UNITS, basis.volume_unit.value)
+    make = Maker(typed, faults, typed.get(FOCUS, ""))
+    weights = own_unit_first(WEIGHT_UNITS, basis.weight_unit.value)
+    volumes = own_unit_first(VOLUME_UNITS, basis.volume_unit.value)
     density_unit = f"{basis.weight_unit.value}/{basis.volume_unit.value}"
-    densities = _own_unit_first(DENSITY_UNITS, density_unit)
-    seats = [seat for seat in basis.seats if seat.id in configuration.seats]
-    places: Choices = (
-        ("", "choose"),
-        *((place.id, place.name) for place in basis.places if place.id in configuration.places),
-    )
+    densities = own_unit_first(DENSITY_UNITS, density_unit)
+    known = {seat.id: seat for seat in basis.seats}
+    tanks = {tank.id: tank for tank in basis.tanks}
+    fitted = [place for place in basis.places if place.id in configuration.places]
+    places: Choices = (("", "choose"), *((place.id, place.name) for place in fitted))
     item_rows = min(MOST_ROWS, max(FEWEST_ITEM_ROWS, _rows_typed(typed, "item") + EMPTY_ITEM_ROWS))
     restraints = restraints_asked(make, basis)
+    released = any(place.external for place in fitted) or any(
+        value and name.endswith(":jettisonable") for name, value in typed.items()
+    )
     limit_rows = min(MOST_ROWS, max(1, _rows_typed(typed, "limit")) + 1)
+    asked = {"restraints": restraints, "released": released}
     return {
         "type": basis.aircraft_type,
         "configuration_name": configuration.name,
         "flight": [*_flight(make, zone), *category_inputs(make, basis)],
         "seats": [
-            {
-                "id": seat.id,
-                "name": seat.name,
-                "fields": _seat(make, seat.id, seat.serves, weights, restraints=restraints),
-            }
-            for seat in seats
+            _seat_row(make, seat, known.get(seat), weights, restraints=restraints)
+            for seat in also_typed(typed, "seat:", _in_the_order_of(basis, configuration))
         ],
         "persons": make.figure(
             "persons_on_board", "Persons on board", hint="counted at the aircraft, infants too"
         ),
-        "restraints": restraints,
-        "items": [_item(make, row, places, weights) for row in range(item_rows)],
+        **asked,
+        "items": [_item(make, row, places, weights, released=released) for row in range(item_rows)],
         "floor": floor_inputs(make, basis, configuration, item_rows),
         "fitted": [*condition_inputs(make, basis), *setting_inputs(make, basis)],
-        "tanks": [_tank(make, basis, number, volumes + weights) for number in range(len(basis.tanks))],
+        "tanks": [
+            _tank(make, tank, tanks.get(tank), basis.volume_unit.value, volumes + weights)
+            for tank in also_typed(typed, "tank:", tanks)
+        ],
         "fuel": _fuel(make, weights, volumes, densities),
         "limits": [_limit(make, row, weights) for row in range(limit_rows)],
+        "events": lay_events(make, Aboard(basis, configuration, item_rows, weights, volumes, **asked)),
     }
 
 
-def _tank(make: Maker, basis: Basis, number: int, units: Choices) -> dict[str, Any]:
-    tank = basis.tanks[number]
-    prefix = f"tank:{tank.id}"
+def _in_the_order_of(basis: Basis, configuration: Configuration) -> list[str]:
+    return [seat.id for seat in basis.seats if seat.id in configuration.seats]
+
+
+def _seat_row(
+    make: Maker, seat_id: str, seat: Seat | None, weights: Choices, *, restraints: bool
+) -> dict[str, Any]:
+    serves = "either" if seat is None else seat.serves
     return {
-        "id": tank.id,
-        "name": tank.name,
-        "holds": f"{float(tank.capacity):g} {basis.volume_unit.value}",
+        "id": seat_id,
+        "name": "not here" if seat is None else seat.name,
+        "fields": _seat(make, seat_id, serves, weights, restraints=restraints),
+    }
+
+
+def _tank(make: Maker, tank_id: str, tank: Tank | None, unit: str, units: Choices) -> dict[str, Any]:
+    prefix, name = f"tank:{tank_id}", tank_id if tank is None else tank.name
+    return {
+        "id": tank_id,
+        "name": name,
+        "holds": "nothing here" if tank is None else f"{float(tank.capacity):g} {unit}",
         "fields": [
-            make.figure(f"{prefix}:quantity", f"Fuel in {tank.name}"),
-            make.figure(f"{prefix}:not_usable", f"Trapped fuel in {tank.name}"),
-            make.choice(f"{prefix}:unit", f"Unit of {tank.name}", units),
+            make.figure(f"{prefix}:quantity", f"Fuel in {name}"),
+            make.figure(f"{prefix}:not_usable", f"Trapped fuel in {name}"),
+            make.choice(f"{prefix}:unit", f"Unit of {name}", units),
         ],
     }
 

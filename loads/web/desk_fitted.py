@@ -7,6 +7,7 @@ a copied load holds and this basis does not know stays on the page, to be refuse
 from collections.abc import Iterable
 
 from fleet.basis import Basis, Configuration, Seat
+from loads.web.choices import own_unit_first
 from loads.web.form_fitted import CONDITION, FLOOR_PARTS, SETTING
 from loads.web.inputs import Choices, Field, Maker
 
@@ -19,10 +20,12 @@ LABELS = {
     "lies": "Which way the length of item {} lies",
     "feet_lengthwise": "Feet lengthwise of item {}",
     "feet_widthwise": "Feet widthwise of item {}",
-    "spreader_weight": "Weight of the spreader of item {}",
-    "spreader_length": "Length of the spreader of item {}",
-    "spreader_width": "Width of the spreader of item {}",
-    "spreader_lies": "Which way the spreader of item {} lies",
+    "net_weight": "Weight of the net over item {}",
+}
+LABELS |= {
+    f"{part}_{side}": f"{words} of the {part} of item {{}}"
+    for part in ("spreader", "pallet")
+    for side, words in (("weight", "Weight"), ("length", "Length"), ("width", "Width"), ("lies", "Lie"))
 }
 
 
@@ -51,22 +54,33 @@ def _settings(seats: Iterable[Seat]) -> Choices:
 
 def floor_inputs(make: Maker, basis: Basis, configuration: Configuration, rows: int) -> list[list[Field]]:
     """This function will return a row of inputs an item, of what it stands on; [] where no floor asks."""
-    floors = any(place.floor is not None for place in basis.places if place.id in configuration.places)
     typed = any(make.typed.get(f"item:{row}:{part}") for row in range(rows) for part in FLOOR_PARTS)
-    if not floors and not typed:
+    if not floors_asked(basis, configuration) and not typed:
         return []
-    units = tuple(sorted(LENGTH_UNITS, key=lambda choice: choice[0] != basis.length_unit.value))
-    return [_floor_row(make, row, units) for row in range(rows)]
+    return [floor_row(make, f"item:{row}", row + 1, basis.length_unit.value) for row in range(rows)]
 
 
-def _floor_row(make: Maker, row: int, units: Choices) -> list[Field]:
+def floors_asked(basis: Basis, configuration: Configuration) -> bool:
+    """This function will say whether a floor of the configuration asks what items stand on."""
+    return any(place.floor is not None for place in basis.places if place.id in configuration.places)
+
+
+def floor_row(make: Maker, prefix: str, number: object, unit: str) -> list[Field]:
+    """This function will return the inputs of what one item stands on."""
+
     def asked(part: str) -> Field:
-        name, label = f"item:{row}:{part}", LABELS[part].format(row + 1)
-        return make.choice(name, label, LIES) if part.endswith("lies") else make.figure(name, label)
+        name, label = f"{prefix}:{part}", LABELS[part].format(number)
+        title = part.replace("_", " ").capitalize()
+        return (
+            make.choice(name, label, LIES, title=title)
+            if part.endswith("lies")
+            else make.figure(name, label, title=title)
+        )
 
-    unit = make.choice(f"item:{row}:side_unit", f"Unit of the lengths of item {row + 1}", units)
+    units = own_unit_first(LENGTH_UNITS, unit)
+    listed = make.choice(f"{prefix}:side_unit", f"Unit of the lengths of item {number}", units, title="Unit")
     length, width, *others = map(asked, FLOOR_PARTS)
-    return [length, width, unit, *others]
+    return [length, width, listed, *others]
 
 
 def restraints_asked(make: Maker, basis: Basis) -> bool:

@@ -5,29 +5,18 @@ Nothing is filled in that was not typed, and nothing typed is dropped: a line be
 the reader of the document as it is, which refuses it with its field.
 """
 
-from collections.abc import Mapping, Sequence
+from collections.abc import Iterable, Mapping, Sequence
 from typing import Any
 
-from loads.web.form_fitted import FLOOR_PARTS, fitted_in, footing_in
-from loads.web.typed import Typed, begun, clean, count_of, quantity_of
+from loads.web.form_events import sequence_in
+from loads.web.form_fitted import fitted_in
+from loads.web.form_lines import ITEM_PARTS, PERSON_PARTS, item_in, person_in
+from loads.web.typed import Typed, begun, clean, count_of, quantity_of, shared_quantity
 
-# More rows than one load has; the page offers no row beyond, so what is typed is never cut short.
-MOST_ROWS = 200
+# As many items as a document may hold; the page offers no row beyond, so what is typed is never cut short.
+MOST_ROWS = 400
 FUEL_FIGURES = ("taxi", "trip", "minimum_at_landing")
-# What makes a line a line. A unit does not: lists of units always have one chosen.
-SEAT_PARTS = (
-    "name",
-    "weight",
-    "how",
-    "position",
-    "person",
-    "category",
-    "infant",
-    "infant_weight",
-    "infant_how",
-    "restraint",
-)
-ITEM_PARTS = ("kind", "what", "place", "how", "weight", *FLOOR_PARTS)
+FLIGHT_PARTS = ("reference", "origin", "destination", "operation")
 LIMIT_PARTS = ("weight", "source", "kind")
 
 
@@ -38,50 +27,21 @@ class _Builder:
         self.typed = typed
         self.field_of: dict[str, str] = {}
 
-    def person(self, seat: str, at: str) -> dict[str, Any]:
-        """This function will return what was typed for the person in `seat`, for the pointer `at`."""
-        prefix = f"seat:{seat}"
-        person: dict[str, Any] = {"name": clean(self.typed, f"{prefix}:name"), "seat": seat}
-        person["how"] = clean(self.typed, f"{prefix}:how")
-        if clean(self.typed, f"{prefix}:weight"):
-            person["weight"] = quantity_of(self.typed, f"{prefix}:weight", f"{prefix}:unit")
-        for part in ("category", "person"):
-            if word := clean(self.typed, f"{prefix}:{part}"):
-                person[part] = word
-        if clean(self.typed, f"{prefix}:restraint"):
-            person["restraint"] = quantity_of(self.typed, f"{prefix}:restraint", f"{prefix}:unit")
-        if begun(self.typed, prefix, ("infant", "infant_weight", "infant_how")):
-            person["lap_infant"] = self.infant(prefix)
-        parts = ("name", "weight", "how", "position", "person", "category", "restraint")
-        self.field_of |= {f"{at}/{part}": f"{prefix}:{part}" for part in parts}
-        self.field_of |= {
-            at: f"{prefix}:name",
-            f"{at}/lap_infant": f"{prefix}:infant",
-            f"{at}/lap_infant/weight": f"{prefix}:infant_weight",
-            f"{at}/lap_infant/how": f"{prefix}:infant_how",
-        }
-        return person
-
-    def infant(self, prefix: str) -> dict[str, Any]:
-        """This function will return the infant on the lap of the person in a seat."""
-        infant: dict[str, Any] = {"name": clean(self.typed, f"{prefix}:infant")}
-        if clean(self.typed, f"{prefix}:infant_weight"):
-            infant["weight"] = quantity_of(self.typed, f"{prefix}:infant_weight", f"{prefix}:unit")
-        if how := clean(self.typed, f"{prefix}:infant_how"):
-            infant["how"] = how
-        return infant
-
     def people(self, seats: Sequence[str]) -> tuple[list[dict[str, Any]], list[dict[str, Any]]]:
         """This function will return crew and passengers: a seat with anything typed in it is taken."""
         crew: list[dict[str, Any]] = []
         passengers: list[dict[str, Any]] = []
         for seat in seats:
-            if not begun(self.typed, f"seat:{seat}", SEAT_PARTS):
+            prefix = f"seat:{seat}"
+            if not begun(self.typed, prefix, PERSON_PARTS):
                 continue
-            if position := clean(self.typed, f"seat:{seat}:position"):
-                crew.append(self.person(seat, f"/crew/{len(crew)}") | {"position": position})
+            position = clean(self.typed, f"{prefix}:position")
+            at = f"/crew/{len(crew)}" if position else f"/passengers/{len(passengers)}"
+            person = {"seat": seat} | person_in(self.typed, prefix, at, self.field_of)
+            if position:
+                crew.append(person | {"position": position})
             else:
-                passengers.append(self.person(seat, f"/passengers/{len(passengers)}"))
+                passengers.append(person)
         return crew, passengers
 
     def items(self) -> list[dict[str, Any]]:
@@ -89,19 +49,8 @@ class _Builder:
         found: list[dict[str, Any]] = []
         for row in range(MOST_ROWS):
             prefix = f"item:{row}"
-            if not begun(self.typed, prefix, ITEM_PARTS):
-                continue
-            at = f"/items/{len(found)}"
-            item: dict[str, Any] = {
-                part: clean(self.typed, f"{prefix}:{part}") for part in ("kind", "what", "place", "how")
-            }
-            if clean(self.typed, f"{prefix}:weight"):
-                item["weight"] = quantity_of(self.typed, f"{prefix}:weight", f"{prefix}:unit")
-            item |= footing_in(self.typed, prefix, at, self.field_of)
-            found.append(item)
-            self.field_of |= {f"{at}/{part}": f"{prefix}:{part}" for part in ITEM_PARTS} | {
-                at: f"{prefix}:what"
-            }
+            if begun(self.typed, prefix, ITEM_PARTS):
+                found.append(item_in(self.typed, prefix, f"/items/{len(found)}", self.field_of))
         return found
 
     def fuel(self, tanks: Sequence[str]) -> dict[str, Any]:
@@ -121,7 +70,7 @@ class _Builder:
                 )
             self.field_of[f"/fuel/not_usable/{tank}"] = f"tank:{tank}:not_usable"
             if clean(self.typed, f"tank:{tank}:not_usable"):
-                fuel["not_usable"][tank] = quantity_of(
+                fuel["not_usable"][tank] = shared_quantity(
                     self.typed, f"tank:{tank}:not_usable", f"tank:{tank}:unit"
                 )
         for figure in FUEL_FIGURES:
@@ -148,6 +97,15 @@ class _Builder:
         return found
 
 
+def also_typed(typed: Typed, start: str, known: Iterable[str]) -> tuple[str, ...]:
+    """This function will return the seats (`start` "seat:") or tanks known here, and behind them the others
+    in which something was typed: they stay on the page, to be refused by name and not lost.
+    """
+    begun_in = (name for name in typed if name.startswith(start) and not name.endswith(":unit"))
+    strange = (name.removeprefix(start).rpartition(":")[0] for name in begun_in if clean(typed, name))
+    return tuple(dict.fromkeys((*known, *filter(None, strange))))
+
+
 def document_of(
     typed: Typed, *, departure: str, seats: Sequence[str], tanks: Sequence[str]
 ) -> tuple[dict[str, Any], dict[str, str]]:
@@ -158,29 +116,30 @@ def document_of(
     zone.
     """
     builder = _Builder(typed)
-    crew, passengers = builder.people(seats)
-    flight_parts = ("reference", "origin", "destination", "operation")
-    builder.field_of |= {f"/flight/{part}": part for part in flight_parts}
+    crew, passengers = builder.people(also_typed(typed, "seat:", seats))
+    builder.field_of |= {f"/flight/{part}": part for part in (*FLIGHT_PARTS, "leg", "follows")}
     builder.field_of |= {
         "/flight/departure": "time" if clean(typed, "date") else "date",
-        "/flight/leg": "leg",
         "/persons_on_board": "persons_on_board",
+        "/certification_category": "certification_category",
     }
     document: dict[str, Any] = {
         "schema": "tarebook.load/1",
         "aircraft": clean(typed, "aircraft"),
         "configuration": clean(typed, "configuration"),
-        "flight": {part: clean(typed, part) for part in flight_parts}
+        "flight": {part: clean(typed, part) for part in FLIGHT_PARTS}
         | {"leg": count_of(typed, "leg", "1"), "departure": departure},
         "persons_on_board": count_of(typed, "persons_on_board"),
         "crew": crew,
         "passengers": passengers,
         "items": builder.items(),
-        "fuel": builder.fuel(tanks),
+        "fuel": builder.fuel(also_typed(typed, "tank:", tanks)),
         "limits": builder.limits(),
         **fitted_in(typed, builder.field_of),
+        **sequence_in(typed, builder.field_of),
     }
-    builder.field_of["/certification_category"] = "certification_category"
+    if follows := clean(typed, "follows"):
+        document["flight"]["follows"] = follows
     if category := clean(typed, "certification_category"):
         document["certification_category"] = category
     return document, builder.field_of

@@ -20,14 +20,16 @@ class Field:
     type: str = "text"
     figure: bool = False
     maximum: int = 0
+    focus: bool = False
 
 
 @dataclass(frozen=True, slots=True)
 class Maker:
-    """Makes inputs from what was typed and the faults found, by input name."""
+    """Makes inputs from what was typed and the faults found, by input name; the page begins at `focus`."""
 
     typed: Mapping[str, str]
     faults: Mapping[str, str]
+    focus: str = ""
 
     def text(
         self, name: str, label: str, *, maximum: int = 80, title: str = "", hint: str = "", kind: str = "text"
@@ -44,6 +46,7 @@ class Maker:
             kind,
             False,
             maximum,
+            name == self.focus,
         )
 
     def figure(self, name: str, label: str, *, title: str = "", hint: str = "") -> Field:
@@ -59,6 +62,7 @@ class Maker:
             "text",
             True,
             20,
+            name == self.focus,
         )
 
     def choice(self, name: str, label: str, choices: Choices, *, first: str = "", title: str = "") -> Field:
@@ -69,4 +73,5 @@ class Maker:
         value = self.typed.get(name, first)
         if value and value not in {word for word, _ in choices}:
             choices = (*choices, (value, value))
-        return Field(name, label, value, self.faults.get(name, ""), choices, title or label)
+        fault, focus = self.faults.get(name, ""), name == self.focus
+        return Field(name, label, value, fault, choices, title or label, focus=focus)

@@ -17,7 +17,6 @@ from loads.acts import REMARK_REJECT, REVISE_LOAD
 from loads.manifest.words import Words
 from loads.models import Remark
 from loads.queries.current import Current, result_in
-from loads.queries.declaration import declared_now
 from loads.queries.rejects import (
     MOST_REJECTS,
     Reject,
@@ -30,7 +29,6 @@ from loads.queries.remedies import SECONDS
 from loads.queries.trend import WEEK, Trend, reject_trend
 from loads.trend_chart import Series, trend_chart
 from loads.web.asking import zone_of, zone_words
-from loads.web.copied import needs_the_api
 from loads.web.remedies import first_sentence
 from loads.web.shown import stops
 from loads.web.wording import words_at
@@ -116,7 +114,6 @@ def _reject(one: Reject, zone: ZoneInfo, now: datetime, words: Words) -> dict[st
     governing: Any = result.get("governing") or {}
     return _flight(one.current, zone) | {
         "past": load.departure < now,
-        "by_api": needs_the_api(declared_now(one.current)),
         "stops": stops(result, words),
         "governing": [
             words.said(line)

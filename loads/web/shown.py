@@ -31,7 +31,7 @@ from loads.queries.legs import legs_answer
 from loads.queries.provided import basis_under
 from loads.queries.signable import signatures_due
 from loads.queries.stale import stale_parts
-from loads.web.copied import needs_the_api
+from loads.web.next_leg import next_leg
 from loads.web.wording import words_at
 from records.actor import Actor
 
@@ -66,8 +66,9 @@ def load_page(current: Current, zone: ZoneInfo, now: datetime, actor: Actor) -> 
     load, page = current.load, Page(declared_now(current), current.result())
     words = words_at(load.operator_id, now)
     stale = stale_parts(current, now) if ways_out(current.state) else ()
+    legs = legs_answer(current)
     return {
-        "load": _head(current, zone) | {"by_api": needs_the_api(page.inputs)},
+        "load": _head(current, zone),
         "units": page.result.get("units"),
         "weight_word": words.weight,
         "figures": _figures(page, words),
@@ -80,7 +81,8 @@ def load_page(current: Current, zone: ZoneInfo, now: datetime, actor: Actor) -> 
         "presented": presented(page),
         "steps": _steps(load),
         "versions": _versions(current),
-        "legs": legs_answer(current),
+        "legs": legs,
+        "next_leg": next_leg(current, legs, actor),
         "can": _can(current, page.inputs, actor, stale=bool(stale)),
     }
 

@@ -29,6 +29,24 @@ def quantity_of(typed: Typed, name: str, unit_name: str) -> dict[str, str]:
     return {"value": clean(typed, name), "unit": clean(typed, unit_name)}
 
 
+def shared_quantity(typed: Typed, name: str, unit_name: str) -> dict[str, str]:
+    """This function will return a quantity whose input shares the list of units of another, or has a unit of
+    its own typed behind the figure, as in "8 kg".
+    """
+    value, _, unit = clean(typed, name).partition(" ")
+    return {"value": value, "unit": unit.strip()} if unit else quantity_of(typed, name, unit_name)
+
+
+def type_shared(typed: dict[str, str], name: str, unit_name: str, quantity: Mapping[str, Any] | None) -> None:
+    """This function will put a quantity into its input, with its unit where the list it shares shows
+    another.
+    """
+    if quantity and typed.get(unit_name, quantity["unit"]) != quantity["unit"]:
+        typed[name] = f"{quantity['value']} {quantity['unit']}"
+    else:
+        type_quantity(typed, name, unit_name, quantity)
+
+
 def type_quantity(
     typed: dict[str, str], name: str, unit_name: str, quantity: Mapping[str, Any] | None
 ) -> None:

@@ -3,6 +3,7 @@
 import time
 
 import pytest
+from django.conf import settings
 
 from loads.models import Load, Step
 from tests.cast import browser
@@ -182,7 +183,9 @@ def test_an_address_that_names_nothing_is_a_page_that_says_so(client, method, pa
 
 
 def test_more_fields_than_any_load_has_are_refused(client) -> None:
-    answer = quick(client.post, "/declare", FITTED | {f"field{n}": "x" for n in range(4000)})
+    more = {f"field{n}": "x" for n in range(settings.DATA_UPLOAD_MAX_NUMBER_FIELDS)}
+
+    answer = quick(client.post, "/declare", FITTED | more)
 
     assert answer.status_code == 400
 

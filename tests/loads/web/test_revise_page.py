@@ -7,6 +7,7 @@ from loads.models import Load
 from loads.queries.current import declared_in, load_of
 from tests.cast import actor, browser
 from tests.loads.making import accepted, load_document, submitted
+from tests.makers import LONG_AGO, basis_document, make_basis
 from tests.reading_pages import Page
 
 pytestmark = pytest.mark.django_db
@@ -133,18 +134,42 @@ def test_a_position_and_a_unit_that_are_in_no_list_survive_the_page(people) -> N
     assert again["flight"]["operation"] == "medical-transfer"
 
 
-def test_a_load_with_a_part_the_page_has_no_input_for_is_sent_to_the_api(people) -> None:
+def test_equipment_taken_out_survives_the_page(people) -> None:
     document = load_document(people)
     document["items"].append(document["items"][0] | {"kind": "equipment", "what": "seat", "removed": True})
     current = submit_load(document, by=actor(people.preparer))
+
+    revise(people, current, **CONFIRMED)
+
+    assert declared_in(Load.objects.get(replaces=current.load))["items"] == document["items"]
+
+
+def test_a_load_whose_configuration_the_basis_no_longer_has_is_sent_to_the_api(people) -> None:
+    current = submitted(people)
+    basis = basis_document()
+    basis["configurations"] = basis["configurations"][1:]
+    make_basis(people, current.load.aircraft, basis, true_from=LONG_AGO)
 
     page = Page(browser(people.preparer).get(f"/loads/{current.load.id}/revise"))
 
     assert page.status == 409
     assert "Revise it through the API." in page.words
-    assert "No loading basis is in force" not in page.words
     assert page.actions() == set()
     assert page.links["Back to the load"] == f"/loads/{current.load.id}"
+
+
+def test_a_seat_the_basis_no_longer_has_stays_on_the_page_and_is_refused_by_name(people) -> None:
+    current = submitted(people)
+    basis = basis_document()
+    for one in basis["configurations"]:
+        one["seats"].remove("ROW1-R")
+    make_basis(people, current.load.aircraft, basis, true_from=LONG_AGO)
+
+    page = Page(revise(people, current, **CONFIRMED))
+
+    assert page.status == 422
+    assert set(page.faults) == {"seat:ROW1-R:name"}
+    assert page.form("").values["seat:ROW1-R:weight"] == "190"
 
 
 def test_who_may_not_revise_is_refused(people) -> None:

@@ -1,10 +1,13 @@
-"""The page of a load that states what happens in flight, and which leg it follows; and that the page which
-revises loads refuses to lose either.
+"""What happens in flight on the pages: told on the load's own, declared and revised on the desk, lost
+nowhere; and which leg a load follows.
 """
 
 import pytest
 
 from loads.actions.submit_load import submit_load
+from loads.models import Assessment, Load
+from loads.queries.current import declared_in
+from records.models import Act
 from tests.cast import actor, browser
 from tests.loads.making import load_document, submitted
 from tests.makers import q
@@ -47,7 +50,7 @@ def test_who_comes_aboard_is_on_the_page_by_name_and_the_greatest_number_is_told
     assert "Greatest number of persons in flight" in page.words
 
 
-def test_a_load_with_events_or_a_leg_before_is_not_revised_where_they_would_be_lost(people) -> None:
+def test_a_leg_before_is_told_on_both_loads_and_a_revision_keeps_it(people) -> None:
     first = submitted(people)
     back = load_document(people)
     back["flight"] |= {"departure": "2026-12-01T11:00:00-06:00", "origin": "XKOR", "destination": "XNAL"}
@@ -55,17 +58,143 @@ def test_a_load_with_events_or_a_leg_before_is_not_revised_where_they_would_be_l
         back | {"flight": back["flight"] | {"leg": 2, "follows": str(first.load.id)}},
         by=actor(people.preparer),
     )
-    with_events = submit_load(load_document(people, sequence=JUMP), by=actor(people.preparer))
 
-    for current in (linked, with_events):
-        answer = browser(people.preparer).get(f"/loads/{current.load.id}/revise")
-        assert answer.status_code == 409
-        assert "Revise it through the API." in answer.content.decode()
-        itself = Page(browser(people.preparer).get(f"/loads/{current.load.id}"))
-        assert "revise it through the API" in itself.words
-        assert "Revise" not in itself.links
-    page = Page(browser(people.pilot).get(f"/loads/{linked.load.id}"))
+    fresh = revised(people, linked)
+
+    page = Page(browser(people.pilot).get(f"/loads/{fresh.id}"))
     assert "Follows KT-214 leg 1, XNAL to XKOR" in page.words
     assert "planned uplift 680 lb" in page.words
     other = Page(browser(people.pilot).get(f"/loads/{first.load.id}"))
     assert "Followed by KT-214 leg 2, XKOR to XNAL" in other.words
+
+
+def test_the_next_leg_is_declared_from_the_page_of_the_one_before(people) -> None:
+    first = submitted(people)
+    client = browser(people.preparer)
+    way = Page(client.get(f"/loads/{first.load.id}")).links["Declare the next leg"]
+    chosen = Page(client.get(way)).form("").filled({"date": "2026-12-01", "time": "10:00"})
+    fitted = Page(client.get("/declare", chosen)).form("").filled({"configuration": "four-seat"})
+
+    values = Page(client.get("/declare", fitted)).form("").values
+
+    assert (values["follows"], values["leg"], values["origin"]) == (str(first.load.id), "2", "XKOR")
+    assert (values["reference"], values["aircraft"], values["destination"]) == ("KT-214", "Q9-KTB", "")
+    assert "Declare the next leg" not in Page(browser(people.auditor).get(f"/loads/{first.load.id}")).links
+
+
+def revised(people, current, **changes):
+    """This function will revise a load on the page as it stands, with inputs changed, and return the new
+    one.
+    """
+    client = browser(people.preparer)
+    form = Page(client.get(f"/loads/{current.load.id}/revise")).form("")
+    confirmed = {"checked": "yes", "reason": "another door"} | changes
+    answer = client.post(f"/loads/{current.load.id}/revise", form.filled(confirmed, press="submit"))
+    assert answer.status_code == 302, Page(answer).alerts
+    return Load.objects.get(replaces=current.load)
+
+
+INFANT = {"name": "I. Lind", "weight": q("8", "kg"), "how": "weighed"}
+COMES = {
+    "name": "V. Lindqvist",
+    "seat": "ROW2-L",
+    "weight": q("170", "lb"),
+    "how": "declared",
+    "category": "adult",
+    "lap_infant": INFANT,
+}
+CRATE = {
+    "kind": "cargo",
+    "what": "crate",
+    "place": "AFT-HOLD",
+    "weight": q("12.5", "kg"),
+    "how": "weighed",
+}
+BAGS = {"place": "AFT-HOLD", "what": "checked bags", "weight": q("20", "lb")}
+TRANSFER = {"from": "LEFT", "to": "RIGHT", "quantity": q("2", "US gal")}
+EVENTS = [
+    *JUMP,
+    {"after_burning": q("20", "US gal"), "come_aboard": [COMES, CRATE]},
+    {"after_burning": q("140", "lb"), "leave": [BAGS]},
+    {"after_burning": q("150", "lb"), "transfer": TRANSFER},
+]
+
+
+def test_a_load_with_every_kind_of_event_is_revised_on_the_page_and_loses_nothing(people) -> None:
+    current = submit_load(load_document(people, sequence=EVENTS), by=actor(people.preparer))
+    itself = Page(browser(people.preparer).get(f"/loads/{current.load.id}"))
+    assert itself.links["Revise"] == f"/loads/{current.load.id}/revise"
+
+    fresh = revised(people, current)
+
+    again, before = declared_in(fresh), declared_in(current.load)
+    again["flight"]["departure"] = before["flight"]["departure"]  # the same instant in the operator's zone
+    assert again == before
+    verdicts = [Assessment.objects.get(load=load).verdict for load in (current.load, fresh)]
+    assert verdicts[0] == verdicts[1]
+
+
+def test_an_event_is_changed_on_the_page_and_nothing_else_is(people) -> None:
+    current = submit_load(load_document(people, sequence=EVENTS), by=actor(people.preparer))
+
+    fresh = revised(people, current, **{"event:3:line:0:weight": "30"})
+
+    again, before = declared_in(fresh)["sequence"], declared_in(current.load)["sequence"]
+    assert again[3]["leave"][0]["weight"] == q("30", "lb")
+    assert again[:3] + again[4:] == before[:3] + before[4:]
+
+
+CHOSEN = {"aircraft": "Q9-KTB", "date": "2026-12-01", "time": "07:30", "configuration": "four-seat"}
+
+
+def test_a_simple_load_has_one_closed_part_without_an_input(people) -> None:
+    answer = browser(people.preparer).get("/declare", CHOSEN)
+
+    assert "What happens in flight nothing stated" in Page(answer).words
+    assert not [name for name in Page(answer).form("").values if name.startswith("event")]
+    assert '<details>\n  <summary id="in-flight">' in answer.content.decode()
+
+
+def test_an_event_is_added_by_a_button_that_stores_nothing_and_keeps_what_was_typed(people) -> None:
+    client = browser(people.preparer)
+    form = Page(client.get("/declare", CHOSEN)).form("")
+    before = Act.objects.count(), Load.objects.count()
+
+    answer = client.post("/declare", form.filled({"seat:ROW1-L:name": "L. Osei"}, press="add leave"))
+    page = Page(answer)
+
+    assert (page.status, page.faults, page.alerts) == (200, {}, [])
+    assert page.form("").values["seat:ROW1-L:name"] == "L. Osei"
+    assert page.form("").values["event:0:kind"] == "leave"
+    assert "row1 l: L. Osei" in page.words
+    assert 'id="event:0:after" name="event:0:after" type="text" value="" ' in answer.content.decode()
+    assert (Act.objects.count(), Load.objects.count()) == before
+    assert "autofocus" in answer.content.decode()
+
+
+@pytest.mark.parametrize(
+    ("changes", "name", "words"),
+    [
+        ({"event:1:after": ""}, "event:1:after", "needed"),
+        ({"event:1:after": "9000"}, "event:1:after", "more fuel than is on board"),
+        ({"event:1:line:0:who": "seat:ROW2-R"}, "event:1:line:0:who", "nobody is declared in this seat"),
+        ({"event:0:line:0:to": "NOWHERE"}, "event:0:line:0:to", "no such seat or place"),
+        ({"event:3:line:0:weight": "500"}, "event:3:line:0:weight", "no more can leave"),
+        ({"event:4:to": "LEFT"}, "event:4:to", "name another tank"),
+        ({"event:2:line:0:seat": "ROW1-R"}, "event:2:line:0:seat", "choose another seat"),
+    ],
+)
+def test_a_fault_of_an_event_stands_next_to_its_input_as_the_api_names_it(
+    people, changes, name, words
+) -> None:
+    current = submit_load(load_document(people, sequence=EVENTS), by=actor(people.preparer))
+    client = browser(people.preparer)
+    form = Page(client.get(f"/loads/{current.load.id}/revise")).form("")
+    confirmed = {"checked": "yes", "reason": "x"} | changes
+
+    page = Page(client.post(f"/loads/{current.load.id}/revise", form.filled(confirmed, press="submit")))
+
+    assert page.status == 422
+    assert words in page.faults[name]
+    assert f"#{name}" in page.links.values()
+    assert not Load.objects.filter(replaces=current.load).exists()

@@ -75,7 +75,7 @@ def _row(number: int) -> dict[str, Any]:
 @pytest.mark.parametrize(
     "document",
     [
-        pytest.param(_with(("items", 0, "removed"), True), id="removed equipment"),
+        pytest.param(_with(("items", 0, "removed"), True), id="baggage of the empty weight"),
         pytest.param(_with(("sequence",), [{"what": "gear up"}]), id="a sequence"),
         pytest.param(_with(("remark",), "fragile"), id="an unknown part"),
         pytest.param(_with(("flight", "alternate"), "XALT"), id="an unknown part of the flight"),
@@ -87,18 +87,7 @@ def _row(number: int) -> dict[str, Any]:
         pytest.param(_with(("fuel", "density", "at"), "15 C"), id="an unknown part of the density"),
         pytest.param(_with(("fuel", "taxi", "source"), "manual"), id="an unknown part of a quantity"),
         pytest.param(_with(("limits", 0, "phase"), "x"), id="an unknown part of a limit"),
-        pytest.param(_with(("passengers", 0, "seat"), "ROW9-L"), id="a seat that is not here"),
         pytest.param(_with(("passengers", 0, "seat"), "ROW1-R"), id="two people in one seat"),
-        pytest.param(
-            _with(("fuel", "at_engine_start", "BELLY"), {"value": 1, "unit": "l"}), id="a tank not here"
-        ),
-        pytest.param(
-            _with(("fuel", "not_usable", "LEFT-MAIN"), {"value": 1, "unit": "l"}),
-            id="two units in one tank",
-        ),
-        pytest.param(
-            _with(("passengers", 1, "lap_infant", "weight", "unit"), "lb"), id="two units in one seat"
-        ),
         pytest.param(load(items=[_row(n) for n in range(MOST_ROWS + 1)]), id="more items than rows"),
         pytest.param(load(schema="tarebook.load/2"), id="another schema"),
     ],
@@ -106,6 +95,39 @@ def _row(number: int) -> dict[str, Any]:
 def test_a_document_the_page_would_lose_a_part_of_is_not_carried(document: dict[str, Any]) -> None:
     assert carries(load())
     assert not carries(document)
+
+
+@pytest.mark.parametrize(
+    "document",
+    [
+        pytest.param(_with(("passengers", 0, "seat"), "ROW9-L"), id="a seat that is not here"),
+        pytest.param(
+            _with(("fuel", "at_engine_start", "BELLY"), {"value": 1, "unit": "l"}), id="a tank not here"
+        ),
+        pytest.param(
+            _with(("fuel", "not_usable", "LEFT-MAIN"), {"value": 1, "unit": "l"}), id="two units in one tank"
+        ),
+        pytest.param(
+            _with(("passengers", 1, "lap_infant", "weight", "unit"), "lb"), id="two units in one seat"
+        ),
+        pytest.param(_with(("flight", "follows"), "01980a11-2222-7333-8444-555566667777"), id="a leg before"),
+        pytest.param(
+            _with(("items", 0), _row(1) | {"kind": "equipment", "removed": True}), id="equipment taken out"
+        ),
+        pytest.param(_with(("items", 0, "jettisonable"), True), id="what can be released"),
+    ],
+)
+def test_what_the_page_shows_only_where_a_load_has_it_is_carried_and_shown(document: dict[str, Any]) -> None:
+    typed = typed_of(document)
+
+    assert carries(document)
+    assert set(typed) <= inputs_on_the_desk(typed) | {"aircraft", "configuration"}
+
+
+def test_a_unit_behind_a_figure_counts_only_where_the_figure_has_no_list_of_its_own() -> None:
+    assert "seat:ROW1-L:weight" in _faults_of(typed_of(load()) | {"seat:ROW1-L:weight": "80 kg"})
+    document, _ = written(typed_of(load()) | {"seat:ROW1-R:infant_weight": "9 kg"})
+    assert document["passengers"][1]["lap_infant"]["weight"] == {"value": "9", "unit": "kg"}
 
 
 def test_as_many_items_as_there_are_rows_are_carried_and_no_row_is_offered_that_would_be_lost() -> None:

@@ -15,9 +15,7 @@ from loads.balance.assess import assess
 from loads.balance.declared import read_load
 from loads.balance.over_flight import held_over_flight, over_flight
 from loads.balance.shape import check_shape
-from loads.web.copied import can_carry
 from records.refusal import Invalid
-from tests.pure.loads.load_documents import SEATS, TANKS
 from tests.pure.loads.making import SOURCE, F, load, twin, twin_empty
 
 
@@ -171,14 +169,6 @@ def test_without_a_basis_the_shape_of_a_sequence_is_still_looked_at() -> None:
     with pytest.raises(Invalid) as error:
         check_shape(load(sequence=[{"after_burning": q(1, "in")}]))
     assert {one.pointer for one in error.value.faults} == {f"{E0}/after_burning/unit", f"{E0}/leave"}
-
-
-def test_the_page_does_not_carry_a_sequence_so_it_refuses_to_revise_such_a_load() -> None:
-    ways = {"seats": SEATS, "tanks": TANKS}
-    assert can_carry(load(), **ways)
-    assert not can_carry(load(sequence=[leaving(OFF)]), **ways)
-    flight = load()["flight"] | {"follows": "01980a11-2222-7333-8444-555566667777"}
-    assert not can_carry(load(flight=flight), **ways)
 
 
 JUNK: tuple[Any, ...] = (
