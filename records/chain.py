@@ -10,6 +10,7 @@ The database builds the chain (records/sql/seal.sql); this module only judges it
 import hashlib
 import json
 import re
+from collections import Counter
 from collections.abc import Iterable
 from dataclasses import dataclass
 from operator import ne
@@ -25,7 +26,12 @@ _ACT = re.compile(
     rf'"actor":{{"kind":{_TEXT},"key":{_TEXT},"name":(?:null|{_TEXT}),"capacity":{_TEXT}}},'
     rf'"about":{_TEXT},"reason":{_TEXT},"caused_by":(?:null|{_TEXT}),"request":{_TEXT}}},"changes":\['
 )
-_CHANGE = re.compile(rf'{{"table":{_TEXT},"key":{_TEXT},"operation":{_TEXT},"image":')
+_CHANGE = re.compile(rf'{{"table":({_TEXT}),"key":{_TEXT},"operation":{_TEXT},"image":')
+# How the database writes an image, and a value in it that holds no others (RFC 8259 sections 3, 6 and 7).
+_NAME = re.compile(r"[ !#-\[\]-~]+")
+# Whole numbers as long as no reader has trouble with.
+_VALUE = rf"(?:{_TEXT}|-?(?:0|[1-9][0-9]{{0,99}}+)(?:\.[0-9]++)?(?:[eE][-+]?[0-9]++)?|true|false|null)"
+_TRIES = 9  # a table's shape is learned so often at most, as its columns may have changed along the chain
 
 
 @dataclass(frozen=True, slots=True)
@@ -135,13 +141,16 @@ class _SealsForm:
     entry, act and change in their order, nothing between them, the first four with the wanted values.
 
     Only the images are read as JSON. The reader hands over each object as its pairs, so that a name that
-    stands twice is seen; what is done with them takes no step of ours for each.
+    stands twice is seen; what is done with them takes no step of ours for each. Of an image without objects
+    and lists in it the names are remembered by table, and the next one is compared with them as text.
     """
 
     def __init__(self, chain: str) -> None:
         self._opening = f'{{"schema":"{SCHEMA}","chain":{json.dumps(chain, ensure_ascii=False)},"position":'
         self._objects: list[list[tuple[str, object]]] = []
         self._read = json.JSONDecoder(object_pairs_hook=self._objects.append).raw_decode
+        self._shapes: dict[str, re.Pattern[str]] = {}
+        self._learned: Counter[str] = Counter()
 
     def has(self, entry: str, position: int, previous: str | None) -> bool:
         """This function will say whether the entry is of that form and reads as sound JSON in which no name
@@ -158,7 +167,9 @@ class _SealsForm:
         objects.clear()
         try:
             while change := _CHANGE.match(entry, end):
-                end = self._read(entry, change.end())[1]
+                shape = self._shapes.get(change[1])
+                image = shape.match(entry, change.end()) if shape is not None else None
+                end = image.end() if image is not None else self._image(entry, change)
                 if not entry.startswith("},", end):
                     twice = any(map(ne, map(len, map(dict, objects)), map(len, objects)))
                     return entry[end:] == "}]}" and not twice
@@ -166,6 +177,20 @@ class _SealsForm:
         except (ValueError, RecursionError):
             pass
         return False
+
+    def _image(self, entry: str, change: re.Match[str]) -> int:
+        """Read an image as JSON, remember its shape if it has no other object in it, return where it ends."""
+        before, table = len(self._objects), change[1]
+        end = self._read(entry, change.end())[1]
+        if self._learned[table] == _TRIES or len(self._objects) != before + 1:
+            return end
+        pairs = dict(self._objects[before])
+        sound = len(pairs) == len(self._objects[before]) and all(map(_NAME.fullmatch, pairs))
+        if sound and not any(isinstance(value, list) for value in pairs.values()):
+            self._learned[table] += 1
+            members = ", ".join(f'"{re.escape(name)}": {_VALUE}' for name in pairs)
+            self._shapes[table] = re.compile(rf"{{{members}}}")
+        return end
 
 
 def _same(chain: str, position: int, what: str, expected: object, found: object) -> None:

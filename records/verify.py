@@ -10,7 +10,16 @@ from django.db import connections
 from records.chain import Finding, Head, follow_rows
 
 _BATCH = 1000
-_CHAINS = 'SELECT chain FROM records_seal GROUP BY chain ORDER BY chain COLLATE "C"'
+# From each chain to the next by the index: going through all the entries for the names took longer.
+_CHAINS = """
+WITH RECURSIVE found AS (
+    (SELECT chain FROM records_seal ORDER BY chain LIMIT 1)
+    UNION ALL
+    SELECT (SELECT chain FROM records_seal WHERE chain > found.chain ORDER BY chain LIMIT 1)
+    FROM found WHERE found.chain IS NOT NULL
+)
+SELECT chain FROM found WHERE chain IS NOT NULL ORDER BY chain COLLATE "C"
+"""
 # Asked chain by chain: an index gives each in its order, where all at once would be sorted first.
 _LINKS = "SELECT position, previous, digest, entry FROM records_seal WHERE chain = %s ORDER BY position"
 _DOCUMENTS = """

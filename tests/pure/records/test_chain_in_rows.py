@@ -75,6 +75,67 @@ def test_entries_in_the_seals_form_are_not_followed_step_by_step(monkeypatch) ->
     assert follow_rows(rows_of(4), Head("kt"))[0].position == 4
 
 
+def plain(image: str, table: str = "t") -> str:
+    return f'{{"table":"{table}","key":"1","operation":"insert","image":{image}}}'
+
+
+FLAT = '{"id": 1, "what": "a, b", "none": null, "much": -1.50e3, "is": true}'
+FLAT_BENT = {
+    "as the one before": FLAT,
+    "other values": '{"id": -0, "what": "", "none": "x", "much": 0, "is": 12345678901234567890.0}',
+    "other columns": '{"id": 1, "what": "a", "more": 7}',
+    "a column less": FLAT.replace('"id": 1, ', ""),
+    "a name twice": FLAT.replace('"id": 1', '"id": 1, "id": 1'),
+    "a name twice for another": FLAT.replace('"is"', '"id"'),
+    "an object in it": FLAT.replace("null", '{"a": 1}'),
+    "a name twice in an object in it": FLAT.replace("null", '{"a": 1, "a": 1}'),
+    "a list in it": FLAT.replace("null", "[1]"),
+    "a text with a quote": FLAT.replace("a, b", '\\"'),
+    "a text in other letters": FLAT.replace("a, b", "\u00f6"),
+    "a line break in a text": FLAT.replace("a, b", "\n"),
+    "a bad escape": FLAT.replace("a, b", "\\x"),
+    "a leading nought": FLAT.replace('"id": 1', '"id": 01'),
+    "a sign alone": FLAT.replace('"id": 1', '"id": -'),
+    "a point and no figure": FLAT.replace('"id": 1', '"id": 1.'),
+    "a whole number beyond reading": FLAT.replace('"id": 1', f'"id": {"9" * 5000}'),
+    "a fraction of many figures": FLAT.replace('"id": 1', f'"id": 0.{"9" * 5000}'),
+    "an exponent beyond reading": FLAT.replace('"id": 1', '"id": 1e999999'),
+    "no number": FLAT.replace('"id": 1', '"id": NaN'),
+    "other spaces": FLAT.replace(", ", ","),
+    "a comma at the end": FLAT.replace("true}", "true, }"),
+    "not closed": FLAT[:-1],
+    "nothing": "{}",
+    "no object": "7",
+}
+
+
+@pytest.mark.parametrize("image", FLAT_BENT.values(), ids=FLAT_BENT.keys())
+def test_a_bent_image_after_one_of_its_table_is_found_as_the_plain_way_finds_it(image: str) -> None:
+    changes = [plain(FLAT), plain(image), plain(FLAT), f"{plain(FLAT)},{plain(image)}", plain(image, "other")]
+    rows: list[Row] = []
+    for position, change in enumerate(changes, 1):
+        rows.append(sealed(position, rows[-1][2] if rows else None, changes=change))
+
+    both(rows)
+
+
+def test_names_that_mean_something_to_a_pattern_are_taken_as_they_stand() -> None:
+    rows = [sealed(1, None, changes=plain('{"a.*": 1}'))]
+    rows.append(sealed(2, rows[0][2], changes=plain('{"a.*": 1}')))
+    rows.append(sealed(3, rows[1][2], changes=plain('{"abc": 1, "abc": 1}')))
+
+    assert both(rows)[0] == 2
+
+
+def test_shapes_of_flat_images_are_learned_and_then_no_image_is_read_as_json(monkeypatch) -> None:
+    form = records.chain._SealsForm("kt")
+    first, second = (sealed(at, None, changes=plain(FLAT)) for at in (1, 2))
+    assert form.has(first[3], 1, None)
+    monkeypatch.setattr(form, "_read", None)
+
+    assert form.has(second[3], 2, None)
+
+
 ENTRY = rows_of(3)[1][3]
 REST = ENTRY.partition(',"act":')[2]
 CHANGES = f'"changes":[{CHANGE}]'
