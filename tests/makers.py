@@ -233,9 +233,11 @@ def make_empty_weight(
     return weight
 
 
-def ready_aircraft(people: Cast, registration: str = "Q9-KTB") -> Aircraft:
+def ready_aircraft(
+    people: Cast, registration: str = "Q9-KTB", basis: dict[str, Any] | None = None
+) -> Aircraft:
     """This function will enter the twin with an approved loading basis and empty weight on wheels."""
     aircraft = make_aircraft(people, registration)
-    make_basis(people, aircraft)
+    make_basis(people, aircraft, basis)
     make_empty_weight(people, aircraft)
     return aircraft
