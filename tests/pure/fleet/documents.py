@@ -1,15 +1,18 @@
 """The invented documents of the demonstration, read afresh for every test, and published worked examples."""
 
 import json
+from collections.abc import Callable
 from copy import deepcopy
 from pathlib import Path
 from typing import Any
+
+import pytest
 
 from records.refusal import Fault, Invalid
 from records.strict_json import read
 
 ROOT = Path(__file__).parents[3]
-NAMES = ("twin", "turboprop", "helicopter")
+NAMES = ("twin", "turboprop", "helicopter", "commuter")
 
 
 def basis_document(name: str) -> Any:
@@ -49,3 +52,12 @@ def found_in(refused: Invalid) -> set[tuple[str, str]]:
 
 def is_a_sentence_with_a_next_step(fault: Fault) -> bool:
     return len(fault.detail.split()) >= 4 and not fault.detail.endswith(".")
+
+
+def told(read_document: Callable[[Any], object], document: Any) -> list[tuple[str, str, str]]:
+    """This function will return what a reader tells whoever sent a document, in its order and word by word:
+    pointer, code and sentence of each fault.
+    """
+    with pytest.raises(Invalid) as refused:
+        read_document(document)
+    return [(fault.pointer, fault.code, fault.detail) for fault in refused.value.faults]
