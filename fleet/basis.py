@@ -149,7 +149,8 @@ class Envelope:
     `plane` says in which plane the edges are straight. `shape` decides: `shape.holds(weight, moment)`,
     exactly, and `shape.arm_section`, `shape.weight_section` for the two margins. `configurations` and
     `categories` (of certification) are those it holds for, () for all; `positions` the states of moving parts
-    it holds in, such as the gear up: part by part, one not named may be in any. Making one raises
+    it holds in, such as the gear up: part by part, one not named may be in any; an external load, carried or
+    none, counts as one. Making one raises
     `fleet.envelope.NotAnEnvelope`.
     """
 

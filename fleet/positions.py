@@ -17,6 +17,10 @@ from typing import Literal, NamedTuple
 from fleet.sourced import Source
 
 Where = Literal["ground", "flight"]
+# What hangs outside (a hook, a hoist) decides which envelope holds just as a moving part does. No part can
+# have this id: ids have no blanks.
+EXTERNAL_LOAD = "external load"
+CARRIED, NOT_CARRIED = "carried", "none"
 MOST_SETTINGS = 64  # of all parts together, so that the path of one load stays a short computation
 
 

@@ -7,7 +7,9 @@ from itertools import product
 from typing import Any
 
 from fleet.basis_reading.findings import Findings
+from fleet.positions import CARRIED, EXTERNAL_LOAD, NOT_CARRIED
 
+FIELD = "external_load"
 Case = tuple[str, ...]  # configuration, category ("" where there is none), then a state of each deciding part
 
 
@@ -25,8 +27,10 @@ def read_applicability(findings: Findings, at: str, entry: dict[str, Any]) -> di
 
 
 def read_held(findings: Findings, at: str, entry: dict[str, Any]) -> dict[str, Any]:
-    """Return these fields and `positions`, the states of moving parts a limit holds in."""
-    positions = tuple(_positions(findings, at, entry))
+    """Return these fields and `positions`, the states of moving parts a limit holds in, with or without an
+    external load.
+    """
+    positions = (*_positions(findings, at, entry), *_external(findings, at, entry))
     return {**read_applicability(findings, at, entry), "positions": positions}
 
 
@@ -35,6 +39,8 @@ def combinations(findings: Findings, entry: dict[str, Any]) -> set[Case]:
     configurations = entry.get("configurations") or findings.named("configurations") or [""]
     categories = entry.get("categories") or findings.named("certification_categories") or [""]
     named = {each["part"]: each["states"] for each in entry.get("positions", ())}
+    if FIELD in entry:
+        named[EXTERNAL_LOAD] = [entry[FIELD]]
     parts = [
         [f"{part} {state}" for state in named.get(part, states)]
         for part, states in _deciding(findings).items()
@@ -69,11 +75,24 @@ def _positions(findings: Findings, at: str, entry: dict[str, Any]) -> Iterator[t
         yield part, tuple(each["states"])
 
 
+def _external(findings: Findings, at: str, entry: dict[str, Any]) -> Iterator[tuple[str, tuple[str, ...]]]:
+    """Yield the condition of an external load; without a place outside there is none to carry."""
+    if FIELD not in entry:
+        return
+    if not any(place.get("external") for _, place in findings.entries("places")):
+        detail = "no place is external, so no external load is ever carried; enter the hook or hoist"
+        findings.fault(f"{at}/{FIELD}", "no-external-place", detail)
+    yield EXTERNAL_LOAD, (entry[FIELD],)
+
+
 def _deciding(findings: Findings) -> dict[str, list[str]]:
     """Return the states of the moving parts that some limit names."""
     limits = [entry for field in ("envelopes", "lateral_by_cg") for _, entry in findings.entries(field)]
     named = {each["part"] for entry in limits for each in entry.get("positions", ())}
-    return {part: states for part, states in _states(findings).items() if part in named}
+    found = {part: states for part, states in _states(findings).items() if part in named}
+    if any(FIELD in entry for entry in limits):
+        found[EXTERNAL_LOAD] = [NOT_CARRIED, CARRIED]
+    return found
 
 
 def _states(findings: Findings) -> dict[str, list[str]]:

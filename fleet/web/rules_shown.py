@@ -33,10 +33,16 @@ def _envelopes(document: Document) -> Iterator[Row]:
             plane += f" divided by {each['divided_by']}"
         corners = "; ".join(f"{value} at {weight}" for weight, value in each["points"])
         yield {
-            "title": f"Envelope {each['id']}, {across}, at {held}",
+            "title": f"Envelope {each['id']}, {across}, at {held}{outside_words(each)}",
             "value": f"{plane} at weight ({each['weight_unit']}): {corners}",
             "source": source_words(document, each["source"]),
         }
+
+
+def outside_words(limit: Document) -> str:
+    """This function will return whether a limit holds with or without an external load; "" for both."""
+    words = {"carried": ", with an external load", "none": ", without an external load"}
+    return words.get(limit.get("external_load", ""), "")
 
 
 def _changed(document: Document, part: str, when: str) -> Iterator[Row]:
@@ -80,7 +86,7 @@ def _by_cg(document: Document) -> Iterator[Row]:
     for each in document.get("lateral_by_cg", ()):
         points = "; ".join(f"{along}: {across}" for along, across in each["points"])
         yield {
-            "title": f"Lateral {each['gives']} against CG, {', '.join(each['phases'])}",
+            "title": f"Lateral {each['gives']} against CG, {', '.join(each['phases'])}{outside_words(each)}",
             "value": f"{points} ({each['longitudinal_unit']}: {each['unit']}, right positive)",
             "source": source_words(document, each["source"]),
         }

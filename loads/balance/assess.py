@@ -122,8 +122,10 @@ def _states_of(
         return {}, ()
     dry_at = dry_at_phases(declared, flown.dry) if flown.dry is not None else None
     states, nothing_left = _states(dry, flown.fuel, ready, dry_at)
-    if declared.sequence and ready.deciding:
-        parts = {phase: parts_set(declared, events_before(declared, phase)) for phase in states}
+    if (declared.sequence and ready.deciding) or ready.outside:
+        parts = {
+            phase: parts_set(declared, events_before(declared, phase), ready.outside) for phase in states
+        }
         states = {phase: state._replace(parts=parts[phase]) for phase, state in states.items()}
     return states, nothing_left
 

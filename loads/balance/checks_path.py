@@ -4,11 +4,12 @@ from collections.abc import Callable, Iterable, Mapping
 from fractions import Fraction
 
 from fleet.basis import Axis, Phase
+from fleet.positions import CARRIED, EXTERNAL_LOAD
 from loads.balance.checks_balance import SIDES
 from loads.balance.checks_lateral import AT, PATH_CODE, lateral_by_cg_path
 from loads.balance.exact import minus, plus, quotient
 from loads.balance.operator_margins import told
-from loads.balance.path import Gap, Knot, Leg, Path, Stretch
+from loads.balance.path import Gap, Knot, Leg, Path, Stretch, Turn
 from loads.balance.path_across import WorstAcross
 from loads.balance.path_worst import AXES, Burn, Worst, worst_at_zero_fuel
 from loads.balance.prepared import Prepared
@@ -159,6 +160,20 @@ def _unknown(path: Path, axis: Axis, ready: Prepared) -> tuple[str, str] | None:
         return "no envelope is entered for take-off", "Enter the envelope of this phase in the loading basis."
     if path.gaps:
         return _gap_words(path.gaps[0], ready)
+    return _unfit(path, axis, ready) if ready.outside else None
+
+
+def _unfit(path: Path, axis: Axis, ready: Prepared) -> tuple[str, str] | None:
+    """Return where no envelope holds with the external load there is, and what would mend it."""
+    bounds = ready.bounds(axis, "take-off")
+    flown: list[Stretch | Turn] = [*path.stretches, *path.turns]
+    for each in flown:
+        fits = each.leg == "taxi" or any(ready.outside_fits(one, each.parts) for one, _ in bounds)
+        if bounds and not fits:
+            carried = "with" if (EXTERNAL_LOAD, CARRIED) in each.parts else "without"
+            where = each.where if isinstance(each, Turn) else WHERE[each.leg]
+            text = f"{where} no envelope is entered for a flight {carried} an external load"
+            return text, "Enter this envelope in the loading basis."
     return None
 
 

@@ -13,7 +13,7 @@ from loads.balance.events import Event
 from loads.balance.fuel import NOTHING, FuelOffTable, FuelState, fuel_states
 from loads.balance.over_flight import over_flight
 from loads.balance.path import Path, burn_path
-from loads.balance.path_events import sequence_path, with_settings, zero_fuel_turns
+from loads.balance.path_events import parts_set, sequence_path, with_settings, zero_fuel_turns
 from loads.balance.prepared import Prepared
 from loads.balance.result import Check, State
 from loads.balance.sections import Dry, Sections, after_transfer, dry_over_flight, sections_of
@@ -43,9 +43,11 @@ def fly(declared: Declared, empty: EmptyFigures | None, ready: Prepared) -> Flow
 def path_of(declared: Declared, flown: Flown, states: Mapping[Phase, State], ready: Prepared) -> Path:
     """Return the path of a load whose phases are known, in every setting of gear and flaps."""
     if flown.sections is not None and flown.dry is not None:
-        path = sequence_path(declared, flown.sections, flown.dry, states)
+        path = sequence_path(declared, flown.sections, flown.dry, states, ready.outside)
     else:
         path = burn_path(declared.fuel, flown.fuel, states)
+        if parts := parts_set(declared, 0, ready.outside):
+            path = replace(path, stretches=tuple(each._replace(parts=parts) for each in path.stretches))
     if ready.basis.positions:
         path = with_settings(path, declared, ready)
     if ready.basis.positions or declared.sequence:

@@ -92,7 +92,7 @@ def _of_one(states: Mapping[Phase, State], burn: Burn, ready: Prepared) -> tuple
         lows.append(worst.low * worst.knot.weight - worst.knot.moment)
         highs.append(worst.high * worst.knot.weight - worst.knot.moment)
     for state in states.values():
-        for _, shape in ready.bounds("longitudinal", state.phase):
+        for shape in ready.shapes_at("longitudinal", state.phase, state.parts):
             along = shape.arm_section(state.weight, state.moment)
             if along is None:
                 return None
@@ -144,10 +144,10 @@ def _holds(
     along = weight * (move.end.arm - move.start.arm)
     across = weight * (move.end.lateral_arm - move.start.lateral_arm)
     for state in states.values():
-        for _, shape in ready.bounds("longitudinal", state.phase):
+        for shape in ready.shapes_at("longitudinal", state.phase, state.parts):
             if not shape.holds(state.weight, state.moment + along):
                 return False
-        for _, shape in ready.bounds("lateral", state.phase):
+        for shape in ready.shapes_at("lateral", state.phase, state.parts):
             if not shape.holds(state.weight, state.lateral_moment + across):
                 return False
     maximum = move.end.maximum

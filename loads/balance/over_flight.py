@@ -17,6 +17,15 @@ def over_flight(declared: Declared) -> tuple[Declared, ...]:
     return tuple(accumulate(declared.sequence, after, initial=declared))
 
 
+def hangs_outside(declared: Declared, outside: frozenset[str]) -> bool:
+    """Return whether somebody or something is in one of these places, a hook or a hoist."""
+    if not outside:
+        return False
+    items = (one.place.id for one in declared.items if not one.removed)
+    people = (one.seat.id for one in (*declared.crew, *declared.passengers))
+    return not outside.isdisjoint((*items, *people))
+
+
 def coming_people(declared: Declared) -> tuple[Person, ...]:
     """Return everybody who comes aboard in flight, in order."""
     return tuple(one for event in declared.sequence for one in event.coming if isinstance(one, Person))

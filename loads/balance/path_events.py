@@ -11,11 +11,12 @@ from fractions import Fraction
 from itertools import pairwise
 
 from fleet.basis import Phase
-from fleet.positions import Setting, settings
+from fleet.positions import CARRIED, EXTERNAL_LOAD, Setting, settings
 from fleet.tanks import TankPiece
 from loads.balance.aboard import Declared
 from loads.balance.events import Event, Transfer
 from loads.balance.fuel import NOTHING, Contents, FuelState
+from loads.balance.over_flight import hangs_outside, over_flight
 from loads.balance.path import FlownTanks, Found, Gap, Knot, Path, Stretch, Turn, knot_of
 from loads.balance.prepared import Prepared
 from loads.balance.result import State
@@ -27,8 +28,9 @@ def sequence_path(
     flight: Sections,
     dry: Sequence[Dry],
     states: Mapping[Phase, State],
+    outside: frozenset[str] = frozenset(),
 ) -> Path:
-    """Return the path of a load with a sequence whose phases are known."""
+    """Return the path of a load with a sequence whose phases are known; `outside` as of `parts_set`."""
     found = Found([], [])
     turns: list[Turn] = []
     ramp, staying = flight.fuel["ramp"], flight.fuel["zero fuel"].weight
@@ -43,13 +45,13 @@ def sequence_path(
         first = len(found.stretches)
         tanks.fly(section.leg, section.start, section.draws, (start, end), found)
         without_fuel = sums.weight + staying
-        parts = parts_set(declared, section.aboard)
+        parts = parts_set(declared, section.aboard, outside)
         found.stretches[first:] = [
             each._replace(dry=without_fuel, parts=parts) for each in found.stretches[first:]
         ]
         if section.event is not None:
             later = dry[section.aboard + 1].sums.weight + staying
-            both = parts, parts_set(declared, section.aboard + 1)
+            both = parts, parts_set(declared, section.aboard + 1, outside)
             turns += [
                 turn._replace(parts=both[turn.where.startswith("just after")])
                 for turn in _turns(section, end, flown, (without_fuel, later), found.gaps)
@@ -57,11 +59,17 @@ def sequence_path(
     return Path(tuple(found.stretches), tuple(found.gaps), declared.fuel.density, tuple(turns))
 
 
-def parts_set(declared: Declared, events: int) -> tuple[tuple[str, str], ...]:
-    """Return the (part, state) of all parts the first so many events of a sequence have set."""
+def parts_set(
+    declared: Declared, events: int, outside: frozenset[str] = frozenset()
+) -> tuple[tuple[str, str], ...]:
+    """Return the (part, state) of all parts the first so many events of a sequence have set, and whether
+    something then hangs in one of the places `outside`.
+    """
     held: dict[str, str] = {}
     for event in declared.sequence[:events]:
         held |= {part.id: state.id for part, state in event.positions}
+    if outside and hangs_outside(over_flight(declared)[events] if events else declared, outside):
+        held[EXTERNAL_LOAD] = CARRIED
     return tuple(held.items())
 
 
@@ -99,7 +107,8 @@ def zero_fuel_turns(
             state.lateral_moment + each.sums.lateral_moment - base.sums.lateral_moment,
         )
         where = f"at zero fuel after event {number}" if number else "at zero fuel"
-        turn = Turn("flight", where, ((knot, {}),), False, knot.weight, parts=parts_set(declared, number))
+        parts = parts_set(declared, number, ready.outside)
+        turn = Turn("flight", where, ((knot, {}),), False, knot.weight, parts=parts)
         found = settings(free, "flight", ready.deciding)
         turns += [turn, *(_turn_set(turn, setting) for setting in found)]
     return tuple(turns)

@@ -3,13 +3,14 @@ its units.
 """
 
 from collections import OrderedDict
-from collections.abc import Iterable
+from collections.abc import Iterable, Sequence
 from fractions import Fraction
 
 from fleet.basis import PHASES, Axis, Basis, Envelope, Phase, TankTable
 from fleet.conversion import density_unit
 from fleet.envelope import Shape
 from fleet.lateral import LateralByCg
+from fleet.positions import CARRIED, EXTERNAL_LOAD, NOT_CARRIED
 from fleet.rational import rational
 from fleet.tanks import TankCurve
 from loads.balance.exact import Ratio, minus, times
@@ -40,6 +41,7 @@ class Prepared:
         "length_places",
         "moment",
         "moment_places",
+        "outside",
         "volume",
         "weight",
     )
@@ -76,12 +78,16 @@ class Prepared:
             for phase in PHASES
         }
         self._as_weighed = {part.id: part.as_weighed for part in basis.positions}
-        # The moving parts whose state decides which envelope holds.
+        self._as_weighed[EXTERNAL_LOAD] = NOT_CARRIED
+        # The moving parts whose state decides which envelope holds; an external load counts as one.
         positions = [
             *(one.positions for one in basis.envelopes),
             *(one.positions for one in basis.lateral_by_cg),
         ]
         self.deciding = frozenset(part for each in positions for part, _ in each)
+        asked = EXTERNAL_LOAD in self.deciding
+        # The external places, where what is carried there decides which envelope holds.
+        self.outside = frozenset(place.id for place in basis.places if place.external and asked)
         self._across = {
             phase: tuple(limit for limit in basis.lateral_by_cg if phase in limit.phases) for phase in PHASES
         }
@@ -98,6 +104,16 @@ class Prepared:
             return True
         states = self._as_weighed | dict(parts)
         return all(states[part] in allowed for part, allowed in limit.positions)
+
+    def shapes_at(self, axis: Axis, phase: Phase, parts: Sequence[tuple[str, str]]) -> list[Shape]:
+        """Return the shapes of the envelopes that hold at a phase with these parts in these states."""
+        return [shape for limit, shape in self._bounds[axis, phase] if self.holds_in(limit, parts)]
+
+    def outside_fits(self, limit: Envelope | LateralByCg, parts: Iterable[tuple[str, str]]) -> bool:
+        """Return whether a limit holds with the external load there is, whatever moving parts are in."""
+        carried = (EXTERNAL_LOAD, CARRIED) in parts
+        wanted = dict(limit.positions).get(EXTERNAL_LOAD)
+        return wanted is None or (CARRIED if carried else NOT_CARRIED) in wanted
 
     def across(self, phase: Phase) -> tuple[LateralByCg, ...]:
         """Return the lateral limits against the longitudinal CG that hold at a phase; () without any."""

@@ -37,11 +37,11 @@ def spots_of(question: Question) -> Iterator[Spot]:
         points = [
             (shape, state.weight, state.lateral_moment if across else state.moment)
             for state in result.states
-            for _, shape in ready.bounds(axis, state.phase)
+            for shape in ready.shapes_at(axis, state.phase, state.parts)
         ]
         for stretch in flown(result, axis):
             middle = stretch.at((stretch.start.weight + stretch.end.weight) / 2)
-            for shape in shapes_on(stretch.leg, axis, ready):
+            for shape in shapes_on(stretch, axis, ready):
                 points += [
                     (shape, knot.weight, knot.lateral_moment if across else knot.moment)
                     for knot in (stretch.start, middle, stretch.end)

@@ -44,21 +44,21 @@ def ways_of(result: Result, ready: Prepared) -> Ways:
     return Ways(_axis(result, ready, "longitudinal"), _axis(result, ready, "lateral"))
 
 
-def shapes_on(leg: Leg, axis: Axis, ready: Prepared) -> list[Shape]:
-    """Return the envelopes that hold on a leg of the flight."""
-    found = {id(bound): bound[1] for phase in HOLDS[leg] for bound in ready.bounds(axis, phase)}
-    return list(found.values())
+def shapes_on(stretch: Stretch, axis: Axis, ready: Prepared) -> list[Shape]:
+    """Return the envelopes that hold on a stretch of the flight."""
+    shapes = (each for phase in HOLDS[stretch.leg] for each in ready.shapes_at(axis, phase, stretch.parts))
+    return list({id(shape): shape for shape in shapes}.values())
 
 
 def _axis(result: Result, ready: Prepared, axis: Axis) -> tuple[Interval, ...] | None:
     ways: tuple[Interval, ...] | None = None
     for state in result.states:
-        for _, shape in ready.bounds(axis, state.phase):
+        for shape in ready.shapes_at(axis, state.phase, state.parts):
             ways = _both(ways, _at(state, shape, axis))
     stretches = flown(result, axis)
     if stretches:
         for curve in curves_of(stretches, axis):
-            for shape in shapes_on(curve.stretch.leg, axis, ready):
+            for shape in shapes_on(curve.stretch, axis, ready):
                 for part in _along(curve, shape):
                     ways = _both(ways, part)
     return ways
