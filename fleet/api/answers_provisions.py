@@ -1,18 +1,21 @@
 """Writes what an operator lays down as the API answers it."""
 
 import json
+from collections.abc import Callable
 from datetime import datetime
 from typing import Any
+from uuid import UUID
 
 from django.http import HttpResponse
 from rest_framework.request import Request
 
 from fleet.api.answers import shown
-from fleet.api.asking import clocks_asked
+from fleet.api.asking import aircraft_asked, clocks_asked
 from fleet.models import Aircraft, Provision
 from fleet.queries.provisions import provision_history, provision_of, provisions_at
-from records.api.asking import operator_of
-from records.api.once import Answer
+from records.api.asking import document_of, operator_of, parameters_of
+from records.api.once import Answer, once
+from records.strict_json import JSON
 
 
 def provisions_answer(request: Request, kind: str, aircraft: Aircraft | None = None) -> HttpResponse:
@@ -30,6 +33,46 @@ def provisions_answer(request: Request, kind: str, aircraft: Aircraft | None = N
             ],
         }
     )
+
+
+def aircraft_provision_shown(request: Request, kind: str, registration: str, version: UUID) -> HttpResponse:
+    """This function will answer with one version of a kind, of one aircraft."""
+    parameters_of(request, allowed=())
+    aircraft = aircraft_asked(request, registration)
+    return shown(provision_line(provision_of(operator_of(request), kind, version, aircraft), aircraft))
+
+
+def aircraft_provision_entered(
+    request: Request, kind: str, registration: str, enter: Callable[[Aircraft, JSON], Provision]
+) -> HttpResponse:
+    """This function will enter the document sent, once, as a version of a kind of one aircraft."""
+    document = document_of(request)
+
+    def work() -> Answer:
+        aircraft = aircraft_asked(request, registration)
+        place = f"/api/v1/aircraft/{aircraft.registration}/{kind}s"
+        return created(enter(aircraft, document), place, aircraft)
+
+    return once(request, work)
+
+
+def aircraft_provision_changed(
+    request: Request,
+    kind: str,
+    registration: str,
+    version: UUID,
+    change: Callable[[Aircraft, Provision, JSON], object],
+) -> HttpResponse:
+    """This function will change one version of a kind as the document sent says, once, and answer with it."""
+    document = document_of(request)
+
+    def work() -> Answer:
+        aircraft = aircraft_asked(request, registration)
+        found = provision_of(operator_of(request), kind, version, aircraft)
+        change(aircraft, found, document)
+        return now_as_it_is(found, aircraft)
+
+    return once(request, work)
 
 
 def provision_line(one: Provision, aircraft: Aircraft | None = None) -> dict[str, Any]:

@@ -10,16 +10,20 @@ from rest_framework.views import APIView
 from fleet.actions.approve_permit import approve_permit
 from fleet.actions.end_permit import end_permit
 from fleet.actions.enter_permit import enter_permit
-from fleet.api.answers import shown
-from fleet.api.answers_provisions import created, now_as_it_is, provision_line, provisions_answer
+from fleet.api.answers_provisions import (
+    aircraft_provision_changed,
+    aircraft_provision_entered,
+    aircraft_provision_shown,
+    provisions_answer,
+)
 from fleet.api.asking import AS_KNOWN_AT, AT, aircraft_asked, approval_asked
 from fleet.api.documents import described
 from fleet.api.shapes_provisions import ProvisionAnswer, ProvisionList
 from fleet.entering import read_ending
+from fleet.models import Aircraft, Provision
 from fleet.provisions import PERMIT
-from fleet.queries.provisions import provision_of
-from records.api.asking import actor_of, document_of, operator_of, parameters_of
-from records.api.once import Answer, once
+from records.api.asking import actor_of
+from records.strict_json import JSON
 
 
 class PermitsEndpoint(APIView):
@@ -35,14 +39,10 @@ class PermitsEndpoint(APIView):
     )
     def post(self, request: Request, registration: str) -> HttpResponse:
         """Enters a permit. It widens nothing until a second person approves it, and lapses by itself."""
-        document = document_of(request)
-
-        def work() -> Answer:
-            aircraft = aircraft_asked(request, registration)
-            entered = enter_permit(actor_of(request), aircraft, document)
-            return created(entered, f"/api/v1/aircraft/{aircraft.registration}/permits", aircraft)
-
-        return once(request, work)
+        by = actor_of(request)
+        return aircraft_provision_entered(
+            request, PERMIT, registration, lambda aircraft, document: enter_permit(by, aircraft, document)
+        )
 
 
 class OnePermitEndpoint(APIView):
@@ -51,10 +51,7 @@ class OnePermitEndpoint(APIView):
     @extend_schema(operation_id="show_permit", responses=ProvisionAnswer)
     def get(self, request: Request, registration: str, version: UUID) -> HttpResponse:
         """The permit with its document, numbers as typed."""
-        parameters_of(request, allowed=())
-        aircraft = aircraft_asked(request, registration)
-        found = provision_of(operator_of(request), PERMIT, version, aircraft)
-        return shown(provision_line(found, aircraft))
+        return aircraft_provision_shown(request, PERMIT, registration, version)
 
 
 class PermitApprovalEndpoint(APIView):
@@ -65,15 +62,12 @@ class PermitApprovalEndpoint(APIView):
     )
     def post(self, request: Request, registration: str, version: UUID) -> HttpResponse:
         """Approves the permit, by another person than entered it; it holds between its own dates."""
-        document = document_of(request)
+        by = actor_of(request)
 
-        def work() -> Answer:
-            aircraft = aircraft_asked(request, registration)
-            permit = provision_of(operator_of(request), PERMIT, version, aircraft)
-            approve_permit(actor_of(request), aircraft, permit, reason=approval_asked(document).reason)
-            return now_as_it_is(permit, aircraft)
+        def approve(aircraft: Aircraft, permit: Provision, document: JSON) -> None:
+            approve_permit(by, aircraft, permit, reason=approval_asked(document).reason)
 
-        return once(request, work)
+        return aircraft_provision_changed(request, PERMIT, registration, version, approve)
 
 
 class PermitEndingEndpoint(APIView):
@@ -82,13 +76,10 @@ class PermitEndingEndpoint(APIView):
     @extend_schema(operation_id="end_permit", request=described("ending-1"), responses={201: ProvisionAnswer})
     def post(self, request: Request, registration: str, version: UUID) -> HttpResponse:
         """Ends the permit at `true_from`, with a reason."""
-        document = document_of(request)
+        by = actor_of(request)
 
-        def work() -> Answer:
-            aircraft = aircraft_asked(request, registration)
-            permit = provision_of(operator_of(request), PERMIT, version, aircraft)
+        def end(aircraft: Aircraft, permit: Provision, document: JSON) -> None:
             ending = read_ending(document)
-            end_permit(actor_of(request), aircraft, permit, true_from=ending.true_from, reason=ending.reason)
-            return now_as_it_is(permit, aircraft)
+            end_permit(by, aircraft, permit, true_from=ending.true_from, reason=ending.reason)
 
-        return once(request, work)
+        return aircraft_provision_changed(request, PERMIT, registration, version, end)

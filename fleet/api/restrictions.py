@@ -9,16 +9,20 @@ from rest_framework.views import APIView
 
 from fleet.actions.enter_restriction import enter_restriction
 from fleet.actions.lift_restriction import lift_restriction
-from fleet.api.answers import shown
-from fleet.api.answers_provisions import created, now_as_it_is, provision_line, provisions_answer
+from fleet.api.answers_provisions import (
+    aircraft_provision_changed,
+    aircraft_provision_entered,
+    aircraft_provision_shown,
+    provisions_answer,
+)
 from fleet.api.asking import AS_KNOWN_AT, AT, aircraft_asked
 from fleet.api.documents import described
 from fleet.api.shapes_provisions import ProvisionAnswer, ProvisionList
 from fleet.entering import read_ending
+from fleet.models import Aircraft, Provision
 from fleet.provisions import RESTRICTION
-from fleet.queries.provisions import provision_of
-from records.api.asking import actor_of, document_of, operator_of, parameters_of
-from records.api.once import Answer, once
+from records.api.asking import actor_of
+from records.strict_json import JSON
 
 
 class RestrictionsEndpoint(APIView):
@@ -38,14 +42,13 @@ class RestrictionsEndpoint(APIView):
         """Enters a restriction: a limit lowered, a seat blocked, a place closed, fuel trapped. It binds at
         once, from its `true_from` on; what was accepted before is told to be stale.
         """
-        document = document_of(request)
-
-        def work() -> Answer:
-            aircraft = aircraft_asked(request, registration)
-            entered = enter_restriction(actor_of(request), aircraft, document)
-            return created(entered, f"/api/v1/aircraft/{aircraft.registration}/restrictions", aircraft)
-
-        return once(request, work)
+        by = actor_of(request)
+        return aircraft_provision_entered(
+            request,
+            RESTRICTION,
+            registration,
+            lambda aircraft, document: enter_restriction(by, aircraft, document),
+        )
 
 
 class OneRestrictionEndpoint(APIView):
@@ -54,10 +57,7 @@ class OneRestrictionEndpoint(APIView):
     @extend_schema(operation_id="show_restriction", responses=ProvisionAnswer)
     def get(self, request: Request, registration: str, version: UUID) -> HttpResponse:
         """The restriction with its document, numbers as typed."""
-        parameters_of(request, allowed=())
-        aircraft = aircraft_asked(request, registration)
-        found = provision_of(operator_of(request), RESTRICTION, version, aircraft)
-        return shown(provision_line(found, aircraft))
+        return aircraft_provision_shown(request, RESTRICTION, registration, version)
 
 
 class RestrictionLiftingEndpoint(APIView):
@@ -68,19 +68,10 @@ class RestrictionLiftingEndpoint(APIView):
     )
     def post(self, request: Request, registration: str, version: UUID) -> HttpResponse:
         """Lifts the restriction from `true_from` on, by another person than entered it."""
-        document = document_of(request)
+        by = actor_of(request)
 
-        def work() -> Answer:
-            aircraft = aircraft_asked(request, registration)
-            restriction = provision_of(operator_of(request), RESTRICTION, version, aircraft)
+        def lift(aircraft: Aircraft, restriction: Provision, document: JSON) -> None:
             ending = read_ending(document)
-            lift_restriction(
-                actor_of(request),
-                aircraft,
-                restriction,
-                true_from=ending.true_from,
-                reason=ending.reason,
-            )
-            return now_as_it_is(restriction, aircraft)
+            lift_restriction(by, aircraft, restriction, true_from=ending.true_from, reason=ending.reason)
 
-        return once(request, work)
+        return aircraft_provision_changed(request, RESTRICTION, registration, version, lift)

@@ -1,7 +1,7 @@
 """The inputs of a page as plain values: what each is called, holds, offers, and what was wrong with it."""
 
 from collections.abc import Mapping
-from dataclasses import dataclass
+from dataclasses import dataclass, replace
 
 Choices = tuple[tuple[str, str], ...]
 
@@ -51,19 +51,7 @@ class Maker:
 
     def figure(self, name: str, label: str, *, title: str = "", hint: str = "") -> Field:
         """This function will return an input for one figure."""
-        return Field(
-            name,
-            label,
-            self.typed.get(name, ""),
-            self.faults.get(name, ""),
-            (),
-            title or label,
-            hint,
-            "text",
-            True,
-            20,
-            name == self.focus,
-        )
+        return replace(self.text(name, label, maximum=20, title=title, hint=hint), figure=True)
 
     def choice(self, name: str, label: str, choices: Choices, *, first: str = "", title: str = "") -> Field:
         """This function will return a list to choose from; `first` is chosen while nothing was typed.

@@ -1,6 +1,6 @@
 """The inspector's screen: one aircraft on one day, what it rests on, who could sign, what lacks."""
 
-from datetime import UTC, date, datetime, timedelta
+from datetime import date, datetime, timedelta
 from typing import Any
 from zoneinfo import ZoneInfo
 
@@ -14,14 +14,13 @@ from fleet.queries.aircraft import aircraft_of, all_aircraft
 from fleet.queries.duties import holders_at
 from fleet.queries.in_force import in_force_for
 from fleet.queries.settings import settings_at
-from loads.queries.current import Current
 from loads.queries.inspection import Flown, flights_without_manifest, loads_of_day, numbers_of
 from loads.queries.rechecks import flags_of
 from loads.web.asking import zone_of, zone_words
 from loads.web.beside import flag_shown
+from loads.web.flights import flight_of
 from loads.web.inspect_versions import basis_shown, equipment_shown, provisions_shown, weight_shown
 from loads.web.looking import Look, begins, ends
-from loads.web.shown import verdict_words
 from records.refusal import NotKnown
 from records.web.asking import operator_of, signed_in
 
@@ -45,7 +44,7 @@ def inspect(request: HttpRequest) -> HttpResponse:
         "fleet": [one.registration for one in all_aircraft(operator)],
         "aircraft": aircraft,
         "numbers": numbers_of(operator),
-        "lacking": [_flight(one, zone) for one in flights_without_manifest(operator, since, until)],
+        "lacking": [flight_of(one, zone) for one in flights_without_manifest(operator, since, until)],
         "days": DAYS,
         "until": until.astimezone(zone).strftime("%Y-%m-%d %H:%M"),
         "now": now.astimezone(zone).strftime("%Y-%m-%d %H:%M"),
@@ -80,29 +79,11 @@ def _of_day(aircraft: Aircraft, day: date, zone: ZoneInfo, now: datetime) -> dic
     }
 
 
-def _flight(current: Current, zone: ZoneInfo) -> dict[str, Any]:
-    load = current.load
-    return {
-        "id": load.id,
-        "registration": load.aircraft.registration,
-        "reference": load.reference,
-        "leg": load.leg,
-        "origin": load.origin,
-        "destination": load.destination,
-        "local": load.departure.astimezone(zone).strftime("%Y-%m-%d %H:%M"),
-        "utc": load.departure.astimezone(UTC).strftime("%H:%M"),
-        "verdict": current.assessment.verdict,
-        "verdict_words": verdict_words(current.assessment.verdict),
-        "state": current.state,
-        "reason": current.step.reason,
-    }
-
-
 def _load(one: Flown, zone: ZoneInfo, now: datetime) -> dict[str, Any]:
     load, used = one.current.load, one.current.assessment
     held_now = in_force_for(load.aircraft, load.departure, now, load.configuration)
     filed = getattr(one.paper, "filed", None) if one.paper is not None else None
-    return _flight(one.current, zone) | {
+    return flight_of(one.current, zone) | {
         "gone": one.current.state in {"superseded", "withdrawn"},
         "number": one.paper.number if one.paper else None,
         "pdf_digest": filed.document_id if filed else None,

@@ -1,6 +1,6 @@
 """The rejects desk: what cannot depart, why, who has it, what was said, what became of it, and the trend."""
 
-from datetime import UTC, date, datetime, time, timedelta
+from datetime import date, datetime, time, timedelta
 from time import monotonic
 from typing import Any
 from uuid import UUID
@@ -16,7 +16,7 @@ from loads.actions.remark_reject import LONGEST_REMARK, read_remark, remark_reje
 from loads.acts import REMARK_REJECT, REVISE_LOAD
 from loads.manifest.words import Words
 from loads.models import Remark
-from loads.queries.current import Current, result_in
+from loads.queries.current import result_in
 from loads.queries.rejects import (
     MOST_REJECTS,
     Reject,
@@ -29,6 +29,7 @@ from loads.queries.remedies import SECONDS
 from loads.queries.trend import WEEK, Trend, reject_trend
 from loads.trend_chart import Series, trend_chart
 from loads.web.asking import zone_of, zone_words
+from loads.web.flights import flight_of
 from loads.web.remedies import first_sentence
 from loads.web.shown import stops
 from loads.web.wording import words_at
@@ -93,26 +94,10 @@ def _page(
     return render(request, "loads/rejects.html", context, status=refusal.status if refusal else 200)
 
 
-def _flight(current: Current, zone: ZoneInfo) -> dict[str, Any]:
-    load = current.load
-    return {
-        "id": load.id,
-        "registration": load.aircraft.registration,
-        "reference": load.reference,
-        "leg": load.leg,
-        "origin": load.origin,
-        "destination": load.destination,
-        "local": load.departure.astimezone(zone).strftime("%Y-%m-%d %H:%M"),
-        "utc": load.departure.astimezone(UTC).strftime("%H:%M"),
-        "verdict": current.assessment.verdict,
-        "state": current.state,
-    }
-
-
 def _reject(one: Reject, zone: ZoneInfo, now: datetime, words: Words) -> dict[str, Any]:
     load, result = one.current.load, one.current.result()
     governing: Any = result.get("governing") or {}
-    return _flight(one.current, zone) | {
+    return flight_of(one.current, zone) | {
         "past": load.departure < now,
         "stops": stops(result, words),
         "governing": [
@@ -136,7 +121,7 @@ def _remark(one: Remark, zone: ZoneInfo) -> dict[str, str]:
 
 def _settled(one: Settled, zone: ZoneInfo, words: Words) -> dict[str, Any]:
     load = one.current.load
-    return _flight(one.current, zone) | {
+    return flight_of(one.current, zone) | {
         "rejected": one.rejected.verdict,
         "stops": [f"{stop['title']}: {stop['margin']}" for stop in stops(result_in(one.rejected), words)],
         "became": _became(one),
