@@ -37,7 +37,7 @@ from service import roles  # noqa: E402  # as above
 from service.allowed import grantable  # noqa: E402  # as above
 from service.embedded import postgres, valkey  # noqa: E402  # as above
 from tests import databases  # noqa: E402  # as above
-from tests.cast import actor, cast  # noqa: E402  # as above
+from tests.cast import Cast, actor, cast  # noqa: E402  # as above
 from tests.loads.making import DEPARTURE, DEPARTURE_AT, load_document  # noqa: E402  # as above
 from tests.makers import q, ready_aircraft  # noqa: E402  # as above
 
@@ -57,21 +57,22 @@ _flights = itertools.count(1)
 
 @dataclass(frozen=True)
 class Served:
-    """What is served: the number of each server's process, the body and token of a submission, and a session
-    of the superuser.
+    """What is served: the number of each server's process, the body and token of a submission, a session of
+    the superuser, and the people of the operator.
     """
 
     processes: dict[str, int]
     body: str
     token: str
     admin: "psycopg.Connection[Any]"
+    people: Cast
 
 
 @contextmanager
 def served(*names: str) -> Iterator[Served]:
     """This function will serve the named applications on one database until the block ends."""
     with _server(), databases.copied("bench") as database, ExitStack() as running:
-        body, token = _scene()
+        people, body, token = _scene()
         admin = running.enter_context(psycopg.connect(databases.server(), dbname=database, autocommit=True))
         admin.execute(
             "CREATE TABLE bench_row "
@@ -83,7 +84,7 @@ def served(*names: str) -> Iterator[Served]:
         running.callback(valkey.stop, broker)
         os.environ["BROKER_URL"] = broker.url
         processes = {name: running.enter_context(_granian(name, APPLICATIONS[name])) for name in names}
-        yield Served(processes, body, token, admin)
+        yield Served(processes, body, token, admin, people)
 
 
 @contextmanager
@@ -100,7 +101,14 @@ def _server() -> Iterator[None]:
             postgres.stop(cluster)
 
 
-def _scene() -> tuple[str, str]:
+def address_of_database() -> str:
+    """This function will return the address of the database of now, for the service role."""
+    place = connections.settings["default"]
+    login = f"{place['USER']}:{place['PASSWORD']}"
+    return f"postgresql://{login}@:{place['PORT'] or 5432}/{place['NAME']}?host={place['HOST']}"
+
+
+def _scene() -> tuple[Cast, str, str]:
     settings.PASSWORD_HASHERS = ["django.contrib.auth.hashers.MD5PasswordHasher"]
     people = cast()
     ready_aircraft(people)
@@ -122,14 +130,11 @@ def _scene() -> tuple[str, str]:
         }
         for number in range(20)
     ]
-    return json.dumps(load_document(people, items=items)), token.secret
+    return people, json.dumps(load_document(people, items=items)), token.secret
 
 
 @contextmanager
 def _granian(name: str, application: str) -> Iterator[int]:
-    place = connections.settings["default"]
-    login = f"{place['USER']}:{place['PASSWORD']}"
-    address = f"postgresql://{login}@:{place['PORT'] or 5432}/{place['NAME']}?host={place['HOST']}"
     command = (
         sys.executable, "-m", "granian", "--interface", "wsgi", "--host", "127.0.0.1",
         "--port", str(PORTS[name]), "--workers", "2", "--blocking-threads", "4", "--no-ws",
@@ -137,7 +142,7 @@ def _granian(name: str, application: str) -> Iterator[int]:
     )  # fmt: skip
     # One client of many: as many requests as it likes, each of them charged.
     unlimited = {"RATE_LIMIT_KNOWN": "1000000", "RATE_LIMIT_STRANGER": "1000000"}
-    environment = {**os.environ, **unlimited, "DATABASE_URL": address, "LOG_LEVEL": "ERROR"}
+    environment = {**os.environ, **unlimited, "DATABASE_URL": address_of_database(), "LOG_LEVEL": "ERROR"}
     environment.pop("OWNER_DATABASE_URL", None)
     process = subprocess.Popen(command, cwd=ROOT, env=environment)
     try:
