@@ -221,6 +221,17 @@ class Chord:
 
 
 @dataclass(frozen=True, slots=True)
+class OtherDatum:
+    """A datum that other papers of the aircraft count arms from. `offset` is how far aft of the basis's own
+    it lies, in the length unit of the basis: arm from the basis's datum = arm from this one + offset.
+    """
+
+    name: str
+    offset: Fraction
+    source: Source
+
+
+@dataclass(frozen=True, slots=True)
 class SampleLoad:
     """A sample load of the manual; it must come out as printed before the basis can be approved."""
 
@@ -271,4 +282,5 @@ class Basis:
     trim: Trim | None = None
     curtailments: tuple[Curtailment, ...] = ()  # the operator's own margins inside the envelopes
     presentation: Presentation | None = None  # how moments are shown, never an input to a decision
+    other_datums: tuple[OtherDatum, ...] = ()
     closed: tuple[tuple[str, str], ...] = ()  # seats and places not to be used, each with the restriction

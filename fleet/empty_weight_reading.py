@@ -10,7 +10,7 @@ slip, and neither is taken.
 """
 
 from collections.abc import Mapping
-from dataclasses import dataclass
+from dataclasses import dataclass, replace
 from datetime import date, datetime, timedelta
 from decimal import Decimal
 from fractions import Fraction
@@ -20,7 +20,7 @@ from fleet.basis import Basis
 from fleet.conversion import in_unit, moment_unit
 from fleet.document_schema import shape_faults
 from fleet.quantities import Quantity, Unit
-from fleet.weighing import EmptyFigures
+from fleet.weighing import EmptyFigures, Restated
 from records.refusal import Fault, Invalid
 
 SCHEMA = "empty-weight-1"
@@ -53,17 +53,19 @@ def read_particulars(document: object) -> EmptyWeightParticulars:
 def read_empty_weight(document: object, basis: Basis) -> EmptyFigures:
     """Return the figures in the units of the basis it will be used with.
 
-    Raises `Invalid` with all faults: of form, a datum or fit the basis does not have, a moment far from
-    weight times arm.
+    From another datum of which the basis states how far it lies away, they are restated. Raises `Invalid`
+    with all faults: of form, a datum or fit the basis does not have, a moment far from weight times arm.
     """
     entry = _sound(document)
     faults = []
-    if entry["datum"] != basis.datum:
+    other = next((one for one in basis.other_datums if one.name == entry["datum"]), None)
+    if entry["datum"] != basis.datum and other is None:
         faults.append(
             Fault(
                 "/datum",
                 "datum-differs",
-                f"the loading basis counts arms from {basis.datum!r}; restate the figures for that datum",
+                f"the loading basis counts arms from {basis.datum!r}; restate the figures for that datum, or "
+                "enter in the basis how far this one lies from it",
             )
         )
     if entry["fit"] not in basis.fits:
@@ -71,14 +73,30 @@ def read_empty_weight(document: object, basis: Basis) -> EmptyFigures:
         faults.append(Fault("/fit", "fit-unknown", f"not a fit of the loading basis; use one of {choice}"))
     if faults:
         raise Invalid(*faults)
+    weight, moment = _exact(entry["weight"], basis.weight_unit), _moment(entry, "", basis)
+    restated = None
+    if entry["datum"] != basis.datum and other is not None:
+        restated = Restated(other.name, moment, other.offset, other.source)
+        moment += weight * other.offset
     return EmptyFigures(
-        weight=_exact(entry["weight"], basis.weight_unit),
-        moment=_moment(entry, "", basis),
+        weight=weight,
+        moment=moment,
         lateral_moment=_moment(entry, "lateral_", basis),
         datum=basis.datum,
         fit=entry["fit"],
         how=entry["how"],
+        restated=restated,
     )
+
+
+def read_as_recorded(document: object, basis: Basis) -> EmptyFigures:
+    """Return the figures in the units of a basis they need not go with: they keep their own fit, and their
+    own datum where the basis does not state how far it lies away. Raises `Invalid` with all faults of form.
+    """
+    particulars = read_particulars(document)
+    known = any(one.name == particulars.datum for one in basis.other_datums)
+    datum = basis.datum if known else particulars.datum
+    return read_empty_weight(document, replace(basis, datum=datum, fits=(particulars.fit,)))
 
 
 def _sound(document: object) -> Mapping[str, Any]:

@@ -4,12 +4,27 @@ from dataclasses import dataclass
 from fractions import Fraction
 from typing import Literal
 
+from fleet.sourced import Source
+
+
+@dataclass(frozen=True, slots=True)
+class Restated:
+    """From which datum the figures were given, with the moment there, and how far aft of the other it lies:
+    moment here = moment there + weight * offset.
+    """
+
+    datum: str
+    moment: Fraction
+    offset: Fraction
+    source: Source
+
 
 @dataclass(frozen=True, slots=True)
 class EmptyFigures:
     """Weight, moment and lateral moment of the empty aircraft.
 
-    A recorded moment beats weight times printed arm.
+    A recorded moment beats weight times printed arm. `restated` tells the working where the paper counts from
+    another datum.
     """
 
     weight: Fraction
@@ -18,3 +33,4 @@ class EmptyFigures:
     datum: str
     fit: str
     how: Literal["weighing", "opening entry", "calculated"]
+    restated: Restated | None = None

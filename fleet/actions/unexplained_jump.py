@@ -1,10 +1,9 @@
 """A large step of the empty weight is not taken silently: beyond the threshold it needs a cause."""
 
-from dataclasses import replace
 from datetime import datetime
 
 from fleet.basis import Basis
-from fleet.empty_weight_reading import read_empty_weight, read_particulars
+from fleet.empty_weight_reading import read_as_recorded
 from fleet.jump import jump_of
 from fleet.models import Aircraft, EmptyWeight
 from fleet.queries.figures import basis_of
@@ -44,6 +43,4 @@ def refuse_unexplained_jump(aircraft: Aircraft, empty_weight: EmptyWeight, known
 
 
 def _figures(version: EmptyWeight, basis: Basis) -> EmptyFigures:
-    document = read(version.document.encode())
-    particulars = read_particulars(document)
-    return read_empty_weight(document, replace(basis, datum=particulars.datum, fits=(particulars.fit,)))
+    return read_as_recorded(read(version.document.encode()), basis)

@@ -7,6 +7,7 @@ from typing import Any
 from fleet.basis import Basis, Chord
 from fleet.basis_reading.configurations import read_configurations
 from fleet.basis_reading.curtailments import read_curtailments
+from fleet.basis_reading.datums import read_other_datums
 from fleet.basis_reading.envelopes import lateral_limits_entered, read_envelopes
 from fleet.basis_reading.findings import Findings, exact
 from fleet.basis_reading.fuel import read_burn_order, read_tanks, read_taxi_order
@@ -41,7 +42,7 @@ def read_basis(document: object) -> Basis:
     findings = Findings(dict(document), faults)
     parts = _parts(findings)
     if findings.faults:
-        raise Invalid(*findings.faults)
+        raise Invalid(*dict.fromkeys(findings.faults))  # a limit that serves several is told of once
     return _basis(findings, parts)
 
 
@@ -87,6 +88,7 @@ def _parts(findings: Findings) -> dict[str, Any]:
         "cumulative": read_cumulative(findings),
         "curtailments": read_curtailments(findings, envelopes),
         "presentation": read_presentation(findings),
+        "other_datums": read_other_datums(findings),
     }
 
 

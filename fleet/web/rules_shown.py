@@ -13,6 +13,7 @@ Document = Mapping[str, Any]
 def rule_rows(document: Document) -> list[Row]:
     """This function will return a row for each of them; [] for a basis that has none."""
     return [
+        *_datums(document),
         *_envelopes(document),
         *_changed(document, "certification_categories", "in the {}"),
         *_changed(document, "modifications", "with {} fitted"),
@@ -21,6 +22,17 @@ def rule_rows(document: Document) -> list[Row]:
         *_fuel_balance(document),
         *_trim(document),
     ]
+
+
+def _datums(document: Document) -> Iterator[Row]:
+    """Yield how far each other datum lies from that of the basis."""
+    for each in document.get("other_datums", ()):
+        offset = f"{each['offset']['value']} {each['offset']['unit']}"
+        yield {
+            "title": f"Arms from {each['name']}",
+            "value": f"{offset} is added: arms from {document['datum']['name']}",
+            "source": source_words(document, each["source"]),
+        }
 
 
 def _envelopes(document: Document) -> Iterator[Row]:

@@ -11,7 +11,7 @@ from loads.balance.fuel import FuelOffTable
 from loads.balance.over_flight import coming_items, coming_people
 from loads.balance.prepared import Prepared
 from loads.balance.result import Check
-from loads.balance.rounding import VOLUME_PLACES, WEIGHT_PLACES, printed
+from loads.balance.rounding import LENGTH_PLACES, MOMENT_PLACES, VOLUME_PLACES, WEIGHT_PLACES, printed
 
 
 def no_basis() -> Check:
@@ -37,8 +37,21 @@ def empty_weight_check(empty: EmptyFigures | None, basis: Basis, fit: str) -> Ch
         why = f"the empty weight is on {empty.fit}, the configuration is flown on {fit}"
         fix = "Enter the empty weight on the fit of this configuration"
     else:
-        return Check(code, title, "pass", margin_text=f"{empty.how}, on {empty.fit}")
+        return Check(code, title, "pass", margin_text=f"{empty.how}, on {empty.fit}{_restated(empty, basis)}")
     return Check(code, title, "unresolved", margin_text=why, what_next=f"{fix}, then assess again.")
+
+
+def _restated(empty: EmptyFigures, basis: Basis) -> str:
+    """Return the working of an empty weight from another datum; "" where it counts from the basis's own."""
+    other = empty.restated
+    if other is None:
+        return ""
+    moment = f"{basis.weight_unit.value} {basis.length_unit.value}"
+    places, arms = MOMENT_PLACES[basis.length_unit], LENGTH_PLACES[basis.length_unit]
+    weight, offset = printed(empty.weight, WEIGHT_PLACES), printed(other.offset, arms)
+    sum_ = f"{printed(other.moment, places)} + {weight} x {offset}"
+    here = f"{printed(empty.moment, places)} {moment} from '{basis.datum}'"
+    return f"; restated from '{other.datum}': {sum_} = {here} ({other.source})"
 
 
 def weight_knowledge(declared: Declared) -> list[Check]:

@@ -123,6 +123,8 @@ def _empty(empty: EmptyFigures | None) -> Line:
     # The recorded moment stands, whatever arm was printed beside it.
     arm = quotient(empty.moment, empty.weight)
     what = f"empty weight ({empty.how})"
+    if empty.restated is not None:
+        what += f", restated from '{empty.restated.datum}'"
     return Line("empty weight", what, FROM_RECORD, empty.weight, arm, empty.moment, empty.lateral_moment)
 
 

@@ -1,10 +1,9 @@
 """The figures in a stored empty weight, in the units of the loading basis it is used with."""
 
-from dataclasses import replace
 from functools import lru_cache
 
 from fleet.basis_reading import basis_from_text
-from fleet.empty_weight_reading import read_empty_weight, read_particulars
+from fleet.empty_weight_reading import read_as_recorded
 from fleet.weighing import EmptyFigures
 from records.strict_json import read
 
@@ -13,10 +12,8 @@ from records.strict_json import read
 def empty_figures(text: str, basis_text: str) -> EmptyFigures:
     """This function will return the figures of a stored empty weight; texts already read are remembered.
 
-    They keep their own datum and fit. When these are not the basis's, the assessment says so and leaves the
-    load unresolved: that is nothing the submitter could correct in the load.
+    They keep their own datum, unless the basis states how far it lies away, and their own fit. When these are
+    not the basis's, the assessment says so and leaves the load unresolved: that is nothing the submitter
+    could correct in the load.
     """
-    document = read(text.encode())
-    particulars = read_particulars(document)
-    basis = basis_from_text(basis_text)
-    return read_empty_weight(document, replace(basis, datum=particulars.datum, fits=(particulars.fit,)))
+    return read_as_recorded(read(text.encode()), basis_from_text(basis_text))

@@ -36,6 +36,7 @@ _BASIS: Final = frozenset(
         "sample_loads",
         "presentation",
         "modifications",
+        "other_datums",
     ]
 )
 _SEAT: Final = frozenset(
