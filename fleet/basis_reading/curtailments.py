@@ -21,7 +21,8 @@ def read_curtailments(findings: Findings, envelopes: tuple[Envelope, ...]) -> tu
     """Return the curtailments; one that serves no envelope, overlaps itself or leaves nothing is a fault."""
     findings.once(("curtailments",))
     entered = [(at, _curtailment(findings, at, entry)) for at, entry in findings.entries("curtailments")]
-    if findings.sound("/envelopes"):
+    # Where an envelope was refused, a margin that seems to serve none is no second fault.
+    if findings.sound("/envelopes") and len(envelopes) == len(findings.document["envelopes"]):
         _demand_envelopes(findings, entered, envelopes)
         _demand_something_left(findings, entered, envelopes)
     return tuple(each for _, each in entered)

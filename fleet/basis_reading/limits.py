@@ -1,5 +1,7 @@
 """Reads the weight limits and refuses those that contradict each other."""
 
+from collections.abc import Iterator
+from collections.abc import Set as AbstractSet
 from typing import Any
 
 from fleet.basis import Limits
@@ -21,7 +23,7 @@ _NOT_ABOVE = (
 def read_limits(findings: Findings) -> Limits:
     """Return the limits of the basis; what was not entered is None."""
     limits = given_limits(findings, findings.document.get("limits"), "/limits")
-    demand_consistent(findings, limits, "/limits")
+    demand_consistent(findings, limits, set(FIELDS), "/limits")
     return limits
 
 
@@ -32,7 +34,7 @@ def tightened(findings: Findings, own: dict[str, Any] | None, at: str, of_basis:
     if own is None:
         return of_basis
     limits = tighter(findings, own, at, of_basis)
-    demand_consistent(findings, limits, at)
+    demand_consistent(findings, limits, own.keys(), at)
     return limits
 
 
@@ -53,26 +55,28 @@ def tighter(findings: Findings, own: dict[str, Any], at: str, of_basis: Limits) 
     return Limits(**found)
 
 
-def demand_consistent(findings: Findings, limits: Limits, at: str) -> None:
-    """Add a fault for every pair of limits that cannot both hold."""
+def demand_consistent(findings: Findings, limits: Limits, own: AbstractSet[str], at: str) -> None:
+    """Add a fault for every pair of limits that cannot both hold, at the first of the pair.
+
+    `own` are the fields given here: a pair of which neither is has its fault elsewhere.
+    """
+    for field, detail in contradictions(limits, own):
+        findings.fault(f"{at}/{field}", "limits-contradict", detail)
+
+
+def contradictions(limits: Limits, own: AbstractSet[str]) -> Iterator[tuple[str, str]]:
+    """Yield the first of every pair of limits that cannot both hold, one of them own, and what to do."""
     values = {field: limit.value for field in FIELDS if (limit := getattr(limits, field)) is not None}
     for lower, upper in _NOT_ABOVE:
         low, high = values.get(lower), values.get(upper)
-        if low is not None and high is not None and low > high:
-            findings.fault(
-                f"{at}/{lower}",
-                "limits-contradict",
-                f"the {_words(lower)} limit lies above the {_words(upper)} limit; check both figures",
-            )
+        if low is not None and high is not None and low > high and own & {lower, upper}:
+            yield lower, f"the {_words(lower)} lies above the {_words(upper)}; check both figures"
     least = values.get("minimum_flying")
     for field in ("take_off", "landing"):
         most = values.get(field)
-        if least is not None and most is not None and least >= most:
-            findings.fault(
-                f"{at}/minimum_flying",
-                "limits-contradict",
-                f"the minimum flying weight leaves nothing below the {_words(field)} limit; check both",
-            )
+        if least is not None and most is not None and least >= most and own & {"minimum_flying", field}:
+            detail = f"the minimum flying weight leaves nothing below the {_words(field)}; check both"
+            yield "minimum_flying", detail
 
 
 def given_limits(findings: Findings, given: Any, at: str) -> Limits:
@@ -100,4 +104,6 @@ def _looser(mine: Limit, theirs: Limit, *, least: bool) -> bool:
 
 
 def _words(field: str) -> str:
-    return field.replace("_", " ")
+    if field == "with_external_load":
+        return "limit with an external load"
+    return f"{field.replace('_', ' ')} limit"

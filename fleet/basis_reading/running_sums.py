@@ -38,7 +38,9 @@ def read_conditional(findings: Findings, at: str, given: list[dict[str, Any]]) -
         findings.known(each["when"], known, f"{here}/when", "condition")
         when = frozenset(each["when"])
         if any(when == earlier.when for earlier in found):
-            findings.fault(f"{here}/when", "duplicate", "a maximum for these very conditions is already here")
+            findings.fault(
+                f"{here}/when", "duplicate", "a maximum for these very conditions is already here; keep one"
+            )
         maximum = findings.limit(each["maximum"], f"{here}/maximum")
         if maximum is not None:
             found.append(Conditional(when, maximum))

@@ -27,7 +27,6 @@ def read_trim(findings: Findings) -> Trim | None:
     step = number(given["step"])
     if step <= 0:
         findings.fault("/trim/step", "not-above-zero", "must be above zero; enter how finely it is printed")
-        return None
     low, high, source = _range(findings, given)
     against: Literal["arm", "chord"] = "chord" if given["against"] == "chord" else "arm"
     return Trim(against, given["unit"], step, low, high, source, tables)
@@ -47,7 +46,9 @@ def _lines(findings: Findings, given: dict[str, Any]) -> list[tuple[str | None, 
             )
     elif "against_unit" in given:
         findings.fault(
-            "/trim/against_unit", "unit-dimension", "percent and index units have no other; leave it out"
+            "/trim/against_unit",
+            "unit-dimension",
+            "percent of the chord and index units need no further unit; leave it out",
         )
     elif given["against"] == "chord" and "none" in findings.document.get("chord", {}):
         findings.fault(
@@ -109,5 +110,5 @@ def _range(findings: Findings, given: dict[str, Any]) -> tuple[Any, Any, Any]:
         return None, None, None
     low, high = number(given["range"]["low"]), number(given["range"]["high"])
     if low >= high:
-        findings.fault("/trim/range/high", "range-empty", "the range ends below where it begins; correct one")
+        findings.fault("/trim/range/high", "range-empty", "must be above where the range begins; correct one")
     return low, high, findings.source(given["range"]["source"])

@@ -6,7 +6,7 @@ from typing import Any
 from fleet.applicable import tightest
 from fleet.basis import Limits
 from fleet.basis_reading.findings import Findings
-from fleet.basis_reading.limits import FIELDS, demand_consistent, given_limits, tighter
+from fleet.basis_reading.limits import FIELDS, contradictions, given_limits, tighter
 from fleet.flight_rules import CertificationCategory, Modification, NamedLimits
 
 
@@ -37,8 +37,8 @@ class Variants:
                         "enter the two together as one modification, as they were approved",
                     )
                 limits = replace(limits, **{field: limit})
-        if fitted:
-            demand_consistent(findings, limits, f"{at}/modifications")
+        for _, detail in contradictions(limits, by.keys()):
+            findings.fault(f"{at}/modifications", "limits-contradict", detail)
         return limits
 
     def served(self, findings: Findings, entry: dict[str, Any]) -> list[Limits]:

@@ -1,0 +1,389 @@
+"""What a loading basis states arrives whole: every field of every section, exactly, with its own source.
+
+1 lb is 0.45359237 kg and 1 in is 2.54 cm, both exactly (the international pound and inch, remembered).
+"""
+
+from fractions import Fraction
+
+import pytest
+
+from fleet.basis import (
+    Basis,
+    BurnStage,
+    Chord,
+    Configuration,
+    Envelope,
+    FixedItem,
+    Limits,
+    Place,
+    SampleLoad,
+    Seat,
+    Tank,
+    TankTable,
+    Zone,
+)
+from fleet.basis_reading import read_basis
+from fleet.curtailment import Amounts, Curtailment, Inset
+from fleet.flight_rules import CertificationCategory, Modification, PerformanceRule
+from fleet.fuel_balance import FuelBalance
+from fleet.lateral import LateralByCg
+from fleet.positions import MovingPart, PartState
+from fleet.presentation import DividedMoment, IndexUnits, Presentation
+from fleet.quantities import Unit
+from fleet.sourced import Limit, Source
+from fleet.stations import (
+    Condition,
+    Conditional,
+    Cumulative,
+    CumulativeStep,
+    Floor,
+    FloorLimit,
+    Rail,
+    Setting,
+)
+from fleet.trim import Trim, TrimLine, TrimTable
+from tests.pure.fleet.everything import everything
+
+F = Fraction
+LB = F("0.45359237")  # kg
+KG_M = 1 / (LB * F("0.0254"))  # lb in
+OTHER = Source("OK62-S7", "2", "3")
+
+
+def of(page):
+    return Source("OK62-FM", "D", page)
+
+
+PAGE = of("7-1")
+
+
+def most(value, source=PAGE):
+    return Limit(F(value), source)
+
+
+def basis() -> Basis:
+    return read_basis(everything())
+
+
+def test_what_the_basis_is_of():
+    one = basis()
+    assert (one.aircraft_type, one.category, one.engines) == ("Ostrel Kestava 62", "aeroplane", 2)
+    assert (one.passenger_seats_installed, one.datum, one.fits) == (4, "nose reference plane", ("wheels",))
+    assert (one.weight_unit, one.length_unit, one.volume_unit) == (Unit.LB, Unit.IN, Unit.US_GAL)
+    assert one.chord == Chord(F(148), F(64), of("6-3"))
+    assert one.lateral_limits_entered is True
+
+
+def test_seats():
+    plain, railed, attended = basis().seats[0], basis().seats[2], basis().seats[3]
+    assert plain == Seat(
+        "COCKPIT-L", "left cockpit seat", "crew", F(132), F("-11.5"), most(300, of("6-9")), of("6-9")
+    )
+    assert railed == Seat(
+        "ROW1-L",
+        "row 1, left",
+        "passenger",
+        F(168),
+        F(-12),
+        most(300, of("6-9")),
+        of("6-9"),
+        row="1",
+        exit_row=True,
+        infant_restraint=True,
+        attendant=False,
+        conditional=(Conditional(frozenset({"NET"}), Limit(120 / LB, OTHER)),),
+        rail=Rail(
+            F(162), F("4.5") / F("0.0254"), (Setting("2", F(165)), Setting("5", F("4.4") / F("0.0254"))), PAGE
+        ),
+    )
+    assert (attended.exit_row, attended.infant_restraint, attended.attendant) == (False, False, True)
+
+
+def test_places_and_zones():
+    hold, aft = basis().places[0], basis().places[2]
+    assert hold == Place("NOSE-HOLD", "nose hold", F(88), F(0), most(240, of("6-10")), of("6-10"))
+    assert aft == Place(
+        "AFT-HOLD",
+        "aft hold",
+        F(236),
+        F(0),
+        most(200, of("6-10")),
+        of("6-10"),
+        conditional=(
+            Conditional(frozenset({"NET"}), most(260)),
+            Conditional(frozenset({"NET", "DOOR"}), Limit(None, PAGE)),
+        ),
+        floor=Floor(
+            runs="along",
+            per_area=FloorLimit(F(75) / 144, Unit.LB_PER_FT2, PAGE),  # 144 square inches to a square foot
+            per_length=FloorLimit(150 / LB * F("0.0254"), Unit.KG_PER_M, OTHER),
+            free_up_to=F(25),
+            free_kinds=("baggage",),
+            length=F(48),
+        ),
+        external=True,
+    )
+    assert basis().zones == (
+        Zone(
+            "AFT-CABIN",
+            "row 2 and aft hold together",
+            ("ROW2-L", "ROW2-R", "ROW2-FLOOR", "AFT-HOLD"),
+            most(640, of("6-10")),
+            (Conditional(frozenset({"DOOR"}), most(500)),),
+        ),
+    )
+
+
+def test_conditions_and_running_sums():
+    assert basis().conditions == (Condition("NET", "net fitted", PAGE), Condition("DOOR", "door off", OTHER))
+    assert basis().cumulative == (
+        Cumulative(
+            "AFT-RUN",
+            "from the tail",
+            "tail",
+            (
+                CumulativeStep("station 236", ("AFT-HOLD",), most(190)),
+                CumulativeStep("station 200", ("ROW2-L", "ROW2-R"), None),
+            ),
+        ),
+        Cumulative(
+            "NOSE-RUN",
+            "from the nose",
+            "nose",
+            (
+                CumulativeStep("station 88", ("NOSE-HOLD",), None),
+                CumulativeStep("station 132", ("COCKPIT-L",), most(500, OTHER)),
+            ),
+        ),
+    )
+
+
+def test_tanks_and_the_orders_in_which_they_feed():
+    assert basis().tanks[2] == Tank(
+        "LEFT-MAIN",
+        "left main tank",
+        F(70),
+        F(-92),
+        TankTable(
+            "volume",
+            "arm",
+            "arm",
+            None,
+            ((F(0), F(166)), (F(20), F("167.4")), (F(45), F("168.8")), (F(70), F("169.6"))),
+        ),
+        of("6-15"),
+    )
+    assert [tank.id for tank in basis().tanks] == ["LEFT-AUX", "RIGHT-AUX", "LEFT-MAIN", "RIGHT-MAIN"]
+    mains = BurnStage(("LEFT-MAIN", "RIGHT-MAIN"))
+    assert basis().burn_order == (BurnStage(("LEFT-AUX", "RIGHT-AUX")), mains)
+    assert basis().taxi_order == (mains,)
+
+
+LIMITS = Limits(
+    ramp=most(6240, of("2-4")),
+    take_off=most(6200, of("2-4")),
+    zero_fuel=most(5500, of("2-4")),
+    landing=most(5900, of("2-4")),
+    minimum_flying=Limit(None, of("2-4")),
+)
+
+
+def test_limits_and_what_replaces_and_tightens_them():
+    assert basis().limits == LIMITS
+    assert basis().certification_categories == (
+        CertificationCategory("normal", "normal category", (), PAGE),
+        CertificationCategory(
+            "utility",
+            "utility category",
+            (("take_off", most(6100)), ("landing", most(5800, OTHER))),
+            OTHER,
+        ),
+    )
+    assert basis().modifications == (Modification("HEAVY", "heavy gear", (("landing", most(6000)),), OTHER),)
+
+
+def test_configurations():
+    kit = (FixedItem("document case and flight kit", F(14), F(140), F(0)),)
+    six, freight = basis().configurations
+    assert six == Configuration(
+        id="six-seat",
+        name="six seats",
+        seats=("COCKPIT-L", "COCKPIT-R", "ROW1-L", "ROW1-R", "ROW2-L", "ROW2-R"),
+        places=("NOSE-HOLD", "AFT-HOLD"),
+        minimum_crew=1,
+        fit="wheels",
+        equipment=(),
+        operating_items=kit,
+        limits=LIMITS,
+    )
+    assert freight == Configuration(
+        id="row-2-out",
+        name="row 2 taken out",
+        seats=("COCKPIT-L", "COCKPIT-R", "ROW1-L", "ROW1-R"),
+        places=("NOSE-HOLD", "ROW2-FLOOR", "AFT-HOLD"),
+        minimum_crew=1,
+        fit="wheels",
+        equipment=(
+            FixedItem("row 2, left seat out", F(-23), F(201), F(-12)),
+            FixedItem("row 2, right seat out", F(-23), F(201), F(12)),
+            FixedItem("floor net and rings", F(17), F(198), F(0)),
+        ),
+        operating_items=kit,
+        limits=Limits(
+            ramp=LIMITS.ramp,
+            take_off=LIMITS.take_off,
+            zero_fuel=most(5400),
+            landing=most(6000),
+            minimum_flying=LIMITS.minimum_flying,
+        ),
+        modifications=("HEAVY",),
+        performance=(PerformanceRule("landing", False, (), (), OTHER),),
+    )
+
+
+def test_rules_on_performance():
+    rule = PerformanceRule("take-off", True, ("climb",), ("passenger-charter", "ferry"), PAGE)
+    assert basis().performance == (rule,)
+
+
+def test_envelopes():
+    points = (("150.5", 3700), ("150.5", 4800), ("155.9", 6240), ("161.95", 6240), (163, 5400), (163, 3700))
+    assert basis().envelopes == (
+        Envelope(
+            id="normal",
+            axis="longitudinal",
+            phases=("ramp", "take-off", "landing", "minimum at landing", "zero fuel"),
+            plane="arm",
+            points=tuple((F(arm), F(weight)) for arm, weight in points),
+            source=of("2-5"),
+        ),
+    )
+
+
+def test_lateral_limits_against_the_cg():
+    points = (("3.8", -90), ("3.8", 90), ("4.2", 60), ("4.2", -60))
+    assert basis().lateral_by_cg == (
+        LateralByCg(
+            id="hover",
+            phases=("take-off", "landing", "minimum at landing"),
+            gives="moment",
+            points=tuple((F(arm) / F("0.0254"), moment * KG_M) for arm, moment in points),
+            source=OTHER,
+            configurations=("row-2-out",),
+            categories=("utility",),
+            positions=(("GEAR", ("UP",)),),
+        ),
+    )
+
+
+def test_moving_parts():
+    assert basis().positions == (
+        MovingPart(
+            "GEAR",
+            "landing gear",
+            "DOWN",
+            (
+                PartState("DOWN", "down", F(0), ("ground", "flight"), PAGE),
+                PartState("UP", "up", -10 * KG_M, ("flight",), PAGE),
+            ),
+        ),
+        MovingPart(
+            "FLAPS",
+            "flaps",
+            "IN",
+            (
+                PartState("IN", "in", F(0), ("ground", "flight"), PAGE),
+                PartState("OUT", "out", F(500), ("ground", "flight"), PAGE),
+            ),
+        ),
+    )
+
+
+def test_how_far_the_fuel_may_differ():
+    assert basis().fuel_balance == (
+        FuelBalance(
+            "MAINS",
+            "main tanks",
+            ("LEFT-MAIN",),
+            ("RIGHT-MAIN",),
+            "volume",
+            F(10),
+            (),
+            ("take-off",),
+            PAGE,
+        ),
+        FuelBalance(
+            "WINGS",
+            "all tanks",
+            ("LEFT-MAIN", "LEFT-AUX"),
+            ("RIGHT-MAIN", "RIGHT-AUX"),
+            "weight",
+            None,
+            ((F(0), F(200)), (F(600), F(90)), (F(1320), F(0))),
+            ("ramp", "take-off", "landing"),
+            OTHER,
+        ),
+    )
+
+
+def test_trim_tables_by_flap_and_rising_weight():
+    points = ((F(150), F(8)), (F(160), F(2)))
+    assert basis().trim == Trim(
+        "arm",
+        "units nose up",
+        F("0.5"),
+        F(0),
+        F(9),
+        OTHER,
+        (
+            TrimTable("up", (TrimLine(F(4000), points, OTHER), TrimLine(F(7000), points, PAGE))),
+            TrimTable("10", (TrimLine(None, points, PAGE),)),
+        ),
+    )
+
+
+def test_the_operators_margins():
+    none = Inset(F(0), F(0))
+    assert basis().curtailments == (
+        Curtailment(
+            id="SEATING",
+            purpose="seating variation",
+            phases=("take-off", "landing", "minimum at landing"),
+            rows=(
+                Amounts(None, F(5000), Inset(F(0), 10 * KG_M), Inset(F("0.5"), F(0)), none, none),
+                Amounts(F(5000), None, Inset(F("0.25"), F(0)), none, none, none),
+            ),
+            source=Source("OM-A", "4", "8-12"),
+            configurations=("six-seat",),
+            categories=("normal",),
+        ),
+    )
+
+
+def test_how_moments_are_shown():
+    assert basis().presentation == Presentation(
+        IndexUnits(F(155), F(1000), F(40), OTHER), DividedMoment(F(1000), PAGE)
+    )
+
+
+@pytest.mark.parametrize(
+    ("place", "phase", "within", "page", "printed"),
+    [
+        (0, "take-off", True, "6-20", (5678, 896500)),
+        (1, "zero fuel", False, "6-21", (5058, 828200)),
+    ],
+)
+def test_sample_loads(place, phase, within, page, printed):
+    sample = basis().sample_loads[place]
+    assert sample.weights[:1] == (FixedItem("empty weight", F(3948), F("157.4"), F(0)),)
+    assert sample == SampleLoad(
+        name=("manual sample A", "manual sample B, too far aft")[place],
+        weights=sample.weights,
+        moments=(None,) * (8, 5)[place],
+        phase=phase,
+        total_weight=F(printed[0]),
+        total_moment=F(printed[1]),
+        tolerance_moment=F(50),
+        within=within,
+        source=of(page),
+    )
