@@ -7,7 +7,7 @@ from pathlib import Path
 from typing import Any
 
 from service.client import Tarebook
-from service.demo.day import HELICOPTER, TURBOPROP, TWIN, TWIN_UNWEIGHED
+from service.demo.day import COMMUTER, HELICOPTER, TURBOPROP, TWIN, TWIN_UNWEIGHED
 
 DATA = Path(__file__).parent / "data"
 # All that was entered on paper before counts from here on.
@@ -31,6 +31,7 @@ AIRFRAMES = (
     Airframe(TWIN_UNWEIGHED.registration, "K62-0131", "twin", weight_approved=False),
     Airframe(TURBOPROP.registration, "F9-207", "turboprop"),
     Airframe(HELICOPTER.registration, "H4-0052", "helicopter"),
+    Airframe(COMMUTER.registration, "W19-0044", "commuter"),
 )
 
 

@@ -1,4 +1,4 @@
-"""The invented day: twelve flights as load documents, and the change that mends one of them.
+"""The invented day: sixteen flights as load documents, and the change that mends one of them.
 
 Weights of people are invented and differ, as people do; nothing here is a real flight, person or place.
 """
@@ -40,7 +40,9 @@ TURBOPROP = Machine(
     "Q9-KTB", "kg", "l", "COCKPIT-L", {"value": "0.803", "unit": "kg/l", "source": "delivery note 4471"}
 )
 HELICOPTER = Machine("Q9-HEK", "kg", "l", "FRONT-R", TURBOPROP.density)
-MACHINES = (TWIN, TWIN_UNWEIGHED, TURBOPROP, HELICOPTER)
+COMMUTER = Machine("Q9-WXC", "kg", "l", "COCKPIT-L", TURBOPROP.density)
+MACHINES = (TWIN, TWIN_UNWEIGHED, TURBOPROP, HELICOPTER, COMMUTER)
+HOOK = "HOOK"  # what hangs on it can be released
 
 
 @dataclass(frozen=True, slots=True)
@@ -62,11 +64,33 @@ class Trip:
     trip: str
     minimum: str
     limits: Sequence[tuple[str, str, str]] = field(default=())  # phase, weight, source
+    second: tuple[str, str] | None = None  # name and weight of a second pilot, in the right cockpit seat
+    events: Sequence[tuple[str, str, Sequence[Mapping[str, str]]]] = field(default=())  # burned, kind, who
 
 
 AMANI = ("r.amani", "R. Amani")
 CORVANE = ("j.corvane", "J. Corvane")
 DULWEN = ("s.dulwen", "S. Dulwen")
+
+
+def _jumpers(*rows: str) -> list[dict[str, str]]:
+    return [{"seat": f"JUMP{row}"} for row in rows]
+
+
+def _to_the_door(*rows: str) -> list[dict[str, str]]:
+    return [{"seat": f"JUMP{row}", "to": "DOOR"} for row in rows]
+
+
+# They bunch at the door three by three, and leave together.
+GROUPS = (("4-L", "4-R", "3-L"), ("3-R", "2-L", "2-R"), ("1-L", "1-R"))
+JUMPS = [
+    event
+    for group, burned in zip(GROUPS, ("62", "64", "66"), strict=True)
+    for event in ((burned, "move", _to_the_door(*group)), (burned, "leave", _jumpers(*group)))
+]
+ROWS = ("1-L", "1-R", "2-L", "2-R", "3-L", "3-R", "4-L", "4-R", "5-L", "5-R", "6-L", "6-R", "7-L", "7-R")
+WEIGHTS = ("84", "71", "90", "66", "78", "93", "69", "81", "74", "88", "62", "79", "85", "70")
+BEHIND = ("3-L", "4-L", "4-R", "5-L", "5-R", "6-L", "6-R", "7-L", "7-R", "8-L", "8-R")
 
 FLIGHTS: tuple[Trip, ...] = (
     Trip(
@@ -145,6 +169,36 @@ FLIGHTS: tuple[Trip, ...] = (
         (("FWD-POD", "baggage", "checked bags", "47"), ("AFT-POD", "baggage", "skis", "28")),
         {"LEFT": "260", "RIGHT": "260"}, "12", "200", "140",
     ),
+    Trip(
+        "WX-401", COMMUTER, "nineteen-seat", "17:20", "XNAL", "XTOL", "passenger-charter", (*CORVANE, "82"),
+        {f"ROW{seat}": weight for seat, weight in zip(ROWS, WEIGHTS, strict=True)},
+        (("NOSE-HOLD", "baggage", "checked bags", "64"), ("AFT-HOLD", "baggage", "checked bags", "118")),
+        {"LEFT": "480", "RIGHT": "480"}, "22", "390", "240",
+        (("take-off", "6500", "performance sheet 31"),), ("G. Ravell", "76"),
+        (("0", "position", ({"FLAPS": "10"},)), ("6", "position", ({"GEAR": "UP"},)),
+         ("9", "position", ({"FLAPS": "0"},)), ("385", "position", ({"GEAR": "DOWN"},))),
+    ),
+    Trip(
+        "HK-307", HELICOPTER, "sling", "16:10", "XNAL", "XNAL", "aerial-work", (*DULWEN, "79"),
+        {},
+        ((HOOK, "cargo", "trough and posts", "310"),),
+        {"MAIN": "130"}, "4", "42", "30",
+        events=(("18", "leave", ({"place": HOOK, "what": "trough and posts"},)),),
+    ),
+    Trip(
+        "KT-211", TURBOPROP, "jump", "18:20", "XNAL", "XNAL", "aerial-work", (*AMANI, "82"),
+        {f"JUMP{seat}": weight for seat, weight in zip(ROWS, WEIGHTS[:8], strict=False)},
+        (),
+        {"LEFT": "170", "RIGHT": "170"}, "10", "95", "80",
+        events=JUMPS,
+    ),
+    Trip(
+        "WX-403", COMMUTER, "nineteen-seat", "19:40", "XTOL", "XNAL", "passenger-charter", (*CORVANE, "82"),
+        {f"ROW{seat}": weight for seat, weight in zip(BEHIND, WEIGHTS, strict=False)},
+        (("AFT-HOLD", "baggage", "checked bags", "182"),),
+        {"LEFT": "300", "RIGHT": "300"}, "22", "180", "160",
+        second=("G. Ravell", "76"),
+    ),
 )  # fmt: skip
 
 # The one that is mended: its bags move from the aft hold to the nose hold.
@@ -161,6 +215,21 @@ def document_of(trip: Trip, day: date) -> dict[str, Any]:
     def weighed(value: str) -> dict[str, str]:
         return {"value": value, "unit": machine.weight_unit}
 
+    def aboard(who: str, position: str, seat: str, heavy: str) -> dict[str, Any]:
+        return {"name": who, "position": position, "seat": seat, "weight": weighed(heavy), "how": "weighed"}
+
+    crew = [{"person": login} | aboard(name, "pilot in command", machine.pilot_seat, weight)]
+    if trip.second:
+        crew.append(aboard(trip.second[0], "second pilot", "COCKPIT-R", trip.second[1]))
+    items = [
+        {"kind": kind, "what": what, "place": place, "weight": weighed(value), "how": "weighed"}
+        | ({"jettisonable": True} if place == HOOK else {})
+        for place, kind, what, value in trip.items
+    ]
+    events = [
+        {"after_burning": weighed(burned), kind: dict(who[0]) if kind == "position" else [*map(dict, who)]}
+        for burned, kind, who in trip.events
+    ]
     return {
         "schema": "tarebook.load/1",
         "aircraft": machine.registration,
@@ -173,17 +242,8 @@ def document_of(trip: Trip, day: date) -> dict[str, Any]:
             "destination": trip.destination,
             "operation": trip.operation,
         },
-        "persons_on_board": 1 + len(trip.seats),
-        "crew": [
-            {
-                "person": login,
-                "name": name,
-                "position": "pilot in command",
-                "seat": machine.pilot_seat,
-                "weight": weighed(weight),
-                "how": "weighed",
-            }
-        ],
+        "persons_on_board": len(crew) + len(trip.seats),
+        "crew": crew,
         "passengers": [
             {
                 "name": NAMES[(3 * first + number) % len(NAMES)],
@@ -193,10 +253,7 @@ def document_of(trip: Trip, day: date) -> dict[str, Any]:
             }
             for number, (seat, value) in enumerate(trip.seats.items())
         ],
-        "items": [
-            {"kind": kind, "what": what, "place": place, "weight": weighed(value), "how": "weighed"}
-            for place, kind, what, value in trip.items
-        ],
+        "items": items,
         "fuel": {
             "density": dict(machine.density),
             "at_engine_start": {
@@ -210,7 +267,7 @@ def document_of(trip: Trip, day: date) -> dict[str, Any]:
         "limits": [
             {"at": at, "weight": weighed(value), "source": source} for at, value, source in trip.limits
         ],
-    }
+    } | ({"sequence": events} if events else {})
 
 
 def mended(document: Mapping[str, Any]) -> dict[str, Any]:

@@ -17,7 +17,7 @@ class Flown:
 
 
 def fly(scheduler: Tarebook, pilots: dict[str, Tarebook], password: str, day: date) -> list[Flown]:
-    """This function will submit the twelve loads and take each as far as it goes; safe to repeat with the
+    """This function will submit the sixteen loads and take each as far as it goes; safe to repeat with the
     same keys.
     """
     return [_fly(trip, scheduler, pilots[trip.pilot[0]], password, day) for trip in FLIGHTS]

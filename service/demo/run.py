@@ -16,7 +16,7 @@ from service.demo.cast import APPROVER, MAINTENANCE, OPERATOR, PILOTS, SCHEDULER
 from service.demo.flights import Flown, fly
 from service.demo.notes import Notes
 from service.demo.people import enter_people
-from service.demo.summary import show_logins, show_summary
+from service.demo.summary import show_logins, show_remedies, show_summary
 
 # The worker files a manifest in well under a second; after this the request itself makes it.
 PATIENCE = timedelta(seconds=30)
@@ -44,6 +44,7 @@ def run(address: str, data: Path) -> None:
     papers = _papers(flown, scheduler, data / "papers")
     notes.keep("entered", True)
     show_summary(console, flown, papers, day)
+    show_remedies(console, flown, scheduler)
     show_logins(console, address, notes.password)
 
 

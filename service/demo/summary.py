@@ -8,6 +8,7 @@ from rich.console import Console
 from rich.table import Table
 
 from loads.cautions import INVENTED
+from service.client import Tarebook
 from service.demo.cast import PEOPLE, SCHEDULER
 from service.demo.flights import Flown
 
@@ -31,6 +32,16 @@ def show_summary(console: Console, flown: list[Flown], papers: dict[str, Path], 
             _shown(papers.get(one.trip.reference)),
         )
     Console(width=max(console.width, NARROWEST), highlight=False, file=console.file).print(table)
+
+
+def show_remedies(console: Console, flown: list[Flown], client: Tarebook) -> None:
+    """This function will print what would bring each reject within, in the words of its page."""
+    for one in flown:
+        if one.last.verdict != "outside":
+            continue
+        console.print(f"What would bring {one.trip.reference} within, each alone:")
+        for remedy in client.remedies(one.last).remedies:
+            console.print(f"  {remedy.sentence}")
 
 
 def _shown(paper: Path | None) -> str:

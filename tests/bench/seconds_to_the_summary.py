@@ -2,8 +2,8 @@
 
     python -m tests.bench.seconds_to_the_summary
 
-The folder of packages is there already: what is measured is database, queue, tables, people, aircraft, twelve
-flights and their papers. These are times, not ratios: they say something only beside each other.
+The folder of packages is there already: what is measured is database, queue, tables, people, aircraft,
+sixteen flights and their papers. These are times, not ratios: they say something only beside each other.
 """
 
 import shutil

@@ -6,6 +6,7 @@ from importlib import import_module
 
 import pypdf
 import pytest
+from django.test import Client
 from pytest_django.live_server_helper import LiveServer
 
 from fleet.models import Operator, Person
@@ -16,6 +17,7 @@ from records.models import Act
 from service.demo.cast import OPERATOR, PEOPLE
 from service.demo.day import FLIGHTS
 from tests.journeys.trail import unsound
+from tests.reading_pages import Page
 
 # The package's own name `run` is the function in it.
 demo = import_module("service.demo.run")
@@ -34,21 +36,21 @@ def day(own_database, tmp_path_factory):
     server.stop()
 
 
-def test_twelve_flights_end_as_they_should(day) -> None:
+def test_sixteen_flights_end_as_they_should(day) -> None:
     loads = list_loads(OPERATOR.code, Filters(), most=100).loads
 
-    assert len(FLIGHTS) == 12
+    assert len(FLIGHTS) == 16
     assert Counter((one.assessment.verdict, one.state) for one in loads) == {
-        ("within", "departed"): 9,
+        ("within", "departed"): 12,
         ("within", "accepted"): 1,
         ("outside", "superseded"): 1,
-        ("outside", "open"): 1,
+        ("outside", "open"): 2,
         ("unresolved", "open"): 1,
     }
     assert Load.objects.exclude(operator_id=OPERATOR.code).count() == 0
 
 
-def test_the_two_rejects_fail_where_they_were_meant_to(day) -> None:
+def test_the_rejects_fail_where_they_were_meant_to(day) -> None:
     loads = list_loads(OPERATOR.code, Filters(), most=100).loads
     failed = {
         one.load.reference: {
@@ -61,16 +63,42 @@ def test_the_two_rejects_fail_where_they_were_meant_to(day) -> None:
     assert failed["LV-103"] == {"cg.landing", "path.longitudinal"}
     assert failed["KT-207"] == {"weight.zero-fuel"}
     assert "standing.empty-weight" in failed["LV-105"]
+    # Inside the certified envelope at take-off, outside the operator's own margin.
+    assert {"cg.take-off", "cg.zero-fuel", "cg.landing"} <= failed["WX-403"]
+
+
+def test_the_commuter_shows_margins_trim_and_index_and_two_loads_change_in_flight(day) -> None:
+    results = {
+        one.load.reference: one.result() for one in list_loads(OPERATOR.code, Filters(), most=100).loads
+    }
+
+    assert results["WX-401"]["trim"]["settings"][0]["flap"] == "10"
+    assert any(check["margin_text"].count("operator's") for check in results["WX-401"]["checks"])
+    assert "event 1, leaves" in json.dumps(results["HK-307"]["sumsheet"])
+    assert "event 6, leaves" in json.dumps(results["KT-211"]["sumsheet"])
+
+
+def test_the_reject_of_the_commuter_has_remedies_that_move_people_and_bags(day) -> None:
+    page = Page(signed_in(day).get(f"/loads/{Load.objects.get(reference='WX-403').id}"))
+
+    assert "What would bring it within" in page.words
+
+
+def signed_in(day):
+    """This function will return a browser in which a pilot of the invented operator signed in."""
+    client = Client()
+    client.force_login(Person.objects.get(login="j.corvane"))
+    return client
 
 
 def test_every_accepted_load_has_its_numbered_paper_in_the_folder_and_in_the_record(day) -> None:
     _, data = day
     papers = sorted((data / "papers").glob("*.pdf"))
 
-    assert len(papers) == 10
-    assert list(Paper.objects.order_by("number").values_list("number", flat=True)) == list(range(1, 11))
-    assert FiledPaper.objects.count() == 10
-    assert Signature.objects.count() == 20
+    assert len(papers) == 13
+    assert list(Paper.objects.order_by("number").values_list("number", flat=True)) == list(range(1, 14))
+    assert FiledPaper.objects.count() == 13
+    assert Signature.objects.count() == 26
     for path in papers:
         text = pypdf.PdfReader(path).pages[0].extract_text()
         assert INVENTED in text
@@ -102,7 +130,9 @@ def test_a_try_that_was_cut_short_goes_on_without_a_second_effect(day, capsys) -
     demo.run(str(server), data)
 
     assert (Act.objects.count(), Load.objects.count(), Person.objects.count()) == before
-    assert "KT-201" in capsys.readouterr().out
+    said = capsys.readouterr().out
+    assert "KT-201" in said
+    assert "What would bring WX-403 within, each alone:\n  " in said
 
 
 def test_the_operator_is_marked_as_invented_and_everybody_has_their_duty(day) -> None:
