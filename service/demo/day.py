@@ -206,6 +206,18 @@ MENDED = "LV-103"
 MENDED_BECAUSE = "bags moved from the aft hold to the nose hold: aft of the limit at landing"
 
 
+def _sequence(trip: Trip) -> dict[str, Any]:
+    unit = trip.machine.weight_unit
+    events = [
+        {
+            "after_burning": {"value": burned, "unit": unit},
+            kind: dict(who[0]) if kind == "position" else [*map(dict, who)],
+        }
+        for burned, kind, who in trip.events
+    ]
+    return {"sequence": events} if events else {}
+
+
 def document_of(trip: Trip, day: date) -> dict[str, Any]:
     """This function will return the load document `tarebook.load/1` of one flight on `day`."""
     machine = trip.machine
@@ -225,10 +237,6 @@ def document_of(trip: Trip, day: date) -> dict[str, Any]:
         {"kind": kind, "what": what, "place": place, "weight": weighed(value), "how": "weighed"}
         | ({"jettisonable": True} if place == HOOK else {})
         for place, kind, what, value in trip.items
-    ]
-    events = [
-        {"after_burning": weighed(burned), kind: dict(who[0]) if kind == "position" else [*map(dict, who)]}
-        for burned, kind, who in trip.events
     ]
     return {
         "schema": "tarebook.load/1",
@@ -267,7 +275,7 @@ def document_of(trip: Trip, day: date) -> dict[str, Any]:
         "limits": [
             {"at": at, "weight": weighed(value), "source": source} for at, value, source in trip.limits
         ],
-    } | ({"sequence": events} if events else {})
+    } | _sequence(trip)
 
 
 def mended(document: Mapping[str, Any]) -> dict[str, Any]:
