@@ -7,8 +7,9 @@ offered.
     rearrange        both together, where neither does it alone: fewest moved, then least weight moved
     leave-items      least weight left behind
     ballast          least ballast
-    less-fuel        least fuel left out, above the minimum at landing
-    fuel-elsewhere   least fuel in other tanks
+    less-fuel        least fuel left out, above the minimum at landing: in whole tenths, of one tank, or alike
+                     of the tanks of one stage of the burn
+    fuel-elsewhere   least fuel in other tanks: in tenths, from one tank or stage to another
     configuration    none: every other configuration that carries all of it as it is
     leave-people     fewest people; only where nothing else helps, and nobody is named
 

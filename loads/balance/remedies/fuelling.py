@@ -1,31 +1,44 @@
-"""Less fuel, or the same fuel in other tanks: the least change that was found to bring a load within.
+"""Less fuel, or the same fuel in other tanks: the least change that brings a load within.
 
 Fuel never goes below what the load wants at landing, and where a limit at zero fuel is broken less fuel is no
-remedy at all. How a change of fuel runs through the burn is not linear (tanks feed in turn, tables bend), so
-amounts are tried: the least that any weight asks for, then a ladder up to all there is, then halving between
-the last amount that did not hold and the first that did. Less fuel that takes off no more than the greatest
-excess of weight is proved the smallest; anything else is the best found.
+remedy at all. It changes in one tank, or alike in all tanks of one stage of the burn. A ladder up to all that
+is there finds an amount that holds; then every such way is searched for less, by proof (`remedies.first`).
+What the time did not suffice to prove is told as the best found.
 """
 
-from collections.abc import Callable, Iterator, Mapping
+from collections.abc import Callable, Iterable, Iterator, Mapping
+from dataclasses import replace
 from fractions import Fraction
 from itertools import permutations
 from math import ceil, floor, lcm
+from typing import NamedTuple
 
 from fleet.basis import Basis
-from fleet.tanks import OutsideTable
-from loads.balance.aboard import Declared, FuelPlan
+from loads.balance.aboard import Declared, FuelPlan, TankFuel
 from loads.balance.fuel import burn
 from loads.balance.remedies.arranging import Found
+from loads.balance.remedies.first import first_that_holds
 from loads.balance.remedies.question import OWN_WEIGHTS, TENTH, Question, broken
 from loads.balance.remedies.steps import Refuel, Step, taken
-from loads.balance.result import Result
+from loads.balance.remedies.varying import CannotBe, Change, Varying, table_points
 
 ZERO = Fraction(0)
 RUNGS = 8
 NOT_BY_FUEL = ("seat.", "place.", "zone.", "persons.")
 Group = tuple[str, ...]  # tanks that change alike
-Made = Callable[[int], tuple[Step, ...] | None]  # from tenths in each tank to the steps
+Made = Callable[[Fraction], tuple[Step, ...] | None]  # from tenths in each tank to the steps
+
+
+class Way(NamedTuple):
+    """One way of changing fuel: each count is `tenths` tenths in all, and counts go from `least` to `most`.
+    `marks` are counts at which what a tank holds stands on a point of its table.
+    """
+
+    made: Made
+    tenths: int
+    least: int
+    most: int
+    marks: tuple[Fraction, ...]
 
 
 def less_fuel(question: Question) -> Found | None:
@@ -39,18 +52,15 @@ def less_fuel(question: Question) -> Found | None:
     most = floor(spare / plan.density / TENTH)
     _, excess = question.weight_range()
     least = max(ceil(-excess / plan.density / TENTH) if excess is not None else 0, 1)
-    best: tuple[int, Found] | None = None
+    ways = []
     for group in _groups(question.declared, question.ready.basis):
-        bound = most if best is None else min(most, best[0] - 1)
+        tanks = [held for held in plan.tanks if held.tank.id in group]
         step = len(group)  # a tenth in each tank of it
-        found = _ladder(question, _drawn_from(plan, group), ceil(Fraction(least, step)), bound // step)
-        if found is not None:
-            count, steps, result = found
-            amount = count * step
-            best = amount, Found(steps, result, amount == least)
-            if amount == least:
-                break
-    return None if best is None else best[1]
+        made, marks = _drawn_from(tanks), [mark for held in tanks for mark in table_points(held, -TENTH)]
+        held_all = min((held.usable for held in tanks), default=ZERO)
+        each = min(most // step, floor(held_all / TENTH))
+        ways.append(Way(made, step, ceil(Fraction(least, step)), each, tuple(marks)))
+    return _smallest(question, ways)
 
 
 def fuel_elsewhere(question: Question) -> Found | None:
@@ -58,19 +68,56 @@ def fuel_elsewhere(question: Question) -> Found | None:
     if not question.declared.fuel.minimum_at_landing or question.breaks(*OWN_WEIGHTS, *NOT_BY_FUEL):
         return None
     plan = question.declared.fuel
-    best: tuple[int, Found] | None = None
+    ways = []
     for start, end in permutations(_groups(question.declared, question.ready.basis), 2):
-        if set(start) & set(end):
-            continue
-        made = _carried_over(plan, start, end)
-        step = lcm(len(start), len(end))
-        bound = _most_carried(plan, start, end)
-        bound = bound if best is None else min(bound, best[0] - 1)
-        found = _ladder(question, made, 1, bound // step)
-        if found is not None:
-            amount = found[0] * step
-            best = amount, Found(found[1], found[2], amount == 1)
-    return None if best is None else best[1]
+        if not set(start) & set(end):
+            tenths = lcm(len(start), len(end))
+            giving = [held for held in plan.tanks if held.tank.id in start]
+            taking = [held for held in plan.tanks if held.tank.id in end]
+            less, more = (Fraction(tenths, len(tanks)) * TENTH for tanks in (giving, taking))
+            marks = [mark for held in giving for mark in table_points(held, -less)]
+            marks += [mark for held in taking for mark in table_points(held, more)]
+            most = _most_carried(plan, start, end) // tenths
+            ways.append(Way(_carried_over(giving, taking, tenths), tenths, 1, most, tuple(marks)))
+    return _smallest(question, ways)
+
+
+def _smallest(question: Question, ways: Iterable[Way]) -> Found | None:
+    """Return the least change of all ways: first one that holds, then by proof whatever is less."""
+    best: tuple[int, Found] | None = None
+    tried = [(way, Varying(question, _change(question, way))) for way in ways]
+    for way, varying in tried:
+        most = way.most if best is None else min(way.most, (best[0] - 1) // way.tenths)
+        count = _ladder(varying, way.least, most)
+        best = _found(way, varying, count) or best
+    for way, varying in tried:
+        most = way.most if best is None else min(way.most, (best[0] - 1) // way.tenths)
+        held = first_that_holds(varying, way.least, most)
+        best = (None if held is None else _found(way, varying, held[0])) or best
+    if best is None:
+        return None
+    return replace(best[1], proven=question.left() > 0)
+
+
+def _found(way: Way, varying: Varying, count: int | None) -> tuple[int, Found] | None:
+    result = None if count is None else varying.result(Fraction(count))
+    steps = None if count is None else way.made(Fraction(count))
+    if count is None or steps is None or result is None or result.verdict != "within":
+        return None
+    return count * way.tenths, Found(steps, result, proven=False)
+
+
+def _change(question: Question, way: Way) -> Change:
+    basis = question.ready.basis
+
+    def changed(count: Fraction) -> Declared:
+        steps = way.made(count)
+        declared = None if steps is None else taken(question.declared, steps)
+        if declared is None or not _burns(declared.fuel, basis):
+            raise CannotBe
+        return declared
+
+    return Change(changed, refuels=True, marks=way.marks)
 
 
 def _groups(declared: Declared, basis: Basis) -> Iterator[Group]:
@@ -86,42 +133,32 @@ def _groups(declared: Declared, basis: Basis) -> Iterator[Group]:
             yield (held.tank.id,)
 
 
-def _ladder(
-    question: Question, made: Made, least: int, most: int
-) -> tuple[int, tuple[Step, ...], Result] | None:
-    """Return the least count found that holds, with its steps: of tenths in each tank that changes."""
+def _ladder(varying: Varying, least: int, most: int) -> int | None:
+    """Return a count that holds: the first rung of a ladder that does, and from there down by halving."""
     if least > most:
         return None
     below = least - 1
     rungs = sorted({least, *(least + (most - least) * rung // RUNGS for rung in range(1, RUNGS + 1))})
     for rung in rungs:
-        held = _tried(question, made, rung)
-        if held is None:
+        if not _holds(varying, rung):
             below = rung
             continue
-        while rung - below > 1:
-            middle = (rung + below) // 2
-            nearer = _tried(question, made, middle)
-            if nearer is None:
-                below = middle
+        high = rung
+        while high - below > 1:
+            middle = (high + below) // 2
+            if _holds(varying, middle):
+                high = middle
             else:
-                rung, held = middle, nearer  # noqa: PLW2901  # the first rung that holds is where halving begins
-        return rung, *held
+                below = middle
+        return high
     return None
 
 
-def _tried(question: Question, made: Made, tenths: int) -> tuple[tuple[Step, ...], Result] | None:
-    steps = made(tenths)
-    if steps is None or not question.left():
-        return None
-    declared = taken(question.declared, steps)
-    if not _burns(declared.fuel, question.ready.basis):
-        return None
-    try:
-        result = question.assessed(declared)
-    except OutsideTable:  # a transfer on the flight would then find a tank too full
-        return None
-    return (steps, result) if result.verdict == "within" else None
+def _holds(varying: Varying, count: int) -> bool:
+    if not varying.question.left():
+        return False
+    result = varying.result(Fraction(count))
+    return result is not None and result.verdict == "within"
 
 
 def _burns(plan: FuelPlan, basis: Basis) -> bool:
@@ -131,10 +168,8 @@ def _burns(plan: FuelPlan, basis: Basis) -> bool:
     return not short and not burn(contents, basis.burn_order, plan.trip / plan.density)[1]
 
 
-def _drawn_from(plan: FuelPlan, group: Group) -> Made:
-    tanks = [held for held in plan.tanks if held.tank.id in group]
-
-    def made(tenths: int) -> tuple[Step, ...] | None:
+def _drawn_from(tanks: list[TankFuel]) -> Made:
+    def made(tenths: Fraction) -> tuple[Step, ...] | None:
         each = tenths * TENTH
         if not tanks or any(held.usable < each for held in tanks):
             return None
@@ -143,12 +178,9 @@ def _drawn_from(plan: FuelPlan, group: Group) -> Made:
     return made
 
 
-def _carried_over(plan: FuelPlan, start: Group, end: Group) -> Made:
-    giving = [held for held in plan.tanks if held.tank.id in start]
-    taking = [held for held in plan.tanks if held.tank.id in end]
-
-    def made(tenths: int) -> tuple[Step, ...] | None:
-        amount = tenths * TENTH * lcm(len(giving), len(taking))
+def _carried_over(giving: list[TankFuel], taking: list[TankFuel], each: int) -> Made:
+    def made(count: Fraction) -> tuple[Step, ...] | None:
+        amount = count * each * TENTH
         less, more = amount / len(giving), amount / len(taking)
         if any(held.usable < less for held in giving):
             return None

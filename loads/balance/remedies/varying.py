@@ -28,6 +28,7 @@ from loads.balance.result import Result
 from loads.balance.touching import each_once
 from loads.balance.varied_flights import Fit, Flights, Sample
 
+QUARTERS = 4
 FINEST = Fraction(1, 1 << 24)  # a range as short as this is not parted further
 Kinds = tuple[object, ...]
 ENDS_OF_RAILS: tuple[Literal["forward", "aft"], ...] = ("forward", "aft")
@@ -44,6 +45,10 @@ class Change(NamedTuple):
     marks: tuple[Fraction, ...] = ()
 
 
+class CannotBe(Exception):
+    """A load of this kind there is not: a tank would hold less than nothing, or could not feed the flight."""
+
+
 @dataclass
 class Varying:
     """One change of a load that is asked about; what was assessed is kept."""
@@ -53,11 +58,13 @@ class Varying:
     kept: dict[Fraction, Result | None] = field(default_factory=dict)
 
     def result(self, at: Fraction) -> Result | None:
-        """Return what the load comes to at an x; None where a tank would take more than its table knows."""
+        """Return what the load comes to at an x; None where a tank would take more than its table knows, or
+        there is no such load.
+        """
         if at not in self.kept:
             try:
                 self.kept[at] = self.question.assessed(self.change.at(at))
-            except OutsideTable:
+            except (OutsideTable, CannotBe):
                 self.kept[at] = None
         return self.kept[at]
 
@@ -78,16 +85,21 @@ class Varying:
     def _parted(self, low: Fraction, high: Fraction) -> Iterator[Root]:
         """Yield where the verdict may turn in every part of a range through which the burn runs alike."""
         cut = (low + high) / 2
-        for share in (4, 8):  # all of the range, else the lower half of it to see where that ends
+        for share in (
+            QUARTERS,
+            2 * QUARTERS,
+        ):  # all of the range, else the lower half of it to see where that ends
             fit = Fit([low + (high - low) * at / share for at in (1, 2, 3)])
             kinds = [self._kinds(at) for at in fit.at]
             if not kinds[0] == kinds[1] == kinds[2]:
                 continue
-            lengths = self._lengths(fit)
-            if share == 4 and all(self._alike(kinds[0], lengths, end) for end in (low, high)):  # noqa: PLR2004  # quarters
-                yield from self._within(low, high)
+            known = not kinds[0] or not isinstance(kinds[0][0], str)
+            lengths = self._lengths(fit) if known else None
+            if share == QUARTERS and all(self._alike(kinds[0], lengths, end) for end in (low, high)):
+                if known:
+                    yield from self._within(low, high)
                 return
-            cut = min(_passed(lengths, low, high), default=cut)
+            cut = min(_passed(lengths or (), low, high), default=cut)
             break
         if not self.question.left() or high - low <= FINEST:
             yield Root(low, high)
@@ -97,15 +109,17 @@ class Varying:
         yield from self._parted(cut, high)
 
     def _kinds(self, at: Fraction) -> Kinds:
-        """Return through which tanks and parts of their tables the burn runs; or what of it is not known."""
+        """Return through which tanks and parts of their tables the burn runs; in words what of it is not
+        known.
+        """
         result = self.result(at)
         if result is None:
-            return ("more than a table knows",)
+            return ("no such load",)
         if result.burn is None:
-            return tuple(check.code for check in result.checks if check.code.startswith("tank-table."))
+            return ("off", *(one.code for one in result.checks if one.code.startswith("tank-table.")))
         path = result.burn.path
         if path.gaps:
-            return tuple(dict.fromkeys((gap.leg, gap.tank) for gap in path.gaps))
+            return ("gap", *dict.fromkeys((gap.leg, gap.tank) for gap in path.gaps))
         plan = self.change.at(at).fuel
         return tuple(
             (each.leg, each.feeding, *_pieces(plan, held_at(each, _middle(each), plan.density), each.feeding))
@@ -113,24 +127,17 @@ class Varying:
         )
 
     def _lengths(self, fit: Fit) -> list[Poly]:
-        """Return the weight each stretch burns, as a polynomial; [] where it is not known."""
-        paths = [
-            result.burn.path
-            for at in fit.at
-            if (result := self.result(at)) is not None
-            and result.burn is not None
-            and not result.burn.path.gaps
-        ]
-        if len(paths) < len(fit.at):
-            return []
+        """Return the weight each stretch burns, as a polynomial."""
+        results = [self.result(at) for at in fit.at]
+        paths = [each.burn.path for each in results if each is not None and each.burn is not None]
         return [
             fit.through([each.start.weight - each.end.weight for each in stretches])
             for stretches in zip(*(path.stretches for path in paths), strict=True)
         ]
 
-    def _alike(self, kinds: Kinds, lengths: Sequence[Poly], end: Fraction) -> bool:
+    def _alike(self, kinds: Kinds, lengths: Sequence[Poly] | None, end: Fraction) -> bool:
         """Return whether the burn runs at an end as it does inside, but for what has no length there."""
-        if not lengths:
+        if lengths is None:
             return self._kinds(end) == kinds
         sizes = [value(each, end) for each in lengths]
         if any(size < 0 for size in sizes):
