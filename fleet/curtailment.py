@@ -222,12 +222,16 @@ def _width(piece: Trapezoid) -> tuple[Fraction, Fraction, Fraction]:
 
 
 def _extremes(piece: Trapezoid, ends: Stretch) -> tuple[Fraction, Fraction]:
-    """Return the least and the greatest width times weight between two weights."""
+    """Return the lesser width times weight at two weights, and the greatest between them.
+
+    Somewhere between it may be less than at both only where nothing is left at the lower: a is 0 or less
+    there, so what bends upward has risen since its least.
+    """
     a, b, c = _width(piece)
-    values = [(c * weight + b) * weight + a for weight in ends]
-    if c and ends[0] < -b / (2 * c) < ends[1]:
-        values.append(a - b * b / (4 * c))
-    return min(values), max(values)
+    least, most = sorted((c * weight + b) * weight + a for weight in ends)
+    if c < 0 and ends[0] < -b / (2 * c) < ends[1]:
+        most = a - b * b / (4 * c)
+    return least, most
 
 
 def _left(piece: Trapezoid, ends: Stretch) -> bool:
@@ -250,22 +254,27 @@ def _tip_alone(own: Trapezoid, insets: tuple[Inset, Inset], ends: Stretch) -> bo
 
 
 def _not_below_zero(a: Fraction, b: Fraction, c: Fraction, ends: Stretch) -> list[Stretch]:
-    """Return where a + b*W + c*W**2 is 0 or more between two weights, irrational ends moved inward."""
+    """Return where a + b*W + c*W**2 is 0 or more between two weights, irrational ends moved inward.
+
+    It is the distance from a moved edge times the weight: where c is not 0 the certified edge is straight in
+    arm, and a, the moment it moved by, is 0 or less.
+    """
     low, high = ends
     square = b * b - 4 * a * c
     if not c:
         if not b:
             return [ends] if a >= 0 else []
         root = -a / b
-        found = [(root, high)] if b > 0 else [(low, root)]
+        start, end = (root, high) if b > 0 else (low, root)
+    elif c > 0:  # a is 0 or less, so of the two roots one is above 0
+        start, end = (_root(square, up=True) - b) / (2 * c), high
     elif square < 0:
-        return [ends] if c > 0 else []
+        return []
     else:
-        reach = _root(square, up=c > 0)
-        first, second = sorted(((-b - reach) / (2 * c), (-b + reach) / (2 * c)))
-        found = [(low, first), (second, high)] if c > 0 else [(first, second)]
-    kept = [(max(low, start), min(high, end)) for start, end in found]
-    return [each for each in kept if each[0] <= each[1]]
+        reach = _root(square, up=False)
+        start, end = (-b + reach) / (2 * c), (-b - reach) / (2 * c)
+    start, end = max(low, start), min(high, end)
+    return [(start, end)] if start <= end else []
 
 
 def _root(square: Fraction, *, up: bool) -> Fraction:
