@@ -2,7 +2,8 @@
 
 A settled line is a line as typed together with what it takes off: who left or what, and its weight. It is
 what is kept and printed. Measured is what moved, each line by its absolute value: what goes on and what comes
-off both count, so many small steps add up.
+off both count, so many small steps add up. What a table of standard weights adds to a declared passenger
+counts with the passenger, and stands in the line.
 """
 
 import copy
@@ -51,8 +52,9 @@ NOTHING = Moved(Fraction(0), 0)
 PASSENGER_PARTS = ("name", "weight", "how", "lap_infant", "restraint")  # kept of one who leaves
 
 
-def settle(declared: Mapping[str, Any], change: LateChange) -> Settled:
-    """Return the declared load with the change in it; nothing is made less than nothing.
+def settle(declared: Mapping[str, Any], change: LateChange, additions: Sequence[Line] = ()) -> Settled:
+    """Return the declared load with the change in it; nothing is made less than nothing. `additions` are what
+    the table in force adds to each declared passenger: `what`, `value`, `unit`.
 
     Raises Invalid with every line that does not fit what is aboard. Whether the changed load can be carried
     is the assessment's business.
@@ -61,7 +63,9 @@ def settle(declared: Mapping[str, Any], change: LateChange) -> Settled:
     document["persons_on_board"] = change.persons_on_board
     faults, settled = Faults(), []
     for place, line in enumerate(change.lines):
-        settled.append(_PUTS[str(line["change"])](document, dict(line), f"/lines/{place}", faults))
+        put = _PUTS[str(line["change"])](document, dict(line), f"/lines/{place}", faults)
+        adds = additions and str(line["change"]).startswith("passenger") and put.get("how") == "declared"
+        settled.append({**put, "additions": [dict(one) for one in additions]} if adds else put)
     if faults.all():
         raise Invalid(*faults.all())
     return Settled(document, tuple(settled), _origins(document, change.lines))
@@ -78,9 +82,14 @@ def measured(lines: Iterable[Line], density: Mapping[str, Any]) -> Moved:
         infant = line.get("lap_infant")
         if infant is not None:
             moved += Moved(_kilograms(infant["weight"]), 1)
-        if "restraint" in line:
-            moved += Moved(_kilograms(line["restraint"]), 0)
+        besides = [line["restraint"]] if "restraint" in line else []
+        for weight in (*besides, *map(_weight_in, line.get("additions", ()))):
+            moved += Moved(_kilograms(weight), 0)
     return moved
+
+
+def _weight_in(addition: Line) -> Line:
+    return {"value": addition["value"], "unit": addition["unit"]}
 
 
 def said(line: Line, *, named: bool) -> str:
@@ -101,6 +110,9 @@ def said(line: Line, *, named: bool) -> str:
         beside = f", with lap infant{called}, {infant['weight']['value']} {infant['weight']['unit']}"
     if "restraint" in line:
         beside += f", with restraint, {line['restraint']['value']} {line['restraint']['unit']}"
+    if "additions" in line:
+        added = ", ".join(f"{one['what']} {one['value']} {one['unit']}" for one in line["additions"])
+        beside += f", and by the table of standard weights {added}"
     return f"passenger{name} {to}, {line['seat']}, {weight}{beside}"
 
 

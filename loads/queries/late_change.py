@@ -13,6 +13,8 @@ from typing import Any, Final
 from fleet.conversion import in_unit
 from fleet.models import OperatorSettings
 from fleet.quantities import Quantity, Unit
+from fleet.queries.figures import basis_of
+from fleet.queries.in_force import in_force_for
 from fleet.queries.settings import settings_at
 from loads import lifecycle
 from loads.balance.engine import ENGINE_VERSION
@@ -25,16 +27,18 @@ from loads.balance.late_change import (
     said,
     settle,
 )
+from loads.balance.late_reading import LateChange as Asked
 from loads.balance.late_reading import read_late_change
 from loads.balance.rounding import printed
 from loads.models import LateChange, Load
 from loads.queries.computation import Computation, compute, versions_of
 from loads.queries.current import Current
 from loads.queries.declaration import declared_now
+from loads.queries.provided import table_of
 from loads.queries.signable import SIGNER
 from loads.queries.stale import stale_parts
 from loads.statement import signing_text, statement
-from records.canonical import canonical
+from records.canonical import canonical, decimal_text
 from records.refusal import Invalid, StepRefused
 from records.strict_json import JSON, read
 
@@ -98,7 +102,8 @@ def propose(current: Current, change: Mapping[str, object], known: datetime) -> 
         raise StepRefused("stale", f"Changed since it was accepted: {', '.join(moved_on)}.", next_step=REVISE)
     declared: dict[str, Any] = dict(declared_now(current))
     # Numbers as texts from here on, as everything stored has them.
-    settled = settle(declared, read_late_change(_as_stored(change)))
+    asked = read_late_change(_as_stored(change))
+    settled = settle(declared, asked, _additions(current, asked, known))
     before = changes_of(current.load)
     moved = moved_by(before, declared) + measured(settled.lines, declared["fuel"]["density"])
     if moved.kilograms > bound.kilograms or moved.persons > bound.persons:
@@ -113,6 +118,25 @@ def propose(current: Current, change: Mapping[str, object], known: datetime) -> 
     except Invalid as refused:
         raise Invalid(*faults_in_the_change(refused.faults, settled.origins)) from refused
     return Proposal(len(before) + 1, settled.lines, moved, bound, computation)
+
+
+def _additions(current: Current, asked: Asked, known: datetime) -> tuple[Line, ...]:
+    """This function will return what the table in force adds to a declared passenger of this aircraft; () for
+    a change in which nobody goes on or off.
+    """
+    if not any(str(line["change"]).startswith("passenger") for line in asked.lines):
+        return ()
+    load = current.load
+    used = in_force_for(load.aircraft, load.departure, known, load.configuration)
+    table = table_of(used.provisions)
+    if table is None or table.declared is None or used.basis is None:
+        return ()
+    if not table.declared.allows(basis_of(used.basis).passenger_seats_installed):
+        return ()
+    return tuple(
+        {"what": one.what, "value": decimal_text(one.weight.value), "unit": one.weight.unit.value}
+        for one in table.declared.additions
+    )
 
 
 def bound_at(operator: str, known: datetime) -> Bound:

@@ -3,6 +3,7 @@ what happens when it changes.
 """
 
 import json
+from fractions import Fraction
 from typing import Any
 
 import pytest
@@ -12,18 +13,31 @@ from fleet.actions.enter_standard_weights import enter_standard_weights
 from fleet.models import Provision
 from loads.actions.prepare_load import prepare_load
 from loads.actions.submit_load import submit_load
+from loads.balance.late_change import said
+from loads.models import LateChange
 from loads.queries.answer import answer_of
 from loads.queries.current import load_of
+from loads.queries.declaration import declared_now
+from loads.queries.late_change import moved_by
 from loads.queries.overtaken import database_time
 from loads.queries.signable import words_to_sign
 from loads.queries.stale import stale_parts
 from records.refusal import NotAllowed, StepRefused
 from tests.cast import Cast, actor, cast
-from tests.loads.making import load_document, signing
-from tests.makers import ready_aircraft
+from tests.loads.late import again, bounded, change_of, changed, proposed
+from tests.loads.making import accepted, load_document, signing
+from tests.makers import q, ready_aircraft
 from tests.pure.loads.standards import seasonal_document
 
 pytestmark = pytest.mark.django_db
+DECLARED = {
+    "below_seats": 10,
+    "additions": [
+        {"what": "clothing", "weight": q("4", "kg")},
+        {"what": "hand baggage", "weight": q("6", "kg")},
+    ],
+    "source": {"page": "8-3"},
+}
 
 
 def table(people: Cast, **changes: Any) -> Provision:
@@ -109,3 +123,38 @@ def test_of_two_tables_the_one_with_the_latest_beginning_before_the_departure_co
     assert load_of(people.operator.code, current.load.id).assessment.provisions == [
         Provision.objects.get(number=3).id
     ]
+
+
+def test_a_last_minute_change_counts_what_the_table_adds_to_a_declared_passenger(people: Cast) -> None:
+    """Declared 150 lb with 10 kg by the table are 172.1 lb, held against the bound like that."""
+    bounded(people, weight="172", persons=2)
+    table(people, declared=DECLARED)
+    current = accepted(people)
+    on = {"change": "passenger-on", "name": "N. Fell", "seat": "ROW2-L", "how": "declared"}
+    heavy, light = (on | {"weight": q(weight, "lb")} for weight in ("150", "149"))
+
+    with pytest.raises(StepRefused) as refused:
+        proposed(current, change_of(heavy, persons=4))
+    shown = proposed(current, change_of(light, persons=4))
+    done = again(changed(people, current, change_of(light, persons=4)))
+
+    assert refused.value.code == "beyond-the-bound"
+    assert "172.1 lb" in refused.value.detail
+    weights = {phase["phase"]: Fraction(phase["weight"]) for phase in done.result()["phases"]}
+    before = {phase["phase"]: Fraction(phase["weight"]) for phase in current.result()["phases"]}
+    rise = shown.moved.kilograms / Fraction("0.45359237")
+    assert abs(weights["take-off"] - before["take-off"] - rise) < Fraction("0.1")
+    change = LateChange.objects.get(load=current.load)
+    assert Fraction(change.kilograms_moved) == shown.moved.kilograms
+    assert shown.bound.said(moved_by((change,), declared_now(done))) == "171.1 lb and 1 person"
+
+
+def test_who_leaves_at_the_last_minute_takes_along_what_the_table_added(people: Cast) -> None:
+    bounded(people, weight="300", persons=2)
+    table(people, declared=DECLARED)
+    current = accepted(people)
+
+    shown = proposed(current, change_of({"change": "passenger-off", "seat": "ROW1-R"}, persons=2))
+
+    assert shown.moved.kilograms == 190 * Fraction("0.45359237") + 10
+    assert "and by the table of standard weights" in said(shown.lines[0], named=False)

@@ -198,3 +198,41 @@ def test_fuel_never_falls_below_nothing_and_every_step_counts(steps) -> None:
     assert Decimal(settled.document["fuel"]["at_engine_start"]["L"]["value"]) == held
     moved = measured(settled.lines, DECLARED["fuel"]["density"])
     assert moved == Moved(sum((Fraction(amount) for _, amount in steps), Fraction(0)) * Fraction("0.8"), 0)
+
+
+CLOTHING = ({"what": "clothing", "value": "4", "unit": "kg"}, {"what": "bags", "value": "6", "unit": "kg"})
+ON = {
+    "change": "passenger-on",
+    "name": "E",
+    "seat": "4",
+    "weight": {"value": "70", "unit": "kg"},
+    "how": "declared",
+}
+
+
+def test_what_a_table_adds_to_a_declared_passenger_moves_too_and_is_said() -> None:
+    lines = (ON, {"change": "passenger-off", "seat": "1"})
+    settled = settle(DECLARED, change(*lines), CLOTHING)
+
+    assert measured(settled.lines, {}) == Moved(70 + 170 * POUND + 20, 2)
+    assert said(settled.lines[0], named=False) == (
+        "passenger on, 4, 70 kg declared, and by the table of standard weights clothing 4 kg, bags 6 kg"
+    )
+    assert "additions" not in settled.document["passengers"][-1]
+
+
+def test_nothing_is_added_to_who_was_weighed_or_to_an_item() -> None:
+    bag = {
+        "change": "item-on",
+        "kind": "baggage",
+        "what": "bag",
+        "place": "AFT",
+        "weight": {"value": "5", "unit": "kg"},
+        "how": "declared",
+    }
+    lines = (ON | {"how": "weighed"}, {"change": "passenger-off", "seat": "2"}, bag)
+
+    settled = settle(DECLARED, change(*lines), CLOTHING)
+
+    assert measured(settled.lines, {}) == Moved(70 + 170 * POUND + 5, 3)
+    assert not any("additions" in line for line in settled.lines)
