@@ -111,7 +111,8 @@ def _last_resort(question: Question) -> list[Json]:
     if left is None:
         return []
     words = left_sentence(left, question.ready)
-    return [_told(question, "leave-people", words, BEST_FOUND, left.result) | {"change": []}]
+    proved = SMALLEST if left.proven else BEST_FOUND
+    return [_told(question, "leave-people", words, proved, left.result) | {"change": []}]
 
 
 def _told(question: Question, kind: str, words: str, proved: str, result: Result) -> Json:

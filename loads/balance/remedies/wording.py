@@ -15,7 +15,7 @@ from loads.balance.result import Json, Result
 from loads.balance.rounding import VOLUME_PLACES, WEIGHT_PLACES, printed
 
 SHOWN: tuple[Phase, ...] = ("take-off", "zero fuel", "landing")
-NUMBERS = {1: "one passenger", 2: "two passengers", 3: "three passengers"}
+NUMBERS = ("one", "two", "three", "four", "five", "six", "seven", "eight", "nine")
 
 
 def sentence(steps: Sequence[Step], plan: FuelPlan, ready: Prepared) -> str:
@@ -46,10 +46,15 @@ def sentence(steps: Sequence[Step], plan: FuelPlan, ready: Prepared) -> str:
 
 def left_sentence(left: Left, ready: Prepared) -> str:
     """Return the last resort: how many, from which rows, how heavy at least."""
+    number = NUMBERS[left.people - 1] if left.people <= len(NUMBERS) else str(left.people)
+    who = f"{number} passenger{'' if left.people == 1 else 's'}"
+    if not left.rows:
+        return (
+            f"As the last resort, {who} would have to stay behind, and not any {number}: try who it may be."
+        )
     together = "of" if left.people == 1 else "together of"
     rows = "row" if len(left.rows) == 1 else "rows"
     least = _weight(left.weight, ready)
-    who = NUMBERS[left.people]
     where = f"from {rows} {_listed(left.rows)}"
     return f"As the last resort, {who} {together} at least {least} {where} would have to stay behind."
 

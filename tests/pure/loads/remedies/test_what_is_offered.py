@@ -1,8 +1,10 @@
 """What a reject is offered: within by the whole assessment, in plain words, without a name, in time."""
 
 import json
+import random
 import time
 from dataclasses import replace
+from itertools import combinations
 from typing import Any
 
 import pytest
@@ -12,7 +14,11 @@ from fleet.weighing import EmptyFigures
 from loads.balance.assess import assess
 from loads.balance.declared import read_load
 from loads.balance.remedies.finding import NOTHING, UNSETTLED, Remedies, find_remedies
+from loads.balance.remedies.leaving import fewest_left, rows_of
 from loads.balance.remedies.patching import patched
+from loads.balance.remedies.question import Question
+from loads.balance.remedies.steps import Leave, taken
+from loads.balance.remedies.wording import left_sentence
 from tests.pure.loads.making import F, limit
 from tests.pure.loads.remedies.brute import small
 from tests.pure.loads.remedies.cabins import asked, empty_of, full_cabin, nineteen, seated
@@ -86,6 +92,42 @@ def test_people_stay_behind_only_where_nothing_else_helps_and_nobody_is_named() 
     assert only["change"] == []
     assert str(only["sentence"]).startswith("As the last resort, two passengers together of at least ")
     assert "Person" not in str(only)
+
+
+def crowded(most: int) -> Question:
+    """A full cabin that takes off at 12,512.7 lb, where so much is allowed; no fuel is to spare."""
+    document = full_cabin(1, aft=0)
+    document["items"] = []
+    document["fuel"]["minimum_at_landing"] = {"value": 850, "unit": "lb"}
+    return asked(document, with_take_off(most), MIDDLE)
+
+
+def test_where_no_rows_tell_of_which_any_will_do_the_number_alone_is_told() -> None:
+    # 1,012.7 lb are too much: the four heaviest weigh 882.2 lb. Five do, but not any heavy five of some rows.
+    left = fewest_left(crowded(11500))
+    assert left is not None
+    assert (left.people, left.rows, left.proven, left.result.verdict) == (5, (), True, "within")
+    words = left_sentence(left, crowded(11500).ready)
+    assert words.startswith("As the last resort, five passengers would have to stay behind, and not any five")
+
+
+def test_more_than_three_are_told_with_a_group_of_which_any_will_do() -> None:
+    # 812.7 lb are too much: the three heaviest weigh 672.3 lb.
+    question = crowded(11700)
+    left = fewest_left(question)
+    assert left is not None
+    assert left.proven
+    assert left_sentence(left, question.ready).startswith(
+        "As the last resort, four passengers together of at least "
+    )
+    rows = rows_of(question.ready.basis.seats)
+    people = [one for one in question.declared.passengers if rows[one.seat.id] in left.rows]
+    groups = list(combinations(people, left.people))
+    fitting = [each for each in groups if sum(one.weight or 0 for one in each) >= left.weight]
+    assert fitting
+    for group in random.Random(0).sample(fitting, min(60, len(fitting))):
+        without = taken(question.declared, [Leave(one) for one in group])
+        assert question.judge(without).verdict == "within"
 
 
 def test_whoever_of_the_described_group_stays_the_load_is_within() -> None:
