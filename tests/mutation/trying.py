@@ -125,14 +125,14 @@ def _try(mutant: Mutant, tests: Sequence[tuple[pytest.Item, float]], folder: Pat
 def _reach(items: Sequence[pytest.Item], reach: Reach, into: Path, failed: Path) -> int:
     for item in items:
         seen = cProfile.Profile(builtins=False)
-        begun = time.perf_counter()
+        begun = time.process_time()
         seen.enable()
         failure = _fails(item)
         seen.disable()
         if failure:
             failed.write_text(f"{item.nodeid}\n{failure}")
             return KILLED
-        took = reach[""][item.nodeid] = time.perf_counter() - begun
+        took = reach[""][item.nodeid] = time.process_time() - begun
         for entry in seen.getstats():
             if not isinstance(entry.code, str) and is_ours(entry.code):
                 reach.setdefault(key_of(entry.code), {})[item.nodeid] = took

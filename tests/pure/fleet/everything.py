@@ -31,7 +31,12 @@ def everything() -> Any:
     basis["trim"] = trim()
     basis["curtailments"] = [curtailment()]
     basis["presentation"] = presentation()
+    basis["other_datums"] = [datum("firewall", amount("1", "m")), datum("nose tip", amount("-3", "in"))]
     return basis
+
+
+def datum(name: str, offset: dict[str, Any]) -> dict[str, Any]:
+    return {"name": name, "offset": offset, "source": OTHER}
 
 
 def _stations(basis: Any) -> None:

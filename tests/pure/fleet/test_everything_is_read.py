@@ -8,7 +8,6 @@ from fractions import Fraction
 import pytest
 
 from fleet.basis import (
-    Basis,
     BurnStage,
     Chord,
     Configuration,
@@ -23,12 +22,17 @@ from fleet.basis import (
     Zone,
 )
 from fleet.basis_reading import read_basis
-from fleet.curtailment import Amounts, Curtailment, Inset
+from fleet.basis_reading.configurations import read_configurations
+from fleet.basis_reading.envelopes import read_envelopes
+from fleet.basis_reading.findings import Findings
+from fleet.basis_reading.fuel import read_burn_order, read_tanks, read_taxi_order
+from fleet.basis_reading.limits import read_limits
+from fleet.basis_reading.performance import read_performance
+from fleet.basis_reading.running_sums import read_conditions, read_cumulative
+from fleet.basis_reading.samples import read_sample_loads
+from fleet.basis_reading.stations import read_places, read_seats, read_zones
+from fleet.basis_reading.variants import read_variants
 from fleet.flight_rules import CertificationCategory, Modification, PerformanceRule
-from fleet.fuel_balance import FuelBalance
-from fleet.lateral import LateralByCg
-from fleet.positions import MovingPart, PartState
-from fleet.presentation import DividedMoment, IndexUnits, Presentation
 from fleet.quantities import Unit
 from fleet.sourced import Limit, Source
 from fleet.stations import (
@@ -41,7 +45,6 @@ from fleet.stations import (
     Rail,
     Setting,
 )
-from fleet.trim import Trim, TrimLine, TrimTable
 from tests.pure.fleet.everything import everything
 
 F = Fraction
@@ -61,21 +64,29 @@ def most(value, source=PAGE):
     return Limit(F(value), source)
 
 
-def basis() -> Basis:
-    return read_basis(everything())
+def findings() -> Findings:
+    return Findings(everything(), [])
 
 
 def test_what_the_basis_is_of():
-    one = basis()
+    one = read_basis(everything())
     assert (one.aircraft_type, one.category, one.engines) == ("Ostrel Kestava 62", "aeroplane", 2)
     assert (one.passenger_seats_installed, one.datum, one.fits) == (4, "nose reference plane", ("wheels",))
     assert (one.weight_unit, one.length_unit, one.volume_unit) == (Unit.LB, Unit.IN, Unit.US_GAL)
     assert one.chord == Chord(F(148), F(64), of("6-3"))
     assert one.lateral_limits_entered is True
+    assert (len(one.seats), len(one.places), len(one.zones), len(one.tanks)) == (6, 3, 1, 4)
+    assert (len(one.burn_order), len(one.taxi_order), len(one.envelopes)) == (2, 1, 1)
+    assert (len(one.configurations), len(one.sample_loads), len(one.positions)) == (2, 2, 2)
+    assert (len(one.conditions), len(one.cumulative), len(one.certification_categories)) == (2, 2, 2)
+    assert (len(one.modifications), len(one.performance), len(one.lateral_by_cg)) == (1, 1, 1)
+    assert (len(one.fuel_balance), len(one.curtailments), len(one.other_datums)) == (2, 1, 2)
+    assert (one.limits, one.trim is None, one.presentation is None) == (LIMITS, False, False)
 
 
 def test_seats():
-    plain, railed, attended = basis().seats[0], basis().seats[2], basis().seats[3]
+    seats = read_seats(findings())
+    plain, railed, attended = seats[0], seats[2], seats[3]
     assert plain == Seat(
         "COCKPIT-L", "left cockpit seat", "crew", F(132), F("-11.5"), most(300, of("6-9")), of("6-9")
     )
@@ -100,7 +111,7 @@ def test_seats():
 
 
 def test_places_and_zones():
-    hold, aft = basis().places[0], basis().places[2]
+    hold, _, aft = read_places(findings())
     assert hold == Place("NOSE-HOLD", "nose hold", F(88), F(0), most(240, of("6-10")), of("6-10"))
     assert aft == Place(
         "AFT-HOLD",
@@ -123,7 +134,7 @@ def test_places_and_zones():
         ),
         external=True,
     )
-    assert basis().zones == (
+    assert read_zones(findings()) == (
         Zone(
             "AFT-CABIN",
             "row 2 and aft hold together",
@@ -135,8 +146,11 @@ def test_places_and_zones():
 
 
 def test_conditions_and_running_sums():
-    assert basis().conditions == (Condition("NET", "net fitted", PAGE), Condition("DOOR", "door off", OTHER))
-    assert basis().cumulative == (
+    assert read_conditions(findings()) == (
+        Condition("NET", "net fitted", PAGE),
+        Condition("DOOR", "door off", OTHER),
+    )
+    assert read_cumulative(findings()) == (
         Cumulative(
             "AFT-RUN",
             "from the tail",
@@ -159,7 +173,8 @@ def test_conditions_and_running_sums():
 
 
 def test_tanks_and_the_orders_in_which_they_feed():
-    assert basis().tanks[2] == Tank(
+    tanks = read_tanks(findings())
+    assert tanks[2] == Tank(
         "LEFT-MAIN",
         "left main tank",
         F(70),
@@ -173,10 +188,10 @@ def test_tanks_and_the_orders_in_which_they_feed():
         ),
         of("6-15"),
     )
-    assert [tank.id for tank in basis().tanks] == ["LEFT-AUX", "RIGHT-AUX", "LEFT-MAIN", "RIGHT-MAIN"]
+    assert [tank.id for tank in tanks] == ["LEFT-AUX", "RIGHT-AUX", "LEFT-MAIN", "RIGHT-MAIN"]
     mains = BurnStage(("LEFT-MAIN", "RIGHT-MAIN"))
-    assert basis().burn_order == (BurnStage(("LEFT-AUX", "RIGHT-AUX")), mains)
-    assert basis().taxi_order == (mains,)
+    assert read_burn_order(findings()) == (BurnStage(("LEFT-AUX", "RIGHT-AUX")), mains)
+    assert read_taxi_order(findings(), ()) == (mains,)
 
 
 LIMITS = Limits(
@@ -189,8 +204,10 @@ LIMITS = Limits(
 
 
 def test_limits_and_what_replaces_and_tightens_them():
-    assert basis().limits == LIMITS
-    assert basis().certification_categories == (
+    limits = read_limits(findings())
+    variants = read_variants(findings(), limits)
+    assert limits == LIMITS
+    assert variants.certification_categories == (
         CertificationCategory("normal", "normal category", (), PAGE),
         CertificationCategory(
             "utility",
@@ -199,12 +216,13 @@ def test_limits_and_what_replaces_and_tightens_them():
             OTHER,
         ),
     )
-    assert basis().modifications == (Modification("HEAVY", "heavy gear", (("landing", most(6000)),), OTHER),)
+    assert variants.modifications == (Modification("HEAVY", "heavy gear", (("landing", most(6000)),), OTHER),)
 
 
 def test_configurations():
     kit = (FixedItem("document case and flight kit", F(14), F(140), F(0)),)
-    six, freight = basis().configurations
+    variants = read_variants(findings(), read_limits(findings()))
+    six, freight = read_configurations(findings(), variants)
     assert six == Configuration(
         id="six-seat",
         name="six seats",
@@ -243,12 +261,12 @@ def test_configurations():
 
 def test_rules_on_performance():
     rule = PerformanceRule("take-off", True, ("climb",), ("passenger-charter", "ferry"), PAGE)
-    assert basis().performance == (rule,)
+    assert read_performance(findings(), everything()["performance"], "/performance") == (rule,)
 
 
 def test_envelopes():
     points = (("150.5", 3700), ("150.5", 4800), ("155.9", 6240), ("161.95", 6240), (163, 5400), (163, 3700))
-    assert basis().envelopes == (
+    assert read_envelopes(findings(), read_variants(findings(), read_limits(findings()))) == (
         Envelope(
             id="normal",
             axis="longitudinal",
@@ -260,112 +278,6 @@ def test_envelopes():
     )
 
 
-def test_lateral_limits_against_the_cg():
-    points = (("3.8", -90), ("3.8", 90), ("4.2", 60), ("4.2", -60))
-    assert basis().lateral_by_cg == (
-        LateralByCg(
-            id="hover",
-            phases=("take-off", "landing", "minimum at landing"),
-            gives="moment",
-            points=tuple((F(arm) / F("0.0254"), moment * KG_M) for arm, moment in points),
-            source=OTHER,
-            configurations=("row-2-out",),
-            categories=("utility",),
-            positions=(("GEAR", ("UP",)),),
-        ),
-    )
-
-
-def test_moving_parts():
-    assert basis().positions == (
-        MovingPart(
-            "GEAR",
-            "landing gear",
-            "DOWN",
-            (
-                PartState("DOWN", "down", F(0), ("ground", "flight"), PAGE),
-                PartState("UP", "up", -10 * KG_M, ("flight",), PAGE),
-            ),
-        ),
-        MovingPart(
-            "FLAPS",
-            "flaps",
-            "IN",
-            (
-                PartState("IN", "in", F(0), ("ground", "flight"), PAGE),
-                PartState("OUT", "out", F(500), ("ground", "flight"), PAGE),
-            ),
-        ),
-    )
-
-
-def test_how_far_the_fuel_may_differ():
-    assert basis().fuel_balance == (
-        FuelBalance(
-            "MAINS",
-            "main tanks",
-            ("LEFT-MAIN",),
-            ("RIGHT-MAIN",),
-            "volume",
-            F(10),
-            (),
-            ("take-off",),
-            PAGE,
-        ),
-        FuelBalance(
-            "WINGS",
-            "all tanks",
-            ("LEFT-MAIN", "LEFT-AUX"),
-            ("RIGHT-MAIN", "RIGHT-AUX"),
-            "weight",
-            None,
-            ((F(0), F(200)), (F(600), F(90)), (F(1320), F(0))),
-            ("ramp", "take-off", "landing"),
-            OTHER,
-        ),
-    )
-
-
-def test_trim_tables_by_flap_and_rising_weight():
-    points = ((F(150), F(8)), (F(160), F(2)))
-    assert basis().trim == Trim(
-        "arm",
-        "units nose up",
-        F("0.5"),
-        F(0),
-        F(9),
-        OTHER,
-        (
-            TrimTable("up", (TrimLine(F(4000), points, OTHER), TrimLine(F(7000), points, PAGE))),
-            TrimTable("10", (TrimLine(None, points, PAGE),)),
-        ),
-    )
-
-
-def test_the_operators_margins():
-    none = Inset(F(0), F(0))
-    assert basis().curtailments == (
-        Curtailment(
-            id="SEATING",
-            purpose="seating variation",
-            phases=("take-off", "landing", "minimum at landing"),
-            rows=(
-                Amounts(None, F(5000), Inset(F(0), 10 * KG_M), Inset(F("0.5"), F(0)), none, none),
-                Amounts(F(5000), None, Inset(F("0.25"), F(0)), none, none, none),
-            ),
-            source=Source("OM-A", "4", "8-12"),
-            configurations=("six-seat",),
-            categories=("normal",),
-        ),
-    )
-
-
-def test_how_moments_are_shown():
-    assert basis().presentation == Presentation(
-        IndexUnits(F(155), F(1000), F(40), OTHER), DividedMoment(F(1000), PAGE)
-    )
-
-
 @pytest.mark.parametrize(
     ("place", "phase", "within", "page", "printed"),
     [
@@ -374,7 +286,7 @@ def test_how_moments_are_shown():
     ],
 )
 def test_sample_loads(place, phase, within, page, printed):
-    sample = basis().sample_loads[place]
+    sample = read_sample_loads(findings())[place]
     assert sample.weights[:1] == (FixedItem("empty weight", F(3948), F("157.4"), F(0)),)
     assert sample == SampleLoad(
         name=("manual sample A", "manual sample B, too far aft")[place],
