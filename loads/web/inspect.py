@@ -67,7 +67,9 @@ def _aircraft(operator: str, registration: str, look: Look) -> Aircraft | None:
 def _of_day(aircraft: Aircraft, day: date, zone: ZoneInfo, now: datetime) -> dict[str, Any]:
     since, until = begins(day, zone) or now, ends(day, zone) or now
     flown = loads_of_day(aircraft, since, until)
-    asked_at = flown[0].current.load.departure if flown else min(now, until - timedelta(seconds=1))
+    # Who could sign is asked for the last departure: everybody who signed for the day had the duty by then.
+    last = max((one.current.load.departure for one in flown), default=until - timedelta(seconds=1))
+    asked_at = min(now, last)
     settings = settings_at(aircraft.operator_id, asked_at, asked_at)
     return {
         "loads": [_load(one, zone, now) for one in flown],
