@@ -86,9 +86,8 @@ class Curtailment:
     def insets(self, axis: Axis, weight: Fraction) -> tuple[Inset, Inset]:
         """Return what the low and the high edge move by at a weight; where two rows meet, the greater."""
         sides = [row.sides(axis) for row in self.rows if row.hold(weight)]
-        if not sides:
-            return NONE, NONE
-        low, high = (max(side, key=lambda each: each.at(weight)) for side in zip(*sides, strict=True))
+        low = max((side for side, _ in sides), key=lambda each: each.at(weight), default=NONE)
+        high = max((side for _, side in sides), key=lambda each: each.at(weight), default=NONE)
         return low, high
 
 
@@ -112,16 +111,19 @@ class CurtailedShape(Shape):
         self.axis: Axis = axis
         levels = self._weights()
         scale = lcm(*(level.denominator for level in levels))
-        own = [self._certified_pieces(low, high) for low, high in pairwise(levels)]
+        own: list[tuple[Trapezoid, ...]] = [()]  # nothing below, and at last nothing above
         between = []
-        for (low, high), pieces in zip(pairwise(levels), own, strict=True):
+        for low, high in pairwise(levels):
+            pieces = self._certified_pieces(low, high)
+            own.append(pieces)
             insets = self.insets((low + high) / 2)
             shrunk = [_shrunk(piece, insets) for piece in pieces]
             between.append(tuple(_present(shrunk, low, high)))
+        own.append(())
         at_levels = []
-        for level, (below, above) in zip(levels, pairwise([(), *own, ()]), strict=True):
+        for number, level in enumerate(levels):
             insets = self.insets(level)
-            at_levels.append(tuple(_shrunk(piece, insets) for piece in (*below, *above)))
+            at_levels.append(tuple(_shrunk(piece, insets) for piece in (*own[number], *own[number + 1])))
         whole = tuple(int(level * scale) for level in levels)
         self._prepare(Slabs(scale, whole, tuple(between)), at_levels)
 
@@ -144,9 +146,7 @@ class CurtailedShape(Shape):
         An end that is no rational number is moved inward by less than 2**-80.
         """
         found: list[Stretch] = []
-        scale = self.slabs.scale
-        for (low, high), pieces in zip(pairwise(self.slabs.levels), self.slabs.trapezoids, strict=True):
-            ends = Fraction(low, scale), Fraction(high, scale)
+        for ends, pieces in self.slabs.parts():
             for p, a, b, c, p2, a2, b2, c2 in pieces:
                 front = _not_below_zero(Fraction(a), b + p * arm, Fraction(c), ends)
                 rear = _not_below_zero(Fraction(a2), b2 + p2 * arm, Fraction(c2), ends)
@@ -163,10 +163,8 @@ class CurtailedShape(Shape):
 
         The very tip of an envelope that runs to a point may be cut off: that is no such range.
         """
-        scale = self.slabs.scale
         told: set[Fraction] = set()
-        for (low, high), pieces in zip(pairwise(self.slabs.levels), self.slabs.trapezoids, strict=True):
-            ends = Fraction(low, scale), Fraction(high, scale)
+        for ends, pieces in self.slabs.parts():
             own = self._certified_pieces(*ends)
             if not any(_left(piece, ends) for piece in pieces) and not any(
                 _tip_alone(piece, self.insets((ends[0] + ends[1]) / 2), ends) for piece in own
@@ -174,7 +172,7 @@ class CurtailedShape(Shape):
                 told.update(ends)
                 yield ends
         for level in self.slabs.levels:
-            at = Fraction(level, scale)
+            at = Fraction(level, self.slabs.scale)
             if (
                 at not in told
                 and not self.arms_at(at)

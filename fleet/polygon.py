@@ -45,6 +45,11 @@ class Slabs(NamedTuple):
     levels: tuple[int, ...]
     trapezoids: tuple[tuple[Trapezoid, ...], ...]
 
+    def parts(self) -> Iterator[tuple[tuple[Fraction, Fraction], tuple[Trapezoid, ...]]]:
+        """Yield the two weights of each pair of neighbouring levels, and the trapezoids between them."""
+        weights = (Fraction(level, self.scale) for level in self.levels)
+        yield from zip(pairwise(weights), self.trapezoids, strict=True)
+
 
 def slabs_of(plane: Literal["arm", "moment"], points: Sequence[Point]) -> Slabs:
     """Return the polygon with these vertices, in order, the first not repeated. Raises `NotAnEnvelope`."""

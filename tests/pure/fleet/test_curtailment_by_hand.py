@@ -249,6 +249,14 @@ def test_of_an_envelope_that_runs_to_a_point_up_or_down_the_tip_may_go(corners, 
     ]
 
 
+def test_a_row_that_holds_at_the_tip_alone_may_use_up_more_than_the_tip():
+    """The tent is 1 in wide at 3,800 lb: half an inch from either side leaves its middle, an inch nothing."""
+    tent = ((100, 2000), (105, 4000), (110, 2000))
+    half, inch = (left(Amounts(F(3800), None, arm(value), arm(value)), corners=tent) for value in ("0.5", 1))
+    assert list(half.used_up()) == []
+    assert list(inch.used_up()) == [(F(3800), F(4000))]
+
+
 def test_a_curtailment_keeps_what_it_is_for():
     source = Source("OM-A", "4", "8-12")
     one = Curtailment("FUEL", "fuel", ("landing",), (Amounts(None, None),), source)
