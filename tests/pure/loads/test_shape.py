@@ -1,4 +1,4 @@
-"""A load document without a loading basis: each spoiled in one place, and what is said of it word for word."""
+"""A load document without a loading basis: each spoiled in one place, and what is told, word for word."""
 
 from typing import Any
 
