@@ -225,6 +225,20 @@ def test_the_inspector_sees_manifest_figures_report_and_signers(people) -> None:
     assert {form.method for form in page.forms if not form.action.endswith("sign-out")} == {"get"}
 
 
+def test_who_could_sign_is_asked_for_the_last_departure_of_the_day_or_now(people) -> None:
+    # duties were granted today: nobody could sign at the first departure, and its manifest was signed later
+    day = timezone.now().astimezone(ZoneInfo(people.operator.time_zone)).replace(hour=0, minute=1)
+    for leg, hour in ((1, 0), (2, 23)):
+        document = load_document(people)
+        document["flight"] |= {"leg": leg, "departure": day.replace(hour=hour).isoformat(timespec="seconds")}
+        submit_load(document, by=actor(people.preparer))
+
+    page = shown(people.auditor, "/inspect", aircraft="Q9-KTB", day=f"{day:%Y-%m-%d}")
+
+    assert "Accept, as pilot in command of the flight R. Amani" in page.words
+    assert f"Who could sign, at {day:%Y-%m-%d} 00:01" not in page.words
+
+
 def test_a_figure_found_wrong_later_is_said_beside_the_one_that_was_used(people) -> None:
     flown(people)
     corrected = empty_weight_document(weight=q("5300", "lb"), report="W-2026-02")
