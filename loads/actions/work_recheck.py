@@ -10,7 +10,7 @@ from typing import Any, Final, Literal
 from uuid import UUID
 
 from django.db import connection, transaction
-from django.db.models import Sum
+from django.db.models import F, Func, IntegerField, Sum
 from django.db.models.functions import Now
 
 from fleet.actions.constraint_refusals import refused_as
@@ -19,7 +19,8 @@ from loads.acts import FINISH_RECHECK
 from loads.duties import service_at_work
 from loads.models import Recheck, RecheckedLoad, RecheckPart, RecheckResult
 from loads.queries.rechecks import COUNTS
-from loads.queries.recompute import GONE, Outcome, recompute, stored_loads
+from loads.queries.recompute import Outcome, recompute
+from loads.queries.stored_loads import GONE
 from records.act import act
 from records.canonical import canonical
 from records.refusal import StepRefused
@@ -97,24 +98,24 @@ def _one_part(recheck: Recheck) -> bool:
         part = (
             RecheckPart.objects.select_for_update(skip_locked=True)
             .filter(recheck=recheck, done_at__isnull=True)
+            .annotate(length=Func(F("loads"), function="cardinality", output_field=IntegerField()))
+            .defer("loads")
             .order_by("number")
             .first()
         )
         if part is None:
             return False
-        counts: Counter[str] = Counter()
+        found = recompute(recheck, part.pk)
+        counts: Counter[str] = Counter(same=found.same_in_bulk)
         rows: list[RecheckedLoad] = []
-        for one in recompute(recheck, stored_loads(part.loads)):
+        for one in found.exactly:
             kind = _kind(one)
-            counts[kind] += 1
-            counts["exactly"] += one.exactly
+            counts.update((kind, "exactly"))
             if kind in {"changed", "not_computed"}:
                 rows.append(_row(recheck, part, one))
-        turn = {load: place for place, load in enumerate(part.loads)}
-        rows.sort(key=lambda row: turn[row.load_id])
         RecheckedLoad.objects.bulk_create(rows, batch_size=500)
         # Replaced or withdrawn since the loads were parted: such a load never leaves on this declaration.
-        counts["gone"] = len(part.loads) - sum(counts[name] for name in COUNTS)
+        counts["gone"] = part.length - sum(counts[name] for name in COUNTS)
         RecheckPart.objects.filter(pk=part.pk).update(
             done_at=Now(), exactly=counts["exactly"], **{name: counts[name] for name in COUNTS}
         )

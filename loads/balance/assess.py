@@ -4,6 +4,7 @@ versions give the same bytes, always.
 
 from collections.abc import Callable, Mapping
 from functools import cache
+from typing import NamedTuple
 
 from fleet.applicable import applicable
 from fleet.basis import PHASES, Basis, Phase
@@ -69,14 +70,59 @@ def assess(
         return Result(verdict_of(unknown), unknown, (), (), report_without_basis())
     if isinstance(declared, Outline):
         raise TypeError("with a basis the whole declaration is needed, not its outline")
+    ready, standing, known = _standing(declared, basis, empty)
+    aboard = lines_without_fuel(declared, known)
+    judged = _judged(declared, aboard.without_fuel, (standing, known), ready, advised=advised)
+    states, flown, burn, weights, checks = judged
+    fuel = None if flown is None else flown.fuel
+    after_ramp = flight_lines(declared, flown.sections, states, ready) if flown and flown.sections else ()
+    lines = all_lines(aboard, declared.fuel, fuel, states, ready, flight=after_ramp)
+    verdict = verdict_of(checks)
+    document = report(Assessed(declared, aboard, lines, states, fuel, burn, checks, weights), ready)
+    return Result(verdict, checks, tuple(states.values()), lines, document, burn)
+
+
+def checks_alone(declared: Declared, basis: Basis, empty: EmptyFigures | None) -> tuple[Check, ...]:
+    """Return the checks `assess` would return unadvised, without the rest of a result: for many loads of
+    which nobody reads a loading computation.
+    """
+    ready, standing, known = _standing(declared, basis, empty)
+    dry = sums_without_fuel(declared, known)
+    return _judged(declared, dry, (standing, known), ready, advised=False).checks
+
+
+class _Judged(NamedTuple):
+    """What is found about a load."""
+
+    states: dict[Phase, State]
+    flown: Flown | None
+    burn: Burn | None
+    weights: FlightWeights | None
+    checks: tuple[Check, ...]
+
+
+def _standing(
+    declared: Declared, basis: Basis, empty: EmptyFigures | None
+) -> tuple[Prepared, Check, EmptyFigures | None]:
+    """Return the basis made ready for a load, whether the empty weight may be used, and that if it may."""
     category = None if declared.category is None else declared.category.id
     ready = prepared(applicable(basis, declared.configuration.id, category))
     standing = empty_weight_check(empty, basis, declared.configuration.fit)
-    known = empty if standing.outcome == "pass" else None
-    aboard = lines_without_fuel(declared, known)
+    return ready, standing, empty if standing.outcome == "pass" else None
+
+
+def _judged(
+    declared: Declared,
+    dry: Sums | None,
+    empty: tuple[Check, EmptyFigures | None],
+    ready: Prepared,
+    *,
+    advised: bool,
+) -> _Judged:
+    """Return what is found about a load of these sums without fuel."""
+    standing, known = empty
     flown, off_table = _flown(declared, known, ready)
-    fuel = None if flown is None else flown.fuel
-    states, nothing_left = _states_of(declared, aboard.without_fuel, flown, ready)
+    states, nothing_left = _states_of(declared, dry, flown, ready)
     burn = burn_of(path_of(declared, flown, states, ready), ready) if flown and states else None
     weights = _weights(declared, states, flown, ready)
     checks = (
@@ -91,11 +137,7 @@ def assess(
         *off_table,
         *nothing_left,
     )
-    after_ramp = flight_lines(declared, flown.sections, states, ready) if flown and flown.sections else ()
-    lines = all_lines(aboard, declared.fuel, fuel, states, ready, flight=after_ramp)
-    verdict = verdict_of(checks)
-    document = report(Assessed(declared, aboard, lines, states, fuel, burn, checks, weights), ready)
-    return Result(verdict, checks, tuple(states.values()), lines, document, burn)
+    return _Judged(states, flown, burn, weights, checks)
 
 
 def _flown(

@@ -4,15 +4,17 @@ from collections.abc import Sequence
 from dataclasses import dataclass
 from datetime import datetime
 
+from fleet.basis import Basis
 from fleet.models import Aircraft, EmptyWeight, LoadingBasis, Provision
 from fleet.queries.aircraft import aircraft_of
 from fleet.queries.figures import basis_of
 from fleet.queries.in_force import InForce, in_force_for
+from fleet.weighing import EmptyFigures
 from loads.balance.aboard import Declared, Outline
-from loads.balance.assess import assess
+from loads.balance.assess import assess, checks_alone
 from loads.balance.declared import read_outline
 from loads.balance.engine import ENGINE_VERSION
-from loads.balance.result import Result
+from loads.balance.result import Check, Result
 from loads.balance.shape import check_shape
 from loads.queries.crew import pilot_in
 from loads.queries.current import Current
@@ -89,6 +91,25 @@ def assessed_with(
     """This function will return a load document as read against these versions, and its result; without a
     basis its outline is all that is read. Raises Invalid with every fault.
     """
+    declared, basis, empty = _read_with(document, outline, used, known)
+    return declared, assess(declared, basis, empty, advised=advised)
+
+
+def checked_with(
+    document: dict[str, JSON], outline: Outline, used: InForce, known: datetime
+) -> tuple[Check, ...]:
+    """This function will return the checks of a load document against these versions and no more. Raises
+    Invalid with every fault.
+    """
+    declared, basis, empty = _read_with(document, outline, used, known)
+    if basis is None or isinstance(declared, Outline):
+        return assess(declared, basis, empty).checks
+    return checks_alone(declared, basis, empty)
+
+
+def _read_with(
+    document: dict[str, JSON], outline: Outline, used: InForce, known: datetime
+) -> tuple[Declared | Outline, Basis | None, EmptyFigures | None]:
     basis = basis_of(used.basis) if used.basis else None
     if basis is None:
         check_shape(document)
@@ -99,7 +120,7 @@ def assessed_with(
         if used.empty_weight and used.basis
         else None
     )
-    return declared, assess(declared, ruled.basis if ruled else None, empty, advised=advised)
+    return declared, ruled.basis if ruled else None, empty
 
 
 def _aircraft_in(operator: str, outline: Outline) -> Aircraft:

@@ -32,18 +32,14 @@ SELECT DISTINCT turn FROM (
 
 
 class Assessed(NamedTuple):
-    """What a stored load was assessed with, and what is needed to find what holds for it now.
-
-    The instants are as the database writes them, in UTC: few of many loads need them.
-    """
+    """What a stored load was assessed with, and what is needed to find what holds for it now."""
 
     aircraft: UUID
     configuration: str
-    departure: str
+    departure: datetime
     loading_basis: UUID | None
     empty_weight: UUID | None
     provisions: tuple[UUID, ...]
-    known: str  # when it was assessed
 
 
 class OtherFit(Exception):
@@ -61,9 +57,17 @@ class Versions:
         self._found: dict[tuple[UUID, str, int], InForce] = {}
         self._named: dict[tuple[object, ...], InForce | OtherFit] = {}
 
-    def known(self, one: Assessed) -> datetime:
-        """This function will return the instant on the "known" clock that counts for a load."""
-        return self._recheck.asked_at if self._in_force_now else datetime.fromisoformat(one.known)
+    def known(self, assessed: datetime) -> datetime:
+        """This function will return the instant on the "known" clock that counts for a load assessed then."""
+        return self._recheck.asked_at if self._in_force_now else assessed
+
+    def span(self, aircraft: str, departure: str) -> int:
+        """This function will return the number of the span of time in which nothing that counts begins or
+        ends for an aircraft; with versions named all times are one.
+        """
+        if not self._in_force_now:
+            return 0
+        return bisect_right(self._turns(UUID(aircraft))[1], datetime.fromisoformat(departure))
 
     def of(self, one: Assessed) -> InForce:
         """This function will return what a load is computed with; raises OtherFit."""
@@ -97,24 +101,26 @@ class Versions:
         return held if table is None else replace(held, standard_weights=table)
 
     def _now(self, one: Assessed) -> InForce:
-        if one.aircraft not in self._aircraft:
-            aircraft = Aircraft.objects.get(id=one.aircraft)
+        aircraft, turns = self._turns(one.aircraft)
+        # Between two turns nothing begins or ends, so one load stands for all of them.
+        key = (one.aircraft, one.configuration, bisect_right(turns, one.departure))
+        if key not in self._found:
+            known = self._recheck.asked_at
+            self._found[key] = in_force_for(aircraft, one.departure, known, one.configuration)
+        return self._found[key]
+
+    def _turns(self, number: UUID) -> tuple[Aircraft, Sequence[datetime]]:
+        if number not in self._aircraft:
+            aircraft = Aircraft.objects.get(id=number)
             values: dict[str, UUID | str | datetime] = {
-                "aircraft": one.aircraft,
+                "aircraft": number,
                 "operator": aircraft.operator_id,
                 "known": self._recheck.asked_at,
             }
             with connection.cursor() as cursor:
                 cursor.execute(_TURNS, values)
-                self._aircraft[one.aircraft] = aircraft, [turn for (turn,) in cursor.fetchall()]
-        aircraft, turns = self._aircraft[one.aircraft]
-        # Between two turns nothing begins or ends, so one load stands for all of them.
-        departure = datetime.fromisoformat(one.departure)
-        key = (one.aircraft, one.configuration, bisect_right(turns, departure))
-        if key not in self._found:
-            known = self._recheck.asked_at
-            self._found[key] = in_force_for(aircraft, departure, known, one.configuration)
-        return self._found[key]
+                self._aircraft[number] = aircraft, [turn for (turn,) in cursor.fetchall()]
+        return self._aircraft[number]
 
 
 @lru_cache(maxsize=256)

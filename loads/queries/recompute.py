@@ -7,12 +7,11 @@ out as such, with its reason.
 import json
 import logging
 from collections.abc import Iterable, Iterator
-from dataclasses import dataclass
+from dataclasses import dataclass, field
+from datetime import datetime
 from functools import lru_cache
-from typing import Any, Final, Literal, NamedTuple
+from typing import Any, Final, Literal
 from uuid import UUID
-
-from django.db import connection
 
 from fleet.basis_reading import basis_from_text
 from fleet.models import EmptyWeight, LoadingBasis
@@ -22,54 +21,27 @@ from loads.balance.bulk.known import Known, known_of
 from loads.balance.bulk.reading import Reading
 from loads.balance.declared import read_outline
 from loads.balance.engine import ENGINE_VERSION
-from loads.balance.result import Check, Result
+from loads.balance.result import Check, verdict_of
 from loads.models import Recheck
-from loads.queries.computation import assessed_with
+from loads.queries.computation import checked_with
 from loads.queries.figures import empty_figures
 from loads.queries.recheck_versions import Assessed, OtherFit, Versions
+from loads.queries.stored_loads import Stored, rows_for_bulk, rows_in_full
 from records.refusal import Refused
 from records.strict_json import read
 
 log = logging.getLogger(__name__)
 
 Now = Literal["within", "outside", "unresolved", "not computed", "other fit"]
-GONE: Final = ("superseded", "withdrawn")
-_BATCH: Final = 500
-# What a last-minute change made of a load is what was assessed, so its body counts. The configuration stands
-# in the body, too: that saves the row of the load.
-_ROWS: Final = """
-SELECT p.load_id, p.assessment_id, p.verdict, s.engine, convert_from(coalesce(c.body, d.body), 'UTF8'),
-       p.aircraft_id, (p.departure AT TIME ZONE 'UTC')::text || '+00:00', s.loading_basis_id,
-       s.empty_weight_id, s.provisions, (s.assessed_at AT TIME ZONE 'UTC')::text || '+00:00'
-FROM loads_present p
-JOIN loads_assessment s ON s.id = p.assessment_id
-JOIN loads_declaration d ON d.load_id = p.load_id
-LEFT JOIN loads_latechange c ON s.number > 1 AND c.assessment_id = s.id
-WHERE p.load_id = ANY (%s) AND p.state NOT IN ('superseded', 'withdrawn')
-"""
 LONGEST_LIMIT, LONGEST_EXCESS = 300, 500
-_WORDS: Final[dict[int, Literal["within", "outside"]]] = {WITHIN: "within", OUTSIDE: "outside"}
-_Key = tuple[UUID, UUID, str]
-
-
-class Stored(NamedTuple):
-    """A load as it is stored: what was declared, and the verdict of the assessment in use."""
-
-    load: UUID
-    assessment: UUID
-    verdict: str
-    engine: str
-    assessed: Assessed
-    body: str
-
-
-Read = tuple[Stored, Any]  # a stored load, and its document as JSON reads it
+_WORDS: Final = {WITHIN: "within", OUTSIDE: "outside"}
+_read_quickly = json.JSONDecoder().raw_decode
 
 
 @dataclass(frozen=True, slots=True)
 class Outcome:
-    """What came out for a load now. `code`, `limit` and `excess` tell of the first limit that is broken or
-    could not be checked; of a load that could not be computed `excess` tells why.
+    """What came out for a load that was computed exactly. `code`, `limit` and `excess` tell of the first
+    limit that is broken or could not be checked; of a load that could not be computed `excess` tells why.
     """
 
     stored: Stored
@@ -77,79 +49,107 @@ class Outcome:
     code: str = ""
     limit: str = ""
     excess: str = ""
-    exactly: bool = True
+
+
+@dataclass(frozen=True, slots=True)
+class Recomputed:
+    """What came out for the loads of a part: how many the bulk sums left with the verdict they had, and the
+    others one by one, in their order.
+    """
+
+    same_in_bulk: int
+    exactly: Iterator[Outcome]
 
 
 @dataclass(frozen=True, slots=True)
 class _Group:
-    """Loads of one basis, empty weight and configuration, each with its turn."""
+    """Loads of one basis, empty weight and configuration, each with its turn and the verdict it had."""
 
     known: Known
     reading: Reading
-    members: list[tuple[int, Stored]]
+    turns: list[int] = field(default_factory=list)
+    verdicts: list[str] = field(default_factory=list)
 
 
-def stored_loads(loads: list[UUID]) -> Iterator[Read]:
-    """This function will yield the loads of these numbers, in any order, but for those that were replaced or
-    withdrawn, each with its document as it is read quickly. They are read through a cursor of the server, a
-    few hundred at a time.
-    """
-    with connection.chunked_cursor() as cursor:
-        with connection.cursor() as setting:
-            # A part is few of many rows, whatever the planner holds of a list of some thousand numbers: whole
-            # tables read for each part would cost with the square of all that is stored.
-            setting.execute("SET LOCAL enable_seqscan = off")
-        cursor.execute(_ROWS, [loads])
-        while rows := cursor.fetchmany(_BATCH):
-            for row in rows:
-                yield _stored(row)
+class _Groups:
+    """The groups of one part; what loads share is worked out for the first of them."""
+
+    def __init__(self, versions: Versions) -> None:
+        self._versions = versions
+        self._seen: dict[tuple[object, ...], _Group | None] = {}
+        self._found: dict[tuple[UUID, UUID, str], _Group] = {}
+
+    def of(self, configuration: str, departure: str, texts: list[str]) -> _Group | None:
+        """The group of a load by its versions as `BULK_COLUMNS` has them, None for one to compute exactly."""
+        key = (configuration, self._versions.span(texts[1], departure), *texts)
+        try:
+            return self._seen[key]
+        except KeyError:
+            found = self._seen[key] = self._worked_out(configuration, departure, texts)
+            return found
+
+    def all(self) -> Iterable[_Group]:
+        """Every group there is."""
+        return self._found.values()
+
+    def _worked_out(self, configuration: str, departure: str, texts: list[str]) -> _Group | None:
+        engine, aircraft, basis, weight, provisions = texts
+        if engine != ENGINE_VERSION:  # the bulk reading asks less of what this engine has read before
+            return None
+        before = Assessed(
+            UUID(aircraft),
+            configuration,
+            datetime.fromisoformat(departure),
+            UUID(basis) if basis else None,
+            UUID(weight) if weight else None,
+            tuple(UUID(one) for one in provisions.strip("{}").split(",") if one),
+        )
+        try:
+            used = self._versions.of(before)
+        except OtherFit:
+            return None
+        if used.basis is None or used.empty_weight is None or used.provisions != NO_PROVISIONS:
+            return None
+        known = _known(used.basis.id, used.empty_weight.id, configuration)
+        if known is None:
+            return None
+        key = (used.basis.id, used.empty_weight.id, configuration)
+        return self._found.setdefault(key, _Group(known, Reading(known)))
 
 
-def recompute(recheck: Recheck, loads: Iterable[Read]) -> list[Outcome]:
-    """This function will return what comes out for each load, in their order.
+def recompute(recheck: Recheck, part: int) -> Recomputed:
+    """This function will compute the loads of a part, by the number of its row.
 
     Loads that this very engine assessed and whose basis the bulk sums know are decided in bulk; where that
     leaves a doubt, or the verdict comes out otherwise, the exact assessment says what is so.
     """
     versions = Versions(recheck)
-    found: dict[int, Outcome] = {}
-    groups: dict[_Key, _Group] = {}
-    for turn, (one, document) in enumerate(loads):
-        if not _added(one, document, turn, versions, groups):
-            found[turn] = exact_outcome(one, versions)
-    for group in groups.values():
+    groups = _Groups(versions)
+    left = _read_into(groups, rows_for_bulk(part))
+    same = 0
+    for group in groups.all():
         decision = decide(group.known, group.reading.batch())
-        for (turn, one), verdict in zip(group.members, decision.verdict.tolist(), strict=True):
-            word = _WORDS.get(verdict)
-            found[turn] = (
-                Outcome(one, word, exactly=False)
-                if word is not None and word == one.verdict
-                else exact_outcome(one, versions)
-            )
-    return [found[turn] for turn in sorted(found)]
+        for turn, had, verdict in zip(group.turns, group.verdicts, decision.verdict.tolist(), strict=True):
+            if _WORDS.get(verdict) == had:
+                same += 1
+            else:
+                left.append(turn)
+    stored = rows_in_full(part, left) if left else iter(())
+    return Recomputed(same, (exact_outcome(one, versions) for one in stored))
 
 
-def _added(one: Stored, document: Any, turn: int, versions: Versions, groups: dict[_Key, _Group]) -> bool:
-    """This function will add a load to the batch it belongs to; False when it must be computed exactly."""
-    if one.engine != ENGINE_VERSION:  # the bulk reading asks less of what this engine has read before
-        return False
-    try:
-        used = versions.of(one.assessed)
-    except OtherFit:
-        return False
-    if used.basis is None or used.empty_weight is None or used.provisions != NO_PROVISIONS:
-        return False
-    key = (used.basis.id, used.empty_weight.id, one.assessed.configuration)
-    group = groups.get(key)
-    if group is None:
-        known = _known(*key)
-        if known is None:
-            return False
-        group = groups[key] = _Group(known, Reading(known), [])
-    if not group.reading.add(document):
-        return False
-    group.members.append((turn, one))
-    return True
+def _read_into(groups: _Groups, rows: Iterable[tuple[Any, ...]]) -> list[int]:
+    """Put the loads into their groups; return the turns of those the bulk sums do not know."""
+    left = []
+    for turn, verdict, body, departure, *texts in rows:
+        document, _ = _read_quickly(body)
+        group = groups.of(document["configuration"], departure, texts)
+        if group is not None and group.reading.add(document):
+            group.turns.append(turn)
+            group.verdicts.append(verdict)
+        else:
+            left.append(turn)
+    return left
 
 
 @lru_cache(maxsize=512)
@@ -162,7 +162,7 @@ def _known(basis: UUID, empty_weight: UUID, configuration: str) -> Known | None:
 def exact_outcome(one: Stored, versions: Versions) -> Outcome:
     """This function will return what the whole assessment says of a load."""
     try:
-        return _outcome(one, _assessed(one, versions))
+        return _outcome(one, _checks(one, versions))
     except OtherFit:
         return Outcome(one, "other fit")
     except Refused as refusal:
@@ -173,21 +173,30 @@ def exact_outcome(one: Stored, versions: Versions) -> Outcome:
         return Outcome(one, "not computed", "failed", "not computed", words)
 
 
-def _assessed(one: Stored, versions: Versions) -> Result:
+def _checks(one: Stored, versions: Versions) -> tuple[Check, ...]:
     document: Any = read(one.body.encode())
-    used, known = versions.of(one.assessed), versions.known(one.assessed)
-    return assessed_with(document, read_outline(document), used, known, advised=False)[1]
+    outline = read_outline(document)
+    before = Assessed(
+        one.aircraft,
+        outline.configuration,
+        one.departure,
+        one.loading_basis,
+        one.empty_weight,
+        tuple(one.provisions),
+    )
+    return checked_with(document, outline, versions.of(before), versions.known(one.assessed))
 
 
-def _outcome(one: Stored, result: Result) -> Outcome:
-    wanted = {"outside": "fail", "unresolved": "unresolved"}.get(result.verdict)
-    broken = [check for check in result.checks if check.outcome == wanted]
+def _outcome(one: Stored, checks: tuple[Check, ...]) -> Outcome:
+    verdict = verdict_of(checks)
+    wanted = {"outside": "fail", "unresolved": "unresolved"}.get(verdict)
+    broken = [check for check in checks if check.outcome == wanted]
     if not broken:
-        return Outcome(one, result.verdict)
+        return Outcome(one, verdict)
     first = broken[0]
     more = f" (and {len(broken) - 1} more)" if broken[1:] else ""
     limit = f"{first.title}{more}"[:LONGEST_LIMIT]
-    return Outcome(one, result.verdict, first.code, limit, _excess(first)[:LONGEST_EXCESS])
+    return Outcome(one, verdict, first.code, limit, _excess(first)[:LONGEST_EXCESS])
 
 
 def _excess(check: Check) -> str:
@@ -197,11 +206,3 @@ def _excess(check: Check) -> str:
     if check.actual is None or not limits:
         return check.margin_text
     return f"{check.margin_text} ({check.actual} against {' to '.join(limits)})"
-
-
-def _stored(row: tuple[Any, ...]) -> Read:
-    load, assessment, verdict, engine, body, aircraft, departure, basis, weight, provisions, known = row
-    document = json.loads(body)
-    used = (basis, weight, tuple(provisions), known)
-    assessed = Assessed(aircraft, document["configuration"], departure, *used)
-    return Stored(load, assessment, verdict, engine, assessed, body), document

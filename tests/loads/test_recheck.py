@@ -16,6 +16,7 @@ from loads.actions.submit_load import submit_load
 from loads.actions.withdraw_load import withdraw_load
 from loads.actions.work_recheck import work_recheck
 from loads.models import Assessment, LoadFlag, RecheckPart, RecheckResult
+from loads.queries import recompute
 from loads.queries.rechecks import progress_of, table_page, texts_of
 from loads.tasks import recheck as task
 from records.models import Act, Outbox
@@ -136,6 +137,18 @@ def test_one_withdrawn_after_the_work_was_parted_is_counted_as_gone(people, monk
     withdraw_load(one.load.id, reason="off", seen=str(one.step.number), by=actor(people.preparer))
 
     assert finished(recheck).counts["gone"] == 1
+
+
+def test_one_gone_between_the_bulk_sums_and_the_exact_ones_is_counted_as_gone(people, monkeypatch):
+    submitted(people)
+    recheck = asked(people, empty_weight=str(heavier(people).id))
+    really = recompute.rows_in_full
+    monkeypatch.setattr(recompute, "rows_in_full", lambda part, turns: list(really(part, turns))[1:])
+
+    progress = finished(recheck)
+
+    assert (progress.counts["gone"], progress.counts["changed"]) == (1, 1)
+    assert sum(progress.counts.values()) == progress.loads
 
 
 def test_a_load_that_cannot_be_computed_is_reported_with_its_reason(people):

@@ -90,34 +90,32 @@ class Reading:
         self._capacity = {tank.id: tank.capacity for tank in known.basis.tanks}
         self._kept = known.kept
         self._count = 0
-        self._rows: list[int] = []
-        self._columns: list[int] = []
+        self._spots: list[
+            int
+        ] = []  # where in `held` each weight belongs, all rows being one behind the other
         self._held: list[float] = []
         self._usable: list[float] = []
-        self._scalars: list[tuple[float, float, float, float, float, float]] = []
+        self._scalars: list[tuple[float, ...]] = []
 
     def add(self, document: Mapping[str, Any]) -> bool:
         """Add a load; return False, with nothing added, where the bulk sums do not know all of it."""
+        begun = len(self._spots)
         try:
-            lines = self._lines(document)
+            self._add_lines(document)
             usable, fuel = self._fuel(document["fuel"])
-            take_off, landing = self._limits(document.get("limits", ()))
+            limits = self._limits(document.get("limits", ()))
         except (Unlike, KeyError, TypeError, AttributeError, ValueError):
+            del self._spots[begun:], self._held[begun:]
             return False
-        row = self._count
-        for column, weight in lines:
-            self._rows.append(row)
-            self._columns.append(column)
-            self._held.append(weight)
         self._usable += usable
-        self._scalars.append((*fuel, take_off, landing))
+        self._scalars.append(fuel + limits)
         self._count += 1
         return True
 
     def batch(self) -> Batch:
         """Return what was added so far."""
         count, spots = self._count, len(self._known.spots)
-        place = np.array(self._rows, dtype=np.intp) * spots + np.array(self._columns, dtype=np.intp)
+        place = np.array(self._spots, dtype=np.intp)
         held = np.bincount(place, weights=np.array(self._held), minlength=count * spots)
         scalars = np.array(self._scalars, dtype=np.float64).reshape(count, 6)
         return Batch(
@@ -126,48 +124,61 @@ class Reading:
             *(np.ascontiguousarray(scalars[:, column]) for column in range(6)),
         )
 
-    def _lines(self, document: Mapping[str, Any]) -> list[tuple[int, float]]:
+    def _add_lines(self, document: Mapping[str, Any]) -> None:
+        """Add who and what is aboard. Called for every line there is, so each step of it is a plain one."""
         crew, passengers, items = document["crew"], document["passengers"], document["items"]
-        if document.keys() - _TOP or len(crew) < self._known.configuration.minimum_crew:
+        if not _TOP.issuperset(document) or len(crew) < self._known.configuration.minimum_crew:
             raise Unlike
         if document["persons_on_board"] != len(crew) + len(passengers):
             raise Unlike
-        found = []
-        for lines, seats in ((crew, self._seats["crew"]), (passengers, self._seats["passenger"])):
+        row = self._count * len(self._known.spots)
+        kept, spots, held = self._kept, self._spots, self._held
+        for lines, names, hows, at, columns in (
+            (crew, _PERSON, _MEASURED, "seat", self._seats["crew"]),
+            (passengers, _PERSON, _MEASURED, "seat", self._seats["passenger"]),
+            (items, _ITEM, _ITEM_HOWS, "place", self._places),
+        ):
             for line in lines:
-                if line["how"] not in _MEASURED or not line.keys() <= _PERSON:
+                if line["how"] not in hows or not names.issuperset(line):
                     raise Unlike
-                found.append((seats[line["seat"]], self._weight(line["weight"])))
-        for line in items:
-            if line["how"] not in _ITEM_HOWS or not line.keys() <= _ITEM:
-                raise Unlike
-            found.append((self._places[line["place"]], self._weight(line["weight"])))
-        return found
+                weight = line["weight"]
+                typed = (weight["value"], weight["unit"])
+                found = kept.get(typed)
+                held.append(self._weight(typed) if found is None else found)
+                spots.append(row + columns[line[at]])
 
     def _fuel(self, fuel: Mapping[str, Any]) -> tuple[list[float], tuple[float, float, float, float]]:
-        filled = fuel["at_engine_start"]
-        if fuel.get("not_usable") or not fuel.keys() <= _FUEL or len(filled) != len(self._tanks):
+        filled, kept = fuel["at_engine_start"], self._kept
+        if fuel.get("not_usable") or not _FUEL.issuperset(fuel) or len(filled) != len(self._tanks):
             raise Unlike
-        typed = (fuel["density"]["value"], fuel["density"]["unit"])
-        usable = [self._fill(tank, filled[tank], typed) for tank in self._tanks]
-        plan = (self._volume(fuel[name], typed) for name in ("taxi", "trip", "minimum_at_landing"))
-        taxi, trip, least = plan
-        return usable, (self._density(typed), taxi, trip, least)
+        density = (fuel["density"]["value"], fuel["density"]["unit"])
+        usable, planned = [], []
+        for tank in self._tanks:
+            typed = filled[tank]
+            key = (tank, typed["value"], typed["unit"], *density)
+            found = kept.get(key)
+            usable.append(self._fill(key) if found is None else found)
+        for name in ("taxi", "trip", "minimum_at_landing"):
+            typed = fuel[name]
+            volume = (typed["value"], typed["unit"], *density)
+            found = kept.get(volume)
+            planned.append(self._volume(volume) if found is None else found)
+        taxi, trip, least = planned
+        return usable, (self._density(density), taxi, trip, least)
 
     def _limits(self, lines: Any) -> tuple[float, float]:
         least = {"take-off": NO_LIMIT, "landing": NO_LIMIT}
         for line in lines:
-            if not line.keys() <= _LIMIT:
+            if not _LIMIT.issuperset(line):
                 raise Unlike
-            least[line["at"]] = min(least[line["at"]], self._weight(line["weight"]))
+            weight = line["weight"]
+            typed = (weight["value"], weight["unit"])
+            found = self._kept.get(typed)
+            least[line["at"]] = min(least[line["at"]], self._weight(typed) if found is None else found)
         return least["take-off"], least["landing"]
 
-    def _weight(self, typed: Mapping[str, str]) -> float:
-        key = (typed["value"], typed["unit"])
-        found = self._kept.get(key)
-        if found is None:
-            found = self._keep(key, in_unit(_quantity(*key), self._basis.weight_unit))
-        return found
+    def _weight(self, typed: tuple[str, str]) -> float:
+        return self._keep(typed, in_unit(_quantity(*typed), self._basis.weight_unit))
 
     def _density(self, typed: tuple[str, str]) -> float:
         key = ("density", *typed)
@@ -177,26 +188,19 @@ class Reading:
             found = self._keep(key, in_unit(_quantity(*typed), unit))
         return found
 
-    def _volume(self, typed: Mapping[str, str], density: tuple[str, str]) -> float:
-        key = (typed["value"], typed["unit"], *density)
-        found = self._kept.get(key)
-        if found is None:
-            found = self._keep(key, self._exact_volume(typed, density))
-        return found
+    def _volume(self, key: tuple[str, str, str, str]) -> float:
+        return self._keep(key, self._exact_volume(*key))
 
-    def _fill(self, tank: str, typed: Mapping[str, str], density: tuple[str, str]) -> float:
+    def _fill(self, key: tuple[str, str, str, str, str]) -> float:
         """Return what a tank holds; a tank filled to its brim is the rule, so that is compared exactly."""
-        key = (tank, typed["value"], typed["unit"], *density)
-        found = self._kept.get(key)
-        if found is None:
-            exact = self._exact_volume(typed, density)
-            if exact > self._capacity[tank]:
-                raise Unlike
-            found = self._keep(key, exact)
-        return found
+        tank, *typed = key
+        exact = self._exact_volume(*typed)
+        if exact > self._capacity[tank]:
+            raise Unlike
+        return self._keep(key, exact)
 
-    def _exact_volume(self, typed: Mapping[str, str], density: tuple[str, str]) -> Fraction:
-        amount = _quantity(typed["value"], typed["unit"])
+    def _exact_volume(self, value: str, unit: str, *density: str) -> Fraction:
+        amount = _quantity(value, unit)
         if DIMENSION_OF[amount.unit] is Dimension.VOLUME:
             return in_unit(amount, self._basis.volume_unit)
         return volume_of_weight(amount, _quantity(*density), self._basis.volume_unit)
