@@ -19,8 +19,10 @@ def rational(above: int, below: int) -> Fraction:
         if not below:
             raise ZeroDivisionError("a rational has no 0 below")
         shared = -shared
+    if shared != 1:
+        above, below = above // shared, below // shared
     made = _bare(Fraction)
     # The types know only the properties of the parts, which cannot be set.
-    made._numerator = above // shared  # type: ignore[attr-defined] # noqa: SLF001 # see above
-    made._denominator = below // shared  # type: ignore[attr-defined] # noqa: SLF001 # see above
+    made._numerator = above  # type: ignore[attr-defined] # noqa: SLF001 # see above
+    made._denominator = below  # type: ignore[attr-defined] # noqa: SLF001 # see above
     return made

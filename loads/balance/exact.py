@@ -36,8 +36,10 @@ def quotient(one: Fraction, other: Fraction) -> Fraction:
 
 def plus(one: Fraction, other: Fraction) -> Fraction:
     """Add two rationals."""
-    above, below = one.as_integer_ratio()
     over, under = other.as_integer_ratio()
+    if not over:
+        return one
+    above, below = one.as_integer_ratio()
     return rational(above * under + over * below, below * under)
 
 

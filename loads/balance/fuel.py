@@ -159,6 +159,8 @@ def _state(
         along.append(moment)
         if lateral is not NONE:
             across.append(lateral)
+    if not volumes:
+        return FuelState(phase, usable, NOTHING, NOTHING, NOTHING, NOTHING, draws)
     each = density.as_integer_ratio()
     usable_weight = total(volumes, each)
     return FuelState(

@@ -6,8 +6,10 @@ with.
 
 from collections.abc import Iterable, Iterator
 from fractions import Fraction
+from math import lcm
 from typing import NamedTuple
 
+from fleet.rational import rational
 from fleet.weighing import EmptyFigures
 from loads.balance.aboard import Declared, Person
 from loads.balance.exact import plus, product, total
@@ -58,17 +60,26 @@ def _people(people: Iterable[Person]) -> Iterator[Part]:
 
 
 def _sums(parts: Iterable[Part]) -> Sums | None:
-    weights, along, across = [], [], []
+    """Add up in whole numbers over one denominator that grows as it must: weights and moments share it."""
+    weight_sum, moment_sum, shared = 0, 0, 1
+    across = []
     for weight, arm, lateral_arm in parts:
         if weight is None:
             return None
         above, below = weight.as_integer_ratio()
         over, under = arm.as_integer_ratio()
-        weights.append((above, below))
-        along.append((above * over, below * under))
+        below *= under
+        if shared % below:
+            greater = lcm(shared, below)
+            weight_sum *= greater // shared
+            moment_sum *= greater // shared
+            shared = greater
+        above *= shared // below
+        weight_sum += above * under
+        moment_sum += above * over
         if lateral_arm.numerator:
             across.append(product(weight, lateral_arm))
-    return Sums(total(weights), total(along), total(across))
+    return Sums(rational(weight_sum, shared), rational(moment_sum, shared), total(across))
 
 
 def _together(one: Sums, other: Sums | None) -> Sums | None:
