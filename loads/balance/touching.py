@@ -51,24 +51,63 @@ def touching_envelope(part: Varied, shape: Shape, axis: Axis, ends: Ends) -> Ite
     """Yield where a part may touch the outline of an envelope."""
     across = axis == "lateral"
     figure, over = (part.lateral, (ONE,)) if across else (part.moment, part.over)
-    for each in shape.slabs.levels:
-        at_level = (Fraction(-each, shape.slabs.scale),)
+    weights = _weights(part, ends)
+    levels = (Fraction(each, shape.slabs.scale) for each in shape.slabs.levels)
+    for level in (each for each in levels if _within(each, *weights)):
         for end in dict.fromkeys((part.low, part.high)):
-            yield from roots_between(add(_at(part.weight, end), at_level), *ends)
+            yield from roots_between(add(_at(part.weight, end), (-level,)), *ends)
     if not part.is_point and len(part.weight) == 1:
         return  # a transfer at one weight: its greatest and least moments are points of their own
+    floats = [[float(each) for each in row] for row in figure], [float(each) for each in over]
     corners: dict[tuple[Fraction, Fraction], None] = {}
     for line, reach in _sides(shape):
+        low, high = max(weights[0], reach[0]), min(weights[1], reach[1])
+        if not _within(low, low, high):
+            continue
         a, b, c = line
         corners |= {(level, a + level * (b + level * c)): None for level in reach}
-        yield from _along(part, _margin(part, figure, over, line), reach, ends)
-    if part.is_point:
-        return
-    for level, at in corners:
-        passes = add(*(scale(each, level**power) for power, each in enumerate(figure)), scale(over, at))
-        for found in roots_between(passes, *ends):
-            if _within(level, value(part.low, found.low), value(part.high, found.low)):
-                yield found
+        if part.is_point or not _clear(*floats, line, ends, (low, high)):
+            yield from _along(part, _margin(part, figure, over, line), reach, ends)
+    if not part.is_point:
+        for level, at in corners:
+            if _within(level, *weights):
+                yield from _past_corner(part, figure, (level, scale(over, at)), ends)
+
+
+def _past_corner(part: Varied, figure: Series, corner: tuple[Fraction, Poly], ends: Ends) -> Iterator[Root]:
+    """Yield where a stretch passes a corner: its weight, and what makes nothing of the figure there."""
+    level, at = corner
+    passes = add(*(scale(each, level**power) for power, each in enumerate(figure)), at)
+    for found in roots_between(passes, *ends):
+        if _within(level, value(part.low, found.low), value(part.high, found.low)):
+            yield found
+
+
+def _weights(part: Varied, ends: Ends) -> tuple[Fraction, Fraction]:
+    """Return the least and the greatest weight of a part; its ends vary evenly with x."""
+    found = [value(_at(part.weight, end), x) for end in (part.low, part.high) for x in ends]
+    return min(found), max(found)
+
+
+def _clear(
+    figure: list[list[float]],
+    over: list[float],
+    line: tuple[Fraction, Fraction, Fraction],
+    ends: Ends,
+    reach: tuple[Fraction, Fraction],
+) -> bool:
+    """Return whether floats can tell that a stretch does not come to a side: its margin, as `_margin` has it,
+    is far from nothing all over. The sums are made anew in floats, since most sides are far away.
+    """
+    rows = []
+    for power in range(3):
+        row = list(figure[power]) if power < len(figure) else []
+        row += [0.0] * (len(over) - len(row))
+        factor = float(line[power])
+        for at, each in enumerate(over):
+            row[at] += factor * each
+        rows.append(row)
+    return _far_from_nothing(rows, ends, reach)
 
 
 def _sides(shape: Shape) -> Iterator[tuple[tuple[Fraction, Fraction, Fraction], tuple[Fraction, Fraction]]]:
@@ -144,11 +183,6 @@ def _along(part: Varied, margin: Series, reach: tuple[Fraction, Fraction], ends:
         for found in roots_between(margin[0], *ends):
             if _within(value(part.weight[0], found.low), *reach):
                 yield found
-        return
-    lowest = min(value(part.low, end) for end in ends)
-    highest = max(value(part.high, end) for end in ends)
-    low, high = max(lowest, reach[0]), min(highest, reach[1])
-    if low > high or _far_from_nothing(margin, ends, (low, high)):
         return
     for end in (part.low, part.high):
         for found in roots_between(_at(margin, end), *ends):
@@ -228,11 +262,11 @@ def _within(at: Fraction, low: Fraction, high: Fraction) -> bool:
     return float(low) - beyond <= float(at) <= float(high) + beyond
 
 
-def _far_from_nothing(margin: Series, ends: Ends, reach: tuple[Fraction, Fraction]) -> bool:
+def _far_from_nothing(margin: list[list[float]], ends: Ends, reach: tuple[Fraction, Fraction]) -> bool:
     """Return whether floats can tell that a margin is nothing nowhere in a rectangle of x and t: all parts of
     the sum that it is there (Bernstein's, both ways) are of one sign and none of them is small.
     """
-    rows = [_shares([float(each) for each in part], float(ends[0]), float(ends[1])) for part in margin]
+    rows = [_shares(part, float(ends[0]), float(ends[1])) for part in margin]
     longest = max(len(row) for row in rows)
     rows = [_raised(row, longest) for row in rows]
     low, high = float(reach[0]), float(reach[1])
