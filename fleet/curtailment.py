@@ -271,8 +271,7 @@ def _not_below_zero(a: Fraction, b: Fraction, c: Fraction, ends: Stretch) -> lis
     else:
         reach = _root(square, up=False)
         start, end = (-b + reach) / (2 * c), (-b - reach) / (2 * c)
-    start, end = max(low, start), min(high, end)
-    return [(start, end)] if start <= end else []
+    return [(max(low, start), min(high, end))]  # turned round where it is nowhere
 
 
 def _root(square: Fraction, *, up: bool) -> Fraction:

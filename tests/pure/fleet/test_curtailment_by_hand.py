@@ -121,6 +121,24 @@ def test_a_moment_leaves_the_weights_from_which_it_counts_for_little_enough():
     assert moved.weights_at(F(99)) == moved.weights_at(F(111)) == ()
 
 
+def test_at_the_very_arm_of_a_moved_side_a_moment_more_leaves_nothing():
+    moved = left(Amounts(None, None, Inset(F(1), F(500))))
+    assert moved.weights_at(F(101)) == ()
+    assert left(Amounts(None, None, arm(1))).weights_at(F(101)) == ((F(2000), F(4000)),)
+
+
+def test_a_moment_of_less_than_one_counts_too():
+    """0.75 lb in are a 4,000th of an inch at 3,000 lb."""
+    moved = left(Amounts(None, None, moment("0.75")))
+    assert moved.weights_at(100 + F(1, 4000)) == ((F(3000), F(4000)),)
+
+
+def test_amounts_that_are_no_whole_numbers_are_exact():
+    moved = left(Amounts(None, None, Inset(F(1, 3), F(100, 7)), Inset(F(2, 9), F(3, 11))))
+    assert moved.arms_at(F(3000)) == ((100 + F(1, 3) + F(1, 210), 110 - F(2, 9) - F(1, 11000)),)
+    assert moved.arms_at(F(4000)) == ((100 + F(1, 3) + F(1, 280), 110 - F(2, 9) - F(3, 44000)),)
+
+
 def test_an_arm_leaves_every_weight_or_none_along_a_level_side():
     moved = left(Amounts(None, None, arm(1), arm(2)))
     assert moved.weights_at(F(101)) == moved.weights_at(F(108)) == ((F(2000), F(4000)),)
@@ -159,6 +177,7 @@ SLOPING = ((100, 2000), (105, 4000), (130, 4000), (130, 2000))
         (15625, "107.5", ((2500, 2500),)),  # both roots 2,500
         (15626, "107.5", ()),  # none
         (24000, "111", ((2400, 4000),)),  # 2,400 and 4,000
+        ("48125/3", "323/3", ((2500, F(7700, 3)),)),
     ],
 )
 def test_along_a_sloping_edge_a_moment_leaves_what_lies_between_two_roots(forward, at, weights):
@@ -226,12 +245,54 @@ def test_as_long_as_one_of_two_parts_is_left_nothing_is_used_up():
     assert len(one.slabs.trapezoids[1]) == 1
 
 
+def test_what_is_left_of_no_width_at_every_weight_is_not_used_up():
+    assert list(left(Amounts(None, None, arm(5), arm(5))).used_up()) == []
+    assert list(left(Amounts(None, None, arm(5), arm("5.001"))).used_up()) == [(F(2000), F(4000))]
+    light = [(x, F(y, 40000)) for x, y in SQUARE]
+    assert list(left(Amounts(None, None, arm(5), arm("4.999")), corners=light).used_up()) == []
+
+
+# Two parts beside each other above 2,000 lb: the one of NARROWING, and aft of it one that stays as wide.
+TWO_PARTS = (
+    (100, 1000),
+    (100, 2000),
+    (105, 4000),
+    (115, 4000),
+    (120, 2000),
+    (140, 2000),
+    (140, 4000),
+    (180, 4000),
+    (180, 1000),
+)
+
+
+@pytest.mark.parametrize(
+    ("amount", "parts"),
+    [
+        (21875, 2),  # left between 2,500 and 3,500 lb
+        (22500, 2),  # at 3,000 lb, by no width
+        (22501, 1),
+        (19999, 2),  # left at either end
+    ],
+)
+def test_a_part_is_left_out_where_nothing_of_it_is_left_at_any_weight(amount, parts):
+    moved = left(Amounts(None, None, moment(amount), moment(amount)), corners=TWO_PARTS)
+    assert [len(pieces) for pieces in moved.slabs.trapezoids] == [1, parts]
+
+
 def test_where_two_rows_meet_nothing_may_be_left_at_that_one_weight():
     """6 in aft up to 3,000 lb, 6 in forward from there: at 3,000 lb both count, of 10 in."""
     moved = left(Amounts(None, F(3000), aft=arm(6)), Amounts(F(3000), None, forward=arm(6)))
     assert list(moved.used_up()) == [(F(3000), F(3000))]
     assert moved.arms_at(F(3000)) == ()
     assert moved.arms_at(F(2999)) == ((F(100), F(104)),)
+    halves = [(x, F(y, 3)) for x, y in SQUARE]
+    third = left(
+        Amounts(None, F(2000, 3), aft=arm(6)), Amounts(F(2000, 3) + 1, None, forward=arm(6)), corners=halves
+    )
+    assert list(third.used_up()) == []
+    meeting = left(Amounts(None, F(2501, 3), aft=arm(6)), Amounts(F(2501, 3), None, arm(6)), corners=halves)
+    assert list(meeting.used_up()) == [(F(2501, 3), F(2501, 3))]
 
 
 @pytest.mark.parametrize(
