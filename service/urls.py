@@ -8,9 +8,10 @@ from service.figures import metrics
 from service.health import Health, alive
 
 api: list[URLPattern | URLResolver] = [
-    path("", include("records.api.urls")),
-    path("", include("fleet.api.urls")),
+    # Tried in this order: what is asked most stands first.
     path("", include("loads.api.urls")),
+    path("", include("fleet.api.urls")),
+    path("", include("records.api.urls")),
     path("health", Health.as_view(), name="api-health"),
     path("openapi.json", openapi, name="openapi"),
 ]
