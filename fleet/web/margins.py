@@ -3,6 +3,8 @@
 from collections.abc import Iterator, Mapping
 from typing import Any
 
+from fleet.web.as_typed import as_typed
+
 Row = dict[str, str]
 SIDES = ("forward", "aft", "left", "right")
 
@@ -22,7 +24,7 @@ def presentation_rows(document: Mapping[str, Any]) -> Iterator[Row]:
     given = document.get("presentation", {})
     if "index" in given:
         index = given["index"]
-        arm, divisor = _quantity(index["reference_arm"]), _quantity(index["divisor"])
+        arm, divisor = as_typed(index["reference_arm"]), as_typed(index["divisor"])
         yield {
             "title": "Index units",
             "value": f"weight x (arm - {arm}) / {divisor} + {index['constant']}",
@@ -37,13 +39,9 @@ def presentation_rows(document: Mapping[str, Any]) -> Iterator[Row]:
 
 
 def _amounts(row: Mapping[str, Any]) -> str:
-    sides = ", ".join(f"{side} {_quantity(row[side])}" for side in SIDES if side in row)
-    ends = [f"{word} {_quantity(row[word])}" for word in ("from", "to") if word in row]
+    sides = ", ".join(f"{side} {as_typed(row[side])}" for side in SIDES if side in row)
+    ends = [f"{word} {as_typed(row[word])}" for word in ("from", "to") if word in row]
     return f"{' '.join(ends)}: {sides}" if ends else sides
-
-
-def _quantity(part: Mapping[str, Any]) -> str:
-    return f"{part['value']} {part['unit']}"
 
 
 def _source(source: Mapping[str, Any], document: Mapping[str, Any]) -> str:

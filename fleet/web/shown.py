@@ -13,6 +13,7 @@ from fleet.queries.falling_due import Due, falling_due
 from fleet.queries.history import VersionHistory, empty_weight_history, loading_basis_history
 from fleet.queries.in_force import basis_in_force, empty_weights_in_force
 from fleet.queries.provisions import provisions_at
+from fleet.web.as_typed import as_typed, sided
 from fleet.web.margins import margin_rows, presentation_rows
 from fleet.web.positions_shown import position_rows
 from fleet.web.rules_shown import rule_rows
@@ -108,20 +109,8 @@ def _due(one: Due, zone: ZoneInfo, now: datetime) -> dict[str, Any]:
     }
 
 
-def _quantity(part: dict[str, Any]) -> str:
-    return f"{part['value']} {part['unit']}"
-
-
-def _sided(name: str, part: dict[str, Any]) -> str:
-    """This function will write a lateral figure as L or R of the centreline, never with a bare sign."""
-    value = str(part["value"])
-    if not name.startswith("lateral") or not value.strip("-0."):
-        return _quantity(part)
-    return f"{'L' if value.startswith('-') else 'R'} {value.lstrip('-')} {part['unit']}"
-
-
 def _weight_words(weight: EmptyWeight) -> str:
-    return _quantity(json.loads(weight.document)["weight"])
+    return as_typed(json.loads(weight.document)["weight"])
 
 
 def _weight_lines(weight: EmptyWeight) -> list[str]:
@@ -132,7 +121,7 @@ def _weight_lines(weight: EmptyWeight) -> list[str]:
         ("lateral_moment", "lateral moment"),
         ("lateral_arm", "lateral arm"),
     )
-    lines = [f"{title} {_sided(part, document[part])}" for part, title in titles if part in document]
+    lines = [f"{title} {sided(part, document[part])}" for part, title in titles if part in document]
     return [*lines, f"by {document['how']}, {document['date']}, report {document['report']}"]
 
 

@@ -1,6 +1,5 @@
 """Manifests by number, with a search."""
 
-from datetime import UTC
 from typing import Any
 from urllib.parse import urlencode
 from zoneinfo import ZoneInfo
@@ -13,6 +12,7 @@ from fleet.queries.aircraft import all_aircraft
 from loads.queries.documents import Filed, Search, search_documents
 from loads.queries.rechecks import flagged_among
 from loads.web.asking import zone_of
+from loads.web.flights import leg_of
 from loads.web.looking import Look, begins, ends
 from records.web.asking import operator_of, signed_in
 
@@ -55,13 +55,7 @@ def _line(one: Filed, zone: ZoneInfo) -> dict[str, Any]:
     return {
         "number": one.paper.number,
         "load": load.id,
-        "registration": load.aircraft.registration,
-        "reference": load.reference,
-        "leg": load.leg,
-        "origin": load.origin,
-        "destination": load.destination,
-        "local": load.departure.astimezone(zone).strftime("%Y-%m-%d %H:%M"),
-        "utc": load.departure.astimezone(UTC).strftime("%H:%M"),
+        **leg_of(load, zone),
         "digest": one.digest,
         "size": f"{-(-one.size // 1000)} kB" if one.size is not None else "",
         "filed": one.filed_at.astimezone(zone).strftime("%Y-%m-%d %H:%M") if one.filed_at else "",

@@ -9,6 +9,7 @@ from zoneinfo import ZoneInfo
 
 from fleet.models import Approval, EmptyWeight, LoadingBasis, Provision
 from fleet.queries.aircraft import empty_weight_of, loading_basis_of
+from fleet.web.as_typed import as_typed, sided
 
 Shown = dict[str, Any]
 
@@ -23,9 +24,9 @@ def weight_shown(used: EmptyWeight | None, now: EmptyWeight | None, zone: ZoneIn
     version = empty_weight_of(used.aircraft, used.id)
     document = json.loads(version.document)
     return _authors(version, getattr(version, "approval", None), zone) | {
-        "figure": _quantity(document["weight"]),
+        "figure": as_typed(document["weight"]),
         "lines": [
-            f"{title} {_sided(name, document[name])}"
+            f"{title} {sided(name, document[name])}"
             for name, title in (
                 ("moment", "moment"),
                 ("arm", "arm"),
@@ -98,8 +99,8 @@ def equipment_shown(used: LoadingBasis | None, configuration: str) -> list[dict[
         {
             "kind": kind,
             "what": item["what"],
-            "weight": _quantity(item["weight"]),
-            "arm": _quantity(item["arm"]),
+            "weight": as_typed(item["weight"]),
+            "arm": as_typed(item["arm"]),
         }
         for part, kind in (("equipment", "equipment"), ("operating_items", "operating item"))
         for item in found.get(part, ())
@@ -114,18 +115,7 @@ def _authors(version: EmptyWeight | LoadingBasis, approval: Approval | None, zon
 
 
 def _other(document: dict[str, Any]) -> str:
-    return f"{_quantity(document['weight'])}, report {document['report']}, approved later"
-
-
-def _quantity(part: dict[str, Any]) -> str:
-    return f"{part['value']} {part['unit']}"
-
-
-def _sided(name: str, part: dict[str, Any]) -> str:
-    value = str(part["value"])
-    if not name.startswith("lateral") or not value.strip("-0."):
-        return _quantity(part)
-    return f"{'L' if value.startswith('-') else 'R'} {value.lstrip('-')} {part['unit']}"
+    return f"{as_typed(document['weight'])}, report {document['report']}, approved later"
 
 
 def _includes(parts: dict[str, Any]) -> str:
