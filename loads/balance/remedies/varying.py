@@ -144,9 +144,21 @@ class Varying:
             return False
         return self._kinds(end) == tuple(each for each, size in zip(kinds, sizes, strict=True) if size)
 
+    def _points(self, low: Fraction, high: Fraction) -> list[Fraction]:
+        """Return the x whose flights tell the polynomials: two where nothing is of a higher degree."""
+        quarter = (high - low) / QUARTERS
+        if self.change.refuels:
+            return [low + quarter, low + 2 * quarter, low + 3 * quarter]
+        result = self.result(low + 2 * quarter)
+        path = None if result is None or result.burn is None else result.burn.path
+        bent = path is not None and (
+            any(each.bend for each in path.stretches) or any(each.swept for each in path.turns)
+        )
+        return [low + 2 * quarter, *([low + 3 * quarter] if bent else []), high]
+
     def _within(self, low: Fraction, high: Fraction) -> Iterator[Root]:
         """Yield where the verdict may turn in a range through which the burn runs alike."""
-        fit = Fit([low + (high - low) * at / 4 for at in (1, 2, 3)])
+        fit = Fit(self._points(low, high))
         loads = [self.change.at(at) for at in fit.at]
         runs = [[self.result(at) for at in fit.at]]
         if rail_ends(loads[0]):
