@@ -61,15 +61,15 @@ def in_words(case: Case) -> str:
 
 
 def _positions(findings: Findings, at: str, entry: dict[str, Any]) -> Iterator[tuple[str, tuple[str, ...]]]:
-    known = _states(findings)
+    named, known = findings.named("positions"), _states(findings)
     seen: set[str] = set()
     for row, each in enumerate(entry.get("positions", ())):
         here, part = f"{at}/positions/{row}", each["part"]
-        if part not in known:
+        if part not in named:
             findings.fault(f"{here}/part", "unknown-id", f"{part} is no moving part; correct or enter it")
         elif part in seen:
             findings.fault(f"{here}/part", "duplicate", f"{part} stands here twice; name its states once")
-        else:
+        elif part in known:
             findings.known(each["states"], frozenset(known[part]), f"{here}/states", f"state of {part}")
         seen.add(part)
         yield part, tuple(each["states"])
