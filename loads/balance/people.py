@@ -22,6 +22,7 @@ LONGEST_NAME = 120
 LONGEST_ID = 64
 MOST_CREW = 60
 MOST_PASSENGERS = 900
+SERVED = {"crew": "crew", "passenger": "passengers"}  # in the plural, as a sentence has them
 
 Role = Literal["crew", "passenger"]
 
@@ -125,7 +126,11 @@ def _seat(line: Fields, role: Role, seating: Seating) -> Seat | None:
         line.note("seat", *_not_to_be_used(seat, seating))
         return None
     if seat.serves not in (role, "either"):
-        line.note("seat", "seat-serves-others", f"{seat.name} is for {seat.serves} only; choose another seat")
+        line.note(
+            "seat",
+            "seat-serves-others",
+            f"{seat.name} is for {SERVED[seat.serves]} only; choose another seat",
+        )
         return None
     taken = seating.seats.setdefault(wanted, line.pointer)
     if taken != line.pointer:

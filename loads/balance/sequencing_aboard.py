@@ -14,7 +14,7 @@ from loads.balance.aboard import PILOT_IN_COMMAND, Item, Person
 from loads.balance.coming import COMING, Comer, Comers
 from loads.balance.events import Leaving, Moving
 from loads.balance.fields import Fields
-from loads.balance.people import Seating
+from loads.balance.people import SERVED, Seating
 from loads.balance.rounding import WEIGHT_PLACES, printed
 
 LEAVE_OPTIONAL = ("seat", "place", "what", "weight")
@@ -261,7 +261,7 @@ class Cabin:
             )
             return None
         if isinstance(to, Seat) and to.serves not in (who.role, "either"):
-            detail = f"{to.name} is for {to.serves} only; choose another seat or place"
+            detail = f"{to.name} is for {SERVED[to.serves]} only; choose another seat or place"
             line.note("to", "seat-serves-others", detail)
             return None
         return to
