@@ -27,6 +27,8 @@ def first_that_holds(varying: Varying, least: int, most: int) -> tuple[int, Resu
         return None
     turns = varying.turns(Fraction(least), Fraction(most))
     for first, last in _ranges(turns, least, most):
+        if not varying.question.left():
+            return None
         count = _first_of(varying, first, last)
         if count is not None:
             result = varying.result(Fraction(count))
