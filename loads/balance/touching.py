@@ -23,12 +23,12 @@ from typing import NamedTuple
 from fleet.basis import Axis
 from fleet.envelope import Shape
 from fleet.lateral import LateralByCg
+from loads.balance.far import far_from_nothing
 from loads.balance.polynomial import ONE, ZERO, Poly, Root, add, multiply, roots_between, scale, value
 
 Series = tuple[Poly, ...]  # by the power of t, each a polynomial of x
 Ends = tuple[Fraction, Fraction]  # the least and the greatest x
 NEAR = 1e-6  # of a figure: how far beyond an end a touch still counts
-SURE = 1e-9
 
 
 class Varied(NamedTuple):
@@ -107,7 +107,7 @@ def _clear(
         for at, each in enumerate(over):
             row[at] += factor * each
         rows.append(row)
-    return _far_from_nothing(rows, ends, reach)
+    return far_from_nothing(rows, ends, reach)
 
 
 def _sides(shape: Shape) -> Iterator[tuple[tuple[Fraction, Fraction, Fraction], tuple[Fraction, Fraction]]]:
@@ -260,53 +260,3 @@ def _within(at: Fraction, low: Fraction, high: Fraction) -> bool:
     """Return whether a figure lies between two others, or so near that floats would not be sure."""
     beyond = NEAR * (abs(float(low)) + abs(float(high)) + 1)
     return float(low) - beyond <= float(at) <= float(high) + beyond
-
-
-def _far_from_nothing(margin: list[list[float]], ends: Ends, reach: tuple[Fraction, Fraction]) -> bool:
-    """Return whether floats can tell that a margin is nothing nowhere in a rectangle of x and t: all parts of
-    the sum that it is there (Bernstein's, both ways) are of one sign and none of them is small.
-    """
-    rows = [_shares(part, float(ends[0]), float(ends[1])) for part in margin]
-    longest = max(len(row) for row in rows)
-    rows = [_raised(row, longest) for row in rows]
-    low, high = float(reach[0]), float(reach[1])
-    size = max(max(map(abs, row)) * max(abs(low), abs(high), 1.0) ** at for at, row in enumerate(rows))
-    parts = [each for column in zip(*rows, strict=True) for each in _shares(list(column), low, high)]
-    sure = SURE * size
-    return all(each > sure for each in parts) or all(each < -sure for each in parts)
-
-
-def _shares(part: list[float], low: float, high: float) -> list[float]:
-    """Return Bernstein's coefficients of a polynomial of a degree up to three between two ends."""
-    degree = len(part) - 1
-    moved = list(part)
-    for begin in range(degree):
-        for at in range(degree - 1, begin - 1, -1):
-            moved[at] += low * moved[at + 1]
-    width = high - low
-    share = [each * width**at for at, each in enumerate(moved)]
-    return _summed(share)
-
-
-def _summed(share: list[float]) -> list[float]:
-    match len(share):
-        case 1:
-            return share
-        case 2:
-            return [share[0], share[0] + share[1]]
-        case 3:
-            return [share[0], share[0] + share[1] / 2, share[0] + share[1] + share[2]]
-    a, b, c, d = share
-    return [a, a + b / 3, a + 2 * b / 3 + c / 3, a + b + c + d]
-
-
-def _raised(row: list[float], length: int) -> list[float]:
-    """Return the same polynomial with as many coefficients as another has."""
-    while len(row) < length:
-        degree = len(row)
-        row = [
-            row[0],
-            *(row[at - 1] * at / degree + row[at] * (1 - at / degree) for at in range(1, degree)),
-            row[-1],
-        ]
-    return row
