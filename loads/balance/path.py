@@ -23,7 +23,7 @@ from typing import Literal, NamedTuple
 from fleet.basis import Phase
 from fleet.tanks import TankPiece
 from loads.balance.aboard import FuelPlan, TankFuel
-from loads.balance.exact import added, minus, times
+from loads.balance.exact import added, minus, plus, times
 from loads.balance.fuel import Contents, Draw, FuelState
 from loads.balance.result import State
 
@@ -200,16 +200,20 @@ class FlownTanks:
     def knot(self, contents: Contents) -> Knot | None:
         """Return the aircraft with these usable volumes, or None where a table tells no moment for one."""
         fuel, state = self.loaded
-        weight, moment, across = state.weight - fuel.weight, state.moment - fuel.moment, NOTHING
+        volumes, along, across = [], [], []
         for tank, held in self.held.items():
-            volume = contents[tank] + held.trapped
+            volume = plus(contents[tank], held.trapped)
             curve = held.tank.table.curve
             if volume and volume < curve.first:
                 return None
-            weight += volume * self.density
-            moment += curve.moment(volume, self.density)
-            across += held.tank.lateral_moment(volume, self.density)
-        return Knot(weight, moment, state.lateral_moment - fuel.lateral_moment + across)
+            volumes.append(volume)
+            along.append(curve.moment(volume, self.density))
+            across.append(held.tank.lateral_moment(volume, self.density))
+        return Knot(
+            plus(minus(state.weight, fuel.weight), times(added(volumes), self.density)),
+            plus(minus(state.moment, fuel.moment), added(along)),
+            plus(minus(state.lateral_moment, fuel.lateral_moment), added(across)),
+        )
 
     def gap(self, leg: Leg, contents: Contents) -> Gap:
         """Return the gap these usable volumes lie in."""
