@@ -160,8 +160,8 @@ def _weights(
 def _states_of(
     declared: Declared, dry: Sums | None, flown: Flown | None, ready: Prepared
 ) -> tuple[dict[Phase, State], tuple[Check, ...]]:
-    if flown is None:
-        return {}, ()
+    if flown is None or (declared.sequence and flown.dry is None):
+        return {}, ()  # also where somebody of unknown weight comes aboard: the landing is not known then
     dry_at = dry_at_phases(declared, flown.dry) if flown.dry is not None else None
     states, nothing_left = _states(dry, flown.fuel, ready, dry_at)
     if (declared.sequence and ready.deciding) or ready.outside:
