@@ -5,10 +5,12 @@ from fractions import Fraction
 
 import pytest
 
-from fleet.applicable import applicable, tightest
+from fleet.applicable import applicable, holds_for, tightest
 from fleet.basis import Limits
+from fleet.curtailment import Amounts, Curtailment, Inset
+from fleet.lateral import LateralByCg
 from fleet.sourced import Limit, Source
-from tests.pure.loads.making import envelope, twin
+from tests.pure.loads.making import envelope, limits, twin
 
 F = Fraction
 PAGE = Source("FM", "A", "1")
@@ -64,3 +66,62 @@ def test_none_with_a_page_stands_where_nothing_was_entered():
     limits = Limits(None, None, None, None, None)
     assert tightest(limits, (("ramp", Limit(None, PAGE)),)).ramp == Limit(None, PAGE)
     assert tightest(limits, ()) is limits
+
+
+def held(kind, **more):
+    if kind == "envelope":
+        return replace(envelope(*BOX), **more)
+    if kind == "lateral":
+        corners = ((F(1), F(1)), (F(1), F(2)), (F(2), F(2)))
+        return LateralByCg("l", ("landing",), "arm", corners, PAGE, **more)
+    return Curtailment("c", "fuel", ("landing",), (Amounts(None, None, Inset(F(1))),), PAGE, **more)
+
+
+@pytest.mark.parametrize(
+    ("kind", "field"),
+    [("envelope", "envelopes"), ("lateral", "lateral_by_cg"), ("curtailment", "curtailments")],
+)
+def test_each_kind_of_limit_is_left_where_it_holds(kind, field):
+    freight = held(kind, configurations=("freight",))
+    utility = held(kind, categories=("utility",))
+    every = held(kind)
+    basis = replace(twin(), **{field: (freight, utility, every)})
+    assert getattr(applicable(basis, "freight", "utility"), field) == (freight, utility, every)
+    assert getattr(applicable(basis, "freight", None), field) == (freight, every)
+    assert getattr(applicable(basis, "six-seat", "utility"), field) == (utility, every)
+    assert getattr(applicable(basis, "six-seat", "normal"), field) == (every,)
+    assert applicable(replace(twin(), **{field: (every,)}), "freight", None).seats == twin().seats
+
+
+def test_a_limit_for_a_configuration_and_a_category_needs_both():
+    both = held("envelope", configurations=("freight",), categories=("utility",))
+    cases = (("freight", "utility", True), ("freight", "normal", False), ("six-seat", "utility", False))
+    for configuration, category, holds in (*cases, ("freight", None, False)):
+        assert holds_for(both, configuration, category) is holds
+    assert holds_for(held("envelope"), "any", None) is True
+
+
+def test_lateral_limits_that_are_left_still_count_as_entered():
+    freight = held("lateral", configurations=("freight",))
+    basis = replace(twin(), lateral_by_cg=(freight,), lateral_limits_entered=True)
+    assert applicable(basis, "freight", None).lateral_limits_entered is True
+    assert applicable(basis, "six-seat", None).lateral_limits_entered is False
+    none = replace(twin(), envelopes=(held("envelope", configurations=("freight",)),))
+    assert applicable(none, "six-seat", None).lateral_limits_entered is twin().lateral_limits_entered is True
+
+
+def test_the_tightest_limits_field_by_field():
+    base = limits(take_off=6000, landing=None, minimum_flying=4000)
+
+    def own(**values):
+        return tuple(
+            (field, Limit(None if value is None else F(value), PAGE)) for field, value in values.items()
+        )
+
+    assert tightest(base, ()) is base
+    found = tightest(base, own(take_off=5000, landing=5500, zero_fuel=5200, minimum_flying=4100))
+    assert (found.take_off.value, found.landing.value, found.zero_fuel.value) == (5000, 5500, 5200)
+    assert found.minimum_flying.value == 4100
+    loose = tightest(base, own(take_off=6001, minimum_flying=3999, landing=None, ramp=None))
+    assert (loose.take_off.value, loose.minimum_flying.value) == (6000, 4000)
+    assert (loose.landing, loose.ramp) == (base.landing, Limit(None, PAGE))

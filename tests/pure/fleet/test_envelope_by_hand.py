@@ -79,6 +79,7 @@ def test_a_crossing_of_fractions_is_seen_as_one_of_whole_numbers_is():
         (((110, 2000), (110, 4000), (120, 4000), (120, 2000)), False),  # an edge alone in common
         (((110, 4000), (120, 5000), (120, 4000)), False),  # a corner alone
         (((200, 2000), (200, 4000), (210, 4000)), False),
+        (((109, 3999), (109, 5000), (120, 5000), (120, F(7999, 2))), True),  # half a pound inch and less
     ],
 )
 def test_two_polygons_overlap_where_they_have_an_area_in_common(other, common):
@@ -147,6 +148,25 @@ def test_the_weights_along_an_arm_through_two_parts_and_in_the_moment_plane():
     assert shape(moments(SQUARE), "moment").weights_at(F(110)) == ((F(2000), F(4000)),)
     sloping = ((100, 2000), (104, 4000), (110, 4000), (110, 2000))
     assert shape(sloping).weights_at(F(101)) == ((F(2000), F(2500)),)
+
+
+@pytest.mark.parametrize("turned", range(3))
+def test_the_edge_that_closes_an_outline_counts_as_the_others_do(turned):
+    """The front edge rises 400 lb an inch from 100 in, the rear one falls 400 from 105 in."""
+    tent = ((105, 4000), (110, 2000), (100, 2000))
+    one = shape(tent[turned:] + tent[:turned])
+    assert one.weights_at(F(102)) == ((F(2000), F(2800)),)
+    assert one.weights_at(F(108)) == ((F(2000), F(2800)),)
+    assert one.arms_at(F(3000)) == ((F("102.5"), F("107.5")),)
+
+
+def test_a_crossing_too_fine_for_doubles_is_told_as_one():
+    far = 2**55
+    left = [(far + 8, 1000), (far, 5000)]
+    right = [(far + 800, 5000), (far + 5, 2000), (far + 800, 1000)]
+    with pytest.raises(NotAnEnvelope) as refused:
+        shape(left + right)
+    assert str(refused.value) == REFUSALS[-1][2]
 
 
 def test_a_corner_alone_on_an_arm_is_a_weight():

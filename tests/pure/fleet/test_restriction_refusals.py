@@ -125,6 +125,11 @@ SEATS = {"effect": "seats", "ids": ["ROW1-L"]}
             [("/effects/0/weight", "missing", "the effect limit needs its weight; give it")],
         ),
         (
+            {"effect": "maximum", "weight": lb("1")},
+            {},
+            [("/effects/0/of", "missing", "the effect maximum needs its of; give it")],
+        ),
+        (
             SEATS | {"weight": lb("1")},
             {},
             [("/effects/0/weight", "unknown-field", "the effect seats has no weight; remove it")],
