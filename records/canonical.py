@@ -2,6 +2,7 @@
 
 import hashlib
 import json
+import re
 from collections.abc import Mapping
 from decimal import Decimal
 from typing import TypeAlias
@@ -12,6 +13,7 @@ _Plain: TypeAlias = "dict[str, _Plain] | list[_Plain] | str | bool | int | None"
 
 # RFC 8785 numbers are IEEE 754 doubles: a whole number beyond this would be rounded there, so it is refused.
 _LARGEST_WHOLE = 2**53 - 1
+_BEYOND = re.compile("[\ud800-\U0010ffff]")
 
 
 class NotCanonical(TypeError):
@@ -49,7 +51,7 @@ def canonical_of_exact(document: object) -> bytes:
         document, sort_keys=True, separators=(",", ":"), ensure_ascii=False, default=_text_of_decimal
     )
     # Below the surrogates Python's order of keys is the order of UTF-16 units.
-    if text.isascii() or max(text) < "\ud800":
+    if text.isascii() or _BEYOND.search(text) is None:
         return text.encode()
     return canonical(document)
 
