@@ -4,15 +4,19 @@ from fractions import Fraction
 
 from fleet.basis import Envelope
 from fleet.basis_reading.applicability import combinations, everything, in_words
-from fleet.basis_reading.envelopes import lateral_limits_entered, phases_of
+from fleet.basis_reading.envelopes import lateral_limits_entered, phases_of, read_envelopes
 from fleet.basis_reading.findings import Findings, exact, number
+from fleet.basis_reading.floors import read_floor
+from fleet.basis_reading.fuel import read_tanks
 from fleet.basis_reading.limits import contradictions, given_limits, read_limits
 from fleet.basis_reading.presentation import across_of, divided_by, index_of, read_presentation
 from fleet.basis_reading.reading import basis_from_text
 from fleet.basis_reading.trim import read_trim
+from fleet.basis_reading.variants import read_variants
 from fleet.presentation import IndexUnits
 from fleet.quantities import Unit
 from fleet.sourced import Limit, Source
+from fleet.stations import Floor, FloorLimit
 from records.canonical import canonical
 from records.refusal import Fault
 from tests.pure.fleet.documents import basis_document, changed
@@ -255,3 +259,67 @@ def test_the_text_of_a_stored_basis_is_read_once():
     text = canonical(basis_document("twin")).decode()
     assert basis_from_text(text) is basis_from_text(text)
     assert basis_from_text(text).aircraft_type == "Ostrel Kestava 62"
+
+
+FLOOR = {
+    "runs": "across",
+    "per_area": limit("0.5", "kg/m2"),
+    "per_length": {"none": True, "source": {"page": "2"}},
+    "length": amount("0.5", "in"),
+    "no_footprint": {"up_to": amount("0.25", "lb"), "kinds": ["mail", "baggage"]},
+}
+FM = Source("FM", "C", "7-1")
+
+
+def test_what_a_floor_bears_is_read_into_the_units_of_the_basis_with_the_unit_it_was_entered_in():
+    one = findings()
+    square = F("0.5") / F("0.45359237") * F("0.0254") ** 2
+    assert read_floor(one, "/at", FLOOR) == Floor(
+        runs="across",
+        per_area=FloorLimit(square, Unit.KG_PER_M2, FM),
+        per_length=FloorLimit(None, None, Source("FM", "C", "2")),
+        free_up_to=F("0.25"),
+        free_kinds=("mail", "baggage"),
+        length=F("0.5"),
+    )
+    assert read_floor(one, "/at", {"runs": "along"}) == Floor("along", None, None, None, (), None)
+    assert read_floor(one, "/at", None) is None
+    assert one.faults == []
+
+
+def test_tanks_behind_one_whose_table_is_none_are_read_too_and_small_figures_are_figures():
+    document = changed(full(), "/tanks/0/table/gives", "moment")
+    document = changed(document, "/tanks/1/capacity/value", "0.5")
+    one = Findings(document, [])
+    assert [tank.id for tank in read_tanks(one)] == ["RIGHT-AUX", "LEFT-MAIN", "RIGHT-MAIN"]
+    assert told(one) == [
+        ("/tanks/0/table/gives_unit", "unit-dimension", "in is no unit of moment; correct it")
+    ]
+
+
+def test_an_envelope_serves_a_phase_without_a_limit_and_those_behind_it_are_judged_still():
+    document = changed(full(), "/limits/ramp", ...)
+    document = changed(document, "/limits/zero_fuel/value", 3700)
+    document = changed(document, "/configurations/1/limits", ...)
+    one = Findings(document, [])
+    read_envelopes(one, read_variants(one, read_limits(one)))
+    assert [(each.pointer, each.code) for each in dict.fromkeys(one.faults)] == [
+        ("/envelopes/0/phases/3", "envelope-outside-limits")
+    ]
+    none = Findings(changed(document, "/limits/ramp", {"none": True, "source": PAGE}), [])
+    read_envelopes(none, read_variants(none, read_limits(none)))
+    assert [each.code for each in dict.fromkeys(none.faults)] == ["envelope-outside-limits"]
+
+
+def test_an_index_envelope_has_each_corner_at_the_moment_of_its_own_weight():
+    """Index 40 at a weight is 155 times the weight in moment, whatever it is divided by."""
+    document = changed(full(), "/envelopes/0/plane", "moment")
+    document = changed(document, "/envelopes/0/unit", "index")
+    document = changed(document, "/envelopes/0/points", [[3700, 40], [6240, 40], [6240, 60]])
+    one = Findings(document, [])
+    (envelope,) = read_envelopes(one, read_variants(one, read_limits(one)))
+    assert envelope.points == (
+        (F(3700 * 155), F(3700)),
+        (F(6240 * 155), F(6240)),
+        (F(6240 * 155 + 20_000), F(6240)),
+    )

@@ -149,6 +149,8 @@ def test_fuel_that_cannot_be_used_is_the_most_any_paper_says():
     more = ruled(restriction(fuel("LEFT-AUX", "2"), fuel("RIGHT-AUX", "1"), fuel("LEFT-AUX", "3")))
     assert dict(more.trapped) == {"LEFT-AUX": F(3), "RIGHT-AUX": F(1)}
     assert more.basis == twin()
+    first = ruled(restriction(fuel("LEFT-AUX", "3"), fuel("LEFT-AUX", "2"), fuel("RIGHT-AUX", "0.5")))
+    assert dict(first.trapped) == {"LEFT-AUX": F(3), "RIGHT-AUX": F("0.5")}
 
 
 def test_a_narrower_envelope_stands_beside_the_basis_s_own_and_a_permit_s_in_its_place():
@@ -158,6 +160,9 @@ def test_a_narrower_envelope_stands_beside_the_basis_s_own_and_a_permit_s_in_its
     assert beside == (own, replace(own, id=f"{own.id} DD-14", points=corners, source=MEL))
     instead = ruled(permit(envelope())).basis.envelopes
     assert instead == (replace(own, points=corners, source=FERRY),)
+    other = replace(own, id="other")
+    basis = replace(twin(), envelopes=(other, own))
+    assert apply(basis, (permit(envelope()),)).basis.envelopes == (other, *instead)
     two = ruled(permit(envelope()), permit(envelope(), number="SFP-89")).basis.envelopes
     assert [one.id for one in two] == [own.id, f"{own.id} SFP-89"]
 
