@@ -29,7 +29,7 @@ def whole_aircraft_checks(
         held = kinks_of(flown.fuel) if flown.sections is None else kinks_between(flown.sections)
         found += fuel_balance_checks(declared.fuel, held, ready)
     if states:
-        found += trim_checks(states["take-off"], ready)
+        found += trim_checks(declared, states["take-off"], ready)
     return found
 
 

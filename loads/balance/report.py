@@ -76,7 +76,7 @@ def _whole_aircraft(declared: Declared, states: Mapping[Phase, State], ready: Pr
     if declared.category is not None:
         found["certification_category"] = {"id": declared.category.id, "name": declared.category.name}
     if ready.basis.trim is not None:
-        found["trim"] = trim_document(states.get("take-off"), ready)
+        found["trim"] = trim_document(declared, states.get("take-off"), ready)
     return found
 
 

@@ -3,8 +3,10 @@
 from fractions import Fraction
 from typing import NamedTuple
 
+from fleet.positions import PartState
 from fleet.sourced import Source
 from fleet.trim import OffTrimTable, Trim, TrimTable
+from loads.balance.aboard import Declared
 from loads.balance.prepared import Prepared
 from loads.balance.result import Check, Json, Outcome, State
 from loads.balance.rounding import CHORD_PLACES, WEIGHT_PLACES, between, printed
@@ -30,18 +32,43 @@ class Setting(NamedTuple):
         return f"flaps {self.flap}: {said}" if self.flap is not None else said
 
 
-def trim_settings(take_off: State, ready: Prepared) -> tuple[Setting, ...]:
-    """Return the setting of each flap setting the basis has a table for; () without a table."""
+def trim_settings(declared: Declared, take_off: State, ready: Prepared) -> tuple[Setting, ...]:
+    """Return the setting of each flap setting the basis has a table for, or of the one the load states for
+    the take-off; () without a table.
+    """
     trim = ready.basis.trim
-    return () if trim is None else tuple(_setting(table, trim, take_off, ready) for table in trim.tables)
+    if trim is None:
+        return ()
+    flaps = [table.flap for table in trim.tables if table.flap is not None]
+    stated = _stated(declared, flaps) if flaps and declared.sequence else None
+    if stated is None:
+        return tuple(_setting(table, trim, take_off, ready) for table in trim.tables)
+    wanted = [table for table in trim.tables if table.flap in (stated.name, stated.id)]
+    if not wanted:
+        why = f"the table has settings for flaps {', '.join(flaps)} only"
+        return (Setting(stated.name, None, None, why, trim.tables[0].lines[0].source),)
+    return tuple(_setting(table, trim, take_off, ready) for table in wanted)
 
 
-def trim_checks(take_off: State, ready: Prepared) -> list[Check]:
+def _stated(declared: Declared, flaps: list[str]) -> PartState | None:
+    """Return the state in which the load puts the flaps before take-off: the last one, of a part that has
+    states by the names or ids of the tables; None where it says nothing of them.
+    """
+    found = None
+    for event in declared.sequence:
+        for part, state in event.positions if event.leg == "taxi" else ():
+            if any(one.name in flaps or one.id in flaps for one in part.states):
+                found = state
+    return found
+
+
+def trim_checks(declared: Declared, take_off: State, ready: Prepared) -> list[Check]:
     """Return the one check of the setting, [] without a table.
 
-    It is kept when any flap setting has one that is allowed; off every table it is unresolved.
+    It is kept when any flap setting that may be meant has one that is allowed; off every table it is
+    unresolved.
     """
-    trim, settings = ready.basis.trim, trim_settings(take_off, ready)
+    trim, settings = ready.basis.trim, trim_settings(declared, take_off, ready)
     if trim is None:
         return []
     known = [each for each in settings if each.exact is not None]
@@ -66,7 +93,7 @@ def trim_checks(take_off: State, ready: Prepared) -> list[Check]:
     return [Check(CODE, TITLE, outcome, "take-off", shown, high, low, trim.unit, None, text, source, fix)]
 
 
-def trim_document(take_off: State | None, ready: Prepared) -> Json | None:
+def trim_document(declared: Declared, take_off: State | None, ready: Prepared) -> Json | None:
     """Return the block of the result document; None without a table, or where the CG is not known."""
     trim = ready.basis.trim
     if trim is None or take_off is None:
@@ -75,7 +102,7 @@ def trim_document(take_off: State | None, ready: Prepared) -> Json | None:
         "unit": trim.unit,
         "settings": [
             {"flap": one.flap, "setting": one.shown, "why": one.why, "source": str(one.source)}
-            for one in trim_settings(take_off, ready)
+            for one in trim_settings(declared, take_off, ready)
         ],
     }
 

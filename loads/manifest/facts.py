@@ -150,6 +150,7 @@ class Facts:
     earlier: tuple[SignatureFacts, ...] = ()
     provisions: tuple[ProvisionFacts, ...] = ()
     legs: tuple[str, ...] = ()
+    uplift: str = ""  # since the leg before, in words
 
     @property
     def issue(self) -> int:

@@ -28,7 +28,7 @@ from loads.models import Assessment, LateChange, Load, Paper, Signature, Step
 from loads.queries.current import Current
 from loads.queries.declaration import declared_now
 from loads.queries.late_change import bound_of, changes_of, lines_of, moved_by
-from loads.queries.legs import followed_by, follows
+from loads.queries.legs import followed_by, follows, uplift_words
 from loads.queries.provided import basis_under
 from loads.queries.signable import statement_of
 from loads.statement import MEANINGS
@@ -81,6 +81,7 @@ def facts_of(paper: Paper, change: LateChange | None = None) -> Facts:
         earlier=_signatures(load, used, before=step.number) if change else (),
         provisions=tuple(_provision(one) for one in used_provisions(used.provisions)),
         legs=_legs(load, step.at),
+        uplift=uplift_words(current, step.at),
     )
 
 

@@ -43,6 +43,7 @@ def sheet(facts: Facts) -> dict[str, object]:
         "load": facts.load,
         "replaces": facts.replaces,
         "legs": facts.legs,
+        "uplift": facts.uplift[:1].upper() + facts.uplift[1:],
         "units": facts.result["units"],
         "flight": pilot_block.flight_block(facts),
         "verdict": pilot_block.verdict_block(facts, words),

@@ -1,6 +1,6 @@
 """Legs as linked loads: which load a leg follows, which follow it, and what fuel is planned in between."""
 
-from dataclasses import dataclass
+from dataclasses import dataclass, replace
 from datetime import datetime
 from uuid import UUID
 
@@ -13,7 +13,7 @@ from loads.balance.exact import added
 from loads.balance.fields import Faults, Fields
 from loads.balance.fuelling import read_fuel
 from loads.balance.rounding import WEIGHT_PLACES, printed
-from loads.models import Leg, Load
+from loads.models import Assessment, Leg, Load
 from loads.queries.current import Current, load_of
 from loads.queries.declaration import declared_now
 from records.refusal import Fault, Invalid, NotKnown
@@ -91,14 +91,18 @@ def legs_answer(current: Current) -> dict[str, object]:
     }
 
 
-def uplift_words(current: Current) -> str:
-    """This function will return, in words, the fuel planned to be taken on since the leg before; "" where one
-    of the two loads tells no fuel. It is told, and decides nothing.
+def uplift_words(current: Current, then: datetime | None = None) -> str:
+    """This function will return, in words, the fuel planned to be taken on since the leg before, as that one
+    was declared at `then`, if it is given; "" where one of the two loads tells no fuel. It is told, and
+    decides nothing.
     """
     leg = Leg.objects.filter(load=current.load).first()
     if leg is None:
         return ""
     before = load_of(current.load.operator_id, leg.follows_id)
+    if then is not None:
+        held = Assessment.objects.filter(load=before.load, assessed_at__lte=then).order_by("-number").first()
+        before = replace(before, assessment=held or before.assessment)
     now, earlier = _fuel(current), _fuel(before)
     if now is None or earlier is None:
         return ""

@@ -43,6 +43,7 @@ HELICOPTER = Machine("Q9-HEK", "kg", "l", "FRONT-R", TURBOPROP.density)
 COMMUTER = Machine("Q9-WXC", "kg", "l", "COCKPIT-L", TURBOPROP.density)
 MACHINES = (TWIN, TWIN_UNWEIGHED, TURBOPROP, HELICOPTER, COMMUTER)
 HOOK = "HOOK"  # what hangs on it can be released
+TAXIING = ""  # in place of what was burned since take-off: at engine start
 
 
 @dataclass(frozen=True, slots=True)
@@ -175,7 +176,7 @@ FLIGHTS: tuple[Trip, ...] = (
         (("NOSE-HOLD", "baggage", "checked bags", "64"), ("AFT-HOLD", "baggage", "checked bags", "118")),
         {"LEFT": "480", "RIGHT": "480"}, "22", "390", "240",
         (("take-off", "6500", "performance sheet 31"),), ("G. Ravell", "76"),
-        (("0", "position", ({"FLAPS": "10"},)), ("6", "position", ({"GEAR": "UP"},)),
+        ((TAXIING, "position", ({"FLAPS": "10"},)), ("6", "position", ({"GEAR": "UP"},)),
          ("9", "position", ({"FLAPS": "0"},)), ("385", "position", ({"GEAR": "DOWN"},))),
     ),
     Trip(
@@ -210,9 +211,10 @@ def _sequence(trip: Trip) -> dict[str, Any]:
     unit = trip.machine.weight_unit
     events = [
         {
-            "after_burning": {"value": burned, "unit": unit},
+            "after_burning": {"value": burned or "0", "unit": unit},
             kind: dict(who[0]) if kind == "position" else [*map(dict, who)],
         }
+        | ({} if burned else {"since": "engine start"})
         for burned, kind, who in trip.events
     ]
     return {"sequence": events} if events else {}

@@ -22,6 +22,7 @@ from loads.queries.legs import leg_before
 from records.act import act
 from records.refusal import Invalid
 from tests.cast import Cast, actor, cast, strangers
+from tests.loads.late import bounded, change_of, changed
 from tests.loads.making import accepted, load_document, prepared, submitted
 from tests.makers import make_aircraft, q, ready_aircraft
 
@@ -161,3 +162,19 @@ def test_the_database_itself_refuses_a_leg_that_does_not_follow(people: Cast) ->
         ):
             Leg.objects.create(load=load.load, operator_id=entry.chain, follows=before.load)
         assert cast_error(refused.value).diag.constraint_name == tie
+
+
+def test_the_paper_prints_the_planned_uplift_as_it_was_at_the_acceptance(people: Cast) -> None:
+    bounded(people)
+    first = accepted(people)
+    second = accepted(people, prepared(people, submit_load(_next(people, first), by=actor(people.preparer))))
+    words = "Planned uplift 680 lb, to 1340 lb at engine start."
+
+    alone, before = (html_of(facts_of(Paper.objects.get(load=leg.load))) for leg in (first, second))
+    changed(people, first, change_of({"change": "fuel-on", "tank": "LEFT", "quantity": q("5", "US gal")}))
+    after = html_of(facts_of(Paper.objects.get(load=second.load)))
+
+    assert words in before
+    assert "plift" not in alone
+    assert after == before
+    assert _legs(second)["uplift"].startswith("planned uplift 646.5 lb")  # 5 US gal at 6.7 lb less

@@ -10,7 +10,9 @@ from fractions import Fraction
 import pytest
 
 from fleet.basis import Chord
+from fleet.positions import MovingPart, PartState
 from fleet.trim import Trim, TrimLine, TrimTable
+from loads.balance.events import Event
 from tests.pure.loads.hand import PAGE, plain, result_with
 
 F = Fraction
@@ -74,6 +76,52 @@ def test_every_flap_setting_has_its_own():
         "flaps up: 4 units nose up; flaps 10: 5 units nose up"
     )
     assert [one["flap"] for one in result.document["trim"]["settings"]] == ["up", "10"]
+
+
+def flapped(*settings, leg="taxi", ids=("S0", "S1")):
+    """A load whose sequence puts the flaps so, one after the other, on a basis with tables for up and 10."""
+    states = [PartState("S0", "up", F(0), ("ground", "flight"), PAGE)]
+    states += [PartState(ids[1], name, F(0), ("ground", "flight"), PAGE) for name in ("10",)]
+    states.append(PartState("S2", "30", F(0), ("ground", "flight"), PAGE))
+    part = MovingPart("FLAPS", "flaps", "S0", tuple(states))
+    tables = (TrimTable("up", (line((90, 4), (110, 4)),)), TrimTable("10", (line((90, 5), (110, 5)),)))
+    table = trim(*tables, lowest=1, highest="4.5")
+    named = {state.name: state for state in states}
+    events = tuple(
+        Event(number, leg, F(0), f"/sequence/{number - 1}", positions=((part, named[name]),))
+        for number, name in enumerate(settings, 1)
+    )
+    return result_with(
+        plain(),
+        lambda basis: replace(basis, trim=table, positions=(part,)),
+        lambda declared: replace(declared, sequence=events),
+    )
+
+
+def test_the_flap_setting_the_load_states_for_take_off_is_the_one_that_counts():
+    """Flaps 10 want 5, and 4.5 is the most allowed: the setting for flaps up does not save it."""
+    result = flapped("up", "10")
+    check = result.check("trim.take-off")
+    assert (check.outcome, check.actual) == ("fail", "5")
+    assert [one["flap"] for one in result.document["trim"]["settings"]] == ["10"]
+    assert flapped("10", "up").check("trim.take-off").margin_text == "flaps up: 4 units nose up"
+
+
+def test_a_state_may_be_named_in_the_table_by_its_id():
+    assert flapped("10", ids=("S0", "10")).check("trim.take-off").actual == "5"
+
+
+def test_a_flap_setting_without_a_table_has_no_trim_setting():
+    result = flapped("30")
+    check = result.check("trim.take-off")
+    assert (check.outcome, check.actual, result.verdict) == ("unresolved", None, "unresolved")
+    assert check.margin_text == "flaps 30: the table has settings for flaps up, 10 only"
+    assert result.document["trim"]["settings"][0]["setting"] is None
+
+
+def test_what_happens_to_the_flaps_after_take_off_changes_no_trim_setting():
+    settings = flapped("10", leg="flight").document["trim"]["settings"]
+    assert [one["flap"] for one in settings] == ["up", "10"]
 
 
 def test_outside_the_table_nothing_is_extrapolated():
