@@ -116,9 +116,6 @@ def _not_listed(at: str, found: object, wanted: list[str]) -> Fault:
 def _sentence(keyword: str, at: str, wanted: Any) -> tuple[str, str]:
     if keyword == "const":
         return _not_constant(at, wanted)
-    if keyword in {"anyOf", "oneOf"}:
-        names = " or ".join(name for choice in wanted for name in choice.get("required", ()))
-        return "one-of", f"is reckoned from {names}; give one of them"
     return _SENTENCES.get(keyword, ("wrong-form", "does not have the form asked for; see the schema"))
 
 

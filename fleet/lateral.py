@@ -46,17 +46,16 @@ class Across:
     def holds(self, along: Fraction, across: Fraction) -> bool:
         """Return whether a point lies inside or on an edge; exact."""
         level = along + self._shift
-        return level > 0 and self._shape.holds(level, across * level)
+        return self._shape.holds(level, across * level)
 
     def stretches(self, along: Fraction) -> tuple[Stretch, ...]:
         """Return what is allowed across at one longitudinal arm: (left, right), rising; () if nothing."""
-        level = along + self._shift
-        return self._shape.arms_at(level) if level > 0 else ()
+        return self._shape.arms_at(along + self._shift)
 
     def section(self, along: Fraction, across: Fraction) -> Section | None:
         """Return the stretch across at the same longitudinal arm and the margin in it; None without one."""
         level = along + self._shift
-        return self._shape.arm_section(level, across * level) if level > 0 else None
+        return self._shape.arm_section(level, across * level)
 
 
 @dataclass(frozen=True, slots=True)

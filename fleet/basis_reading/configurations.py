@@ -52,7 +52,7 @@ def fixed_item(findings: Findings, entry: dict[str, Any]) -> FixedItem:
 
 def _fit(findings: Findings, at: str, entry: dict[str, Any]) -> str:
     """Return the base fit of a configuration: its own, or the first of the basis."""
-    fits: list[str] = findings.document.get("fits", []) if findings.sound("/fits") else []
+    fits: list[str] = findings.document["fits"] if findings.sound("/fits") else []
     fit: str = entry.get("fit", fits[0] if fits else "")
     if fits and fit not in fits:
         findings.fault(f"{at}/fit", "fit-unknown", f"not a fit of this basis; use one of {', '.join(fits)}")

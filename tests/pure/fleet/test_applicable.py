@@ -5,7 +5,7 @@ from fractions import Fraction
 
 import pytest
 
-from fleet.applicable import applicable, holds_for, tightest
+from fleet.applicable import MOST_KEPT, applicable, holds_for, tightest
 from fleet.basis import Limits
 from fleet.curtailment import Amounts, Curtailment, Inset
 from fleet.lateral import LateralByCg
@@ -125,3 +125,15 @@ def test_the_tightest_limits_field_by_field():
     loose = tightest(base, own(take_off=6001, minimum_flying=3999, landing=None, ramp=None))
     assert (loose.take_off.value, loose.minimum_flying.value) == (6000, 4000)
     assert (loose.landing, loose.ramp) == (base.landing, Limit(None, PAGE))
+
+
+def test_the_latest_answers_are_kept_and_no_more():
+    basis = replace(twin(), envelopes=(named("n", categories=("normal",)),))
+    first = applicable(basis, "0", None)
+    for number in range(1, MOST_KEPT):
+        applicable(basis, str(number), None)
+    assert applicable(basis, "0", None) is first
+    applicable(basis, str(MOST_KEPT), None)
+    assert applicable(basis, "1", None) is applicable(basis, "1", None)
+    assert applicable(basis, "0", None) is not first
+    assert applicable(replace(basis), "0", None) is not applicable(basis, "0", None)

@@ -11,6 +11,7 @@ from fleet.quantities import Unit
 from fleet.restriction_reading import read_paper
 from fleet.restrictions import (
     LIMIT_WORDS,
+    MOST_KEPT,
     Effect,
     Ruled,
     apply,
@@ -56,6 +57,17 @@ def test_without_papers_a_basis_is_itself_and_the_same_papers_give_the_same_obje
     paper = restriction(SEATS)
     assert apply(basis, (paper,)) is apply(basis, (paper,))
     assert apply(twin(), (paper,)) is not apply(basis, (paper,))
+
+
+def test_the_latest_bases_under_papers_are_kept_and_no_more():
+    basis, paper = twin(), restriction(SEATS)
+    kept = apply(basis, (paper,))
+    others = [replace(paper, number=str(number)) for number in range(MOST_KEPT)]
+    for other in others[1:]:
+        apply(basis, (other,))
+    assert apply(basis, (paper,)) is kept
+    apply(basis, (others[0],))
+    assert apply(basis, (paper,)) is not kept
 
 
 def test_a_restriction_lowers_a_limit_of_the_basis_and_of_every_configuration():

@@ -7,6 +7,7 @@ from uuid import UUID
 import pytest
 
 from fleet.conversion import UnitsDoNotMix, converted, length_under, volume_of_weight, weight_of_volume
+from fleet.fuel_balance import FuelBalance
 from fleet.jump import Jump
 from fleet.lateral import Across
 from fleet.positions import MovingPart, PartState, Setting, count_of_settings, settings
@@ -242,6 +243,23 @@ def test_a_lateral_polygon_is_decided_in_arms_below_zero_too():
     assert limit.section(F(-12), F(0)) is None
     assert limit.section(F(-10), F(5)).margin == -1
     assert limit.section(F(10), F("-1.5")).low == -2
+
+
+def test_a_lateral_polygon_between_fractions_of_a_unit():
+    limit = Across([(F(1, 3), F(-1)), (F(1, 3), F(1)), (F(5, 2), F(0))])
+    assert limit.levels == (F(1, 3), F(5, 2))
+    assert limit.stretches(F(17, 12)) == ((F("-0.5"), F("0.5")),)  # half way
+
+
+def test_the_most_the_sides_may_differ_is_one_figure_or_straight_between_two_points():
+    def balance(maximum, *points):
+        exact = tuple((F(aboard), F(most)) for aboard, most in points)
+        return FuelBalance("B", "b", ("L",), ("R",), "weight", maximum, exact, ("ramp",), PAGE)
+
+    assert balance(F(10)).allowed(F(5000)) == 10
+    table = balance(None, (100, 200), (600, 90), (1000, 0))
+    assert [table.allowed(F(aboard)) for aboard in (100, 350, 600, 800, 1000)] == [200, 145, 90, 45, 0]
+    assert table.allowed(F(99)) is table.allowed(F(1001)) is None
 
 
 def state(name, change, *holds):

@@ -4,6 +4,8 @@ from fractions import Fraction
 
 import pytest
 
+from fleet.basis import Tank, TankTable
+from fleet.sourced import Source
 from fleet.tanks import NotATable, OutsideTable, TankCurve, TankPiece
 
 F = Fraction
@@ -173,6 +175,15 @@ def test_points_that_make_no_table_are_refused_with_what_to_do(given, code, row,
     with pytest.raises(NotATable) as refused:
         curve(**given)
     assert (refused.value.code, refused.value.row, str(refused.value)) == (code, row, detail)
+
+
+def test_a_tank_has_the_moments_of_its_fuel_along_and_across():
+    """10 at 6 a unit of volume are 60, at 100 along and -92 across."""
+    table = TankTable("volume", "arm", "arm", None, tuple((F(v), F(arm)) for v, arm in ARMS))
+    tank = Tank("LEFT", "left", F(40), F(-92), table, Source("FM", "A", "1"))
+    assert (tank.moment(F(10), F(6)), tank.lateral_moment(F(10), F(6))) == (6000, -5520)
+    weighed = TankTable("weight", "moment", "moment", F(2), ((F(0), F(0)), (F(20), F(3000))))
+    assert (weighed.curve.last, weighed.curve.volume_moment(F(10))) == (10, 1500)
 
 
 def test_a_density_just_above_zero_is_one():
