@@ -44,6 +44,7 @@ def _stated() -> dict[str, Any]:
         trim=_no("6-4"),
         lateral_limits=_no("2-5"),
         limits=_limits(),
+        other_datums=[{"name": "firewall", "offset": q("24", "in"), "source": _source("6-2")}],
     )
     full["limits"]["minimum_flying"] = _most("4000", "lb")
     full["chord"]["source"] = _source("6-3")
@@ -110,7 +111,10 @@ def _ruled() -> dict[str, Any]:
     }
     required = {"at": "take-off", "rule": "required", "kinds": ["climb"], "operations": ["air-taxi"]}
     enough = {"at": "landing", "rule": "structural only", "operations": ["training"]}
-    basis["envelopes"][0] |= held
+    # one for each, with something outside and without
+    basis["envelopes"][0] |= {**held, "external_load": "none"}
+    basis["envelopes"].append({**basis["envelopes"][0], "id": "hooked", "external_load": "carried"})
+    basis["places"][0]["external"] = True
     basis["configurations"][0] |= {
         "modifications": ["KIT"],
         "performance": [{**enough, "source": source}, {**required, "source": source}],
@@ -133,6 +137,7 @@ def _ruled() -> dict[str, Any]:
                 "unit": "in",
                 "source": source,
                 **held,
+                "external_load": "carried",
             }
         ],
         "fuel_balance": [_balance("WINGS", maximum=q("200", "lb")), _balance("BY-FUEL", table=_BY_FUEL)],

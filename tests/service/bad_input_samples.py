@@ -176,7 +176,12 @@ RIGHT: Final[tuple[tuple[str, str, frozenset[str]], ...]] = (
     ),
     # A datum may stand behind the wing.
     ("/loading-bases", "negative", frozenset({"/chord/leading_edge/value"})),
-    ("/loading-bases", "negative", frozenset({"/presentation/index/constant"})),
+    # So may another datum lie, and a constant counts both ways.
+    (
+        "/loading-bases",
+        "negative",
+        frozenset({"/other_datums/#/offset/value", "/presentation/index/constant"}),
+    ),
     # An arm may lie ahead of the datum.
     ("/permits", "negative", frozenset({"/effects/#/points/#/#"})),
     # Trim goes both ways from nought.
