@@ -5,13 +5,14 @@ greatest where a tank runs dry, another stage feeds, at a phase, or at a point o
 these are looked at; nothing is sampled. Fuel that cannot be used counts: it weighs where it lies.
 """
 
-from collections.abc import Iterable, Iterator, Sequence
+from collections.abc import Iterable, Iterator, Mapping, Sequence
 from fractions import Fraction
 from itertools import pairwise
 from typing import Literal, NamedTuple
 
 from fleet.fuel_balance import FuelBalance
 from loads.balance.aboard import FuelPlan
+from loads.balance.checks_lateral import AT
 from loads.balance.fuel import Contents
 from loads.balance.margins import Figure, below
 from loads.balance.prepared import Prepared
@@ -24,6 +25,7 @@ WHERE: dict[Leg, str] = {
     "flight": "between take-off and landing",
     "reserve": "between landing and the least fuel at landing",
 }
+AT_PHASES: Mapping[str, str] = {phase: words.strip() for phase, words in AT.items()}
 PHASES_OF: dict[Leg, tuple[str, ...]] = {
     "taxi": ("ramp",),
     "flight": ("take-off",),
@@ -131,4 +133,4 @@ def _check(
 
 
 def _where(found: Difference) -> str:
-    return f"at {found.held.name}" if found.held.name else WHERE[found.held.leg]
+    return AT_PHASES[found.held.name] if found.held.name else WHERE[found.held.leg]

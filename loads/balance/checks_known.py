@@ -7,6 +7,7 @@ from fractions import Fraction
 from fleet.basis import Basis
 from fleet.weighing import EmptyFigures
 from loads.balance.aboard import Declared
+from loads.balance.checks_lateral import AT
 from loads.balance.fuel import FuelOffTable
 from loads.balance.over_flight import coming_items, coming_people
 from loads.balance.prepared import Prepared
@@ -145,7 +146,7 @@ def off_table_check(off: FuelOffTable, ready: Prepared) -> Check:
     """Return the check of a tank whose table does not cover what it holds at some phase."""
     tank = next(one for one in ready.basis.tanks if one.id == off.tank)
     first, last, volume = (printed(figure, VOLUME_PLACES) for figure in (off.first, off.last, off.volume))
-    text = f"{volume} {ready.volume} at {off.phase} is off the table, which runs from {first} to {last}"
+    text = f"{volume} {ready.volume}{AT[off.phase]} is off the table, which runs from {first} to {last}"
     fix = f"Change the fuel of {tank.name}, or enter the rest of its table in the loading basis."
     return Check(
         f"tank-table.{tank.id}",

@@ -44,6 +44,7 @@ HOLDS: dict[Leg, tuple[Phase, ...]] = {
 CODE, PATH_CODE = "lateral-by-cg", "path.lateral-by-cg"
 TITLE = "lateral CG for its longitudinal CG"
 OFF = "no lateral limit is given for a longitudinal CG of"
+OFF_FIX = "Bring the longitudinal CG to where a lateral limit is given, then assess again."
 Fix = Callable[[], str]
 Told = Callable[[WorstAcross], tuple[Json, str]]  # where a point of the path is: for the document, in words
 
@@ -93,7 +94,7 @@ def lateral_by_cg_path(path: Path, ready: Prepared, fix: Fix, told: Told) -> lis
             shown.margin,
             f"{shown.words}, {place}",
             str(worst.limit.source),
-            fix() if broken else "",
+            (OFF_FIX if worst.room is None else fix()) if broken else "",
             worst.room,
             None,
             shown.edge,
@@ -156,7 +157,7 @@ def _at(state: State, limit: LateralByCg, ready: Prepared, fix: Fix) -> Check:
         shown.margin,
         shown.words,
         str(limit.source),
-        "" if inside else fix(),
+        "" if inside else OFF_FIX if section is None else fix(),
         None if section is None else section.margin,
         None,
         shown.edge,
