@@ -109,17 +109,17 @@ def _envelope(findings: Findings, at: str, entry: dict[str, Any]) -> Envelope | 
     across, weight_unit = across_of(findings, at, entry), Unit(entry["weight_unit"])
     if across is None:
         return None
-    weights = [converted(number(weight), weight_unit, findings.weight) for weight, _ in entry["points"]]
+    points = [
+        (converted(number(weight), weight_unit, findings.weight), number(value))
+        for weight, value in entry["points"]
+    ]
     try:
         return Envelope(
             id=entry["id"],
             axis=entry["axis"],
             phases=phases_of(entry["phases"]),
             plane=entry["plane"],
-            points=tuple(
-                (across(weight, number(value)), weight)
-                for weight, (_, value) in zip(weights, entry["points"], strict=True)
-            ),
+            points=tuple((across(weight, value), weight) for weight, value in points),
             source=findings.source(entry["source"]),
             **read_held(findings, at, entry),
         )

@@ -7,7 +7,7 @@ from fleet.basis_reading.applicability import combinations, everything, in_words
 from fleet.basis_reading.envelopes import lateral_limits_entered, phases_of, read_envelopes
 from fleet.basis_reading.findings import Findings, exact, number
 from fleet.basis_reading.floors import read_floor
-from fleet.basis_reading.fuel import read_tanks
+from fleet.basis_reading.fuel import read_burn_order, read_tanks, read_taxi_order
 from fleet.basis_reading.limits import contradictions, given_limits, read_limits
 from fleet.basis_reading.presentation import across_of, divided_by, index_of, read_presentation
 from fleet.basis_reading.reading import basis_from_text
@@ -323,3 +323,23 @@ def test_an_index_envelope_has_each_corner_at_the_moment_of_its_own_weight():
         (F(6240 * 155), F(6240)),
         (F(6240 * 155 + 20_000), F(6240)),
     )
+
+
+def test_a_table_of_one_point_is_refused_at_its_points():
+    one = Findings(changed(full(), "/tanks/0/table/points", [[0, 138]]), [])
+    read_tanks(one)
+    assert told(one) == [
+        (
+            "/tanks/0/table/points",
+            "tank-table-too-short",
+            "a tank table needs at least two points; enter those of the manual",
+        )
+    ]
+
+
+def test_taxiing_feeds_by_the_burn_order_where_it_has_no_order_of_its_own():
+    one = Findings(changed(full(), "/taxi_order", ...), [])
+    burn = read_burn_order(one)
+    assert read_taxi_order(one, burn) is burn
+    own = read_taxi_order(Findings(full(), []), burn)
+    assert [stage.tanks for stage in own] == [("LEFT-MAIN", "RIGHT-MAIN")]
