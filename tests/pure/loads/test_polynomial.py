@@ -1,154 +1,89 @@
-"""Polynomials by hand, and where they are nothing: at an end, twice at one place, nowhere, irrationally."""
+"""Where polynomials with rational coefficients are nothing: made from their roots, so these are known."""
 
 from fractions import Fraction
 
-import pytest
+from hypothesis import given
+from hypothesis import strategies as st
 
-from loads.balance.polynomial import Root, add, multiply, roots_between, scale, through, value
+from loads.balance.far import far_from_nothing
+from loads.balance.polynomial import BITS, Root, add, multiply, roots_between, scale, through, value
 
 F = Fraction
-FINE = F(1, 2**80)
+LOW, HIGH = F(-3), F(7)
+NUMBERS = st.integers(-40, 80).map(lambda number: F(number, 8))
 
 
-def poly(*parts):
-    return tuple(map(F, parts))
-
-
-def of_roots(*roots):
-    found = poly(1)
-    for each in roots:
-        found = multiply(found, (-F(each), F(1)))
+def made_of(roots: list[Fraction], factor: Fraction) -> tuple[Fraction, ...]:
+    found: tuple[Fraction, ...] = (factor,)
+    for root in roots:
+        found = multiply(found, (-root, F(1)))
     return found
 
 
-def test_polynomials_are_added_scaled_multiplied_and_told_at_a_place():
-    one, other = poly(1, 2, 3), poly(-1, 4)
-
-    assert add(one, other, poly(0, 0, 0, 5)) == poly(0, 6, 3, 5)
-    assert add(one) == one
-    assert scale(one, F(-1, 2)) == poly(F(-1, 2), -1, F(-3, 2))
-    assert scale(one, 3) == poly(3, 6, 9)
-    assert multiply(one, other) == poly(-1, 2, 5, 12)
-    assert multiply(poly(0, 2), other) == poly(0, -2, 8)
-    assert value(one, F(-2)) == 9
-    assert value((), F(7)) == 0
+@given(st.lists(NUMBERS, max_size=4), NUMBERS.filter(bool))
+def test_every_root_between_the_ends_is_told_and_no_other(roots: list[Fraction], factor: Fraction) -> None:
+    told = roots_between(made_of(roots, factor), LOW, HIGH)
+    inside = {root for root in roots if LOW <= root <= HIGH}
+    for root in inside:
+        assert any(each.low <= root <= each.high for each in told)
+    for each in told:
+        assert each.high - each.low <= F(1, 1 << BITS)
+        assert any(each.low <= root <= each.high for root in roots)
 
 
-@pytest.mark.parametrize(
-    ("points", "made"),
-    [
-        ([(3, 7)], poly(7)),
-        ([(1, 2), (3, 8)], poly(-1, 3)),
-        ([(0, 1), (1, 6), (2, 17)], poly(1, 2, 3)),
-        ([(-1, 1), (0, 0), (1, 1), (2, 10)], poly(0, -1, 1, 1)),  # x**3 + x**2 - x
-    ],
-)
-def test_through_so_many_points_goes_one_polynomial(points, made):
-    assert through([(F(x), F(y)) for x, y in points]) == made
+@given(NUMBERS, NUMBERS, st.integers(1, 90).map(F))
+def test_roots_that_are_no_rationals_lie_between_what_is_told(
+    a: Fraction, b: Fraction, under: Fraction
+) -> None:
+    square = (a * a - under, 2 * a, F(1))  # (x + a)**2 = under
+    for part in (square, multiply(square, (-b, F(1)))):
+        for each in roots_between(part, F(-100), F(100)):
+            assert each.high - each.low <= F(1, 1 << BITS)
+            ends = value(square, each.low) * value(square, each.high)
+            assert ends <= 0 or each.low <= b <= each.high
+    assert len(roots_between(square, F(-100), F(100))) == 2
 
 
-def test_a_root_at_nothing_comes_out_of_points_too():
-    # The points of x * (x - 1): the constant is nothing, and all three are met.
-    made = through([(F(0), F(0)), (F(1), F(0)), (F(2), F(2))])
-
-    assert made == poly(0, -1, 1)
-
-
-@pytest.mark.parametrize(
-    ("part", "found"),
-    [
-        ((), []),
-        ((0,), []),
-        ((0, 0, 0), []),  # nothing all over
-        ((5,), []),
-        ((-3, 2), [F(3, 2)]),
-        ((-3, 2, 0, 0), [F(3, 2)]),
-        ((0, 1), [0]),  # at the one end
-        ((-10, 1), [10]),  # at the other
-        ((1, 1), []),
-        ((-101, 10), []),
-        ((6, -5, 1), [2, 3]),
-        ((-6, 5, -1), [2, 3]),
-        ((-33, 8, 1), [3]),  # 3 and -11
-        ((0, -10, 1), [0, 10]),
-        ((9, -6, 1), [3, 3]),  # it touches nothing
-        ((10, -6, 1), []),
-        ((22, -13, 1), [2]),  # 2 and 11
-        ((F(-9, 4), 0, 1), [F(3, 2)]),
-    ],
-)
-def test_straight_and_square_ones_with_rational_roots_are_told_exactly(part, found):
-    assert roots_between(poly(*part), F(0), F(10)) == [Root(F(each), F(each)) for each in found]
+def test_a_rational_root_of_a_square_or_a_line_is_told_exactly() -> None:
+    assert roots_between((F(-6), F(1), F(1)), F(-10), F(10)) == [Root(F(-3), F(-3)), Root(F(2), F(2))]
+    assert roots_between((F(-7), F(4)), F(0), F(2)) == [Root(F(7, 4), F(7, 4))]
+    assert roots_between((F(-7), F(4)), F(2), F(3)) == []
+    assert roots_between((F(5),), F(0), F(1)) == roots_between((F(0), F(0)), F(0), F(1)) == []
+    assert roots_between((F(0), F(0), F(1)), F(0), F(1))[0] == Root(F(0), F(0))  # at an end, and only touched
 
 
-def told(part, low=0, high=10):
-    """Each root within its bounds, the bounds close."""
-    found = roots_between(part, F(low), F(high))
-    assert all(0 <= root.high - root.low <= FINE for root in found)
-    assert found == sorted(found)
-    return found
+@given(st.lists(NUMBERS, min_size=1, max_size=4), st.lists(NUMBERS, min_size=1, max_size=4), NUMBERS)
+def test_sums_and_products_are_those_of_the_values(
+    one: list[Fraction], other: list[Fraction], at: Fraction
+) -> None:
+    assert value(add(one, other), at) == value(one, at) + value(other, at)
+    assert value(multiply(one, other), at) == value(one, at) * value(other, at)
+    assert value(scale(one, F(3, 7)), at) == value(one, at) * F(3, 7)
 
 
-def test_an_irrational_root_of_a_square_lies_between_two_close_rationals():
-    # x**2 - 3: sqrt 3; and 2 - 4 x + x**2: 2 - sqrt 2 and 2 + sqrt 2.
-    (root,) = told(poly(-3, 0, 1))
-    assert root.low**2 < 3 < root.high**2
-    one, other = told(poly(2, -4, 1))
-    assert (2 - one.high) ** 2 < 2 < (2 - one.low) ** 2
-    assert (other.low - 2) ** 2 < 2 < (other.high - 2) ** 2
+@given(st.lists(NUMBERS, min_size=3, max_size=3), NUMBERS)
+def test_the_polynomial_through_points_passes_them(part: list[Fraction], at: Fraction) -> None:
+    points = [(x, value(part, x)) for x in (F(-1), F(0), F(5, 3))]
+    assert value(through(points), at) == value(part, at)
 
 
-@pytest.mark.parametrize(
-    "roots",
-    [(1, 2, 3), (1, 1, 4), (0, 5, 10), (F(1, 3), F(10, 3), 7), (2, 2, 2), (1, 2, 3, 4), (3, 3, 6, 6)],
-)
-@pytest.mark.parametrize("sign", [1, -1])
-def test_every_root_of_a_higher_degree_is_found(roots, sign):
-    found = told(scale(of_roots(*roots), sign))
-
-    for each in roots:
-        assert any(root.low <= each <= root.high for root in found)
-    for root in found:  # and nothing that is none
-        assert any(abs(root.low - each) < F(1, 2**30) for each in roots)
-
-
-def test_roots_beyond_the_ends_are_left_out():
-    part = of_roots(-2, 4, 13)
-
-    (found,) = told(part)
-
-    assert found.low <= 4 <= found.high
-    assert told(part, 5, 12) == []
-    assert [root.low <= 13 <= root.high for root in told(part, 5, 13)] == [True]
+@given(st.lists(st.lists(NUMBERS, min_size=1, max_size=3), min_size=1, max_size=3), NUMBERS, NUMBERS)
+def test_what_is_told_to_be_far_from_nothing_is_so_all_over_the_rectangle(
+    rows: list[list[Fraction]], x: Fraction, t: Fraction
+) -> None:
+    floats = [[float(each) for each in row] for row in rows]
+    ends, reach = (F(-5), F(10)), (F(-5), F(10))
+    if far_from_nothing(floats, ends, reach):
+        signs = set()
+        for a, b in ((x, t), (t, x), (ends[0], reach[1]), (ends[1], reach[0])):
+            at = sum((value(row, a) * b**power for power, row in enumerate(rows)), F(0))
+            assert at
+            signs.add(at > 0)
+        assert len(signs) == 1
 
 
-def test_the_root_of_a_cube_that_is_irrational():
-    (root,) = told(poly(-2, 0, 0, 1))
-
-    assert root.low**3 < 2 < root.high**3
-
-
-def test_a_touch_at_an_irrational_place_counts_and_one_that_is_missed_by_far_does_not():
-    touch = multiply(poly(-2, 0, 1), poly(-2, 0, 1))  # (x**2 - 2)**2
-
-    assert any(root.low**2 <= 2 <= root.high**2 for root in told(touch))
-    assert told(add(touch, poly(F(1, 1000)))) == []
-    assert told(add(multiply(touch, poly(1, 1)), poly(1))) == []
-
-
-def test_a_touch_missed_by_a_hair_may_count_and_a_crossing_by_a_hair_must():
-    touch = of_roots(3, 3, 20)
-    crossed = told(add(touch, poly(F(1, 10**6))))
-
-    assert len([root for root in crossed if abs(root.low - 3) < F(1, 100)]) == 2
-
-
-def test_where_floats_are_not_sure_the_root_is_found_all_the_same():
-    # 10**-12 of what the parts are: (x - 5)**2 * (x + 1) less next to nothing.
-    hair = F(1, 10**14)
-    part = add(multiply(of_roots(5, 5), poly(1, 1)), poly(-hair))
-
-    found = told(part)
-
-    assert len(found) == 2
-    assert all(abs(root.low - 5) < F(1, 10**6) for root in found)
+def test_a_margin_that_stays_above_nothing_is_told_to_be_far_from_it() -> None:
+    assert far_from_nothing([[9.0, 1.0], [1.0], [0.5]], (F(0), F(4)), (F(0), F(3)))
+    assert far_from_nothing([[-9.0, -1.0, -2.0]], (F(0), F(4)), (F(0), F(3)))
+    assert not far_from_nothing([[-9.0, 3.0]], (F(0), F(4)), (F(0), F(3)))
+    assert not far_from_nothing([[0.0], [1.0]], (F(0), F(4)), (F(0), F(3)))
