@@ -2,7 +2,7 @@
 
 from fractions import Fraction
 
-from fleet.basis import Envelope
+from fleet.basis import Envelope, FixedItem
 from fleet.basis_reading.applicability import combinations, everything, in_words
 from fleet.basis_reading.envelopes import lateral_limits_entered, phases_of, read_envelopes
 from fleet.basis_reading.findings import Findings, exact, number
@@ -11,6 +11,7 @@ from fleet.basis_reading.fuel import read_burn_order, read_tanks, read_taxi_orde
 from fleet.basis_reading.limits import contradictions, given_limits, read_limits
 from fleet.basis_reading.presentation import across_of, divided_by, index_of, read_presentation
 from fleet.basis_reading.reading import basis_from_text
+from fleet.basis_reading.samples import read_sample_loads
 from fleet.basis_reading.trim import read_trim
 from fleet.basis_reading.variants import read_variants
 from fleet.presentation import IndexUnits
@@ -343,3 +344,20 @@ def test_taxiing_feeds_by_the_burn_order_where_it_has_no_order_of_its_own():
     assert read_taxi_order(one, burn) is burn
     own = read_taxi_order(Findings(full(), []), burn)
     assert [stage.tanks for stage in own] == [("LEFT-MAIN", "RIGHT-MAIN")]
+
+
+def test_a_sample_load_keeps_the_moments_the_manual_prints_and_the_arms_they_make():
+    """5,000 lb in at 50 lb are 100 in; 100 lb at 60 in are given as an arm."""
+    document = changed(full(), "/sample_loads/0/tolerance_moment/value", "0.5")
+    lines = [
+        {"what": "seats", "weight": amount(100, "lb"), "arm": amount(5, "ft")},
+        {"what": "holds", "weight": amount(50, "lb"), "moment": amount(5000, "lb in")},
+    ]
+    one = Findings(changed(document, "/sample_loads/0/weights", lines), [])
+    sample = read_sample_loads(one)[0]
+    assert sample.weights == (
+        FixedItem("seats", F(100), F(60), F(0)),
+        FixedItem("holds", F(50), F(100), F(0)),
+    )
+    assert (sample.moments, sample.tolerance_moment) == ((None, F(5000)), F("0.5"))
+    assert one.faults == []
