@@ -6,22 +6,36 @@ sum at this weight, and whether the certified envelope still holds.
 
 from fractions import Fraction
 
+from fleet.basis import Envelope
 from fleet.curtailment import CurtailedShape, Curtailment, Inset
 from fleet.envelope import Section
+from fleet.positions import CARRIED, EXTERNAL_LOAD, NOT_CARRIED
 from loads.balance.prepared import Bound, Prepared
 from loads.balance.result import Check, Json
 from loads.balance.rounding import between, printed, room
 
+OUTSIDE: dict[tuple[str, ...], str] = {
+    (CARRIED,): ", in the envelope with an external load",
+    (NOT_CARRIED,): ", in the envelope without an external load",
+}
 EDGES: dict[str, int] = {"forward": 0, "left": 0, "aft": 1, "right": 1}
+
+
+def outside_of(envelope: Envelope) -> tuple[str, ...]:
+    """Return with which external load an envelope holds; () for either."""
+    return dict(envelope.positions).get(EXTERNAL_LOAD, ())
 
 
 def told(check: Check, weight: Fraction, moment: Fraction, bound: Bound, ready: Prepared) -> Check:
     """Return a check against an operational envelope with its margins named and the certified verdict told.
 
-    A check of a certified envelope comes back as it is.
+    A check of a certified envelope comes back as it is; of one that holds only with an external load, or only
+    without one, that is told.
     """
     envelope, shape = bound
     length, places = ready.length, ready.length_places
+    if envelope.positions:
+        check = check._replace(margin_text=check.margin_text + OUTSIDE.get(outside_of(envelope), ""))
     if not isinstance(shape, CurtailedShape):
         return check
     binding = _binding(shape, weight, check.edge)

@@ -48,6 +48,9 @@ def test_each_envelope_judges_only_the_loads_it_is_for() -> None:
     slung_load, plain_load = flown(slung(), basis), flown(round_load(), basis)
 
     assert slung_load.check("cg.take-off").low == "96"
+    for code in ("cg.take-off", "path.longitudinal"):
+        assert slung_load.check(code).margin_text.endswith(", in the envelope with an external load")
+        assert plain_load.check(code).margin_text.endswith(", in the envelope without an external load")
     assert (slung_load.check("cg.take-off").outcome, path_of(slung_load)) == ("pass", "pass")
     assert plain_load.check("cg.take-off").low == "99"
     assert (plain_load.check("cg.take-off").outcome, path_of(plain_load)) == ("pass", "pass")
