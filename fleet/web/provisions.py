@@ -30,7 +30,9 @@ from fleet.provisions import PERMIT, RESTRICTION, RULES, STANDARD_WEIGHTS
 from fleet.queries.aircraft import aircraft_of
 from fleet.queries.provisions import provision_history, provision_of, provisions_at
 from fleet.web.asking import zone_of
+from fleet.web.document_inputs import Form, paper_form, rules_form
 from fleet.web.shown_provisions import version_shown
+from fleet.web.typed_document import Typed, paper_in, rules_in
 from records.actor import Actor
 from records.kind import Kind
 from records.refusal import Refused
@@ -106,14 +108,18 @@ PERMITS = Desk(
 @signed_in
 def standard_weights(request: HttpRequest) -> HttpResponse:
     """This function will show the operator's tables, and enter the one sent."""
-    return _desk(request, WEIGHTS, None, lambda actor: enter_standard_weights(actor, _document(request)))
+    return _desk(
+        request, WEIGHTS, None, lambda actor: enter_standard_weights(actor, _document(request, WEIGHTS))
+    )
 
 
 @require_http_methods(["GET", "HEAD", "POST"])
 @signed_in
 def rules(request: HttpRequest) -> HttpResponse:
     """This function will show the operator's rule values, and enter the set sent."""
-    return _desk(request, RULE_VALUES, None, lambda actor: enter_rules(actor, _document(request)))
+    return _desk(
+        request, RULE_VALUES, None, lambda actor: enter_rules(actor, _document(request, RULE_VALUES))
+    )
 
 
 @require_http_methods(["GET", "HEAD", "POST"])
@@ -122,7 +128,10 @@ def restrictions(request: HttpRequest, registration: str) -> HttpResponse:
     """This function will show an aircraft's restrictions, and enter the one sent."""
     aircraft = aircraft_of(operator_of(request), registration)
     return _desk(
-        request, RESTRICTIONS, aircraft, lambda actor: enter_restriction(actor, aircraft, _document(request))
+        request,
+        RESTRICTIONS,
+        aircraft,
+        lambda actor: enter_restriction(actor, aircraft, _document(request, RESTRICTIONS)),
     )
 
 
@@ -131,7 +140,9 @@ def restrictions(request: HttpRequest, registration: str) -> HttpResponse:
 def permits(request: HttpRequest, registration: str) -> HttpResponse:
     """This function will show an aircraft's permits, and enter the one sent."""
     aircraft = aircraft_of(operator_of(request), registration)
-    return _desk(request, PERMITS, aircraft, lambda actor: enter_permit(actor, aircraft, _document(request)))
+    return _desk(
+        request, PERMITS, aircraft, lambda actor: enter_permit(actor, aircraft, _document(request, PERMITS))
+    )
 
 
 @require_POST
@@ -188,8 +199,35 @@ def _of_aircraft(
     return aircraft, provision_of(operator_of(request), kind, version, aircraft)
 
 
-def _document(request: HttpRequest) -> JSON:
-    return read(request.POST.get("document", "").encode())
+def _document(request: HttpRequest, desk: Desk) -> JSON:
+    """Return what was sent: a document pasted, or what was typed in the inputs."""
+    if "typed" not in request.POST:
+        return read(request.POST.get("document", "").encode())
+    return _made(_typed(request), desk)
+
+
+def _typed(request: HttpRequest) -> Typed:
+    return Typed({name: str(value) for name, value in request.POST.items()}, zone_of(request))
+
+
+def _made(typed: Typed, desk: Desk) -> JSON:
+    return rules_in(typed) if desk.kind == RULES else paper_in(typed, desk.kind)
+
+
+def _form(request: HttpRequest, desk: Desk, refusal: Refused | None) -> Form | None:
+    """Return the inputs of a page, each with what was wrong with it; None where a document is pasted only."""
+    if desk.kind == STANDARD_WEIGHTS:
+        return None
+    typed = _typed(request)
+    faults: dict[str, str] = {}
+    if refusal is not None and "typed" in request.POST:
+        _made(typed, desk)
+        for fault in refusal.faults:
+            faults.setdefault(typed.input_at(fault.pointer), fault.detail)
+    zone = str(typed.zone).replace("_", " ")
+    return (
+        rules_form(typed, faults, zone) if desk.kind == RULES else paper_form(typed, faults, desk.kind, zone)
+    )
 
 
 def _reason(request: HttpRequest) -> str:
@@ -226,6 +264,7 @@ def _desk(
         "versions": versions,
         "may_enter": desk.enters.name in actor.may,
         "typed": request.POST.get("document", ""),
+        "form": _form(request, desk, refusal) if desk.enters.name in actor.may else None,
         "refusal": refusal,
     }
     return render(request, "fleet/provisions.html", context, status=refusal.status if refusal else 200)
