@@ -30,7 +30,7 @@ from records.canonical import canonical_of_exact
 from tests.pure.loads.making import load, twin, twin_empty
 
 AT_MOST, AT_LEAST = 4.0, 50.0
-ROUNDS = 7
+ROUNDS = 15
 COMPARED = 2000
 
 
@@ -83,16 +83,18 @@ def bare_sums(known: Known, batch: Batch) -> list[Any]:
     return found
 
 
-def best(work: Callable[[], object]) -> float:
-    """Return the seconds of CPU of the best round."""
-    work()
-    gc.collect()
-    seconds = []
-    for _ in range(ROUNDS):
-        begun = time.process_time()
+def best(*works: Callable[[], object]) -> list[float]:
+    """Return the seconds of CPU of the best round of each, a round of each in turns."""
+    for work in works:
         work()
-        seconds.append(time.process_time() - begun)
-    return min(seconds)
+    gc.collect()
+    seconds = [float("inf")] * len(works)
+    for _ in range(ROUNDS):
+        for number, work in enumerate(works):
+            begun = time.process_time()
+            work()
+            seconds[number] = min(seconds[number], time.process_time() - begun)
+    return seconds
 
 
 def main(words: list[str]) -> int:
@@ -105,16 +107,16 @@ def main(words: list[str]) -> int:
         raise AssertionError("the basis of this measurement is known to the bulk sums")
     documents = drawn_documents(min(count, 20_000))
     reading = Reading(known)
-    read_s = best(lambda: [Reading(known).add(one) for one in documents])
+    (read_s,) = best(lambda: [Reading(known).add(one) for one in documents])
     if not all(reading.add(one) for one in documents):
         raise AssertionError("every load of this measurement is plain")
     few = reading.batch()
     rows = np.resize(np.arange(len(few)), count)
     batch = Batch(*(np.ascontiguousarray(getattr(few, name)[rows]) for name in Batch.__slots__))
-    bulk_s, bare_s = best(lambda: decide(known, batch)), best(lambda: bare_sums(known, batch))
+    bulk_s, bare_s = best(lambda: decide(known, batch), lambda: bare_sums(known, batch))
     verdict = decide(known, few).verdict
     sample = [read_load(one, basis) for one in documents[:COMPARED]]
-    exact_s = best(lambda: [assess(one, basis, empty, advised=False) for one in sample[:200]]) / 200
+    exact_s = best(lambda: [assess(one, basis, empty, advised=False) for one in sample[:200]])[0] / 200
     wrong = sum(
         assess(one, basis, empty, advised=False).verdict != {WITHIN: "within", OUTSIDE: "outside"}[said]
         for one, said in zip(sample, verdict[:COMPARED].tolist(), strict=True)
