@@ -1,6 +1,7 @@
 """What small pure parts of the room say when they refuse, and their figures at the very bounds, in full."""
 
 from datetime import UTC, date, datetime, timedelta
+from decimal import Decimal
 from fractions import Fraction
 from uuid import UUID
 
@@ -154,6 +155,7 @@ def test_a_number_is_refused_with_what_to_do(typed, code, detail):
 @pytest.mark.parametrize("typed", ["-1234567.12345678", "123456789012345", 10**15 - 1, -(10**15) + 1])
 def test_fifteen_digits_are_a_number_with_a_minus_and_a_point_besides(typed):
     assert F(number_or_fault(typed, "")) == F(typed)
+    assert number_or_fault(Decimal(5), "") == 5
 
 
 def test_units_that_do_not_mix_are_a_fault_of_the_program_told_by_name():
@@ -313,6 +315,11 @@ def test_of_maxima_that_hold_the_one_for_more_conditions_counts_and_of_several_t
     assert under("A", "B") == (10, frozenset("A"))
     assert under("A", "B", "C") == (0, frozenset("AC"))
     assert maximum_under(None, (), frozenset()) == (None, frozenset())
+    half, nothing = (
+        Conditional(frozenset(name), Limit(F(most), PAGE)) for name, most in (("D", "0.5"), ("E", 0))
+    )
+    for both in ((half, nothing), (nothing, half)):
+        assert maximum_under(None, both, frozenset("DE")) == (nothing.maximum, frozenset("E"))
 
 
 START = datetime(2026, 3, 1, tzinfo=UTC)
