@@ -143,16 +143,18 @@ def persons_check(declared: Declared) -> Check:
 
 
 def off_table_check(off: FuelOffTable, ready: Prepared) -> Check:
-    """Return the check of a tank whose table does not cover what it holds at some phase."""
+    """Return the check of a tank whose table does not cover what it holds at some phase or event."""
     tank = next(one for one in ready.basis.tanks if one.id == off.tank)
     first, last, volume = (printed(figure, VOLUME_PLACES) for figure in (off.first, off.last, off.volume))
-    text = f"{volume} {ready.volume}{AT[off.phase]} is off the table, which runs from {first} to {last}"
+    phase = None if isinstance(off.at, int) else off.at
+    where = f" at event {off.at}" if phase is None else AT[phase]
+    text = f"{volume} {ready.volume}{where} is off the table, which runs from {first} to {last}"
     fix = f"Change the fuel of {tank.name}, or enter the rest of its table in the loading basis."
     return Check(
         f"tank-table.{tank.id}",
         f"{tank.name}, table of arms",
         "unresolved",
-        off.phase,
+        phase,
         volume,
         last,
         first,

@@ -50,12 +50,14 @@ class FuelState(NamedTuple):
 
 
 class FuelOffTable(Exception):
-    """A tank holds, at some phase, a volume its table does not cover; nothing is extrapolated."""
+    """A tank holds, at some phase or at an event (its number), a volume its table does not cover; nothing is
+    extrapolated.
+    """
 
-    def __init__(self, tank: str, phase: Phase, volume: Fraction, first: Fraction, last: Fraction) -> None:
-        super().__init__(f"{tank} at {phase}")
+    def __init__(self, tank: str, at: Phase | int, volume: Fraction, first: Fraction, last: Fraction) -> None:
+        super().__init__(f"{tank} at {at}")
         self.tank = tank
-        self.phase = phase
+        self.at = at
         self.volume = volume
         self.first = first
         self.last = last

@@ -15,11 +15,21 @@ from typing import Literal, NamedTuple
 
 from fleet.basis import PHASES, BurnStage, Phase
 from fleet.positions import MovingPart, PartState
+from fleet.tanks import OutsideTable
 from fleet.weighing import EmptyFigures
-from loads.balance.aboard import Declared
+from loads.balance.aboard import Declared, FuelPlan
 from loads.balance.events import Event
 from loads.balance.exact import added
-from loads.balance.fuel import NOTHING, Contents, Draw, Filled, FuelState, drawn, states_of
+from loads.balance.fuel import (
+    NOTHING,
+    Contents,
+    Draw,
+    Filled,
+    FuelOffTable,
+    FuelState,
+    drawn,
+    states_of,
+)
 from loads.balance.over_flight import over_flight
 from loads.balance.prepared import Prepared
 from loads.balance.sums import Sums, sums_without_fuel
@@ -78,7 +88,27 @@ def sections_of(declared: Declared, ready: Prepared) -> Sections:
         ("landing", landing, ()),
         ("minimum at landing", walk.contents, ()),
     )
-    return Sections(tuple(walk.sections), states_of(plan, filled, ready))
+    found = Sections(tuple(walk.sections), states_of(plan, filled, ready))
+    _demand_tables(found.sections, plan, ready)
+    return found
+
+
+def _demand_tables(sections: Sequence[Section], plan: FuelPlan, ready: Prepared) -> None:
+    """Raise `fuel.FuelOffTable` where a tank holds at an event, before or after a transfer, what its table
+    does not cover: the phases around it need not tell.
+    """
+    for section in sections:
+        event = section.event
+        if event is None:
+            continue
+        for contents in (section.end, after_transfer(section.end, event)):
+            for held in plan.tanks:
+                volume = contents[held.tank.id] + held.trapped
+                try:
+                    ready.volume_moment(held.tank.id, volume)
+                except OutsideTable as outside:
+                    ends = (outside.first, outside.last)
+                    raise FuelOffTable(held.tank.id, event.number, volume, *ends) from None
 
 
 def dry_over_flight(declared: Declared, empty: EmptyFigures | None) -> tuple[Dry, ...] | None:

@@ -6,7 +6,6 @@ from collections.abc import Iterator, Mapping
 from fractions import Fraction
 
 from fleet.basis import Phase
-from fleet.tanks import OutsideTable
 from loads.balance.aboard import Declared, Item, Person
 from loads.balance.events import Event, Leaving, Moving
 from loads.balance.exact import added
@@ -107,22 +106,17 @@ def _burned(section: Section, declared: Declared, ready: Prepared) -> Line:
     elif section.aboard and declared.sequence[section.aboard - 1].leg == section.leg:
         what = f"{what} after event {section.aboard}"
     group = "taxi" if section.leg == "taxi" else "trip"
-    if start is None or end is None:
-        return Line(group, what, "declared", weight, None, None, None)
     moment = end[0] - start[0]
     return Line(group, what, "declared", weight, moment / weight, moment, end[1] - start[1])
 
 
-def _moments(contents: Contents, declared: Declared, ready: Prepared) -> tuple[Fraction, Fraction] | None:
-    """Return the moments of the fuel along and across; None where a table does not tell."""
+def _moments(contents: Contents, declared: Declared, ready: Prepared) -> tuple[Fraction, Fraction]:
+    """Return the moments of the fuel along and across."""
     along, across = [], []
     density = declared.fuel.density
     for held in declared.fuel.tanks:
         volume = contents[held.tank.id] + held.trapped
-        try:
-            along.append(ready.fuel_moment(held.tank.id, volume, density))
-        except OutsideTable:
-            return None
+        along.append(ready.fuel_moment(held.tank.id, volume, density))
         across.append(held.tank.lateral_moment(volume, density))
     return added(along), added(across)
 
@@ -142,7 +136,7 @@ def _event(event: Event, before: Declared, contents: Contents, ready: Prepared) 
     if event.transfer is not None:
         start = _moments(contents, before, ready)
         end = _moments(after_transfer(contents, event), before, ready)
-        change = None if start is None or end is None else (end[0] - start[0], end[1] - start[1])
+        change = (end[0] - start[0], end[1] - start[1])
         yield _shift(event, event_words(event, before, ready), change, None)
     for part, state in event.positions:
         was = part.as_weighed

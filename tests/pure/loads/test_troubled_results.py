@@ -10,6 +10,7 @@ from typing import Any
 
 import pytest
 
+from fleet.basis import Chord
 from fleet.curtailment import Inset
 from fleet.presentation import IndexUnits, Presentation
 from fleet.standard_weights_reading import read_standard_weights
@@ -32,7 +33,17 @@ from tests.pure.loads.cases.test_sling_load import RELEASE, SLUNG, hook_basis, s
 from tests.pure.loads.cases.test_trim import flapped, line, of, trim
 from tests.pure.loads.cases.test_zones import DOOR, HANDED, NET, from_nose, item, loaded, running, step
 from tests.pure.loads.hand import F, by_cg, one_after_the_other, plain, result_with
-from tests.pure.loads.making import SOURCE, load, result_of, straight, twin, twin_empty, with_limits
+from tests.pure.loads.making import (
+    SOURCE,
+    limit,
+    load,
+    result_of,
+    straight,
+    tank,
+    twin,
+    twin_empty,
+    with_limits,
+)
 from tests.pure.loads.round_figures import EMPTY, box, q, round_basis, round_load
 from tests.pure.loads.round_figures import flown as round_flown
 from tests.pure.loads.standards import (
@@ -112,6 +123,33 @@ def too_many() -> Result:
     return assess(replace(declared, configuration=few), round_basis(), EMPTY)
 
 
+def nose_hold(most: str) -> tuple[Any, ...]:
+    """The places of the twin, its nose hold with another maximum."""
+    return tuple(replace(p, maximum=limit(most)) if p.id == "NOSE-HOLD" else p for p in twin().places)
+
+
+def beyond_the_table() -> Result:
+    """The table of MAIN ends at 60 US gal, and 4 more are in it until they have burned."""
+    tanks = (replace(tank("MAIN", 100, 100), table=straight(100, 60)), tank("AUX", 120, 20))
+    moved = {"from": "AUX", "to": "MAIN", "quantity": q(4, "US gal")}
+    return on_the_way(
+        event(0, transfer=moved),
+        event(60, transfer={"from": "MAIN", "to": "AUX", "quantity": q(1, "US gal")}),
+        basis=round_basis(tanks=tanks),
+        start={"MAIN": q(60, "US gal"), "AUX": q(4, "US gal")},
+    )
+
+
+GONE: dict[str, Any] = {
+    "kind": "equipment",
+    "what": "all",
+    "place": "HOLD",
+    "how": "weighed",
+    "removed": True,
+    "weight": q(2560),
+}
+WIDE = ((100, -4), (130, -4), (130, 4), (100, 4))
+ENDING = (("118.6", -4), ("118.6", 4), (130, 4), (130, -4))
 TAIL = running("tail", step("aft hold", 100, "AFT-HOLD"), step("row 1", 400, "ROW1-L", "ROW1-R"))
 UNLIMITED = running("nose", step("nose hold", None, "NOSE-HOLD"), step("row 1", None, "ROW1-L"))
 UNWEIGHED = loaded([item("NOSE-HOLD", 200)], ROW1_L=176)
@@ -222,6 +260,20 @@ CASES: dict[str, tuple[tuple[str, ...], Callable[[], Result]]] = {
     "a trim setting inside": (("trim",), lambda: of(trim(FLAT, lowest=1, highest="4.04"))),
     "trim settings off every table": (("trim",), lambda: of(trim(CG_OFF, WEIGHT_OFF))),
     "a trim setting by a chord that is not there": (("trim",), lambda: of(trim(FLAT, against="chord"))),
+    "a trim setting by a chord off its table": (("trim",), lambda: result_with(plain(), lambda basis: replace(
+        basis, trim=trim(CG_OFF, against="chord"), chord=Chord(F(90), F(50), SOURCE)))),
+    "fuel put beyond the table of a tank for a while": (("sequence", "1", "2"), beyond_the_table),
+    "no fuel where its balance is asked for": (
+        ("fuel-bal",), lambda: balanced(balance(9, phases=("zero fuel",)))),
+    "nothing is left at all": (("weight",), lambda: round_flown(round_load() | {"items": [GONE]})),
+    "an item is moved to a place it fills": (
+        ("cg.take",), lambda: inside(110, "118.5", places=nose_hold("10.1"))),
+    "an item is moved to a place it does not overfill": (
+        ("cg.take",), lambda: inside(110, "118.5", places=nose_hold("10"))),
+    "an item is moved within limits across": (
+        ("cg.take", "lateral-by"), lambda: inside(110, "118.5", lateral_by_cg=(by_cg(*WIDE),))),
+    "no item is moved beyond limits across": (
+        ("cg.take", "lateral-by"), lambda: inside(110, "118.5", lateral_by_cg=(by_cg(*ENDING),))),
     "flaps without a table": (("trim",), lambda: flapped("30")),
     "flaps that are stated": (("trim",), lambda: flapped("up", "10")),
     "an index alone": (("presentation",), lambda: result_of(basis=replace(twin(), presentation=Presentation(
