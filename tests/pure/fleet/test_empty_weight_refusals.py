@@ -6,6 +6,7 @@ from fractions import Fraction
 
 import pytest
 
+from fleet.basis import OtherDatum
 from fleet.basis_reading import read_basis
 from fleet.empty_weight_reading import (
     EmptyWeightParticulars,
@@ -13,7 +14,8 @@ from fleet.empty_weight_reading import (
     read_empty_weight,
     read_particulars,
 )
-from fleet.weighing import EmptyFigures
+from fleet.sourced import Source
+from fleet.weighing import EmptyFigures, Restated
 from tests.pure.fleet.documents import basis_document, changed, empty_weight_document, told
 
 F = Fraction
@@ -79,6 +81,27 @@ def test_figures_as_recorded_keep_their_datum_and_fit_whatever_the_basis_has():
         624042,
         None,
     )
+
+
+def test_figures_from_another_datum_are_restated_and_the_working_is_kept():
+    """3,962 lb, 40 in further aft: 624,042 + 158,480 = 782,522 lb in."""
+    page = Source("OK62-FM", "D", "6-2")
+    basis = replace(
+        BASIS, other_datums=(OtherDatum("nose tip", F(7), page), OtherDatum("earlier", F(40), page))
+    )
+    found = read_empty_weight(twin(datum="earlier"), basis)
+
+    assert (found.datum, found.moment, found.lateral_moment) == (PLANE, 782_522, -1180)
+    assert found.restated == Restated("earlier", F(624_042), F(40), page)
+    assert read_empty_weight(twin(), basis).restated is None
+    assert read_as_recorded(twin(datum="earlier", fit="floats"), basis) == replace(found, fit="floats")
+    assert read_as_recorded(twin(datum="firewall"), basis).datum == "firewall"
+    assert read_as_recorded(twin(), basis).restated is None
+
+
+def test_little_weighs_something():
+    light = {"weight": pounds("0.5"), "moment": moment("78.75"), "lateral_moment": moment(0)}
+    assert read_empty_weight(twin(**light), BASIS).weight == F("0.5")
 
 
 TOO_EARLY = "a weighing holds from the day it was done, or later; correct one of the two dates"
