@@ -11,6 +11,7 @@ import pytest
 
 from fleet.basis import Basis
 from loads.balance.declared import read_load
+from loads.balance.shape import check_shape
 from records.refusal import Invalid
 from tests.pure.loads.agreed import agreed, faults_told
 from tests.pure.loads.cases.test_hoist import CRATE, FOUND
@@ -168,3 +169,29 @@ def test_what_is_said_of_events_that_cannot_be(title: str) -> None:
 
 def test_every_agreed_refusal_of_events_is_asked_for() -> None:
     assert list(AGREED) == list(ASKED)
+
+
+def test_without_a_basis_the_form_of_events_is_refused_in_the_same_words() -> None:
+    run = [
+        {"after_burning": q(1, "in"), "since": "landing", "leave": [OFF] * 201},
+        {"after_burning": q(-1), "move": [{"deck": 1}]},
+        {"after_burning": q(0), "transfer": {"from": "TIP", "quantity": q(0)}},
+        {"after_burning": q(0)},
+    ]
+    with pytest.raises(Invalid) as refused:
+        check_shape(load(sequence=run))
+
+    assert faults_told(refused.value.faults) == [
+        "/sequence/0/after_burning/unit unit-dimension: in is no unit of weight or volume; "
+        "use one of kg, lb, l, US gal, imp gal",
+        "/sequence/0/since choice: not one of the words used here; write engine start or take-off",
+        "/sequence/0/leave too-many: 201 lines; at most 200 are read, so put lines together",
+        "/sequence/1/after_burning/value negative: below zero; write a positive figure",
+        "/sequence/1/move/0/deck unknown-field: no such field here; "
+        "the fields are seat, place, what, weight, to",
+        "/sequence/2/transfer/to missing: this field is needed and nothing is assumed; state it",
+        "/sequence/2/transfer/quantity/value zero: zero makes no sense here; write the true figure, or leave "
+        "the line out",
+        "/sequence/3/leave one-of: an event is exactly one of leave, move, transfer, position, come_aboard; "
+        "write one event for each",
+    ]

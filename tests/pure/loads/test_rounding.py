@@ -116,3 +116,25 @@ def test_every_unit_has_its_digits(unit, arm, moment):
     assert [printed(F(1, 3), places) for places in (WEIGHT_PLACES, VOLUME_PLACES, CHORD_PLACES)] == [
         "0.3"
     ] * 3
+
+
+def test_what_is_beyond_a_limit_by_less_than_any_digit_shown_is_printed_outward() -> None:
+    """One part in 10^20 above 1, and below -1: the fifteenth digit is the last that is shown."""
+    hair = F(1, 10**20)
+
+    assert between(1 + hair, F(0), F(1), 2) == ("1.000000000000001", "0", "1", 15)
+    assert between(-1 - hair, F(-1), F(0), 2) == ("-1.000000000000001", "-1", "0", 15)
+
+
+def test_a_stretch_too_narrow_for_any_digit_shown_prints_its_ends_to_the_nearest() -> None:
+    """Between a third and a hair more no number of fifteen digits lies."""
+    third, hair = F(1, 3), F(1, 10**20)
+    shown = "0.333333333333333"
+
+    assert between(third, third, third + hair, 2) == (shown, shown, shown, 15)
+
+
+def test_an_actual_is_printed_to_the_nearest_digit_within_its_stretch() -> None:
+    assert between(F("1.006"), F(0), F(2), 2) == ("1.01", "0", "2", 2)
+    assert between(F("1.004"), F("1.004"), F(2), 2) == ("1.01", "1.01", "2", 2)
+    assert between(F("1.996"), F(0), F("1.996"), 2) == ("1.99", "0", "1.99", 2)
