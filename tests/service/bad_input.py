@@ -95,22 +95,25 @@ class Spoiled:
     body: bytes
 
 
-def spoiled(document: Mapping[str, Any], schema: Schema, *, seen: set[str]) -> Iterator[Spoiled]:
+def spoiled(
+    document: Mapping[str, Any], schema: Schema, *, seen: set[str], one_in: int = 1
+) -> Iterator[Spoiled]:
     """This function will return the document once for each field and each way of spoiling it.
 
     A field whose name was `seen` before is spoiled in a few ways only; one that stood in a document before is
-    left alone. The names and pointers met are added. Left out is only what the schema requires.
+    left alone. The names and pointers met are added. Left out is only what the schema requires. Of the ways
+    of a field `one_in` so many is taken, at least one, and of the next field another.
     """
     required = schema.required()
-    for pointer, value in fields(document):
+    for place, (pointer, value) in enumerate(fields(document)):
         where, name = plain(pointer), name_of(pointer, value)
         if where in seen:
             continue
         again = name in seen
         seen |= {where, name}
-        for how, text in _ways(pointer, value):
-            if not again or how in AGAIN:
-                yield Spoiled(pointer, how, _written(document, pointer, text))
+        ways = [way for way in _ways(pointer, value) if not again or way[0] in AGAIN]
+        for how, text in ways[place % min(one_in, len(ways)) :: one_in]:
+            yield Spoiled(pointer, how, _written(document, pointer, text))
         if where in required:
             yield Spoiled(pointer, "left out", _without(document, pointer))
         if not again:

@@ -22,6 +22,8 @@ from tests.service.test_permissions import undone
 
 pytestmark = pytest.mark.django_db
 LONG = os.environ.get("TAREBOOK_LONG_FORMS") == "1"
+# The longest documents, each answer to which takes long: spoiled in every way only in the long form.
+LONGEST = ("/api/v1/aircraft/{registration}/loading-bases",)
 # Read by the reader of `POST /loads`, on which every field is spoiled in every way.
 READ_ALIKE = ("/api/v1/assessments", "/api/v1/loads/{load}/revisions")
 
@@ -64,11 +66,12 @@ def test_a_spoiled_field_is_refused_by_name_and_nothing_is_stored(world, method,
     wrong = []
     headers, schema = headers_of(world, row, role), Schema(schema_of(method, path), DOCUMENT)
     before, seen = rows(), set()
+    one_in = 6 if path in LONGEST and not LONG else 1
     for document in SAMPLES[path](world):
         if path in READ_ALIKE and not LONG:
             seen |= {name_of(*field) for field in fields(document)}
         assert send(world, row, role, headers, json.dumps(document).encode())[0] < 300, document
-        for one in spoiled(document, schema, seen=seen):
+        for one in spoiled(document, schema, seen=seen, one_in=one_in):
             status, code, faults, after = send(world, row, role, headers, one.body)
             if right_after_all(path, one):
                 refused = status < 300 or after == before
