@@ -11,6 +11,7 @@ import tempfile
 from collections.abc import Iterator
 from pathlib import Path
 
+import hypothesis
 import pytest
 from django.conf import settings
 from django.db import connections
@@ -25,6 +26,9 @@ _cluster: list[tuple[postgres.Cluster, Path]] = []
 
 def pytest_configure(config: pytest.Config) -> None:
     """Start the cluster once, before any worker is made, and use a password hasher that is quick."""
+    # What takes long on a busy machine is no failure. A profile that was loaded before is kept otherwise.
+    hypothesis.settings.register_profile("patient", hypothesis.settings(), deadline=None)
+    hypothesis.settings.load_profile("patient")
     settings.PASSWORD_HASHERS = ["django.contrib.auth.hashers.MD5PasswordHasher"]
     # A flush is a TRUNCATE, which our own triggers refuse.
     TransactionTestCase._fixture_teardown = lambda _self: databases.emptied()

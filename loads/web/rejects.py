@@ -1,7 +1,7 @@
 """The rejects desk: what cannot depart, why, who has it, what was said, what became of it, and the trend."""
 
 from datetime import date, datetime, time, timedelta
-from time import monotonic
+from time import thread_time
 from typing import Any
 from uuid import UUID
 from zoneinfo import ZoneInfo
@@ -72,9 +72,9 @@ def _page(
     found = open_rejects(operator)
     words = words_at(operator, now)
     lines = [_reject(one, zone, now, words) for one in found]
-    by = monotonic() + SECONDS  # in all; what is left is told on the page of each load
+    by = thread_time() + SECONDS  # in all; what is left is told on the page of each load
     for line, one in zip(lines, found, strict=True):
-        line["remedy"] = first_sentence(one.current, words, now, by - monotonic())
+        line["remedy"] = first_sentence(one.current, words, now, by - thread_time())
     if about is not None:
         for line in lines:
             line["typed"] = typed if line["id"] == about else None
