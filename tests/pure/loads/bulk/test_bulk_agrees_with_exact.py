@@ -71,6 +71,17 @@ def test_drawn_loads_come_out_as_the_exact_assessment_has_them(seed):
     assert open_ones < count * 0.6
 
 
+@pytest.mark.parametrize("seed", range(200, 216))
+def test_a_few_loads_of_many_bases_come_out_so_too(seed):
+    draw = random.Random(seed)
+    basis, empty = drawn_basis(draw), drawn_empty(draw)
+    documents = [drawn_load(draw, basis) for _ in range(15)]
+
+    for document, (verdict, _, _) in zip(documents, decided(documents, basis, empty), strict=True):
+        result = exactly(document, basis, empty)
+        assert verdict == UNDECIDED or (result is not None and result.verdict == WORD[verdict])
+
+
 def test_most_plain_loads_need_no_second_look():
     """So the filter is one: of a fleet's loads inside and outside by pounds, few are left open."""
     draw = random.Random(7)
