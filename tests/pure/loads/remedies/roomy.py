@@ -36,7 +36,8 @@ def stopped_by_a_zone_a_seat_and_a_place() -> Asked:
 
 def stopped_across() -> Asked:
     """Lateral limits of 1.5 in: 2,480 lb with the least fuel at landing may have 3,720; the passengers on the
-    left are 2,000, 3 US gal more on the left 900: 820 are left, 300 a US gal. A seat has no row, a hold no limit that was entered, and an attendant's seat is no passenger's.
+    left are 2,000, 3 US gal more on the left 900: 820 are left, 300 a US gal. A seat has no row, a hold no
+    limit that was entered, and an attendant's seat is no passenger's.
     """
     made = aircraft(lateral=True)
     seats = tuple(
