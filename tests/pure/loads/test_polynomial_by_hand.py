@@ -152,3 +152,25 @@ def test_where_floats_are_not_sure_the_root_is_found_all_the_same():
 
     assert len(found) == 2
     assert all(abs(root.low - 5) < F(1, 10**6) for root in found)
+
+
+@pytest.mark.parametrize("by", [F(1, 10**6), F(-1, 10**6), F(10**6), F(-(10**6))])
+@pytest.mark.parametrize("roots", [(1, 3, 5), (F(1, 3), 4, 12), (2, F(22, 7), 5, 9)])
+def test_a_polynomial_times_a_number_has_the_same_roots(roots, by):
+    part = add(of_roots(*roots), poly(F(1, 1000)))
+
+    assert told(scale(part, by)) == told(part) != []
+
+
+@pytest.mark.parametrize("sign", [1, -1])
+@pytest.mark.parametrize("at", [5, F(5, 2), F(15, 4), F(5, 8)])
+def test_a_root_met_when_halving_is_told_exactly(at, sign):
+    # The cube of x less that of the root: from 0 to 10 it only rises, or falls.
+    assert told(scale(poly(-(F(at) ** 3), 0, 0, 1), sign)) == [Root(F(at), F(at))]
+
+
+@pytest.mark.parametrize("sign", [1, -1])
+def test_halving_goes_on_until_the_ends_are_close_and_no_further(sign):
+    (root,) = told(scale(poly(-2, 0, 0, 1), sign))
+
+    assert FINE / 2 < root.high - root.low <= FINE
