@@ -250,12 +250,21 @@ def test_at_the_weight_of_a_corner_no_edge_is_sure():
     assert found(**near) == OPEN
 
 
-def test_between_two_corners_the_edges_there_hold():
-    """From 2400 to 2600 the aft edge lies at 1, elsewhere far away: landing at 2488 is in between."""
-    around = box((-FAR, 0.0, 0.0), (FAR, 0.0, 0.0), ("landing",), levels=(1000.0, 2400.0, 2600.0, 4000.0))
+@pytest.mark.parametrize(
+    ("levels", "here"),
+    [
+        ((2400.0, 2600.0, 3000.0, 4000.0), 0),
+        ((1000.0, 2400.0, 2600.0, 4000.0), 1),
+        ((1000.0, 2000.0, 2400.0, 2600.0), 2),
+    ],
+)
+def test_between_two_corners_the_edges_there_hold(levels, here):
+    """Landing is at 2488: between those two the aft edge lies at 1, or everywhere but there."""
+    around = box((-FAR, 0.0, 0.0), (FAR, 0.0, 0.0), ("landing",), levels=levels)
     (bounds,) = around["bounds"]
-    bounds.outline.high[1] = (1.0, 0.0, 0.0)
+    bounds.outline.high[here] = (1.0, 0.0, 0.0)
 
     assert found(**around) == (OUTSIDE, "cg.landing", 244499.0)
-    bounds.outline.high[:] = [(1.0, 0.0, 0.0), (FAR, 0.0, 0.0), (1.0, 0.0, 0.0)]
+    bounds.outline.high[:] = (1.0, 0.0, 0.0)
+    bounds.outline.high[here] = (FAR, 0.0, 0.0)
     assert found(**around) == NOTHING

@@ -3,10 +3,14 @@
 Each envelope here binds a leg and no phase, so a load is within or open.
 """
 
+from dataclasses import replace
+
+import numpy as np
 import pytest
 
-from loads.balance.bulk.deciding import UNDECIDED, WITHIN
+from loads.balance.bulk.deciding import UNDECIDED, WITHIN, decide
 from loads.balance.bulk.known import TankSums
+from loads.balance.bulk.reading import Batch
 from tests.pure.loads.bulk.plain_decisions import (
     ACROSS,
     ERROR,
@@ -152,6 +156,16 @@ def test_of_several_corners_the_least_room_counts():
     for inner in (inside, outside), (outside, inside):
         assert found(**box(*AWAY, (), legs=(LATE,), inner=inner)) == OPEN
     assert found(**box(*AWAY, (), legs=(LATE,), inner=(inside, (2100.0, 0.0, 1.0)))) == NOTHING
+
+
+def test_a_corner_counts_for_the_loads_that_cross_it():
+    """Of two loads, with 10 and with 30 US gal at the least, the second is at 2380 lb then."""
+    one, other = batch_of(), batch_of(least=30.0)
+    both = Batch(*(np.concatenate([getattr(each, name) for each in (one, other)]) for name in one.__slots__))
+
+    for level, verdicts in (2300.0, [UNDECIDED, WITHIN]), (2400.0, [UNDECIDED, UNDECIDED]):
+        known = box(*AWAY, (), legs=(LATE,), inner=((level, FAR, FAR),))
+        assert decide(replace(KNOWN, **known), both).verdict.tolist() == verdicts
 
 
 def test_on_the_trip_a_corner_needs_room_for_what_leaves_the_line():
