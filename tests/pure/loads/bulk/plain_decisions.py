@@ -75,10 +75,21 @@ NOTHING = (WITHIN, "", 0.0)
 OPEN = (UNDECIDED, "", 0.0)
 
 
-def box(low, high, phases, *, axis="longitudinal", legs=(), inner=(), bent=0.0, levels=(1000.0, 4000.0)):
+def box(
+    low,
+    high,
+    phases,
+    *,
+    axis="longitudinal",
+    legs=(),
+    inner=(),
+    bent=0.0,
+    levels=(1000.0, 4000.0),
+    size=440000.0,
+):
     """An envelope between two edges of (e0, e1, e2), the same at every weight, for what is known."""
     edges = [np.array([edge] * (len(levels) - 1), dtype=np.float64) for edge in (low, high)]
-    outline = Outline(np.array(levels), *edges, inner, bent, 110.0, 440000.0)
+    outline = Outline(np.array(levels), *edges, inner, bent, 110.0, size)
     word = "cg" if axis == "longitudinal" else "lateral"
     codes = tuple(f"{word}.{phase.replace(' ', '-')}" for phase in phases)
     return {"bounds": (Bounds(axis, outline, phases, legs, codes),)}

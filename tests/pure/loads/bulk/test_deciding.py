@@ -51,6 +51,16 @@ def test_within_the_bound_on_the_error_nothing_is_decided_and_beyond_it_all_is()
     assert (at(0.99 * ERROR), at(1.01 * ERROR)) == (UNDECIDED, WITHIN)
 
 
+def test_loads_together_are_decided_within_the_same_bound():
+    free = dict.fromkeys(PHASES, INFINITE)
+    one = batch_of()
+    three = Batch(*(np.repeat(getattr(one, name), 3, axis=0) for name in one.__slots__))
+
+    for room, verdict in (1.01 * ERROR, WITHIN), (0.99 * ERROR, UNDECIDED):
+        decision = decide(replace(KNOWN, limits=free | {"ramp": 2680 + room}), three)
+        assert decision.verdict.tolist() == [verdict] * 3
+
+
 def test_the_bound_grows_with_an_empty_weight_below_zero_as_with_one_above():
     """-2500 in sum with 480 of fuel and 185: |-2500| + 665 = 3165 lb instead of 2680."""
     free = dict.fromkeys(PHASES, INFINITE)
@@ -100,7 +110,9 @@ def test_fuel_in_a_tank_that_feeds_nothing_stays_and_is_none_to_land_with():
 
 def test_tanks_that_may_not_hold_what_is_burned_are_left_to_the_exact_sum():
     """MAIN alone taxies; 58 and 20 are there for the trip."""
-    assert found(batch_of(taxi=60.0, usable=[60.0, 40.0])) == OPEN
+    assert found(batch_of(taxi=60.0, usable=[60.0, 45.0]), bounds=()) == OPEN
+    assert found(batch_of(taxi=59.0, usable=[60.0, 45.0]), bounds=()) == NOTHING
+    assert found(batch_of(taxi=0.5, usable=[0.5, 45.0]), bounds=()) == OPEN
     assert found(batch_of(trip=78.0, least=0.0))[0] == UNDECIDED
     assert found(batch_of(trip=77.0, least=0.0)) == NOTHING
     assert found(batch_of(usable=[0.0, 49.0], taxi=0.0, trip=38.0)) == NOTHING
@@ -176,6 +188,23 @@ def test_a_zone_whose_limit_was_not_entered_is_open_once_it_holds_anything():
     assert found(**unknown) == NOTHING
     assert found(batch_of(held=held(HOLD=1)), **unknown) == OPEN
     assert found(batch_of(held=held(RIGHT=1)), **unknown) == OPEN
+
+
+def test_of_two_loads_the_one_that_holds_anything_there_is_open():
+    one, other = batch_of(), batch_of(held=held(HOLD=1))
+    both = Batch(*(np.concatenate([getattr(each, name) for each in (one, other)]) for name in one.__slots__))
+    zone = zoned(Zone("REAR", "rear", ("RIGHT", "HOLD"), None))
+
+    for known in zone, {"unknown": (4,)}:
+        assert decide(replace(KNOWN, **known), both).verdict.tolist() == [WITHIN, UNDECIDED]
+
+
+def test_what_is_open_for_one_reason_stays_so():
+    free = dict.fromkeys(PHASES, INFINITE)
+    zone = zoned(Zone("REAR", "rear", ("RIGHT", "HOLD"), None))
+
+    assert found(limits=free | {"ramp": 2680.0}, **zone) == OPEN
+    assert found(limits=free | {"ramp": 2680.0}, unknown=(4,)) == OPEN
 
 
 def test_of_several_limits_broken_the_first_stands():
