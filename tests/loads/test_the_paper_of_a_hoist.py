@@ -22,16 +22,16 @@ FLIGHT = [
 
 
 def _with_hook(document: dict[str, Any]) -> dict[str, Any]:
-    """The invented helicopter with a hook below, a hoist, 1,700 kg with an external load, and envelopes that
-    reach as high.
+    """The invented helicopter with its hook fitted further forward, a hoist, 1,700 kg with an external load,
+    and envelopes that reach as high.
     """
     page = {"source": {"page": "9-4"}}
     arms = {"lateral_arm": {"value": "0", "unit": "mm"}, "external": True, **page}
-    for name, arm, most in (("HOOK", "2240", "400"), ("HOIST", "2250", "150")):
-        maximum = {"value": most, "unit": "kg", **page}
-        spot = {"id": name, "name": name.lower(), "arm": {"value": arm, "unit": "mm"}, "maximum": maximum}
-        document["places"].append(spot | arms)
-        document["configurations"][0]["places"].append(name)
+    maximum = {"value": "150", "unit": "kg", **page}
+    hoist = {"id": "HOIST", "name": "hoist", "arm": {"value": "2250", "unit": "mm"}, "maximum": maximum}
+    document["places"].append(hoist | arms)
+    document["places"][0]["arm"]["value"] = "2240"
+    document["configurations"][0]["places"] += ["HOOK", "HOIST"]
     document["limits"]["with_external_load"] = {"value": "1700", "unit": "kg", **page}
     for envelope in document["envelopes"]:
         points = envelope["points"]

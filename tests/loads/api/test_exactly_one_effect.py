@@ -183,7 +183,7 @@ def killed(where):
 client = api(Person.objects.get(pk={person}))
 client.defaults["SERVER_NAME"] = "localhost"
 if {before_commit}:
-    loads.api.loads.created = lambda _current: killed("written, not committed:")
+    loads.api.loads.created = lambda _current, _actor: killed("written, not committed:")
 answer = send(client, "/loads", {document!r}, {key!r})
 killed(f"answered {{answer.status_code}}, and it never leaves the machine:")
 """

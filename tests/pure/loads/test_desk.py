@@ -11,6 +11,7 @@ from loads.web import desk as desk_module
 from loads.web.copied import typed_of
 from loads.web.desk import Field, lay_desk, wrong_inputs
 from loads.web.form import MOST_ROWS
+from loads.web.form_lines import TAKEN_OUT
 from tests.pure.loads.making import load, twin
 
 METRIC = replace(twin(), weight_unit=Unit.KG, volume_unit=Unit.L)
@@ -119,7 +120,7 @@ def test_a_seat_has_only_the_inputs_it_has_use_for_unless_another_holds_somethin
 def test_the_words_to_choose_from_are_those_the_reader_takes() -> None:
     assert {word for word, _ in desk_module.HOW if word} == set(HOWS)
     assert {word for word, _ in desk_module.INFANT_HOW if word} == set(HOWS) - {"standard"}
-    assert {word for word, _ in desk_module.KINDS if word} == set(KINDS)
+    assert {word for word, _ in desk_module.KINDS if word} == {*KINDS, TAKEN_OUT}
     assert {word for word, _ in desk_module.LIMITS_AT} == {"take-off", "landing"}
 
 
