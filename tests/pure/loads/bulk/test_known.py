@@ -278,6 +278,9 @@ def test_the_reach_is_that_of_the_slope_of_a_table_too():
         tank = replace(few.tanks[0], table=table(*points))
         assert plainly_known(replace(few, tanks=(tank,)), NOWHERE).reach == reach
 
+    told = replace(one_seat().tanks[0], table=table((0, 0), (50, 30000), straight_in="moment"))
+    assert plainly_known(one_seat(tanks=(told,)), NOWHERE).reach == 100.0  # 30000 / 6 / 50
+
     left = replace(one_seat().tanks[0], lateral_arm=F(-33))
     assert plainly_known(one_seat(tanks=(left,)), NOWHERE).reach == 33.0
 
