@@ -1,4 +1,4 @@
-"""The checks of what a floor bears, each told in full, by hand. The floor of the aft hold runs along the aircraft."""
+"""The checks of what a floor bears, each told in full, by hand; the aft hold runs along the aircraft."""
 
 from dataclasses import replace
 
