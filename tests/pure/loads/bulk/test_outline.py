@@ -103,6 +103,14 @@ def test_a_low_edge_that_slopes_forward_is_bent_and_its_negative_parts_count_in_
     }
 
 
+def test_between_edges_that_come_together_a_margin_is_never_below_the_lesser_of_its_ends():
+    """Low: arm W / 10; high: 40 - (W - 100) / 10. Both bend towards the inside."""
+    found = outline("arm", (10, 100), (20, 200), (30, 200), (40, 100))
+
+    assert (found.low.tolist(), found.high.tolist()) == ([[0.0, 0.0, 0.1]], [[0.0, 50.0, -0.1]])
+    assert found.bent == 0.0
+
+
 def test_weights_of_corners_may_be_fractions():
     found = outline("arm", (1, "100.5"), (1, "200.25"), (3, "200.25"), (3, "100.5"))
 
