@@ -23,6 +23,7 @@ from records.web.asking import operator_of, signed_in
 
 GONE = ("superseded", "withdrawn")
 ONE_DAY = timedelta(days=1)
+FEW = 2  # of what is in the way; the page of the load and the rejects desk tell all
 
 
 @require_safe
@@ -88,9 +89,13 @@ def _stale(current: Current, now: datetime) -> str:
 
 
 def _nearest(result: Mapping[str, Any], words: Words) -> list[str]:
-    """This function will return what is in the way, or the two governing lines when nothing is."""
+    """This function will return the first two checks in the way and how many more are, or the two governing
+    lines when nothing is.
+    """
     if in_the_way := stops(result, words):
-        return [f"{stop['title']}: {stop['margin']}" for stop in in_the_way]
+        told = [f"{stop['title']}: {stop['margin']}" for stop in in_the_way[:FEW]]
+        more = len(in_the_way) - len(told)
+        return [*told, f"and {more} more in the way"] if more else told
     governing = result.get("governing") or {}
     return [words.said(line) for line in (governing.get("weight"), governing.get("cg")) if line]
 

@@ -61,6 +61,19 @@ def test_every_line_says_verdict_state_and_nearest_limits(people) -> None:
     assert page.links["Q9-KTB"].startswith("/loads/")
 
 
+def test_of_many_limits_in_the_way_two_are_told_and_the_others_counted(people) -> None:
+    document = outside_document(people)
+    document["items"][0]["weight"] = {"value": "2500", "unit": "lb"}
+    current = submit_load(document, by=actor(people.preparer))
+    broken = [check for check in current.result()["checks"] if check["result"] != "pass"]
+    assert len(broken) > 2
+
+    words = shown(people.auditor).words
+
+    assert f"{broken[1]['margin_text']} and {len(broken) - 2} more in the way".casefold() in words.casefold()
+    assert broken[2]["margin_text"].casefold() not in words.casefold()
+
+
 def test_a_replaced_load_is_shown_and_not_counted(people) -> None:
     first = submitted(people)
     revise_load(
