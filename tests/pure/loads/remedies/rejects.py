@@ -10,7 +10,7 @@ from collections.abc import Callable
 from dataclasses import replace
 from typing import Any
 
-from fleet.basis import Basis, BurnStage, Zone
+from fleet.basis import Basis, BurnStage, TankTable, Zone
 from fleet.weighing import EmptyFigures
 from loads.balance.aboard import Declared
 from loads.balance.assess import assess
@@ -18,7 +18,7 @@ from loads.balance.declared import read_load
 from loads.balance.prepared import prepared
 from loads.balance.remedies.question import Question
 from loads.balance.result import Result
-from tests.pure.loads.making import F, envelope, limit, seat
+from tests.pure.loads.making import F, envelope, limit, seat, tank
 from tests.pure.loads.remedies.cabins import cabin, empty_of, seated
 from tests.pure.loads.round_figures import box, q
 
@@ -35,6 +35,7 @@ INFANT = {
     "category": "adult",
     "lap_infant": {"name": "I. Moss", "weight": q(20), "how": "declared"},
 }
+PHASES = ("ramp", "take-off", "landing")
 Asked = tuple[dict[str, Any], Basis]
 
 
@@ -254,6 +255,50 @@ def whoever_leaves_in_flight_keeps_the_seat() -> Asked:
     return document, basis
 
 
+def from_the_middle_to_both_wings() -> Asked:
+    """A third tank 20 in behind, 40 US gal of 40: 4,800 lb in and 2,020 more, where 2,749 lb at the ramp may
+    have 5,498. It is the last to burn.
+    """
+    return _three_tanks(
+        {"S3": 100, "S4": 101}, gallons(9, 9) | {"MIDDLE": q(40, "US gal")}
+    ), _with_a_third_tank(20)
+
+
+def from_both_wings_to_the_middle() -> Asked:
+    """The pilot alone, 25 US gal in each wing and the third tank 20 in behind: -2,000 where 2,500 lb at the
+    ramp may have -1,750 with a forward limit of 99.3 in, 250 too much, 120 a US gal.
+    """
+    made = replace(_with_a_third_tank(20), envelopes=(box(F("99.3"), 102, phases=PHASES), NARROW))
+    return _three_tanks({}, gallons(25, 25) | {"MIDDLE": q(0, "US gal")}), made
+
+
+def _with_a_third_tank(behind: int) -> Basis:
+    basis = aircraft()
+    stages = (BurnStage(("LEFT", "RIGHT")), BurnStage(("MIDDLE",)))
+    tanks = (*basis.tanks, tank("MIDDLE", 100 + behind, 40))
+    return replace(
+        basis, tanks=tanks, burn_order=stages, taxi_order=stages, envelopes=(*basis.envelopes, NARROW)
+    )
+
+
+def _three_tanks(people: dict[str, Any], start: dict[str, Any]) -> dict[str, Any]:
+    return loaded(people, at_engine_start=start, trip=q(60), minimum_at_landing=q(180))
+
+
+def a_hump_between_two_points() -> Asked:
+    """Fuel at 120 in less a third of an inch a US gal in one tank: v US gal have 120 v - 2 v**2, so of all
+    points of the burn the one with 27 US gal is the worst: 418 lb in too much. 8.8 lb to leave behind, at 48
+    in a pound, 4.2 lb to move, 8.1 lb of ballast in the nose.
+    """
+    table = TankTable("volume", "arm", "arm", None, ((F(0), F(120)), (F(60), F(100))))
+    made = aircraft()
+    (left, _), stages = made.tanks, (BurnStage(("LEFT",)),)
+    only = replace(left, table=table, capacity=F(60), lateral_arm=F(0))
+    start = {"LEFT": q(60, "US gal")}
+    document = loaded({"S1": 200}, ("REAR", 120), at_engine_start=start)
+    return document, replace(made, tanks=(only,), burn_order=stages, taxi_order=stages)
+
+
 def no_single_kind_helps() -> Asked:
     """2,240 lb without fuel where 1,600 are allowed, and 40 lb of it are bags."""
     return loaded({}, ("REAR", 40)), aircraft({"zero_fuel": 1600})
@@ -292,6 +337,9 @@ REJECTS: tuple[Callable[[], Asked], ...] = (
     a_place_too_full,
     somebody_too_heavy_for_a_seat,
     whoever_leaves_in_flight_keeps_the_seat,
+    from_the_middle_to_both_wings,
+    from_both_wings_to_the_middle,
+    a_hump_between_two_points,
     no_single_kind_helps,
     something_could_not_be_checked,
     nothing_is_outside,

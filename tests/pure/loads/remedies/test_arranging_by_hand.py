@@ -203,8 +203,8 @@ def test_a_weight_on_its_limit_is_no_hindrance() -> None:
 @pytest.mark.parametrize(
     ("line_weight", "crate", "moves"),
     [
-        # 2,000 + 777.5 + 3,750 lb in where 2,490.55 lb may have 4,981.1: 1,546.4 too much. 155 tenths are 15.5
-        # lb, and with the last of them goes what is no whole tenth.
+        # 2,000 + 777.5 + 3,750 lb in where 2,490.55 lb may have 4,981.1: 1,546.4 too much; 155 tenths are
+        # 15.5 lb, and with the last of them goes what is no whole tenth.
         ("15.55", 75, "15.55"),
         # 0.85 lb in too much of 2,000 + 2.5 + 2,915, and the line is half a tenth.
         ("0.05", "58.3", "0.05"),

@@ -72,6 +72,15 @@ def test_where_the_balance_decides_only_some_rows_are_told() -> None:
     assert told(two) == (2, ("1", "2"), 330, 2918, True)
 
 
+def test_a_row_of_which_one_as_heavy_would_not_do_is_left_out() -> None:
+    # -2,000 + 4,000 + 3,000 + 1,000 = 6,000 where 2,770 lb may have 5,540: 460 too much, with 200 lb less in
+    # row 1 860. In row 2 even 150 lb are enough; but of 200 lb not any would do.
+    people = {"S4": 200, "S3": 150, "S1": 200}
+    assert told(question_of((loaded(people, ("REAR", 20)), aircraft()))) == (1, ("2",), 150, 2968, True)
+    people = {"S1": 200, "S3": 150, "S4": 200}
+    assert told(question_of((loaded(people, ("REAR", 20)), aircraft()))) == (1, ("2",), 150, 2968, True)
+
+
 def test_nobody_with_an_infant_and_nobody_whom_an_event_names_is_asked() -> None:
     document = loaded(FOUR)
     document["passengers"][3] |= INFANT
