@@ -13,10 +13,12 @@ OVER = ("superseded", "withdrawn")
 
 def next_leg(current: Current, legs: dict[str, Any], actor: Actor) -> str:
     """This function will return what to ask the declare page for, to declare the leg after a load; "" where
-    there is one already, where the load counts no more, or where this actor declares none.
+    there is one already, where the load cannot depart as it stands or counts no more, or where this actor
+    declares none.
     """
     load = current.load
-    if legs.get("followed_by") or current.state in OVER or SUBMIT_LOAD.name not in actor.may:
+    cannot = current.state in OVER or current.assessment.verdict != "within"
+    if legs.get("followed_by") or cannot or SUBMIT_LOAD.name not in actor.may:
         return ""
     known = {"aircraft": load.aircraft.registration, "follows": load.id, "leg": load.leg + 1}
     return urlencode(known | {"reference": load.reference, "origin": load.destination})

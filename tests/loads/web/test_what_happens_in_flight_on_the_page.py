@@ -9,7 +9,7 @@ from loads.models import Assessment, Load
 from loads.queries.current import declared_in
 from records.models import Act
 from tests.cast import actor, browser
-from tests.loads.making import load_document, submitted
+from tests.loads.making import load_document, outside_document, submitted
 from tests.makers import q
 from tests.reading_pages import Page
 
@@ -80,6 +80,15 @@ def test_the_next_leg_is_declared_from_the_page_of_the_one_before(people) -> Non
     assert (values["follows"], values["leg"], values["origin"]) == (str(first.load.id), "2", "XKOR")
     assert (values["reference"], values["aircraft"], values["destination"]) == ("KT-214", "Q9-KTB", "")
     assert "Declare the next leg" not in Page(browser(people.auditor).get(f"/loads/{first.load.id}")).links
+
+
+def test_a_load_that_cannot_depart_leads_to_no_next_leg(people) -> None:
+    current = submit_load(outside_document(people), by=actor(people.preparer))
+
+    links = Page(browser(people.preparer).get(f"/loads/{current.load.id}")).links
+
+    assert "Revise" in links
+    assert "Declare the next leg" not in links
 
 
 def revised(people, current, **changes):

@@ -7,7 +7,7 @@ from dataclasses import replace
 import pytest
 
 from loads.balance.checks_fuel_balance import Held
-from loads.balance.checks_whole import kinks_between
+from loads.balance.checks_whole import kinks_between, kinks_of
 from loads.balance.declared import read_load
 from loads.balance.flight_weights import FlightWeights, Moment, flight_weights
 from loads.balance.prepared import prepared
@@ -145,17 +145,39 @@ def test_of_a_load_on_which_nothing_comes_or_hangs_there_are_none():
     assert weights_of(round_load(1, sequence=[event(60, leave=[{"seat": "S1"}])]), round_basis()) is None
 
 
-def test_tanks_are_told_at_both_ends_of_each_section_and_where_one_tank_feeds_after_another():
-    """60 lb, 10 US gal, from LEFT, 4 of which are all there is; then 2 go over from RIGHT."""
+def two_tanks():
+    """LEFT feeds first, then RIGHT; RIGHT alone on the taxi."""
     basis = round_basis(tanks=(tank("LEFT", 100, 50, -40), tank("RIGHT", 100, 50, 40)))
     stages = tuple(replace(basis.burn_order[0], tanks=(name,)) for name in ("LEFT", "RIGHT"))
-    basis = replace(basis, burn_order=stages, taxi_order=stages[1:])
+    return replace(basis, burn_order=stages, taxi_order=stages[1:])
+
+
+def held(leg, left, right, name=""):
+    return Held(leg, {"LEFT": F(left), "RIGHT": F(right)}, name)
+
+
+def test_without_a_sequence_tanks_are_told_at_the_phases_and_in_between():
+    """The taxi burns 1 of RIGHT, the flight 20, 4 of which LEFT has; the least at landing is 10."""
+    start = {"LEFT": q(4, "US gal"), "RIGHT": q(40, "US gal")}
+    declared = read_load(round_load(start=start, fuel={"taxi": q(6)}), two_tanks())
+
+    assert kinks_of(fuel_states(declared.fuel, prepared(two_tanks()))) == [
+        held("taxi", 4, 40, "ramp"),
+        held("taxi", 4, 39, "take-off"),
+        held("flight", 4, 39, "take-off"),
+        held("flight", 0, 39),
+        held("flight", 0, 23, "landing"),
+        held("reserve", 0, 23, "landing"),
+        held("reserve", 0, 10, "minimum at landing"),
+    ]
+
+
+def test_tanks_are_told_at_both_ends_of_each_section_and_where_one_tank_feeds_after_another():
+    """60 lb, 10 US gal, from LEFT, 4 of which are all there is; then 2 go over from RIGHT."""
+    basis = two_tanks()
     start = {"LEFT": q(4, "US gal"), "RIGHT": q(40, "US gal")}
     pumped = event(60, transfer={"from": "RIGHT", "to": "LEFT", "quantity": q(2, "US gal")})
     document = round_load(start=start, sequence=[pumped], fuel={"taxi": q(6)})
-
-    def held(leg, left, right, name=""):
-        return Held(leg, {"LEFT": F(left), "RIGHT": F(right)}, name)
 
     # The taxi burns 1 of RIGHT, the flight 20, the least at landing is 10.
     assert kinks_between(sections_of(read_load(document, basis), prepared(basis))) == [
