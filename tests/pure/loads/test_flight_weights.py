@@ -10,6 +10,7 @@ from loads.balance.checks_fuel_balance import Held
 from loads.balance.checks_whole import kinks_between, kinks_of
 from loads.balance.declared import read_load
 from loads.balance.flight_weights import FlightWeights, Moment, flight_weights
+from loads.balance.fuel import fuel_states
 from loads.balance.prepared import prepared
 from loads.balance.sections import dry_over_flight, sections_of
 from tests.pure.loads.cases.test_hoist import CRATE, FOUND
