@@ -4,7 +4,9 @@ from fractions import Fraction
 
 import pytest
 
+from loads.balance import polynomial
 from loads.balance.polynomial import Root, add, multiply, roots_between, scale, through, value
+from tests.pure.loads.test_far import of_parts
 
 F = Fraction
 FINE = F(1, 2**80)
@@ -174,3 +176,64 @@ def test_halving_goes_on_until_the_ends_are_close_and_no_further(sign):
     (root,) = told(scale(poly(-2, 0, 0, 1), sign))
 
     assert FINE / 2 < root.high - root.low <= FINE
+
+
+@pytest.mark.parametrize("sign", [1, -1])
+@pytest.mark.parametrize(("low", "high"), [(5, 10), (0, 5), (5, 5)])
+def test_a_root_at_an_end_is_told_once(low, high, sign):
+    assert told(scale(poly(-125, 0, 0, 1), sign), low, high) == [Root(F(5), F(5))]
+
+
+@pytest.mark.parametrize("sign", [1, -1])
+def test_a_touch_missed_by_less_than_a_bound_counts(sign):
+    # (x**2 - 2)**2 and a hair: the largest of its coefficients is 4, and 4 / 2**40 the bound.
+    touch = multiply(poly(-2, 0, 1), poly(-2, 0, 1))
+
+    def missed_by(hair):
+        return told(scale(add(touch, poly(F(4, 2**40) * F(hair))), sign))
+
+    (root,) = missed_by("0.99")
+    assert root.low**2 < 2 < root.high**2
+    assert missed_by("1.01") == []
+
+
+class _LookedCloser(Exception):
+    """Somebody looked for roots where floats could have told that there is none."""
+
+
+@pytest.fixture
+def closely(monkeypatch):
+    """So that a look that needs more than floats is seen."""
+
+    def looked(*_):
+        raise _LookedCloser
+
+    monkeypatch.setattr(polynomial, "_bisected", looked)
+    monkeypatch.setattr(polynomial, "_of_square", looked)
+
+
+@pytest.mark.parametrize("sign", [1, -1])
+@pytest.mark.parametrize("ends", [(F(2), F(4)), (F(-3), F(-1)), (F(0), F(1)), (F(-5, 2), F(5, 2))])
+@pytest.mark.parametrize("parts", [(5, 1, 4), (2, 7, 1, 4), (1, 6, 3, 1, 2), (3, 1, 4, 1, 5, 2)])
+def test_where_all_parts_are_of_one_sign_floats_tell_that_there_is_no_root(closely, parts, ends, sign):
+    assert roots_between(scale(of_parts(parts, ends), sign), *ends) == []
+
+    for at in range(len(parts)):
+        for other in -1, 0, F(1, 10**13):
+            near = of_parts([other if at == place else each for place, each in enumerate(parts)], ends)
+            with pytest.raises(_LookedCloser):
+                roots_between(scale(near, sign), *ends)
+
+
+def test_what_is_small_against_the_parts_of_the_sum_needs_a_closer_look(closely):
+    # x**2 - 2000 x + 10**6 and a little, about 1000: the parts of the sum are a million, so 0.001 is little.
+    ends = F(1000), F(1001)
+    square = poly(10**6, -2000, 1)
+
+    assert roots_between(add(square, poly(F(1, 100))), *ends) == []
+    with pytest.raises(_LookedCloser):
+        roots_between(add(square, poly(F(1, 2000))), *ends)
+    backwards = poly(10**6, 2000, 1)
+    assert roots_between(add(backwards, poly(F(1, 100))), F(-1001), F(-1000)) == []
+    with pytest.raises(_LookedCloser):
+        roots_between(add(backwards, poly(F(1, 2000))), F(-1001), F(-1000))
