@@ -11,6 +11,7 @@ from typing import Any
 import pytest
 
 from fleet.fuel_balance import FuelBalance
+from fleet.stations import Rail
 from fleet.tanks import OutsideTable
 from fleet.trim import Trim, TrimLine, TrimTable
 from loads.balance.aboard import Declared
@@ -20,9 +21,16 @@ from loads.balance.remedies.tables import fuel_turns, trim_turns
 from loads.balance.remedies.varying import CannotBe, Change, Varying, table_points
 from loads.balance.touching import Varied
 from loads.balance.varied_flights import Fit
-from tests.pure.loads.making import SOURCE, F
-from tests.pure.loads.remedies.rejects import Asked, aircraft, gallons, loaded, question_of
-from tests.pure.loads.remedies.roomy import stopped_by_trim_and_the_balance_of_fuel
+from tests.pure.loads.making import SOURCE, F, straight
+from tests.pure.loads.remedies.rejects import (
+    Asked,
+    a_hump_between_two_points,
+    aircraft,
+    gallons,
+    loaded,
+    question_of,
+)
+from tests.pure.loads.remedies.roomy import stopped_across, stopped_by_trim_and_the_balance_of_fuel
 
 ENDS = (F(0), F(1500))
 ZERO = (F(0),)
@@ -132,6 +140,112 @@ def test_a_difference_turns_where_it_comes_to_what_is_allowed_either_way() -> No
 def test_a_difference_by_weight_turns_by_the_density() -> None:
     # 2 + x US gal are 12 + 6 x lb.
     assert turns_of_fuel(balance(by="weight", maximum=F(30))) == {3, -7}
+
+
+def line(*points: tuple[Any, Any]) -> tuple[tuple[Fraction, Fraction], ...]:
+    return tuple((F(at), F(allowed)) for at, allowed in points)
+
+
+# What is aboard at engine start, take-off, landing and with the least fuel is 60 + x, 58 + x, 38 + x and 10.
+# By one line, 1 + aboard / 10, 2 + x comes to it at 5 / 0.9, 4.8 / 0.9, 2.8 / 0.9 and 0, and -2 - x at -9 / 1.1,
+# -8.8 / 1.1, -6.8 / 1.1 and -4. At landing nothing is aboard with -38.
+SLOPE = {F(50, 9), F(16, 3), F(28, 9), F(0), F(-90, 11), F(-8), F(-68, 11), F(-4), F(-38)}
+
+
+def test_a_difference_turns_where_it_comes_to_a_table_of_what_is_allowed() -> None:
+    # At the ends of the table 1 and 11 are allowed.
+    straight = balance(maximum=None, points=line((0, 1), (100, 11)))
+    assert turns_of_fuel(straight) == SLOPE | {-1, -3, 9, -13}
+    # Bent at 50, where 6 are allowed, and so on: there with 12, -10 and -8.
+    bent = line((0, 1), (50, 6), (100, 6))
+    assert turns_of_fuel(balance(maximum=None, points=bent)) == SLOPE | {-1, -3, 4, -8, 12, -10}
+    by_weight = tuple((6 * at, 6 * allowed) for at, allowed in bent)
+    weighed = balance(maximum=None, by="weight", points=by_weight)
+    assert turns_of_fuel(weighed) == SLOPE | {-1, -3, 4, -8, 12, -10}
+
+
+def turns_of_density(limit: FuelBalance) -> set[Fraction]:
+    """The same fuel, x thousandths denser; 12, 120 and all but 60 lb of it are burned."""
+    declared = question_of((loaded({}, at_engine_start=gallons(31, 29)), aircraft())).declared
+    loads = [
+        replace(declared, fuel=replace(declared.fuel, density=F(6) * (1 + F(one, 1000)))) for one in (1, 2, 3)
+    ]
+    ready = prepared(aircraft(fuel_balance=(limit,)))
+    found = list(fuel_turns(loads, (F(1), F(1, 1000)), Fit([F(1), F(2), F(3)]), ready, (F(-500), F(500))))
+    assert all(one.low == one.high for one in found)
+    return {one.low for one in found}
+
+
+def test_a_difference_turns_with_the_density_where_it_is_one_of_weight() -> None:
+    # 2 US gal are 15 lb at 7.5 lb/US gal; by volume they are 2 at any density.
+    assert turns_of_density(balance(by="weight", maximum=F(15))) == {250}
+    assert turns_of_density(balance(maximum=F(3))) == set()
+    # 2 are allowed with 100 / 3 US gal aboard: at landing, 60 less 132 lb, at 4.95 lb/US gal.
+    assert turns_of_density(balance(maximum=None, points=line((0, 1), (100, 4)))) == {-175}
+
+
+def test_off_the_table_of_a_tank_no_difference_is_known() -> None:
+    limit = balance()
+    asked = loaded({}, at_engine_start=gallons(31, 29)), aircraft(fuel_balance=(limit,))
+    loads = more_on_the_left(asked, (100, 200, 300))
+    assert not list(fuel_turns(loads, (F(1),), Fit([F(100), F(200), F(300)]), prepared(asked[1]), ENDS))
+
+
+def behind() -> Asked:
+    """Both tanks 20 in behind: 7,200 lb in of 360 lb, and -2,000."""
+    basis = aircraft()
+    tanks = tuple(replace(one, table=straight(120, 50)) for one in basis.tanks)
+    return loaded({"S1": 200}), replace(basis, tanks=tanks)
+
+
+def test_a_tank_turns_what_its_fuel_moves_and_where_the_other_runs_dry() -> None:
+    # A tenth more is 0.6 lb, 12 lb in where 1.2 may be. At the ramp 5,200 of 5,520, at take-off 4,960 of
+    # 5,496, at landing 2,560 of 5,256. With 10 US gal more the right tank is dry where 10 are left in all.
+    question = question_of(behind())
+    held = question.declared.fuel.tanks[0]
+
+    def changed(count: Fraction) -> Declared:
+        return taken(question.declared, [Refuel(held.tank, count / 10)])
+
+    varying = Varying(question, Change(changed, refuels=True, marks=table_points(held, F(1, 10))))
+    assert exact(varying, 0, 200) == [0, F(3200, 108), F(5360, 108), 100, 200]
+
+
+def test_the_density_turns_what_the_fuel_moves_until_it_is_burned() -> None:
+    # A thousandth more is 0.36 lb, 7.2 lb in where 0.72 may be, as long as what is burned is a weight.
+    question = question_of(behind())
+    plan = question.declared.fuel
+
+    def denser(count: Fraction) -> Declared:
+        return replace(question.declared, fuel=replace(plan, density=plan.density * (1 + count / 1000)))
+
+    varying = Varying(question, Change(denser, over=(F(1), F(1, 1000)), refuels=True))
+    assert exact(varying, 0, 500) == [0, *(F(each) / F("6.48") for each in (320, 536, 2696)), 500]
+
+
+def test_seats_on_a_rail_turn_with_their_seats_at_either_end() -> None:
+    # 200 lb at 120 in on a rail from 115 to 125 in: 1,000, 2,000 and 3,000 lb in.
+    basis = aircraft()
+    rail = Rail(F(115), F(125), (), SOURCE)
+    seats = tuple(replace(one, rail=rail) if one.id == "S3" else one for one in basis.seats)
+    varying = in_place((loaded({"S3": 200}), replace(basis, seats=seats)), 1)
+    wanted = [10 * F(2 * weight - moment, 48) for moment in (1000, 2000, 3000) for weight in STATES]
+    assert exact(varying, 0, 1500) == sorted(wanted)
+
+
+def test_a_burn_that_bends_turns_where_it_is_worst() -> None:
+    # 418 lb in too much with 27 US gal left, 80 at landing, 52 in a pound in the nose: 8.04 and 1.54 lb.
+    found = in_place(a_hump_between_two_points(), 0).turns(F(0), F(300))
+    assert any(turn.low <= 10 * F(418, 52) <= turn.high for turn in found)
+
+
+def test_across_it_turns_where_the_lateral_centre_of_gravity_comes_to_the_limit() -> None:
+    # 20 in left, with 20 lb there: with the passengers and 3 US gal more on the left -3,300 lb in, where 1.5
+    # in are allowed: of the least weight at landing, of landing, take-off and ramp; never at zero fuel.
+    document, basis = stopped_across()
+    places = tuple(replace(one, lateral_arm=F(-20)) for one in basis.places)
+    wanted = [10 * (F(3, 2) * weight - 3300) / F("18.5") for weight in (2480, 2666, 2786, 2798)]
+    assert exact(in_place((document, replace(basis, places=places)), 1), 0, 600) == wanted
 
 
 def test_a_basis_without_a_balance_turns_nowhere() -> None:
