@@ -9,7 +9,7 @@ import pytest
 from loads.balance.aboard import Declared
 from loads.balance.remedies.question import Question
 from loads.balance.remedies.reaching import MOST_TENTHS, NOT_SOUGHT, Reach, bound_of, reached
-from loads.balance.remedies.steps import Ballast, taken
+from loads.balance.remedies.steps import Ballast, Refuel, taken
 from loads.balance.remedies.varying import Change
 from tests.pure.loads.making import F
 from tests.pure.loads.remedies.rejects import Asked, aircraft, loaded, question_of, too_far_aft
@@ -18,6 +18,7 @@ from tests.pure.loads.remedies.roomy import (
     stopped_by_the_centre_of_gravity,
     stopped_by_weight,
 )
+from tests.pure.loads.round_figures import q
 
 NOSE, REAR = 0, 1
 
@@ -78,6 +79,19 @@ def test_without_time_nothing_was_sought() -> None:
     assert not NOT_SOUGHT.sought
     assert NOT_SOUGHT.count == 0
     assert NOT_SOUGHT.stopped_by is None
+
+
+def test_a_tank_that_takes_more_in_flight_than_its_table_knows_stops_it() -> None:
+    # 30 US gal less 1 for taxi, and 15 from the left: 44 of 50.
+    moved = {"from": "LEFT", "to": "RIGHT", "quantity": q(15, "US gal")}
+    document = loaded({"S1": 200}) | {"sequence": [{"after_burning": q(0), "transfer": moved}]}
+    question = question_of((document, aircraft()))
+    right = question.declared.fuel.tanks[1].tank
+
+    def fuller(count: Fraction) -> Declared:
+        return taken(question.declared, [Refuel(right, count / 10)])
+
+    assert told(reached(question, Change(fuller, refuels=True), 200)) == (60, "tank-table.RIGHT", True)
 
 
 def with_range(asked: Asked, take_off: int | None) -> Question:

@@ -6,6 +6,7 @@ from typing import Any
 
 import pytest
 
+from fleet.basis import Zone
 from loads.balance.remedies.amounts import least_ballast, least_removed
 from loads.balance.remedies.arranging import Found, arranged
 from loads.balance.remedies.fuelling import fuel_elsewhere, less_fuel
@@ -197,6 +198,29 @@ def test_ballast_of_exactly_the_room_there_is() -> None:
     assert told(least_ballast(full_of(*nearly, minimum_flying=F("2760.0")))) == "0.1 in NOSE"
     assert told(least_ballast(full_of(*nose, minimum_flying=2760, take_off=3048))) == "10 in NOSE"
     assert told(least_ballast(full_of(*nose, minimum_flying=2760, take_off=3047))) == "none"
+
+
+def test_a_zone_holds_ballast_back_though_a_place_before_it_has_no_limit() -> None:
+    # 40 lb in the rear as in `too_light`, but its floor bears 30: 10 in the nose and 30 in the rear.
+    document, basis = rejects.too_light()
+    places = tuple(replace(one, maximum=limit(None)) if one.id == "NOSE" else one for one in basis.places)
+    floor = Zone("FLOOR", "floor", ("S3", "REAR"), limit(30))
+    question = question_of((document, replace(basis, places=places, zones=(floor,))))
+    assert told(least_ballast(question)) == "10 in NOSE, 30 in REAR"
+    # Nothing binds where the limit of a zone is shown to be none.
+    free = question_of(
+        (document, replace(basis, places=places, zones=(replace(floor, maximum=limit(None)),)))
+    )
+    assert told(least_ballast(free)) == "40 in REAR"
+
+
+def test_people_in_a_zone_count_for_it() -> None:
+    # 190 lb in the rear and 200 in the seat before it, where the floor bears 370: 20 lb too much.
+    basis = aircraft()
+    floor = Zone("FLOOR", "floor", ("S1", "REAR"), limit(370))
+    question = question_of((loaded({"S1": 200}, ("REAR", 190), ("NOSE", 60)), replace(basis, zones=(floor,))))
+    assert told(shifted(question)) == "20 of /items/0 to NOSE"
+    assert told(least_removed(question)) == "20 of /items/0"
 
 
 def test_fuel_is_left_out_down_to_the_least_at_landing_and_no_further() -> None:

@@ -9,7 +9,7 @@ from typing import Any
 
 import pytest
 
-from fleet.basis import Basis, Phase
+from fleet.basis import Basis, Phase, TankTable
 from loads.balance.remedies.points import Spot, rows_inside, spots_of
 from loads.balance.remedies.question import Question
 from loads.balance.remedies.reach import Ways, flown, shapes_on, ways_of
@@ -17,6 +17,7 @@ from tests.pure.loads.making import F, envelope
 from tests.pure.loads.remedies.rejects import (
     NARROW,
     Asked,
+    a_hump_between_two_points,
     a_notch_between,
     aircraft,
     gallons,
@@ -47,6 +48,16 @@ def test_across_the_burn_decides_where_it_is_worst() -> None:
     along, across = ways(too_far_left())
     assert along == ((F(-2800), F(6800)),)  # 2,400 lb at zero fuel, -2,000 lb in, limits of 4,800 either way
     assert across == ((F(8000) - F(3, 2) * 2520, F(3, 2) * 2400 + 2000),)
+
+
+def test_where_the_burn_bends_its_worst_point_decides() -> None:
+    # With v US gal 120 v - 2 v**2 and 4,000 besides, where 5,040 + 12 v are all: worst with 27, by 418.
+    document, basis = a_hump_between_two_points()
+    assert ways((document, basis)).along == ((F(-9040), F(-418)),)
+    # The same forward of 100 in: -120 v + 2 v**2, the forward limit -5,040 - 12 v: nearest with 27, too.
+    table = TankTable("volume", "arm", "arm", None, ((F(0), F(80)), (F(60), F(100))))
+    tanks = (replace(basis.tanks[0], table=table),)
+    assert ways((document, replace(basis, tanks=tanks))).along == ((F(-9040 + 1458), F(1040)),)
 
 
 def test_a_notch_leaves_a_way_to_either_side() -> None:
