@@ -6,7 +6,8 @@ from dataclasses import replace
 
 import pytest
 
-from tests.pure.loads.making import place, seat
+from fleet.basis import Zone
+from tests.pure.loads.making import limit, place, seat
 from tests.pure.loads.round_figures import box, flown, q, round_basis, round_load
 
 ALONE = "no single move does it alone."
@@ -130,3 +131,30 @@ def test_what_a_place_holds_already_counts():
     assert advice(document, basis).startswith("Move at least 85.3 lb of cargo from door to p0")
     document["items"][1]["weight"] = q(15)
     assert not advice(document, basis).startswith("Move")
+
+
+@pytest.mark.parametrize(
+    ("members", "most", "named"),
+    [
+        (("P0", "P1"), 105, True),
+        (("P0", "P1"), "104.9", False),
+        (("P0", "P2"), 85, True),
+        (("P0", "P2"), "84.9", False),
+        (("P1",), 1, True),  # where the item goes is not in it
+        (("DOOR", "P0"), 100, True),  # nor is anything added to it by a move within it
+        (("P0", "P1"), None, True),
+        (("P0", "P1"), "not entered", False),
+    ],
+)
+def test_a_zone_takes_no_more_than_its_limit(members, most, named):
+    """20 lb lie in P1, which takes no more, at the aft limit: 85 lb are to be moved, all the same."""
+    maximum = None if most == "not entered" else limit(most)
+    zone = Zone("FRONT", "front", members, maximum)
+    basis = with_places(130, "100.5", 139, zones=(Zone("OTHER", "other", ("P2",), limit(900)), zone))
+    full = tuple(place("P1", "100.5", 20) if one.id == "P1" else one for one in basis.places)
+    basis = replace(basis, places=full)
+    document = crate()
+    item = {"kind": "baggage", "what": "bag", "place": "P1", "weight": q(20), "how": "weighed"}
+    document["items"].append(item)
+
+    assert advice(document, basis).startswith("Move at least 85 lb of cargo from door to p0") is named

@@ -54,6 +54,13 @@ def test_the_margin_to_a_leaning_right_side_may_be_least_between_the_ends_too():
     assert told(found) == ((0, 300), (-200, 10800), True)
 
 
+def test_a_margin_may_be_least_in_between_however_little_it_bends():
+    """The arm 1 / (2 W) against a side at 200 - W / 10: least at W = sqrt(5), 2 * sqrt(1/20) - 200."""
+    found = worst_outside(piece(10, 1, u0=1, unit=2), ((10, 0, -2000, 1, *WIDE),))
+
+    assert told(found) == ((0, 5), (-200, F(1, 5)), False)
+
+
 @pytest.mark.parametrize(("top", "bottom", "weight"), [(16, 10, 16), (30, 18, 18)])
 def test_where_that_weight_is_beyond_an_end_the_nearer_end_is_the_worst(top, bottom, weight):
     found = worst_outside(piece(top, bottom, u0=900), ((1, 0, -200, 3, *WIDE),))
@@ -151,3 +158,14 @@ def test_a_lens_used_up_at_every_weight_is_no_piece():
     found = worst_outside(piece(50, 10, u1=2), (narrower, FAR))
 
     assert (found.weight.whole, found.margin.whole, found.sides) == (50, -38, FAR)
+
+
+def test_a_piece_without_any_width_is_measured_to_where_no_other_is_left():
+    """At 5 in: a piece from 40 in to 40 in at 100 lb and used up below, one from 10 to 9 in nowhere there."""
+    just, nowhere = (1, 0, -40, 0, -10, 0, 300, 1), (1, 0, -10, 0, -1, 0, 9, 0)
+
+    found = worst_outside(piece(100, 50, u1=5), (just, nowhere))
+
+    assert (found.weight.whole, found.margin.whole, found.sides) == (100, -35, just)
+    below = worst_outside(piece(99, 50, u1=5), (just, nowhere))
+    assert (below.weight.whole, below.margin.whole, below.sides) == (99, -5, nowhere)
