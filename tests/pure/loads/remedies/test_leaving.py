@@ -13,8 +13,8 @@ import pytest
 from fleet.basis import Basis
 from loads.balance.remedies.leaving import fewest_left, rows_of
 from loads.balance.remedies.question import Question
-from tests.pure.loads.making import seat
-from tests.pure.loads.remedies.rejects import INFANT, aircraft, loaded, question_of
+from tests.pure.loads.making import F, envelope, seat
+from tests.pure.loads.remedies.rejects import INFANT, aircraft, gallons, loaded, question_of
 from tests.pure.loads.round_figures import box, q
 
 FOUR = {"S1": 170, "S2": 150, "S3": 180, "S4": 200}
@@ -79,6 +79,18 @@ def test_a_row_of_which_one_as_heavy_would_not_do_is_left_out() -> None:
     assert told(question_of((loaded(people, ("REAR", 20)), aircraft()))) == (1, ("2",), 150, 2968, True)
     people = {"S1": 200, "S3": 150, "S4": 200}
     assert told(question_of((loaded(people, ("REAR", 20)), aircraft()))) == (1, ("2",), 150, 2968, True)
+
+
+def test_where_of_two_as_heavy_in_one_row_one_would_not_do_the_number_alone_is_told() -> None:
+    # 10 US gal more on the left: -3,000 lb in; without the 180 lb on the right of row 2 it is -4,800, where
+    # 1.5 in of 2,440 lb with the least fuel at landing are 3,660. Without those on the left it is within.
+    across = envelope((F(-3, 2), 1000), (F(-3, 2), 5000), (F(3, 2), 5000), (F(3, 2), 1000), axis="lateral")
+    basis = replace(wide(2850), envelopes=(*wide(2850).envelopes, across))
+    document = loaded({"S3": 180, "S4": 180}, at_engine_start=gallons(40, 30), minimum_at_landing=q(288))
+    assert told(question_of((document, basis))) == (1, (), 0, 2788, True)
+    # With 181 lb on the left it is told how heavy.
+    document["passengers"][0]["weight"] = q(181)
+    assert told(question_of((document, basis))) == (1, ("2",), 181, 2788, True)
 
 
 def test_nobody_with_an_infant_and_nobody_whom_an_event_names_is_asked() -> None:
