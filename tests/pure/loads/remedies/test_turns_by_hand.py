@@ -164,6 +164,19 @@ def test_a_difference_turns_where_it_comes_to_a_table_of_what_is_allowed() -> No
     assert turns_of_fuel(weighed) == SLOPE | {-1, -3, 4, -8, 12, -10}
 
 
+def test_a_transfer_turns_a_difference_before_and_after_it() -> None:
+    # 2 US gal from left to right leave 2 + x before it and -2 + x after it; 4 are allowed.
+    limit = balance()
+    moved = {"from": "LEFT", "to": "RIGHT", "quantity": {"value": 2, "unit": "US gal"}}
+    event = {"after_burning": {"value": 30, "unit": "lb"}, "transfer": moved}
+    document = loaded({}, at_engine_start=gallons(31, 29)) | {"sequence": [event]}
+    basis = aircraft(fuel_balance=(limit,))
+    fit = Fit([F(1), F(2), F(3)])
+    loads = more_on_the_left((document, basis), (1, 2, 3))
+    found = list(fuel_turns(loads, (F(1),), fit, prepared(basis), (F(-8), F(8))))
+    assert {one.low for one in found} == {2, -6, 6, -2}
+
+
 def turns_of_density(limit: FuelBalance) -> set[Fraction]:
     """The same fuel, x thousandths denser; 12, 120 and all but 60 lb of it are burned."""
     declared = question_of((loaded({}, at_engine_start=gallons(31, 29)), aircraft())).declared
