@@ -7,8 +7,11 @@ from dataclasses import replace
 import pytest
 
 from fleet.basis import Zone
-from tests.pure.loads.making import limit, place, seat
-from tests.pure.loads.round_figures import box, flown, q, round_basis, round_load
+from loads.balance.assess import assess
+from loads.balance.declared import read_load
+from tests.pure.loads.hand import by_cg
+from tests.pure.loads.making import F, limit, place, seat
+from tests.pure.loads.round_figures import EMPTY, box, flown, q, round_basis, round_load
 
 ALONE = "no single move does it alone."
 
@@ -119,18 +122,17 @@ def test_a_place_takes_no_more_than_its_limit(most, named):
     assert found.startswith("Move at least 85 lb") is named
 
 
-def test_what_a_place_holds_already_counts():
-    basis = with_places(130)
-    basis = replace(basis, places=(basis.places[0], place("P0", 130, 100)))
+@pytest.mark.parametrize(("most", "named"), [("36.1", True), (36, False)])
+def test_what_a_place_holds_already_counts(most, named):
+    """15 lb in P0 at 100 in are 7.5 lb in less: 842.5 at 40 in are 21.1 lb more there."""
+    basis = with_places(100)
+    basis = replace(basis, places=(basis.places[0], place("P0", 100, most)))
     document = crate()
-    document["items"].append(
-        {"kind": "baggage", "what": "bag", "place": "P0", "weight": q("0.1"), "how": "weighed"}
-    )
+    bag = {"kind": "baggage", "what": "bag", "place": "P0", "weight": q(15), "how": "weighed"}
+    document["items"].append(bag)
 
-    # 0.1 lb at 130 in are 2.95 lb in more: 852.95, 85.3 lb.
-    assert advice(document, basis).startswith("Move at least 85.3 lb of cargo from door to p0")
-    document["items"][1]["weight"] = q(15)
-    assert not advice(document, basis).startswith("Move")
+    found = advice(document, basis)
+    assert found.startswith("Move at least 21.1 lb of cargo from door to p0") is named
 
 
 @pytest.mark.parametrize(
@@ -158,3 +160,79 @@ def test_a_zone_takes_no_more_than_its_limit(members, most, named):
     document["items"].append(item)
 
     assert advice(document, basis).startswith("Move at least 85 lb of cargo from door to p0") is named
+
+
+@pytest.mark.parametrize(
+    ("start", "end", "named"),
+    [(0, 20, False), (0, 13, True), (0, -20, True), (20, 20, True), (12, 14, False)],
+)
+@pytest.mark.parametrize("limit_of", ["envelope", "by CG"])
+def test_a_move_must_leave_the_load_within_its_lateral_limits(start, end, named, limit_of):
+    """From 1 in left to 1/2 in right at 2,300 lb without fuel: 85 lb at 20 in are 1,700 lb in, 0.74 in, at 13 in
+    0.48. From 20 in to 20 in nothing goes across (there up to 1 in right, for the 100 lb at 0.87 in). What
+    lies at 0.52 in already goes no farther.
+    """
+    basis = with_places(130)
+    across = ("-1", F(1, 2)) if start != 20 else (-1, 1)
+    places = place("DOOR", 140, None, start), place("P0", 130, None, end)
+    if limit_of == "envelope":
+        more = {"envelopes": (*basis.envelopes, box(*across, axis="lateral"))}
+    else:
+        corners = (80, across[0]), (80, across[1]), (120, across[1]), (120, across[0])
+        more = {"lateral_by_cg": (by_cg(*corners),)}
+
+    found = advice(crate(), replace(basis, places=places, **more))
+    assert found.startswith("Move at least 85 lb of cargo from door to p0") is named
+
+
+def test_what_hangs_outside_is_not_moved_and_nothing_is_moved_there_or_where_there_is_no_place():
+    basis = with_places(130)
+    door, hold = basis.places
+    alone = f"Change the moment by at least 850 lb in, forward; {ALONE}"
+
+    assert advice(crate(), replace(basis, places=(replace(door, external=True), hold))) == alone
+    assert advice(crate(), replace(basis, places=(door, replace(hold, external=True)))) == alone
+    without = replace(basis.configurations[0], places=("DOOR",))
+    assert advice(crate(), replace(basis, configurations=(without,))) == alone
+
+
+@pytest.mark.parametrize(("serves", "named"), [("passenger", True), ("either", True), ("crew", False)])
+def test_a_passenger_is_reseated_where_the_seat_serves_one(serves, named):
+    basis = round_basis(box(80, "99.5"))
+    seats = (basis.seats[0], seat("S1", 110), seat("S2", 100, serves=serves))
+    one = replace(basis.configurations[0], seats=("P", "S1", "S2"))
+
+    found = advice(round_load(1), replace(basis, seats=seats, configurations=(one,)))
+    assert found.startswith("Reseat the passenger from s1 to s2") is named
+
+
+def test_a_passenger_is_not_reseated_where_somebody_sits():
+    basis = round_basis(box(80, "99.5"))
+    seats = seat("P", 90), seat("S1", 110)
+    one = replace(basis.configurations[0], seats=("P", "S1"))
+
+    assert advice(round_load(1), replace(basis, seats=seats, configurations=(one,))).endswith(ALONE)
+
+
+def test_a_restraint_goes_with_its_person():
+    """220 lb at 110 in: 278,200 lb in at 2,780 lb, 1,590 too many; 7.3 in at 220 lb are 1,606."""
+    basis = round_basis(box(80, "99.5"))
+    seats = (basis.seats[0], seat("S1", 110), seat("S2", "102.7"))
+    one = replace(basis.configurations[0], seats=("P", "S1", "S2"))
+    basis = replace(basis, seats=seats, configurations=(one,))
+    declared = read_load(round_load(1), basis)
+    people = (replace(declared.passengers[0], restraint=F(20)),)
+
+    found = assess(replace(declared, passengers=people), basis, EMPTY).check("cg.take-off").what_next
+    assert found == "Reseat the passenger from s1 to s2: a moment of at least 1590 lb in, forward."
+
+
+def test_the_least_of_moments_and_of_ways_is_enough():
+    """At 226,000 lb in and 2,300 lb, half a lb in too far forward; from 80 to 80.5 in that is one pound."""
+    basis = with_places(80, "80.5", forward=F(452001, 4600), aft=120)
+    last = replace(basis, places=basis.places[1:], configurations=(_without_door(basis),))
+
+    result = flown(crate(where="P0"), last)
+    assert result.check("cg.zero-fuel").what_next == (
+        "Move at least 1 lb of cargo from p0 to p1: a moment of at least 0.5 lb in, aft."
+    )
