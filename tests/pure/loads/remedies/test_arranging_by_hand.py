@@ -7,6 +7,7 @@ from typing import Any
 import pytest
 
 from fleet.basis import Zone
+from loads.balance.events import Event, Leaving
 from loads.balance.footing import Contact, Rigging
 from loads.balance.remedies.arranging import arranged, can_be_parted, is_movable, table_of, tenths_up
 from loads.balance.remedies.program import INFINITE, Program
@@ -137,6 +138,62 @@ def test_a_zone_counts_its_seats_and_places_together() -> None:
     assert last == row(
         {1: -150, 2: -150, 3: 180, 4: 180, forward: F("0.1"), aft: F("-0.1")}, high=500 - 150 - 10
     )
+
+
+def test_what_an_event_names_hangs_outside_or_is_not_aboard_stays_where_it_is() -> None:
+    document = loaded({"S1": 150}, ("REAR", 20), ("NOSE", 10), ("REAR", 30))
+    question = question_of((document, aircraft()))
+    ways = ways_of(question.result, question.ready)
+    plain = question.declared
+
+    def moving() -> list[tuple[str, str]]:
+        found = table_of(question, ways, people=False, items=True)
+        return [(item.pointer, place.id) for item, place, _ in found.moves.values()]
+
+    every = [("/items/0", "NOSE"), ("/items/1", "REAR"), ("/items/2", "NOSE")]
+    assert moving() == every
+    event = Event(1, "flight", F(5), "/sequence/0", leaving=(Leaving("/items/0"),))
+    question.declared = replace(plain, sequence=(event,))
+    assert moving() == every[1:]
+    for changes in (
+        {"removed": True},
+        {"weight": None},
+        {"place": replace(plain.items[0].place, external=True)},
+    ):
+        changed = replace(plain.items[0], **changes)
+        question.declared = replace(plain, items=(changed, *plain.items[1:]))
+        assert moving() == every[1:]
+
+
+def test_nothing_is_moved_to_where_nothing_may_lie() -> None:
+    document = loaded({"S1": 150}, ("REAR", 20))
+    for changes in ({"maximum": None}, {"external": True}):
+        basis = aircraft()
+        places = tuple(replace(one, **changes) if one.id == "NOSE" else one for one in basis.places)
+        found = table(question_of((document, replace(basis, places=places))), people=False, items=True)
+        assert found.moves == {}
+    basis = aircraft()
+    (own,) = basis.configurations
+    short = replace(basis, configurations=(replace(own, places=("REAR",)),))
+    assert table(question_of((document, short)), people=False, items=True).moves == {}
+
+
+def test_a_line_that_may_go_to_two_places_goes_there_with_no_more_than_all_of_it() -> None:
+    basis = aircraft()
+    wing = replace(basis.places[0], id="WING", name="wing", arm=F(110), lateral_arm=F(-30))
+    (own,) = basis.configurations
+    known = replace(own, places=(*own.places, "WING"))
+    basis = replace(basis, places=(*basis.places, wing), configurations=(known,))
+    question = question_of((loaded({"S1": 150}, ("REAR", 20)), basis))
+    found = table_of(question, Ways(None, None), people=False, items=True)
+    assert [(place.id, each) for _, place, each in found.moves.values()] == [("NOSE", 1), ("WING", 3)]
+    assert found.along == {1: -10, 3: -4}
+    assert found.across == {1: 0, 3: -3}
+    assert rows_of(found.program)[:3] == [
+        row({1: 1, 0: -200}, high=0),
+        row({3: 1, 2: -200}, high=0),
+        row({1: F(1, 200), 3: F(1, 200)}, high=1),
+    ]
 
 
 @pytest.mark.parametrize(

@@ -164,6 +164,16 @@ def test_a_difference_turns_where_it_comes_to_a_table_of_what_is_allowed() -> No
     assert turns_of_fuel(weighed) == SLOPE | {-1, -3, 4, -8, 12, -10}
 
 
+def test_fuel_that_cannot_be_used_counts_for_the_difference() -> None:
+    # 3 US gal trapped on the left and 1 on the right: 4 + x, and all that is aboard and usable as before.
+    document = loaded({}, at_engine_start=gallons(31, 29))
+    document["fuel"]["not_usable"] = gallons(3, 1)
+    basis = aircraft(fuel_balance=(balance(maximum=F(5)),))
+    loads = more_on_the_left((document, basis), (1, 2, 3))
+    found = list(fuel_turns(loads, (F(1),), Fit([F(1), F(2), F(3)]), prepared(basis), (F(-15), F(15))))
+    assert {one.low for one in found} == {1, -9}
+
+
 def test_a_transfer_turns_a_difference_before_and_after_it() -> None:
     # 2 US gal from left to right leave 2 + x before it and -2 + x after it; 4 are allowed.
     limit = balance()
