@@ -7,6 +7,7 @@ from typing import Any
 import pytest
 
 from fleet.basis import Zone
+from loads.balance.events import Event, Leaving
 from loads.balance.remedies.amounts import least_ballast, least_removed
 from loads.balance.remedies.arranging import Found, arranged
 from loads.balance.remedies.fuelling import fuel_elsewhere, less_fuel
@@ -188,6 +189,40 @@ def test_ballast_goes_where_there_is_room_and_a_limit_was_entered() -> None:
         places = tuple(replace(one, external=one.id == name) for one in aircraft(light).places)
         question = question_of((loaded({"S1": 200}), replace(outside, places=places)))
         assert told(least_ballast(question)) == f"10 in {other}"
+
+
+def test_what_an_event_names_does_not_stay_behind() -> None:
+    question = full_of(line("REAR", q(60)), line("NOSE", q(20)), take_off=2798)  # 30 lb too much
+    assert told(least_removed(question)) == "30 of /items/0"
+    event = Event(1, "flight", F(5), "/sequence/0", leaving=(Leaving("/items/0", F(5)),))
+    question.declared = replace(question.declared, sequence=(event,))
+    assert told(least_removed(question)) == "none"
+    named = replace(event, leaving=(Leaving("/items/1"),))
+    question.declared = replace(question.declared, sequence=(named,))
+    assert told(least_removed(question)) == "30 of /items/0"
+    both = replace(event, leaving=(Leaving("/items/0"), Leaving("/items/1")))
+    question.declared = replace(question.declared, sequence=(both,))
+    assert least_removed(question) is None
+
+
+def test_no_ballast_goes_where_the_configuration_has_no_place() -> None:
+    basis = aircraft({"minimum_flying": 2470})
+    (own,) = basis.configurations
+    for name in ("NOSE", "REAR"):
+        known = replace(basis, configurations=(replace(own, places=(name,)),))
+        assert told(least_ballast(question_of((loaded({"S1": 200}), known)))) == f"10 in {name}"
+    nowhere = replace(basis, configurations=(replace(own, places=()),))
+    assert least_ballast(question_of((loaded({"S1": 200}), nowhere))) is None
+
+
+def test_a_limit_of_the_flight_bounds_the_ballast_as_a_place_does() -> None:
+    # 40 lb too little at landing, and a place without a limit; 2,748 lb at take-off may be 2,788 and no less.
+    for allowed, wanted in ((2788, "40 in NOSE"), (F("2787.9"), "none")):
+        basis = aircraft({"minimum_flying": 2500, "take_off": allowed})
+        (nose, rear), (own,) = basis.places, basis.configurations
+        places = (replace(nose, maximum=limit(None)), rear)
+        known = replace(basis, places=places, configurations=(replace(own, places=("NOSE",)),))
+        assert told(least_ballast(question_of((loaded({"S1": 200}), known)))) == wanted
 
 
 def test_ballast_of_exactly_the_room_there_is() -> None:
