@@ -168,9 +168,9 @@ def test_a_zone_takes_no_more_than_its_limit(members, most, named):
 )
 @pytest.mark.parametrize("limit_of", ["envelope", "by CG"])
 def test_a_move_must_leave_the_load_within_its_lateral_limits(start, end, named, limit_of):
-    """From 1 in left to 1/2 in right at 2,300 lb without fuel: 85 lb at 20 in are 1,700 lb in, 0.74 in;
-    at 13 in 0.48. From 20 in to 20 in nothing goes across (there up to 1 in right, for the 100 lb at 0.87 in). What
-    lies at 0.52 in already goes no farther.
+    """From 1 in left to 1/2 in right at 2,300 lb without fuel: 85 lb at 20 in are 1,700 lb in, 0.74 in; at
+    13 in 0.48. From 20 in to 20 in nothing goes across; there up to 1 in right, for the 100 lb at 0.87 in.
+    What lies at 0.52 in already goes no farther.
     """
     basis = with_places(130)
     across = ("-1", F(1, 2)) if start != 20 else (-1, 1)

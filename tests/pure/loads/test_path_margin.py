@@ -214,3 +214,88 @@ def test_beyond_is_worse_than_outside_and_the_farthest_of_all_is_named():
 def test_a_path_without_a_stretch_is_refused():
     with pytest.raises(ValueError, match=r"^a path without a stretch has no margin$"):
         least_margin([], BOX)
+
+
+def in_units(points, moment, ends, bend, *, lengths, weights, plane="arm"):
+    """The worst point of one stretch, everything told in units so many of which are the plain ones."""
+    across = lengths if plane == "arm" else lengths * weights
+    limits = shape(*((F(x) * across, F(y) * weights) for x, y in points), plane=plane)
+    start, end = (Knot(F(w) * weights, F(moment(F(w))) * lengths * weights, F(0)) for w in ends)
+    return worst_of(limits, Stretch("flight", ("LEFT",), start, end, F(bend) * lengths / weights))
+
+
+LEANS = (15, 50), (10, 100), (40, 100), (40, 50)
+MIRROR = (-40, 50), (-40, 100), (-10, 100), (-15, 50)
+STEPS = (0, 10), (0, 30), (4, 30), (4, 20), (8, 20), (8, 10)
+FORKS = (0, 10), (0, 30), (3, 30), (3, 20), (6, 20), (6, 30), (9, 30), (9, 10)
+WEDGE = (500, 50), (1000, 100), (3000, 100), (1000, 50)
+
+
+@pytest.mark.parametrize("weights", [F(1, 7), F(13, 3), F(1000)])
+@pytest.mark.parametrize("lengths", [F(3, 11), F(25)])
+@pytest.mark.parametrize(
+    "path",
+    [
+        (LEANS, lambda w: 490 + 8 * w, (90, 60), 0),  # a dip between the ends
+        (LEANS, lambda w: 480 + 8 * w, (90, 60), 0),  # one at an irrational weight
+        (LEANS, lambda w: 490 + 8 * w, (90, 75), 0),
+        (LEANS, lambda w: 490 + 8 * w, (65, 60), 0),
+        (LEANS, lambda w: 490 + 5 * w, (90, 60), 0),  # outside
+        (MIRROR, lambda w: -490 - 8 * w, (90, 60), 0),
+        (MIRROR, lambda w: -10 * w, (90, 60), 0),
+        (LEANS, lambda w: 10 * w, (100, 100 - F(1, 3)), 0),  # on the edge at the top
+        (LEANS, lambda w: 40 * w, (90, 60), 0),  # along the aft edge
+        (STEPS, lambda w: F(75, 2) + (25 - w) * F(21, 4), (25, 15), 0),
+        (STEPS, lambda w: 2 * w, (30, 10), 0),
+        (STEPS, lambda w: 5 * w, (F(45, 2), 15), 0),  # outside in the narrower part only
+        (STEPS, lambda w: 1600 - 60 * w, (F(80, 3), 12), F(1, 2)),
+        (FORKS, lambda w: 28 + (28 - w) * F(148, 6), (28, 22), 0),
+        (FORKS, lambda w: 7 * w, (28, 22), 0),  # in the second of two pieces
+    ],
+)
+def test_in_other_units_the_worst_point_is_the_same(path, lengths, weights):
+    plain = in_units(*path, lengths=F(1), weights=F(1))
+
+    found = in_units(*path, lengths=lengths, weights=weights)
+
+    def times(number, by):
+        return Surd(number.whole * by, number.factor * by, number.under)
+
+    assert same(found.weight, times(plain.weight, weights))
+    assert same(found.margin, times(plain.margin, lengths))
+    assert (found.aft, found.floor) == (plain.aft, plain.floor * weights)
+
+
+@pytest.mark.parametrize("weights", [F(1, 7), F(13, 3)])
+@pytest.mark.parametrize(
+    ("moment", "ends"),
+    [
+        (lambda w: 20 * w, (90, 60)),
+        (lambda w: 12 * w, (90, 60)),
+        (lambda w: 10 * w + 7, (90, 60)),
+        (lambda w: 40 * w - 1003, (F(271, 3), 60)),
+        (lambda w: 40 * w - 999, (90, 60)),
+        (lambda w: 9 * w, (90, 60)),
+    ],
+)
+def test_in_other_units_edges_straight_in_moment_are_the_same(moment, ends, weights):
+    plain = in_units(WEDGE, moment, ends, 0, lengths=F(1), weights=F(1), plane="moment")
+
+    found = in_units(WEDGE, moment, ends, 0, lengths=F(3, 11), weights=weights, plane="moment")
+
+    assert (found.weight.whole, found.margin.whole) == (
+        plain.weight.whole * weights,
+        plain.margin.whole * F(3, 11),
+    )
+    assert found.aft is plain.aft
+    # By hand: the margin to 10 W, and to 40 W - 1000, over the weight, at both ends.
+    margins = [min(F(moment(F(w))) / w - 10, 40 - (F(moment(F(w))) + 1000) / w) for w in map(F, ends)]
+    assert plain.margin.whole == min(margins)
+
+
+@pytest.mark.parametrize("weights", [F(1, 7), F(13, 3)])
+@pytest.mark.parametrize(("ends", "weight", "by"), [((40, 25), 40, 10), ((25, 5), 5, 5), ((36, 5), 36, 6)])
+def test_in_other_units_a_path_is_beyond_by_the_same(ends, weight, by, weights):
+    found = in_units(STEPS, lambda w: 2 * w, ends, 0, lengths=F(3, 11), weights=weights)
+
+    assert (found.weight, found.by) == (weight * weights, by * weights)

@@ -217,3 +217,60 @@ def test_roots_that_cannot_be_told_apart_become_one():
     assert each_once(found) == [Root(F(1), F(4)), Root(F(5), F(5))]
     assert each_once([]) == []
     assert each_once([Root(F(1), F(6)), Root(F(2), F(3))]) == [Root(F(1), F(6))]
+
+
+@pytest.mark.parametrize("times", [1, 3])
+def test_a_stretch_touches_a_side_that_is_straight_in_moment_at_each_end(times):
+    # From 90 to 60 lb, the moment 20 W + 30 x, against 40 W - 1000: 200 lb in at 60 lb, 800 at 90 lb.
+    wedge = shape((500, 50), (1000, 100), (3000, 100), (1000, 50), plane="moment")
+    part = stretch(poly(60), poly(90), poly(0, 30 * times), poly(20 * times), over=poly(times))
+
+    touched(touching_envelope(part, wedge, "longitudinal", (F(0), F(50))), F(20, 3), F(80, 3))
+    # Against 10 W it is the other way: -600 lb in at 60 lb, -900 at 90 lb.
+    touched(touching_envelope(part, wedge, "longitudinal", (F(-50), F(0))), -20, -30)
+
+
+def touches(part, at):
+    return any(root.low <= at <= root.high for root in touching_envelope(part, BOX, "longitudinal", BROAD))
+
+
+BROAD = (F(0), F(100))
+
+
+def test_a_touch_beyond_the_end_of_a_side_by_a_millionth_of_its_ends_still_counts():
+    """The sides reach from 50 to 100 lb: above, 50 + 100 + 1 millionths of a lb. Below 50 lb it is twice 50
+    and 1, for a point there comes no farther up. 1500 + 10 x lb in at 20 in; 750 + 10 x.
+    """
+    for beyond, counts in ((F("0.0001505"), True), (F("0.0001515"), False)):
+        part = point(poly(100 + beyond), poly(1500, 10))
+        assert touches(part, (2000 + 20 * beyond - 1500) / 10) is counts
+    for beyond, counts in ((F("0.0001005"), True), (F("0.0001015"), False)):
+        part = point(poly(50 - beyond), poly(750, 10))
+        assert touches(part, (1000 - 20 * beyond - 750) / 10) is counts
+
+
+def test_a_stretch_whose_lateral_moment_varies_touches_a_limit_of_moments_at_each_end():
+    # 15 in throughout, x + W lb in right: 250 lb in at 90 lb where x is 160, at 60 lb where it is 190.
+    part = stretch(poly(60), poly(90), poly(0), poly(15), lateral=(poly(0, 1), poly(1)))
+
+    touched(touching_across(part, by_cg("moment", 100), (F(1), F(300))), 160, 190)
+
+
+@pytest.mark.parametrize("over", [1, 5])
+def test_a_stretch_touches_the_left_corner_of_a_lateral_limit_too(over):
+    # As before, x lb in left: 2 in at 67.5 lb, where it is at 20 in, are 135; at 90 lb, at 15 in, 180.
+    part = stretch(poly(60), poly(90), poly(1350 * over), poly(0), lateral=(poly(0, -1),), over=poly(over))
+
+    touched(touching_across(part, by_cg(), (F(1), F(300))), 135, 180)
+
+
+@pytest.mark.parametrize("over", [1, 5])
+def test_a_bent_stretch_touches_a_corner_of_a_lateral_limit_each_time_it_passes(over):
+    # The arm W / 10 + 600 / W + 4 is 20 in at 60 and at 100 lb, less in between, more at 50 and at 120 lb.
+    # Across x + W lb in, 3 in right at 60 lb where x is 120, at 100 lb where it is 200.
+    moment = poly(600 * over), poly(4 * over), poly(F(over, 10))
+    part = stretch(poly(50), poly(120), *moment, lateral=(poly(0, 1), poly(1)), over=poly(over))
+
+    touched(touching_across(part, by_cg(), (F(100), F(250))), 120, 200)
+    # 2 in left: x is -180 and -300.
+    touched(touching_across(part, by_cg(), (F(-350), F(-150))), -180, -300)
