@@ -93,6 +93,15 @@ def test_where_of_two_as_heavy_in_one_row_one_would_not_do_the_number_alone_is_t
     assert told(question_of((document, basis))) == (1, ("2",), 181, 2788, True)
 
 
+def test_when_the_time_runs_out_on_the_way_nobody_is_told() -> None:
+    question = allowed(2868)  # two of row 2
+    ticks = iter(range(10_000))
+    question.clock = lambda: float(next(ticks))
+    for seconds in (0, 1, 3, 9, 12):
+        question.until = question.clock() + seconds
+        assert told(question) is None
+
+
 def test_nobody_with_an_infant_and_nobody_whom_an_event_names_is_asked() -> None:
     document = loaded(FOUR)
     document["passengers"][3] |= INFANT
