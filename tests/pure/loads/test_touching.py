@@ -274,3 +274,32 @@ def test_a_bent_stretch_touches_a_corner_of_a_lateral_limit_each_time_it_passes(
     touched(touching_across(part, by_cg(), (F(100), F(250))), 120, 200)
     # 2 in left: x is -180 and -300.
     touched(touching_across(part, by_cg(), (F(-350), F(-150))), -180, -300)
+
+
+def test_levels_that_are_fractions_are_touched_where_they_are():
+    part = point(poly(60, 1), poly(900, 30))
+    box = shape((10, "50.5"), (10, "100.25"), (20, "100.25"), (20, "50.5"))
+
+    touched(touching_envelope(part, box, "longitudinal", (F(0), F(50))), 30, F(161, 4))
+
+
+STEPPED = shape((0, 10), (0, 30), (4, 30), (4, 20), (8, 20), (8, 10))
+
+
+def test_a_part_at_the_weights_of_the_upper_sides_touches_them():
+    touched(touching_envelope(point(poly(25), poly(0, 1)), STEPPED, "longitudinal", (F(1), F(300))), 100)
+    touched(touching_envelope(point(poly(15), poly(0, 1)), STEPPED, "longitudinal", (F(1), F(300))), 120)
+
+
+def test_a_stretch_past_a_step_touches_both_of_its_corners():
+    # x lb in throughout, from 25 to 15 lb: 4 in at 25 lb, 8 in at 15 lb, 4 and 8 in at 20 lb.
+    part = stretch(poly(15), poly(25), poly(0, 1), poly(0))
+
+    touched(touching_envelope(part, STEPPED, "longitudinal", (F(10), F(200))), 80, 100, 120, 160)
+
+
+def test_a_stretch_touches_the_corner_a_slanted_side_begins_at():
+    # x lb in throughout, from 60 to 40 lb: 15 and 40 in at 50 lb, 14 in at 60 lb.
+    part = stretch(poly(40), poly(60), poly(0, 1), poly(0))
+
+    touched(touching_envelope(part, LEANING, "longitudinal", (F(700), F(2300))), 750, 840, 2000)
