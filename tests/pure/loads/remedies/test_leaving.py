@@ -97,7 +97,7 @@ def test_when_the_time_runs_out_on_the_way_nobody_is_told() -> None:
     question = allowed(2868)  # two of row 2
     ticks = iter(range(10_000))
     question.clock = lambda: float(next(ticks))
-    for seconds in (0, 1, 3, 9, 12):
+    for seconds in (0, 1, 3):
         question.until = question.clock() + seconds
         assert told(question) is None
 
