@@ -231,3 +231,47 @@ def test_a_transfer_is_worst_where_its_margin_turns():
     # And off the limit it is farthest at the half.
     off = worst_across(moved(event((11, 2), (8, 2), (11, 2), swept=True)), PLAIN)
     assert (off.room, off.knot.moment) == (None, 640)
+
+
+# The arm W/4 + 900/W - 10 passes 21 in at 62 - 2 sqrt(61) lb, some 46.4, on the way from 60 to 40 lb.
+PASSED = Surd(F(62), F(-2), F(61)).floor(80)
+
+
+def passing(start, end):
+    """The stretch with these lateral moments."""
+    knots = Knot(F(60), F(1200), F(start)), Knot(F(40), F(900), F(end))
+    return Stretch("flight", ("LEFT",), *knots, F(1, 4))
+
+
+def test_at_an_irrational_weight_where_the_narrower_part_ends_the_point_lies_within_that_part():
+    # The lateral arm is 360 / W - 6: 1.76 in there, of 2 in up to 21 in and of 4 in beyond.
+    widens = by_cg((15, -2), (15, 2), (21, 2), (21, 4), (30, 4), (30, -2))
+
+    found = worst(widens, passing(0, 120))
+
+    assert found.knot.weight == PASSED + F(1, 2**80)
+    assert found.room == Surd(F(9, 5), F(-1, 5), F(61)).floor(80)
+    assert (found.low, found.high, found.right) == (-2, 2, True)
+    # 480 / W - 8 is 2.35 in there: outside, and so is the point that is told.
+    out = worst(widens, passing(0, 160))
+    assert (out.knot.weight, out.high) == (PASSED + F(1, 2**80), 2)
+    assert out.figure > 2
+    assert out.room == Surd(F(26, 15), F(-4, 15), F(61)).floor(80)
+
+
+def test_at_an_irrational_weight_where_the_narrower_part_begins_the_point_lies_within_that_part():
+    # The lateral arm is 12 - 480 / W: 1.65 in there, of 6 in up to 21 in and of 2 in beyond.
+    narrows = by_cg((15, -2), (15, 6), (21, 6), (21, 2), (30, 2), (30, -2))
+
+    found = worst(narrows, passing(240, 0))
+
+    assert (found.knot.weight, found.high, found.right) == (PASSED, 2, True)
+    assert found.room == Surd(F(-26, 15), F(4, 15), F(61)).floor(80)
+
+
+def test_the_ends_of_a_limit_that_leans_on_both_sides_are_told_where_the_point_is():
+    leaning = by_cg((10, -2), (10, 2), (20, 3), (20, -3))
+
+    found = worst(leaning, flown(90, 60, (15, -2), (15, -2)))
+
+    assert (found.low, found.high, found.room, found.right) == (F(-5, 2), F(5, 2), F(1, 2), False)
