@@ -15,7 +15,7 @@ from itertools import pairwise
 from math import floor
 
 from fleet.basis import Axis, Place
-from loads.balance.aboard import Item
+from loads.balance.aboard import Declared, Item
 from loads.balance.checks_places import held_by
 from loads.balance.remedies.arranging import Found, can_be_parted, is_movable, tenths_up
 from loads.balance.remedies.points import AXES, Spot, rows_inside, spots_of
@@ -42,10 +42,8 @@ class Source:
 def least_removed(question: Question) -> Found | None:
     """Return the least weight of items to leave behind; people are never among them."""
     by_place: dict[str, list[Item]] = {}
-    fixed = fixed_lines(question.declared)
-    for item in question.declared.items:
-        if is_movable(item) and item.weight is not None and item.pointer not in fixed:
-            by_place.setdefault(item.place.id, []).append(item)
+    for item in _free(question.declared):
+        by_place.setdefault(item.place.id, []).append(item)
     sources = []
     for place in question.ready.basis.places:
         items = by_place.get(place.id, [])
@@ -233,12 +231,22 @@ class _Least:
             elif tenths and self.sign > 0:
                 yield Ballast(source.place, tenths * TENTH)
             elif tenths:
-                yield from _off(self.question.declared.items, source.place, tenths * TENTH)
+                yield from _off(_free(self.question.declared), source.place, tenths * TENTH)
+
+
+def _free(declared: Declared) -> list[Item]:
+    """Return the items that may stay behind: movable, of known weight, and named by no event."""
+    fixed = fixed_lines(declared)
+    return [
+        item
+        for item in declared.items
+        if is_movable(item) and item.weight is not None and item.pointer not in fixed
+    ]
 
 
 def _off(items: Sequence[Item], place: Place, amount: Fraction) -> Iterator[Take]:
     """Yield the fewest lines of a place that make up an amount: the largest first."""
-    here = [item for item in items if item.place.id == place.id and is_movable(item) and can_be_parted(item)]
+    here = [item for item in items if item.place.id == place.id and can_be_parted(item)]
     for item in sorted(here, key=lambda item: -(item.weight or ZERO)):
         part = min(item.weight or ZERO, amount)
         if part > 0:

@@ -57,7 +57,7 @@ def _people(question: Question) -> Iterator[Json]:
     yield {
         "kind": "people",
         "id": "",
-        "name": f"all {len(guessed)} people whose weight is declared or standard",
+        "name": f"everybody who was not weighed ({len(guessed)})",
         "percent": _percent(found),
         "each": printed(one.count * TENTH, WEIGHT_PLACES),
         "unit": question.ready.weight,

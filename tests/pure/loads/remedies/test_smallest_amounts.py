@@ -205,6 +205,15 @@ def test_what_an_event_names_does_not_stay_behind() -> None:
     assert least_removed(question) is None
 
 
+def test_beside_what_an_event_names_the_other_line_of_the_place_stays_behind() -> None:
+    question = full_of(line("REAR", q(60)), line("REAR", q(50)), take_off=2838)  # 20 lb too much
+    assert told(least_removed(question)) == "20 of /items/0"
+    event = Event(1, "flight", F(5), "/sequence/0", leaving=(Leaving("/items/0", F(5)),))
+    question.declared = replace(question.declared, sequence=(event,))
+
+    assert told(least_removed(question)) == "20 of /items/1"
+
+
 def test_no_ballast_goes_where_the_configuration_has_no_place() -> None:
     basis = aircraft({"minimum_flying": 2470})
     (own,) = basis.configurations
