@@ -16,6 +16,7 @@ import resource
 import signal
 import time
 from collections.abc import Callable, Sequence
+from functools import partial
 from pathlib import Path
 from typing import Any, Final
 
@@ -46,7 +47,7 @@ def pytest_runtestloop(session: pytest.Session) -> bool:
     """This function will try every mutant drawn instead of running the tests."""
     folder = Path(os.environ["TAREBOOK_MUTANTS"])
     asked = json.loads((folder / "asked.json").read_text())
-    reach = _reached(session.items, folder)
+    reach = _reached(session.items, folder, asked["jobs"])
     drawn: list[Mutant] = asked["drawn"]
     tries: dict[str, str] = {}
     finders: dict[str, list[str]] = {}
@@ -58,7 +59,7 @@ def pytest_runtestloop(session: pytest.Session) -> bool:
             mutant = waiting.pop()
             key = key_of(mutant)
             tests = _in_order(session.items, reach.get(key, {}), finders.get(key, ()))
-            running[_forked(lambda m=mutant, t=tests: _try(m, t, folder))] = mutant  # type: ignore[misc]  # bound here
+            running[_forked(partial(_try, mutant, tests, folder))] = mutant
         pid, status = os.wait()
         mutant = running.pop(pid)
         tries[mutant["name"]] = WORDS.get(os.waitstatus_to_exitcode(status), "killed")
@@ -71,17 +72,22 @@ def pytest_runtestloop(session: pytest.Session) -> bool:
     return True
 
 
-def _reached(items: Sequence[pytest.Item], folder: Path) -> Reach:
+def _reached(items: Sequence[pytest.Item], folder: Path, jobs: int) -> Reach:
     """Return which tests reach each function and how long each takes (seconds); what is known is not run."""
     kept, failed = folder / "reach.json", folder / "reach.failed"
     reach: Reach = json.loads(kept.read_text()) if kept.exists() else {"": {}}
     new = [item for item in items if item.nodeid not in reach[""]]
-    if new:
-        failed.unlink(missing_ok=True)
-        os.waitpid(_forked(lambda: _reach(new, reach, kept, failed)), 0)
-        if failed.exists():
-            raise pytest.UsageError(f"the tests do not pass without a mutant: {failed.read_text()}")
-        reach = json.loads(kept.read_text())
+    failed.unlink(missing_ok=True)
+    shares = {folder / f"reach.{number}.json": new[number::jobs] for number in range(jobs)}
+    running = [_forked(partial(_reach, share, into, failed)) for into, share in shares.items()]
+    for pid in running:
+        os.waitpid(pid, 0)
+    if failed.exists():
+        raise pytest.UsageError(f"the tests do not pass without a mutant: {failed.read_text()}")
+    for into in shares:
+        for function, times in json.loads(into.read_text()).items():
+            reach.setdefault(function, {}).update(times)
+    kept.write_text(json.dumps(reach))
     return reach
 
 
@@ -122,7 +128,8 @@ def _try(mutant: Mutant, tests: Sequence[tuple[pytest.Item, float]], folder: Pat
     return SURVIVED
 
 
-def _reach(items: Sequence[pytest.Item], reach: Reach, into: Path, failed: Path) -> int:
+def _reach(items: Sequence[pytest.Item], into: Path, failed: Path) -> int:
+    reach: Reach = {"": {}}
     for item in items:
         seen = cProfile.Profile(builtins=False)
         begun = time.process_time()
