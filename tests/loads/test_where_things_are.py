@@ -188,33 +188,29 @@ def test_the_paper_prints_them_all(people: Cast) -> None:
         assert printed.casefold() in text.casefold(), printed
 
 
-def test_a_revision_on_the_page_keeps_every_part(people: Cast) -> None:
-    document = full_document(people)
+def revised_on_the_page(people: Cast, document: dict[str, Any]) -> dict[str, Any]:
+    """Submit a document, revise the load on the page as it stands, and return what the new load declares."""
     current = submit_load(document, by=actor(people.preparer))
     client = browser(people.preparer)
     form = Page(client.get(f"/loads/{current.load.id}/revise")).form("")
-
     sent = form.filled({"checked": "yes", "reason": "counted again"}, press="submit")
-    answer = client.post(f"/loads/{current.load.id}/revise", sent)
+    assert client.post(f"/loads/{current.load.id}/revise", sent).status_code == 302
+    return declared_in(Load.objects.get(replaces=current.load))
 
-    assert answer.status_code == 302
-    fresh = declared_in(Load.objects.get(replaces=current.load))
+
+def test_a_revision_on_the_page_keeps_every_part(people: Cast) -> None:
+    document = full_document(people)
+
+    fresh = revised_on_the_page(people, document)
+
     for part in ("conditions", "seat_settings", "items"):
         assert fresh[part] == document[part], part
     assert fresh["passengers"][0]["restraint"] == q("9", "lb")
 
 
 def test_a_net_over_an_item_is_kept_by_a_revision_on_the_page(people: Cast) -> None:
-    document = full_document(people, items=[crate(net={"weight": q("4", "lb")})])
-    current = submit_load(document, by=actor(people.preparer))
-    client = browser(people.preparer)
-    form = Page(client.get(f"/loads/{current.load.id}/revise")).form("")
+    fresh = revised_on_the_page(people, full_document(people, items=[crate(net={"weight": q("4", "lb")})]))
 
-    sent = form.filled({"checked": "yes", "reason": "counted again"}, press="submit")
-    answer = client.post(f"/loads/{current.load.id}/revise", sent)
-
-    assert answer.status_code == 302
-    fresh = declared_in(Load.objects.get(replaces=current.load))
     assert fresh["items"][0]["net"] == {"weight": q("4", "lb")}
 
 

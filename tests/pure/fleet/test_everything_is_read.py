@@ -3,8 +3,6 @@
 1 lb is 0.45359237 kg and 1 in is 2.54 cm, both exactly (the international pound and inch, remembered).
 """
 
-from fractions import Fraction
-
 import pytest
 
 from fleet.basis import (
@@ -24,7 +22,6 @@ from fleet.basis import (
 from fleet.basis_reading import read_basis
 from fleet.basis_reading.configurations import read_configurations
 from fleet.basis_reading.envelopes import read_envelopes
-from fleet.basis_reading.findings import Findings
 from fleet.basis_reading.fuel import read_burn_order, read_tanks, read_taxi_order
 from fleet.basis_reading.limits import read_limits
 from fleet.basis_reading.performance import read_performance
@@ -34,7 +31,7 @@ from fleet.basis_reading.stations import read_places, read_seats, read_zones
 from fleet.basis_reading.variants import read_variants
 from fleet.flight_rules import CertificationCategory, Modification, PerformanceRule
 from fleet.quantities import Unit
-from fleet.sourced import Limit, Source
+from fleet.sourced import Limit
 from fleet.stations import (
     Condition,
     Conditional,
@@ -46,26 +43,7 @@ from fleet.stations import (
     Setting,
 )
 from tests.pure.fleet.everything import everything
-
-F = Fraction
-LB = F("0.45359237")  # kg
-KG_M = 1 / (LB * F("0.0254"))  # lb in
-OTHER = Source("OK62-S7", "2", "3")
-
-
-def of(page):
-    return Source("OK62-FM", "D", page)
-
-
-PAGE = of("7-1")
-
-
-def most(value, source=PAGE):
-    return Limit(F(value), source)
-
-
-def findings() -> Findings:
-    return Findings(everything(), [])
+from tests.pure.fleet.stated import LB, OTHER, PAGE, F, findings, most, of
 
 
 def test_what_the_basis_is_of():

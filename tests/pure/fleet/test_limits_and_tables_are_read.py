@@ -1,14 +1,11 @@
 """What a loading basis states of margins, trim, fuel and moving parts arrives whole, too."""
 
-from fractions import Fraction
-
 from fleet.basis import (
     OtherDatum,
 )
 from fleet.basis_reading.curtailments import read_curtailments
 from fleet.basis_reading.datums import read_other_datums
 from fleet.basis_reading.envelopes import read_envelopes
-from fleet.basis_reading.findings import Findings
 from fleet.basis_reading.fuel_balance import read_fuel_balance
 from fleet.basis_reading.lateral import read_lateral_by_cg
 from fleet.basis_reading.limits import read_limits
@@ -21,29 +18,9 @@ from fleet.fuel_balance import FuelBalance
 from fleet.lateral import LateralByCg
 from fleet.positions import MovingPart, PartState
 from fleet.presentation import DividedMoment, IndexUnits, Presentation
-from fleet.sourced import Limit, Source
+from fleet.sourced import Source
 from fleet.trim import Trim, TrimLine, TrimTable
-from tests.pure.fleet.everything import everything
-
-F = Fraction
-LB = F("0.45359237")  # kg
-KG_M = 1 / (LB * F("0.0254"))  # lb in
-OTHER = Source("OK62-S7", "2", "3")
-
-
-def of(page):
-    return Source("OK62-FM", "D", page)
-
-
-PAGE = of("7-1")
-
-
-def most(value, source=PAGE):
-    return Limit(F(value), source)
-
-
-def findings() -> Findings:
-    return Findings(everything(), [])
+from tests.pure.fleet.stated import KG_M, OTHER, PAGE, F, findings
 
 
 def test_lateral_limits_against_the_cg():

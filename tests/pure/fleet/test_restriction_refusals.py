@@ -2,7 +2,6 @@
 
 from datetime import UTC, datetime
 from decimal import Decimal
-from fractions import Fraction
 
 import pytest
 
@@ -15,30 +14,9 @@ from fleet.restrictions import (
 from fleet.sourced import Source
 from records.canonical import canonical
 from tests.pure.fleet.documents import changed, told
+from tests.pure.fleet.effects import CORNERS, envelope, fuel, limit_of, maximum_of
 from tests.pure.loads.making import twin
 from tests.pure.loads.papers import lb, permit_document, restriction_document
-
-F = Fraction
-MEL = Source("restriction DD-14, MEL", "7", "25-3")
-FERRY = Source("permit SFP-88, Permit SFP-88", "", "1")
-CORNERS = [["112", "4000"], ["112", "6000"], ["120", "6000"], ["120", "4000"]]
-
-
-def limit_of(name, value):
-    return {"effect": "limit", "limit": name, "weight": lb(value)}
-
-
-def maximum_of(name, value):
-    return {"effect": "maximum", "of": name, "weight": lb(value)}
-
-
-def fuel(name, value, unit="US gal"):
-    return {"effect": "fuel", "of": name, "volume": {"value": value, "unit": unit}}
-
-
-def envelope(points=CORNERS, **more):
-    own = {"effect": "envelope", "of": twin().envelopes[0].id, "unit": "in", "weight_unit": "lb"}
-    return {**own, "points": points, **more}
 
 
 def test_everything_a_paper_says_is_read():

@@ -3,7 +3,6 @@ take-off limit is 6,800 lb, landing 6,500, minimum flying 4,300, seats 300 lb an
 """
 
 from dataclasses import replace
-from fractions import Fraction
 
 import pytest
 
@@ -24,31 +23,11 @@ from fleet.restrictions import (
 )
 from fleet.sourced import Limit, Source
 from fleet.stations import Conditional
+from tests.pure.fleet.effects import CORNERS, FERRY, MEL, F, envelope, fuel, limit_of, maximum_of
 from tests.pure.loads.making import place, seat, twin
-from tests.pure.loads.papers import lb, permit, restriction, restriction_document, ruled
+from tests.pure.loads.papers import permit, restriction, restriction_document, ruled
 
-F = Fraction
-MEL = Source("restriction DD-14, MEL", "7", "25-3")
-FERRY = Source("permit SFP-88, Permit SFP-88", "", "1")
 SEATS = {"effect": "seats", "ids": ["ROW1-L"]}
-CORNERS = [["112", "4000"], ["112", "6000"], ["120", "6000"], ["120", "4000"]]
-
-
-def limit_of(name, value):
-    return {"effect": "limit", "limit": name, "weight": lb(value)}
-
-
-def maximum_of(name, value):
-    return {"effect": "maximum", "of": name, "weight": lb(value)}
-
-
-def fuel(name, value, unit="US gal"):
-    return {"effect": "fuel", "of": name, "volume": {"value": value, "unit": unit}}
-
-
-def envelope(points=CORNERS, **more):
-    own = {"effect": "envelope", "of": twin().envelopes[0].id, "unit": "in", "weight_unit": "lb"}
-    return {**own, "points": points, **more}
 
 
 def test_without_papers_a_basis_is_itself_and_the_same_papers_give_the_same_object():
