@@ -30,6 +30,7 @@ Signer = Literal["load preparer", "loading supervisor", "pilot in command"]
 
 STATES: tuple[State, ...] = ("open", "prepared", "loaded", "accepted", "departed", "superseded", "withdrawn")
 FIRST_STATE: State = "open"
+GONE: tuple[State, ...] = ("superseded", "withdrawn")  # such a load never leaves on this declaration
 
 
 @dataclass(frozen=True, slots=True)

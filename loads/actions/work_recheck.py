@@ -17,10 +17,10 @@ from fleet.actions.constraint_refusals import refused_as
 from loads.actions.self_check import refuse_unproven
 from loads.acts import FINISH_RECHECK
 from loads.duties import service_at_work
+from loads.lifecycle import GONE
 from loads.models import Recheck, RecheckedLoad, RecheckPart, RecheckResult
 from loads.queries.rechecks import COUNTS
 from loads.queries.recompute import Outcome, recompute
-from loads.queries.stored_loads import GONE
 from records.act import act
 from records.canonical import canonical
 from records.refusal import StepRefused

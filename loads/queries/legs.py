@@ -13,13 +13,13 @@ from loads.balance.exact import added
 from loads.balance.fields import Faults, Fields
 from loads.balance.fuelling import read_fuel
 from loads.balance.rounding import WEIGHT_PLACES, printed
+from loads.lifecycle import GONE
 from loads.models import Assessment, Leg, Load
 from loads.queries.current import Current, load_of
 from loads.queries.declaration import declared_now
 from records.refusal import Fault, Invalid, NotKnown
 
 POINTER = "/flight/follows"
-OVER = ("superseded", "withdrawn")
 
 
 @dataclass(frozen=True, slots=True)
@@ -58,7 +58,7 @@ def leg_before(operator: str, aircraft: Aircraft, flight: Flight) -> Current | N
 
 def demand_standing(before: Current | None) -> None:
     """This function will refuse, with Invalid, to follow a load that was replaced or withdrawn."""
-    if before is not None and before.state in OVER:
+    if before is not None and before.state in GONE:
         detail = f"that load is {before.state}; name the load of the leg before that stands"
         raise _refused("leg-not-standing", detail)
 

@@ -7,8 +7,6 @@ from uuid import UUID
 
 from django.db import connection
 
-# Replaced or withdrawn: such a load never leaves on this declaration.
-GONE: Final = ("superseded", "withdrawn")
 AT_ONCE: Final = 500
 # What a last-minute change made of a load is what was assessed, so its body counts.
 _BODY: Final = "convert_from(coalesce(c.body, d.body), 'UTF8')"

@@ -10,7 +10,7 @@ from django.shortcuts import render
 from django.utils import timezone
 from django.views.decorators.http import require_safe
 
-from loads.lifecycle import ways_out
+from loads.lifecycle import GONE, ways_out
 from loads.manifest.pilot_block import permits_said
 from loads.manifest.words import Words
 from loads.queries.current import Current
@@ -21,7 +21,6 @@ from loads.web.shown import stops
 from loads.web.wording import words_at
 from records.web.asking import operator_of, signed_in
 
-GONE = ("superseded", "withdrawn")
 ONE_DAY = timedelta(days=1)
 FEW = 2  # of what is in the way; the page of the load and the rejects desk tell all
 

@@ -14,6 +14,7 @@ from fleet.queries.aircraft import aircraft_of, all_aircraft
 from fleet.queries.duties import holders_at
 from fleet.queries.in_force import in_force_for
 from fleet.queries.settings import settings_at
+from loads.lifecycle import GONE
 from loads.queries.inspection import Flown, flights_without_manifest, loads_of_day, numbers_of
 from loads.queries.rechecks import flags_of
 from loads.web.asking import zone_of, zone_words
@@ -86,7 +87,7 @@ def _load(one: Flown, zone: ZoneInfo, now: datetime) -> dict[str, Any]:
     held_now = in_force_for(load.aircraft, load.departure, now, load.configuration)
     filed = getattr(one.paper, "filed", None) if one.paper is not None else None
     return flight_of(one.current, zone) | {
-        "gone": one.current.state in {"superseded", "withdrawn"},
+        "gone": one.current.state in GONE,
         "number": one.paper.number if one.paper else None,
         "pdf_digest": filed.document_id if filed else None,
         "entry": one.seal.position if one.seal else None,

@@ -4,11 +4,11 @@ from typing import Any
 from urllib.parse import urlencode
 
 from loads.acts import SUBMIT_LOAD
+from loads.lifecycle import GONE
 from loads.queries.current import Current
 from records.actor import Actor
 
 CARRIED = ("follows", "leg", "reference", "origin")  # what the first page passes on to the desk
-OVER = ("superseded", "withdrawn")
 
 
 def next_leg(current: Current, legs: dict[str, Any], actor: Actor) -> str:
@@ -17,7 +17,7 @@ def next_leg(current: Current, legs: dict[str, Any], actor: Actor) -> str:
     declares none.
     """
     load = current.load
-    cannot = current.state in OVER or current.assessment.verdict != "within"
+    cannot = current.state in GONE or current.assessment.verdict != "within"
     if legs.get("followed_by") or cannot or SUBMIT_LOAD.name not in actor.may:
         return ""
     known = {"aircraft": load.aircraft.registration, "follows": load.id, "leg": load.leg + 1}
