@@ -17,6 +17,7 @@ from fleet.basis import Place, Seat
 from fleet.sourced import Limit
 from loads.balance.aboard import Item, Person
 from loads.balance.checks_places import held_by
+from loads.balance.remedies.moving_more import more_moved
 from loads.balance.remedies.program import Number, Outcome, Program, Solution
 from loads.balance.remedies.question import BY_PEOPLE_ALONE, NOT_BY_LOADING, TENTH, Question
 from loads.balance.remedies.reach import Interval, Ways
@@ -69,6 +70,8 @@ def arranged(question: Question, ways: Ways, *, people: bool, items: bool) -> Fo
         result = question.assessed(taken(question.declared, steps))
         if result.verdict == "within":
             return Found(steps, result, proven)
+        if (more := more_moved(question, steps)) is not None:
+            return Found(*more, proven=False)  # others might do with less
         # With parts of items, other amounts of the same moves might have held: then it is the best found.
         proven = proven and not any(column in table.moves for column in chosen)
         others = [column for column in (*table.seats, *table.moves) if column not in set(chosen)]

@@ -14,7 +14,7 @@ from loads.balance.remedies.program import Outcome, Program, Solution
 from loads.balance.remedies.question import Question
 from tests.pure.loads.making import SOURCE, F
 from tests.pure.loads.remedies.rejects import question_of, too_far_aft, too_heavy_to_take_off
-from tests.pure.loads.remedies.test_smallest_amounts import reseated, told
+from tests.pure.loads.remedies.test_smallest_amounts import reseated, shifted, told
 
 Change = Callable[[Solution], Outcome]
 
@@ -91,6 +91,13 @@ def trimmed(lowest: Any) -> Question:
         (least_ballast, "3.246", "74 in NOSE ?"),
         # Without 79.2 lb of the rear it is 101.757 in; 101.75 are 3,841 lb in at 48.25 a pound: 79.61 lb.
         (least_removed, "3.25", "79.7 of /items/0 ?"),
+        # From rear to nose 100 a pound. With 38 lb it is 101.764 in, a setting of 3.236.
+        (shifted, "3.23", "38 of /items/0 to NOSE"),
+        (shifted, "3.25", "38.5 of /items/0 to NOSE ?"),
+        # A setting of 5.33 is 99.67 in, 972.84 lb in forward of 100 in: 99.73 lb. All of it gives 5.3392.
+        (shifted, "5.33", "99.8 of /items/0 to NOSE ?"),
+        (shifted, "5.339", "100 of /items/0 to NOSE ?"),
+        (shifted, "5.35", "none"),
     ],
 )
 def test_a_limit_the_program_does_not_know_is_gone_up_to_in_tenths(
